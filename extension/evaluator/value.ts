@@ -1,0 +1,135 @@
+/**
+ * What the evaluator hands out: values with their origins, unknowns with their causes, and the calls to definitions.
+ *
+ * Knows nothing of motors. A value never loses where it came from: `origin` is the expression at the use, `from` what that
+ * expression was made of, down to literals.
+ */
+
+/** A stretch of one file: UTF-16 offsets, `end` exclusive. */
+export interface Span {
+  readonly file: string;
+  readonly start: number;
+  readonly end: number;
+}
+
+/** Where a value came from; a graph without cycles whose leaves are literals. */
+export interface Origin {
+  readonly span: Span;
+  /** `name`: an identifier that stands for a declared value; its `from` is the initialiser. */
+  readonly kind: "literal" | "name" | "access" | "operation" | "template" | "array" | "object" | "call" | "import";
+  readonly from: readonly Origin[];
+  /** For `name`: the identifier in the declaration that it refers to (in whichever file). */
+  readonly declaredAt?: Span;
+}
+
+export type Value = Known | Unknown;
+
+export interface Known {
+  readonly known: true;
+  readonly data: Data;
+  readonly origin: Origin;
+}
+
+export type Data =
+  | { readonly kind: "primitive"; readonly value: string | number | boolean | bigint | null | undefined }
+  | { readonly kind: "array"; readonly items: readonly Value[] }
+  /** `keys`: where each property's name is written. */
+  | { readonly kind: "object"; readonly entries: ReadonlyMap<string, Value>; readonly keys: ReadonlyMap<string, Span> }
+  /** The object that a definition built, by identity, with the call that made it. */
+  | { readonly kind: "built"; readonly built: object; readonly call: DefinitionCall }
+  /** Something callable that the evaluator understands: a definition, a `Math` function, a pure helper. */
+  | { readonly kind: "function"; readonly name: string };
+
+export interface Unknown {
+  readonly known: false;
+  readonly reason: UnknownReason;
+  readonly origin: Origin;
+  /** The unknown that this one depends on; absent at the root of the chain. */
+  readonly cause?: Unknown;
+}
+
+export interface UnknownReason {
+  /**
+   * `depends`: some part is unknown, see `cause`. `rejected`: a definition refused its arguments; that finding says it already.
+   * `missing`: nothing is written there yet (half-typed code).
+   */
+  readonly code:
+    | "depends"
+    | "rejected"
+    | "missing"
+    | "not-const"
+    | "mutated"
+    | "cycle"
+    | "call"
+    | "parameter"
+    | "ambient"
+    | "unresolved-import"
+    | "no-such-export"
+    | "no-such-property"
+    | "no-such-name"
+    | "not-a-number"
+    | "too-deep"
+    | "unsupported";
+  /** One plain sentence: which expression, why it cannot be known. */
+  readonly message: string;
+  /** What to write instead, as a short phrase; empty where there is nothing to suggest. */
+  readonly advice: string;
+}
+
+/** One issue that a definition has with its arguments. */
+export interface DefinitionIssue {
+  readonly message: string;
+  /** From the argument tuple inwards: [0, "noLoad", "speed"]. */
+  readonly path: readonly (string | number)[];
+  /** Which characters: the value at `path`, the property name at `path`, or the callee's name. */
+  readonly at: "value" | "key" | "callee";
+}
+
+/** What the evaluator needs of a definition; the declarations room supplies the table. */
+export interface Definition {
+  readonly name: string;
+  /** All issues of an argument list; `built` only when there is none. Never throws. */
+  check(args: readonly unknown[]): { readonly issues: readonly DefinitionIssue[]; readonly built?: object };
+}
+
+/** A call to a definition that stands in a file. */
+export interface DefinitionCall {
+  readonly definition: string;
+  /** The whole call expression. */
+  readonly span: Span;
+  readonly callee: Span;
+  readonly args: readonly Value[];
+  /** Present when every argument is known and accepted. */
+  readonly built?: object;
+  /** Issues, located: primary at the use, `source` at the literal where that is elsewhere. */
+  readonly issues: readonly LocatedIssue[];
+  /** The leaves among the arguments that are unknown for a reason of their own (not `rejected`). */
+  readonly unknowns: readonly Unknown[];
+  /** The variable or property that the call initialises. */
+  readonly binding?: { readonly name: string; readonly span: Span };
+  /** The comments right above the statement or property that holds the call, in order. */
+  readonly leadingComments: readonly { readonly text: string; readonly span: Span }[];
+}
+
+export interface LocatedIssue {
+  readonly message: string;
+  readonly path: readonly (string | number)[];
+  readonly span: Span;
+  readonly source?: Span;
+}
+
+/** Texts at one moment. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
+export interface Snapshot {
+  read(file: string): string | null | undefined;
+}
+
+/** What one file says. */
+export interface FileEvaluation {
+  readonly file: string;
+  /** Every call to a definition in the file, in order of position (inner calls after the call that holds them). */
+  readonly calls: readonly DefinitionCall[];
+  /** Files that this evaluation read, itself included. */
+  readonly dependencies: readonly string[];
+  /** Files that it would have read, and that the snapshot has not loaded. */
+  readonly wanted: readonly string[];
+}
