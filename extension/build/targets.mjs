@@ -1,0 +1,54 @@
+// The table of bundles: which entry becomes which file of dist/, and for which host. It holds data only; bundle.mjs
+// builds it.
+
+/**
+ * @typedef {object} Target
+ * @property {string} entry path from the repository's root
+ * @property {string} outfile path inside dist/
+ * @property {boolean} [later] the entry may not exist yet
+ * @property {import("esbuild").BuildOptions} options
+ */
+
+/** @type {import("esbuild").BuildOptions} */
+const node = { platform: "node", target: "node20" };
+/** @type {import("esbuild").BuildOptions} */
+const browser = { platform: "browser", target: "es2023" };
+
+/** @type {Target[]} */
+export const targets = [
+  {
+    entry: "extension/client/main.ts",
+    outfile: "client.cjs",
+    options: { ...node, format: "cjs", external: ["vscode"] },
+  },
+  {
+    entry: "extension/client/browser.ts",
+    outfile: "client.web.cjs",
+    later: true,
+    options: { ...browser, format: "cjs", external: ["vscode"] },
+  },
+  { entry: "extension/server/node.ts", outfile: "server.cjs", options: { ...node, format: "cjs" } },
+  {
+    entry: "extension/server/browser.ts",
+    outfile: "server.web.js",
+    later: true,
+    options: { ...browser, format: "iife" },
+  },
+  {
+    entry: "extension/command/main.ts",
+    outfile: "command.js",
+    options: { ...node, format: "esm", banner: { js: "#!/usr/bin/env node" } },
+  },
+  {
+    entry: "extension/declarations/index.ts",
+    outfile: "declarations/index.js",
+    options: { platform: "neutral", target: "es2023", format: "esm" },
+  },
+  { entry: "webview/main.ts", outfile: "webview/main.js", later: true, options: { ...browser, format: "iife" } },
+];
+
+/** Files that go into dist/ as they are: from the repository's root, to the path inside dist/. */
+export const copies = [
+  { from: "extension/analysis/loadmark.schema.json", to: "loadmark.schema.json" },
+  { from: "extension/client/media", to: "media" },
+];
