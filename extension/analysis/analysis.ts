@@ -1,0 +1,61 @@
+/**
+ * What one analysis of a snapshot of texts gives: mechanisms with their numbers, and one list of findings.
+ *
+ * Plain data. Places are spans of UTF-16 offsets; the server and the report turn them into lines and columns.
+ */
+import type { Mechanism } from "../declarations/mechanism.js";
+import type { Motor } from "../declarations/motor.js";
+import type { Robot } from "../declarations/robot.js";
+import type { DefinitionCall, FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
+import type { MechanismNumbers } from "../model/numbers.js";
+import type { Level, RuleId } from "../rules/rule.js";
+
+export interface Finding {
+  readonly rule: RuleId;
+  readonly level: Level;
+  /** Name of the mechanism that it is about, or `null`. */
+  readonly mechanism: string | null;
+  readonly message: string;
+  readonly at: Span;
+  readonly related: readonly { readonly at: Span; readonly message: string }[];
+}
+
+export interface AnalysedMechanism {
+  readonly name: string;
+  /** The variable that holds it, else its name argument. */
+  readonly at: Span;
+  readonly call: DefinitionCall;
+  /** Absent where a value is unknown or refused. */
+  readonly declared?: Mechanism;
+  /** Absent where the physics could not be run; `notChecked` then says why. */
+  readonly numbers?: MechanismNumbers;
+  /** Plain sentences. */
+  readonly assumed: readonly string[];
+  readonly notChecked: readonly string[];
+}
+
+export interface AnalysedMotor {
+  readonly at: Span;
+  readonly call: DefinitionCall;
+  readonly declared: Motor;
+}
+
+export interface AnalysedRobot {
+  readonly name: string;
+  readonly at: Span;
+  readonly call: DefinitionCall;
+  readonly declared: Robot;
+}
+
+export interface Analysis {
+  /** In order of file, then position; so are findings. */
+  readonly mechanisms: readonly AnalysedMechanism[];
+  readonly motors: readonly AnalysedMotor[];
+  readonly robots: readonly AnalysedRobot[];
+  readonly findings: readonly Finding[];
+  /** Every file that was evaluated, with what it says. */
+  readonly files: ReadonlyMap<string, FileEvaluation>;
+  /** Files to load before the result is whole; the host loads them and runs again. */
+  readonly wanted: readonly string[];
+  readonly snapshot: Snapshot;
+}
