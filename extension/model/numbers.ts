@@ -1,0 +1,59 @@
+/**
+ * The numbers of one mechanism as reports carry them: SI, per motor unless the name says source, null where it does not apply.
+ *
+ * Deliberately not here: how they come about.
+ */
+import type { FeedforwardNumbers } from "./feedforward.js";
+import type { LimitedBy } from "./operatingPoint.js";
+
+export interface MechanismNumbers {
+  /** Motor turns per turn of the output shaft. */
+  readonly ratio: number;
+  /** Of all stages together, motor driving; screw friction not included. */
+  readonly stageEfficiency: number;
+  readonly available: AvailableNumbers;
+  readonly hardest: HardestNumbers;
+  readonly hold: HoldNumbers | null;
+  readonly stall: StallNumbers;
+  readonly feedforward: FeedforwardNumbers;
+}
+
+/** The available line at the motor's shaft. */
+export interface AvailableNumbers {
+  readonly noLoadSpeedRadPerS: number;
+  readonly stallTorqueNm: number;
+  readonly stallCurrentA: number;
+}
+
+/** Running steadily at the hardest position. */
+export interface HardestNumbers {
+  /** m for lift, wheels, screw; rad for arm and loadCurve; null for flywheel and roller. */
+  readonly position: number | null;
+  /** At one motor's terminals. */
+  readonly terminalVoltageV: number;
+  /** Required at one motor's shaft. */
+  readonly motorTorqueNm: number;
+  /** 0 where it stalls. */
+  readonly motorSpeedRadPerS: number;
+  readonly motorCurrentA: number;
+  readonly sourceCurrentA: number;
+  readonly shaftPowerW: number;
+  /** One motor's share of what reaches the output shaft. */
+  readonly loadPowerW: number;
+  /** Into one motor's terminals. */
+  readonly electricalPowerW: number;
+  readonly motorEfficiency: number | null;
+  /** Required over available stall torque; null where there is none. */
+  readonly stallShare: number | null;
+  readonly limitedBy: LimitedBy;
+}
+
+export interface HoldNumbers {
+  readonly motorCurrentA: number;
+}
+
+/** Full command with the output shaft blocked. */
+export interface StallNumbers {
+  readonly motorCurrentA: number;
+  readonly sourceCurrentA: number;
+}
