@@ -30,7 +30,7 @@ export function runNpm(args, folder) {
     child.on("error", (error) => reject(new Error(`npm could not be started: ${error.message}`)));
     child.on("close", (code) => {
       if (code === 0) return resolve(output);
-      console.error(everything.trimEnd());
+      console.error(`\n${everything.trimEnd()}`);
       reject(new Error(`"npm ${args.join(" ")}" failed with exit status ${code} in ${folder}.`));
     });
   });

@@ -15,7 +15,7 @@ try {
   if (isInstalled()) console.log("  packages: already installed as locked");
   else
     await takeStep("installing the locked packages", () =>
-      runNpm(["ci", "--include=dev", "--no-audit", "--no-fund"], repositoryRoot),
+      runNpm(["ci", "--include=dev", "--no-audit", "--no-fund", "--loglevel=error"], repositoryRoot),
     );
   await takeStep("building", async () => {
     const { bundle } = await import("./bundle.mjs");

@@ -16,8 +16,15 @@ export async function getChromium(): Promise<ChromiumSearch> {
   const found = findChromium();
   if (found) return { path: found };
   const [step, ...commands] = isRootOnDebian()
-    ? ["installing Debian's chromium package", ["apt-get", "update"], ["apt-get", "install", "--yes", "--no-install-recommends", "chromium"]]
-    : ["downloading a Chromium with playwright", [process.execPath, join(repositoryRoot, "node_modules/playwright-core/cli.js"), "install", "chromium"]];
+    ? [
+        "installing Debian's chromium package",
+        ["apt-get", "update"],
+        ["apt-get", "install", "--yes", "--no-install-recommends", "chromium"],
+      ]
+    : [
+        "downloading a Chromium with playwright",
+        [process.execPath, join(repositoryRoot, "node_modules/playwright-core/cli.js"), "install", "chromium"],
+      ];
   try {
     await takeStep(`no Chromium found: ${step}`, async () => {
       for (const command of commands) await run(command as string[]);
@@ -46,12 +53,18 @@ function isExecutable(path: string): boolean {
 
 function isRootOnDebian(): boolean {
   if (process.getuid?.() !== 0 || !existsSync("/etc/os-release")) return false;
-  return /^ID(_LIKE)?=.*\bdebian\b/m.test(readFileSync("/etc/os-release", "utf8")) && !/^ID=ubuntu/m.test(readFileSync("/etc/os-release", "utf8"));
+  return (
+    /^ID(_LIKE)?=.*\bdebian\b/m.test(readFileSync("/etc/os-release", "utf8")) &&
+    !/^ID=ubuntu/m.test(readFileSync("/etc/os-release", "utf8"))
+  );
 }
 
 function run([program = "", ...args]: string[]): Promise<void> {
   return new Promise((resolve, reject) => {
-    const child = spawn(program, args, { stdio: ["ignore", "pipe", "pipe"], env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" } });
+    const child = spawn(program, args, {
+      stdio: ["ignore", "pipe", "pipe"],
+      env: { ...process.env, DEBIAN_FRONTEND: "noninteractive" },
+    });
     let output = "";
     child.stdout.on("data", (chunk) => {
       output += chunk;
@@ -60,6 +73,10 @@ function run([program = "", ...args]: string[]): Promise<void> {
       output += chunk;
     });
     child.on("error", reject);
-    child.on("close", (code) => (code === 0 ? resolve() : reject(new Error(`"${program} ${args.join(" ")}" gave exit status ${code}: ${output.slice(-500).trim()}`))));
+    child.on("close", (code) =>
+      code === 0
+        ? resolve()
+        : reject(new Error(`"${program} ${args.join(" ")}" gave exit status ${code}: ${output.slice(-500).trim()}`)),
+    );
   });
 }

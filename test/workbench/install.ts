@@ -27,10 +27,11 @@ export async function installWorkbench(): Promise<InstalledWorkbench> {
   if (!existsSync(stamp) || readFileSync(stamp, "utf8") !== lock) {
     await takeStep("installing a VS Code server for the editor (once, about 800 MB)", async () => {
       // Its install scripts build native modules and fetch from elsewhere, so they stay off.
-      const quiet = ["--ignore-scripts", "--no-audit", "--no-fund"];
+      const quiet = ["--ignore-scripts", "--no-audit", "--no-fund", "--loglevel=error"];
       await runNpm(["ci", ...quiet], workbenchFolder);
-      await runNpm(["ci", "--omit=dev", ...quiet], server);
-      await runNpm(["ci", "--omit=dev", ...quiet], join(server, "extensions"));
+      // The server's own lock files lack an entry, which "npm ci" refuses and "npm install" adds.
+      await runNpm(["install", "--omit=dev", ...quiet], server);
+      await runNpm(["install", "--omit=dev", ...quiet], join(server, "extensions"));
       writeFileSync(stamp, lock);
     });
   }
@@ -42,5 +43,7 @@ function findNode(packages: string): string {
   const found = candidates.find((path) => existsSync(path));
   if (found) return found;
   if (Number(process.versions.node.split(".")[0]) === NODE_MAJOR) return process.execPath;
-  throw new Error(`The VS Code server needs Node ${NODE_MAJOR}, and the registry has none for ${process.platform} on ${process.arch}.`);
+  throw new Error(
+    `The VS Code server needs Node ${NODE_MAJOR}, and the registry has none for ${process.platform} on ${process.arch}.`,
+  );
 }

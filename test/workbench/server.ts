@@ -70,14 +70,24 @@ export async function startServer({ settings, vsix, name }: ServerOptions): Prom
 async function installExtension({ node, server }: InstalledWorkbench, vsix: string, data: string): Promise<void> {
   const args = [server, "--install-extension", vsix, "--server-data-dir", data, "--accept-server-license-terms"];
   const { stdout, stderr } = await promisify(execFile)(node, args);
-  if (!stdout.includes("was successfully installed")) throw new Error(`The extension ${vsix} was not installed: ${stdout}${stderr}`);
+  if (!stdout.includes("was successfully installed"))
+    throw new Error(`The extension ${vsix} was not installed: ${stdout}${stderr}`);
 }
 
 function launch({ node, server }: InstalledWorkbench, data: string, token: string, logFile: string): ChildProcess {
   const where = ["--host", "127.0.0.1", "--port", "0", "--connection-token", token, "--server-data-dir", data];
-  const how = ["--accept-server-license-terms", "--telemetry-level", "off", "--disable-workspace-trust", "--enable-smoke-test-driver"];
+  const how = [
+    "--accept-server-license-terms",
+    "--telemetry-level",
+    "off",
+    "--disable-workspace-trust",
+    "--enable-smoke-test-driver",
+  ];
   // A group of its own, so that the extension hosts that it starts can be ended with it.
-  const child = spawn(node, [server, ...where, ...how], { stdio: ["ignore", "pipe", "pipe"], detached: process.platform !== "win32" });
+  const child = spawn(node, [server, ...where, ...how], {
+    stdio: ["ignore", "pipe", "pipe"],
+    detached: process.platform !== "win32",
+  });
   const log = createWriteStream(logFile);
   child.stdout.pipe(log, { end: false });
   child.stderr.pipe(log, { end: false });
@@ -104,7 +114,8 @@ function waitForPort(child: ChildProcess, logFile: string): Promise<number> {
 }
 
 function addressOf(port: number, token: string, { folder, openFile, extension, extensionTests }: OpenOptions): string {
-  const remote = (path: string) => `vscode-remote://127.0.0.1:${port}${path.startsWith("/") ? "" : "/"}${path.replaceAll("\\", "/")}`;
+  const remote = (path: string) =>
+    `vscode-remote://127.0.0.1:${port}${path.startsWith("/") ? "" : "/"}${path.replaceAll("\\", "/")}`;
   const payload: [string, string][] = [];
   if (extension) payload.push(["extensionDevelopmentPath", remote(extension)]);
   if (extensionTests) payload.push(["extensionTestsPath", remote(extensionTests)]);

@@ -1,0 +1,137 @@
+// Drives one open VS Code page as a person would, by keyboard and mouse, and reads what it shows. It waits for what it
+// is asked about and for nothing else; what the texts mean is the tests' business.
+
+import { readFile } from "node:fs/promises";
+import { basename, join } from "node:path";
+import type { Frame, Page } from "playwright-core";
+import { findTextInView, readSquiggles, type Squiggle } from "./viewLines.js";
+import { waitUntil } from "./waitUntil.js";
+
+const OPEN_TIMEOUT_MS = 60_000;
+
+export class Editor {
+  constructor(
+    readonly page: Page,
+    /** The copy that is open, which a test may edit on disk too. */
+    readonly folder: string,
+  ) {}
+
+  async waitUntilReady(): Promise<void> {
+    await this.page.waitForSelector(".monaco-workbench .explorer-folders-view .monaco-list-row", { timeout: OPEN_TIMEOUT_MS });
+  }
+
+  /** Waits until the status bar no longer says that a language service is still working. */
+  async waitUntilIdle(): Promise<void> {
+    const busy = this.page.locator(".statusbar .codicon-modifier-spin, .statusbar .codicon-loading");
+    await waitUntil("an idle status bar", async () => ((await busy.count()) === 0 ? true : undefined), 30_000);
+  }
+
+  /** Opens a file of the folder by its path through Quick Open. */
+  async openFile(path: string): Promise<void> {
+    await this.page.keyboard.press("Control+p");
+    await this.fillQuickInput(path);
+    await this.page.waitForSelector(`.quick-input-list .monaco-list-row.focused[aria-label^="${basename(path)}"]`);
+    await this.page.keyboard.press("Enter");
+    await this.page.waitForSelector(`.tab.active[data-resource-name="${basename(path)}"]`);
+    await this.page.waitForSelector(".editor-group-container.active .monaco-editor.focused .view-line");
+  }
+
+  /** Runs a command by its title in the Command Palette. */
+  async runCommand(title: string): Promise<void> {
+    await this.page.keyboard.press("F1");
+    await this.fillQuickInput(`>${title}`);
+    await this.page.waitForSelector(`.quick-input-list .monaco-list-row.focused[aria-label^="${title}"]`);
+    await this.page.keyboard.press("Enter");
+  }
+
+  /** Scrolls the line of the saved file that holds `text` into the middle and puts the caret there. */
+  async reveal(file: string, text: string): Promise<void> {
+    const lines = (await readFile(join(this.folder, file), "utf8")).split("\n");
+    const line = lines.findIndex((content) => content.includes(text)) + 1;
+    if (line === 0) throw new Error(`"${text}" is not in ${file}.`);
+    await this.page.keyboard.press("Control+g");
+    await this.fillQuickInput(`:${line}`);
+    await this.page.keyboard.press("Enter");
+    await waitUntil(`"${text}" in view`, () => findTextInView(this.page, text));
+  }
+
+  /** Selects `text` where the view first shows it, and types over it. */
+  async retype(text: string, replacement: string): Promise<void> {
+    const box = await waitUntil(`"${text}" in view`, () => findTextInView(this.page, text));
+    await this.page.mouse.click(box.x + 1, box.y + box.height / 2);
+    for (let step = 0; step < text.length; step += 1) await this.page.keyboard.press("Shift+ArrowRight");
+    await this.page.keyboard.type(replacement, { delay: 20 });
+  }
+
+  async undo(): Promise<void> {
+    await this.page.keyboard.press("Control+z");
+  }
+
+  async save(): Promise<void> {
+    await this.page.keyboard.press("Control+s");
+    await this.page.waitForSelector(".tab.active:not(.dirty)");
+  }
+
+  /** The squiggles that the view shows, from top to bottom. */
+  squiggles(): Promise<Squiggle[]> {
+    return readSquiggles(this.page);
+  }
+
+  /** Waits until the shown squiggles satisfy the predicate, and gives them. */
+  async waitForSquiggles(
+    what: string,
+    accept: (squiggles: readonly Squiggle[]) => boolean,
+    timeoutMs = 15_000,
+  ): Promise<Squiggle[]> {
+    let last: Squiggle[] = [];
+    const look = async () => {
+      last = await this.squiggles();
+      return accept(last) ? last : undefined;
+    };
+    return waitUntil(what, look, timeoutMs, () => `the view shows ${JSON.stringify(last)}`);
+  }
+
+  /** Hovers over the `text` in view with the mouse, and gives the hover's text once it holds what is expected. */
+  async hover(text: string, expected: RegExp, timeoutMs = 15_000): Promise<string> {
+    const box = await waitUntil(`"${text}" in view`, () => findTextInView(this.page, text));
+    let last = "";
+    const look = async () => {
+      await this.page.mouse.move(box.x + box.width / 2 + Math.random(), box.y + box.height / 2);
+      const contents = await this.page
+        .locator(".monaco-resizable-hover:visible .hover-contents, .monaco-hover:visible .hover-contents")
+        .allInnerTexts();
+      last = contents.join("\n").replaceAll("\u00a0", " ");
+      return expected.test(last) ? last : undefined;
+    };
+    return waitUntil(
+      `a hover over "${text}" that holds ${expected}`,
+      look,
+      timeoutMs,
+      () => `the hover says ${JSON.stringify(last)}`,
+    );
+  }
+
+  /** Takes the pointer and an open hover away. */
+  async leaveHover(): Promise<void> {
+    await this.page.mouse.move(2, 2);
+    await this.page.keyboard.press("Escape");
+    await this.page.waitForSelector(".monaco-hover:visible", { state: "hidden" });
+  }
+
+  /** The frame of a webview that holds what the selector asks for. */
+  webview(selector: string, timeoutMs = 15_000): Promise<Frame> {
+    const look = async () => {
+      for (const frame of this.page.frames()) {
+        if (frame !== this.page.mainFrame() && (await frame.$(selector).catch(() => null))) return frame;
+      }
+      return undefined;
+    };
+    return waitUntil(`a webview with ${selector}`, look, timeoutMs);
+  }
+
+  private async fillQuickInput(text: string): Promise<void> {
+    const input = this.page.locator(".quick-input-widget:visible .quick-input-filter input");
+    await input.waitFor();
+    await input.fill(text);
+  }
+}

@@ -1,0 +1,4 @@
+// What the test run takes from this folder, as one module to load.
+
+export { getChromium } from "./chromium.js";
+export { runEditorTests } from "./runEditorTests.js";

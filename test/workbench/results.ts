@@ -1,0 +1,9 @@
+// What a run of tests gives, wherever it ran. A part that could not run says why and counts nothing.
+
+export interface TestResult {
+  readonly title: string;
+  /** Absent when the test passed. */
+  readonly failure?: string;
+}
+
+export type PartResult = { readonly tests: readonly TestResult[] } | { readonly notRun: string };

@@ -1,0 +1,100 @@
+// Runs all editor tests against one way of having the extension: run from the build, or installed from its package. One
+// server and one browser serve the tests of the extension host and of the page. The caller prints and counts.
+
+import { mkdir, writeFile } from "node:fs/promises";
+import { join } from "node:path";
+import { pathToFileURL } from "node:url";
+import { bundleHostTests } from "./bundleHostTests.js";
+import { bundleTests } from "./bundleTests.js";
+import { RESULT_MARK } from "./host/resultMark.js";
+import { runMocha } from "./mochaResults.js";
+import { cacheFolder, demoFolder, workbenchFolder } from "./paths.js";
+import type { TestResult } from "./results.js";
+import { startWorkbench, type Workbench, type WorkbenchOptions } from "./workbench.js";
+
+const HOST_TIMEOUT_MS = 5 * 60_000;
+const PAGE_TEST_TIMEOUT_MS = 90_000;
+
+export type EditorRun = Pick<WorkbenchOptions, "extensionMode" | "browser" | "vsix" | "extension"> & {
+  readonly workspace?: string;
+  /** Where the test modules are; else the folders beside this file. */
+  readonly tests?: { readonly host: string; readonly page: string };
+};
+
+export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
+  const { host, page } = run.tests ?? { host: join(workbenchFolder, "host"), page: join(workbenchFolder, "page") };
+  const workbench = await startWorkbench({ workspace: demoFolder, ...run });
+  try {
+    return [...(await runHost(workbench, host)), ...(await runPage(workbench, page, run.extensionMode))];
+  } finally {
+    await workbench.stop();
+  }
+}
+
+async function runHost(workbench: Workbench, folder: string): Promise<TestResult[]> {
+  const path = await bundleHostTests(folder);
+  const results: TestResult[] = [];
+  const log: string[] = [];
+  const onLog = (line: string) => {
+    log.push(line);
+    const at = line.indexOf(RESULT_MARK);
+    if (at >= 0) results.push(JSON.parse(line.slice(at + RESULT_MARK.length)));
+  };
+  try {
+    const exitCode = await workbench.runHostTests({
+      tests: path,
+      emptyExtension: await makeEmptyExtension(),
+      onLog,
+      timeoutMs: HOST_TIMEOUT_MS,
+    });
+    const explained = exitCode === 0 || results.some(({ failure }) => failure !== undefined);
+    if (!explained) throw new Error(`It ended with exit code ${exitCode}.`);
+    if (results.length === 0) throw new Error("No tests ran.");
+  } catch (error) {
+    const tail = log.filter((line) => !line.includes(RESULT_MARK)).slice(-20);
+    const failure = [
+      error instanceof Error ? error.message : String(error),
+      ...tail,
+      `The server's log is ${workbench.logFile}.`,
+    ].join("\n");
+    results.push({ title: "the tests in the extension host", failure });
+  }
+  return results;
+}
+
+/** A test run in the extension host starts from some extension's folder; the installed one has none in the work tree. */
+async function makeEmptyExtension(): Promise<string> {
+  const folder = join(cacheFolder, "empty-extension");
+  await mkdir(folder, { recursive: true });
+  const manifest = { name: "empty", publisher: "loadmark", version: "0.0.0", engines: { vscode: "*" } };
+  await writeFile(join(folder, "package.json"), JSON.stringify(manifest));
+  return folder;
+}
+
+async function runPage(workbench: Workbench, folder: string, mode: string): Promise<TestResult[]> {
+  const entry = JSON.stringify(join(workbenchFolder, "page/session.js"));
+  const path = await bundleTests({
+    folder,
+    format: "esm",
+    writeEntry: (files) => `export { useWorkbench } from ${entry};\nexport const testFiles = ${files};\n`,
+  });
+  const { useWorkbench, testFiles } = await import(`${pathToFileURL(path).href}?${mode}`);
+  useWorkbench(workbench);
+  const { default: Mocha } = await import("mocha");
+  const results: TestResult[] = [];
+  await runMocha({
+    Mocha,
+    files: testFiles,
+    timeoutMs: PAGE_TEST_TIMEOUT_MS,
+    onResult: (result) => results.push(result),
+    onFailure: (title) => takePicture(workbench, `${mode} ${title}`),
+  });
+  if (results.length === 0) results.push({ title: "the tests in the page", failure: "No tests ran." });
+  return results;
+}
+
+async function takePicture(workbench: Workbench, title: string): Promise<string> {
+  const path = join(cacheFolder, "failures", `${title.replaceAll(/[^\w]+/g, "-")}.png`);
+  await workbench.page.screenshot({ path });
+  return `The editor then: ${path}`;
+}

@@ -1,0 +1,152 @@
+// The harness: a VS Code server with the extension, run from the sources' build or installed from its package, and a
+// Chromium page that shows it. Each opening takes a fresh copy of the workspace. Nothing here knows what is tested.
+
+import { type Browser, type BrowserContext, chromium, type Page } from "playwright-core";
+import { Editor } from "./editor.js";
+import { copyFolder, type FolderCopy } from "./folderCopy.js";
+import { repositoryRoot } from "./paths.js";
+import { startServer, type WorkbenchServer } from "./server.js";
+import { quietSettings } from "./settings.js";
+
+export type ExtensionMode = "development" | "installed";
+
+export interface WorkbenchOptions {
+  readonly extensionMode: ExtensionMode;
+  /** The browser's executable: see getChromium. */
+  readonly browser: string;
+  /** The folder that each opening copies. */
+  readonly workspace: string;
+  /** The packed extension, for the installed mode. */
+  readonly vsix?: string | undefined;
+  /** The extension's folder, for the development mode; else the repository. */
+  readonly extension?: string | undefined;
+  readonly settings?: Readonly<Record<string, unknown>> | undefined;
+  readonly viewport?: { readonly width: number; readonly height: number } | undefined;
+  /** Device pixels per CSS pixel. */
+  readonly scale?: number | undefined;
+}
+
+export interface HostTestOptions {
+  /** The module whose `run` the extension host calls. */
+  readonly tests: string;
+  /** What a development host needs beside the installed extension: any folder with a manifest. */
+  readonly emptyExtension: string;
+  readonly onLog: (text: string) => void;
+  readonly timeoutMs: number;
+}
+
+export interface Workbench {
+  readonly page: Page;
+  readonly logFile: string;
+  /** Opens a fresh copy of the workspace, replacing what was open. */
+  open(openFile?: string): Promise<Editor>;
+  /** Runs tests in the extension host, in a fresh copy, and gives their exit code. */
+  runHostTests(options: HostTestOptions): Promise<number>;
+  /** Settings on top of the quiet ones, from the next opening on. */
+  changeSettings(settings: Readonly<Record<string, unknown>>): void;
+  stop(): Promise<void>;
+}
+
+const CHROMIUM_FLAGS = [
+  ...(process.getuid?.() === 0 ? ["--no-sandbox"] : []),
+  "--disable-gpu",
+  "--disable-quic",
+  "--no-first-run",
+  "--disable-background-networking",
+  "--disable-component-update",
+  "--disable-sync",
+];
+
+export async function startWorkbench(options: WorkbenchOptions): Promise<Workbench> {
+  const { extensionMode, vsix, settings, browser: executablePath } = options;
+  if (extensionMode === "installed" && !vsix) throw new Error("An installed extension needs its package.");
+  const server = await startServer({
+    name: extensionMode,
+    settings: { ...quietSettings, ...settings },
+    vsix: extensionMode === "installed" ? vsix : undefined,
+  });
+  let browser: Browser | undefined;
+  try {
+    browser = await chromium.launch({ executablePath, args: CHROMIUM_FLAGS });
+    const context = await browser.newContext({
+      viewport: options.viewport ?? { width: 1280, height: 800 },
+      deviceScaleFactor: options.scale ?? 1,
+    });
+    return drive(options, server, browser, context, await context.newPage());
+  } catch (error) {
+    await browser?.close();
+    await server.stop();
+    throw error;
+  }
+}
+
+function drive(
+  options: WorkbenchOptions,
+  server: WorkbenchServer,
+  browser: Browser,
+  context: BrowserContext,
+  page: Page,
+): Workbench {
+  const { workspace, settings } = options;
+  const extension = options.extensionMode === "development" ? (options.extension ?? repositoryRoot) : undefined;
+  let copy: FolderCopy | undefined;
+  // Leaving the page first ends its extension host, which would otherwise go on watching the folder that is removed.
+  const leave = async () => {
+    await page.goto("about:blank");
+    await copy?.remove();
+    copy = undefined;
+  };
+  const takeCopy = async () => {
+    await leave();
+    copy = await copyFolder(workspace);
+    return copy.folder;
+  };
+  page.on("dialog", (dialog) => void dialog.accept());
+  return {
+    page,
+    logFile: server.logFile,
+    changeSettings: (more) => server.writeSettings({ ...quietSettings, ...settings, ...more }),
+    open: async (openFile) => {
+      const folder = await takeCopy();
+      await page.goto(server.address({ folder, extension }));
+      const editor = new Editor(page, folder);
+      await editor.waitUntilReady();
+      if (openFile) await editor.openFile(openFile);
+      return editor;
+    },
+    runHostTests: async ({ tests, emptyExtension, onLog, timeoutMs }) => {
+      const folder = await takeCopy();
+      const address = server.address({ folder, extension: extension ?? emptyExtension, extensionTests: tests });
+      const hostPage = await context.newPage();
+      try {
+        return await waitForExit(hostPage, address, onLog, timeoutMs);
+      } finally {
+        await hostPage.close();
+      }
+    },
+    stop: async () => {
+      await leave().catch(() => undefined);
+      await browser.close();
+      await server.stop();
+    },
+  };
+}
+
+/** The workbench calls two functions of its page while it runs extension tests: one per log line, one at the end. */
+async function waitForExit(page: Page, address: string, onLog: (text: string) => void, timeoutMs: number): Promise<number> {
+  let timer: NodeJS.Timeout | undefined;
+  const exited = new Promise<number>((resolve, reject) => {
+    timer = setTimeout(
+      () => reject(new Error(`The tests in the extension host did not end within ${timeoutMs / 1000} s.`)),
+      timeoutMs,
+    );
+    void page.exposeFunction("codeAutomationExit", (code: number) => resolve(code));
+  });
+  try {
+    await page.exposeFunction("codeAutomationLog", (_level: string, args: unknown[]) => onLog(args.map(String).join(" ")));
+    await page.goto(address);
+    return await exited;
+  } finally {
+    clearTimeout(timer);
+  }
+}
