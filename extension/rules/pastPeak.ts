@@ -15,7 +15,7 @@ export const pastPeak: MechanismRule = {
 
 function judge({ mechanism, numbers }: MechanismFacts): Verdict | undefined {
   const { hardest, available } = numbers;
-  if (!(hardest.stallShare > PEAK_SHARE)) return undefined;
+  if (hardest.stallShare === null || hardest.stallShare <= PEAK_SHARE) return undefined;
   const ratio = scaledRatio(mechanism, hardest.stallShare / PEAK_SHARE);
   return {
     message:

@@ -10,11 +10,7 @@ export const sheetContradicts: MotorRule = { id: "sheet-contradicts", level: "wa
 
 /** True where no motor can have these data, so that nothing can be computed from them. */
 export function isImpossible(motor: Motor): boolean {
-  return !(
-    motor.si.backEmfVPerRadPerS > 0 &&
-    motor.si.torqueConstantNmPerA > 0 &&
-    Number.isFinite(motor.si.torqueConstantNmPerA)
-  );
+  return motor.si.noLoadCurrentA >= motor.si.voltageV / motor.si.resistanceOhm;
 }
 
 function judge(motor: Motor): Verdict | undefined {

@@ -1,0 +1,105 @@
+/** Findings about the declarations themselves: refused arguments, names used twice, values that cannot be known. */
+import type { DefinitionCall, Span, Unknown } from "../evaluator/value.js";
+import { badDeclaration, tellIssue, tellMissing, tellNameTwice } from "../rules/badDeclaration.js";
+import { notConstant, tellUnknown } from "../rules/notConstant.js";
+import type { Finding } from "./analysis.js";
+import { type Declared, stringIn } from "./declared.js";
+
+export function findInDeclarations(calls: readonly DefinitionCall[], declared: Declared): Finding[] {
+  return [
+    ...calls.flatMap(findIssues),
+    ...findUnknowns(calls),
+    ...findNamesTwice("mechanism", calls),
+    ...findNamesTwice("robot", calls),
+  ].map((finding) => ({ ...finding, mechanism: finding.mechanism ?? mechanismAround(finding.at, declared) }));
+}
+
+function findIssues(call: DefinitionCall): Finding[] {
+  return call.issues.map((issue) => ({
+    ...badDeclaration,
+    rule: badDeclaration.id,
+    mechanism: null,
+    message: tellIssue(issue),
+    at: issue.span,
+    related: issue.source ? [{ at: issue.source, message: "The value comes from here." }] : [],
+  }));
+}
+
+/** One finding per root cause, at the use that lies nearest to it; other uses are related. */
+function findUnknowns(calls: readonly DefinitionCall[]): Finding[] {
+  const byRoot = new Map<string, Unknown[]>();
+  for (const unknown of calls.flatMap((call) => call.unknowns)) {
+    const root = rootOf(unknown);
+    const key = JSON.stringify([root.origin.span, root.reason.code]);
+    byRoot.set(key, [...(byRoot.get(key) ?? []), unknown]);
+  }
+  return [...byRoot.values()].map((uses) => {
+    const nearest = uses.reduce((best, use) => (depthOf(use) < depthOf(best) ? use : best));
+    const { message, chain } = tellUnknown(nearest);
+    const root = rootOf(nearest);
+    const missing = root.reason.code === "missing";
+    const steps = chain.map((link) => ({
+      at: link.origin.span,
+      message: link === root ? "This cannot be known." : "It comes through here.",
+    }));
+    const others = uses
+      .filter((use) => use !== nearest && !sameSpan(use.origin.span, nearest.origin.span))
+      .map((use) => ({ at: use.origin.span, message: "This depends on it too." }));
+    return {
+      rule: missing ? badDeclaration.id : notConstant.id,
+      level: missing ? badDeclaration.level : notConstant.level,
+      mechanism: null,
+      message: missing ? tellMissing(root) : message,
+      at: nearest.origin.span,
+      related: distinct([...steps, ...others], nearest.origin.span),
+    };
+  });
+}
+
+function findNamesTwice(kind: "mechanism" | "robot", calls: readonly DefinitionCall[]): Finding[] {
+  const first = new Map<string, Span>();
+  const findings: Finding[] = [];
+  for (const call of calls) {
+    const value = call.args[0];
+    const name = value === undefined ? undefined : stringIn(value);
+    if (call.definition !== kind || value === undefined || name === undefined) continue;
+    const before = first.get(name);
+    if (before === undefined) first.set(name, value.origin.span);
+    else {
+      findings.push({
+        ...badDeclaration,
+        rule: badDeclaration.id,
+        mechanism: kind === "mechanism" ? name : null,
+        message: tellNameTwice(kind, name),
+        at: value.origin.span,
+        related: [{ at: before, message: "First used here." }],
+      });
+    }
+  }
+  return findings;
+}
+
+function mechanismAround(at: Span, declared: Declared): string | null {
+  const around = declared.mechanisms.find(
+    ({ call: { span } }) => span.file === at.file && span.start <= at.start && at.end <= span.end,
+  );
+  return around?.name ?? null;
+}
+
+function rootOf(unknown: Unknown): Unknown {
+  return unknown.cause === undefined ? unknown : rootOf(unknown.cause);
+}
+
+function depthOf(unknown: Unknown): number {
+  return unknown.cause === undefined ? 0 : 1 + depthOf(unknown.cause);
+}
+
+function distinct<Item extends { readonly at: Span }>(items: readonly Item[], except: Span): Item[] {
+  return items.filter(
+    (item, index) => !sameSpan(item.at, except) && items.findIndex((other) => sameSpan(other.at, item.at)) === index,
+  );
+}
+
+function sameSpan(a: Span, b: Span): boolean {
+  return a.file === b.file && a.start === b.start && a.end === b.end;
+}

@@ -1,0 +1,46 @@
+/** From calls to definitions to the mechanisms, motors and robots that a workspace declares. Runs no physics. */
+import type { Mechanism } from "../declarations/mechanism.js";
+import type { Motor } from "../declarations/motor.js";
+import type { Robot } from "../declarations/robot.js";
+import type { DefinitionCall, Span, Value } from "../evaluator/value.js";
+import type { AnalysedMechanism, AnalysedMotor, AnalysedRobot } from "./analysis.js";
+
+export interface Declared {
+  readonly mechanisms: readonly Omit<AnalysedMechanism, "assumed" | "notChecked" | "numbers">[];
+  readonly motors: readonly AnalysedMotor[];
+  readonly robots: readonly AnalysedRobot[];
+}
+
+export function collectDeclared(calls: readonly DefinitionCall[]): Declared {
+  return {
+    mechanisms: calls
+      .filter((call) => call.definition === "mechanism")
+      .map((call) => ({
+        ...place(call),
+        call,
+        ...(call.built === undefined ? {} : { declared: call.built as Mechanism }),
+      })),
+    motors: calls.flatMap((call) =>
+      call.definition === "motor" && call.built !== undefined
+        ? [{ at: place(call).at, call, declared: call.built as Motor }]
+        : [],
+    ),
+    robots: calls.flatMap((call) =>
+      call.definition === "robot" && call.built !== undefined ? [{ ...place(call), call, declared: call.built as Robot }] : [],
+    ),
+  };
+}
+
+/** Where a finding about the whole call sits, and how it is called there. */
+function place(call: DefinitionCall): { readonly name: string; readonly at: Span } {
+  const first = call.args[0];
+  const written = first === undefined ? undefined : stringIn(first);
+  const name = written ?? call.binding?.name ?? call.definition;
+  return { name, at: call.binding?.span ?? (written === undefined ? call.callee : (first?.origin.span ?? call.callee)) };
+}
+
+/** The string that a value is known to be. */
+export function stringIn(value: Value): string | undefined {
+  if (!value.known || value.data.kind !== "primitive") return undefined;
+  return typeof value.data.value === "string" ? value.data.value : undefined;
+}

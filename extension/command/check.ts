@@ -1,0 +1,38 @@
+/** One check of a file or folder: finds the files, analyses them, writes the report. */
+import { statSync } from "node:fs";
+import path from "node:path";
+import { createAnalyser } from "../analysis/analyser.js";
+import type { Analysis } from "../analysis/analysis.js";
+import { loadParser } from "../analysis/parser.js";
+import { makeReport } from "../report/report.js";
+import { writeText } from "../report/text.js";
+import type { CommandLine, FailOn } from "./commandLine.js";
+import { createDiskSnapshot, findSources, toName } from "./disk.js";
+
+export interface CheckResult {
+  readonly output: string;
+  readonly complaint?: string;
+  readonly status: 0 | 1 | 2;
+}
+
+export async function check({ path: given, format, failOn }: Extract<CommandLine, { kind: "check" }>): Promise<CheckResult> {
+  const target = path.resolve(given);
+  const stats = statSync(target, { throwIfNoEntry: false });
+  if (stats === undefined) return { output: "", complaint: `there is no "${given}"`, status: 2 };
+  const snapshot = createDiskSnapshot();
+  const roots = stats.isDirectory() ? findSources(target, snapshot) : [toName(target)];
+  if (roots.length === 0) return { output: "", complaint: `no file in "${given}" mentions "loadmark"`, status: 2 };
+  const analysis = createAnalyser(await loadParser()).analyse(roots, snapshot);
+  // Names count from the checked folder, so that the report does not depend on where the command was started; a
+  // terminal can open only what counts from the working directory.
+  const base = format === "json" ? (stats.isDirectory() ? target : path.dirname(target)) : process.cwd();
+  const nameOf = (file: string) => path.relative(base, file).split(path.sep).join("/");
+  const output = format === "json" ? `${JSON.stringify(makeReport(analysis, nameOf), null, 2)}\n` : writeText(analysis, nameOf);
+  return { output, status: fails(analysis, failOn) ? 1 : 0 };
+}
+
+function fails(analysis: Analysis, failOn: FailOn): boolean {
+  const levels = ["information", "warning", "error"];
+  const from = levels.indexOf(failOn);
+  return from >= 0 && analysis.findings.some(({ level }) => levels.indexOf(level) >= from);
+}

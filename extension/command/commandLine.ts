@@ -1,0 +1,61 @@
+/** The command line: words in, a plan or a refusal out. */
+import { parseArgs } from "node:util";
+
+export type CommandLine =
+  | { readonly kind: "check"; readonly path: string; readonly format: Format; readonly failOn: FailOn }
+  | { readonly kind: "help" }
+  | { readonly kind: "version" }
+  | { readonly kind: "refused"; readonly message: string };
+
+export type Format = "text" | "json";
+export type FailOn = "error" | "warning" | "information" | "never";
+
+const FORMATS: readonly string[] = ["text", "json"] satisfies Format[];
+const FAIL_ON: readonly string[] = ["error", "warning", "information", "never"] satisfies FailOn[];
+
+export const USAGE = `usage: loadmark check <file or folder> [options]
+
+  --format text|json                           text for people (the default), json for programs
+  --fail-on error|warning|information|never    exit with 1 from this level up (default: error)
+  --help, --version
+
+Exit status: 0 nothing at or above --fail-on, 1 findings, 2 the check could not run.
+`;
+
+export function parseCommandLine(words: readonly string[]): CommandLine {
+  let parsed: ReturnType<typeof parseWords>;
+  try {
+    parsed = parseWords(words);
+  } catch (error) {
+    return refuse(error instanceof Error ? error.message : String(error));
+  }
+  const { values, positionals } = parsed;
+  if (values.help) return { kind: "help" };
+  if (values.version) return { kind: "version" };
+  const [command, path, ...rest] = positionals;
+  if (command !== "check") return refuse(command === undefined ? "say what to do: check" : `"${command}" is not a command`);
+  if (path === undefined) return refuse("check needs a file or folder");
+  if (rest.length > 0) return refuse("check takes one file or folder");
+  const format = values.format ?? "text";
+  const failOn = values["fail-on"] ?? "error";
+  if (!FORMATS.includes(format)) return refuse(`"${format}" is not a format: ${FORMATS.join(", ")}`);
+  if (!FAIL_ON.includes(failOn)) return refuse(`"${failOn}" is not a level: ${FAIL_ON.join(", ")}`);
+  return { kind: "check", path, format: format as Format, failOn: failOn as FailOn };
+}
+
+function parseWords(words: readonly string[]) {
+  return parseArgs({
+    args: [...words],
+    allowPositionals: true,
+    options: {
+      format: { type: "string" },
+      "fail-on": { type: "string" },
+      help: { type: "boolean", short: "h" },
+      version: { type: "boolean" },
+    },
+  });
+}
+
+function refuse(message: string): CommandLine {
+  return { kind: "refused", message };
+}

@@ -1,0 +1,9 @@
+/** The cautions that go with every result, once, in words that each place shows as they are. */
+
+export const CAUTIONS = {
+  terminal: [
+    "Estimates, not a safety assessment. Lifts and arms fall when power is lost: block them before working on them.",
+    "Never raise a fuse or breaker rating to silence a finding. Keep hands out of powered gears. Hot windings burn and lithium packs",
+    "can catch fire: follow the makers' instructions, the event's or site's electrical rules, local codes and licensed practice.",
+  ].join("\n"),
+} as const;

@@ -1,0 +1,96 @@
+/**
+ * The report: the stable, versioned form of an analysis for other programs.
+ *
+ * SI throughout; no absolute paths, no timestamps; the same analysis gives the same bytes. Numbers carry ten significant digits, so
+ * that the last bit of a platform's arithmetic never shows.
+ */
+import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import { createLineFinder, type Place } from "./lines.js";
+
+export interface Report {
+  readonly format: "loadmark-report";
+  readonly version: 1;
+  readonly mechanisms: readonly ReportedMechanism[];
+  readonly findings: readonly ReportedFinding[];
+}
+
+export interface ReportedRange {
+  readonly file: string;
+  readonly line: number;
+  readonly column: number;
+  readonly endLine: number;
+  readonly endColumn: number;
+}
+
+export interface ReportedFinding extends ReportedRange {
+  readonly rule: string;
+  readonly level: string;
+  readonly mechanism: string | null;
+  readonly message: string;
+  readonly related: readonly (ReportedRange & { readonly message: string })[];
+}
+
+type Numbers = NonNullable<AnalysedMechanism["numbers"]>;
+type NumbersOrNull = { readonly [Group in keyof Numbers]: Numbers[Group] | null };
+
+export interface ReportedMechanism extends NumbersOrNull {
+  readonly name: string;
+  readonly file: string;
+  readonly line: number;
+  readonly assumed: readonly string[];
+  readonly notChecked: readonly string[];
+}
+
+/** `nameOf` turns a file of the snapshot into the name that the report carries. */
+export function makeReport(analysis: Analysis, nameOf: (file: string) => string): Report {
+  const finders = new Map<string, (offset: number) => Place>();
+  const placeOf = (file: string, offset: number): Place => {
+    const finder = finders.get(file) ?? createLineFinder(analysis.snapshot.read(file) ?? "");
+    finders.set(file, finder);
+    return finder(offset);
+  };
+  const rangeOf = ({ file, start, end }: Finding["at"]): ReportedRange => {
+    const from = placeOf(file, start);
+    const to = placeOf(file, end);
+    return { file: nameOf(file), line: from.line, column: from.column, endLine: to.line, endColumn: to.column };
+  };
+  return {
+    format: "loadmark-report",
+    version: 1,
+    mechanisms: analysis.mechanisms.map((mechanism) => ({
+      name: mechanism.name,
+      file: nameOf(mechanism.at.file),
+      line: placeOf(mechanism.at.file, mechanism.at.start).line,
+      ...(mechanism.numbers === undefined ? NO_NUMBERS : roundNumbers(mechanism.numbers)),
+      assumed: mechanism.assumed,
+      notChecked: mechanism.notChecked,
+    })),
+    findings: analysis.findings.map(({ rule, level, mechanism, message, at, related }) => ({
+      rule,
+      level,
+      mechanism,
+      message,
+      ...rangeOf(at),
+      related: related.map((one) => ({ message: one.message, ...rangeOf(one.at) })),
+    })),
+  };
+}
+
+const NO_NUMBERS: NumbersOrNull = {
+  ratio: null,
+  stageEfficiency: null,
+  available: null,
+  hardest: null,
+  hold: null,
+  stall: null,
+  feedforward: null,
+};
+
+function roundNumbers<T>(value: T): T {
+  if (typeof value === "number") return (Number.isFinite(value) ? Number(value.toPrecision(10)) : null) as T;
+  if (Array.isArray(value)) return value.map(roundNumbers) as T;
+  if (typeof value === "object" && value !== null) {
+    return Object.fromEntries(Object.entries(value).map(([key, inner]) => [key, roundNumbers(inner)])) as T;
+  }
+  return value;
+}
