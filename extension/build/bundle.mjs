@@ -80,9 +80,9 @@ async function refreshTypes() {
 }
 
 function presentTargets() {
-  return targets.filter(({ entry }) => {
+  return targets.filter(({ entry, later }) => {
     const present = existsSync(join(repositoryRoot, entry));
-    if (!present) console.log(`(${entry} does not exist yet)`);
+    if (!present && !later) console.log(`(${entry} does not exist yet)`);
     return present;
   });
 }

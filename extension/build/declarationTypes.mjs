@@ -65,7 +65,8 @@ function reachFrom(first, emitted) {
     const shown = relative(repositoryRoot, file);
     const text = emitted.get(file);
     if (text === undefined) throw new Error(`The type declarations need ${shown}, which was not emitted.`);
-    if (/valibot/.test(text)) throw new Error(`The type declarations must not mention valibot, but ${shown} does.`);
+    if (/valibot/.test(text))
+      throw new Error(`The type declarations must not mention valibot, but ${shown} does (${mentioning(text)}).`);
     reached.set(file, text);
     for (const { fileName } of ts.preProcessFile(text, true, true).importedFiles) {
       if (!fileName.startsWith("."))
@@ -74,6 +75,14 @@ function reachFrom(first, emitted) {
     }
   }
   return reached;
+}
+
+/** @param {string} text */
+function mentioning(text) {
+  return text
+    .split("\n")
+    .find((line) => line.includes("valibot"))
+    ?.trim();
 }
 
 /**

@@ -23,7 +23,8 @@ try {
   });
 } catch (error) {
   console.error(`Set-up stopped: ${error instanceof Error ? error.message : String(error)}`);
-  process.exit(1);
+  // Not process.exit: a build that is still running would be cut off, loudly.
+  process.exitCode = 1;
 }
 
 function checkNode() {

@@ -45,8 +45,9 @@ export async function takePictures({
     for (const { name, theme, file, steps } of list) {
       workbench.changeSettings({ ...PICTURE_SETTINGS, "workbench.colorTheme": theme });
       const editor = await workbench.open(file);
-      for (const step of steps) await takeStep(editor, step);
+      // Else TypeScript's own part of a hover says that it is loading.
       await editor.waitUntilIdle();
+      for (const step of steps) await takeStep(editor, step);
       const path = join(into, `${name}.png`);
       await editor.page.screenshot({ path, animations: "disabled" });
       console.log(`  ${path}`);
