@@ -9,7 +9,8 @@ import { linePoint, peakEfficiencyPoint, peakPowerPoint } from "../../extension/
 import { shaftLoadOf } from "../../extension/model/shaftLoad.js";
 import { solveMechanism } from "../../extension/model/solve.js";
 import "./expectShare.js";
-import { driveOf, rollerOf, someDrive, someMotor } from "./drives.js";
+import { driveOf, rollerOf } from "./drives.js";
+import { someDrive, someMotor } from "./randomDrives.js";
 
 const share = fc.double({ min: 0, max: 1.3, noNaN: true });
 

@@ -1,0 +1,25 @@
+/** All topics: their rows and the model's answers to them. */
+import { motorAnswers } from "./answers/motor.js";
+import { temperatureAnswers } from "./answers/temperature.js";
+import { transmissionAnswers } from "./answers/transmission.js";
+import type { Answers, ReferenceRow } from "./row.js";
+import { motorRows } from "./rows/motor.js";
+import { temperatureRows } from "./rows/temperature.js";
+import { transmissionRows } from "./rows/transmission.js";
+
+export interface Topic {
+  readonly name: string;
+  readonly rows: readonly ReferenceRow[];
+  readonly answers: Answers;
+}
+
+export const topics: readonly Topic[] = [
+  { name: "motor", rows: motorRows, answers: motorAnswers },
+  { name: "temperature", rows: temperatureRows, answers: temperatureAnswers },
+  { name: "transmission", rows: transmissionRows, answers: transmissionAnswers },
+];
+
+/** Error of an answer as a share of what its row allows: at most 1 passes. */
+export function shareOfTolerance(row: ReferenceRow, answer: number): number {
+  return Math.abs(answer - row.value) / (row.tolerance * (row.absolute ? 1 : Math.abs(row.value)));
+}
