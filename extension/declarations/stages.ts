@@ -60,7 +60,17 @@ export const beltDefinition = pairDefinition("belt", "the driver's teeth", "the 
 
 export const planetaryDefinition: Definition<[number, number, StageOptions?], Stage> = define(
   "planetary",
-  v.strictTuple([count("the sun's teeth"), count("the ring's teeth"), options], "planetary takes sun, ring and options"),
+  v.pipe(
+    v.strictTuple([count("the sun's teeth"), count("the ring's teeth"), options], "planetary takes sun, ring and options"),
+    v.rawCheck(({ dataset, addIssue }) => {
+      if (!dataset.typed) return;
+      const [sun, ring] = dataset.value;
+      // The smallest planet has one tooth: ring = sun + 2 planets.
+      if (ring >= sun + 2) return;
+      const message = `a ring of ${ring} teeth does not go around a sun of ${sun}`;
+      addIssue({ message, path: [{ type: "array", origin: "value", input: dataset.value, key: 1, value: ring }] });
+    }),
+  ),
   // Ring fixed, carrier driven: 1 + ring / sun.
   (sun, ring, given) => simpleStage("planetary", 1 + ring / sun, [sun, ring], given),
 );

@@ -38,7 +38,9 @@ export function writeQuantity(si: number, dimension: Dimension): string {
 
 /** `si` in the unit named. */
 export function writeIn(si: number, symbol: string): string {
-  return `${writeNumber(numberIn(si, symbol))} ${typeset(symbol)}`;
+  // The degree sign of an angle stands against its number (ISO 80000-1); that of a temperature does not.
+  const gap = symbol.startsWith("deg") && !/^deg[CF]/.test(symbol) ? "" : " ";
+  return `${writeNumber(numberIn(si, symbol))}${gap}${typeset(symbol)}`;
 }
 
 /** Three significant digits, no exponent between 1e-4 and 1e6, a true minus sign. */

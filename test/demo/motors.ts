@@ -1,0 +1,16 @@
+/** Invented gearmotors: no such motors are made, and these numbers belong to nobody's sheet. */
+import { motor } from "loadmark";
+
+/** Slow and strong; numbers at the gearbox's output shaft. */
+export const steadyMotor = motor({
+  voltage: "12 V",
+  noLoad: { speed: "152 rpm", current: "0.28 A" },
+  stall: { torque: "2.4 N*m", current: "4.1 A" },
+});
+
+/** Twice as quick, half as strong. */
+export const quickMotor = motor({
+  voltage: "12 V",
+  noLoad: { speed: "310 rpm", current: "0.35 A" },
+  stall: { torque: "1.3 N*m", current: "4.4 A" },
+});
