@@ -4,10 +4,9 @@
 import { mkdir, readFile, rm, stat } from "node:fs/promises";
 import { join, relative, resolve } from "node:path";
 import { fileURLToPath } from "node:url";
-import { createVSIX } from "@vscode/vsce";
 import { bundle } from "./bundle.mjs";
 import { repositoryRoot } from "./repositoryRoot.mjs";
-import { runNpm } from "./runNpm.mjs";
+import { runNpm, runQuietly } from "./runQuietly.mjs";
 import { takeStep } from "./takeStep.mjs";
 
 /** Largest sizes in bytes. */
@@ -35,13 +34,9 @@ export async function makePackages(folder) {
   await takeStep("building", bundle);
   await takeStep("packing the extension", async () => {
     await rm(vsix, { force: true });
-    await createVSIX({
-      cwd: repositoryRoot,
-      packagePath: vsix,
-      dependencies: false,
-      allowMissingRepository: true,
-      rewriteRelativeLinks: false,
-    });
+    const script = "node_modules/@vscode/vsce/vsce";
+    const flags = ["--no-dependencies", "--allow-missing-repository", "--no-rewrite-relative-links"];
+    await runQuietly(process.execPath, [script, "package", ...flags, "--out", vsix], { folder: repositoryRoot });
   });
   await takeStep("packing the npm package", () =>
     runNpm(["pack", "--ignore-scripts", "--loglevel=error", "--pack-destination", folder], repositoryRoot),

@@ -5,7 +5,7 @@
 import { existsSync, readFileSync } from "node:fs";
 import { join } from "node:path";
 import { repositoryRoot } from "./repositoryRoot.mjs";
-import { runNpm } from "./runNpm.mjs";
+import { runNpm } from "./runQuietly.mjs";
 import { takeStep } from "./takeStep.mjs";
 
 const OLDEST_NODE = { major: 20, minor: 19 };

@@ -4,7 +4,7 @@
 import { createHash } from "node:crypto";
 import { existsSync, readFileSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
-import { runNpm } from "../../extension/build/runNpm.mjs";
+import { runNpm } from "../../extension/build/runQuietly.mjs";
 import { takeStep } from "../../extension/build/takeStep.mjs";
 import { workbenchFolder } from "./paths.js";
 
