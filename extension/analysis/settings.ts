@@ -15,12 +15,18 @@ import type { Finding } from "./analysis.js";
 export const SETTINGS_FILE = "loadmark.json";
 
 const level = v.picklist(["error", "warning", "information", "off"], 'a level is "error", "warning", "information" or "off"');
-const settingsSchema = v.strictObject({
-  $schema: v.optional(v.string()),
-  levels: v.optional(v.record(v.picklist(RULES.map(({ id }) => id)), level)),
-  toothCounts: v.optional(v.array(v.pipe(v.number(), v.integer(), v.minValue(1)))),
-  leaveOut: v.optional(v.array(v.string())),
-});
+const settingsSchema = v.pipe(
+  v.custom<object>(
+    (input) => typeof input === "object" && input !== null && !Array.isArray(input),
+    "the settings are not an object",
+  ),
+  v.strictObject({
+    $schema: v.optional(v.string()),
+    levels: v.optional(v.record(v.picklist(RULES.map(({ id }) => id)), level)),
+    toothCounts: v.optional(v.array(v.pipe(v.number(), v.integer(), v.minValue(1)))),
+    leaveOut: v.optional(v.array(v.string())),
+  }),
+);
 
 export type Settings = v.InferOutput<typeof settingsSchema>;
 

@@ -17,19 +17,24 @@ export function readJsonText(typescript: TypeScript, file: string, text: string)
   const root = source.statements[0]?.expression;
   return {
     data: typescript.convertToObject(source, []),
-    ...(error === undefined
-      ? {}
-      : {
-          broken: {
-            message: typescript.flattenDiagnosticMessageText(error.messageText, " "),
-            start: error.start,
-            end: Math.min(error.start + Math.max(error.length, 1), Math.max(text.length, 1)),
-          },
-        }),
+    ...describeError(typescript, error, root === undefined, text),
     placeOf(path, of) {
       const node = root === undefined ? undefined : nodeAt(typescript, root, path, of);
       return node === undefined ? { start: 0, end: text.length } : { start: node.getStart(source), end: node.getEnd() };
     },
+  };
+}
+
+function describeError(
+  typescript: TypeScript,
+  error: ts.DiagnosticWithLocation | undefined,
+  isEmpty: boolean,
+  text: string,
+): Pick<JsonText, "broken"> {
+  if (error === undefined) return isEmpty ? { broken: { message: "it is empty.", start: 0, end: text.length } } : {};
+  const message = typescript.flattenDiagnosticMessageText(error.messageText, " ");
+  return {
+    broken: { message, start: error.start, end: Math.min(error.start + Math.max(error.length, 1), Math.max(text.length, 1)) },
   };
 }
 
