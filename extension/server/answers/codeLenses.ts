@@ -1,0 +1,45 @@
+/** Code lenses: places at once, titles when one comes into view, from the result of then. */
+import type { CodeLens } from "vscode-languageserver";
+import { codeLensesOf, type CodeLens as Lens } from "../../features/codeLenses.js";
+import { SHOW_CHART } from "../../protocol/commands.js";
+import type { CurrentFile } from "../current.js";
+import type { Result } from "../session.js";
+
+interface LensData {
+  readonly file: string;
+  readonly mechanism: string;
+  /** Position among the lenses of the file with the same name. */
+  readonly index: number;
+}
+
+export function answerCodeLenses({ result, file, lines, carry }: CurrentFile): CodeLens[] {
+  const seen = new Map<string, number>();
+  return codeLensesOf(result.analysis, file).map(({ span, mechanism }) => {
+    const index = seen.get(mechanism) ?? 0;
+    seen.set(mechanism, index + 1);
+    const data: LensData = { file, mechanism, index };
+    return { range: lines.rangeOf(carry(span)), data };
+  });
+}
+
+/** `commands`: those that the client has. */
+export function resolveCodeLens(result: Result, lens: CodeLens, commands: readonly string[]): CodeLens {
+  const { file, mechanism, index } = lens.data as LensData;
+  const found = codeLensesOf(result.analysis, file).filter((one) => one.mechanism === mechanism)[index];
+  const title = found?.title ?? mechanism;
+  const opens = found !== undefined && commands.includes(SHOW_CHART);
+  return { ...lens, command: opens ? { title, command: SHOW_CHART, arguments: [mechanism] } : { title, command: "" } };
+}
+
+/** True when `next` gives other lenses than those shown, which moved along with the text. */
+export function changesCodeLenses(shown: CurrentFile | undefined, next: Result, file: string): boolean {
+  const before =
+    shown === undefined
+      ? []
+      : codeLensesOf(shown.result.analysis, file).map((lens) => ({ ...lens, span: shown.carry(lens.span) }));
+  return summary(before) !== summary(codeLensesOf(next.analysis, file));
+}
+
+function summary(lenses: readonly Lens[]): string {
+  return JSON.stringify(lenses.map(({ span, title, mechanism }) => [span.start, title, mechanism]));
+}

@@ -1,0 +1,67 @@
+/**
+ * The server as a process of its own, with the disk through Node.
+ *
+ * Talks over whichever channel its arguments name (`--stdio`, `--node-ipc`); the only file of the room that knows Node.
+ */
+import { readdir, readFile } from "node:fs/promises";
+import { join } from "node:path";
+import { fileURLToPath } from "node:url";
+import { createConnection, ProposedFeatures } from "vscode-languageserver/node";
+import { type FileHost, isSkippedFolder, isSource } from "./discovery.js";
+import { loadEngine } from "./engine.js";
+import { keyOf, uriOf } from "./fileKeys.js";
+import { describeError } from "./guard.js";
+import { serve } from "./serve.js";
+
+const connection = createConnection(ProposedFeatures.all);
+const report = (error: unknown) => connection.console.error(`Unexpected: ${describeError(error)}`);
+process.on("uncaughtException", report);
+process.on("unhandledRejection", report);
+serve(connection, { host: createDisk(), loadEngine });
+
+function createDisk(): FileHost {
+  return { readFile: readText, listSources };
+}
+
+async function readText(file: string): Promise<string | null> {
+  const path = pathOf(file);
+  if (path === undefined) return null;
+  try {
+    const text = await readFile(path, "utf8");
+    // Editors count characters without the byte order mark.
+    return text.startsWith("\ufeff") ? text.slice(1) : text;
+  } catch {
+    return null;
+  }
+}
+
+/** Breadth first, one batch a level of folders. Links to folders are not followed: they may run in a circle. */
+async function* listSources(folder: string): AsyncIterable<readonly string[]> {
+  const start = pathOf(folder);
+  for (let level = start === undefined ? [] : [start]; level.length > 0; ) {
+    const listings = await Promise.all(level.map(listFolder));
+    const files = listings.flatMap((listing) => listing.files);
+    if (files.length > 0) yield files;
+    level = listings.flatMap((listing) => listing.folders);
+  }
+}
+
+async function listFolder(folder: string): Promise<{ readonly files: string[]; readonly folders: string[] }> {
+  try {
+    const entries = await readdir(folder, { withFileTypes: true });
+    const folders = entries.filter((entry) => entry.isDirectory() && !isSkippedFolder(entry.name));
+    const files = entries.filter((entry) => (entry.isFile() || entry.isSymbolicLink()) && isSource(entry.name));
+    return {
+      folders: folders.map(({ name }) => join(folder, name)),
+      files: files.map(({ name }) => keyOf(uriOf(join(folder, name).replaceAll("\\", "/")))),
+    };
+  } catch {
+    return { files: [], folders: [] };
+  }
+}
+
+/** A path that Node understands; `undefined` for what is not on its disk. */
+function pathOf(file: string): string | undefined {
+  const uri = uriOf(file);
+  return uri.startsWith("file:") ? fileURLToPath(uri) : undefined;
+}

@@ -1,0 +1,80 @@
+/**
+ * The requests that the client makes, each answered from the last good result.
+ *
+ * Waits for the result of the newest text only where an older one would mislead, and never for long.
+ */
+import type { Connection } from "vscode-languageserver";
+import { FIND_PLACE, spanSchema } from "../protocol/place.js";
+import { readMessage } from "../protocol/readMessage.js";
+import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
+import { answerFindPlace } from "./answers/findPlace.js";
+import { answerHover } from "./answers/hover.js";
+import { answerInlayHints } from "./answers/inlayHints.js";
+import { answerWorkspaceSymbols } from "./answers/workspaceSymbols.js";
+import { type CurrentFile, currentFile } from "./current.js";
+import type { DisplaySettingsReader } from "./displaySettings.js";
+import { keyOf } from "./fileKeys.js";
+import type { Guard } from "./guard.js";
+import type { Session } from "./session.js";
+
+export interface RequestParts {
+  readonly connection: Connection;
+  readonly guard: Guard;
+  readonly session: Session;
+  readonly settings: DisplaySettingsReader;
+  /** Commands that the client has. */
+  readonly commands: readonly string[];
+}
+
+/** How long an answer may wait for the first result, or for that of an edit just made. */
+const PATIENCE_MS = 2000;
+
+export function answerRequests({ connection, guard, session, settings, commands }: RequestParts): void {
+  const { texts } = session;
+  const lastOf = (uri: string): CurrentFile | undefined => session.result && currentFile(texts, session.result, keyOf(uri));
+  /** Whatever is known of the file; waits only when that is nothing. */
+  const anyOf = async (uri: string) => {
+    const known = lastOf(uri);
+    if (known !== undefined) return known;
+    await session.whenCurrent(PATIENCE_MS);
+    return lastOf(uri);
+  };
+  const newestOf = async (uri: string) => {
+    await session.whenCurrent(PATIENCE_MS);
+    return lastOf(uri);
+  };
+
+  connection.onHover(
+    guard.answer("A hover", null, async ({ textDocument, position }) => {
+      const current = await newestOf(textDocument.uri);
+      return current ? answerHover(current, position) : null;
+    }),
+  );
+  connection.languages.inlayHint.on(
+    guard.answer("Inlay hints", [], async ({ textDocument, range }) => {
+      const [current, wish] = await Promise.all([anyOf(textDocument.uri), settings.of(textDocument.uri)]);
+      return current ? answerInlayHints(current, range, wish) : [];
+    }),
+  );
+  connection.onCodeLens(
+    guard.answer("Code lenses", [], async ({ textDocument }) => {
+      const [current, wish] = await Promise.all([anyOf(textDocument.uri), settings.of(textDocument.uri)]);
+      return current && wish.codeLens ? answerCodeLenses(current) : [];
+    }),
+  );
+  connection.onCodeLensResolve((lens) =>
+    guard.answer("A code lens", lens, () => (session.result ? resolveCodeLens(session.result, lens, commands) : lens))(),
+  );
+  connection.onWorkspaceSymbol(
+    guard.answer("Symbols", [], ({ query }) =>
+      session.result ? answerWorkspaceSymbols(session.result, query, (file) => texts.uriOf(file)) : [],
+    ),
+  );
+  connection.onRequest(
+    FIND_PLACE,
+    guard.answer("A link", null, async (message: unknown) => {
+      const query = readMessage(spanSchema, message);
+      return query && session.result ? answerFindPlace(texts, session.result, query) : null;
+    }),
+  );
+}

@@ -1,0 +1,87 @@
+/**
+ * Hands a new result to every surface at once: diagnostics, the client's view, and a nudge for hints and lenses where they differ.
+ *
+ * What the surfaces say is built elsewhere; this decides what is sent.
+ */
+import type { ClientCapabilities, Connection } from "vscode-languageserver";
+import { NO_STATE, STATE } from "../protocol/state.js";
+import { changesCodeLenses } from "./answers/codeLenses.js";
+import { changesInlayHints } from "./answers/inlayHints.js";
+import { currentFile } from "./current.js";
+import { diagnosticsOf } from "./diagnostics.js";
+import type { Report } from "./guard.js";
+import { type FileDiagnostics, Publisher } from "./publisher.js";
+import type { Result } from "./session.js";
+import { stateOf } from "./stateMessage.js";
+import type { Texts } from "./texts.js";
+
+export interface ResultsParts {
+  readonly connection: Connection;
+  readonly capabilities: ClientCapabilities;
+  readonly report: Report;
+}
+
+export interface Results {
+  show(texts: Texts, result: Result): void;
+  /** Asks for hints and lenses anew, as after changed settings. */
+  refresh(): void;
+}
+
+export function showResults({ connection, capabilities, report }: ResultsParts): Results {
+  const publisher = new Publisher((params) => void connection.sendDiagnostics(params));
+  const canRefreshHints = capabilities.workspace?.inlayHint?.refreshSupport === true;
+  const canRefreshLenses = capabilities.workspace?.codeLens?.refreshSupport === true;
+  const refreshHints = () => {
+    if (canRefreshHints) connection.languages.inlayHint.refresh().catch((error) => report("Refreshing hints", error));
+  };
+  const refreshLenses = () => {
+    if (canRefreshLenses)
+      connection.sendRequest("workspace/codeLens/refresh").catch((error) => report("Refreshing lenses", error));
+  };
+  let shown: Result | undefined;
+  let stateSent = JSON.stringify(NO_STATE);
+  /** One surface that fails must not keep the others from the result. */
+  const attempt = (what: string, work: () => void) => {
+    try {
+      work();
+    } catch (error) {
+      report(what, error);
+    }
+  };
+  return {
+    show(texts, result) {
+      const uriOf = (file: string) => texts.uriOf(file);
+      attempt("Publishing findings", () => publisher.publish(fileDiagnosticsOf(texts, result)));
+      attempt("Telling the state", () => {
+        const state = stateOf(result, uriOf);
+        const content = JSON.stringify(state);
+        if (content === stateSent) return;
+        stateSent = content;
+        connection.sendNotification(STATE, state).catch((error) => report("Telling the state", error));
+      });
+      const before = (file: string) => shown && currentFile(texts, shown, file);
+      attempt("Comparing hints", () => {
+        if (texts.openKeys().some((file) => changesInlayHints(before(file), result, file))) refreshHints();
+      });
+      attempt("Comparing lenses", () => {
+        if (texts.openKeys().some((file) => changesCodeLenses(before(file), result, file))) refreshLenses();
+      });
+      shown = result;
+    },
+    refresh() {
+      refreshHints();
+      refreshLenses();
+    },
+  };
+}
+
+function fileDiagnosticsOf(texts: Texts, result: Result): Map<string, FileDiagnostics> {
+  const uriOf = (file: string) => texts.uriOf(file);
+  const byFile = diagnosticsOf(result, uriOf);
+  return new Map(
+    [...byFile].map(([file, diagnostics]) => [
+      file,
+      { uri: uriOf(file), version: result.snapshot.versions.get(file), diagnostics },
+    ]),
+  );
+}

@@ -1,0 +1,105 @@
+/**
+ * Wires a connection to a session: what the client says goes in, results and answers go out.
+ *
+ * Every handler is guarded. Knows no host: files and the engine are given.
+ */
+import { type Connection, type InitializeParams, type InitializeResult, TextDocumentSyncKind } from "vscode-languageserver";
+import type { FileHost } from "./discovery.js";
+import { DisplaySettingsReader } from "./displaySettings.js";
+import type { Engine } from "./engine.js";
+import { keyOf } from "./fileKeys.js";
+import { createGuard, describeError, type Guard } from "./guard.js";
+import { answerRequests } from "./requests.js";
+import { showResults } from "./results.js";
+import { Session } from "./session.js";
+import { eventsOf, watchFiles } from "./watching.js";
+
+export interface ServerParts {
+  readonly host: FileHost;
+  readonly loadEngine: () => Promise<Engine>;
+}
+
+/** Starts listening on the connection. */
+export function serve(connection: Connection, { host, loadEngine }: ServerParts): void {
+  const report = (what: string, error: unknown) => connection.console.error(`${what}: ${describeError(error)}`);
+  const guard = createGuard(report);
+  connection.onInitialize((params) => {
+    const settings = new DisplaySettingsReader(connection, params.capabilities.workspace?.configuration === true);
+    const results = showResults({ connection, capabilities: params.capabilities, report });
+    const session = new Session({ host, loadEngine, onResult: (result) => results.show(session.texts, result), onError: report });
+    followTexts(connection, guard, session, settings);
+    answerRequests({ connection, guard, session, settings, commands: commandsOf(params) });
+    connection.onDidChangeConfiguration(
+      guard.act("Reading changed settings", () => {
+        settings.forget();
+        results.refresh();
+      }),
+    );
+    connection.onInitialized(guard.act("Starting", () => start(connection, params, session, settings)));
+    connection.onShutdown(() => session.dispose());
+    return CAPABILITIES;
+  });
+  connection.listen();
+}
+
+const CAPABILITIES: InitializeResult = {
+  serverInfo: { name: "Loadmark" },
+  capabilities: {
+    textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental, save: true },
+    hoverProvider: true,
+    inlayHintProvider: true,
+    codeLensProvider: { resolveProvider: true },
+    workspaceSymbolProvider: true,
+    workspace: { workspaceFolders: { supported: true, changeNotifications: true } },
+  },
+};
+
+function followTexts(connection: Connection, guard: Guard, session: Session, settings: DisplaySettingsReader): void {
+  connection.onDidOpenTextDocument(
+    guard.act("Opening a document", ({ textDocument }) =>
+      session.open(textDocument.uri, textDocument.version, textDocument.text),
+    ),
+  );
+  connection.onDidChangeTextDocument(
+    guard.act("Changing a document", ({ textDocument, contentChanges }) =>
+      session.change(textDocument.uri, textDocument.version, contentChanges),
+    ),
+  );
+  connection.onDidSaveTextDocument(guard.act("Saving a document", () => session.save()));
+  connection.onDidCloseTextDocument(
+    guard.act("Closing a document", ({ textDocument }) => {
+      settings.forget(textDocument.uri);
+      return session.close(textDocument.uri);
+    }),
+  );
+  connection.onDidChangeWatchedFiles(
+    guard.act("Following files on disk", ({ changes }) => session.handleFileEvents(eventsOf(changes))),
+  );
+}
+
+async function start(
+  connection: Connection,
+  { capabilities, workspaceFolders, rootUri }: InitializeParams,
+  session: Session,
+  settings: DisplaySettingsReader,
+): Promise<void> {
+  const { workspace } = capabilities;
+  let folders = workspaceFolders ?? (rootUri ? [{ uri: rootUri }] : []);
+  const readFolders = () => session.setFolders(folders.map(({ uri }) => keyOf(uri)));
+  if (workspace?.workspaceFolders) {
+    connection.workspace.onDidChangeWorkspaceFolders(({ added, removed }) => {
+      const gone = new Set(removed.map(({ uri }) => keyOf(uri)));
+      folders = [...folders.filter(({ uri }) => !gone.has(keyOf(uri))), ...added];
+      readFolders().catch((error) => connection.console.error(`Reading workspace folders: ${describeError(error)}`));
+    });
+  }
+  // Watching begins before reading, so that nothing that happens meanwhile is missed.
+  if (workspace?.didChangeWatchedFiles?.dynamicRegistration) await watchFiles(connection);
+  if (workspace?.didChangeConfiguration?.dynamicRegistration) await settings.watch();
+  await readFolders();
+}
+
+function commandsOf({ initializationOptions }: InitializeParams): readonly string[] {
+  const commands = (initializationOptions as { readonly commands?: unknown } | undefined)?.commands;
+  return Array.isArray(commands) ? commands.filter((command) => typeof command === "string") : [];
+}

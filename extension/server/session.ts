@@ -1,0 +1,219 @@
+/**
+ * One client's session: what is open, what is on disk, and the last good analysis of it all.
+ *
+ * One delay serves every surface: a result is handed on when it is whole, and kept until the next one is. Knows nothing of the
+ * connection or of what is shown; the host gives it files, and the engine is loaded when the first file mentions the declarations.
+ */
+import type { TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
+import { mentionsDeclarations } from "../analysis/analyser.js";
+import type { Analysis } from "../analysis/analysis.js";
+import { SETTINGS_FILE } from "../analysis/settings.js";
+import type { FileHost } from "./discovery.js";
+import type { Engine } from "./engine.js";
+import { createLeaveOut, type LeaveOut } from "./leaveOut.js";
+import { type TextSnapshot, Texts } from "./texts.js";
+import { type FileEvent, WorkspaceFiles } from "./workspaceFiles.js";
+
+export const TYPING_DELAY_MS = 150;
+
+/** An analysis of everything, as it was at one moment. */
+export interface Result {
+  readonly analysis: Analysis;
+  readonly snapshot: TextSnapshot;
+  /** How the analysis was made, for those who ask what another text would give. */
+  readonly analyse: Engine["analyse"];
+}
+
+export interface SessionOptions {
+  readonly host: FileHost;
+  readonly loadEngine: () => Promise<Engine>;
+  /** Called with each new result, once it is whole. */
+  readonly onResult: (result: Result) => void;
+  readonly onError: (what: string, error: unknown) => void;
+}
+
+interface Loaded {
+  readonly engine: Engine;
+  readonly leaveOut: LeaveOut;
+}
+
+/** Disk texts are gone through when there are this many more than before. */
+const FORGET_STEP = 256;
+
+export class Session {
+  readonly texts = new Texts();
+  readonly #files: WorkspaceFiles;
+  readonly #options: SessionOptions;
+  #loaded: Promise<Loaded> | undefined;
+  /** Wherever a settings file was looked for. */
+  readonly #settingsFiles = new Set<string>();
+  #forgetAbove = FORGET_STEP;
+  #result: Result | undefined;
+  /** Counts what happened to texts; a result of an older count is out of date. */
+  #moment = 0;
+  #resultMoment = -1;
+  #timer: { readonly handle: ReturnType<typeof setTimeout>; readonly due: number } | undefined;
+  #running = false;
+  #waiting: (() => void)[] = [];
+  #disposed = false;
+
+  constructor(options: SessionOptions) {
+    this.#options = options;
+    this.#files = new WorkspaceFiles(this.texts, options.host);
+  }
+
+  /** The last good result, if there is one yet. */
+  get result(): Result | undefined {
+    return this.#result;
+  }
+
+  open(uri: string, version: number, text: string): void {
+    this.texts.open(uri, version, text);
+    this.#schedule(0);
+  }
+
+  change(uri: string, version: number, changes: readonly TextDocumentContentChangeEvent[]): void {
+    if (this.texts.change(uri, version, changes) !== undefined) this.#schedule(TYPING_DELAY_MS);
+  }
+
+  save(): void {
+    if (this.#timer !== undefined) this.#start();
+  }
+
+  /** What counts now is the disk. */
+  async close(uri: string): Promise<void> {
+    const key = this.texts.close(uri);
+    await this.#files.refresh([key]);
+    this.#schedule(0);
+  }
+
+  async handleFileEvents(events: readonly FileEvent[]): Promise<void> {
+    if (await this.#files.handle(events)) this.#schedule(TYPING_DELAY_MS);
+  }
+
+  /** Reads the workspace; the result follows when all of it is read. */
+  async setFolders(folders: readonly string[]): Promise<void> {
+    await this.#files.setFolders(folders);
+    this.#schedule(0);
+  }
+
+  /** The result for the texts of now, or the last one when that takes longer than the time given. */
+  async whenCurrent(timeoutMs: number): Promise<Result | undefined> {
+    if (this.#resultMoment === this.#moment || this.#disposed) return this.#result;
+    await new Promise<void>((resolve) => {
+      const handle = setTimeout(resolve, timeoutMs);
+      this.#waiting.push(() => {
+        clearTimeout(handle);
+        resolve();
+      });
+    });
+    return this.#result;
+  }
+
+  dispose(): void {
+    this.#disposed = true;
+    clearTimeout(this.#timer?.handle);
+    this.#timer = undefined;
+    this.#release();
+  }
+
+  /** Later work replaces what is planned; work that can wait less never hurries text that is being typed. */
+  #schedule(delayMs: number): void {
+    if (this.#disposed) return;
+    this.#moment += 1;
+    const due = Math.max(Date.now() + delayMs, this.#timer?.due ?? 0);
+    clearTimeout(this.#timer?.handle);
+    this.#timer = { due, handle: setTimeout(() => this.#start(), due - Date.now()) };
+  }
+
+  #start(): void {
+    clearTimeout(this.#timer?.handle);
+    this.#timer = undefined;
+    if (!this.#running) void this.#run();
+  }
+
+  async #run(): Promise<void> {
+    this.#running = true;
+    try {
+      // Texts that changed meanwhile without a timer of their own are due as well.
+      while (this.#resultMoment !== this.#moment && this.#timer === undefined && !this.#disposed) await this.#analyse();
+    } catch (error) {
+      this.#options.onError("The analysis failed; the last result stays", error);
+      this.#resultMoment = this.#moment;
+    } finally {
+      this.#running = false;
+      if (this.#resultMoment === this.#moment) this.#release();
+    }
+  }
+
+  /** Ends early, without a result, when newer text is waiting for its turn. */
+  async #analyse(): Promise<void> {
+    while (!this.#disposed) {
+      if (this.#mentioning(this.texts.capture()).length > 0) await this.#load();
+      if (this.#timer !== undefined) return;
+      const moment = this.#moment;
+      const snapshot = this.texts.capture();
+      const mentioning = this.#mentioning(snapshot);
+      if (mentioning.length === 0) return this.#accept(resultOfNothing(snapshot), moment);
+      const { engine, leaveOut } = await this.#load();
+      const analysis = engine.analyse(leaveOut.filter(mentioning, this.#settingsFiles, snapshot), snapshot);
+      const wanted = analysis.wanted.filter((file) => snapshot.read(file) === undefined);
+      if (wanted.length === 0) return this.#accept({ analysis, snapshot, analyse: engine.analyse }, moment);
+      for (const file of wanted) if (file.endsWith(`/${SETTINGS_FILE}`)) this.#settingsFiles.add(file);
+      await this.#files.load(wanted);
+      if (this.#timer !== undefined) return;
+    }
+  }
+
+  #accept(result: Result, moment: number): void {
+    this.#result = result;
+    this.#resultMoment = moment;
+    this.#options.onResult(result);
+    this.texts.forgetEditsUpTo(result.snapshot.versions);
+    this.#forgetUnused(result.analysis);
+  }
+
+  #mentioning(snapshot: TextSnapshot): readonly string[] {
+    const open = [...snapshot.versions.keys()].filter(
+      (file) => this.#files.accepts(file) && mentionsDeclarations(snapshot.read(file) ?? ""),
+    );
+    return [...open, ...[...this.#files.mentioning].filter((file) => !snapshot.versions.has(file))];
+  }
+
+  /** Half-typed imports ask for many files that never were. */
+  #forgetUnused(analysis: Analysis): void {
+    if (this.texts.diskSize < this.#forgetAbove) return;
+    const needed = new Set<string>(this.#settingsFiles);
+    for (const { file, dependencies, missing } of analysis.files.values()) {
+      needed.add(file);
+      for (const one of dependencies) needed.add(one);
+      for (const one of missing) needed.add(one);
+    }
+    this.#files.forgetAllBut(needed);
+    this.#forgetAbove = 2 * this.texts.diskSize + FORGET_STEP;
+  }
+
+  #load(): Promise<Loaded> {
+    this.#loaded ??= this.#options.loadEngine().then(
+      (engine) => ({ engine, leaveOut: createLeaveOut((file, text) => engine.leftOutBy(file, text)) }),
+      (error) => {
+        this.#loaded = undefined;
+        throw error;
+      },
+    );
+    return this.#loaded;
+  }
+
+  #release(): void {
+    const waiting = this.#waiting;
+    this.#waiting = [];
+    for (const resolve of waiting) resolve();
+  }
+}
+
+/** Where nothing is declared, nothing need be loaded to say so. */
+function resultOfNothing(snapshot: TextSnapshot): Result {
+  const nothing = { mechanisms: [], motors: [], robots: [], findings: [], wanted: [] };
+  const analyse: Engine["analyse"] = (_roots, given) => ({ ...nothing, files: new Map(), snapshot: given });
+  return { analysis: analyse([], snapshot), snapshot, analyse };
+}

@@ -1,0 +1,153 @@
+/**
+ * The texts that the server knows: open documents, unsaved text and all, over what was read from disk.
+ *
+ * Hands out immutable snapshots. Reads nothing itself, and doesn't know which texts matter.
+ */
+import { TextDocument, type TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
+import type { Snapshot } from "../evaluator/value.js";
+import type { Edit } from "./editTrail.js";
+import { keyOf, uriOf } from "./fileKeys.js";
+import { createLineMap, type LineMap } from "./lineMap.js";
+
+export interface OpenText {
+  /** The address that the client uses for it. */
+  readonly uri: string;
+  readonly version: number;
+  readonly text: string;
+}
+
+export interface TextSnapshot extends Snapshot {
+  /** Versions of the documents that were open. */
+  readonly versions: ReadonlyMap<string, number>;
+  lineMap(file: string): LineMap;
+}
+
+interface OpenDocument {
+  readonly document: TextDocument;
+  readonly edits: { readonly version: number; readonly edit: Edit }[];
+}
+
+export class Texts {
+  readonly #open = new Map<string, OpenDocument>();
+  #disk = new Map<string, string | null>();
+  /** True while a snapshot shares the map of disk texts: the next change then works on a copy. */
+  #diskIsShared = false;
+  readonly #lineMaps = new Map<string, LineMap>();
+
+  /** Gives the document's key. */
+  open(uri: string, version: number, text: string): string {
+    const key = keyOf(uri);
+    this.#open.set(key, { document: TextDocument.create(uri, "", version, text), edits: [] });
+    return key;
+  }
+
+  /** Gives the document's key, or `undefined` when it is not open. */
+  change(uri: string, version: number, changes: readonly TextDocumentContentChangeEvent[]): string | undefined {
+    const key = keyOf(uri);
+    const opened = this.#open.get(key);
+    if (opened === undefined) return undefined;
+    const { document, edits } = opened;
+    for (const change of changes) {
+      edits.push({ version, edit: editOf(document, change) });
+      TextDocument.update(document, [change], version);
+    }
+    return key;
+  }
+
+  close(uri: string): string {
+    const key = keyOf(uri);
+    this.#open.delete(key);
+    this.#lineMaps.delete(key);
+    return key;
+  }
+
+  openText(key: string): OpenText | undefined {
+    const document = this.#open.get(key)?.document;
+    return document && { uri: document.uri, version: document.version, text: document.getText() };
+  }
+
+  openKeys(): readonly string[] {
+    return [...this.#open.keys()];
+  }
+
+  /** What happened to an open document after a version; empty when it is not open. */
+  editsSince(key: string, version: number): readonly Edit[] {
+    const edits = this.#open.get(key)?.edits ?? [];
+    return edits.filter((one) => one.version > version).map((one) => one.edit);
+  }
+
+  /** Drops what led up to the versions: nobody will ask for it again. */
+  forgetEditsUpTo(versions: ReadonlyMap<string, number>): void {
+    for (const [key, version] of versions) {
+      const edits = this.#open.get(key)?.edits;
+      const firstKept = edits?.findIndex((one) => one.version > version) ?? -1;
+      edits?.splice(0, firstKept < 0 ? edits.length : firstKept);
+    }
+  }
+
+  /** `null`: there is no such file on disk; `undefined`: not known. */
+  diskText(key: string): string | null | undefined {
+    return this.#disk.get(key);
+  }
+
+  diskKeys(): Iterable<string> {
+    return this.#disk.keys();
+  }
+
+  get diskSize(): number {
+    return this.#disk.size;
+  }
+
+  setDiskText(key: string, text: string | null): void {
+    if (this.#disk.get(key) !== text) this.#ownDisk().set(key, text);
+  }
+
+  forgetDiskText(key: string): void {
+    if (this.#disk.has(key)) this.#ownDisk().delete(key);
+    this.#lineMaps.delete(key);
+  }
+
+  /** The client's address of a file, as far as it gave one. */
+  uriOf(key: string): string {
+    return this.#open.get(key)?.document.uri ?? uriOf(key);
+  }
+
+  capture(): TextSnapshot {
+    const open = new Map([...this.#open].map(([key, { document }]) => [key, document.getText()]));
+    const versions = new Map([...this.#open].map(([key, { document }]) => [key, document.version]));
+    const disk = this.#disk;
+    this.#diskIsShared = true;
+    const read = (file: string) => open.get(file) ?? disk.get(file);
+    return { read, versions, lineMap: (file) => this.#lineMap(file, read(file) ?? "") };
+  }
+
+  #lineMap(file: string, text: string): LineMap {
+    const known = this.#lineMaps.get(file);
+    if (known?.text === text) return known;
+    const lineMap = createLineMap(text);
+    this.#lineMaps.set(file, lineMap);
+    return lineMap;
+  }
+
+  #ownDisk(): Map<string, string | null> {
+    if (this.#diskIsShared) this.#disk = new Map(this.#disk);
+    this.#diskIsShared = false;
+    return this.#disk;
+  }
+}
+
+function editOf(document: TextDocument, change: TextDocumentContentChangeEvent): Edit {
+  if (!("range" in change)) return smallestEdit(document.getText(), change.text);
+  const start = document.offsetAt(change.range.start);
+  return { start, removed: document.offsetAt(change.range.end) - start, inserted: change.text.length };
+}
+
+/** What differs between two whole texts, as one edit. */
+function smallestEdit(before: string, after: string): Edit {
+  const shorter = Math.min(before.length, after.length);
+  let start = 0;
+  while (start < shorter && before[start] === after[start]) start += 1;
+  let kept = 0;
+  while (kept < shorter - start && before.at(-1 - kept) === after.at(-1 - kept)) kept += 1;
+  return { start, removed: before.length - start - kept, inserted: after.length - start - kept };
+}
