@@ -1,76 +1,58 @@
 /**
- * What the chart's page, the client and the server say to each other, checked wherever it arrives.
+ * What the chart's page, the client and the server say to each other.
  *
- * The page asks first, and each answer is the full state. An unknown message is not an error here: readers give `undefined`, and
- * whoever read it ignores and logs it. Deliberately not here: what the chart's numbers mean (chart.ts).
+ * The page asks first, and each answer is the full state. Whoever reads a message checks it with `readMessage`, and ignores and logs
+ * what it does not know. What the numbers of a chart are stands in chart.ts.
  */
 import * as v from "valibot";
-import { operatingPointChartSchema } from "./chart.js";
+import { chartFindingSchema, operatingPointChartSchema } from "./chart.js";
 
-/** The client's question to the server. */
-export const CHART_REQUEST = "loadmark/chart";
+/** The client's question to the server: takes a question, gives an answer. */
+export const CHART = "loadmark/chart";
 
-const place = v.object({ uri: v.string(), line: v.number(), character: v.number() });
+const count = v.pipe(v.number(), v.integer(), v.minValue(0));
 
-const chartQuestion = v.object({
-  /** The caret; positions count from 0, columns in UTF-16 units. Its mechanism comes first. */
-  caret: v.nullable(place),
+export const chartQuestionSchema = v.object({
+  /** Lines and characters from 0. The mechanism declared here comes first. */
+  caret: v.nullable(v.object({ uri: v.string(), line: count, character: count })),
   /** The mechanism that is shown, kept where the caret is in none. */
   mechanism: v.nullable(v.string()),
 });
 
-const chartAnswer = v.variant("kind", [
-  v.object({
-    kind: v.literal("nothing"),
-    /** What to do, in plain sentences. */
-    reason: v.string(),
-  }),
+export const chartAnswerSchema = v.variant("kind", [
+  v.object({ kind: v.literal("nothing"), reason: v.picklist(["nothing-declared", "nothing-computed"]) }),
   v.object({
     kind: v.literal("chart"),
     chart: operatingPointChartSchema,
-    /** The result for what is saved, where that differs from what is typed. */
+    findings: v.array(chartFindingSchema),
+    /** The result for what is saved, where that is another one. */
     saved: v.nullable(operatingPointChartSchema),
-    /** Why this is an old result, in plain sentences; null while it is current. */
+    /** Why this is not the result for the text of now, in a plain sentence; null where it is. */
     old: v.nullable(v.string()),
   }),
 ]);
 
 const FILE_NAME_LIMIT = 120;
-const SAVED_LIMIT = 32 * 1024 * 1024;
+const CONTENT_LIMIT = 32 * 1024 * 1024;
 const fileName = v.pipe(v.string(), v.nonEmpty(), v.maxLength(FILE_NAME_LIMIT));
+const content = v.pipe(v.string(), v.maxLength(CONTENT_LIMIT));
 
-const pageMessage = v.variant("type", [
+export const pageMessageSchema = v.variant("type", [
   /** The page is there, or there again; it may remember which mechanism it showed. */
   v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()) }),
-  v.object({
-    type: v.literal("savePicture"),
-    fileName,
-    /** A PNG file. */
-    base64: v.pipe(v.string(), v.maxLength(SAVED_LIMIT), v.base64()),
-  }),
-  v.object({ type: v.literal("saveTable"), fileName, csv: v.pipe(v.string(), v.maxLength(SAVED_LIMIT)) }),
-  /** Something that the page could not do, for the log. */
+  /** A PNG file in base 64. */
+  v.object({ type: v.literal("savePicture"), fileName, base64: v.pipe(content, v.base64()) }),
+  v.object({ type: v.literal("saveTable"), fileName, csv: content }),
+  /** What the page could not do, for the log. */
   v.object({ type: v.literal("trouble"), what: v.pipe(v.string(), v.maxLength(2000)) }),
 ]);
 
-const hostMessage = v.variant("type", [v.object({ type: v.literal("show"), answer: chartAnswer })]);
+export const hostMessageSchema = v.variant("type", [v.object({ type: v.literal("show"), answer: chartAnswerSchema })]);
 
-export type ChartQuestion = v.InferOutput<typeof chartQuestion>;
-export type ChartAnswer = v.InferOutput<typeof chartAnswer>;
+export type ChartQuestion = v.InferOutput<typeof chartQuestionSchema>;
+export type ChartAnswer = v.InferOutput<typeof chartAnswerSchema>;
+export type ShownChart = Extract<ChartAnswer, { kind: "chart" }>;
 /** From the chart's page to its host. */
-export type PageMessage = v.InferOutput<typeof pageMessage>;
+export type PageMessage = v.InferOutput<typeof pageMessageSchema>;
 /** From the host to the chart's page. */
-export type HostMessage = v.InferOutput<typeof hostMessage>;
-
-export const readChartQuestion = readerOf(chartQuestion);
-export const readChartAnswer = readerOf(chartAnswer);
-export const readPageMessage = readerOf(pageMessage);
-export const readHostMessage = readerOf(hostMessage);
-
-/** `undefined` for anything else than the schema's; unknown fields are dropped. */
-function readerOf<T>(schema: v.GenericSchema<unknown, T>): (message: unknown) => T | undefined {
-  return (message) => {
-    const result = v.safeParse(schema, message);
-    return result.success ? result.output : undefined;
-  };
-}
+export type HostMessage = v.InferOutput<typeof hostMessageSchema>;
