@@ -28,24 +28,24 @@ const WRITTEN: Readonly<Record<Dimension, readonly string[]>> = {
   linearSpeed: ["m/s", "mm/s"],
 };
 
-/** `si` in the unit that suits its size: 0.0123 N·m is "12.3 mN·m". */
-export function writeQuantity(si: number, dimension: Dimension): string {
+/** `si` in the unit that suits its size: 0.0123 N·m is "12.3 mN·m". Fewer digits only where room is short. */
+export function writeQuantity(si: number, dimension: Dimension, digits = 3): string {
   const symbols = WRITTEN[dimension];
   const fits = symbols.find((symbol) => Math.abs(numberIn(si, symbol)) >= 0.9995);
   const symbol = si === 0 ? symbols.find((candidate) => UNITS.get(candidate)?.factor === 1) : fits;
-  return writeIn(si, symbol ?? symbols.at(-1) ?? "");
+  return writeIn(si, symbol ?? symbols.at(-1) ?? "", digits);
 }
 
 /** `si` in the unit named. */
-export function writeIn(si: number, symbol: string): string {
+export function writeIn(si: number, symbol: string, digits = 3): string {
   // The degree sign of an angle stands against its number (ISO 80000-1); that of a temperature does not.
   const gap = symbol.startsWith("deg") && !/^deg[CF]/.test(symbol) ? "" : " ";
-  return `${writeNumber(numberIn(si, symbol))}${gap}${typeset(symbol)}`;
+  return `${writeNumber(numberIn(si, symbol), digits)}${gap}${typeset(symbol)}`;
 }
 
 /** Three significant digits, no exponent between 1e-4 and 1e6, a true minus sign. */
-export function writeNumber(value: number): string {
-  const rounded = Number(value.toPrecision(3));
+export function writeNumber(value: number, digits = 3): string {
+  const rounded = Number(value.toPrecision(digits));
   const size = Math.abs(rounded);
   const text = size === 0 ? "0" : size >= 1e6 || size < 1e-4 ? rounded.toExponential() : String(rounded);
   return text.replace(/^-/, "\u2212");

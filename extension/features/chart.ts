@@ -1,0 +1,160 @@
+/**
+ * Everything that the operating-point chart of one mechanism plots, and the table behind it.
+ *
+ * SI throughout, one motor unless the name says otherwise; what does not apply is null. How it looks is the chart's business.
+ */
+import type { Analysis, Finding } from "../analysis/analysis.js";
+import type { Drive } from "../model/drive.js";
+import { availableLine, type MotorLine, sheetLine } from "../model/line.js";
+import type { MechanismNumbers } from "../model/numbers.js";
+import { operatingPointAt } from "../model/operatingPoint.js";
+import { linePoint } from "../model/peaks.js";
+import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "./bestPoints.js";
+import { type ChartLimit, limitsOf, torqueAtCurrent } from "./chartLimits.js";
+import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./chartPoint.js";
+import { type ChartTable, tableOf } from "./chartTable.js";
+import { driveOf } from "./drives.js";
+import { positionWords } from "./positionWords.js";
+import { findingsAbout, type State, verdictOf } from "./verdict.js";
+
+/** One abscissa; a line is null where it does not reach. */
+export interface ChartSample {
+  readonly torqueNm: number;
+  /** Supply, wiring, duty and limits counted. */
+  readonly available: ChartValues | null;
+  /** The motor alone at its sheet's voltage. */
+  readonly sheet: ChartValues | null;
+}
+
+export interface LineEnds {
+  readonly stallTorqueNm: number;
+  readonly noLoadSpeedRadPerS: number;
+  readonly stallCurrentA: number;
+}
+
+export interface OperatingPointChart {
+  readonly mechanism: string;
+  readonly motorCount: number;
+  readonly state: State;
+  /** A few words, such as "Past its peak of power". */
+  readonly verdict: string;
+  /** Its stall torque is 100 % on the scale of shares. */
+  readonly available: LineEnds;
+  readonly sheet: LineEnds;
+  /** Rising torque from 0 to the end of the longer line; marked points are among them. */
+  readonly samples: readonly ChartSample[];
+  readonly hardest: ChartPoint & {
+    readonly stallShare: number | null;
+    readonly limitedBy: MechanismNumbers["hardest"]["limitedBy"];
+    readonly stalls: boolean;
+    /** Such as "at 0°"; null where the load has no position. */
+    readonly where: string | null;
+  };
+  /** Null, like `bestEfficiency`, for a motor that gives nothing. */
+  readonly peakPower: ChartPoint | null;
+  readonly bestEfficiency: ChartPoint | null;
+  readonly limits: {
+    /** Half of the stall torque: output power peaks there. */
+    readonly pastPeakFromNm: number;
+    /** No speed is left from here on. */
+    readonly stopsAtNm: number;
+    /** Between the two torques the current limit decides. */
+    readonly current: { readonly currentA: number; readonly fromNm: number; readonly toNm: number } | null;
+    /** What else gives way, in rising torque. */
+    readonly others: readonly ChartLimit[];
+  };
+  readonly findings: readonly Pick<Finding, "rule" | "level" | "message">[];
+  /** Plain sentences. */
+  readonly assumed: readonly string[];
+  readonly notChecked: readonly string[];
+  readonly table: ChartTable;
+}
+
+/** Steps of the abscissa between its ends. */
+const STEPS = 100;
+
+/** `undefined` for an unknown name, or a mechanism without numbers. */
+export function operatingPointChart(analysis: Analysis, mechanismName: string): OperatingPointChart | undefined {
+  const mechanism = analysis.mechanisms.find(({ name, numbers }) => name === mechanismName && numbers !== undefined);
+  const drive = mechanism && driveOf(analysis, mechanism);
+  if (mechanism?.numbers === undefined || drive === undefined) return undefined;
+  const { hardest } = mechanism.numbers;
+  const { state, words } = verdictOf(analysis, mechanism);
+  const available = availableLine(drive);
+  const sheet = sheetLine(drive.motor);
+  const stopsAtNm = greatestTorque(drive);
+  const current = currentLimitOf(drive, available, stopsAtNm);
+  const [peakPower, bestEfficiency] = [greatestPowerPoint(drive), bestEfficiencyPoint(drive)].map(
+    (one) => one && chartPoint(one),
+  );
+  const point: ChartPoint = {
+    torqueNm: hardest.motorTorqueNm,
+    speedRadPerS: hardest.motorSpeedRadPerS,
+    currentA: hardest.motorCurrentA,
+    shaftPowerW: hardest.shaftPowerW,
+    efficiency: hardest.motorEfficiency,
+  };
+  const marked = [point, peakPower, bestEfficiency].flatMap((one) => (one ? [one.torqueNm] : []));
+  const bends = [available.stallTorqueNm, sheet.stallTorqueNm, stopsAtNm, ...(current ? [current.fromNm] : [])];
+  return {
+    mechanism: mechanism.name,
+    motorCount: drive.motorCount,
+    state,
+    verdict: words,
+    available: endsOf(available),
+    sheet: endsOf(sheet),
+    samples: samplesOf(drive, sheet, stopsAtNm, [...marked, ...bends]),
+    hardest: {
+      ...point,
+      stallShare: hardest.stallShare,
+      limitedBy: hardest.limitedBy,
+      stalls: hardest.motorSpeedRadPerS === 0,
+      where: hardest.position === null ? null : positionWords(drive, mechanism),
+    },
+    peakPower: peakPower ?? null,
+    bestEfficiency: bestEfficiency ?? null,
+    limits: { pastPeakFromNm: available.stallTorqueNm / 2, stopsAtNm, current, others: limitsOf(drive, available) },
+    findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
+    assumed: mechanism.assumed,
+    notChecked: mechanism.notChecked,
+    table: tableOf(drive, stopsAtNm, {
+      "hardest position": point,
+      "peak output power": peakPower,
+      "best efficiency": bestEfficiency,
+    }),
+  };
+}
+
+function samplesOf(drive: Drive, sheet: MotorLine, stopsAtNm: number, extra: readonly number[]): ChartSample[] {
+  const end = Math.max(sheet.stallTorqueNm, availableLine(drive).stallTorqueNm);
+  const steps = Array.from({ length: STEPS + 1 }, (_, step) => (step / STEPS) * end);
+  const abscissas = new Set([...steps, ...extra.filter((torqueNm) => torqueNm >= 0 && torqueNm <= end)]);
+  return [...abscissas]
+    .sort((one, other) => one - other)
+    .map((torqueNm) => ({
+      torqueNm,
+      available: torqueNm <= stopsAtNm ? chartValues(operatingPointAt(drive, torqueNm)) : null,
+      sheet: torqueNm <= sheet.stallTorqueNm ? sheetValues(sheet, torqueNm) : null,
+    }));
+}
+
+/** At stall, speed and power are 0 but for rounding. */
+function sheetValues(sheet: MotorLine, torqueNm: number): ChartValues {
+  const { speedRadPerS, currentA, shaftPowerW, efficiency } = linePoint(sheet, torqueNm);
+  return {
+    speedRadPerS: Math.max(speedRadPerS, 0),
+    currentA,
+    shaftPowerW: Math.max(shaftPowerW, 0),
+    efficiency: Math.max(efficiency, 0),
+  };
+}
+
+function endsOf({ stallTorqueNm, noLoadSpeedRadPerS, stallCurrentA }: MotorLine): LineEnds {
+  return { stallTorqueNm, noLoadSpeedRadPerS, stallCurrentA };
+}
+
+function currentLimitOf(drive: Drive, line: MotorLine, stopsAtNm: number): OperatingPointChart["limits"]["current"] {
+  const currentA = drive.motorCurrentLimitA;
+  const fromNm = currentA === undefined ? undefined : torqueAtCurrent(line, currentA);
+  return currentA === undefined || fromNm === undefined || fromNm > stopsAtNm ? null : { currentA, fromNm, toNm: stopsAtNm };
+}

@@ -1,0 +1,38 @@
+/**
+ * One line above each mechanism: its verdict and the numbers that decide it.
+ *
+ * Every declared mechanism has one, computed or not, so that the code below does not jump while it is being edited.
+ */
+import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { Span } from "../evaluator/value.js";
+import { writeQuantity } from "../units/write.js";
+import { plainText } from "./inertText.js";
+import { outputShaftOf } from "./shaft.js";
+import { verdictOf } from "./verdict.js";
+
+export interface CodeLens {
+  readonly span: Span;
+  /** Plain text. */
+  readonly title: string;
+  /** Name of the mechanism whose chart it opens. */
+  readonly mechanism: string;
+}
+
+export function codeLensesOf(analysis: Analysis, file: string): CodeLens[] {
+  const here = analysis.mechanisms.filter(({ at }) => at.file === file);
+  return here.map((mechanism) => {
+    const alone = here.filter(({ at }) => at.start === mechanism.at.start).length === 1;
+    const title = titleOf(analysis, mechanism);
+    return { span: mechanism.at, title: alone ? title : `${plainText(mechanism.name)}: ${title}`, mechanism: mechanism.name };
+  });
+}
+
+function titleOf(analysis: Analysis, mechanism: AnalysedMechanism): string {
+  const { words, share } = verdictOf(analysis, mechanism);
+  const hardest = mechanism.numbers?.hardest;
+  const shaft = outputShaftOf(mechanism);
+  if (hardest === undefined || shaft === undefined) return words;
+  const speed = shaft.speedRadPerS === 0 ? [] : [writeQuantity(shaft.speedRadPerS, "speed")];
+  const parts = [...(share === undefined ? [] : [share]), writeQuantity(hardest.motorCurrentA, "current"), ...speed];
+  return `${words}: ${parts.join(", ")}`;
+}

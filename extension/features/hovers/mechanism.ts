@@ -1,0 +1,118 @@
+/** A mechanism: whether its motors cope, what is needed against what is available, and what that rests on. */
+import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
+import type { DefinitionCall } from "../../evaluator/value.js";
+import type { Drive } from "../../model/drive.js";
+import type { MechanismNumbers } from "../../model/numbers.js";
+import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
+import { bestEfficiencyPoint, greatestPowerPoint } from "../bestPoints.js";
+import { driveOf } from "../drives.js";
+import { callsWithin } from "../feeds.js";
+import { inertMarkdown } from "../inertText.js";
+import { chartLink, revealLink } from "../links.js";
+import { positionWords } from "../positionWords.js";
+import { outputShaftOf } from "../shaft.js";
+import { verdictOf, worse } from "../verdict.js";
+import { type Table, writeBlock } from "./block.js";
+import { sentences } from "./sentences.js";
+
+/** One piece of text may declare several mechanisms: the worst is described, the others named. */
+export function describeMechanisms(analysis: Analysis, mechanisms: readonly AnalysedMechanism[]): string | undefined {
+  const states = mechanisms.map((one) => verdictOf(analysis, one).state);
+  const mechanism = mechanisms[states.indexOf(states.reduce(worse, "fine"))];
+  if (mechanism === undefined) return undefined;
+  const others = mechanisms.filter((one) => one !== mechanism).map(({ name }) => inertMarkdown(name));
+  const shared =
+    others.length === 0
+      ? []
+      : [`Declared by the same text: ${others.slice(0, 5).join(", ")}${others.length > 5 ? " and more" : ""}.`];
+  return describeMechanism(analysis, mechanism, shared);
+}
+
+function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, shared: readonly string[]): string {
+  const verdict = verdictOf(analysis, mechanism);
+  const drive = driveOf(analysis, mechanism);
+  const { numbers } = mechanism;
+  const name = inertMarkdown(mechanism.name);
+  const assumptions = [...sentences("Assumed", mechanism.assumed), ...sentences("Not checked", mechanism.notChecked)];
+  if (numbers === undefined || drive === undefined) {
+    return writeBlock({ verdict: `${verdict.words}: ${name}`, notes: [...assumptions, ...shared], links: linksOf(mechanism) });
+  }
+  return writeBlock({
+    verdict: `${verdict.words}: ${[verdict.share, ...verdict.notes].filter((part) => part !== undefined).join(" · ")}`,
+    lines: [
+      `${name} · ${motorsOf(drive)} · ratio ${writeNumber(numbers.ratio)} · hardest ${positionWords(drive, mechanism)}`,
+      ...outputOf(mechanism),
+    ],
+    table: tableOf(drive, numbers),
+    notes: [...feedforwardOf(numbers), ...assumptions, ...shared],
+    links: [chartLink(mechanism.name), ...linksOf(mechanism)],
+  });
+}
+
+function motorsOf({ motorCount }: Drive): string {
+  return motorCount === 1 ? "1 motor" : `${motorCount} motors`;
+}
+
+function outputOf(mechanism: AnalysedMechanism): string[] {
+  const shaft = outputShaftOf(mechanism);
+  if (shaft === undefined) return [];
+  const speed = shaft.speedRadPerS === 0 ? "stalled" : `at ${writeQuantity(shaft.speedRadPerS, "speed")}`;
+  const stall = writeQuantity(shaft.stallTorqueNm, "torque");
+  return [`Output shaft: needs ${writeQuantity(shaft.torqueNm, "torque")} of ${stall} at stall, ${speed}`];
+}
+
+function tableOf(drive: Drive, { hardest, available }: MechanismNumbers): Table {
+  const peak = greatestPowerPoint(drive);
+  const best = bestEfficiencyPoint(drive);
+  const limit = drive.motorCurrentLimitA;
+  const currentLimit = limit !== undefined && limit < available.stallCurrentA;
+  return {
+    head: ["per motor", "hardest", "available"],
+    rows: [
+      ["torque", writeQuantity(hardest.motorTorqueNm, "torque"), `${writeQuantity(available.stallTorqueNm, "torque")} at stall`],
+      [
+        "speed",
+        writeQuantity(hardest.motorSpeedRadPerS, "speed"),
+        `${writeQuantity(available.noLoadSpeedRadPerS, "speed")} at no load`,
+      ],
+      [
+        "current",
+        writeQuantity(hardest.motorCurrentA, "current"),
+        currentLimit
+          ? `${writeQuantity(limit, "current")} limit`
+          : `${writeQuantity(available.stallCurrentA, "current")} at stall`,
+      ],
+      [
+        "output power",
+        writeQuantity(hardest.shaftPowerW, "power"),
+        peak === undefined ? "–" : `${writeQuantity(peak.shaftPowerW, "power")} at its peak`,
+      ],
+      [
+        "efficiency",
+        hardest.motorEfficiency === null ? "–" : writeShare(hardest.motorEfficiency),
+        best === undefined ? "–" : `${writeShare(best.efficiency ?? 0)} at best`,
+      ],
+    ],
+  };
+}
+
+/** Voltages that the robot's own code can send ahead of its feedback. */
+function feedforwardOf({ feedforward }: MechanismNumbers): string[] {
+  const { holdLoadV, frictionV, voltsPerRadPerS, voltsPerRadPerS2 } = feedforward;
+  const parts = [
+    holdLoadV === null ? undefined : `${writeQuantity(holdLoadV, "voltage")} holds the load`,
+    `${writeQuantity(frictionV, "voltage")} against friction`,
+    `${writeNumber(voltsPerRadPerS)} V per rad/s`,
+    `${writeNumber(voltsPerRadPerS2)} V per rad/s² of the output shaft`,
+  ];
+  return [`Feedforward: ${parts.filter((part) => part !== undefined).join(", ")}`];
+}
+
+function linksOf({ call }: AnalysedMechanism): string[] {
+  const motor = callsWithin(call).find(({ definition }) => definition === "motor");
+  return motor === undefined ? [] : [revealLink("Motor", placeOf(motor))];
+}
+
+function placeOf({ binding, callee }: DefinitionCall) {
+  return binding?.span ?? callee;
+}

@@ -1,0 +1,60 @@
+/**
+ * Which declarations a name in an import or export list stands for.
+ *
+ * Origins lead from uses to declarations and pass over the lists in between, so that the list is read here, as text. A name that could
+ * stand for several declarations stands for none.
+ */
+import type { Analysis } from "../analysis/analysis.js";
+import type { Span } from "../evaluator/value.js";
+import { leavesOf, originsOf, sameSpan } from "./feeds.js";
+
+export interface ImportedWord {
+  readonly span: Span;
+  /** Where the name is declared. */
+  readonly keys: readonly Span[];
+}
+
+const LIST = /\b(?:import|export)\s+(?:type\s+)?(?:[\w$]+\s*,\s*)?(?:\{[^{}]*\}|[\w$]+)\s*from\s*["'][^"'\n]*["']/g;
+const WORD = /[\p{ID_Start}$_][\p{ID_Continue}$\u200C\u200D]*/gu;
+
+export function importedAt(analysis: Analysis, file: string, offset: number): ImportedWord | undefined {
+  const text = analysis.snapshot.read(file);
+  if (typeof text !== "string") return undefined;
+  const list = rangeAround(text, LIST, offset);
+  const word = list && rangeAround(text, WORD, offset);
+  if (list === undefined || word === undefined) return undefined;
+  const keys = declarationsCalled(analysis, file, originalName(text.slice(list.start, list.end), word.text));
+  return keys.length === 1 ? { span: { file, start: word.start, end: word.end }, keys } : undefined;
+}
+
+/** `CHAIN as TEETH`: either word means what is called CHAIN where it is declared. */
+function originalName(list: string, word: string): string {
+  const renamed = new RegExp(`([\\w$]+)\\s+as\\s+${word.replaceAll("$", "\\$")}(?![\\w$])`).exec(list);
+  return renamed?.[1] ?? word;
+}
+
+function declarationsCalled(analysis: Analysis, file: string, name: string): Span[] {
+  // A file that only passes names on is not evaluated itself; nothing then narrows the search.
+  const readable = analysis.files.get(file)?.dependencies;
+  const found: Span[] = [];
+  for (const { calls } of analysis.files.values()) {
+    const named = [
+      ...calls.flatMap(leavesOf).flatMap(({ value }) => [...originsOf(value)].map(({ declaredAt }) => declaredAt)),
+      ...calls.map(({ binding }) => binding?.span),
+    ];
+    for (const at of named) {
+      if (at === undefined || readable?.includes(at.file) === false || found.some((span) => sameSpan(span, at))) continue;
+      if (analysis.snapshot.read(at.file)?.slice(at.start, at.end) === name) found.push(at);
+    }
+  }
+  return found;
+}
+
+function rangeAround(text: string, pattern: RegExp, offset: number): { start: number; end: number; text: string } | undefined {
+  for (const match of text.matchAll(pattern)) {
+    if (match.index > offset) return undefined;
+    const end = match.index + match[0].length;
+    if (offset <= end) return { start: match.index, end, text: match[0] };
+  }
+  return undefined;
+}

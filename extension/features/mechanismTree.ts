@@ -1,0 +1,73 @@
+/** The mechanisms of the workspace by robot, each with how it fares: what the view shows. */
+import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { Span } from "../evaluator/value.js";
+import { writeQuantity } from "../units/write.js";
+import { plainText } from "./inertText.js";
+import { type State, verdictOf, worse } from "./verdict.js";
+
+export interface MechanismTree {
+  readonly robots: readonly RobotNode[];
+  /** Mechanisms that no robot lists. */
+  readonly apart: readonly MechanismNode[];
+}
+
+export interface RobotNode {
+  /** Plain text. */
+  readonly label: string;
+  readonly at: Span;
+  /** The worst of its mechanisms' and its own findings. */
+  readonly state: State;
+  readonly mechanisms: readonly MechanismNode[];
+}
+
+export interface MechanismNode {
+  /** As declared: the key for the chart. */
+  readonly name: string;
+  /** Plain text. */
+  readonly label: string;
+  /** Plain text: verdict and share of stall. */
+  readonly description: string;
+  /** Plain text, longer. */
+  readonly tooltip: string;
+  readonly at: Span;
+  readonly state: State;
+  readonly stallShare: number | null;
+}
+
+export function mechanismTree(analysis: Analysis): MechanismTree {
+  const listed = new Set<AnalysedMechanism>();
+  const robots = analysis.robots.map((robot): RobotNode => {
+    const own = robot.declared.mechanisms.flatMap(
+      (declared) => analysis.mechanisms.find((one) => one.declared === declared) ?? [],
+    );
+    for (const mechanism of own) listed.add(mechanism);
+    const mechanisms = own.map((mechanism) => nodeOf(analysis, mechanism));
+    const states = [...mechanisms.map(({ state }) => state), ...statesAt(analysis, robot.call.span)];
+    return { label: plainText(robot.name), at: robot.at, state: states.reduce(worse, "fine"), mechanisms };
+  });
+  const apart = analysis.mechanisms.filter((mechanism) => !listed.has(mechanism)).map((mechanism) => nodeOf(analysis, mechanism));
+  return { robots, apart };
+}
+
+function nodeOf(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNode {
+  const { state, words, share } = verdictOf(analysis, mechanism);
+  const hardest = mechanism.numbers?.hardest;
+  const description = share === undefined ? words : state === "fine" ? share : `${share} · ${words}`;
+  const current = hardest === undefined ? "" : `, ${writeQuantity(hardest.motorCurrentA, "current")} per motor`;
+  return {
+    name: mechanism.name,
+    label: plainText(mechanism.name),
+    description,
+    tooltip: `${words}${share === undefined ? "" : `: ${share}`}${current}`,
+    at: mechanism.at,
+    state,
+    stallShare: hardest?.stallShare ?? null,
+  };
+}
+
+function statesAt({ findings }: Analysis, { file, start, end }: Span): State[] {
+  const here = findings.filter(
+    ({ at, mechanism }) => mechanism === null && at.file === file && start <= at.start && at.end <= end,
+  );
+  return here.flatMap(({ level }) => (level === "information" ? [] : [level]));
+}

@@ -1,0 +1,90 @@
+/**
+ * What the editor offers for findings: the word or unit that was meant, and last the comment that allows the finding.
+ *
+ * Edits only; nothing is applied here. Each is offered singly.
+ */
+import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { LocatedIssue, Span } from "../evaluator/value.js";
+import { sameSpan } from "./feeds.js";
+
+export interface QuickFix {
+  readonly title: string;
+  readonly finding: Finding;
+  /** `allow`: silences instead of mending; hosts list it last. */
+  readonly kind: "mend" | "allow";
+  readonly edits: readonly Edit[];
+  /** Stretch of the first edit's `newText` that the user is to replace, offsets within it. */
+  readonly placeholder?: { readonly start: number; readonly end: number };
+}
+
+export interface Edit extends Span {
+  readonly newText: string;
+}
+
+/** Fixes for the findings that touch the range, mending ones first. */
+export function quickFixesAt(analysis: Analysis, file: string, start: number, end: number): QuickFix[] {
+  const touched = analysis.findings.filter(({ at }) => at.file === file && at.start <= end && start <= at.end);
+  const mending = touched.flatMap((finding) => mend(analysis, finding));
+  return [...mending, ...touched.flatMap((finding) => allow(analysis, finding))];
+}
+
+/** The declarations' refusals end in the text that was meant. */
+const MEANT = /(?:did you mean|between number and unit:) ("(?:[^"\\]|\\.)+"|`[^`]+`)/;
+
+function mend(analysis: Analysis, finding: Finding): QuickFix[] {
+  if (finding.rule !== "bad-declaration" && finding.rule !== "not-constant") return [];
+  const meant = MEANT.exec(finding.message)?.[1];
+  const at = meant === undefined ? undefined : (issueAt(analysis, finding)?.source ?? finding.at);
+  const old = at && analysis.snapshot.read(at.file)?.slice(at.start, at.end);
+  if (meant === undefined || at === undefined || typeof old !== "string") return [];
+  const newText = rewritten(old, meant.slice(1, -1));
+  if (newText === undefined) return [];
+  return [{ title: `Change to ${newText}`, finding, kind: "mend", edits: [{ ...at, newText }] }];
+}
+
+function issueAt({ files }: Analysis, { at, message }: Finding): LocatedIssue | undefined {
+  const issues = files.get(at.file)?.calls.flatMap((call) => call.issues) ?? [];
+  return issues.find((issue) => sameSpan(issue.span, at) && message.toLowerCase().startsWith(issue.message.toLowerCase()));
+}
+
+/** Only whole words and whole strings are replaced, in the quotes that they have; an expression is the user's own affair. */
+function rewritten(old: string, meant: string): string | undefined {
+  if (/^[\p{ID_Start}$_][\p{ID_Continue}$]*$/u.test(old)) return /^[\p{ID_Start}$_]/u.test(meant) ? meant : undefined;
+  const quoted = /^(["'`])(?:[^"'`\\$]|\$(?!\{))*\1$/.exec(old);
+  if (quoted !== null) return `${quoted[1]}${meant}${quoted[1]}`;
+  const access = /^(.*\.\s*)[\p{ID_Start}$_][\p{ID_Continue}$]*$/su.exec(old);
+  return access === null ? undefined : `${access[1]}${meant}`;
+}
+
+/** Rules about what the code says, not about what the motor can do, cannot be allowed. */
+const NOT_TO_ALLOW: ReadonlySet<Finding["rule"]> = new Set(["bad-declaration", "not-constant", "sheet-contradicts"]);
+
+function allow(analysis: Analysis, finding: Finding): QuickFix[] {
+  if (finding.mechanism === null || NOT_TO_ALLOW.has(finding.rule)) return [];
+  const mechanism =
+    analysis.mechanisms.find(({ name, at }) => name === finding.mechanism && sameSpan(at, finding.at)) ??
+    byName(analysis, finding);
+  const text = mechanism && analysis.snapshot.read(mechanism.call.span.file);
+  if (mechanism === undefined || typeof text !== "string") return [];
+  const { call } = mechanism;
+  const first = Math.min(call.binding?.span.start ?? call.span.start, call.span.start);
+  const lineStart = text.lastIndexOf("\n", first - 1) + 1;
+  const indent = /^[ \t]*/.exec(text.slice(lineStart))?.[0] ?? "";
+  const lineBreak = text.includes("\r\n") ? "\r\n" : "\n";
+  const start = `${indent}// loadmark-allow ${finding.rule}: `;
+  return [
+    {
+      title: `Allow "${finding.rule}" for this mechanism`,
+      finding,
+      kind: "allow",
+      edits: [{ file: call.span.file, start: lineStart, end: lineStart, newText: `${start}${REASON}${lineBreak}` }],
+      placeholder: { start: start.length, end: start.length + REASON.length },
+    },
+  ];
+}
+
+const REASON = "reason";
+
+function byName({ mechanisms }: Analysis, { mechanism }: Finding): AnalysedMechanism | undefined {
+  return mechanisms.find(({ name }) => name === mechanism);
+}

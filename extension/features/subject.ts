@@ -1,0 +1,101 @@
+/**
+ * What stands under the cursor: a mechanism, another built thing, or a constant that such things are made of.
+ *
+ * Places only; what to say about the subject is up to the hovers.
+ */
+import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { DefinitionCall, Origin, Span, Value } from "../evaluator/value.js";
+import { keyOf, type Leaf, leavesOf, originsOf, passedThrough, sameSpan } from "./feeds.js";
+import { importedAt } from "./importedAt.js";
+
+export type Subject =
+  | { readonly kind: "mechanism"; readonly span: Span; readonly mechanisms: readonly AnalysedMechanism[] }
+  | { readonly kind: "built"; readonly span: Span; readonly call: DefinitionCall }
+  | { readonly kind: "constant"; readonly span: Span; readonly constant: Constant };
+
+/** A written value that others are made of. */
+export interface Constant {
+  /** Tells it from others: its declaration's identifier, or the literal. */
+  readonly key: Span;
+  /** One of its occurrences; the way down to what it is made of. */
+  readonly origin: Origin;
+  /** Its value, where a leaf is exactly it. */
+  readonly plain?: string | number;
+}
+
+/** The innermost subject at an offset; ends of words count, so that a caret right behind one finds it. */
+export function subjectAt(analysis: Analysis, file: string, offset: number): Subject | undefined {
+  const calls = [...analysis.files.values()].flatMap((evaluation) => evaluation.calls);
+  const found = [...calls.flatMap((call) => subjectsOf(analysis, call)), ...calls.flatMap(leavesOf).flatMap(constantsOf)];
+  const here = found.filter(({ span }) => span.file === file && span.start <= offset && offset <= span.end);
+  const best = here.reduce<Subject | undefined>((inner, one) => (inner && !isBetter(one, inner) ? inner : one), undefined);
+  if (best !== undefined) return best;
+  const word = importedAt(analysis, file, offset);
+  if (word === undefined) return undefined;
+  const same = (one: Subject): boolean => word.keys.some((key) => isAt(one, key));
+  const imported = found.find(same);
+  return imported && { ...imported, span: word.span };
+}
+
+function subjectsOf(analysis: Analysis, call: DefinitionCall): Subject[] {
+  const own = [call.callee, ...(call.binding ? [call.binding.span] : [])];
+  const label = call.definition === "mechanism" || call.definition === "robot" ? call.args[0] : undefined;
+  if (label?.known && label.origin.kind === "literal") own.push(label.origin.span);
+  return [
+    ...own.flatMap((span) => subjectOf(analysis, call, span)),
+    ...call.args.flatMap((arg) => usesIn(arg)).flatMap(({ span, call: used }) => subjectOf(analysis, used, span)),
+  ];
+}
+
+function subjectOf(analysis: Analysis, call: DefinitionCall, span: Span): Subject[] {
+  if (call.definition !== "mechanism") return [{ kind: "built", span, call }];
+  // A loop declares several mechanisms by one piece of text.
+  const mechanisms = analysis.mechanisms.filter((one) => one.call === call || sameSpan(one.call.span, call.span));
+  return mechanisms.length === 0 ? [] : [{ kind: "mechanism", span, mechanisms }];
+}
+
+/** Names among the arguments that stand for something built, at the use and where they are declared. */
+function usesIn(value: Value): { readonly span: Span; readonly call: DefinitionCall }[] {
+  if (!value.known) return [];
+  const { data } = value;
+  if (data.kind === "array") return data.items.flatMap(usesIn);
+  if (data.kind === "object") return [...data.entries.values()].flatMap(usesIn);
+  if (data.kind !== "built") return [];
+  return passedThrough(value.origin)
+    .filter(({ kind }) => kind === "name" || kind === "access")
+    .flatMap((origin) => (origin.declaredAt ? [origin.span, origin.declaredAt] : [origin.span]))
+    .map((span) => ({ span, call: data.call }));
+}
+
+function constantsOf(leaf: Leaf): Subject[] {
+  if (isLabel(leaf)) return [];
+  const unchanged = new Set(passedThrough(leaf.value.origin));
+  return [...originsOf(leaf.value)].flatMap((origin): Subject[] => {
+    const constant: Constant = { key: keyOf(origin), origin, ...(unchanged.has(origin) ? { plain: leaf.plain } : {}) };
+    const spans = origin.declaredAt ? [origin.span, origin.declaredAt] : [origin.span];
+    return spans.map((span) => ({ kind: "constant", span, constant }));
+  });
+}
+
+/** The name of a mechanism or robot is no number that anything is computed from. */
+function isLabel({ call, path }: Leaf): boolean {
+  return path.length === 1 && path[0] === 0 && (call.definition === "mechanism" || call.definition === "robot");
+}
+
+function isAt(subject: Subject, key: Span): boolean {
+  return subject.kind === "constant" ? sameSpan(subject.constant.key, key) : sameSpan(subject.span, key);
+}
+
+/** Inner before outer; of two alike, the one whose value is known. */
+function isBetter(one: Subject, other: Subject): boolean {
+  const difference = length(one) - length(other);
+  return difference < 0 || (difference === 0 && isKnown(one) && !isKnown(other));
+}
+
+function isKnown(subject: Subject): boolean {
+  return subject.kind !== "constant" || subject.constant.plain !== undefined;
+}
+
+function length({ span }: Subject): number {
+  return span.end - span.start;
+}
