@@ -63,11 +63,19 @@ async function watch() {
       });
     },
   };
-  for (const target of presentTargets()) {
-    const options = optionsOf(target, { sourcemap: true, logLevel: "info" });
-    const context = await esbuild.context({ ...options, plugins: [...options.plugins, announce] });
-    await context.watch();
-  }
+  const contexts = await Promise.all(
+    presentTargets().map((target) => {
+      const options = optionsOf(target, { sourcemap: true, logLevel: "warning" });
+      return esbuild.context({ ...options, plugins: [...options.plugins, announce] });
+    }),
+  );
+  // Counted as one build, so that whoever waits for its end finds every bundle.
+  running = 1;
+  console.log("[watch] build started");
+  await Promise.all(contexts.map((context) => context.watch()));
+  await Promise.allSettled(contexts.map((context) => context.rebuild()));
+  running -= 1;
+  if (running === 0) console.log("[watch] build finished");
 }
 
 /** A half-typed declaration should not end the watch. */

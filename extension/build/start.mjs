@@ -9,13 +9,14 @@ import { importTypeScript } from "./importTypeScript.mjs";
 import { repositoryRoot } from "./repositoryRoot.mjs";
 
 const demo = join(repositoryRoot, "test/demo");
+const command = join(repositoryRoot, "dist/command.js");
 
 printCheck();
 if (!process.argv.includes("--print") && !openDesktop()) await openServer();
 
 /** Findings are what the demo is for; only a check that could not run ends this. */
 function printCheck() {
-  const { status } = spawnSync(process.execPath, ["dist/command.js", "check", "test/demo"], {
+  const { status } = spawnSync(process.execPath, [command, "check", "test/demo"], {
     cwd: repositoryRoot,
     stdio: "inherit",
   });
@@ -50,7 +51,7 @@ function fileArguments() {
 
 /** The first file with something to see, from the check's own report. */
 function fileWithFinding() {
-  const { stdout } = spawnSync(process.execPath, ["dist/command.js", "check", demo, "--format", "json"], {
+  const { stdout } = spawnSync(process.execPath, [command, "check", demo, "--format", "json"], {
     cwd: demo,
     encoding: "utf8",
   });

@@ -18,6 +18,8 @@ export interface ServerOptions {
   readonly vsix?: string | undefined;
   /** Names the log file. */
   readonly name: string;
+  /** How long a lost page may come back, in seconds; else hours, as for a laptop that sleeps. */
+  readonly reconnectWithinS?: number | undefined;
 }
 
 export interface OpenOptions {
@@ -36,7 +38,7 @@ export interface WorkbenchServer {
   stop(): Promise<void>;
 }
 
-export async function startServer({ settings, vsix, name }: ServerOptions): Promise<WorkbenchServer> {
+export async function startServer({ settings, vsix, name, reconnectWithinS }: ServerOptions): Promise<WorkbenchServer> {
   const installed = await installWorkbench();
   const data = mkdtempSync(join(tmpdir(), "loadmark-editor-"));
   const userFolder = join(data, "data/User");
@@ -49,7 +51,8 @@ export async function startServer({ settings, vsix, name }: ServerOptions): Prom
   mkdirSync(cacheFolder, { recursive: true });
   const logFile = join(cacheFolder, `${name}.log`);
   const token = randomBytes(16).toString("hex");
-  const child = launch(installed, data, token, logFile);
+  const grace = reconnectWithinS === undefined ? [] : ["--reconnection-grace-time", String(reconnectWithinS)];
+  const child = launch(installed, ["--connection-token", token, "--server-data-dir", data, ...grace], logFile);
   const removeData = () => rmSync(data, { recursive: true, force: true, maxRetries: 5 });
   const killOnExit = () => killGroup(child, "SIGKILL");
   process.once("exit", killOnExit);
@@ -74,8 +77,8 @@ async function installExtension({ node, server }: InstalledWorkbench, vsix: stri
     throw new Error(`The extension ${vsix} was not installed: ${stdout}${stderr}`);
 }
 
-function launch({ node, server }: InstalledWorkbench, data: string, token: string, logFile: string): ChildProcess {
-  const where = ["--host", "127.0.0.1", "--port", "0", "--connection-token", token, "--server-data-dir", data];
+function launch({ node, server }: InstalledWorkbench, own: readonly string[], logFile: string): ChildProcess {
+  const where = ["--host", "127.0.0.1", "--port", "0"];
   const how = [
     "--accept-server-license-terms",
     "--telemetry-level",
@@ -84,7 +87,7 @@ function launch({ node, server }: InstalledWorkbench, data: string, token: strin
     "--enable-smoke-test-driver",
   ];
   // A group of its own, so that the extension hosts that it starts can be ended with it.
-  const child = spawn(node, [server, ...where, ...how], {
+  const child = spawn(node, [server, ...where, ...how, ...own], {
     stdio: ["ignore", "pipe", "pipe"],
     detached: process.platform !== "win32",
   });

@@ -1,12 +1,12 @@
 // The harness: a VS Code server with the extension, run from the sources' build or installed from its package, and a
 // Chromium page that shows it. Each opening takes a fresh copy of the workspace. Nothing here knows what is tested.
 
-import { type Browser, type BrowserContext, chromium, type Page } from "playwright-core";
+import { type BrowserContext, chromium, type Page } from "playwright-core";
 import { Editor } from "./editor.js";
 import { copyFolder, type FolderCopy } from "./folderCopy.js";
-import { repositoryRoot } from "./paths.js";
 import { startServer, type WorkbenchServer } from "./server.js";
 import { quietSettings } from "./settings.js";
+import { stageExtension } from "./stageExtension.js";
 
 export type ExtensionMode = "development" | "installed";
 
@@ -18,7 +18,7 @@ export interface WorkbenchOptions {
   readonly workspace: string;
   /** The packed extension, for the installed mode. */
   readonly vsix?: string | undefined;
-  /** The extension's folder, for the development mode; else the repository. */
+  /** The extension's folder, for the development mode; else the repository's build. */
   readonly extension?: string | undefined;
   readonly settings?: Readonly<Record<string, unknown>> | undefined;
   readonly viewport?: { readonly width: number; readonly height: number } | undefined;
@@ -47,6 +47,9 @@ export interface Workbench {
   stop(): Promise<void>;
 }
 
+/** A page that was left does not come back: its extension host need not wait for it. */
+const RECONNECT_WITHIN_S = 30;
+
 const CHROMIUM_FLAGS = [
   ...(process.getuid?.() === 0 ? ["--no-sandbox"] : []),
   "--disable-gpu",
@@ -58,37 +61,47 @@ const CHROMIUM_FLAGS = [
 ];
 
 export async function startWorkbench(options: WorkbenchOptions): Promise<Workbench> {
-  const { extensionMode, vsix, settings, browser: executablePath } = options;
+  const { extensionMode, settings, browser: executablePath, viewport = { width: 1280, height: 800 } } = options;
+  const vsix = extensionMode === "installed" ? options.vsix : undefined;
   if (extensionMode === "installed" && !vsix) throw new Error("An installed extension needs its package.");
-  const server = await startServer({
-    name: extensionMode,
-    settings: { ...quietSettings, ...settings },
-    vsix: extensionMode === "installed" ? vsix : undefined,
-  });
-  let browser: Browser | undefined;
+  const endings: (() => Promise<void>)[] = [];
+  const stop = async () => {
+    for (let end = endings.pop(); end; end = endings.pop()) await end();
+  };
   try {
-    browser = await chromium.launch({ executablePath, args: CHROMIUM_FLAGS });
-    const context = await browser.newContext({
-      viewport: options.viewport ?? { width: 1280, height: 800 },
-      deviceScaleFactor: options.scale ?? 1,
+    const extension = extensionMode === "development" ? (options.extension ?? (await stage(endings))) : undefined;
+    const server = await startServer({
+      name: extensionMode,
+      settings: { ...quietSettings, ...settings },
+      vsix,
+      reconnectWithinS: RECONNECT_WITHIN_S,
     });
-    return drive(options, server, browser, context, await context.newPage());
+    endings.push(server.stop);
+    const browser = await chromium.launch({ executablePath, args: CHROMIUM_FLAGS });
+    endings.push(() => browser.close());
+    const context = await browser.newContext({ viewport, deviceScaleFactor: options.scale ?? 1 });
+    return { ...(await drive(options, server, context, extension, endings)), stop };
   } catch (error) {
-    await browser?.close();
-    await server.stop();
+    await stop();
     throw error;
   }
 }
 
-function drive(
-  options: WorkbenchOptions,
+async function stage(endings: (() => Promise<void>)[]): Promise<string> {
+  const staged = await stageExtension();
+  endings.push(staged.remove);
+  return staged.folder;
+}
+
+async function drive(
+  { workspace, settings }: WorkbenchOptions,
   server: WorkbenchServer,
-  browser: Browser,
   context: BrowserContext,
-  page: Page,
-): Workbench {
-  const { workspace, settings } = options;
-  const extension = options.extensionMode === "development" ? (options.extension ?? repositoryRoot) : undefined;
+  extension: string | undefined,
+  endings: (() => Promise<void>)[],
+): Promise<Omit<Workbench, "stop">> {
+  const page = await context.newPage();
+  page.on("dialog", (dialog) => void dialog.accept());
   let copy: FolderCopy | undefined;
   // Leaving the page first ends its extension host, which would otherwise go on watching the folder that is removed.
   const leave = async () => {
@@ -96,12 +109,12 @@ function drive(
     await copy?.remove();
     copy = undefined;
   };
+  endings.push(leave);
   const takeCopy = async () => {
     await leave();
     copy = await copyFolder(workspace);
     return copy.folder;
   };
-  page.on("dialog", (dialog) => void dialog.accept());
   return {
     page,
     logFile: server.logFile,
@@ -123,11 +136,6 @@ function drive(
       } finally {
         await hostPage.close();
       }
-    },
-    stop: async () => {
-      await leave().catch(() => undefined);
-      await browser.close();
-      await server.stop();
     },
   };
 }
