@@ -8,22 +8,29 @@ import * as v from "valibot";
 const number = v.pipe(v.number(), v.finite());
 const text = v.string();
 
-const point = {
-  torqueNm: number,
+const values = {
   speedRadPerS: number,
   currentA: number,
-  outputPowerW: number,
-  /** A share of one. */
+  shaftPowerW: number,
+  /** Shaft power over power into the motor's terminals, a share of one. */
   efficiency: v.nullable(number),
 };
-const pointSchema = v.object(point);
+const valuesSchema = v.object(values);
+const pointSchema = v.object({ torqueNm: number, ...values });
+
+const endsSchema = v.object({ stallTorqueNm: number, noLoadSpeedRadPerS: number, stallCurrentA: number });
+
+/** One abscissa; a line is null where it does not reach. */
+const sampleSchema = v.object({ torqueNm: number, available: v.nullable(valuesSchema), sheet: v.nullable(valuesSchema) });
 
 const hardestSchema = v.object({
-  ...point,
+  torqueNm: number,
+  ...values,
   stallShare: v.nullable(number),
-  where: text,
   limitedBy: v.picklist(["line", "limit", "grip"]),
-  stalled: v.boolean(),
+  stalls: v.boolean(),
+  /** In words; null where the load has no position. */
+  where: v.nullable(text),
 });
 
 const limitSchema = v.object({
@@ -33,34 +40,40 @@ const limitSchema = v.object({
   currentA: v.exactOptional(number),
 });
 
-const tableSchema = v.object({
-  columns: v.array(v.object({ title: text, unit: text })),
-  rows: v.array(v.object({ label: text, cells: v.array(v.nullable(number)) })),
+const limitsSchema = v.object({
+  /** Half of the stall torque. */
+  pastPeakFromNm: number,
+  /** No speed is left from here on. */
+  stopsAtNm: number,
+  /** Between the two torques the current limit decides. */
+  current: v.nullable(v.object({ currentA: number, fromNm: number, toNm: number })),
+  /** What else gives way, in rising torque. */
+  others: v.array(limitSchema),
 });
+
+const findingSchema = v.object({ rule: text, level: v.picklist(["error", "warning", "information"]), message: text });
 
 export const operatingPointChartSchema = v.object({
   mechanism: text,
+  motorCount: number,
   state: v.picklist(["error", "warning", "fine", "unknown"]),
-  words: text,
-  stallTorqueNm: number,
-  available: v.array(pointSchema),
-  sheet: v.array(pointSchema),
+  /** A few words. */
+  verdict: text,
+  available: endsSchema,
+  sheet: endsSchema,
+  /** Rising torque from 0 to the end of the longer line; marked points are among them. */
+  samples: v.array(sampleSchema),
   hardest: hardestSchema,
+  /** Null for a motor that gives nothing. */
   peakPower: v.nullable(pointSchema),
   bestEfficiency: v.nullable(pointSchema),
-  limits: v.array(limitSchema),
+  limits: limitsSchema,
+  findings: v.array(findingSchema),
   assumed: v.array(text),
   notChecked: v.array(text),
-  table: tableSchema,
-});
-
-export const chartFindingSchema = v.object({
-  rule: text,
-  level: v.picklist(["error", "warning", "information"]),
-  message: text,
 });
 
 export type OperatingPointChart = v.InferOutput<typeof operatingPointChartSchema>;
-export type ChartPoint = v.InferOutput<typeof pointSchema>;
-export type ChartLimit = v.InferOutput<typeof limitSchema>;
-export type ChartFinding = v.InferOutput<typeof chartFindingSchema>;
+export type ChartSample = v.InferOutput<typeof sampleSchema>;
+export type CurveValues = v.InferOutput<typeof valuesSchema>;
+export type ChartFinding = v.InferOutput<typeof findingSchema>;
