@@ -6,7 +6,7 @@
 export { between } from "./between.js";
 export { DeclarationError } from "./definition.js";
 export { type Arm, type ArmInput, arm } from "./loads/arm.js";
-export type { ForceCurve, InertiaCurve, TorqueCurve } from "./loads/curve.js";
+export type { ForceCurve, InertiaCurve, TorqueCurve } from "./loads/curvePoints.js";
 export { type Flywheel, type FlywheelInput, flywheel } from "./loads/flywheel.js";
 export { type Lift, type LiftInput, lift } from "./loads/lift.js";
 export type { Load } from "./loads/load.js";

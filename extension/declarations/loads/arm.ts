@@ -6,7 +6,8 @@ import type { Definition } from "../definition.js";
 import { ANY, fields, type Limits, NOT_NEGATIVE, POSITIVE, quantity, together } from "../fields.js";
 import type { Angle, Inertia, Length, Mass, Range, Torque } from "../quantities.js";
 import { read, readOr } from "../read.js";
-import { isCurve, readCurve, SLOPE, type TorqueCurve, torqueCurve } from "./curve.js";
+import { isCurve, readCurve, SLOPE, torqueCurve } from "./curve.js";
+import type { TorqueCurve } from "./curvePoints.js";
 
 export interface ArmInput {
   readonly mass: Mass | Range<Mass>;

@@ -5,10 +5,7 @@ import type { Dimension } from "../../units/table.js";
 import { ANY, type Limits, quantity } from "../fields.js";
 import type { Angle, Force, Inertia, Torque } from "../quantities.js";
 import { read } from "../read.js";
-
-export type TorqueCurve = readonly (readonly [position: Angle, torque: Torque])[];
-export type ForceCurve = readonly (readonly [position: Angle, force: Force])[];
-export type InertiaCurve = readonly (readonly [position: Angle, inertia: Inertia])[];
+import type { ForceCurve, InertiaCurve, TorqueCurve } from "./curvePoints.js";
 
 /** From level ground to straight up. */
 export const SLOPE: Limits = { min: 0, max: Math.PI / 2, say: "from 0 to 90 deg" };

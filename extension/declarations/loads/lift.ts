@@ -6,7 +6,8 @@ import type { Definition } from "../definition.js";
 import { fields, NOT_NEGATIVE, number, POSITIVE, quantity, together } from "../fields.js";
 import type { Angle, Force, Length, Mass, Range } from "../quantities.js";
 import { read, readOr } from "../read.js";
-import { type ForceCurve, forceCurve, isCurve, readCurve, SLOPE } from "./curve.js";
+import { forceCurve, isCurve, readCurve, SLOPE } from "./curve.js";
+import type { ForceCurve } from "./curvePoints.js";
 
 export interface LiftInput {
   readonly mass: Mass | Range<Mass>;

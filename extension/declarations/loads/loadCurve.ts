@@ -6,7 +6,8 @@ import type { Definition } from "../definition.js";
 import { fields, NOT_NEGATIVE, quantity } from "../fields.js";
 import type { Inertia, Range } from "../quantities.js";
 import { readOr } from "../read.js";
-import { type InertiaCurve, inertiaCurve, isCurve, readCurve, type TorqueCurve, torqueCurve } from "./curve.js";
+import { inertiaCurve, isCurve, readCurve, torqueCurve } from "./curve.js";
+import type { InertiaCurve, TorqueCurve } from "./curvePoints.js";
 
 export interface LoadCurveInput {
   /** Torque against motion towards greater positions; linear between points, and the travel is from the first to the last. */
