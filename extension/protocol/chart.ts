@@ -34,7 +34,7 @@ const hardestSchema = v.object({
 });
 
 const limitSchema = v.object({
-  kind: v.picklist(["past-peak", "current-limit", "protection", "rated-torque", "stage-torque", "grip"]),
+  kind: v.picklist(["protection", "rated-torque", "stage-torque", "grip"]),
   label: text,
   fromTorqueNm: number,
   currentA: v.exactOptional(number),

@@ -30,10 +30,15 @@ const WRITTEN: Readonly<Record<Dimension, readonly string[]>> = {
 
 /** `si` in the unit that suits its size: 0.0123 N·m is "12.3 mN·m". Fewer digits only where room is short. */
 export function writeQuantity(si: number, dimension: Dimension, digits = 3): string {
+  return writeIn(si, suitableSymbol(si, dimension), digits);
+}
+
+/** The unit in which a value of this size is written. */
+export function suitableSymbol(si: number, dimension: Dimension): string {
   const symbols = WRITTEN[dimension];
   const fits = symbols.find((symbol) => Math.abs(numberIn(si, symbol)) >= 0.9995);
   const symbol = si === 0 ? symbols.find((candidate) => UNITS.get(candidate)?.factor === 1) : fits;
-  return writeIn(si, symbol ?? symbols.at(-1) ?? "", digits);
+  return symbol ?? symbols.at(-1) ?? "";
 }
 
 /** `si` in the unit named. */
