@@ -34,7 +34,7 @@ export async function bundle() {
       buildTypeScript(join(dist, "typescript.js")),
       ...built.map((target) => esbuild.build(optionsOf(target, { minify: true }))),
     ]),
-    existsSync(join(repositoryRoot, DECLARATIONS)) ? writeDeclarationTypes(DECLARATIONS, join(dist, "declarations")) : [],
+    writeDeclarationTypes(DECLARATIONS, join(dist, "declarations")),
     copyFiles(),
   ]);
   const notices = join(dist, "THIRD-PARTY-NOTICES.txt");
@@ -90,7 +90,7 @@ async function refreshTypes() {
 function presentTargets() {
   return targets.filter(({ entry, later }) => {
     const present = existsSync(join(repositoryRoot, entry));
-    if (!present && !later) console.log(`(${entry} does not exist yet)`);
+    if (!present && !later) throw new Error(`${entry} is missing.`);
     return present;
   });
 }

@@ -1,7 +1,7 @@
-// Gives a test a copy of a workspace folder to edit, with the project's declarations beside it as an npm install would
-// lay them, so that TypeScript resolves them outside the repository too. The original is never opened.
+// Gives a test a copy of a workspace folder to edit. The folder above it is laid out like a project that has installed
+// the npm package, so that TypeScript resolves the declarations there as in the repository. The original is never opened.
 
-import { cp, mkdtemp, rm } from "node:fs/promises";
+import { cp, mkdtemp, readFile, rm, writeFile } from "node:fs/promises";
 import { tmpdir } from "node:os";
 import { basename, join } from "node:path";
 import { repositoryRoot } from "./paths.js";
@@ -17,7 +17,7 @@ export async function copyFolder(source: string): Promise<FolderCopy> {
   try {
     const folder = join(parent, basename(source));
     await cp(source, folder, { recursive: true, filter: (path) => basename(path) !== "node_modules" });
-    await layPackage(join(folder, "node_modules/loadmark"));
+    await layProject(parent);
     return { folder, remove };
   } catch (error) {
     await remove();
@@ -25,7 +25,14 @@ export async function copyFolder(source: string): Promise<FolderCopy> {
   }
 }
 
-async function layPackage(installed: string): Promise<void> {
-  await cp(join(repositoryRoot, "package.json"), join(installed, "package.json"));
+async function layProject(folder: string): Promise<void> {
+  const manifest = join(repositoryRoot, "package.json");
+  const { name, version } = JSON.parse(await readFile(manifest, "utf8"));
+  await writeFile(
+    join(folder, "package.json"),
+    JSON.stringify({ private: true, type: "module", dependencies: { [name]: version } }),
+  );
+  const installed = join(folder, "node_modules", name);
+  await cp(manifest, join(installed, "package.json"));
   await cp(join(repositoryRoot, "dist/declarations"), join(installed, "dist/declarations"), { recursive: true });
 }

@@ -18,7 +18,6 @@ export interface PictureOptions {
 const VIEWPORT = { width: 1100, height: 640 };
 const DEVICE_PIXELS = 2;
 const PICTURE_SETTINGS = {
-  "files.exclude": { "**/node_modules": true },
   "editor.fontSize": 14,
   "outline.collapseItems": "alwaysCollapse",
 };
