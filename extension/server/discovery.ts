@@ -1,8 +1,9 @@
 /**
- * Which files of a workspace are looked at: sources outside of installed packages and hidden folders.
+ * The files of a workspace as the session asks for them, and which of them no scan reaches.
  *
- * Says nothing about texts; that a file counts only when it mentions the declarations is decided where its text is read.
+ * The rules are those of the command, so that both check the same files. Says nothing about texts.
  */
+import { isLeftOut } from "../analysis/sources.js";
 
 export interface FileHost {
   /** The text on disk; `null` where there is no such file, or none that can be read. Never rejects. */
@@ -11,13 +12,9 @@ export interface FileHost {
   listSources(folder: string): AsyncIterable<readonly string[]>;
 }
 
-/** True for files that may declare or hold constants as code. */
-export function isSource(file: string): boolean {
-  return /\.(?:[mc]?[jt]s|[jt]sx)$/i.test(file) && !/\.d\.[mc]?ts$/i.test(file);
-}
-
+/** True for folders that are never entered, whatever the settings say. */
 export function isSkippedFolder(name: string): boolean {
-  return name === "node_modules" || name.startsWith(".");
+  return isLeftOut(name, []);
 }
 
 /** True for files that no workspace scan reaches: `path` starts at the workspace folder. */

@@ -7,7 +7,8 @@ import { readdir, readFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { createConnection, ProposedFeatures } from "vscode-languageserver/node";
-import { type FileHost, isSkippedFolder, isSource } from "./discovery.js";
+import { isSourceName } from "../analysis/sources.js";
+import { type FileHost, isSkippedFolder } from "./discovery.js";
 import { loadEngine } from "./engine.js";
 import { keyOf, uriOf } from "./fileKeys.js";
 import { describeError } from "./guard.js";
@@ -50,7 +51,7 @@ async function listFolder(folder: string): Promise<{ readonly files: string[]; r
   try {
     const entries = await readdir(folder, { withFileTypes: true });
     const folders = entries.filter((entry) => entry.isDirectory() && !isSkippedFolder(entry.name));
-    const files = entries.filter((entry) => (entry.isFile() || entry.isSymbolicLink()) && isSource(entry.name));
+    const files = entries.filter((entry) => (entry.isFile() || entry.isSymbolicLink()) && isSourceName(entry.name));
     return {
       folders: folders.map(({ name }) => join(folder, name)),
       files: files.map(({ name }) => keyOf(uriOf(join(folder, name).replaceAll("\\", "/")))),

@@ -3,10 +3,12 @@
  *
  * Waits for the result of the newest text only where an older one would mislead, and never for long.
  */
-import type { Connection } from "vscode-languageserver";
+import type { ClientCapabilities, Connection } from "vscode-languageserver";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
+import { answerCodeActions } from "./answers/codeActions.js";
 import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
+import { answerCompletions, mayHoldUnit } from "./answers/completions.js";
 import { answerFindPlace } from "./answers/findPlace.js";
 import { answerHover } from "./answers/hover.js";
 import { answerInlayHints } from "./answers/inlayHints.js";
@@ -15,6 +17,7 @@ import { type CurrentFile, currentFile } from "./current.js";
 import type { DisplaySettingsReader } from "./displaySettings.js";
 import { keyOf } from "./fileKeys.js";
 import type { Guard } from "./guard.js";
+import { createLineMap } from "./lineMap.js";
 import type { Session } from "./session.js";
 
 export interface RequestParts {
@@ -22,6 +25,7 @@ export interface RequestParts {
   readonly guard: Guard;
   readonly session: Session;
   readonly settings: DisplaySettingsReader;
+  readonly capabilities: ClientCapabilities;
   /** Commands that the client has. */
   readonly commands: readonly string[];
 }
@@ -29,7 +33,7 @@ export interface RequestParts {
 /** How long an answer may wait for the first result, or for that of an edit just made. */
 const PATIENCE_MS = 2000;
 
-export function answerRequests({ connection, guard, session, settings, commands }: RequestParts): void {
+export function answerRequests({ connection, guard, session, settings, capabilities, commands }: RequestParts): void {
   const { texts } = session;
   const lastOf = (uri: string): CurrentFile | undefined => session.result && currentFile(texts, session.result, keyOf(uri));
   /** Whatever is known of the file; waits only when that is nothing. */
@@ -64,6 +68,21 @@ export function answerRequests({ connection, guard, session, settings, commands 
   );
   connection.onCodeLensResolve((lens) =>
     guard.answer("A code lens", lens, () => (session.result ? resolveCodeLens(session.result, lens, commands) : lens))(),
+  );
+  connection.onCompletion(
+    guard.answer("Completions", [], async ({ textDocument, position }) => {
+      const open = texts.openText(keyOf(textDocument.uri));
+      if (open === undefined || !mayHoldUnit(createLineMap(open.text), position)) return [];
+      const current = await newestOf(textDocument.uri);
+      return current ? answerCompletions(current, position) : [];
+    }),
+  );
+  const canFillIn = capabilities.workspace?.workspaceEdit?.snippetEditSupport === true;
+  connection.onCodeAction(
+    guard.answer("Quick fixes", [], async ({ textDocument, range, context }) => {
+      const current = await newestOf(textDocument.uri);
+      return current ? answerCodeActions(current, range, { texts, canFillIn, shown: context.diagnostics }) : [];
+    }),
   );
   connection.onWorkspaceSymbol(
     guard.answer("Symbols", [], ({ query }) =>

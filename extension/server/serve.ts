@@ -3,7 +3,13 @@
  *
  * Every handler is guarded. Knows no host: files and the engine are given.
  */
-import { type Connection, type InitializeParams, type InitializeResult, TextDocumentSyncKind } from "vscode-languageserver";
+import {
+  CodeActionKind,
+  type Connection,
+  type InitializeParams,
+  type InitializeResult,
+  TextDocumentSyncKind,
+} from "vscode-languageserver";
 import type { FileHost } from "./discovery.js";
 import { DisplaySettingsReader } from "./displaySettings.js";
 import type { Engine } from "./engine.js";
@@ -28,7 +34,7 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
     const results = showResults({ connection, capabilities: params.capabilities, report });
     const session = new Session({ host, loadEngine, onResult: (result) => results.show(session.texts, result), onError: report });
     followTexts(connection, guard, session, settings);
-    answerRequests({ connection, guard, session, settings, commands: commandsOf(params) });
+    answerRequests({ connection, guard, session, settings, capabilities: params.capabilities, commands: commandsOf(params) });
     connection.onDidChangeConfiguration(
       guard.act("Reading changed settings", () => {
         settings.forget();
@@ -48,6 +54,8 @@ const CAPABILITIES: InitializeResult = {
     textDocumentSync: { openClose: true, change: TextDocumentSyncKind.Incremental, save: true },
     hoverProvider: true,
     inlayHintProvider: true,
+    completionProvider: { triggerCharacters: [" "] },
+    codeActionProvider: { codeActionKinds: [CodeActionKind.QuickFix] },
     codeLensProvider: { resolveProvider: true },
     workspaceSymbolProvider: true,
     workspace: { workspaceFolders: { supported: true, changeNotifications: true } },

@@ -10,7 +10,7 @@ import type { Analysis } from "../analysis/analysis.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
 import type { FileHost } from "./discovery.js";
 import type { Engine } from "./engine.js";
-import { createLeaveOut, type LeaveOut } from "./leaveOut.js";
+import { withoutLeftOut } from "./leaveOut.js";
 import { type TextSnapshot, Texts } from "./texts.js";
 import { type FileEvent, WorkspaceFiles } from "./workspaceFiles.js";
 
@@ -32,11 +32,6 @@ export interface SessionOptions {
   readonly onError: (what: string, error: unknown) => void;
 }
 
-interface Loaded {
-  readonly engine: Engine;
-  readonly leaveOut: LeaveOut;
-}
-
 /** Disk texts are gone through when there are this many more than before. */
 const FORGET_STEP = 256;
 
@@ -44,7 +39,7 @@ export class Session {
   readonly texts = new Texts();
   readonly #files: WorkspaceFiles;
   readonly #options: SessionOptions;
-  #loaded: Promise<Loaded> | undefined;
+  #engine: Promise<Engine> | undefined;
   /** Wherever a settings file was looked for. */
   readonly #settingsFiles = new Set<string>();
   #forgetAbove = FORGET_STEP;
@@ -155,8 +150,10 @@ export class Session {
       const snapshot = this.texts.capture();
       const mentioning = this.#mentioning(snapshot);
       if (mentioning.length === 0) return this.#accept(resultOfNothing(snapshot), moment);
-      const { engine, leaveOut } = await this.#load();
-      const analysis = engine.analyse(leaveOut.filter(mentioning, this.#settingsFiles, snapshot), snapshot);
+      const engine = await this.#load();
+      // Settings above the workspace leave nothing out of it, as with the command in its folder.
+      const settingsFiles = [...this.#settingsFiles].filter((file) => this.#files.isInWorkspace(file));
+      const analysis = engine.analyse(withoutLeftOut(mentioning, settingsFiles, snapshot), snapshot);
       const wanted = analysis.wanted.filter((file) => snapshot.read(file) === undefined);
       if (wanted.length === 0) return this.#accept({ analysis, snapshot, analyse: engine.analyse }, moment);
       for (const file of wanted) if (file.endsWith(`/${SETTINGS_FILE}`)) this.#settingsFiles.add(file);
@@ -193,15 +190,13 @@ export class Session {
     this.#forgetAbove = 2 * this.texts.diskSize + FORGET_STEP;
   }
 
-  #load(): Promise<Loaded> {
-    this.#loaded ??= this.#options.loadEngine().then(
-      (engine) => ({ engine, leaveOut: createLeaveOut((file, text) => engine.leftOutBy(file, text)) }),
-      (error) => {
-        this.#loaded = undefined;
-        throw error;
-      },
-    );
-    return this.#loaded;
+  /** A failure is not kept: the next analysis tries again. */
+  #load(): Promise<Engine> {
+    this.#engine ??= this.#options.loadEngine().catch((error) => {
+      this.#engine = undefined;
+      throw error;
+    });
+    return this.#engine;
   }
 
   #release(): void {

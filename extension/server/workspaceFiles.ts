@@ -4,7 +4,8 @@
  * Every event leads to reading the file again, so that their order doesn't matter. Never watches or polls; unsaved text is not its business.
  */
 import { mentionsDeclarations } from "../analysis/analyser.js";
-import { type FileHost, isBelowSkippedFolder, isSource } from "./discovery.js";
+import { isSourceName } from "../analysis/sources.js";
+import { type FileHost, isBelowSkippedFolder } from "./discovery.js";
 import { pathBelow } from "./fileKeys.js";
 import type { Texts } from "./texts.js";
 
@@ -35,14 +36,14 @@ export class WorkspaceFiles {
     return this.#mentioning;
   }
 
-  get folders(): readonly string[] {
-    return this.#folders;
+  isInWorkspace(file: string): boolean {
+    return this.#pathInWorkspace(file) !== undefined;
   }
 
   /** True where a file may declare something: outside of installed packages, and of the workspace's hidden folders. */
   accepts(file: string): boolean {
     if (file.startsWith("untitled:")) return true;
-    if (!isSource(file)) return false;
+    if (!isSourceName(file)) return false;
     const path = this.#pathInWorkspace(file);
     return path === undefined ? !file.includes("/node_modules/") : !isBelowSkippedFolder(path);
   }
@@ -52,7 +53,7 @@ export class WorkspaceFiles {
     const added = folders.filter((folder) => !this.#folders.includes(folder));
     // A folder inside another one counts for itself.
     this.#folders = folders.toSorted((a, b) => b.length - a.length);
-    for (const file of this.#mentioning) if (this.#pathInWorkspace(file) === undefined) this.#mentioning.delete(file);
+    for (const file of this.#mentioning) if (!this.isInWorkspace(file)) this.#mentioning.delete(file);
     for (const folder of added) await this.#scan(folder);
   }
 
@@ -70,11 +71,11 @@ export class WorkspaceFiles {
     const stale = new Set<string>();
     for (const { file } of events) if (this.#isKnown(file) || this.#isCandidate(file)) stale.add(file);
     // A folder that comes or goes may be announced alone, without what it holds.
-    const folders = new Set(events.flatMap(({ file, kind }) => (kind === "changed" || isSource(file) ? [] : [file])));
+    const folders = new Set(events.flatMap(({ file, kind }) => (kind === "changed" || isSourceName(file) ? [] : [file])));
     if (folders.size > 0) for (const file of this.#known()) if (hasFolder(file, folders)) stale.add(file);
     let changed = await this.refresh([...stale]);
     for (const { file, kind } of events) {
-      if (kind !== "created" || isSource(file) || !this.#mayHoldSources(file)) continue;
+      if (kind !== "created" || isSourceName(file) || !this.#mayHoldSources(file)) continue;
       if (await this.#scan(file)) changed = true;
     }
     return changed;
@@ -136,7 +137,7 @@ export class WorkspaceFiles {
   }
 
   #isCandidate(file: string): boolean {
-    return this.#pathInWorkspace(file) !== undefined && this.accepts(file);
+    return this.isInWorkspace(file) && this.accepts(file);
   }
 
   #mayHoldSources(folder: string): boolean {

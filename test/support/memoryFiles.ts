@@ -1,5 +1,6 @@
 /** A disk in memory for tests of the session; reads take as long as a test wants. */
-import { type FileHost, isBelowSkippedFolder, isSource } from "../../extension/server/discovery.js";
+import { isSourceName } from "../../extension/analysis/sources.js";
+import { type FileHost, isBelowSkippedFolder } from "../../extension/server/discovery.js";
 
 export interface MemoryFiles extends FileHost {
   readonly texts: Map<string, string>;
@@ -22,7 +23,7 @@ export function createMemoryFiles(texts: Readonly<Record<string, string>>): Memo
     },
     async *listSources(folder) {
       const below = [...files.texts.keys()].filter((file) => file.startsWith(`${folder}/`));
-      yield below.filter((file) => isSource(file) && !isBelowSkippedFolder(file.slice(folder.length + 1)));
+      yield below.filter((file) => isSourceName(file) && !isBelowSkippedFolder(file.slice(folder.length + 1)));
     },
   };
   return files;

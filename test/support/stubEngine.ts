@@ -20,7 +20,6 @@ export function createStubEngine(): StubEngine {
       runs.count += 1;
       return analyse(roots, snapshot);
     },
-    leftOutBy: (_file, text) => JSON.parse(text).leaveOut ?? [],
   };
 }
 

@@ -1,0 +1,14 @@
+/** The language client for a server in a Node process. */
+import { LanguageClient, TransportKind } from "vscode-languageclient/node";
+import { type ClientParts, clientOptions } from "./clientOptions.js";
+
+export interface NodeServer {
+  readonly serverModule: string;
+  /** Where the process runs: not in the workspace, whose folders must stay free to be moved. */
+  readonly folder: string;
+}
+
+export function makeNodeClient({ serverModule, folder }: NodeServer, parts: ClientParts): LanguageClient {
+  const server = { module: serverModule, transport: TransportKind.ipc, options: { cwd: folder } };
+  return new LanguageClient("loadmark", "Loadmark", { run: server, debug: server }, clientOptions(parts));
+}

@@ -1,0 +1,110 @@
+/**
+ * The server as the rest of the client sees it: started once it is needed, started anew on request, and what it last said.
+ *
+ * Knows no host; how a language client is made is given.
+ */
+import * as vscode from "vscode";
+import type { BaseLanguageClient } from "vscode-languageclient";
+import { FIND_PLACE, type Place, type PlaceQuery, placeSchema } from "../protocol/place.js";
+import { readMessage } from "../protocol/readMessage.js";
+import { NO_STATE, STATE, type State, stateSchema } from "../protocol/state.js";
+
+export type MakeClient = (onGivenUp: () => void) => Promise<BaseLanguageClient>;
+
+export class Server implements vscode.Disposable {
+  readonly #makeClient: MakeClient;
+  readonly #log: vscode.LogOutputChannel;
+  readonly #stateChanged = new vscode.EventEmitter<State>();
+  #state = NO_STATE;
+  #client: BaseLanguageClient | undefined;
+  /** Starting and stopping happen one after the other. */
+  #queue: Promise<void> = Promise.resolve();
+  #wanted = false;
+
+  constructor(makeClient: MakeClient, log: vscode.LogOutputChannel) {
+    this.#makeClient = makeClient;
+    this.#log = log;
+  }
+
+  readonly onDidChangeState = this.#stateChanged.event;
+
+  get state(): State {
+    return this.#state;
+  }
+
+  /** True from the first wish to start it. */
+  get isWanted(): boolean {
+    return this.#wanted;
+  }
+
+  start(): Promise<void> {
+    if (this.#wanted) return this.#queue;
+    this.#wanted = true;
+    return this.#next(() => this.#startClient());
+  }
+
+  restart(): Promise<void> {
+    this.#wanted = true;
+    return this.#next(async () => {
+      await this.#stopClient();
+      await this.#startClient();
+    });
+  }
+
+  stop(): Promise<void> {
+    this.#wanted = false;
+    return this.#next(() => this.#stopClient());
+  }
+
+  dispose(): void {
+    void this.stop();
+    this.#stateChanged.dispose();
+  }
+
+  async findPlace(query: PlaceQuery): Promise<Place | undefined> {
+    return readMessage(placeSchema, await this.#client?.sendRequest(FIND_PLACE, query));
+  }
+
+  async #startClient(): Promise<void> {
+    const client = await this.#makeClient(() => void this.#giveUp());
+    client.onNotification(STATE, (message) => {
+      const state = readMessage(stateSchema, message);
+      if (state === undefined) this.#log.warn("The server sent a state that cannot be read.");
+      else this.#setState(state);
+    });
+    this.#client = client;
+    await client.start();
+  }
+
+  async #stopClient(): Promise<void> {
+    const client = this.#client;
+    this.#client = undefined;
+    this.#setState(NO_STATE);
+    try {
+      await client?.dispose();
+    } catch (error) {
+      // One that ended by itself cannot be stopped any more.
+      this.#log.debug(`Stopping the server: ${String(error)}`);
+    }
+  }
+
+  async #giveUp(): Promise<void> {
+    this.#setState(NO_STATE);
+    const restart = vscode.l10n.t("Restart Server");
+    const showLog = vscode.l10n.t("Show Log");
+    const message = vscode.l10n.t("The Loadmark server ended several times and was not started again.");
+    const choice = await vscode.window.showErrorMessage(message, restart, showLog);
+    if (choice === restart) await this.restart();
+    if (choice === showLog) this.#log.show();
+  }
+
+  #next(work: () => Promise<void>): Promise<void> {
+    this.#queue = this.#queue.then(work).catch((error) => this.#log.error(error));
+    return this.#queue;
+  }
+
+  #setState(state: State): void {
+    this.#state = state;
+    this.#stateChanged.fire(state);
+  }
+}
