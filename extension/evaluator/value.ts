@@ -15,10 +15,14 @@ export interface Span {
 /** Where a value came from; a graph without cycles whose leaves are literals. */
 export interface Origin {
   readonly span: Span;
-  /** `name`: an identifier that stands for a declared value; its `from` is the initialiser. */
-  readonly kind: "literal" | "name" | "access" | "operation" | "template" | "array" | "object" | "call" | "import";
+  /**
+   * `name`: an identifier that stands for a declared value; its `from` is the initialiser. `access`: a property or element,
+   * spread or destructured too; `from[0]` is what stands there, the rest worked out which. `choice`: `?:`, `??`, `&&`, `||`;
+   * `from[0]` is the part chosen, the rest decided. `import`: a whole module.
+   */
+  readonly kind: "literal" | "name" | "access" | "operation" | "choice" | "template" | "array" | "object" | "call" | "import";
   readonly from: readonly Origin[];
-  /** For `name`: the identifier in the declaration that it refers to (in whichever file). */
+  /** For `name`: the identifier in the declaration that it refers to; for `access`: the property's name where it is written. */
   readonly declaredAt?: Span;
 }
 
@@ -32,13 +36,21 @@ export interface Known {
 
 export type Data =
   | { readonly kind: "primitive"; readonly value: string | number | boolean | bigint | null | undefined }
-  | { readonly kind: "array"; readonly items: readonly Value[] }
+  /** `frozen`: cannot change after it was made (`Object.freeze`, `as const`). */
+  | { readonly kind: "array"; readonly items: readonly Value[]; readonly frozen?: boolean }
   /** `keys`: where each property's name is written. */
-  | { readonly kind: "object"; readonly entries: ReadonlyMap<string, Value>; readonly keys: ReadonlyMap<string, Span> }
+  | {
+      readonly kind: "object";
+      readonly entries: ReadonlyMap<string, Value>;
+      readonly keys: ReadonlyMap<string, Span>;
+      readonly frozen?: boolean;
+    }
   /** The object that a definition built, by identity, with the call that made it. */
   | { readonly kind: "built"; readonly built: object; readonly call: DefinitionCall }
-  /** Something callable that the evaluator understands: a definition, a `Math` function, a pure helper. */
-  | { readonly kind: "function"; readonly name: string };
+  /** Something callable, or a global such as `Math`, that the evaluator understands. */
+  | { readonly kind: "function"; readonly name: string }
+  /** All exports of a file (`import * as`); each is evaluated when it is asked for. */
+  | { readonly kind: "module"; readonly file: string };
 
 export interface Unknown {
   readonly known: false;
@@ -46,6 +58,8 @@ export interface Unknown {
   readonly origin: Origin;
   /** The unknown that this one depends on; absent at the root of the chain. */
   readonly cause?: Unknown;
+  /** The call to a definition whose own findings say this already. */
+  readonly reportedBy?: DefinitionCall;
 }
 
 export interface UnknownReason {
@@ -103,8 +117,10 @@ export interface DefinitionCall {
   readonly built?: object;
   /** Issues, located: primary at the use, `source` at the literal where that is elsewhere. */
   readonly issues: readonly LocatedIssue[];
-  /** The leaves among the arguments that are unknown for a reason of their own (not `rejected`). */
+  /** The leaves among the arguments that are unknown for a reason of their own (not `rejected`), each located inside the call. */
   readonly unknowns: readonly Unknown[];
+  /** Other calls whose own findings keep this one silent. */
+  readonly waitsFor: readonly DefinitionCall[];
   /** The variable or property that the call initialises. */
   readonly binding?: { readonly name: string; readonly span: Span };
   /** The comments right above the statement or property that holds the call, in order. */
@@ -114,11 +130,13 @@ export interface DefinitionCall {
 export interface LocatedIssue {
   readonly message: string;
   readonly path: readonly (string | number)[];
+  /** Always inside the call. */
   readonly span: Span;
+  /** The literal, or the property name, that the issue is about, where that stands outside `span`. */
   readonly source?: Span;
 }
 
-/** Texts at one moment. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
+/** Texts at one moment; immutable while it is being read. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
 export interface Snapshot {
   read(file: string): string | null | undefined;
 }
@@ -132,4 +150,8 @@ export interface FileEvaluation {
   readonly dependencies: readonly string[];
   /** Files that it would have read, and that the snapshot has not loaded. */
   readonly wanted: readonly string[];
+  /** Files that it looked for in vain: creating one of them may change this evaluation. */
+  readonly missing: readonly string[];
+  /** Why nothing of the file could be read; `calls` is then empty. */
+  readonly problem?: Unknown;
 }

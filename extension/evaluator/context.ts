@@ -1,0 +1,84 @@
+/**
+ * What the parts of the evaluator share: the files that are open to it, frames of evaluation, and the way back into the evaluator.
+ *
+ * Parts reach each other only through `Context`, so that none imports another in a circle.
+ */
+import type ts from "typescript";
+import type { Binding, Source } from "./source.js";
+import type { TypeScript } from "./typescript.js";
+import type { Definition, DefinitionCall, Snapshot, Span, Unknown, Value } from "./value.js";
+
+/** One file as it is now, with what was worked out about it; dropped when anything that it read has changed. */
+export interface Module {
+  readonly file: string;
+  readonly source: Source;
+  readonly root: Frame;
+  /** Every answer of the snapshot that this module's values rest on. */
+  readonly reads: Map<string, string | null | undefined>;
+  /** Files whose modules this module's values rest on. */
+  readonly imports: Set<string>;
+  readonly loads: Map<string, Loaded>;
+  readonly exports: Map<string, Target>;
+}
+
+/** One run through a file, a function's body or a loop's body: what its names stand for. */
+export interface Frame {
+  readonly module: Module;
+  /** The source file, function or loop that it runs through. */
+  readonly node: ts.Node;
+  readonly parent: Frame | undefined;
+  /** Parameters and loop variables. */
+  readonly bound: ReadonlyMap<Binding, Value>;
+  /** Values by binding, declaration or call; `undefined` while being worked out. */
+  readonly memo: Map<object, Value | undefined>;
+  /** Frames that calls and loops in this frame opened, so that each is run through once. */
+  readonly children: Map<ts.Node, Frame[]>;
+  /** How many calls of helpers lead here. */
+  readonly height: number;
+}
+
+/** What a specifier leads to. */
+export type Loaded =
+  | { readonly kind: "library" }
+  | { readonly kind: "module"; readonly module: Module }
+  | { readonly kind: "failed"; readonly unknown: Unknown };
+
+/** What a name or an export stands for, found without evaluating anything. */
+export type Target =
+  | Loaded
+  | { readonly kind: "definition"; readonly definition: Definition }
+  | { readonly kind: "binding"; readonly module: Module; readonly binding: Binding }
+  | { readonly kind: "expression"; readonly module: Module; readonly node: ts.Expression };
+
+export interface Context {
+  readonly ts: TypeScript;
+  readonly specifier: string;
+  readonly definitions: ReadonlyMap<string, Definition>;
+  readonly modules: Map<string, Module>;
+  /** The call that made each built object. */
+  readonly makers: WeakMap<object, DefinitionCall>;
+  snapshot: Snapshot;
+  /** Nesting of the evaluation that is going on. */
+  depth: number;
+  /** Expressions evaluated for this file so far. */
+  steps: number;
+  /** Evaluates an expression; `frame` must belong to the node's own file. */
+  evaluate(node: ts.Expression, frame: Frame): Value;
+  /** The value that a binding was given, with the origin of its initialiser. */
+  valueOf(binding: Binding, frame: Frame): Value;
+  /** What a specifier in `module` leads to; `span` is where it is written. */
+  load(module: Module, specifier: string, span: Span): Loaded;
+  /** The module of a file that was read. */
+  open(file: string, text: string): Module;
+}
+
+export function openFrame(parent: Frame, node: ts.Node, bound: ReadonlyMap<Binding, Value>, height = parent.height): Frame {
+  return { module: parent.module, node, parent, bound, memo: new Map(), children: new Map(), height };
+}
+
+/** The run that a binding belongs to; the file's own for names inside a function that nobody has called. */
+export function homeOf(binding: Binding, frame: Frame): Frame {
+  let owner: Frame | undefined = frame;
+  while (owner !== undefined && owner.node !== binding.scope.frame) owner = owner.parent;
+  return owner ?? frame.module.root;
+}

@@ -1,0 +1,184 @@
+/**
+ * The entrance of this room: evaluates a file of a snapshot, and keeps what it worked out for as long as it stays true.
+ *
+ * A file's parse is kept while its text is the same, its values while every file that they rest on is. Nothing is read but
+ * through the snapshot; what that lacks is listed as wanted.
+ */
+import type ts from "typescript";
+import { listActivations } from "./activations.js";
+import type { Context, Frame, Module } from "./context.js";
+import { evaluateDefinitionCall } from "./definitionCall.js";
+import { createEvaluate } from "./expression.js";
+import { loadSpecifier } from "./load.js";
+import { findTarget } from "./modules.js";
+import { valueOfBinding } from "./names.js";
+import { parseSource, type Source } from "./source.js";
+import type { TypeScript } from "./typescript.js";
+import { tooDeep, unknown } from "./unknown.js";
+import type { Definition, DefinitionCall, FileEvaluation, Snapshot, Unknown } from "./value.js";
+
+export interface Evaluator {
+  /** What a file says. Never throws; microseconds when nothing that it rests on has changed. */
+  evaluateFile(file: string, snapshot: Snapshot): FileEvaluation;
+  /** Drops what is kept about a file that is gone or no longer of interest. */
+  forget(file: string): void;
+}
+
+export interface EvaluatorOptions {
+  /** The module whose exports are the definitions. */
+  readonly specifier: string;
+  /** By export name. */
+  readonly definitions: ReadonlyMap<string, Definition>;
+}
+
+export function createEvaluator(ts: TypeScript, { specifier, definitions }: EvaluatorOptions): Evaluator {
+  const sources = new Map<string, Source>();
+  const evaluations = new Map<Module, FileEvaluation>();
+  const nothing: Snapshot = { read: () => undefined };
+  const modules = new Map<string, Module>();
+  const evaluate = createEvaluate(ts);
+  const ctx: Context = {
+    ts,
+    specifier,
+    definitions,
+    modules,
+    makers: new WeakMap(),
+    snapshot: nothing,
+    depth: 0,
+    steps: 0,
+    evaluate: (node, frame) => evaluate(ctx, node, frame),
+    valueOf: (binding, frame) => valueOfBinding(ctx, binding, frame),
+    load: (module, name, span) => loadSpecifier(ctx, module, name, span),
+    open: (file, text) => open(ctx, sources, file, text),
+  };
+  return {
+    evaluateFile(file, snapshot) {
+      ctx.snapshot = snapshot;
+      dropStale(ctx, file, evaluations);
+      const text = snapshot.read(file);
+      if (typeof text !== "string") return withoutText(file, text);
+      const module = ctx.open(file, text);
+      const evaluation = evaluations.get(module) ?? evaluateModule(ctx, module);
+      evaluations.set(module, evaluation);
+      ctx.snapshot = nothing;
+      return evaluation;
+    },
+    forget(file) {
+      sources.delete(file);
+      const module = modules.get(file);
+      if (module === undefined) return;
+      modules.delete(file);
+      evaluations.delete(module);
+    },
+  };
+}
+
+function evaluateModule(ctx: Context, module: Module): FileEvaluation {
+  const { file, source } = module;
+  ctx.depth = 0;
+  ctx.steps = 0;
+  const calls: DefinitionCall[] = [];
+  let problem = source.unreadable ? unreadable(file) : undefined;
+  for (const node of source.calls) {
+    const found = evaluateAt(ctx, node, module);
+    if (Array.isArray(found)) calls.push(...found);
+    else problem ??= found;
+  }
+  const reached = listReached(ctx, module);
+  const reads = new Map([...reached].flatMap((each) => [...each.reads]));
+  const having = (kind: (text: string | null | undefined) => boolean) =>
+    [...reads].flatMap(([name, text]) => (kind(text) ? [name] : []));
+  return {
+    file,
+    calls,
+    dependencies: [...new Set([file, ...having((text) => typeof text === "string")])],
+    wanted: having((text) => text === undefined),
+    missing: having((text) => text === null),
+    ...(problem === undefined ? {} : { problem }),
+  };
+}
+
+/** A call to a definition, once for every run that reaches it; nothing for any other call. */
+function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): DefinitionCall[] | Unknown {
+  try {
+    const target = findTarget(ctx, node.expression, module);
+    if (target?.kind !== "definition") return [];
+    const frames: readonly Frame[] = listActivations(ctx, node, module);
+    return frames.flatMap((frame) => evaluateDefinitionCall(ctx, target.definition, node, frame).call ?? []);
+  } catch {
+    // Every walk is bounded, so this should not happen; a host with a smaller stack must not go down by it.
+    ctx.depth = 0;
+    return tooDeep(node, module);
+  }
+}
+
+/** Forgets every module below `file` that rests on a text that is no longer what it was. */
+function dropStale(ctx: Context, file: string, evaluations: Map<Module, FileEvaluation>): void {
+  const start = ctx.modules.get(file);
+  if (start === undefined) return;
+  const reached = listReached(ctx, start);
+  const users = new Map<string, Module[]>();
+  const stale: Module[] = [];
+  for (const module of reached) {
+    if ([...module.reads].some(([name, text]) => ctx.snapshot.read(name) !== text)) stale.push(module);
+    for (const used of module.imports) users.set(used, [...(users.get(used) ?? []), module]);
+  }
+  const dropped = new Set<Module>();
+  for (let module = stale.pop(); module !== undefined; module = stale.pop()) {
+    if (dropped.has(module)) continue;
+    dropped.add(module);
+    ctx.modules.delete(module.file);
+    evaluations.delete(module);
+    stale.push(...(users.get(module.file) ?? []));
+  }
+}
+
+/** The module and everything that its values rest on. */
+function listReached(ctx: Context, start: Module): Set<Module> {
+  const reached = new Set([start]);
+  for (const module of reached) {
+    for (const file of module.imports) {
+      const next = ctx.modules.get(file);
+      if (next !== undefined) reached.add(next);
+    }
+  }
+  return reached;
+}
+
+function open(ctx: Context, sources: Map<string, Source>, file: string, text: string): Module {
+  const present = ctx.modules.get(file);
+  if (present !== undefined) return present;
+  const kept = sources.get(file);
+  const source = kept?.text === text ? kept : parseSource(ctx.ts, file, text);
+  sources.set(file, source);
+  const module: { -readonly [Key in keyof Module]: Module[Key] } = {
+    file,
+    source,
+    root: undefined as unknown as Frame,
+    reads: new Map([[file, text]]),
+    imports: new Set(),
+    loads: new Map(),
+    exports: new Map(),
+  };
+  module.root = {
+    module,
+    node: source.root,
+    parent: undefined,
+    bound: new Map(),
+    memo: new Map(),
+    children: new Map(),
+    height: 0,
+  };
+  ctx.modules.set(file, module);
+  return module;
+}
+
+function withoutText(file: string, text: null | undefined): FileEvaluation {
+  const lists = text === null ? { wanted: [], missing: [file] } : { wanted: [file], missing: [] };
+  return { file, calls: [], dependencies: [file], ...lists };
+}
+
+function unreadable(file: string): Unknown {
+  const origin = { kind: "operation", span: { file, start: 0, end: 0 }, from: [] } as const;
+  return unknown("too-deep", "The file is nested too deeply to be read.", "split the deepest part off", origin);
+}

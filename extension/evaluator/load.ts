@@ -1,0 +1,54 @@
+/**
+ * From a specifier to the module that it names, through the snapshot.
+ *
+ * What the snapshot hasn't loaded is read again in the next run; until then the names from there are unknown.
+ */
+import type { Context, Loaded, Module } from "./context.js";
+import { isRelative, listCandidates } from "./specifier.js";
+import { quoteText, unknown } from "./unknown.js";
+import type { Span, UnknownReason } from "./value.js";
+
+export function loadSpecifier(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
+  const kept = from.loads.get(specifier);
+  if (kept !== undefined) return kept;
+  const loaded = find(ctx, from, specifier, span);
+  from.loads.set(specifier, loaded);
+  return loaded;
+}
+
+function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
+  if (specifier === ctx.specifier) return { kind: "library" };
+  if (!isRelative(specifier))
+    return fail("unresolved-import", `${quoteText(specifier)} is a package, whose code is not read.`, span);
+  const [first, ...rest] = listCandidates(from.file, specifier);
+  if (first === undefined) return fail("unresolved-import", `${quoteText(specifier)} leads out of the file system.`, span);
+  // The likeliest file alone first: asking for all at once would make a host look for a dozen files that nobody has.
+  const found = ask(ctx, from, [first]);
+  const answer = found === null ? ask(ctx, from, rest) : found;
+  if (answer === undefined) return fail("unresolved-import", `${quoteText(specifier)} is not loaded yet.`, span);
+  if (answer === null) return fail("unresolved-import", `${quoteText(specifier)} does not lead to a file.`, span);
+  from.imports.add(answer.file);
+  return { kind: "module", module: answer };
+}
+
+/** The first of the files that is there; `undefined` while one before it, or all, are not loaded. */
+function ask(ctx: Context, from: Module, files: readonly string[]): Module | null | undefined {
+  let open: readonly string[] = [];
+  for (const [index, file] of files.entries()) {
+    const text = ctx.snapshot.read(file);
+    from.reads.set(file, text);
+    if (text === undefined) {
+      open = files.slice(index + 1);
+      break;
+    }
+    if (text !== null) return ctx.open(file, text);
+  }
+  if (open.length === 0 && files.every((file) => from.reads.get(file) === null)) return null;
+  // The others are wanted as well, so that one more round answers everything.
+  for (const file of open) from.reads.set(file, ctx.snapshot.read(file));
+  return undefined;
+}
+
+function fail(code: UnknownReason["code"], message: string, span: Span): Loaded {
+  return { kind: "failed", unknown: unknown(code, message, "", { kind: "import", span, from: [] }) };
+}

@@ -1,0 +1,203 @@
+/**
+ * Follows names across files: what an import, an export or a plain reference stands for, without evaluating any of it.
+ *
+ * A name that leads nowhere is a target of its own, with the hop that failed as its cause. Loading is lazy: a file is opened
+ * when a name of it is needed.
+ */
+import type ts from "typescript";
+import type { Context, Loaded, Module, Target } from "./context.js";
+import { exportsOf } from "./exports.js";
+import { innermost } from "./outer.js";
+import { resolveName } from "./source.js";
+import { quoteText, spanOf, suggest, unknown } from "./unknown.js";
+import type { Span, Unknown } from "./value.js";
+import { isReassigned } from "./writes.js";
+
+type ImportNode = ts.ImportClause | ts.NamespaceImport | ts.ImportSpecifier | ts.ImportEqualsDeclaration;
+
+/** What an import stands for. */
+export function resolveImport(ctx: Context, module: Module, node: ts.Node): Target {
+  const { ts } = ctx;
+  const declaration = node as ImportNode;
+  const span = spanOf(declaration.name ?? declaration, module);
+  if (ts.isImportEqualsDeclaration(declaration)) {
+    const { moduleReference } = declaration;
+    const external = ts.isExternalModuleReference(moduleReference) ? moduleReference.expression : undefined;
+    if (external === undefined || !ts.isStringLiteral(external))
+      return fail(span, "unsupported", "An import alias isn't followed.");
+    return wholeOf(ctx, ctx.load(module, external.text, spanOf(external, module)), span);
+  }
+  let top: ts.Node = declaration;
+  while (!ts.isImportDeclaration(top)) top = top.parent;
+  if (!ts.isStringLiteral(top.moduleSpecifier)) return fail(span, "missing", "The import names no module yet.");
+  const loaded = ctx.load(module, top.moduleSpecifier.text, spanOf(top.moduleSpecifier, module));
+  if (ts.isNamespaceImport(declaration)) return loaded;
+  if (ts.isImportClause(declaration)) return exportOf(ctx, loaded, "default", span);
+  return exportOf(ctx, loaded, (declaration.propertyName ?? declaration.name).text, span);
+}
+
+/** What an export of a loaded module stands for; `span` is where it is asked for. */
+export function exportOf(ctx: Context, loaded: Loaded, name: string, span: Span): Target {
+  if (loaded.kind === "failed") return loaded;
+  if (loaded.kind === "library") {
+    // A default import of the declarations is their namespace: some compilers write it so.
+    if (name === "default") return loaded;
+    const definition = ctx.definitions.get(name);
+    if (definition !== undefined) return { kind: "definition", definition };
+    const hint = suggest(name, ctx.definitions.keys());
+    return fail(span, "no-such-export", `${quoteText(ctx.specifier)} exports no ${quoteText(name)}${hint}.`);
+  }
+  const { module } = loaded;
+  const found = findExport(ctx, module, name, new Set());
+  if (found?.kind === "failed") return { kind: "failed", unknown: hop(name, module, span, found.unknown) };
+  if (found !== undefined) return found;
+  const hint = suggest(name, exportsOf(ctx.ts, module.source).named.keys());
+  return fail(span, "no-such-export", `${quoteText(baseName(module.file))} exports no ${quoteText(name)}${hint}.`);
+}
+
+/** What an expression made of names and dots stands for; `undefined` when only evaluating it could tell. */
+export function findTarget(ctx: Context, node: ts.Expression, module: Module, hops = 0): Target | undefined {
+  const { ts } = ctx;
+  // Aliases of aliases may run in a circle.
+  if (hops > 40) return undefined;
+  const bare = innermost(ts, node);
+  if (ts.isIdentifier(bare)) {
+    const binding = resolveName(ts, bare, module.source);
+    return binding === undefined ? undefined : follow(ctx, { kind: "binding", module, binding }, hops + 1);
+  }
+  if (ts.isPropertyAccessExpression(bare)) {
+    const base = findTarget(ctx, bare.expression, module, hops + 1);
+    return base === undefined ? undefined : memberOf(ctx, base, bare.name.text, spanOf(bare, module), hops + 1);
+  }
+  return undefined;
+}
+
+/** Follows imports and constants that merely rename something. */
+export function follow(ctx: Context, target: Target, hops = 0): Target {
+  const { ts } = ctx;
+  if (hops > 40) return target;
+  if (target.kind === "expression") return findTarget(ctx, target.node, target.module, hops + 1) ?? target;
+  if (target.kind !== "binding") return target;
+  const { binding, module } = target;
+  const declaration = binding.declarations[0];
+  if (declaration === undefined) return target;
+  if (binding.kind === "import") return follow(ctx, resolveImport(ctx, module, declaration), hops + 1);
+  if (binding.kind !== "const" && isReassigned(ts, binding, module.source)) return target;
+  if (ts.isVariableDeclaration(declaration) && declaration.initializer !== undefined) {
+    return renamed(findTarget(ctx, declaration.initializer, module, hops + 1)) ?? target;
+  }
+  if (!ts.isBindingElement(declaration) || !ts.isVariableDeclaration(declaration.parent.parent)) return target;
+  const { initializer } = declaration.parent.parent;
+  const name = declaration.propertyName ?? declaration.name;
+  if (initializer === undefined || !ts.isObjectBindingPattern(declaration.parent) || !ts.isIdentifier(name)) return target;
+  const base = findTarget(ctx, initializer, module, hops + 1);
+  return renamed(base === undefined ? base : memberOf(ctx, base, name.text, spanOf(declaration, module), hops + 1)) ?? target;
+}
+
+/** A constant that holds a value is that value's own name; one that holds a module or a definition only renames it. */
+function renamed(target: Target | undefined): Target | undefined {
+  const through = target?.kind === "definition" || target?.kind === "library" || target?.kind === "module";
+  return through ? target : undefined;
+}
+
+function memberOf(ctx: Context, base: Target, name: string, span: Span, hops: number): Target | undefined {
+  if (base.kind === "failed") return base;
+  if (base.kind !== "library" && base.kind !== "module") return undefined;
+  return follow(ctx, exportOf(ctx, base, name, span), hops);
+}
+
+function findExport(ctx: Context, module: Module, name: string, visited: Set<Module>): Target | undefined {
+  const memo = module.exports.get(name);
+  if (memo !== undefined) return memo;
+  if (visited.has(module)) return undefined;
+  visited.add(module);
+  const target = lookUpExport(ctx, module, name, visited);
+  if (target !== undefined) module.exports.set(name, target);
+  return target;
+}
+
+function lookUpExport(ctx: Context, module: Module, name: string, visited: Set<Module>): Target | undefined {
+  const { ts } = ctx;
+  if (module.source.unreadable) {
+    const span = { file: module.file, start: 0, end: 0 };
+    return fail(span, "too-deep", `${quoteText(baseName(module.file))} is nested too deeply to be read.`);
+  }
+  if (isJson(module)) {
+    const [statement] = module.source.root.statements;
+    const node = statement !== undefined && ts.isExpressionStatement(statement) ? statement.expression : undefined;
+    return name === "default" && node !== undefined ? { kind: "expression", module, node } : undefined;
+  }
+  const { named, stars } = exportsOf(ts, module.source);
+  const own = named.get(name);
+  if (own?.kind === "binding") return { kind: "binding", module, binding: own.binding };
+  if (own?.kind === "expression") return { kind: "expression", module, node: own.node };
+  if (own?.kind === "passed-on") {
+    const span = spanOf(own.node, module);
+    const loaded = ctx.load(module, own.node.text, span);
+    if (own.name === undefined) return loaded;
+    if (loaded.kind !== "module") return exportOf(ctx, loaded, own.name, span);
+    const found = findExport(ctx, loaded.module, own.name, new Set(visited));
+    return found ?? exportOf(ctx, loaded, own.name, span);
+  }
+  return name === "default" ? undefined : findInStars(ctx, module, name, stars, visited);
+}
+
+function findInStars(
+  ctx: Context,
+  module: Module,
+  name: string,
+  stars: readonly ts.StringLiteral[],
+  visited: Set<Module>,
+): Target | undefined {
+  let found: Target | undefined;
+  let failed: Target | undefined;
+  for (const specifier of stars) {
+    const span = spanOf(specifier, module);
+    const loaded = ctx.load(module, specifier.text, span);
+    const target = starOf(ctx, loaded, name, span, visited);
+    if (target?.kind === "failed") failed ??= target;
+    else if (target !== undefined && found !== undefined && !sameTarget(follow(ctx, found), follow(ctx, target))) {
+      const message = `${quoteText(baseName(module.file))} passes on ${quoteText(name)} from two files.`;
+      return fail(span, "no-such-export", message);
+    } else found ??= target;
+  }
+  // A file that can't be read might export the name too, but then the program wouldn't compile.
+  return found ?? failed;
+}
+
+function starOf(ctx: Context, loaded: Loaded, name: string, span: Span, visited: Set<Module>): Target | undefined {
+  if (loaded.kind === "failed") return loaded;
+  if (loaded.kind === "module") return findExport(ctx, loaded.module, name, visited);
+  return ctx.definitions.has(name) ? exportOf(ctx, loaded, name, span) : undefined;
+}
+
+function wholeOf(ctx: Context, loaded: Loaded, span: Span): Target {
+  if (loaded.kind !== "module") return loaded;
+  const whole = findExport(ctx, loaded.module, "export=", new Set());
+  if (whole !== undefined) return whole;
+  return isJson(loaded.module) ? exportOf(ctx, loaded, "default", span) : loaded;
+}
+
+function sameTarget(a: Target, b: Target): boolean {
+  if (a.kind === "binding") return b.kind === "binding" && a.binding === b.binding;
+  if (a.kind === "module") return b.kind === "module" && a.module === b.module;
+  if (a.kind === "definition") return b.kind === "definition" && a.definition === b.definition;
+  return a.kind === "library" ? b.kind === "library" : a.kind === "expression" && b.kind === "expression" && a.node === b.node;
+}
+
+function hop(name: string, module: Module, span: Span, cause: Unknown): Unknown {
+  const message = `${quoteText(name)} comes through ${quoteText(baseName(module.file))}, which cannot give it.`;
+  return unknown("depends", message, cause.reason.advice, { kind: "import", span, from: [] }, cause);
+}
+
+function fail(span: Span, code: "unsupported" | "missing" | "no-such-export" | "too-deep", message: string): Target {
+  return { kind: "failed", unknown: unknown(code, message, "", { kind: "import", span, from: [] }) };
+}
+
+function isJson({ file }: Module): boolean {
+  return file.endsWith(".json");
+}
+
+function baseName(file: string): string {
+  return file.slice(file.lastIndexOf("/") + 1);
+}

@@ -1,0 +1,153 @@
+import ts from "typescript";
+import { describe, expect, it, vi } from "vitest";
+import type { FileEvaluation, Snapshot } from "../../extension/evaluator/value.js";
+import { makeEvaluator, plain, snapshotOf, splitFiles } from "./support/workspace.js";
+
+const FIXTURE = `//- a.ts
+import { gear } from "gearbox"; import { T } from "./shared"; export const a = gear({ teeth: T });
+//- b.ts
+import { gear } from "gearbox"; export const b = gear({ teeth: 9 });
+//- shared.ts
+export { T } from "./constants";
+//- constants.ts
+export const T = 40;
+`;
+
+function teethOf({ calls }: FileEvaluation): unknown[] {
+  return calls.map(({ built }) => Reflect.get(built ?? {}, "teeth"));
+}
+
+describe("an edit", () => {
+  it("reaches the files that depend on it, and no other", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(FIXTURE);
+    const before = {
+      a: evaluator.evaluateFile("/a.ts", snapshotOf(files)),
+      b: evaluator.evaluateFile("/b.ts", snapshotOf(files)),
+    };
+    expect(evaluator.evaluateFile("/a.ts", snapshotOf(files))).toBe(before.a);
+    files.set("/constants.ts", "export const T = 41;");
+    const after = {
+      a: evaluator.evaluateFile("/a.ts", snapshotOf(files)),
+      b: evaluator.evaluateFile("/b.ts", snapshotOf(files)),
+    };
+    expect(teethOf(before.a)).toEqual([40]);
+    expect(teethOf(after.a)).toEqual([41]);
+    expect(after.b).toBe(before.b);
+  });
+
+  it("parses only what has changed", () => {
+    const parse = vi.fn(ts.createSourceFile);
+    const evaluator = makeEvaluator({ ...ts, createSourceFile: parse });
+    const files = splitFiles(FIXTURE);
+    evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    expect(parse.mock.calls.map(([file]) => file)).toEqual(["/a.ts", "/shared.ts", "/constants.ts"]);
+    parse.mockClear();
+    files.set("/constants.ts", "export const T = 41;");
+    evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    expect(parse.mock.calls.map(([file]) => file)).toEqual(["/constants.ts"]);
+  });
+
+  it("in a ring of files reaches all of it", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(`//- a.ts
+import { gear } from "gearbox"; import { C } from "./b"; export const A = 1; gear({ teeth: C });
+//- b.ts
+import { A } from "./a"; import { D } from "./d"; export const C = A + D;
+//- d.ts
+export const D = 1;
+`);
+    expect(teethOf(evaluator.evaluateFile("/a.ts", snapshotOf(files)))).toEqual([2]);
+    files.set("/d.ts", "export const D = 5;");
+    evaluator.evaluateFile("/b.ts", snapshotOf(files));
+    expect(teethOf(evaluator.evaluateFile("/a.ts", snapshotOf(files)))).toEqual([6]);
+  });
+
+  it("is the same as starting anew, after any order of edits", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(FIXTURE);
+    const steps: [string, string | undefined][] = [
+      ["/constants.ts", "export const T = 1;"],
+      ["/shared.ts", "export const T = 2;"],
+      ["/shared.ts", undefined],
+      ["/shared.ts", 'export * from "./constants";'],
+      ["/constants.ts", undefined],
+      ["/constants.ts", "export const T = Math.random();"],
+      ["/constants.ts", "export const T = 7;"],
+    ];
+    for (const [file, text] of steps) {
+      if (text === undefined) files.delete(file);
+      else files.set(file, text);
+      for (const name of ["/b.ts", "/a.ts"]) {
+        const kept = evaluator.evaluateFile(name, snapshotOf(files));
+        const fresh = makeEvaluator().evaluateFile(name, snapshotOf(files));
+        expect(kept).toEqual(fresh);
+      }
+    }
+  });
+
+  it("forgets a file that is gone", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(FIXTURE);
+    evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    files.delete("/constants.ts");
+    evaluator.forget("/constants.ts");
+    const { calls, missing } = evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    expect(calls[0]?.unknowns).toHaveLength(1);
+    expect(missing).toContain("/constants.ts");
+  });
+});
+
+describe("what the snapshot lacks", () => {
+  /** Loads what is wanted, round by round, as a host would. */
+  function loadAll(all: ReadonlyMap<string, string>): { readonly rounds: string[][]; readonly result: FileEvaluation } {
+    const loaded = new Map<string, string | null>([["/a.ts", all.get("/a.ts") ?? null]]);
+    const evaluator = makeEvaluator();
+    const snapshot = (): Snapshot => ({ read: (file) => loaded.get(file) });
+    const rounds: string[][] = [];
+    for (;;) {
+      const result = evaluator.evaluateFile("/a.ts", snapshot());
+      if (result.wanted.length === 0) return { rounds, result };
+      rounds.push([...result.wanted]);
+      for (const file of result.wanted) loaded.set(file, all.get(file) ?? null);
+    }
+  }
+
+  it("is wanted, hop by hop, with nothing asked for twice", () => {
+    const { rounds, result } = loadAll(splitFiles(FIXTURE));
+    expect(rounds).toEqual([["/shared.ts"], ["/constants.ts"]]);
+    expect(teethOf(result)).toEqual([40]);
+    expect(result.dependencies).toEqual(["/a.ts", "/shared.ts", "/constants.ts"]);
+  });
+
+  it("is asked for in at most two rounds a file", () => {
+    const { rounds, result } = loadAll(splitFiles(FIXTURE.replace("shared.ts", "shared/index.mts")));
+    expect(rounds.map((round) => round.length)).toEqual([1, 17, 1, 17]);
+    expect(result.calls[0]?.unknowns[0]?.reason.code).toBe("depends");
+  });
+
+  it("is unknown for now", () => {
+    const snapshot: Snapshot = { read: (file) => (file === "/a.ts" ? splitFiles(FIXTURE).get(file) : undefined) };
+    const { calls, wanted } = makeEvaluator().evaluateFile("/a.ts", snapshot);
+    expect(wanted).toEqual(["/shared.ts"]);
+    expect(calls[0]?.unknowns.map(plain)).toEqual(["unknown: unresolved-import"]);
+  });
+
+  it("may be the file itself", () => {
+    const evaluator = makeEvaluator();
+    expect(evaluator.evaluateFile("/x.ts", { read: () => undefined })).toMatchObject({
+      calls: [],
+      wanted: ["/x.ts"],
+      missing: [],
+    });
+    expect(evaluator.evaluateFile("/x.ts", { read: () => null })).toMatchObject({ calls: [], wanted: [], missing: ["/x.ts"] });
+  });
+
+  it("is joined to addresses as well", () => {
+    const files = new Map([
+      ["vscode-vfs://github/o/r/src/a.ts", 'import { gear } from "gearbox"; import { T } from "../c"; gear({ teeth: T });'],
+      ["vscode-vfs://github/o/r/c.ts", "export const T = 3;"],
+    ]);
+    expect(teethOf(makeEvaluator().evaluateFile("vscode-vfs://github/o/r/src/a.ts", snapshotOf(files)))).toEqual([3]);
+  });
+});
