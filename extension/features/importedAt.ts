@@ -23,7 +23,10 @@ export function importedAt(analysis: Analysis, file: string, offset: number): Im
   const list = rangeAround(text, LIST, offset);
   const word = list && rangeAround(text, WORD, offset);
   if (list === undefined || word === undefined) return undefined;
-  const keys = declarationsCalled(analysis, file, originalName(text.slice(list.start, list.end), word.text));
+  const name = originalName(text.slice(list.start, list.end), word.text);
+  const near = declarationsCalled(analysis, name, analysis.files.get(file)?.dependencies);
+  // A file that only passes names on reads nothing itself: nothing then narrows the search.
+  const keys = near.length > 0 ? near : declarationsCalled(analysis, name);
   return keys.length === 1 ? { span: { file, start: word.start, end: word.end }, keys } : undefined;
 }
 
@@ -33,9 +36,7 @@ function originalName(list: string, word: string): string {
   return renamed?.[1] ?? word;
 }
 
-function declarationsCalled(analysis: Analysis, file: string, name: string): Span[] {
-  // A file that only passes names on is not evaluated itself; nothing then narrows the search.
-  const readable = analysis.files.get(file)?.dependencies;
+function declarationsCalled(analysis: Analysis, name: string, files?: readonly string[]): Span[] {
   const found: Span[] = [];
   for (const { calls } of analysis.files.values()) {
     const named = [
@@ -43,7 +44,7 @@ function declarationsCalled(analysis: Analysis, file: string, name: string): Spa
       ...calls.map(({ binding }) => binding?.span),
     ];
     for (const at of named) {
-      if (at === undefined || readable?.includes(at.file) === false || found.some((span) => sameSpan(span, at))) continue;
+      if (at === undefined || files?.includes(at.file) === false || found.some((span) => sameSpan(span, at))) continue;
       if (analysis.snapshot.read(at.file)?.slice(at.start, at.end) === name) found.push(at);
     }
   }

@@ -33,7 +33,7 @@ export function inertMarkdown(text: string, longest = LONGEST_NAME): string {
     .replaceAll(/www\./gi, (start) => `${start.slice(0, -1)}\\.`)
     .replaceAll("$(", "$ (")
     .replace(/^([-+=])/, "\\$1")
-    .replace(/^(\d+)([.)])/, "$1\\$2");
+    .replace(/^(\d+)([.)])(?=\s|$)/, "$1\\$2");
 }
 
 /** Right-to-left letters would carry the numbers next to them along; an isolate keeps them to themselves. */

@@ -28,7 +28,7 @@ export function stepsOf(constant: Constant, fed: readonly { readonly leaves: rea
 }
 
 /** What the field counts, in the singular; `undefined` for a field that measures. */
-function countedBy({ call, path }: Leaf): string | undefined {
+export function countedBy({ call, path }: Leaf): string | undefined {
   const [first, second] = path;
   if (call.definition === "mechanism" && second === "motorCount") return "motor";
   if (path.length !== 1 || typeof first !== "number" || first > 1) return undefined;

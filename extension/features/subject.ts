@@ -7,6 +7,7 @@ import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
 import type { DefinitionCall, Origin, Span, Value } from "../evaluator/value.js";
 import { keyOf, type Leaf, leavesOf, originsOf, passedThrough, sameSpan } from "./feeds.js";
 import { importedAt } from "./importedAt.js";
+import { writtenValue } from "./writtenValue.js";
 
 export type Subject =
   | { readonly kind: "mechanism"; readonly span: Span; readonly mechanisms: readonly AnalysedMechanism[] }
@@ -19,14 +20,19 @@ export interface Constant {
   readonly key: Span;
   /** One of its occurrences; the way down to what it is made of. */
   readonly origin: Origin;
-  /** Its value, where a leaf is exactly it. */
+  /** Its value, where a field is exactly it, or where it is written as a literal. */
   readonly plain?: string | number;
+  /** A field that it reaches. */
+  readonly field: Leaf;
 }
 
 /** The innermost subject at an offset; ends of words count, so that a caret right behind one finds it. */
 export function subjectAt(analysis: Analysis, file: string, offset: number): Subject | undefined {
   const calls = [...analysis.files.values()].flatMap((evaluation) => evaluation.calls);
-  const found = [...calls.flatMap((call) => subjectsOf(analysis, call)), ...calls.flatMap(leavesOf).flatMap(constantsOf)];
+  const found = [
+    ...calls.flatMap((call) => subjectsOf(analysis, call)),
+    ...calls.flatMap(leavesOf).flatMap((leaf) => constantsOf(analysis, leaf)),
+  ];
   const here = found.filter(({ span }) => span.file === file && span.start <= offset && offset <= span.end);
   const best = here.reduce<Subject | undefined>((inner, one) => (inner && !isBetter(one, inner) ? inner : one), undefined);
   if (best !== undefined) return best;
@@ -67,11 +73,12 @@ function usesIn(value: Value): { readonly span: Span; readonly call: DefinitionC
     .map((span) => ({ span, call: data.call }));
 }
 
-function constantsOf(leaf: Leaf): Subject[] {
+function constantsOf(analysis: Analysis, leaf: Leaf): Subject[] {
   if (isLabel(leaf)) return [];
   const unchanged = new Set(passedThrough(leaf.value.origin));
   return [...originsOf(leaf.value)].flatMap((origin): Subject[] => {
-    const constant: Constant = { key: keyOf(origin), origin, ...(unchanged.has(origin) ? { plain: leaf.plain } : {}) };
+    const plain = unchanged.has(origin) ? leaf.plain : writtenValue(analysis.snapshot, origin);
+    const constant: Constant = { key: keyOf(origin), origin, field: leaf, ...(plain === undefined ? {} : { plain }) };
     const spans = origin.declaredAt ? [origin.span, origin.declaredAt] : [origin.span];
     return spans.map((span) => ({ kind: "constant", span, constant }));
   });

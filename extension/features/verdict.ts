@@ -35,7 +35,7 @@ const WORDS: Readonly<Record<RuleId, string>> = {
   backdrives: "May run back when power is off",
   "no-headroom": "Little speed in hand",
   "sheet-contradicts": "The motor's sheet contradicts itself",
-  "not-constant": "Not checked: a value is not constant",
+  "not-constant": "A value is not constant",
   "bad-declaration": "Declaration not accepted",
 };
 

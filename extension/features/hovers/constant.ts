@@ -8,7 +8,7 @@ import { feedsOf, keyOf, type Leaf, originsOf, sameSpan } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { chartLink } from "../links.js";
 import { outputShaftOf } from "../shaft.js";
-import { stepsOf } from "../step.js";
+import { countedBy, stepsOf } from "../step.js";
 import type { Constant } from "../subject.js";
 import { type Analyse, variantOf } from "../variant.js";
 import { verdictOf, worse } from "../verdict.js";
@@ -21,11 +21,10 @@ const SHOWN = 3;
 /** `undefined` for a text that is no quantity, such as the name of a magnet. */
 export function describeConstant(analysis: Analysis, constant: Constant, analyse: Analyse): string | undefined {
   const { plain } = constant;
-  const quantity = typeof plain === "string" ? quantityLine(plain) : undefined;
-  if (typeof plain === "string" && quantity === undefined) return undefined;
+  if (typeof plain === "string" && quantityLine(plain) === undefined) return undefined;
   const fed = fedBy(analysis, constant);
   const title = titleOf(analysis, constant);
-  if (fed.length === 0) return writeBlock({ verdict: title, lines: [...listed(quantity), "Feeds no mechanism."] });
+  if (fed.length === 0) return writeBlock({ verdict: title, lines: ["Feeds no mechanism."] });
   const shown = fed.slice(0, SHOWN);
   const rows = shown.map(({ mechanism }) => [rowOf(inertMarkdown(mechanism.name), mechanism)]);
   for (const step of stepsOf(constant, fed)) {
@@ -42,8 +41,11 @@ export function describeConstant(analysis: Analysis, constant: Constant, analyse
   const more = fed.slice(SHOWN).map(({ mechanism }) => inertMarkdown(mechanism.name));
   return writeBlock({
     verdict: verdictOfAll(analysis, fed),
-    lines: [title, ...listed(quantity)],
-    table: { head: ["at the hardest position", "output torque", "output speed", "current", "of stall"], rows: rows.flat() },
+    lines: [title],
+    table: {
+      head: ["at the hardest position", "output torque, of stall", "output speed", "current", "of stall"],
+      rows: rows.flat(),
+    },
     notes:
       more.length === 0
         ? []
@@ -83,13 +85,18 @@ function verdictOfAll(analysis: Analysis, fed: readonly Fed[]): string {
   return `${verdict?.words}: ${[name, ...listed(verdict?.share)].join(", ")}`;
 }
 
-/** "HOIST\_DRIVEN is 40", or the bare value where it has no name. */
-function titleOf({ snapshot }: Analysis, { key, origin, plain }: Constant): string {
-  // As it is given, not rounded: it is what the reader sees in the code.
-  const value = plain === undefined ? undefined : inertMarkdown(String(plain).replaceAll("*", "·"));
-  const name = origin.declaredAt ? inertMarkdown(snapshot.read(key.file)?.slice(key.start, key.end) ?? "") : undefined;
-  if (name === undefined) return value ?? "This value";
-  return value === undefined ? name : `${name} is ${value}`;
+/** "PINION is 16", "mass is 20 kg = 44.1 lb", "16 teeth". */
+function titleOf({ snapshot }: Analysis, { key, origin, plain, field }: Constant): string {
+  const declared = origin.declaredAt ? snapshot.read(key.file)?.slice(key.start, key.end) : undefined;
+  const isWhole = origin === field.value.origin;
+  const written = field.path.findLast((part) => typeof part === "string");
+  const name = declared ?? (isWhole ? written : undefined);
+  // A number as it is given, not rounded: it is what the reader sees in the code.
+  const value = typeof plain === "string" ? quantityLine(plain) : plain;
+  const counted = isWhole && name === undefined ? countedBy(field) : undefined;
+  if (value === undefined) return name === undefined ? "This expression" : inertMarkdown(name);
+  if (name !== undefined) return `${inertMarkdown(name)} is ${value}`;
+  return counted === "tooth" ? `${value} teeth` : counted === undefined ? String(value) : `${value} ${counted}s`;
 }
 
 function rowOf(label: string, mechanism: AnalysedMechanism): string[] {

@@ -1,6 +1,6 @@
 /** A mechanism: whether its motors cope, what is needed against what is available, and what that rests on. */
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
-import type { DefinitionCall } from "../../evaluator/value.js";
+import type { DefinitionCall, Span } from "../../evaluator/value.js";
 import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
 import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
@@ -11,7 +11,7 @@ import { inertMarkdown } from "../inertText.js";
 import { chartLink, revealLink } from "../links.js";
 import { positionWords } from "../positionWords.js";
 import { outputShaftOf } from "../shaft.js";
-import { verdictOf, worse } from "../verdict.js";
+import { findingsAbout, verdictOf, worse } from "../verdict.js";
 import { type Table, writeBlock } from "./block.js";
 import { sentences } from "./sentences.js";
 
@@ -33,10 +33,11 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
   const drive = driveOf(analysis, mechanism);
   const { numbers } = mechanism;
   const name = inertMarkdown(mechanism.name);
-  const assumptions = [...sentences("Assumed", mechanism.assumed), ...sentences("Not checked", mechanism.notChecked)];
   if (numbers === undefined || drive === undefined) {
-    return writeBlock({ verdict: `${verdict.words}: ${name}`, notes: [...assumptions, ...shared], links: linksOf(mechanism) });
+    const why = sentences("Nothing is checked", whyUnknown(analysis, mechanism));
+    return writeBlock({ verdict: `${verdict.words}: ${name}`, notes: [...why, ...shared], links: linksOf(mechanism) });
   }
+  const assumptions = [...sentences("Assumed", mechanism.assumed), ...sentences("Not checked", mechanism.notChecked)];
   return writeBlock({
     verdict: `${verdict.words}: ${[verdict.share, ...verdict.notes].filter((part) => part !== undefined).join(" · ")}`,
     lines: [
@@ -47,6 +48,19 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
     notes: [...feedforwardOf(numbers), ...assumptions, ...shared],
     links: [chartLink(mechanism.name), ...linksOf(mechanism)],
   });
+}
+
+/** Its own findings, or those of what it is made of, or what the analysis says. */
+function whyUnknown(analysis: Analysis, mechanism: AnalysedMechanism): readonly string[] {
+  const own = findingsAbout(analysis, mechanism).map(({ message }) => message);
+  if (own.length > 0) return own;
+  const parts = callsWithin(mechanism.call).concat(mechanism.call.waitsFor);
+  const isInPart = ({ file, start, end }: Span): boolean =>
+    parts.some(({ span, binding }) => file === span.file && (binding?.span ?? span).start <= start && end <= span.end);
+  const theirs = analysis.findings
+    .filter(({ at, level }) => level !== "information" && isInPart(at))
+    .map(({ message }) => message);
+  return theirs.length > 0 ? theirs : mechanism.notChecked;
 }
 
 function motorsOf({ motorCount }: Drive): string {
@@ -96,16 +110,16 @@ function tableOf(drive: Drive, { hardest, available }: MechanismNumbers): Table 
   };
 }
 
-/** Voltages that the robot's own code can send ahead of its feedback. */
+/** Voltages that the robot's own code can send ahead of its feedback; those that are 0 are left out. */
 function feedforwardOf({ feedforward }: MechanismNumbers): string[] {
   const { holdLoadV, frictionV, voltsPerRadPerS, voltsPerRadPerS2 } = feedforward;
   const parts = [
-    holdLoadV === null ? undefined : `${writeQuantity(holdLoadV, "voltage")} holds the load`,
-    `${writeQuantity(frictionV, "voltage")} against friction`,
+    holdLoadV ? `${writeQuantity(holdLoadV, "voltage")} holds the load` : "",
+    frictionV ? `${writeQuantity(frictionV, "voltage")} against friction` : "",
     `${writeNumber(voltsPerRadPerS)} V per rad/s`,
-    `${writeNumber(voltsPerRadPerS2)} V per rad/s² of the output shaft`,
+    voltsPerRadPerS2 ? `${writeNumber(voltsPerRadPerS2)} V per rad/s²` : "",
   ];
-  return [`Feedforward: ${parts.filter((part) => part !== undefined).join(", ")}`];
+  return [`Feedforward, at the output shaft: ${parts.filter((part) => part !== "").join(", ")}`];
 }
 
 function linksOf({ call }: AnalysedMechanism): string[] {

@@ -30,7 +30,7 @@ export function describeMotor(analysis: Analysis, call: DefinitionCall): string 
     });
   }
   return writeBlock({
-    verdict: `${name}: a straight line at ${voltage}`,
+    verdict: `${name}: at ${voltage}`,
     lines: [constantsOf(motor.si), usersOf(analysis, call)],
     table: tableOf(motor.si),
   });
