@@ -1,28 +1,41 @@
 /** Findings about the declarations themselves: refused arguments, names used twice, values that cannot be known. */
-import type { DefinitionCall, Span, Unknown } from "../evaluator/value.js";
+import type { DefinitionCall, Snapshot, Span, Unknown } from "../evaluator/value.js";
 import { badDeclaration, tellIssue, tellMissing, tellNameTwice } from "../rules/badDeclaration.js";
 import { notConstant, tellUnknown } from "../rules/notConstant.js";
 import type { Finding } from "./analysis.js";
 import { type Declared, stringIn } from "./declared.js";
 
-export function findInDeclarations(calls: readonly DefinitionCall[], declared: Declared): Finding[] {
+export function findInDeclarations(calls: readonly DefinitionCall[], declared: Declared, snapshot: Snapshot): Finding[] {
   return [
-    ...calls.flatMap(findIssues),
+    ...calls.flatMap((call) => findIssues(call, calls, snapshot)),
     ...findUnknowns(calls),
     ...findNamesTwice("mechanism", calls),
     ...findNamesTwice("robot", calls),
   ].map((finding) => ({ ...finding, mechanism: finding.mechanism ?? mechanismAround(finding.at, declared) }));
 }
 
-function findIssues(call: DefinitionCall): Finding[] {
-  return call.issues.map((issue) => ({
-    ...badDeclaration,
+function findIssues(call: DefinitionCall, calls: readonly DefinitionCall[], snapshot: Snapshot): Finding[] {
+  return issuesToTell(call, calls, snapshot).map((issue) => ({
     rule: badDeclaration.id,
+    level: badDeclaration.level,
     mechanism: null,
     message: tellIssue(issue),
     at: issue.span,
     related: issue.source ? [{ at: issue.source, message: "The value comes from here." }] : [],
   }));
+}
+
+/** Of a call that is still being typed, one issue: the innermost, since the fields around it are yet to come. */
+function issuesToTell(call: DefinitionCall, calls: readonly DefinitionCall[], snapshot: Snapshot): DefinitionCall["issues"] {
+  if (call.issues.length === 0) return [];
+  const { file, start, end } = call.span;
+  const isFinished = snapshot.read(file)?.[end - 1] === ")";
+  if (isFinished) return call.issues;
+  const isTold = calls.some(
+    ({ span, issues, unknowns }) =>
+      span.file === file && span.start > start && span.end <= end && issues.length + unknowns.filter(isMissing).length > 0,
+  );
+  return isTold ? [] : call.issues.slice(0, 1);
 }
 
 /** One finding per root cause, at the use that lies nearest to it; other uses are related. */
@@ -37,7 +50,7 @@ function findUnknowns(calls: readonly DefinitionCall[]): Finding[] {
     const nearest = uses.reduce((best, use) => (depthOf(use) < depthOf(best) ? use : best));
     const { message, chain } = tellUnknown(nearest);
     const root = rootOf(nearest);
-    const missing = root.reason.code === "missing";
+    const missing = isMissing(root);
     const steps = chain.map((link) => ({
       at: link.origin.span,
       message: link === root ? "This cannot be known." : "It comes through here.",
@@ -84,6 +97,10 @@ function mechanismAround(at: Span, declared: Declared): string | null {
     ({ call: { span } }) => span.file === at.file && span.start <= at.start && at.end <= span.end,
   );
   return around?.name ?? null;
+}
+
+function isMissing(unknown: Unknown): boolean {
+  return rootOf(unknown).reason.code === "missing";
 }
 
 function rootOf(unknown: Unknown): Unknown {

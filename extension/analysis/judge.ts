@@ -6,7 +6,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, Span } from "../evaluator/value.js";
-import type { Supply } from "../model/drive.js";
+import type { Drive, Supply } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
 import { solveMechanism } from "../model/solve.js";
 import type { Verdict } from "../rules/rule.js";
@@ -22,14 +22,20 @@ export interface Judged {
   readonly findings: readonly Finding[];
 }
 
+interface Solved {
+  readonly drive: Drive;
+  readonly numbers: MechanismNumbers;
+}
+
 export function createJudge(): (declared: Declared) => Judged {
-  const solved = new WeakMap<Mechanism, { readonly supply: Supply | undefined; readonly numbers: MechanismNumbers }>();
-  const solve = (mechanism: Mechanism, supply: Supply | undefined): MechanismNumbers => {
+  const solved = new WeakMap<Mechanism, Solved>();
+  const solve = (mechanism: Mechanism, supply: Supply | undefined): Solved => {
     const before = solved.get(mechanism);
-    if (before !== undefined && before.supply === supply) return before.numbers;
-    const numbers = solveMechanism(supply === undefined ? mechanism.si : { ...mechanism.si, supply });
-    solved.set(mechanism, { supply, numbers });
-    return numbers;
+    if (before !== undefined && before.drive.supply === supply) return before;
+    const drive = supply === undefined ? mechanism.si : { ...mechanism.si, supply };
+    const result = { drive, numbers: solveMechanism(drive) };
+    solved.set(mechanism, result);
+    return result;
   };
   return (declared) => {
     const findings: Finding[] = [];
@@ -42,11 +48,11 @@ export function createJudge(): (declared: Declared) => Judged {
         mechanism,
         declared.robots.map((each) => each.declared),
       );
-      const numbers = solve(mechanism, mechanism.si.supply ?? robot?.supply.si);
+      const { drive, numbers } = solve(mechanism, mechanism.si.supply ?? robot?.supply.si);
       const silenced = new Set<string>();
       for (const rule of MECHANISM_RULES) {
         if (silenced.has(rule.id)) continue;
-        const verdict = rule.judge({ mechanism, numbers });
+        const verdict = rule.judge({ mechanism, drive, numbers });
         if (verdict === undefined) continue;
         for (const other of rule.silences) silenced.add(other);
         findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
@@ -86,6 +92,6 @@ function robotOf(mechanism: Mechanism, robots: readonly Robot[]): Robot | undefi
 
 function tellWhyUnknown(call: DefinitionCall): string {
   const unknown = call.unknowns[0];
-  if (unknown !== undefined) return `Nothing: ${unknown.reason.message}.`;
+  if (unknown !== undefined) return `Nothing: ${unknown.reason.message}`;
   return "Nothing: the declaration is not accepted.";
 }

@@ -9,6 +9,6 @@ export function tellUnknown(unknown: Unknown): { readonly message: string; reado
   const chain: Unknown[] = [];
   for (let link = unknown.cause; link !== undefined; link = link.cause) chain.push(link);
   const root = chain.at(-1) ?? unknown;
-  const advice = root.reason.advice === "" ? "" : ` Write ${root.reason.advice} instead.`;
-  return { message: `Not known without running the code: ${root.reason.message}.${advice}`, chain };
+  const { message, advice } = root.reason;
+  return { message: `Not known without running the code: ${message}${advice === "" ? "" : ` Way out: ${advice}.`}`, chain };
 }

@@ -5,6 +5,7 @@
  */
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
+import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
 
 export type Level = "error" | "warning" | "information";
@@ -29,6 +30,8 @@ export type RuleId =
 
 export interface MechanismFacts {
   readonly mechanism: Mechanism;
+  /** What the model was told: the declaration with the supply that it runs on. */
+  readonly drive: Drive;
   readonly numbers: MechanismNumbers;
 }
 
