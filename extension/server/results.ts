@@ -75,13 +75,13 @@ export function showResults({ connection, capabilities, report }: ResultsParts):
   };
 }
 
+/** Open documents are told of whether they have findings or not, so that what they are told carries their version. */
 function fileDiagnosticsOf(texts: Texts, result: Result): Map<string, FileDiagnostics> {
+  const { versions } = result.snapshot;
   const uriOf = (file: string) => texts.uriOf(file);
   const byFile = diagnosticsOf(result, uriOf);
+  const files = new Set([...byFile.keys(), ...versions.keys()]);
   return new Map(
-    [...byFile].map(([file, diagnostics]) => [
-      file,
-      { uri: uriOf(file), version: result.snapshot.versions.get(file), diagnostics },
-    ]),
+    [...files].map((file) => [file, { uri: uriOf(file), version: versions.get(file), diagnostics: byFile.get(file) ?? [] }]),
   );
 }

@@ -1,0 +1,32 @@
+/** The server bundle, built from the sources of now in the way that dist/ is, so that no test ever talks to an old one. */
+import { existsSync, mkdirSync } from "node:fs";
+import path from "node:path";
+import { build } from "esbuild";
+import { targets } from "../../extension/build/targets.mjs";
+import { buildTypeScript, shareTypeScript } from "../../extension/build/typescriptModule.mjs";
+
+const ROOT = path.join(import.meta.dirname, "../..");
+
+/** Gives the path of a server that can be run with Node. `name` keeps test files that run at once apart. */
+export async function buildServer(name: string): Promise<string> {
+  const target = targets.find(({ outfile }) => outfile === "server.cjs");
+  if (target === undefined) throw new Error("The build has no server.");
+  const folder = path.join(ROOT, "node_modules/.cache/loadmark/server", name);
+  mkdirSync(folder, { recursive: true });
+  const typescript = path.join(folder, "typescript.js");
+  if (!existsSync(typescript)) await buildTypeScript(typescript);
+  const outfile = path.join(folder, target.outfile);
+  await build({
+    absWorkingDir: ROOT,
+    entryPoints: [target.entry],
+    outfile,
+    bundle: true,
+    minify: true,
+    legalComments: "none",
+    define: { "process.env.NODE_ENV": '"production"' },
+    logLevel: "error",
+    plugins: [shareTypeScript(".")],
+    ...target.options,
+  });
+  return outfile;
+}
