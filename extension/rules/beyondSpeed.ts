@@ -3,7 +3,7 @@ import { writeNumber, writeQuantity } from "../units/write.js";
 import { askedSpeed } from "./askedSpeed.js";
 import type { MechanismFacts, MechanismRule, Verdict } from "./rule.js";
 
-export const beyondSpeed: MechanismRule = { id: "beyond-speed", level: "error", silences: ["no-headroom"], judge };
+export const beyondSpeed: MechanismRule = { id: "beyond-speed", level: "error", silences: [], judge };
 
 function judge(facts: MechanismFacts): Verdict | undefined {
   const speed = askedSpeed(facts);

@@ -10,7 +10,8 @@ export const noHeadroom: MechanismRule = { id: "no-headroom", level: "informatio
 
 function judge(facts: MechanismFacts): Verdict | undefined {
   const speed = askedSpeed(facts);
-  if (speed === undefined || speed.asked <= SHARE * speed.reached) return undefined;
+  // Beyond what is reached, beyond-speed speaks.
+  if (speed === undefined || speed.asked <= SHARE * speed.reached || speed.asked > speed.reached) return undefined;
   const { ratio } = facts.mechanism;
   return {
     message:

@@ -7,7 +7,8 @@ export const slips: MechanismRule = { id: "slips", level: "information", silence
 
 function judge({ drive, numbers }: MechanismFacts): Verdict | undefined {
   const slip = slipPoint(drive);
-  if (slip === null || slip.motorTorqueNm >= numbers.available.stallTorqueNm) return undefined;
+  // Wheels that cannot move at all stall; that is said already.
+  if (slip === null || !slip.canMove || slip.motorTorqueNm >= numbers.available.stallTorqueNm) return undefined;
   return {
     message:
       `The wheels slip at ${writeQuantity(slip.motorCurrentA, "current")} per motor, before the motors stall at ` +
