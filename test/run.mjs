@@ -39,6 +39,9 @@ if (unknown.length > 0) {
   process.exit(2);
 }
 
+// An exit, unlike a signal's own end, lets a running editor be taken down.
+for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.once(signal, () => process.exit(130));
+
 let passed = 0;
 let failed = 0;
 /** @type {string[]} */
@@ -97,18 +100,16 @@ async function runCheck(title, args) {
 async function runUnitTests() {
   const report = join(cache, "unit.json");
   await rm(report, { force: true });
-  const reporters = ["--reporter=json", `--outputFile=${report}`];
-  const { status, output } = await runNode([
-    "node_modules/vitest/vitest.mjs",
-    "run",
-    "--config",
-    "test/vitest.config.ts",
-    ...reporters,
-  ]);
+  const reporters = ["--reporter=default", "--reporter=json", `--outputFile.json=${report}`];
+  const vitest = ["node_modules/vitest/vitest.mjs", "run", "--config", "test/vitest.config.ts", ...reporters];
+  const { status, output } = await runNode(vitest);
   const { testResults } = JSON.parse(await readFile(report, "utf8").catch(() => '{"testResults":[]}'));
   /** @type {TestResult[]} */
   const tests = testResults.flatMap(describeFile);
-  const explained = status === 0 || tests.some(({ failure }) => failure !== undefined);
+  if (status === 0) return { tests };
+  // Vitest's own words hold the differences, which its report for programs leaves out.
+  console.log(output.slice(Math.max(0, output.search(/^.*Failed (Tests|Suites)/m))));
+  const explained = tests.some(({ failure }) => failure !== undefined);
   return { tests: explained ? tests : [...tests, { title: "vitest", failure: output }] };
 }
 
@@ -123,7 +124,7 @@ function describeFile({ name, status, message, assertionResults }) {
     if (test.status === "passed") return { title };
     return {
       title,
-      failure: test.status === "failed" ? test.failureMessages.join("\n") : `The test was not run (${test.status}).`,
+      failure: test.status === "failed" ? firstLine(test.failureMessages) : `The test was not run (${test.status}).`,
     };
   });
   const broken = status === "failed" && !assertionResults.some((test) => test.status === "failed");
@@ -149,7 +150,11 @@ async function runEditor(extensionMode) {
 async function runNode(args) {
   await mkdir(cache, { recursive: true });
   return new Promise((resolve, reject) => {
-    const child = spawn(process.execPath, args, { cwd: repositoryRoot, stdio: ["ignore", "pipe", "pipe"] });
+    const child = spawn(process.execPath, args, {
+      cwd: repositoryRoot,
+      stdio: ["ignore", "pipe", "pipe"],
+      env: { ...process.env, NO_COLOR: "1" },
+    });
     let output = "";
     for (const stream of [child.stdout, child.stderr]) {
       stream.on("data", (chunk) => {
@@ -159,6 +164,11 @@ async function runNode(args) {
     child.on("error", reject);
     child.on("close", (status) => resolve({ status, output: output.trim() }));
   });
+}
+
+/** @param {string[]} messages */
+function firstLine(messages) {
+  return messages[0]?.split("\n")[0] ?? "";
 }
 
 /** @param {string} text */

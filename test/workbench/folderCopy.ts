@@ -1,28 +1,17 @@
 // Gives a test a copy of a workspace folder to edit. The folder above it is laid out like a project that has installed
 // the npm package, so that TypeScript resolves the declarations there as in the repository. The original is never opened.
 
-import { cp, mkdtemp, readFile, rm, writeFile } from "node:fs/promises";
-import { tmpdir } from "node:os";
+import { cp, readFile, writeFile } from "node:fs/promises";
 import { basename, join } from "node:path";
 import { repositoryRoot } from "./paths.js";
+import { makeTemporaryFolder, type TemporaryFolder } from "./temporaryFolder.js";
 
-export interface FolderCopy {
-  readonly folder: string;
-  remove(): Promise<void>;
-}
-
-export async function copyFolder(source: string): Promise<FolderCopy> {
-  const parent = await mkdtemp(join(tmpdir(), "loadmark-workspace-"));
-  const remove = () => rm(parent, { recursive: true, force: true, maxRetries: 5 });
-  try {
-    const folder = join(parent, basename(source));
-    await cp(source, folder, { recursive: true, filter: (path) => basename(path) !== "node_modules" });
-    await layProject(parent);
-    return { folder, remove };
-  } catch (error) {
-    await remove();
-    throw error;
-  }
+export async function copyFolder(source: string): Promise<TemporaryFolder> {
+  const { folder: parent, remove } = makeTemporaryFolder("workspace");
+  const folder = join(parent, basename(source));
+  await cp(source, folder, { recursive: true, filter: (path) => basename(path) !== "node_modules" });
+  await layProject(parent);
+  return { folder, remove };
 }
 
 async function layProject(folder: string): Promise<void> {

@@ -5,6 +5,9 @@ import { bundle } from "../../extension/build/bundle.mjs";
 import { importTypeScript } from "../../extension/build/importTypeScript.mjs";
 import { takeStep } from "../../extension/build/takeStep.mjs";
 
+// An exit, unlike a signal's own end, lets a running editor be taken down.
+for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.once(signal, () => process.exit(130));
+
 try {
   await takeStep("building", bundle);
   const { takePictures } = await importTypeScript("test/workbench/takePictures.ts");

@@ -32,31 +32,29 @@ export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
 }
 
 async function runHost(workbench: Workbench, folder: string): Promise<TestResult[]> {
-  const path = await bundleHostTests(folder);
   const results: TestResult[] = [];
   const log: string[] = [];
   const onLog = (line: string) => {
-    log.push(line);
     const at = line.indexOf(RESULT_MARK);
-    if (at >= 0) results.push(JSON.parse(line.slice(at + RESULT_MARK.length)));
+    if (at < 0) log.push(line);
+    else results.push(JSON.parse(line.slice(at + RESULT_MARK.length)));
   };
   try {
+    const tests = await bundleHostTests(folder);
     const exitCode = await workbench.runHostTests({
-      tests: path,
+      tests,
       emptyExtension: await makeEmptyExtension(),
       onLog,
       timeoutMs: HOST_TIMEOUT_MS,
     });
     const explained = exitCode === 0 || results.some(({ failure }) => failure !== undefined);
-    if (!explained) throw new Error(`It ended with exit code ${exitCode}.`);
+    if (!explained) throw new Error(`They ended with exit code ${exitCode}.`);
     if (results.length === 0) throw new Error("No tests ran.");
   } catch (error) {
-    const tail = log.filter((line) => !line.includes(RESULT_MARK)).slice(-20);
-    const failure = [
-      error instanceof Error ? error.message : String(error),
-      ...tail,
-      `The server's log is ${workbench.logFile}.`,
-    ].join("\n");
+    const hostLog = `${workbench.logFile}.host`;
+    await writeFile(hostLog, log.join("\n"));
+    const message = error instanceof Error ? error.message : String(error);
+    const failure = `${message}\nThe last log line: ${log.at(-1)}\nAll of the log: ${hostLog} and ${workbench.logFile}`;
     results.push({ title: "the tests in the extension host", failure });
   }
   return results;

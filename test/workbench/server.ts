@@ -3,12 +3,12 @@
 
 import { type ChildProcess, execFile, spawn } from "node:child_process";
 import { randomBytes } from "node:crypto";
-import { createWriteStream, mkdirSync, mkdtempSync, rmSync, writeFileSync } from "node:fs";
-import { tmpdir } from "node:os";
+import { createWriteStream, mkdirSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { promisify } from "node:util";
 import { type InstalledWorkbench, installWorkbench } from "./install.js";
 import { cacheFolder } from "./paths.js";
+import { makeTemporaryFolder } from "./temporaryFolder.js";
 
 const START_TIMEOUT_MS = 60_000;
 
@@ -40,7 +40,7 @@ export interface WorkbenchServer {
 
 export async function startServer({ settings, vsix, name, reconnectWithinS }: ServerOptions): Promise<WorkbenchServer> {
   const installed = await installWorkbench();
-  const data = mkdtempSync(join(tmpdir(), "loadmark-editor-"));
+  const { folder: data, remove } = makeTemporaryFolder("editor");
   const userFolder = join(data, "data/User");
   const writeSettings = (values: Readonly<Record<string, unknown>>) => {
     mkdirSync(userFolder, { recursive: true });
@@ -53,13 +53,12 @@ export async function startServer({ settings, vsix, name, reconnectWithinS }: Se
   const token = randomBytes(16).toString("hex");
   const grace = reconnectWithinS === undefined ? [] : ["--reconnection-grace-time", String(reconnectWithinS)];
   const child = launch(installed, ["--connection-token", token, "--server-data-dir", data, ...grace], logFile);
-  const removeData = () => rmSync(data, { recursive: true, force: true, maxRetries: 5 });
   const killOnExit = () => killGroup(child, "SIGKILL");
   process.once("exit", killOnExit);
   const stop = async () => {
     await end(child);
     process.off("exit", killOnExit);
-    removeData();
+    await remove();
   };
   try {
     const port = await waitForPort(child, logFile);

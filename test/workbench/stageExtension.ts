@@ -2,20 +2,15 @@
 // Code server is installed inside it, and VS Code takes any theme below the extension under development for that
 // extension's, and forces it upon the user.
 
-import { cp, mkdtemp, rm } from "node:fs/promises";
-import { tmpdir } from "node:os";
+import { cp } from "node:fs/promises";
 import { join } from "node:path";
 import { repositoryRoot } from "./paths.js";
+import { makeTemporaryFolder, type TemporaryFolder } from "./temporaryFolder.js";
 
 const PARTS = ["package.json", "README.md", "dist"];
 
-export interface StagedExtension {
-  readonly folder: string;
-  remove(): Promise<void>;
-}
-
-export async function stageExtension(): Promise<StagedExtension> {
-  const folder = await mkdtemp(join(tmpdir(), "loadmark-extension-"));
-  for (const part of PARTS) await cp(join(repositoryRoot, part), join(folder, part), { recursive: true });
-  return { folder, remove: () => rm(folder, { recursive: true, force: true, maxRetries: 5 }) };
+export async function stageExtension(): Promise<TemporaryFolder> {
+  const staged = makeTemporaryFolder("extension");
+  for (const part of PARTS) await cp(join(repositoryRoot, part), join(staged.folder, part), { recursive: true });
+  return staged;
 }

@@ -3,10 +3,11 @@
 
 import { type BrowserContext, chromium, type Page } from "playwright-core";
 import { Editor } from "./editor.js";
-import { copyFolder, type FolderCopy } from "./folderCopy.js";
+import { copyFolder } from "./folderCopy.js";
 import { startServer, type WorkbenchServer } from "./server.js";
 import { quietSettings } from "./settings.js";
 import { stageExtension } from "./stageExtension.js";
+import type { TemporaryFolder } from "./temporaryFolder.js";
 
 export type ExtensionMode = "development" | "installed";
 
@@ -102,7 +103,7 @@ async function drive(
 ): Promise<Omit<Workbench, "stop">> {
   const page = await context.newPage();
   page.on("dialog", (dialog) => void dialog.accept());
-  let copy: FolderCopy | undefined;
+  let copy: TemporaryFolder | undefined;
   // Leaving the page first ends its extension host, which would otherwise go on watching the folder that is removed.
   const leave = async () => {
     await page.goto("about:blank");
