@@ -92,7 +92,7 @@ const list: readonly Unit[] = [
     "ozf*in": OZF * INCH,
     "in*ozf": OZF * INCH,
   }),
-  ...of("speed", { "rad/s": 1, rpm: RPM, "rev/s": 2 * Math.PI, "deg/s": DEGREE }),
+  ...of("speed", { rpm: RPM, "rad/s": 1, "rev/s": 2 * Math.PI, "deg/s": DEGREE }),
   ...of("torqueConstant", {
     "N*m/A": 1,
     "mN*m/A": 1e-3,

@@ -45,11 +45,15 @@ export function suitableSymbol(si: number, dimension: Dimension): string {
 export function writeIn(si: number, symbol: string, digits = 3): string {
   // The degree sign of an angle stands against its number (ISO 80000-1); that of a temperature does not.
   const gap = symbol.startsWith("deg") && !/^deg[CF]/.test(symbol) ? "" : " ";
-  return `${writeNumber(numberIn(si, symbol), digits)}${gap}${typeset(symbol)}`;
+  return `${writeDigits(numberIn(si, symbol), digits)}${gap}${typeset(symbol)}`;
 }
 
 /** Three significant digits, no exponent between 1e-4 and 1e6, a true minus sign. */
-export function writeNumber(value: number, digits = 3): string {
+export function writeNumber(value: number): string {
+  return writeDigits(value, 3);
+}
+
+function writeDigits(value: number, digits: number): string {
   const rounded = Number(value.toPrecision(digits));
   const size = Math.abs(rounded);
   const text = size === 0 ? "0" : size >= 1e6 || size < 1e-4 ? rounded.toExponential() : String(rounded);
