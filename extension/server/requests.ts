@@ -51,7 +51,7 @@ export function answerRequests({ connection, guard, session, settings, capabilit
   connection.onHover(
     guard.answer("A hover", null, async ({ textDocument, position }) => {
       const current = await newestOf(textDocument.uri);
-      return current ? answerHover(current, position) : null;
+      return current ? answerHover(current, position, commands) : null;
     }),
   );
   connection.languages.inlayHint.on(
@@ -85,9 +85,10 @@ export function answerRequests({ connection, guard, session, settings, capabilit
     }),
   );
   connection.onWorkspaceSymbol(
-    guard.answer("Symbols", [], ({ query }) =>
-      session.result ? answerWorkspaceSymbols(session.result, query, (file) => texts.uriOf(file)) : [],
-    ),
+    guard.answer("Symbols", [], async ({ query }) => {
+      const result = await session.whenCurrent(PATIENCE_MS);
+      return result ? answerWorkspaceSymbols(result, query, (file) => texts.uriOf(file)) : [];
+    }),
   );
   connection.onRequest(
     FIND_PLACE,

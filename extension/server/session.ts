@@ -49,6 +49,9 @@ export class Session {
   #resultMoment = -1;
   #timer: { readonly handle: ReturnType<typeof setTimeout>; readonly due: number } | undefined;
   #running = false;
+  /** How many readings of the disk are under way or to come; what they find may change the result. The first is that of the workspace. */
+  #readings = 1;
+  #hasFolders = false;
   #waiting: (() => void)[] = [];
   #disposed = false;
 
@@ -78,23 +81,26 @@ export class Session {
   /** What counts now is the disk. */
   async close(uri: string): Promise<void> {
     const key = this.texts.close(uri);
-    await this.#files.refresh([key]);
+    await this.#reading(() => this.#files.refresh([key]));
     this.#schedule(0);
   }
 
   async handleFileEvents(events: readonly FileEvent[]): Promise<void> {
-    if (await this.#files.handle(events)) this.#schedule(TYPING_DELAY_MS);
+    if (await this.#reading(() => this.#files.handle(events))) this.#schedule(TYPING_DELAY_MS);
+    else this.#releaseIfCurrent();
   }
 
   /** Reads the workspace; the result follows when all of it is read. */
   async setFolders(folders: readonly string[]): Promise<void> {
-    await this.#files.setFolders(folders);
+    if (!this.#hasFolders) this.#readings -= 1;
+    this.#hasFolders = true;
+    await this.#reading(() => this.#files.setFolders(folders));
     this.#schedule(0);
   }
 
   /** The result for the texts of now, or the last one when that takes longer than the time given. */
   async whenCurrent(timeoutMs: number): Promise<Result | undefined> {
-    if (this.#resultMoment === this.#moment || this.#disposed) return this.#result;
+    if (this.#isCurrent() || this.#disposed) return this.#result;
     await new Promise<void>((resolve) => {
       const handle = setTimeout(resolve, timeoutMs);
       this.#waiting.push(() => {
@@ -137,8 +143,25 @@ export class Session {
       this.#resultMoment = this.#moment;
     } finally {
       this.#running = false;
-      if (this.#resultMoment === this.#moment) this.#release();
+      this.#releaseIfCurrent();
     }
+  }
+
+  async #reading<T>(read: () => Promise<T>): Promise<T> {
+    this.#readings += 1;
+    try {
+      return await read();
+    } finally {
+      this.#readings -= 1;
+    }
+  }
+
+  #isCurrent(): boolean {
+    return this.#resultMoment === this.#moment && this.#readings === 0;
+  }
+
+  #releaseIfCurrent(): void {
+    if (this.#isCurrent()) this.#release();
   }
 
   /** Ends early, without a result, when newer text is waiting for its turn. */

@@ -256,6 +256,7 @@ describe("a session", () => {
 
   it("gives those who ask the result of the newest text, or the last one in time", async () => {
     const { session, settle } = start();
+    await session.setFolders([]);
     session.open("file:///w/a.ts", 1, `${IMPORT}finding: a`);
     const first = session.whenCurrent(1000);
     await settle();
@@ -266,6 +267,17 @@ describe("a session", () => {
     await settle();
     expect((await early)?.analysis.findings[0]?.message).toBe("a");
     expect((await patient)?.analysis.findings[0]?.message).toBe("b");
+  });
+
+  it("lets those who ask wait for a workspace that is still being read", async () => {
+    const { session, settle, files } = start({ "/w/a.ts": `${IMPORT}finding: a`, "/w/b.ts": "export {};" });
+    files.beforeRead = () => new Promise((resolve) => setTimeout(resolve, 500));
+    void session.setFolders(["/w"]);
+    session.open("file:///w/b.ts", 1, "export {};");
+    await settle();
+    const asked = session.whenCurrent(2000);
+    await settle(1000);
+    expect((await asked)?.analysis.findings[0]?.message).toBe("a");
   });
 
   it("keeps few texts after an import was typed letter by letter", async () => {

@@ -1,13 +1,21 @@
-/** Hovers: Markdown whose links are the product's own commands. */
+/** Hovers: Markdown whose links are the product's own commands, as far as the client has them. */
 import { type Hover, MarkupKind, type Position } from "vscode-languageserver";
 import { hoverAt } from "../../features/hover.js";
 import type { CurrentFile } from "../current.js";
 
-export function answerHover(current: CurrentFile, position: Position): Hover | null {
+/** `commands`: those that the client has. */
+export function answerHover(current: CurrentFile, position: Position, commands: readonly string[]): Hover | null {
   const { result, file, lines } = current;
   const offset = current.carryBack(lines.offsetAt(position));
   const hover = offset === undefined ? undefined : hoverAt(result.analysis, file, offset, result.analyse);
   if (hover === undefined) return null;
-  const contents = { kind: MarkupKind.Markdown, value: hover.markdown };
+  const contents = { kind: MarkupKind.Markdown, value: withLinksTo(commands, hover.markdown) };
   return hover.span.file === file ? { contents, range: lines.rangeOf(current.carry(hover.span)) } : { contents };
+}
+
+/** Links stand in a row at the end. A name from source can't look like one: its brackets are escaped. */
+function withLinksTo(commands: readonly string[], markdown: string): string {
+  return markdown
+    .replaceAll(/\[[^\]\\]*\]\(command:([\w.]+)[^)]*\)(?: · )?/g, (link, command) => (commands.includes(command) ? link : ""))
+    .replace(/(?: · |\s+)$/, "");
 }

@@ -1,0 +1,67 @@
+/** What package.json promises to the editor, against the sources that must keep it. */
+import { existsSync, readdirSync, readFileSync } from "node:fs";
+import path from "node:path";
+import { describe, expect, it } from "vitest";
+
+const ROOT = path.join(import.meta.dirname, "../..");
+const manifest = JSON.parse(readFileSync(path.join(ROOT, "package.json"), "utf8"));
+const { contributes } = manifest;
+
+const client = readSources("extension/client");
+const protocol = readSources("extension/protocol");
+
+function readSources(room: string): string {
+  const names = readdirSync(path.join(ROOT, room)).filter((name) => name.endsWith(".ts"));
+  return names.map((name) => readFileSync(path.join(ROOT, room, name), "utf8")).join("\n");
+}
+
+describe("the manifest", () => {
+  it("contributes commands that the client registers, under one category", () => {
+    const commands: { command: string; category: string; title: string }[] = contributes.commands;
+    expect(commands.length).toBeGreaterThan(0);
+    for (const { command, category, title } of commands) {
+      expect(client + protocol, command).toContain(`"${command}"`);
+      expect(category).toBe("Loadmark");
+      expect(title).not.toMatch(/loadmark/i);
+    }
+  });
+
+  it("describes every setting, with a default, per folder", () => {
+    const settings: [string, Record<string, unknown>][] = Object.entries(contributes.configuration.properties);
+    expect(settings.length).toBeGreaterThan(0);
+    for (const [name, setting] of settings) {
+      expect(setting.markdownDescription, name).toEqual(expect.any(String));
+      expect(setting.scope, name).toBe("resource");
+      expect(setting.default, name).toBeDefined();
+      const { enum: values = [], enumDescriptions = [] } = setting as { enum?: string[]; enumDescriptions?: string[] };
+      expect(enumDescriptions, name).toHaveLength(values.length);
+    }
+  });
+
+  it("has the server's defaults", () => {
+    const source = readFileSync(path.join(ROOT, "extension/server/displaySettings.ts"), "utf8");
+    const { "loadmark.hints": hints, "loadmark.codeLens": codeLens } = contributes.configuration.properties;
+    expect(source).toContain(`DEFAULTS: DisplaySettings = { hints: "${hints.default}", codeLens: ${codeLens.default} }`);
+  });
+
+  it("hides the view where nothing is declared, and gives it an icon", () => {
+    const [view, ...more] = contributes.views.explorer;
+    expect(more).toEqual([]);
+    expect(view).toMatchObject({ id: "loadmark.mechanisms", when: "loadmark.hasMechanisms", icon: expect.any(String) });
+    expect(client).toContain('"loadmark.hasMechanisms"');
+    expect(client).toContain('"loadmark.mechanisms"');
+  });
+
+  it("names only files that are built or copied", () => {
+    for (const { url } of contributes.jsonValidation) {
+      expect(url).toBe("./dist/loadmark.schema.json");
+      expect(existsSync(path.join(ROOT, "extension/analysis", path.basename(url)))).toBe(true);
+    }
+  });
+
+  it("starts for languages and settings files alone, on the side of the workspace", () => {
+    expect(manifest.activationEvents).not.toContain("*");
+    expect(manifest.extensionKind).toEqual(["workspace"]);
+    expect(manifest.capabilities.untrustedWorkspaces.supported).toBe(true);
+  });
+});
