@@ -15,10 +15,12 @@ export interface Module {
   readonly root: Frame;
   /** Every answer of the snapshot that this module's values rest on. */
   readonly reads: Map<string, string | null | undefined>;
-  /** Files whose modules this module's values rest on. */
-  readonly imports: Set<string>;
+  /** Modules that this module's values rest on, as they were then. */
+  readonly imports: Set<Module>;
   readonly loads: Map<string, Loaded>;
   readonly exports: Map<string, Target>;
+  /** By function or loop, the runs that are known of it. */
+  readonly runs: Map<ts.Node, readonly Frame[]>;
 }
 
 /** One run through a file, a function's body or a loop's body: what its names stand for. */

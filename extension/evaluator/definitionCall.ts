@@ -67,6 +67,7 @@ function makeCall(
       ...(checked === undefined ? [tooDeep(node, frame.module)] : []),
     ],
     waitsFor: [...new Set(unknowns.flatMap(({ unknown }) => reporterOf(unknown) ?? []))],
+    ...(isOpenRun(ctx, node, frame) || own.some(({ unknown }) => isParameter(unknown)) ? { open: true } : {}),
     ...(binding === undefined ? {} : { binding }),
     leadingComments: findComments(ctx, node, frame.module),
   };
@@ -107,6 +108,23 @@ function reporterOf(part: Unknown): DefinitionCall | undefined {
     if (link.reportedBy !== undefined) return link.reportedBy;
   }
   return undefined;
+}
+
+/** Whether something around the node has parameters or a loop variable that the frame doesn't know. */
+function isOpenRun({ ts }: Context, node: ts.Node, frame: Frame): boolean {
+  const runs = new Set<ts.Node>();
+  for (let run: Frame | undefined = frame; run !== undefined; run = run.parent) runs.add(run.node);
+  const open = ts.findAncestor(node.parent, (each) => {
+    if (ts.isForOfStatement(each)) return !runs.has(each) && node.pos >= each.statement.pos;
+    return ts.isFunctionLike(each) && each.parameters.length > 0 && !runs.has(each);
+  });
+  return open !== undefined;
+}
+
+function isParameter(part: Unknown): boolean {
+  let root = part;
+  while (root.cause !== undefined) root = root.cause;
+  return root.reason.code === "parameter";
 }
 
 function calleeSpan({ ts }: Context, node: ts.CallExpression, { module }: Frame): DefinitionCall["callee"] {

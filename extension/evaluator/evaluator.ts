@@ -8,6 +8,7 @@ import type ts from "typescript";
 import { listActivations } from "./activations.js";
 import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
+import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
@@ -77,20 +78,21 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
   const { file, source } = module;
   ctx.depth = 0;
   ctx.steps = 0;
-  const calls: DefinitionCall[] = [];
+  const calls = new Set<DefinitionCall>();
+  const elsewhere = new Set<DefinitionCall>();
   let problem = source.unreadable ? unreadable(file) : undefined;
   for (const node of source.calls) {
     const found = evaluateAt(ctx, node, module);
-    if (Array.isArray(found)) calls.push(...found);
-    else problem ??= found;
+    if (!Array.isArray(found)) problem ??= found;
+    else for (const call of found) (call.span.file === file ? calls : elsewhere).add(call);
   }
-  const reached = listReached(ctx, module);
+  const reached = listReached(module);
   const reads = new Map([...reached].flatMap((each) => [...each.reads]));
   const having = (kind: (text: string | null | undefined) => boolean) =>
     [...reads].flatMap(([name, text]) => (kind(text) ? [name] : []));
   return {
     file,
-    calls,
+    calls: [...calls, ...elsewhere],
     dependencies: [...new Set([file, ...having((text) => typeof text === "string")])],
     wanted: having((text) => text === undefined),
     missing: having((text) => text === null),
@@ -102,7 +104,7 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
 function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): DefinitionCall[] | Unknown {
   try {
     const target = findTarget(ctx, node.expression, module);
-    if (target?.kind !== "definition") return [];
+    if (target?.kind !== "definition") return listCallsElsewhere(ctx, node, module);
     const frames: readonly Frame[] = listActivations(ctx, node, module);
     return frames.flatMap((frame) => evaluateDefinitionCall(ctx, target.definition, node, frame).call ?? []);
   } catch {
@@ -112,36 +114,31 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
   }
 }
 
-/** Forgets every module below `file` that rests on a text that is no longer what it was. */
+/** Forgets every module below `file` that rests on a text, or a module, that is no longer what it was. */
 function dropStale(ctx: Context, file: string, evaluations: Map<Module, FileEvaluation>): void {
   const start = ctx.modules.get(file);
   if (start === undefined) return;
-  const reached = listReached(ctx, start);
-  const users = new Map<string, Module[]>();
+  const users = new Map<Module, Module[]>();
   const stale: Module[] = [];
-  for (const module of reached) {
-    if ([...module.reads].some(([name, text]) => ctx.snapshot.read(name) !== text)) stale.push(module);
+  for (const module of listReached(start)) {
+    const isReplaced = ctx.modules.get(module.file) !== module;
+    if (isReplaced || [...module.reads].some(([name, text]) => ctx.snapshot.read(name) !== text)) stale.push(module);
     for (const used of module.imports) users.set(used, [...(users.get(used) ?? []), module]);
   }
   const dropped = new Set<Module>();
   for (let module = stale.pop(); module !== undefined; module = stale.pop()) {
     if (dropped.has(module)) continue;
     dropped.add(module);
-    ctx.modules.delete(module.file);
+    if (ctx.modules.get(module.file) === module) ctx.modules.delete(module.file);
     evaluations.delete(module);
-    stale.push(...(users.get(module.file) ?? []));
+    stale.push(...(users.get(module) ?? []));
   }
 }
 
 /** The module and everything that its values rest on. */
-function listReached(ctx: Context, start: Module): Set<Module> {
+function listReached(start: Module): Set<Module> {
   const reached = new Set([start]);
-  for (const module of reached) {
-    for (const file of module.imports) {
-      const next = ctx.modules.get(file);
-      if (next !== undefined) reached.add(next);
-    }
-  }
+  for (const module of reached) for (const used of module.imports) reached.add(used);
   return reached;
 }
 
@@ -159,6 +156,7 @@ function open(ctx: Context, sources: Map<string, Source>, file: string, text: st
     imports: new Set(),
     loads: new Map(),
     exports: new Map(),
+    runs: new Map(),
   };
   module.root = {
     module,

@@ -52,6 +52,7 @@ export function openCall(
 ): Frame | undefined {
   const { ts } = ctx;
   if (caller.height >= DEEPEST_CALL) return undefined;
+  if (node.parameters.length === 0) return openShared(frame, node);
   const turns = caller.children.get(call) ?? [];
   if (caller.height < DEEPEST_KEPT) caller.children.set(call, turns);
   const present = turns[turn];
@@ -68,6 +69,14 @@ export function openCall(
     if (ts.isIdentifier(parameter.name) && parameter.name.text === "this") continue;
     bindPattern(ctx, parameter, given, opened, bound);
   }
+  return opened;
+}
+
+/** The one frame of a function without parameters: every call of it gives the same. */
+export function openShared(frame: Frame, node: ts.FunctionLikeDeclaration): Frame {
+  const [kept] = frame.children.get(node) ?? [];
+  const opened = kept ?? openFrame(frame, node, new Map(), frame.height + 1);
+  frame.children.set(node, [opened]);
   return opened;
 }
 

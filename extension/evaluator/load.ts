@@ -27,7 +27,7 @@ function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded
   const answer = found === null ? ask(ctx, from, rest) : found;
   if (answer === undefined) return fail("unresolved-import", `${quoteText(specifier)} is not loaded yet.`, span);
   if (answer === null) return fail("unresolved-import", `${quoteText(specifier)} does not lead to a file.`, span);
-  from.imports.add(answer.file);
+  from.imports.add(answer);
   return { kind: "module", module: answer };
 }
 

@@ -121,6 +121,8 @@ export interface DefinitionCall {
   readonly unknowns: readonly Unknown[];
   /** Other calls whose own findings keep this one silent. */
   readonly waitsFor: readonly DefinitionCall[];
+  /** No known run reaches it: parameters or loop variables around it are unknown. */
+  readonly open?: true;
   /** The variable or property that the call initialises. */
   readonly binding?: { readonly name: string; readonly span: Span };
   /** The comments right above the statement or property that holds the call, in order. */
@@ -144,7 +146,10 @@ export interface Snapshot {
 /** What one file says. */
 export interface FileEvaluation {
   readonly file: string;
-  /** Every call to a definition in the file, in order of position (inner calls after the call that holds them). */
+  /**
+   * Every call to a definition in the file, in order of position (inner calls after the call that holds them), once for each known
+   * run of the function or loop around it; then the calls in helpers of other files that this file's calls reach.
+   */
   readonly calls: readonly DefinitionCall[];
   /** Files that this evaluation read, itself included. */
   readonly dependencies: readonly string[];
