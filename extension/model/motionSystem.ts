@@ -1,0 +1,109 @@
+/**
+ * One mechanism as a system of differential equations: motion, two temperatures, protection and the sums that reports need.
+ *
+ * Deliberately not here: choosing steps (integrate.ts) and what the course of a travel means (travelRun.ts).
+ */
+import { type HeatNetwork, heatNetworkOf } from "./heat.js";
+import { createInstant, type Instant } from "./instant.js";
+import type { OdeSystem } from "./integrate.js";
+import { moveAt } from "./motion.js";
+import { type Layout, layoutOf, type Mode } from "./motionLayout.js";
+import { motionRates } from "./motionRates.js";
+import { motionWatches, type WatchIndex } from "./motionWatches.js";
+import type { Plant } from "./plant.js";
+import { blockedAt, followAt, heldAt } from "./stillMotion.js";
+import { SHEET_TEMPERATURE_C } from "./temperature.js";
+
+export interface MotionSystem extends OdeSystem {
+  readonly layout: Layout;
+  readonly index: WatchIndex;
+  readonly network: HeatNetwork | null;
+  /** The instant at a point of the course; valid until the next call. */
+  readonly instantAt: (timeS: number, state: Float64Array) => Instant;
+  /** Current that the protection carries at an instant, A. */
+  readonly carried: (now: Instant) => number;
+  /** Progress (rad), or speed (rad/s) of a flywheel, at which the next stop stands. */
+  readonly setTarget: (target: number) => void;
+}
+
+/** Sizes that count as 1 for the tolerance: output shaft in rad and rad/s, s, A of one motor. */
+export interface MotionScales {
+  readonly progressRad: number;
+  readonly speedRadPerS: number;
+  readonly timeS: number;
+  readonly currentA: number;
+}
+
+/** Below this share of the speed scale it stands still. */
+const STANDSTILL_SHARE = 1e-9;
+const HEAT_SCALE_K = 100;
+
+export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): MotionSystem {
+  const layout = layoutOf(plant);
+  const network = heatNetworkOf(plant.motor);
+  const rates = motionRates(plant, layout, network);
+  const at = createInstant();
+  const released = createInstant();
+  let target = plant.spanRad;
+  const stillBelow = STANDSTILL_SHARE * scales.speedRadPerS;
+  const { watches, values, index } = motionWatches({ plant, mode, layout, network, rates, stillBelow, target: () => target });
+
+  function instantAt(timeS: number, state: Float64Array): Instant {
+    const windingC = layout.winding < 0 ? SHEET_TEMPERATURE_C : (state[layout.winding] as number);
+    const progress = state[layout.progress] as number;
+    switch (mode.kind) {
+      case "moving":
+        moveAt(plant, timeS, progress, state[layout.speed] as number, windingC, at);
+        break;
+      case "following":
+        followAt(plant, timeS, progress, windingC, at);
+        break;
+      case "held":
+        heldAt(plant, mode.torqueNm, windingC, at);
+        break;
+      case "blocked":
+        blockedAt(plant, timeS, windingC, at);
+        if (mode.startsAs === "moving") moveAt(plant, timeS, progress, 0, windingC, released);
+        if (mode.startsAs === "following") followAt(plant, timeS, progress, windingC, released);
+        at.startGap = released.startGap;
+    }
+    return at;
+  }
+
+  function watchInstant(state: Float64Array, now: Instant, watched: Float64Array): void {
+    for (let i = 0; i < values.length; i++) watched[i] = (values[i] as (typeof values)[number])(state, now);
+  }
+
+  return {
+    size: layout.size,
+    scale: scaleOf(plant, layout, scales),
+    watches,
+    layout,
+    index,
+    network,
+    instantAt,
+    carried: rates.carried,
+    setTarget: (value) => {
+      target = value;
+    },
+    evaluate: (timeS, state, out) => rates.fill(state, instantAt(timeS, state), out),
+    prepare: (timeS, state, start, watched) => {
+      const now = instantAt(timeS, state);
+      rates.fill(state, now, start.rates);
+      rates.differentiate(now, start.jacobian, start.timeRates);
+      watchInstant(state, now, watched);
+    },
+    watch: (timeS, state, watched) => watchInstant(state, instantAt(timeS, state), watched),
+  };
+}
+
+function scaleOf(plant: Plant, layout: Layout, scales: MotionScales): Float64Array {
+  const scale = new Float64Array(layout.size).fill(1);
+  scale[layout.progress] = scales.progressRad;
+  scale[layout.speed] = scales.speedRadPerS;
+  if (layout.winding >= 0) scale[layout.winding] = HEAT_SCALE_K;
+  if (layout.housing >= 0) scale[layout.housing] = HEAT_SCALE_K;
+  scale[layout.squares] = scales.currentA ** 2 * scales.timeS;
+  scale[layout.energy] = plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
+  return scale;
+}

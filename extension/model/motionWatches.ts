@@ -1,0 +1,119 @@
+/**
+ * What is watched while a mechanism moves: where its equations change formula, where its course ends, and what is to be told.
+ *
+ * Deliberately not here: what follows from it (travelRun.ts).
+ */
+import type { HeatNetwork } from "./heat.js";
+import type { Instant } from "./instant.js";
+import type { Watch } from "./integrate.js";
+import type { Layout, Mode } from "./motionLayout.js";
+import type { MotionRates } from "./motionRates.js";
+import type { Plant } from "./plant.js";
+import { fuseGates } from "./protection.js";
+import { rateAlong } from "./supplyCurrent.js";
+
+/** Indices of the watches that a course acts on; −1: not watched. */
+export interface WatchIndex {
+  /** Progress reaches the target. */
+  readonly arrival: number;
+  readonly standstill: number;
+  /** A flywheel reaches the target speed. */
+  readonly targetSpeed: number;
+  /** A blocked mechanism would start. */
+  readonly breakaway: number;
+  /** A fuse's current falls below its first gate. */
+  readonly fuseReset: number;
+  readonly currentPeak: number;
+  readonly supplyPeak: number;
+  readonly windingPeak: number;
+  readonly windingLimit: number;
+  readonly opens: number;
+  readonly mayOpen: number;
+  /** The supply crosses the voltage that it must stay above. */
+  readonly floor: number;
+}
+
+export type WatchValue = (state: Float64Array, now: Instant) => number;
+
+export interface MotionWatches {
+  readonly watches: readonly Watch[];
+  readonly values: readonly WatchValue[];
+  readonly index: WatchIndex;
+}
+
+export interface WatchedThings {
+  readonly plant: Plant;
+  readonly mode: Mode;
+  readonly layout: Layout;
+  readonly network: HeatNetwork | null;
+  readonly rates: MotionRates;
+  /** Output speed below which it stands still, rad/s. */
+  readonly stillBelow: number;
+  /** Progress (rad) or, for a flywheel, speed (rad/s) to reach. */
+  readonly target: () => number;
+}
+
+const KINK: Watch = { kind: "kink", crosses: "both" };
+
+export function motionWatches({ plant, mode, layout, network, rates, stillBelow, target }: WatchedThings): MotionWatches {
+  const watches: Watch[] = [];
+  const values: WatchValue[] = [];
+  const listen = (present: boolean, watch: Watch, value: WatchValue): number => {
+    if (!present) return -1;
+    values.push(value);
+    return watches.push(watch) - 1;
+  };
+  const { protection, supply } = plant.drive;
+  const { motor } = plant;
+  const moving = mode.kind === "moving";
+  const turning = moving || mode.kind === "following";
+  const fuse = protection?.kind === "fuse" ? protection : null;
+  const floorV = supply?.mustStayAbove?.voltageV;
+  const flywheel = plant.load.kind === "flywheel";
+
+  listen(Number.isFinite(plant.limitA) && mode.kind !== "held", KINK, (_, now) => now.limitGap);
+  listen(turning && motor.backEmfVPerRadPerS > motor.torqueConstantNmPerA, KINK, (_, now) => now.drivenGap);
+  listen(turning && plant.train.efficiency < 1, KINK, (_, now) => now.trainGap);
+  listen(moving && plant.load.traction !== undefined, KINK, (_, now) => now.gripGap);
+  listen(turning, KINK, (_, now) => now.supplyA);
+  for (const [multiple] of fuse ? fuseGates(fuse.ratingA).slice(1) : []) {
+    listen(true, KINK, (_, now) => rates.carried(now) - multiple * (fuse?.ratingA ?? 0));
+  }
+
+  const stop = (crosses: Watch["crosses"]): Watch => ({ kind: "stop", crosses });
+  const note = (crosses: Watch["crosses"]): Watch => ({ kind: "note", crosses });
+  const component = (watch: Watch, index: number): Watch => ({ ...watch, component: index });
+  const rateOf =
+    (by: "currentBy" | "supplyBy"): WatchValue =>
+    (at, now) =>
+      rateAlong(now, now[by], rates.windingRate(at, now));
+  const index: WatchIndex = {
+    arrival: listen(turning && !plant.load.endless, component(stop("up"), 0), (at) => (at[0] as number) - target()),
+    standstill: moving
+      ? listen(true, component(stop("down"), 1), (at) => (at[1] as number) - stillBelow)
+      : listen(turning, stop("down"), (_, now) => now.startGap / plant.train.ratio - stillBelow),
+    targetSpeed: listen(moving && flywheel, component(stop("up"), 1), (at) => (at[1] as number) - target()),
+    breakaway: listen(mode.kind === "blocked" && mode.startsAs !== undefined, stop("up"), (_, now) => now.startGap),
+    fuseReset: listen(
+      fuse !== null,
+      stop("down"),
+      (_, now) => rates.carried(now) - (fuse ? (fuseGates(fuse.ratingA)[0]?.[0] ?? 1) * fuse.ratingA : 0),
+    ),
+    currentPeak: listen(true, note("down"), rateOf("currentBy")),
+    supplyPeak: listen(true, note("down"), rateOf("supplyBy")),
+    windingPeak: listen(network !== null, note("down"), rates.windingRate),
+    windingLimit: listen(
+      network !== null,
+      component(note("up"), layout.winding),
+      (at) => (at[layout.winding] as number) - (network?.limitC ?? 0),
+    ),
+    opens: listen(
+      protection !== undefined,
+      component(note("up"), layout.protection),
+      (at) => (at[layout.protection] as number) - 1,
+    ),
+    mayOpen: listen(fuse !== null, component(note("up"), layout.fast), (at) => (at[layout.fast] as number) - 1),
+    floor: listen(floorV !== undefined, note("both"), (_, now) => now.supplyV - (floorV ?? 0)),
+  };
+  return { watches, values, index };
+}

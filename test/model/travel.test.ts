@@ -1,0 +1,114 @@
+/** Travel against two general solvers on the same physics written a second time, for seeded random mechanisms of every load kind. */
+import { describe, expect, it } from "vitest";
+import type { Drive, Load } from "../../extension/model/drive.js";
+import { solveTravel } from "../../extension/model/travel.js";
+import { driveOf, plainMotor, reduction } from "./drives.js";
+import "./expectShare.js";
+import { solveByOdex } from "./generalSolvers.js";
+import { PLAIN, plainInstant, plainSpan, plainStart } from "./plainEquations.js";
+import { seeded } from "./seeded.js";
+
+const makers: Record<string, (random: (low: number, high: number) => number) => Load> = {
+  lift: (random) => ({
+    kind: "lift",
+    massKg: random(2, 12),
+    drumRadiusM: random(0.02, 0.06),
+    travelM: random(0.3, 2),
+    slopeRad: random(0.3, 1.57),
+    carriagePerRope: 1,
+    counterbalanceN: random(0, 10),
+    frictionForceN: random(0, 5),
+  }),
+  arm: (random) => ({
+    kind: "arm",
+    massKg: random(1, 4),
+    centreOfMassM: random(0.2, 0.5),
+    fromRad: random(-1.5, -0.5),
+    toRad: random(0.8, 2),
+    slopeRad: Math.PI / 2,
+    inertiaKgM2: random(0.2, 0.8),
+    counterbalanceNm: [
+      [-2, random(-2, 2)],
+      [0, random(-2, 2)],
+      [2, random(-2, 2)],
+    ],
+  }),
+  wheels: (random) => ({
+    kind: "wheels",
+    massKg: random(5, 20),
+    radiusM: random(0.03, 0.08),
+    grip: random(0.15, 0.9),
+    rolling: random(0, 0.02),
+    slopeRad: random(-0.05, 0.05),
+    distanceM: random(1, 5),
+    drivenShare: random(0.5, 1),
+    inertiaKgM2: random(0, 0.001),
+  }),
+  screw: (random) => ({
+    kind: "screw",
+    forceN: random(20, 300),
+    leadM: random(0.002, 0.008),
+    meanDiameterM: random(0.008, 0.016),
+    friction: random(0.05, 0.2),
+    travelM: random(0.05, 0.3),
+    threadAngleRad: random(0, 0.3),
+    massKg: random(1, 10),
+  }),
+  loadCurve: (random) => ({
+    kind: "loadCurve",
+    torqueNm: [
+      [0, random(-5, 5)],
+      [1, random(-5, 10)],
+      [2.5, random(-5, 10)],
+      [4, random(-5, 5)],
+    ],
+    inertiaKgM2: [
+      [0, random(0.05, 0.3)],
+      [2, random(0.05, 0.3)],
+      [4, random(0.05, 0.3)],
+    ],
+  }),
+};
+
+const thermal = { windingToHousingKPerW: 3, housingToAmbientKPerW: 9, windingTimeS: 4, housingTimeS: 300, limitC: 130 };
+
+/** Ten mechanisms, two of each kind, with a different mix of options each. */
+const mechanisms = Object.keys(makers).flatMap((kind, k) =>
+  [0, 1].map((i) => {
+    const random = seeded(100 + 10 * k + i);
+    const load = (makers[kind] as (typeof makers)[string])(random);
+    const efficiency = random(0.6, 0.95);
+    const drive: Drive = driveOf({
+      motor: { ...plainMotor, rotorInertiaKgM2: random(1e-6, 2e-5), ...(i === 0 && { thermal, magnet: "ferrite" as const }) },
+      motorCount: 1 + i,
+      stages: [reduction(load.kind === "screw" ? 2 : random(15, 30), efficiency, 1e-5), reduction(random(1, 2), 0.97)],
+      load,
+      dragNm: random(0, 0.2),
+      wiringOhm: 0.01,
+      supply: { openCircuitV: 12.6, resistanceOhm: 0.03, peukert: 1 },
+      protection: { kind: "breaker", holdCurrentA: 8, tripsAtA: 16, tripsAfterS: 2, carries: i === 0 ? "motor" : "supply" },
+      rampS: i === 0 ? 0.1 : 0,
+      ...(i === 1 && { motorCurrentLimitA: random(15, 30), pwmDuty: 0.9 }),
+    });
+    return [`${kind} ${i + 1}`, drive] as const;
+  }),
+);
+
+describe.each(mechanisms)("travel of %s", (_, drive) => {
+  const travel = solveTravel(drive);
+  const timeS = travel?.timeS ?? 0;
+
+  it("agrees with odex to 1e-8", () => {
+    expect(travel?.outcome).toBe("arrives");
+    const plain = solveByOdex((t, y) => plainInstant(drive, t, y).rates, plainStart(drive), timeS, 1e-12);
+    const speed = plain[PLAIN.speed] ?? 0;
+    // An error of the time shows as a way that is missing at that time.
+    expect((plain[PLAIN.progress] ?? 0) / speed - plainSpan(drive.load) / speed).toBeLessThan(1e-8 * timeS);
+    expect(plain[PLAIN.progress]).toBeCloseToShare(plainSpan(drive.load), 1e-8);
+    expect(Math.sqrt((plain[PLAIN.squares] ?? 0) / timeS)).toBeCloseToShare(travel?.rmsMotorCurrentA ?? 0, 1e-8);
+    expect(plain[PLAIN.energy]).toBeCloseToShare(travel?.sourceEnergyJ ?? 0, 1e-8);
+    expect(plain[PLAIN.replica]).toBeCloseToShare(travel?.carried.protection ?? 0, 1e-8);
+    expect(plain[PLAIN.winding]).toBeCloseToShare(travel?.carried.windingC ?? 0, 1e-8);
+    expect(plain[PLAIN.housing]).toBeCloseToShare(travel?.carried.housingC ?? 0, 1e-8);
+  });
+});
