@@ -6,6 +6,7 @@ import { writeNumber, writeQuantity } from "../units/write.js";
 export function tellAssumptions(
   mechanism: Mechanism,
   robot: Robot | undefined,
+  corners: number,
 ): { readonly assumed: readonly string[]; readonly notChecked: readonly string[] } {
   const { motor, stages, si } = mechanism;
   const assumed = ["Motor at the 25 °C of its sheet."];
@@ -18,6 +19,8 @@ export function tellAssumptions(
   if (mechanism.supply === undefined && robot === undefined) {
     assumed.push(`An ideal supply of ${writeQuantity(si.motor.voltageV, "voltage")}: no battery is declared.`);
   }
+  if (corners > 0)
+    assumed.push(`Numbers are for the middle of each range; findings are for the worst of ${corners} combinations of ends.`);
   const notChecked: string[] = [];
   return { assumed, notChecked };
 }

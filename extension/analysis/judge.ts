@@ -1,76 +1,108 @@
 /**
  * Runs the model over every declared mechanism and the rules over its numbers.
  *
- * Numbers are kept by the identity of the declared object, which the evaluator keeps while nothing that it depends on changes.
+ * Results are kept by the identity of the declared object, which the evaluator keeps while nothing that it depends on changes.
  */
 import type { Mechanism } from "../declarations/mechanism.js";
-import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, Span } from "../evaluator/value.js";
-import type { Drive, Supply } from "../model/drive.js";
-import type { MechanismNumbers } from "../model/numbers.js";
+import type { Supply } from "../model/drive.js";
 import { solveMechanism } from "../model/solve.js";
-import type { Verdict } from "../rules/rule.js";
+import type { MechanismFacts, MechanismRule, RuleId, Verdict } from "../rules/rule.js";
 import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
-import type { AnalysedMechanism, Finding } from "./analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
+import { type Corner, cornersOf } from "./corners.js";
 import type { Declared } from "./declared.js";
-import { spanAt } from "./places.js";
+import { spanAt, valueAt } from "./places.js";
 
 export interface Judged {
   readonly mechanisms: readonly AnalysedMechanism[];
   readonly findings: readonly Finding[];
 }
 
+/** What is known of one mechanism on one supply. */
 interface Solved {
-  readonly drive: Drive;
-  readonly numbers: MechanismNumbers;
+  readonly supply: Supply | undefined;
+  readonly nominal: MechanismFacts;
+  readonly corners: readonly (MechanismFacts & Pick<Corner, "told">)[];
 }
 
 export function createJudge(): (declared: Declared) => Judged {
   const solved = new WeakMap<Mechanism, Solved>();
-  const solve = (mechanism: Mechanism, supply: Supply | undefined): Solved => {
+  const solve = (mechanism: Mechanism, call: DefinitionCall, robot: AnalysedRobot | undefined): Solved => {
+    const lent = mechanism.si.supply === undefined ? robot : undefined;
+    const supply = lent?.declared.supply.si;
     const before = solved.get(mechanism);
-    if (before !== undefined && before.drive.supply === supply) return before;
-    const drive = supply === undefined ? mechanism.si : { ...mechanism.si, supply };
-    const result = { drive, numbers: solveMechanism(drive) };
+    if (before !== undefined && before.supply === supply) return before;
+    const corners = cornersOf(call, lent && supplyCallOf(lent));
+    const result = {
+      supply,
+      nominal: factsOf(mechanism, supply),
+      corners: corners.map((corner) => ({ ...factsOf(corner.mechanism, corner.supply ?? supply), told: corner.told })),
+    };
     solved.set(mechanism, result);
     return result;
   };
-  return (declared) => {
+  return ({ mechanisms, motors, robots }) => {
     const findings: Finding[] = [];
-    const mechanisms = declared.mechanisms.map((one): AnalysedMechanism => {
-      const mechanism = one.declared;
-      if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
-      if (isImpossible(mechanism.motor))
-        return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
-      const robot = robotOf(
-        mechanism,
-        declared.robots.map((each) => each.declared),
-      );
-      const { drive, numbers } = solve(mechanism, mechanism.si.supply ?? robot?.supply.si);
-      const silenced = new Set<string>();
-      for (const rule of MECHANISM_RULES) {
-        if (silenced.has(rule.id)) continue;
-        const verdict = rule.judge({ mechanism, drive, numbers });
-        if (verdict === undefined) continue;
-        for (const other of rule.silences) silenced.add(other);
-        findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
-      }
-      return { ...one, numbers, ...tellAssumptions(mechanism, robot) };
-    });
-    for (const { declared: motor, at, call } of declared.motors) {
-      for (const rule of MOTOR_RULES) {
-        const verdict = rule.judge(motor);
-        if (verdict !== undefined) findings.push(toFinding(rule, verdict, at, call, null));
-      }
-    }
-    return { mechanisms, findings };
+    return {
+      mechanisms: mechanisms.map((one): AnalysedMechanism => {
+        const mechanism = one.declared;
+        if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
+        if (isImpossible(mechanism.motor)) {
+          return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
+        }
+        const robot = robotOf(mechanism, robots);
+        const facts = solve(mechanism, one.call, robot);
+        for (const { rule, verdict } of judgeMechanism(facts))
+          findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
+        return { ...one, numbers: facts.nominal.numbers, ...tellAssumptions(mechanism, robot?.declared, facts.corners.length) };
+      }),
+      findings: [...findings, ...motors.flatMap(({ declared, at, call }) => judgeMotor(declared, at, call))],
+    };
   };
 }
 
+function factsOf(mechanism: Mechanism, supply: Supply | undefined): MechanismFacts {
+  const drive = supply === undefined ? mechanism.si : { ...mechanism.si, supply };
+  return { mechanism, drive, numbers: solveMechanism(drive) };
+}
+
+/** Every rule at its own worst corner; a rule that speaks silences others. */
+function judgeMechanism({ nominal, corners }: Solved): { readonly rule: MechanismRule; readonly verdict: Verdict }[] {
+  const silenced = new Set<RuleId>();
+  return MECHANISM_RULES.flatMap((rule) => {
+    if (silenced.has(rule.id)) return [];
+    const verdict = worstVerdict(rule, nominal, corners);
+    if (verdict === undefined) return [];
+    for (const other of rule.silences) silenced.add(other);
+    return [{ rule, verdict }];
+  });
+}
+
+function worstVerdict(rule: MechanismRule, nominal: MechanismFacts, corners: Solved["corners"]): Verdict | undefined {
+  if (corners.length === 0) return rule.judge(nominal);
+  return corners
+    .flatMap((corner) => {
+      const verdict = rule.judge(corner);
+      return verdict === undefined ? [] : [{ ...verdict, message: `${verdict.message} (With ${corner.told}.)` }];
+    })
+    .reduce<Verdict | undefined>(
+      (worst, verdict) => (worst === undefined || verdict.excess > worst.excess ? verdict : worst),
+      undefined,
+    );
+}
+
+function judgeMotor(motor: Mechanism["motor"], at: Span, call: DefinitionCall): Finding[] {
+  return MOTOR_RULES.flatMap((rule) => {
+    const verdict = rule.judge(motor);
+    return verdict === undefined ? [] : [toFinding(rule, verdict, at, call, null)];
+  });
+}
+
 function toFinding(
-  rule: Pick<Finding, "level"> & { readonly id: Finding["rule"] },
+  rule: Pick<MechanismRule, "id" | "level">,
   verdict: Verdict,
   at: Span,
   call: DefinitionCall,
@@ -85,9 +117,15 @@ function toFinding(
 }
 
 /** The one robot that lists the mechanism; with several, none of them is assumed. */
-function robotOf(mechanism: Mechanism, robots: readonly Robot[]): Robot | undefined {
-  const listing = robots.filter((robot) => robot.mechanisms.includes(mechanism));
+function robotOf(mechanism: Mechanism, robots: readonly AnalysedRobot[]): AnalysedRobot | undefined {
+  const listing = robots.filter((robot) => robot.declared.mechanisms.includes(mechanism));
   return listing.length === 1 ? listing[0] : undefined;
+}
+
+function supplyCallOf({ call }: AnalysedRobot): DefinitionCall | undefined {
+  const argument = call.args[1];
+  const value = argument === undefined ? undefined : valueAt(argument, ["supply"]);
+  return value?.known && value.data.kind === "built" ? value.data.call : undefined;
 }
 
 function tellWhyUnknown(call: DefinitionCall): string {

@@ -13,6 +13,7 @@ function judge(facts: MechanismFacts): Verdict | undefined {
     message:
       `Beyond its speed: ${writeQuantity(speed.asked / ratio, "speed")} is asked of the output, but the motor turns it at no more than ` +
       `${writeQuantity(speed.reached / ratio, "speed")} under this load. ${wayOut(facts, speed.asked / speed.reached)}`,
+    excess: speed.asked / Math.max(speed.reached, Number.MIN_VALUE),
     blames: [["load"], ["stages"]],
   };
 }

@@ -17,6 +17,7 @@ function judge(facts: MechanismFacts): Verdict | undefined {
     message:
       `Little headroom: ${writeQuantity(speed.asked / ratio, "speed")} is ${writeShare(speed.asked / speed.reached)} of the ` +
       `${writeQuantity(speed.reached / ratio, "speed")} that the motor reaches, so a sagging supply will not hold it. Lower the speed or the ratio a little.`,
+    excess: speed.asked / speed.reached,
     blames: [["load"]],
   };
 }

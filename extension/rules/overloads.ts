@@ -16,6 +16,7 @@ function judgeRating({ mechanism, numbers }: MechanismFacts): Verdict | undefine
     message:
       `Overloads its motor: ${writeQuantity(needed, "torque")} needed, ${writeQuantity(rated, "torque")} rated. ` +
       `A ratio of at least ${writeNumber(mechanism.ratio * (needed / rated))} instead of ${writeNumber(mechanism.ratio)} stays within the rating.`,
+    excess: needed / rated,
     blames: [["stages"], ["motor"]],
   };
 }
@@ -40,6 +41,7 @@ function judgeStages({ mechanism, drive, numbers }: MechanismFacts): Verdict | u
         (running > stage.maxTorqueNm
           ? "Take a stronger stage, or move ratio behind it."
           : `A motor current limit of ${writeQuantity(limitFor(mechanism.motor.si, stage.maxTorqueNm / gain), "current")} keeps it safe.`),
+      excess: Math.max(running, blocked) / stage.maxTorqueNm,
       blames: [["stages", index]],
     };
   }

@@ -22,6 +22,7 @@ function judge({ mechanism, numbers }: MechanismFacts): Verdict | undefined {
       `Past its peak of power: each motor gives ${writeQuantity(hardest.motorTorqueNm, "torque")}, ` +
       `${writeShare(hardest.stallShare)} of the ${writeQuantity(available.stallTorqueNm, "torque")} at which it stalls. ` +
       `A ratio of at least ${writeNumber(ratio)} instead of ${writeNumber(mechanism.ratio)} takes it back below half.`,
+    excess: hardest.stallShare / PEAK_SHARE,
     blames: [["stages"], ["motor"]],
   };
 }

@@ -38,6 +38,8 @@ export interface MechanismFacts {
 /** What a rule has to say: the two numbers that it compares, with units, and one way out. */
 export interface Verdict {
   readonly message: string;
+  /** How bad it is, to find the worst corner of ranges: what is compared over its limit; only compared within one rule. */
+  readonly excess: number;
   /** Fields of the declaration that the message speaks of, from the argument object inwards: `["within"]`. */
   readonly blames?: readonly (readonly (string | number)[])[];
   /** A level other than the rule's own. */

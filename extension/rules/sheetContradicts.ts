@@ -21,6 +21,7 @@ function judge(motor: Motor): Verdict | undefined {
       message:
         `The sheet contradicts itself: a no-load current of ${writeQuantity(noLoadCurrentA, "current")} leaves nothing of the ` +
         `${writeQuantity(stallCurrentA, "current")} at stall to turn the motor. Check both currents.`,
+      excess: 1,
       blames: [["noLoad", "current"], ["noLoadCurrent"], ["stall", "current"]],
     };
   }
@@ -30,6 +31,7 @@ function judge(motor: Motor): Verdict | undefined {
         `The sheet contradicts itself: ${writeNumber(torqueConstantNmPerA)} N·m per ampere at stall, but only ` +
         `${writeNumber(backEmfVPerRadPerS)} V·s/rad from the no-load speed, so more power would come out than goes in. ` +
         "Check the stall torque, the stall current and the no-load speed.",
+      excess: 1,
       blames: [
         ["stall", "torque"],
         ["noLoad", "speed"],
@@ -42,6 +44,7 @@ function judge(motor: Motor): Verdict | undefined {
       message:
         `The sheet contradicts itself: a rated torque of ${writeQuantity(rated.torqueNm, "torque")} is above the stall torque of ` +
         `${writeQuantity(stallTorqueNm, "torque")}. Check both.`,
+      excess: 1,
       blames: [["rated", "torque"]],
     };
   }

@@ -13,6 +13,7 @@ function judge({ drive, numbers }: MechanismFacts): Verdict | undefined {
     message:
       `The wheels slip at ${writeQuantity(slip.motorCurrentA, "current")} per motor, before the motors stall at ` +
       `${writeQuantity(numbers.stall.motorCurrentA, "current")}. A motor current limit just below it saves current and tyres.`,
+    excess: numbers.available.stallTorqueNm / slip.motorTorqueNm,
     blames: [["load"]],
   };
 }

@@ -13,23 +13,26 @@ export const stalls: MechanismRule = {
 function judge({ mechanism, numbers }: MechanismFacts): Verdict | undefined {
   const { hardest, available } = numbers;
   if (hardest.limitedBy === "grip" && hardest.motorSpeedRadPerS === 0) {
-    return { message: gripMessage(mechanism), blames: [["load"]] };
+    return { message: gripMessage(mechanism), excess: Number.MAX_VALUE, blames: [["load"]] };
   }
   if (hardest.motorSpeedRadPerS > 0) return undefined;
+  const excess = hardest.motorTorqueNm / available.stallTorqueNm;
   const needed = writeQuantity(hardest.motorTorqueNm, "torque");
   if (hardest.limitedBy === "limit") {
     const limit = writeQuantity(mechanism.si.motorCurrentLimitA ?? 0, "current");
     return {
       message: `Stalls: each motor must give ${needed}, more than its current limit of ${limit} allows. Raise the limit or the ratio.`,
+      excess,
       blames: [["motorCurrentLimit"]],
     };
   }
   // Half of the stall torque is where output power peaks: a ratio to aim at, not a bare escape from stalling.
-  const ratio = scaledRatio(mechanism, hardest.motorTorqueNm / available.stallTorqueNm / 0.5);
+  const ratio = scaledRatio(mechanism, excess / 0.5);
   return {
     message:
       `Stalls: each motor must give ${needed}, but stalls at ${writeQuantity(available.stallTorqueNm, "torque")}. ` +
       `A ratio of ${writeNumber(ratio)} instead of ${writeNumber(mechanism.ratio)} would bring it to its peak of power.`,
+    excess,
     blames: [["stages"], ["motor"]],
   };
 }
