@@ -44,7 +44,8 @@ export const targets = [
     outfile: "declarations/index.js",
     options: { platform: "neutral", target: "es2023", format: "esm" },
   },
-  { entry: "webview/main.ts", outfile: "webview/main.js", later: true, options: { ...browser, format: "iife" } },
+  { entry: "webview/main.ts", outfile: "webview/main.js", options: { ...browser, format: "iife" } },
+  { entry: "webview/panel.css", outfile: "webview/panel.css", options: browser },
 ];
 
 /** Files that go into dist/ as they are: from the repository's root, to the path inside dist/. */

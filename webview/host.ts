@@ -1,0 +1,38 @@
+/** The page's end of the wire: the editor's functions for this page, with every message checked. Keeps them to itself. */
+import { type HostMessage, hostMessageSchema, type PageMessage } from "../extension/protocol/chartMessages.js";
+import { type ChartView, chartViewSchema, NO_VIEW } from "../extension/protocol/chartView.js";
+import { readMessage } from "../extension/protocol/readMessage.js";
+
+interface EditorApi {
+  postMessage(message: unknown): void;
+  getState(): unknown;
+  setState(state: unknown): void;
+}
+
+declare function acquireVsCodeApi(): EditorApi;
+
+export interface Host {
+  send(message: PageMessage): void;
+  /** What was remembered; nothing where it cannot be read. */
+  recall(): ChartView;
+  remember(view: ChartView): void;
+  listen(onMessage: (message: HostMessage) => void): void;
+}
+
+/** To be called once: the editor hands its functions out once. */
+export function connectHost(): Host {
+  const api = acquireVsCodeApi();
+  const send = (message: PageMessage): void => api.postMessage(message);
+  return {
+    send,
+    recall: () => readMessage(chartViewSchema, api.getState()) ?? NO_VIEW,
+    remember: (view) => api.setState(view),
+    listen(onMessage) {
+      window.addEventListener("message", ({ data }: MessageEvent<unknown>) => {
+        const message = readMessage(hostMessageSchema, data);
+        if (message !== undefined) onMessage(message);
+        else send({ type: "trouble", what: "The chart's page got a message that it does not know, and ignored it." });
+      });
+    },
+  };
+}

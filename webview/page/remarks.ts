@@ -1,0 +1,33 @@
+/** Findings, assumptions and what was not checked, as lists of sentences. */
+import type { ChartFinding } from "../../extension/protocol/chart.js";
+import { element } from "./element.js";
+
+const LEVEL: Readonly<Record<ChartFinding["level"], string>> = {
+  error: "Error",
+  warning: "Warning",
+  information: "Note",
+};
+
+export function showFindings(list: HTMLElement, findings: readonly ChartFinding[]): void {
+  list.hidden = findings.length === 0;
+  list.replaceChildren(
+    ...findings.map(({ level, message }) =>
+      element("li", { class: level }, [
+        element("span", { class: "level", text: `${LEVEL[level]}: ` }),
+        element("span", { text: message }),
+      ]),
+    ),
+  );
+}
+
+export function showSentences(section: HTMLElement, title: string, sentences: readonly string[]): void {
+  section.hidden = sentences.length === 0;
+  section.replaceChildren(
+    element("h2", { text: title }),
+    element(
+      "ul",
+      {},
+      sentences.map((text) => element("li", { text })),
+    ),
+  );
+}

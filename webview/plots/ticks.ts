@@ -1,0 +1,48 @@
+/**
+ * Round numbers along an axis that starts at 0.
+ *
+ * Finite numbers of any size give finite, rising ticks. Does not know units and writes no text.
+ */
+
+export interface Scale {
+  readonly max: number;
+  /** From 0 on, rising. */
+  readonly ticks: readonly number[];
+}
+
+const MULTIPLES = [1, 2, 2.5, 5, 10];
+const INTERVALS = [4, 5, 6];
+
+/** Scales with the same number of intervals, so that one grid serves all; each ends at a tick not below its value. */
+export function alignedScales(greatest: readonly number[]): readonly Scale[] {
+  const choices = INTERVALS.map((intervals) => greatest.map((value) => scaleOf(intervals, roundStep(value / intervals))));
+  const waste = (scales: readonly Scale[]): number =>
+    scales.reduce((sum, { max }, index) => sum + max / (positive(greatest[index]) ?? max), 0);
+  return choices.reduce((best, scales) => (waste(scales) < waste(best) ? scales : best));
+}
+
+/** Ticks inside an axis that ends where it must. */
+export function ticksWithin(max: number): readonly number[] {
+  const step = roundStep(max / 6);
+  return scaleOf(Math.floor(max / step + 1e-9), step).ticks;
+}
+
+function scaleOf(intervals: number, step: number): Scale {
+  // Twelve digits take off what 3 · 0.1 has too much.
+  const ticks = Array.from({ length: intervals + 1 }, (_, index) => Number((index * step).toPrecision(12)));
+  return { max: ticks.at(-1) ?? step, ticks };
+}
+
+/** The least round step that is not below a value; 1 where there is nothing to show. */
+function roundStep(value: number): number {
+  const size = positive(value);
+  if (size === undefined) return 1;
+  const decade = 10 ** Math.floor(Math.log10(size));
+  const multiple = MULTIPLES.find((candidate) => candidate * decade >= size * (1 - 1e-9)) ?? 10;
+  const step = multiple * decade;
+  return step > 0 && Number.isFinite(step * 6) ? step : size;
+}
+
+function positive(value: number | undefined): number | undefined {
+  return value !== undefined && value > 0 && Number.isFinite(value) ? value : undefined;
+}

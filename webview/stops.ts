@@ -1,0 +1,52 @@
+/**
+ * Where the cursor can stand along the torque axis, and what is known there; the rows of table and file too.
+ *
+ * Only points that were computed: nothing is interpolated.
+ */
+import type { ChartSample, OperatingPointChart } from "../extension/protocol/chart.js";
+
+export interface Stop extends ChartSample {
+  readonly shareOfStall: number | null;
+  /** What the torque is known for, such as "peak output power". */
+  readonly names: readonly string[];
+}
+
+/** In rising torque. */
+export function stopsOf(chart: OperatingPointChart): readonly Stop[] {
+  const { samples, hardest, peakPower, bestEfficiency, available, limits } = chart;
+  const named: readonly [string, number | undefined][] = [
+    ["needed", hardest.torqueNm],
+    ["best efficiency", bestEfficiency?.torqueNm],
+    ["peak output power", peakPower?.torqueNm],
+    ["current limit", limits.current?.fromNm],
+    ["standstill", limits.stopsAtNm],
+  ];
+  const reached = new Set(samples.map(({ torqueNm }) => torqueNm));
+  const beyond: ChartSample[] = reached.has(hardest.torqueNm)
+    ? []
+    : [{ torqueNm: hardest.torqueNm, available: null, sheet: null }];
+  return [...samples, ...beyond]
+    .sort((one, other) => one.torqueNm - other.torqueNm)
+    .map((sample) => ({
+      ...sample,
+      shareOfStall: available.stallTorqueNm > 0 ? sample.torqueNm / available.stallTorqueNm : null,
+      names: named.filter(([, torqueNm]) => torqueNm === sample.torqueNm).map(([name]) => name),
+    }));
+}
+
+/** Index of the stop nearest to a torque; -1 where there is none. */
+export function nearestStop(stops: readonly Stop[], torqueNm: number): number {
+  let best = stops.length > 0 ? 0 : -1;
+  for (const [index, stop] of stops.entries()) {
+    if (Math.abs(stop.torqueNm - torqueNm) < Math.abs((stops[best]?.torqueNm ?? 0) - torqueNm)) best = index;
+  }
+  return best;
+}
+
+/** The rows of a table: every named stop, and of the others no more than needed for about `rows` in all. */
+export function thinned(stops: readonly Stop[], rows: number): readonly Stop[] {
+  const plain = stops.filter(({ names }) => names.length === 0);
+  const step = Math.max(1, Math.round(plain.length / rows));
+  const kept = new Set(plain.filter((_, index) => index % step === 0));
+  return stops.filter((stop) => stop.names.length > 0 || kept.has(stop));
+}
