@@ -11,24 +11,36 @@ import { passedThrough } from "./feeds.js";
 export type Analyse = Analyser["analyse"];
 
 /**
- * The mechanisms, in their order, with the text that gives `origin` its value written anew. `undefined` where no place is found to write
- * it such that all of `fed` (positions in the list) can still be computed: the new value is refused, or the value is not worked out from
- * text that can be replaced.
+ * `fed` with the text that gives `origin` its value written anew, in the same order. `undefined` where no place is found to write it such
+ * that all of them can still be computed: the new value is refused, or the value is not worked out from text that can be replaced.
  */
 export function variantOf(
   analysis: Analysis,
   origin: Origin,
   rewrite: (text: string) => string,
-  fed: readonly number[],
+  fed: readonly AnalysedMechanism[],
   analyse: Analyse,
 ): readonly AnalysedMechanism[] | undefined {
-  const roots = [...analysis.files.keys()];
+  const roots = rootsOf(analysis, fed);
   for (const place of placesToWrite(origin)) {
-    const { mechanisms } = analyse(roots, withText(analysis.snapshot, place, rewrite));
-    const comparable = mechanisms.length === analysis.mechanisms.length;
-    if (comparable && fed.every((index) => isChanged(analysis.mechanisms[index], mechanisms[index]))) return mechanisms;
+    const changed = analyse(roots, withText(analysis.snapshot, place, rewrite));
+    const found = fed.flatMap((mechanism) => counterpart(mechanism, analysis, changed) ?? []);
+    if (found.length === fed.length && found.every((one, index) => isChanged(fed[index], one))) return found;
   }
   return undefined;
+}
+
+/** Only what is asked about is analysed: its files, and those of the robots that may supply it. */
+function rootsOf({ robots }: Analysis, fed: readonly AnalysedMechanism[]): string[] {
+  const listing = robots.filter(({ declared }) => fed.some((one) => one.declared && declared.mechanisms.includes(one.declared)));
+  return [...new Set([...fed, ...listing].map(({ call }) => call.span.file))];
+}
+
+/** The same mechanism in another analysis: its file and name, and its turn among those that share both. */
+function counterpart(mechanism: AnalysedMechanism, before: Analysis, after: Analysis): AnalysedMechanism | undefined {
+  const isLike = ({ name, call }: AnalysedMechanism): boolean =>
+    name === mechanism.name && call.span.file === mechanism.call.span.file;
+  return after.mechanisms.filter(isLike)[before.mechanisms.filter(isLike).indexOf(mechanism)];
 }
 
 /** The snapshot with one stretch of one file rewritten. */

@@ -148,6 +148,23 @@ export const hoist/*|*/ = mechanism("tray hoist", { motor: ${MOTOR}, stages: [],
     expect(markdown).toContain('"kilo" is not a known unit');
   });
 
+  it("describes the worst of those that one text declares, and names the others", () => {
+    const { markdown } = checkHover(
+      `import { lift, mechanism, motor, spur } from "loadmark";
+const slow = ${MOTOR};
+for (const [name, driven] of [["left", 80], ["right", 60]] as const) {
+  /*|*/mechanism(name, {
+    motor: slow, stages: [spur(20, driven)], load: lift({ mass: "10 kg", drumRadius: "50 mm", travel: "0.8 m" }),
+  });
+}
+`,
+      "mechanism",
+    );
+    expect(markdown).toMatch(/^\*\*Past its peak of power:\*\* 56 % of stall/);
+    expect(markdown).toContain("right · 1 motor · ratio 3");
+    expect(markdown).toContain("Declared by the same text: left.");
+  });
+
   it("keeps hostile names inert", () => {
     const name = "**x** <img src=y> [a](command:b) $(bug) | \u202Egnp `c`\\n\\n# h";
     const { markdown } = checkHover(hoist(80).replace("tray hoist", name), "hoist");

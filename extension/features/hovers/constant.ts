@@ -18,6 +18,9 @@ import { quantityLine } from "./quantity.js";
 /** Mechanisms that are shown with their variants; a longer table is no longer read. */
 const SHOWN = 3;
 
+/** Mechanisms beyond them that are named. */
+const NAMED = 5;
+
 /** `undefined` for a text that is no quantity, such as the name of a magnet. */
 export function describeConstant(analysis: Analysis, constant: Constant, analyse: Analyse): string | undefined {
   const { plain } = constant;
@@ -25,51 +28,59 @@ export function describeConstant(analysis: Analysis, constant: Constant, analyse
   const fed = fedBy(analysis, constant);
   const title = titleOf(analysis, constant);
   if (fed.length === 0) return writeBlock({ verdict: title, lines: ["Feeds no mechanism."] });
-  const shown = fed.slice(0, SHOWN);
-  const rows = shown.map(({ mechanism }) => [rowOf(inertMarkdown(mechanism.name), mechanism)]);
-  for (const step of stepsOf(constant, fed)) {
-    const indices = shown.filter(({ mechanism }) => mechanism.numbers !== undefined).map(({ index }) => index);
-    const variant = step.rewrites
-      .map(({ label, rewrite }) => ({ label, mechanisms: variantOf(analysis, constant.origin, rewrite, indices, analyse) }))
-      .find(({ mechanisms }) => mechanisms !== undefined);
-    shown.forEach(({ index }, position) => {
-      const changed = variant?.mechanisms?.[index];
-      if (changed?.numbers !== undefined && variant !== undefined)
-        rows[position]?.push(rowOf(`… with ${variant.label}`, changed));
-    });
-  }
+  const shown = fed.slice(0, SHOWN).map(({ mechanism }) => mechanism);
   const more = fed.slice(SHOWN).map(({ mechanism }) => inertMarkdown(mechanism.name));
+  const others = `${more.slice(0, NAMED).join(", ")}${more.length > NAMED ? ` and ${more.length - NAMED} more` : ""}`;
+  const charted = shown.find(({ numbers }) => numbers !== undefined);
   return writeBlock({
     verdict: verdictOfAll(analysis, fed),
     lines: [title],
     table: {
       head: ["at the hardest position", "output torque, of stall", "output speed", "current", "of stall"],
-      rows: rows.flat(),
+      rows: rowsOf(analysis, constant, fed, shown, analyse),
     },
-    notes:
-      more.length === 0
-        ? []
-        : [`Feeds ${more.slice(0, 5).join(", ")}${more.length > 5 ? ` and ${more.length - 5} more` : ""} too.`],
-    links: shown
-      .filter(({ mechanism }) => mechanism.numbers)
-      .slice(0, 1)
-      .map(({ mechanism }) => chartLink(mechanism.name)),
+    notes: more.length === 0 ? [] : [`Feeds ${others} too.`],
+    links: charted === undefined ? [] : [chartLink(charted.name)],
   });
 }
 
+/** Each mechanism as it is, and below it what each step makes of it. */
+function rowsOf(
+  analysis: Analysis,
+  constant: Constant,
+  fed: readonly Fed[],
+  shown: readonly AnalysedMechanism[],
+  analyse: Analyse,
+): string[][] {
+  const rows = shown.map((mechanism) => [rowOf(inertMarkdown(mechanism.name), mechanism)]);
+  const computed = shown.filter(({ numbers }) => numbers !== undefined);
+  if (computed.length === 0) return rows.flat();
+  for (const { rewrites } of stepsOf(constant, fed)) {
+    for (const { label, rewrite } of rewrites) {
+      const changed = variantOf(analysis, constant.origin, rewrite, computed, analyse);
+      if (changed === undefined) continue;
+      shown.forEach((mechanism, row) => {
+        const one = changed[computed.indexOf(mechanism)];
+        if (one !== undefined) rows[row]?.push(rowOf(`… with ${label}`, one));
+      });
+      break;
+    }
+  }
+  return rows.flat();
+}
+
 interface Fed {
-  readonly index: number;
   readonly mechanism: AnalysedMechanism;
   readonly leaves: readonly Leaf[];
 }
 
 /** Mechanisms that the constant feeds, the worst first. */
 function fedBy(analysis: Analysis, { key }: Constant): Fed[] {
-  const fed = analysis.mechanisms.flatMap((mechanism, index) => {
+  const fed = analysis.mechanisms.flatMap((mechanism) => {
     const leaves = feedsOf(analysis, mechanism).filter(({ value }) =>
       [...originsOf(value)].some((one) => sameSpan(keyOf(one), key)),
     );
-    return leaves.length === 0 ? [] : [{ index, mechanism, leaves }];
+    return leaves.length === 0 ? [] : [{ mechanism, leaves }];
   });
   return fed.toSorted((one, other) => shareOf(other) - shareOf(one));
 }
