@@ -14,7 +14,7 @@ import { unitsOf } from "./units.js";
 const PIXEL_RATIO = 2;
 const WIDTH = 900;
 const MARGIN = 16;
-const HEAD = 64;
+const HEAD = 84;
 const PLOT_HEIGHT = 300;
 const FOOT = 26;
 
@@ -34,13 +34,16 @@ export function drawPicture({ chart, old }: ShownChart, drawing: Drawing, theme:
     context.fillText(text, MARGIN, y, WIDTH - 2 * MARGIN);
   };
   write(chart.mechanism, 28, "bold 16px");
-  const needs = factsOf(chart, null, unitsOf(drawing)).map(({ name, now }) => `${name.toLowerCase()} ${now}`);
-  write([chart.verdict, ...(old === null ? [] : ["old result"]), ...needs].join("  ·  "), 50, "12px");
+  const facts = factsOf(chart, null, unitsOf(drawing)).map(({ name, now }) => `${name} ${now}`);
+  const verdict = [chart.verdict, ...(old === null ? [] : ["an old result"])];
+  write(verdict.join("  ·  "), 48, "12px");
+  write(facts.join("  ·  "), 68, "12px");
   for (const [index, place] of (["upper", "lower"] as const).entries()) {
     context.drawImage(drawPlot(drawing, place, theme), MARGIN, HEAD + index * PLOT_HEIGHT, WIDTH - 2 * MARGIN, PLOT_HEIGHT);
   }
+  const motors = chart.motorCount > 1 ? `one motor of ${chart.motorCount}` : "the motor";
   write(
-    "Values of one motor. Solid: available; dashed: sheet. An estimate, not a safety assessment.",
+    `Values of ${motors}. Thin dashes: its sheet. An estimate, not a safety assessment.`,
     HEAD + 2 * PLOT_HEIGHT + 14,
     "11px",
   );

@@ -11,6 +11,9 @@ export interface Stop extends ChartSample {
   readonly names: readonly string[];
 }
 
+/** A point without a name this close to one with a name, as a share of the axis, says nothing new. */
+const SAME = 1e-6;
+
 /** In rising torque. */
 export function stopsOf(chart: OperatingPointChart): readonly Stop[] {
   const { samples, hardest, peakPower, bestEfficiency, available, limits } = chart;
@@ -25,12 +28,17 @@ export function stopsOf(chart: OperatingPointChart): readonly Stop[] {
   const beyond: ChartSample[] = reached.has(hardest.torqueNm)
     ? []
     : [{ torqueNm: hardest.torqueNm, available: null, sheet: null }];
+  const end = samples.at(-1)?.torqueNm ?? 0;
+  const nameOf = (torqueNm: number): readonly string[] => named.filter(([, known]) => known === torqueNm).map(([name]) => name);
+  const isRepeated = ({ torqueNm }: ChartSample): boolean =>
+    nameOf(torqueNm).length === 0 && named.some(([, known]) => known !== undefined && Math.abs(known - torqueNm) < end * SAME);
   return [...samples, ...beyond]
+    .filter((sample) => !isRepeated(sample))
     .sort((one, other) => one.torqueNm - other.torqueNm)
     .map((sample) => ({
       ...sample,
       shareOfStall: available.stallTorqueNm > 0 ? sample.torqueNm / available.stallTorqueNm : null,
-      names: named.filter(([, torqueNm]) => torqueNm === sample.torqueNm).map(([name]) => name),
+      names: nameOf(sample.torqueNm),
     }));
 }
 

@@ -63,9 +63,12 @@ function wordsOf(chart: Chart, drawing: Drawing, plot: PlotDrawing, theme: Theme
         label(needed.outside ? `${needed.words} →` : needed.words, theme.foreground, false, (width) =>
           placesBeside(neededX, area, width, LINE_HEIGHT),
         ),
-        ...zones.map(({ from, to, words }) =>
-          label(words, theme.foreground, false, (width) => placesWithin(toX(from), toX(to), area, width, LINE_HEIGHT)),
-        ),
+        // The last zone first: it has the least choice of places.
+        ...zones
+          .toReversed()
+          .map(({ from, to, words }) =>
+            label(words, theme.foreground, false, (width) => placesWithin(toX(from), toX(to), area, width, LINE_HEIGHT)),
+          ),
         ...boundaries.map(({ x, words }) =>
           label(words, theme.foreground, false, () => placesUpright(toX(x), area, LINE_HEIGHT)),
         ),
