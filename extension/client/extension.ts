@@ -45,6 +45,7 @@ function openGate(context: vscode.ExtensionContext, server: Server, log: vscode.
     try {
       if (!(await usesDeclarations(gateWorkspace)) || server.isWanted) return;
       later.dispose();
+      log.info("The workspace uses the declarations: the server is started.");
       await server.start();
     } catch (error) {
       log.error(error instanceof Error ? error : String(error));

@@ -4,14 +4,16 @@
  * Waits for the result of the newest text only where an older one would mislead, and never for long.
  */
 import type { ClientCapabilities, Connection } from "vscode-languageserver";
+import { CHART, chartQuestionSchema } from "../protocol/chartMessages.js";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
+import { ChartAnswers } from "./answers/chart.js";
 import { answerCodeActions } from "./answers/codeActions.js";
 import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
 import { answerCompletions, mayHoldUnit } from "./answers/completions.js";
 import { answerFindPlace } from "./answers/findPlace.js";
 import { answerHover } from "./answers/hover.js";
-import { answerInlayHints } from "./answers/inlayHints.js";
+import { answerInlayHints, type HintsOf } from "./answers/inlayHints.js";
 import { answerWorkspaceSymbols } from "./answers/workspaceSymbols.js";
 import { type CurrentFile, currentFile } from "./current.js";
 import type { DisplaySettingsReader } from "./displaySettings.js";
@@ -25,6 +27,7 @@ export interface RequestParts {
   readonly guard: Guard;
   readonly session: Session;
   readonly settings: DisplaySettingsReader;
+  readonly hintsOf: HintsOf;
   readonly capabilities: ClientCapabilities;
   /** Commands that the client has. */
   readonly commands: readonly string[];
@@ -33,7 +36,7 @@ export interface RequestParts {
 /** How long an answer may wait for the first result, or for that of an edit just made. */
 const PATIENCE_MS = 2000;
 
-export function answerRequests({ connection, guard, session, settings, capabilities, commands }: RequestParts): void {
+export function answerRequests({ connection, guard, session, settings, hintsOf, capabilities, commands }: RequestParts): void {
   const { texts } = session;
   const lastOf = (uri: string): CurrentFile | undefined => session.result && currentFile(texts, session.result, keyOf(uri));
   /** Whatever is known of the file; waits only when that is nothing. */
@@ -57,7 +60,7 @@ export function answerRequests({ connection, guard, session, settings, capabilit
   connection.languages.inlayHint.on(
     guard.answer("Inlay hints", [], async ({ textDocument, range }) => {
       const [current, wish] = await Promise.all([anyOf(textDocument.uri), settings.of(textDocument.uri)]);
-      return current ? answerInlayHints(current, range, wish) : [];
+      return current ? answerInlayHints(hintsOf, current, { range, hints: wish.hints }) : [];
     }),
   );
   connection.onCodeLens(
@@ -88,6 +91,15 @@ export function answerRequests({ connection, guard, session, settings, capabilit
     guard.answer("Symbols", [], async ({ query }) => {
       const result = await session.whenCurrent(PATIENCE_MS);
       return result ? answerWorkspaceSymbols(result, query, (file) => texts.uriOf(file)) : [];
+    }),
+  );
+  const charts = new ChartAnswers(texts);
+  connection.onRequest(
+    CHART,
+    guard.answer("A chart", null, async (message: unknown) => {
+      const question = readMessage(chartQuestionSchema, message);
+      const result = question && (await session.whenCurrent(PATIENCE_MS));
+      return question && result ? charts.answer(result, question) : null;
     }),
   );
   connection.onRequest(

@@ -4,9 +4,10 @@
  * What the surfaces say is built elsewhere; this decides what is sent.
  */
 import type { ClientCapabilities, Connection } from "vscode-languageserver";
+import { CHART_MAY_DIFFER } from "../protocol/chartMessages.js";
 import { NO_STATE, STATE } from "../protocol/state.js";
 import { changesCodeLenses } from "./answers/codeLenses.js";
-import { changesInlayHints } from "./answers/inlayHints.js";
+import { changesInlayHints, type HintsOf } from "./answers/inlayHints.js";
 import { currentFile } from "./current.js";
 import { diagnosticsOf } from "./diagnostics.js";
 import type { Report } from "./guard.js";
@@ -18,6 +19,7 @@ import type { Texts } from "./texts.js";
 export interface ResultsParts {
   readonly connection: Connection;
   readonly capabilities: ClientCapabilities;
+  readonly hintsOf: HintsOf;
   readonly report: Report;
 }
 
@@ -27,7 +29,7 @@ export interface Results {
   refresh(): void;
 }
 
-export function showResults({ connection, capabilities, report }: ResultsParts): Results {
+export function showResults({ connection, capabilities, hintsOf, report }: ResultsParts): Results {
   const publisher = new Publisher((params) => void connection.sendDiagnostics(params));
   const canRefreshHints = capabilities.workspace?.inlayHint?.refreshSupport === true;
   const canRefreshLenses = capabilities.workspace?.codeLens?.refreshSupport === true;
@@ -59,14 +61,19 @@ export function showResults({ connection, capabilities, report }: ResultsParts):
         stateSent = content;
         connection.sendNotification(STATE, state).catch((error) => report("Telling the state", error));
       });
+      attempt("Telling of a result", () => {
+        connection.sendNotification(CHART_MAY_DIFFER).catch((error) => report("Telling of a result", error));
+      });
       const before = (file: string) => shown && currentFile(texts, shown, file);
       attempt("Comparing hints", () => {
-        if (texts.openKeys().some((file) => changesInlayHints(before(file), result, file))) refreshHints();
+        if (texts.openKeys().some((file) => changesInlayHints(hintsOf, before(file), result, file))) refreshHints();
       });
       attempt("Comparing lenses", () => {
         if (texts.openKeys().some((file) => changesCodeLenses(before(file), result, file))) refreshLenses();
       });
       shown = result;
+      const { files, mechanisms, findings } = result.analysis;
+      connection.console.debug(`${files.size} files, ${mechanisms.length} mechanisms, ${findings.length} findings.`);
     },
     refresh() {
       refreshHints();

@@ -10,6 +10,7 @@ import {
   type InitializeResult,
   TextDocumentSyncKind,
 } from "vscode-languageserver";
+import { createHintReader } from "./answers/inlayHints.js";
 import type { FileHost } from "./discovery.js";
 import { DisplaySettingsReader } from "./displaySettings.js";
 import type { Engine } from "./engine.js";
@@ -31,10 +32,12 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
   const guard = createGuard(report);
   connection.onInitialize((params) => {
     const settings = new DisplaySettingsReader(connection, params.capabilities.workspace?.configuration === true);
-    const results = showResults({ connection, capabilities: params.capabilities, report });
+    const { capabilities } = params;
+    const hintsOf = createHintReader();
+    const results = showResults({ connection, capabilities, hintsOf, report });
     const session = new Session({ host, loadEngine, onResult: (result) => results.show(session.texts, result), onError: report });
     followTexts(connection, guard, session, settings);
-    answerRequests({ connection, guard, session, settings, capabilities: params.capabilities, commands: commandsOf(params) });
+    answerRequests({ connection, guard, session, settings, hintsOf, capabilities, commands: commandsOf(params) });
     connection.onDidChangeConfiguration(
       guard.act("Reading changed settings", () => {
         settings.forget();
@@ -104,7 +107,10 @@ async function start(
   // Watching begins before reading, so that nothing that happens meanwhile is missed.
   if (workspace?.didChangeWatchedFiles?.dynamicRegistration) await watchFiles(connection);
   if (workspace?.didChangeConfiguration?.dynamicRegistration) await settings.watch();
+  const start = performance.now();
   await readFolders();
+  const seconds = ((performance.now() - start) / 1000).toFixed(1);
+  connection.console.info(`Read the workspace in ${seconds} s: ${session.fileCount} files mention the declarations.`);
 }
 
 function commandsOf({ initializationOptions }: InitializeParams): readonly string[] {

@@ -47,6 +47,8 @@ export class Session {
   /** Counts what happened to texts; a result of an older count is out of date. */
   #moment = 0;
   #resultMoment = -1;
+  /** What the result rests on, once somebody asked. */
+  #resultReads: ReadonlySet<string> | undefined;
   #timer: { readonly handle: ReturnType<typeof setTimeout>; readonly due: number } | undefined;
   #running = false;
   /** How many readings of the disk are under way or to come; what they find may change the result. The first is that of the workspace. */
@@ -65,13 +67,18 @@ export class Session {
     return this.#result;
   }
 
+  /** Files on disk that mention the declarations. */
+  get fileCount(): number {
+    return this.#files.mentioning.size;
+  }
+
   open(uri: string, version: number, text: string): void {
-    this.texts.open(uri, version, text);
-    this.#schedule(0);
+    this.#touch(this.texts.open(uri, version, text), 0);
   }
 
   change(uri: string, version: number, changes: readonly TextDocumentContentChangeEvent[]): void {
-    if (this.texts.change(uri, version, changes) !== undefined) this.#schedule(TYPING_DELAY_MS);
+    const key = this.texts.change(uri, version, changes);
+    if (key !== undefined) this.#touch(key, TYPING_DELAY_MS);
   }
 
   save(): void {
@@ -82,7 +89,8 @@ export class Session {
   async close(uri: string): Promise<void> {
     const key = this.texts.close(uri);
     await this.#reading(() => this.#files.refresh([key]));
-    this.#schedule(0);
+    this.#touch(key, 0);
+    this.#releaseIfCurrent();
   }
 
   async handleFileEvents(events: readonly FileEvent[]): Promise<void> {
@@ -116,6 +124,20 @@ export class Session {
     clearTimeout(this.#timer?.handle);
     this.#timer = undefined;
     this.#release();
+  }
+
+  /** Most documents of a workspace have nothing to do with the result, and cost nothing. */
+  #touch(key: string, delayMs: number): void {
+    if (this.#mayMatter(key)) this.#schedule(delayMs);
+  }
+
+  #mayMatter(key: string): boolean {
+    if (this.#result === undefined || this.#resultMoment !== this.#moment) return true;
+    if (this.#files.mentioning.has(key) || this.#settingsFiles.has(key)) return true;
+    const text = this.texts.openText(key)?.text;
+    if (text !== undefined && this.#files.accepts(key) && mentionsDeclarations(text)) return true;
+    this.#resultReads ??= filesRead(this.#result.analysis);
+    return this.#resultReads.has(key);
   }
 
   /** Later work replaces what is planned; work that can wait less never hurries text that is being typed. */
@@ -187,6 +209,7 @@ export class Session {
 
   #accept(result: Result, moment: number): void {
     this.#result = result;
+    this.#resultReads = undefined;
     this.#resultMoment = moment;
     this.#options.onResult(result);
     this.texts.forgetEditsUpTo(result.snapshot.versions);
@@ -203,12 +226,8 @@ export class Session {
   /** Half-typed imports ask for many files that never were. */
   #forgetUnused(analysis: Analysis): void {
     if (this.texts.diskSize < this.#forgetAbove) return;
-    const needed = new Set<string>(this.#settingsFiles);
-    for (const { file, dependencies, missing } of analysis.files.values()) {
-      needed.add(file);
-      for (const one of dependencies) needed.add(one);
-      for (const one of missing) needed.add(one);
-    }
+    this.#resultReads ??= filesRead(analysis);
+    const needed = new Set([...this.#settingsFiles, ...this.#resultReads]);
     this.#files.forgetAllBut(needed);
     this.#forgetAbove = 2 * this.texts.diskSize + FORGET_STEP;
   }
@@ -227,6 +246,17 @@ export class Session {
     this.#waiting = [];
     for (const resolve of waiting) resolve();
   }
+}
+
+/** Every file that an analysis read, or looked for in vain. */
+function filesRead({ files }: Analysis): ReadonlySet<string> {
+  const read = new Set<string>();
+  for (const { file, dependencies, missing } of files.values()) {
+    read.add(file);
+    for (const one of dependencies) read.add(one);
+    for (const one of missing) read.add(one);
+  }
+  return read;
 }
 
 /** Where nothing is declared, nothing need be loaded to say so. */

@@ -111,6 +111,28 @@ describe("a session", () => {
     expect(vi.getTimerCount()).toBe(0);
   });
 
+  it("does nothing for documents that the result does not rest on", async () => {
+    const { session, settle, engine, messages } = start({ "/w/a.ts": `${IMPORT}import {} from "./b.ts"`, "/w/b.ts": "" });
+    await session.setFolders(["/w"]);
+    await settle();
+    engine.runs.count = 0;
+    session.open("file:///w/other.ts", 1, "export const a = 1;");
+    session.change("file:///w/other.ts", 2, whole("export const a = 2;"));
+    await session.close("file:///w/other.ts");
+    await settle();
+    expect(engine.runs.count).toBe(0);
+    session.open("file:///w/other.ts", 1, "export const a = 1;");
+    session.change("file:///w/other.ts", 2, whole(`${IMPORT}finding: other`));
+    await settle();
+    expect(messages()).toEqual(["/w/other.ts other"]);
+    session.change("file:///w/other.ts", 3, whole(""));
+    await settle();
+    expect(messages()).toEqual([]);
+    session.open("file:///w/b.ts", 1, "finding: b");
+    await settle();
+    expect(messages()).toEqual(["/w/a.ts b"]);
+  });
+
   it("follows files that are created, changed, renamed and deleted", async () => {
     const { session, settle, messages, files } = start({ "/w/a.ts": `${IMPORT}import {} from "./late.ts"` });
     await session.setFolders(["/w"]);

@@ -5,7 +5,27 @@ import type { CurrentFile } from "../current.js";
 import type { DisplaySettings } from "../displaySettings.js";
 import type { Result } from "../session.js";
 
-export function answerInlayHints(current: CurrentFile, range: Range, { hints: wish }: DisplaySettings): InlayHint[] {
+/** All hints of a file. */
+export type HintsOf = (result: Result, file: string) => readonly Hint[];
+
+/** Hints are asked for at every scroll, and compared with each new result: they are worked out once for each. */
+export function createHintReader(): HintsOf {
+  const known = new WeakMap<Result, Map<string, readonly Hint[]>>();
+  return (result, file) => {
+    const ofResult = known.get(result) ?? new Map<string, readonly Hint[]>();
+    known.set(result, ofResult);
+    const hints = ofResult.get(file) ?? inlayHintsIn(result.analysis, file, 0, result.snapshot.read(file)?.length ?? 0);
+    ofResult.set(file, hints);
+    return hints;
+  };
+}
+
+export interface HintWish {
+  readonly range: Range;
+  readonly hints: DisplaySettings["hints"];
+}
+
+export function answerInlayHints(hintsOf: HintsOf, current: CurrentFile, { range, hints: wish }: HintWish): InlayHint[] {
   const { result, file, lines } = current;
   if (wish === "off") return [];
   const start = lines.offsetAt(range.start);
@@ -18,14 +38,10 @@ export function answerInlayHints(current: CurrentFile, range: Range, { hints: wi
 }
 
 /** True when `next` gives other hints than those shown, which moved along with the text. */
-export function changesInlayHints(shown: CurrentFile | undefined, next: Result, file: string): boolean {
+export function changesInlayHints(hintsOf: HintsOf, shown: CurrentFile | undefined, next: Result, file: string): boolean {
   const before =
     shown === undefined ? [] : hintsOf(shown.result, file).map((hint) => ({ ...hint, offset: carryOffset(shown, hint) }));
   return JSON.stringify(before) !== JSON.stringify(hintsOf(next, file));
-}
-
-function hintsOf({ analysis, snapshot }: Result, file: string): readonly Hint[] {
-  return inlayHintsIn(analysis, file, 0, snapshot.read(file)?.length ?? 0);
 }
 
 /** A hint follows what it stands behind; text put in right there comes after it. */
