@@ -48,23 +48,26 @@ describe("a hover on a mechanism", () => {
   });
 
   it("reads like this", () => {
-    expect(checkHover(hoist(80), "hoist").markdown).toMatchInlineSnapshot(`
-      "**Fine:** 42 % of stall  
-      tray hoist · 1 motor · ratio 4 · hardest all along its travel  
-      Output shaft: needs 4.9 N·m of 11.8 N·m at stall, at 17.5 rpm
+    const source = hoist(80)
+      .replace(/lift\(\{[^}]*\}\)/, 'roller({ torque: "5 N*m" })')
+      .replace("lift, ", "roller, ");
+    expect(checkHover(source, "hoist").markdown).toMatchInlineSnapshot(`
+      "**Fine:** 43 % of stall  
+      tray hoist · 1 motor · ratio 4 · hardest while it turns  
+      Output shaft: needs 5 N·m of 11.8 N·m at stall, at 17.2 rpm
 
       | per motor | hardest | available |
       | --- | ---: | ---: |
-      | torque | 1.25 N·m | 3 N·m at stall |
-      | speed | 70 rpm | 120 rpm at no load |
-      | current | 2.68 A | 6 A at stall |
-      | output power | 9.16 W | 9.42 W at its peak |
-      | efficiency | 29 % | 35 % at best |
+      | torque | 1.28 N·m | 3 N·m at stall |
+      | speed | 69 rpm | 120 rpm at no load |
+      | current | 2.72 A | 6 A at stall |
+      | output power | 9.21 W | 9.42 W at its peak |
+      | efficiency | 28 % | 35 % at best |
 
-      Feedforward, at the output shaft: 4.9 V holds the load, 3.82 V per rad/s, 0.0255 V per rad/s²  
+      Feedforward, at the output shaft: 5 V holds the load, 3.82 V per rad/s  
       Assumed: Motor at the 25 °C of its sheet. Stage 1 (spur): customary efficiency 0.98. The motor's no-load loss grows with its speed. And 1 more.
 
-      [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A80%2C%22end%22%3A84%7D%5D)"
+      [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
     `);
   });
 

@@ -12,8 +12,9 @@ import { countedBy, stepsOf } from "../step.js";
 import type { Constant } from "../subject.js";
 import { type Analyse, variantOf } from "../variant.js";
 import { verdictOf, worse } from "../verdict.js";
-import { writeBlock } from "./block.js";
+import { type Table, writeBlock } from "./block.js";
 import { quantityLine } from "./quantity.js";
+import type { RunNumbers } from "./runLines.js";
 
 /** Mechanisms that are shown with their variants; a longer table is no longer read. */
 const SHOWN = 3;
@@ -35,14 +36,13 @@ export function describeConstant(analysis: Analysis, constant: Constant, analyse
   return writeBlock({
     verdict: verdictOfAll(analysis, fed),
     lines: [title],
-    table: {
-      head: ["at the hardest position", "output torque, of stall", "output speed", "current", "of stall"],
-      rows: rowsOf(analysis, constant, fed, shown, analyse),
-    },
+    table: withoutEmptyColumns(HEAD, rowsOf(analysis, constant, fed, shown, analyse)),
     notes: more.length === 0 ? [] : [`Feeds ${others} too.`],
     links: charted === undefined ? [] : [chartLink(charted.name)],
   });
 }
+
+const HEAD = ["at the hardest position", "output torque, of stall", "output speed", "current", "of stall", "travel"];
 
 /** Each mechanism as it is, and below it what each step makes of it. */
 function rowsOf(
@@ -113,7 +113,7 @@ function titleOf({ snapshot }: Analysis, { key, origin, plain, field }: Constant
 function rowOf(label: string, mechanism: AnalysedMechanism): string[] {
   const shaft = outputShaftOf(mechanism);
   const { numbers } = mechanism;
-  if (shaft === undefined || numbers === undefined) return [label, "not checked", "", "", ""];
+  if (shaft === undefined || numbers === undefined) return [label, "not checked", "", "", "", ""];
   const { motorCurrentA, stallShare } = numbers.hardest;
   return [
     label,
@@ -121,7 +121,19 @@ function rowOf(label: string, mechanism: AnalysedMechanism): string[] {
     shaft.speedRadPerS === 0 ? "stalled" : writeQuantity(shaft.speedRadPerS, "speed"),
     writeQuantity(motorCurrentA, "current"),
     stallShare === null ? "" : writeShare(stallShare),
+    travelIn(numbers),
   ];
+}
+
+function travelIn({ travel }: RunNumbers): string {
+  if (!travel) return "";
+  return travel.timeS === null ? "never arrives" : writeQuantity(travel.timeS, "time");
+}
+
+function withoutEmptyColumns(head: readonly string[], rows: readonly (readonly string[])[]): Table {
+  const kept = head.map((_, column) => column).filter((column) => rows.some((cells) => cells[column]));
+  const keep = (cells: readonly string[]): string[] => kept.map((column) => cells[column] ?? "");
+  return { head: keep(head), rows: rows.map(keep) };
 }
 
 function listed<Item>(item: Item | undefined): Item[] {

@@ -13,6 +13,7 @@ import { positionWords } from "../positionWords.js";
 import { outputShaftOf } from "../shaft.js";
 import { findingsAbout, verdictOf, worse } from "../verdict.js";
 import { type Table, writeBlock } from "./block.js";
+import { runLines } from "./runLines.js";
 import { sentences } from "./sentences.js";
 
 /** One piece of text may declare several mechanisms: the worst is described, the others named. */
@@ -45,7 +46,7 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
       ...outputOf(mechanism),
     ],
     table: tableOf(drive, numbers),
-    notes: [...feedforwardOf(numbers), ...assumptions, ...shared],
+    notes: [...runLines(drive, numbers), ...feedforwardOf(numbers), ...assumptions, ...shared],
     links: [chartLink(mechanism.name), ...linksOf(mechanism)],
   });
 }
