@@ -8,6 +8,9 @@ import * as v from "valibot";
 const number = v.pipe(v.number(), v.finite());
 const text = v.string();
 
+/** What arrived is nobody's to change. */
+const listOf = <S extends v.GenericSchema>(item: S) => v.pipe(v.array(item), v.readonly());
+
 const values = {
   speedRadPerS: number,
   currentA: number,
@@ -48,7 +51,7 @@ const limitsSchema = v.object({
   /** Between the two torques the current limit decides. */
   current: v.nullable(v.object({ currentA: number, fromNm: number, toNm: number })),
   /** What else gives way, in rising torque. */
-  others: v.array(limitSchema),
+  others: listOf(limitSchema),
 });
 
 const findingSchema = v.object({ rule: text, level: v.picklist(["error", "warning", "information"]), message: text });
@@ -62,15 +65,15 @@ export const operatingPointChartSchema = v.object({
   available: endsSchema,
   sheet: endsSchema,
   /** Rising torque from 0 to the end of the longer line; marked points are among them. */
-  samples: v.array(sampleSchema),
+  samples: listOf(sampleSchema),
   hardest: hardestSchema,
   /** Null for a motor that gives nothing. */
   peakPower: v.nullable(pointSchema),
   bestEfficiency: v.nullable(pointSchema),
   limits: limitsSchema,
-  findings: v.array(findingSchema),
-  assumed: v.array(text),
-  notChecked: v.array(text),
+  findings: listOf(findingSchema),
+  assumed: listOf(text),
+  notChecked: listOf(text),
 });
 
 export type OperatingPointChart = v.InferOutput<typeof operatingPointChartSchema>;

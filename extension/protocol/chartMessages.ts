@@ -10,6 +10,9 @@ import { operatingPointChartSchema } from "./chart.js";
 /** The client's question to the server: takes a question, gives an answer. */
 export const CHART = "loadmark/chart";
 
+/** Server to client, after each result: whoever shows a chart asks again. */
+export const CHART_MAY_DIFFER = "loadmark/chartMayDiffer";
+
 const count = v.pipe(v.number(), v.integer(), v.minValue(0));
 
 export const chartQuestionSchema = v.object({

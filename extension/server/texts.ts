@@ -19,6 +19,10 @@ export interface OpenText {
 export interface TextSnapshot extends Snapshot {
   /** Versions of the documents that were open. */
   readonly versions: ReadonlyMap<string, number>;
+  /** The disk's texts alone; the same object as long as they stay the same. */
+  readonly saved: Snapshot;
+  /** False while an open document differs from its file. */
+  readonly isSaved: boolean;
   lineMap(file: string): LineMap;
 }
 
@@ -32,6 +36,7 @@ export class Texts {
   #disk = new Map<string, string | null>();
   /** True while a snapshot shares the map of disk texts: the next change then works on a copy. */
   #diskIsShared = false;
+  #saved: { readonly disk: ReadonlyMap<string, string | null>; readonly snapshot: Snapshot } | undefined;
   readonly #lineMaps = new Map<string, LineMap>();
 
   /** Gives the document's key. */
@@ -118,7 +123,18 @@ export class Texts {
     const disk = this.#disk;
     this.#diskIsShared = true;
     const read = (file: string) => open.get(file) ?? disk.get(file);
-    return { read, versions, lineMap: (file) => this.#lineMap(file, read(file) ?? "") };
+    return {
+      read,
+      versions,
+      saved: this.#savedSnapshot(disk),
+      isSaved: [...open].every(([file, text]) => text === (disk.get(file) ?? text)),
+      lineMap: (file) => this.#lineMap(file, read(file) ?? ""),
+    };
+  }
+
+  #savedSnapshot(disk: ReadonlyMap<string, string | null>): Snapshot {
+    if (this.#saved?.disk !== disk) this.#saved = { disk, snapshot: { read: (file) => disk.get(file) } };
+    return this.#saved.snapshot;
   }
 
   #lineMap(file: string, text: string): LineMap {
