@@ -1,7 +1,9 @@
 /** The chart's data against the equations of the motor, written out by hand. */
 import fc from "fast-check";
+import * as v from "valibot";
 import { describe, expect, it } from "vitest";
 import { type OperatingPointChart, operatingPointChart } from "../../extension/features/chart.js";
+import { operatingPointChartSchema } from "../../extension/protocol/chart.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { handPoint, liftTorque, MOTOR, SHEET } from "../support/handNumbers.js";
 
@@ -144,6 +146,13 @@ describe("operatingPointChart", () => {
       hardest.efficiency,
     ]);
     expect(named("peak output power")?.[4]).toBe(peakPower?.shaftPowerW);
+  });
+
+  it("is what the protocol carries, down to the last number", () => {
+    const chart = chartOf(hoist('motorCurrentLimit: "3 A"'));
+    const carried = v.parse(operatingPointChartSchema, chart);
+    expect(Object.keys(carried).length).toBeGreaterThan(10);
+    expect(chart).toMatchObject(carried);
   });
 
   it("is absent for a name that nothing has, and where nothing can be computed", () => {

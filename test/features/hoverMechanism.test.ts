@@ -53,7 +53,7 @@ describe("a hover on a mechanism", () => {
       .replace("lift, ", "roller, ");
     expect(checkHover(source, "hoist").markdown).toMatchInlineSnapshot(`
       "**Fine:** 43 % of stall  
-      tray hoist · 1 motor · ratio 4 · hardest while it turns  
+      tray hoist · 1 motor · ratio 4 · turning on  
       Output shaft: needs 5 N·m of 11.8 N·m at stall, at 17.2 rpm
 
       | per motor | hardest | available |

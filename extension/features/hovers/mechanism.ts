@@ -42,7 +42,7 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
   return writeBlock({
     verdict: `${verdict.words}: ${[verdict.share, ...verdict.notes].filter((part) => part !== undefined).join(" · ")}`,
     lines: [
-      `${name} · ${motorsOf(drive)} · ratio ${writeNumber(numbers.ratio)} · hardest ${positionWords(drive, mechanism)}`,
+      `${name} · ${motorsOf(drive)} · ratio ${writeNumber(numbers.ratio)} · ${whereOf(drive, mechanism)}`,
       ...outputOf(mechanism),
     ],
     table: tableOf(drive, numbers),
@@ -66,6 +66,10 @@ function whyUnknown(analysis: Analysis, mechanism: AnalysedMechanism): readonly 
 
 function motorsOf({ motorCount }: Drive): string {
   return motorCount === 1 ? "1 motor" : `${motorCount} motors`;
+}
+
+function whereOf(drive: Drive, mechanism: AnalysedMechanism): string {
+  return mechanism.numbers?.hardest.position === null ? "turning on" : `hardest ${positionWords(drive, mechanism)}`;
 }
 
 function outputOf(mechanism: AnalysedMechanism): string[] {
