@@ -1,5 +1,5 @@
 /**
- * Everything that the operating-point chart of one mechanism plots, and the table behind it.
+ * Everything that the operating-point chart of one mechanism plots; its table shows the same samples.
  *
  * SI throughout, one motor unless the name says otherwise; what does not apply is null. How it looks is the chart's business.
  */
@@ -12,7 +12,6 @@ import { linePoint } from "../model/peaks.js";
 import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "./bestPoints.js";
 import { type ChartLimit, limitsOf, torqueAtCurrent } from "./chartLimits.js";
 import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./chartPoint.js";
-import { type ChartTable, tableOf } from "./chartTable.js";
 import { driveOf } from "./drives.js";
 import { positionWords } from "./positionWords.js";
 import { findingsAbout, type State, verdictOf } from "./verdict.js";
@@ -67,7 +66,6 @@ export interface OperatingPointChart {
   /** Plain sentences. */
   readonly assumed: readonly string[];
   readonly notChecked: readonly string[];
-  readonly table: ChartTable;
 }
 
 /** Steps of the abscissa between its ends. */
@@ -117,11 +115,6 @@ export function operatingPointChart(analysis: Analysis, mechanismName: string): 
     findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
     assumed: mechanism.assumed,
     notChecked: mechanism.notChecked,
-    table: tableOf(drive, stopsAtNm, {
-      "hardest position": point,
-      "peak output power": peakPower,
-      "best efficiency": bestEfficiency,
-    }),
   };
 }
 

@@ -130,24 +130,6 @@ describe("operatingPointChart", () => {
     expect(chart.assumed).toContain("Stage 1 (spur): customary efficiency 0.98.");
   });
 
-  it("has a table whose rows rise and whose named rows are the marked points", () => {
-    const { table, hardest, peakPower } = chartOf(hoist());
-    expect(table.columns.map(({ unit }) => unit)).toEqual(["N·m", "1", "rad/s", "A", "W", "1"]);
-    expect(table.rows.filter(({ label }) => label === "")).toHaveLength(11);
-    const torques = table.rows.map(({ cells }) => cells[0] ?? Number.NaN);
-    expect(torques).toEqual(torques.toSorted((one, other) => one - other));
-    const named = (label: string) => table.rows.find((row) => row.label === label)?.cells;
-    expect(named("hardest position")).toEqual([
-      hardest.torqueNm,
-      hardest.torqueNm / 3,
-      hardest.speedRadPerS,
-      hardest.currentA,
-      hardest.shaftPowerW,
-      hardest.efficiency,
-    ]);
-    expect(named("peak output power")?.[4]).toBe(peakPower?.shaftPowerW);
-  });
-
   it("is what the protocol carries, down to the last number", () => {
     const chart = chartOf(hoist('motorCurrentLimit: "3 A"'));
     const carried = v.parse(operatingPointChartSchema, chart);
