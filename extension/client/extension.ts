@@ -5,6 +5,7 @@
  */
 import * as vscode from "vscode";
 import type { BaseLanguageClient } from "vscode-languageclient";
+import { registerChart } from "./chartPanel.js";
 import type { ClientParts } from "./clientOptions.js";
 import { LINKED_COMMANDS, registerCommands } from "./commands.js";
 import { usesDeclarations } from "./gate.js";
@@ -28,6 +29,7 @@ export function activateWith(context: vscode.ExtensionContext, makeHostClient: M
     log,
     server,
     registerCommands(server, log),
+    registerChart({ extensionUri: context.extensionUri, server, log }),
     createMechanismsView(server),
     createStatusItem(server),
     server.onDidChangeState(({ status }) => {

@@ -5,6 +5,7 @@
  */
 import * as vscode from "vscode";
 import type { BaseLanguageClient } from "vscode-languageclient";
+import { CHART, CHART_MAY_DIFFER, type ChartAnswer, type ChartQuestion, chartAnswerSchema } from "../protocol/chartMessages.js";
 import { FIND_PLACE, type Place, type PlaceQuery, placeSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { NO_STATE, STATE, type State, stateSchema } from "../protocol/state.js";
@@ -15,6 +16,7 @@ export class Server implements vscode.Disposable {
   readonly #makeClient: MakeClient;
   readonly #log: vscode.LogOutputChannel;
   readonly #stateChanged = new vscode.EventEmitter<State>();
+  readonly #chartMayDiffer = new vscode.EventEmitter<void>();
   #state = NO_STATE;
   #client: BaseLanguageClient | undefined;
   /** Starting and stopping happen one after the other. */
@@ -27,6 +29,9 @@ export class Server implements vscode.Disposable {
   }
 
   readonly onDidChangeState = this.#stateChanged.event;
+
+  /** After each result: a chart asked for before may be another one now. */
+  readonly onChartMayDiffer = this.#chartMayDiffer.event;
 
   get state(): State {
     return this.#state;
@@ -59,10 +64,17 @@ export class Server implements vscode.Disposable {
   dispose(): void {
     void this.stop();
     this.#stateChanged.dispose();
+    this.#chartMayDiffer.dispose();
   }
 
   async findPlace(query: PlaceQuery): Promise<Place | undefined> {
     return readMessage(placeSchema, await this.#client?.sendRequest(FIND_PLACE, query));
+  }
+
+  /** `undefined` while there is no server, or where its answer cannot be read. */
+  async askForChart(question: ChartQuestion): Promise<ChartAnswer | undefined> {
+    const answer = await this.#client?.sendRequest(CHART, question);
+    return readMessage(chartAnswerSchema, answer);
   }
 
   async #startClient(): Promise<void> {
@@ -72,6 +84,7 @@ export class Server implements vscode.Disposable {
       if (state === undefined) this.#log.warn("The server sent a state that cannot be read.");
       else this.#setState(state);
     });
+    client.onNotification(CHART_MAY_DIFFER, () => this.#chartMayDiffer.fire());
     this.#client = client;
     await client.start();
   }

@@ -34,9 +34,9 @@ export const chartAnswerSchema = v.variant("kind", [
   }),
 ]);
 
-const FILE_NAME_LIMIT = 120;
 const CONTENT_LIMIT = 32 * 1024 * 1024;
-const fileName = v.pipe(v.string(), v.nonEmpty(), v.maxLength(FILE_NAME_LIMIT));
+/** A name alone: never a path. */
+const fileName = v.pipe(v.string(), v.regex(/^[\p{L}\p{N}-]{1,100}\.(png|csv)$/u));
 const content = v.pipe(v.string(), v.maxLength(CONTENT_LIMIT));
 /** Without groups: a repeated group overflows the stack on a picture of some megabytes. */
 const BASE64 = /^[A-Za-z\d+/]*={0,2}$/;
@@ -45,7 +45,15 @@ export const pageMessageSchema = v.variant("type", [
   /** The page is there, or there again; it may remember which mechanism it showed. */
   v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()) }),
   /** A PNG file in base 64. */
-  v.object({ type: v.literal("savePicture"), fileName, base64: v.pipe(content, v.regex(BASE64)) }),
+  v.object({
+    type: v.literal("savePicture"),
+    fileName,
+    base64: v.pipe(
+      content,
+      v.regex(BASE64),
+      v.check((text) => text.length % 4 === 0),
+    ),
+  }),
   v.object({ type: v.literal("saveTable"), fileName, csv: content }),
   /** What the page could not do, for the log. */
   v.object({ type: v.literal("trouble"), what: v.pipe(v.string(), v.maxLength(2000)) }),
