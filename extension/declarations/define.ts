@@ -33,11 +33,12 @@ export function define<Args extends readonly unknown[], Built extends object>(
 function tellIssues(name: string, raw: readonly v.BaseIssue<unknown>[]): Issue[] {
   const missing = raw.filter(isMissing);
   const claimed = new Set<v.BaseIssue<unknown>>();
+  const misspelt: Issue[] = [];
   const issues: Issue[] = [];
   for (const issue of raw) {
     if (isMissing(issue)) continue;
     if (!isUnknownField(issue)) {
-      issues.push(tellIssue(name, issue));
+      if (!isMissingChoice(issue)) issues.push(tellIssue(name, issue));
       continue;
     }
     const path = pathOf(issue);
@@ -50,7 +51,13 @@ function tellIssues(name: string, raw: readonly v.BaseIssue<unknown>[]): Issue[]
       ) ?? nearest(word, fieldsOf(issue));
     for (const other of siblings) if (pathOf(other).at(-1) === intended) claimed.add(other);
     const hint = intended === undefined ? `known here: ${fieldsOf(issue).join(", ")}` : `did you mean "${intended}"?`;
-    issues.push({ message: `"${word}" is not a field of ${placeName(name, path)}; ${hint}`, path, at: "key" });
+    const told: Issue = { message: `"${word}" is not a field of ${placeName(name, path)}; ${hint}`, path, at: "key" };
+    if (intended !== undefined) misspelt.push(told);
+    issues.push(told);
+  }
+  // One of several fields is needed, and none is there: perhaps the misspelt one was meant, so that comes first.
+  for (const issue of raw.filter(isMissingChoice)) {
+    if (!misspelt.some(({ path }) => sameParent(path, pathOf(issue)))) issues.push(tellIssue(name, issue));
   }
   for (const issue of missing) {
     if (claimed.has(issue)) continue;
@@ -70,6 +77,12 @@ function tellIssue(name: string, issue: v.BaseIssue<unknown>): Issue {
 
 function isMissing(issue: v.BaseIssue<unknown>): boolean {
   return issue.type === "loose_object" && issue.path?.at(-1)?.origin === "key" && issue.received === "undefined";
+}
+
+/** A check over several fields that blames one that is not there. */
+function isMissingChoice(issue: v.BaseIssue<unknown>): boolean {
+  const last = issue.path?.at(-1);
+  return issue.type === "raw_check" && last?.origin === "value" && last.value === undefined;
 }
 
 function isUnknownField(issue: v.BaseIssue<unknown>): boolean {

@@ -116,6 +116,12 @@ describe("issues", () => {
       { path: [0, "noLoadCurrent"], at: "callee" },
       /needs the field "noLoadCurrent"/,
     ],
+    [
+      "lift",
+      [{ mass: "2 kg", drumDiametre: "5 cm", travel: "1 m" }],
+      { path: [0, "drumDiametre"], at: "key" },
+      /did you mean "drumDiameter"\?/,
+    ],
     ["lift", [{ mass: "2 kg", travel: "1 m" }], { path: [0, "drumRadius"], at: "callee" }, /"drumRadius" or "drumDiameter"/],
     [
       "breaker",
