@@ -4,6 +4,7 @@
  * A property that isn't there is a located unknown with "did you mean", not `undefined`: it is nearly always a slip.
  */
 import type ts from "typescript";
+import { fromPlain } from "./built.js";
 import { callableOf } from "./callable.js";
 import { memberOfClass } from "./classes.js";
 import type { Context, Frame } from "./context.js";
@@ -11,9 +12,8 @@ import { findDeclaredMember } from "./enums.js";
 import { exportsOf } from "./exports.js";
 import { evaluateGlobalMember } from "./globals.js";
 import { exportOf, follow } from "./modules.js";
-import { valueOfTarget } from "./names.js";
-import { dependent, known, primitive, quote, quoteText, spanOf, suggest, unknown, unsupported } from "./unknown.js";
-import type { DefinitionCall, Known, Origin, Span, Value } from "./value.js";
+import { dependent, known, primitive, quote, spanOf, suggest, unknown, unsupported } from "./unknown.js";
+import type { Known, Origin, Span, Value } from "./value.js";
 
 export interface Property {
   readonly name: string;
@@ -156,7 +156,7 @@ function findProperty(ctx: Context, base: Known, name: string, node: ts.Node, fr
     case "module": {
       const module = ctx.modules.get(data.file);
       if (module === undefined) return undefined;
-      return { name, value: valueOfTarget(ctx, follow(ctx, exportOf(ctx, { kind: "module", module }, name, span)), span) };
+      return { name, value: ctx.valueOfTarget(follow(ctx, exportOf(ctx, { kind: "module", module }, name, span)), span) };
     }
     case "function":
       return memberOfFunction(ctx, base, name, span);
@@ -167,7 +167,7 @@ function memberOfFunction(ctx: Context, base: Known, name: string, span: Span): 
   const callable = callableOf(base.data);
   const origin: Origin = { kind: "access", span, from: [base.origin] };
   if (callable?.kind === "global") return { name, value: evaluateGlobalMember(callable.name, name, span, origin) };
-  if (callable?.kind === "library") return { name, value: valueOfTarget(ctx, exportOf(ctx, callable, name, span), span) };
+  if (callable?.kind === "library") return { name, value: ctx.valueOfTarget(exportOf(ctx, callable, name, span), span) };
   if (callable?.kind === "class") return memberOfClass(ctx, callable, name);
   return undefined;
 }
@@ -194,7 +194,7 @@ function missingProperty(ctx: Context, base: Known, name: string, node: ts.Node,
     name,
     (listProperties(ctx, base) ?? []).map((property) => property.name),
   );
-  return unknown("no-such-property", `${text} does not exist${hint}.`, "", origin);
+  return unknown("no-such-property", `${text} does not exist${hint}`, "", origin);
 }
 
 function moduleProperties(ctx: Context, file: string, span: Span): readonly Property[] | undefined {
@@ -206,41 +206,8 @@ function moduleProperties(ctx: Context, file: string, span: Span): readonly Prop
   const names = [...named.keys()].filter((name) => name !== "export=").sort();
   return names.map((name) => {
     const target = follow(ctx, exportOf(ctx, { kind: "module", module }, name, span));
-    return { name, value: valueOfTarget(ctx, target, span) };
+    return { name, value: ctx.valueOfTarget(target, span) };
   });
-}
-
-/**
- * A part of a built object as a value. Where it equals what was passed under the same name, it has the argument's own origin;
- * else it comes from the call.
- */
-function fromPlain(ctx: Context, plain: unknown, origin: Origin, call: DefinitionCall, name?: string): Value {
-  const passed = name === undefined ? undefined : findPassed(call, name);
-  if (passed?.known === true && equals(passed, plain)) return passed;
-  if (typeof plain === "object" && plain !== null) {
-    const maker = ctx.makers.get(plain);
-    if (maker !== undefined) return known({ kind: "built", built: plain, call: maker }, origin);
-    if (Array.isArray(plain)) {
-      return known({ kind: "array", items: plain.map((item) => fromPlain(ctx, item, origin, call)), frozen: true }, origin);
-    }
-    const entries = Object.entries(plain).map(([key, inner]) => [key, fromPlain(ctx, inner, origin, call)] as const);
-    return known({ kind: "object", entries: new Map(entries), keys: new Map(), frozen: true }, origin);
-  }
-  if (typeof plain === "function" || typeof plain === "symbol") {
-    return unknown("unsupported", `${quoteText(name ?? call.definition)} is not a plain value.`, "", origin);
-  }
-  return primitive(plain as string | number | boolean | bigint | null | undefined, origin);
-}
-
-function findPassed(call: DefinitionCall, name: string): Value | undefined {
-  for (const arg of call.args) {
-    if (arg.known && arg.data.kind === "object" && arg.data.entries.has(name)) return arg.data.entries.get(name);
-  }
-  return undefined;
-}
-
-function equals({ data }: Known, plain: unknown): boolean {
-  return data.kind === "built" ? data.built === plain : data.kind === "primitive" && Object.is(data.value, plain);
 }
 
 function withKey(name: string, value: Value, key: Span | undefined): Property {

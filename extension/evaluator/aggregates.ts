@@ -9,6 +9,7 @@ import { listItems, listProperties } from "./access.js";
 import { callableData } from "./callable.js";
 import type { Context, Frame } from "./context.js";
 import { originOf } from "./operations.js";
+import { evaluateName, inOrder } from "./propertyName.js";
 import { dependent, known, spanOf, tooDeep, unsupported } from "./unknown.js";
 import type { Origin, Span, Unknown, Value } from "./value.js";
 
@@ -50,27 +51,6 @@ export function evaluateObject(ctx: Context, node: ts.ObjectLiteralExpression, f
     if (failure !== undefined) return dependent(node, frame.module, originOf("object", node, frame, [failure]), failure);
   }
   return known({ kind: "object", entries: inOrder(entries), keys }, originOf("object", node, frame, [...entries.values()]));
-}
-
-/** The name of a property as it is written; an unknown where only the running program knows it. */
-export function evaluateName(ctx: Context, name: ts.PropertyName, frame: Frame): string | Unknown {
-  const { ts } = ctx;
-  if (ts.isNumericLiteral(name)) return String(Number(name.text));
-  if (ts.isIdentifier(name) || ts.isStringLiteralLike(name) || ts.isPrivateIdentifier(name)) return name.text;
-  if (!ts.isComputedPropertyName(name)) return unsupported(name, frame.module, "is not followed as a name");
-  const value = ctx.evaluate(name.expression, frame);
-  if (!value.known) return value;
-  if (value.data.kind !== "primitive") return unsupported(name, frame.module, "is not followed as a name");
-  return String(value.data.value);
-}
-
-/** Whole numbers come first in an object, in ascending order, however they were written. */
-export function inOrder(entries: Map<string, Value>): Map<string, Value> {
-  const isIndex = (name: string) => /^(0|[1-9]\d{0,9})$/.test(name) && Number(name) < 2 ** 32 - 1;
-  const indices = [...entries].filter(([name]) => isIndex(name));
-  if (indices.length === 0) return entries;
-  indices.sort(([a], [b]) => Number(a) - Number(b));
-  return new Map([...indices, ...[...entries].filter(([name]) => !isIndex(name))]);
 }
 
 /** The same value, as it comes in at another place. */

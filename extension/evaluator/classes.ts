@@ -5,11 +5,11 @@
  * constructors do is not followed.
  */
 import type ts from "typescript";
-import { evaluateName } from "./aggregates.js";
 import { type Callable, callableData, callableOf } from "./callable.js";
 import type { Context, Frame } from "./context.js";
 import { isExported } from "./exports.js";
 import { originOf } from "./operations.js";
+import { evaluateName } from "./propertyName.js";
 import type { Source } from "./source.js";
 import { dependent, known, quote, quoteText, spanOf, unknown, unsupported } from "./unknown.js";
 import type { Span, Value } from "./value.js";

@@ -1,7 +1,7 @@
 /**
  * What the parts of the evaluator share: the files that are open to it, frames of evaluation, and the way back into the evaluator.
  *
- * Parts reach each other only through `Context`, so that none imports another in a circle.
+ * Parts that need each other in a circle do so through `Context`, so that their imports run one way.
  */
 import type ts from "typescript";
 import type { Binding, Source } from "./source.js";
@@ -68,6 +68,8 @@ export interface Context {
   evaluate(node: ts.Expression, frame: Frame): Value;
   /** The value that a binding was given, with the origin of its initialiser. */
   valueOf(binding: Binding, frame: Frame): Value;
+  /** The value that an import, an export or an alias leads to. */
+  valueOfTarget(target: Target, span: Span): Value;
   /** What a specifier in `module` leads to; `span` is where it is written. */
   load(module: Module, specifier: string, span: Span): Loaded;
   /** The module of a file that was read. */

@@ -4,12 +4,12 @@
  * Members are evaluated one by one, so that one may be written in terms of another.
  */
 import type ts from "typescript";
-import { evaluateName, inOrder } from "./aggregates.js";
 import { type Context, type Frame, homeOf, type Module } from "./context.js";
 import { isAmbient } from "./declare.js";
 import { findTarget } from "./modules.js";
 import { finish, originOf } from "./operations.js";
 import { asNumber } from "./operators.js";
+import { evaluateName, inOrder } from "./propertyName.js";
 import type { Binding } from "./source.js";
 import { known, quoteText, spanOf, unknown, unsupported } from "./unknown.js";
 import type { Origin, Span, Value } from "./value.js";
@@ -90,6 +90,9 @@ function counted(ctx: Context, member: ts.EnumMember, home: Frame): Value {
   }
   const before = member.parent.members[member.parent.members.indexOf(member) - 1];
   if (before === undefined) return known({ kind: "primitive", value: 0 }, originOf("literal", member.name, home, []));
+  if (!isCountableMember(ctx, before, module, 0)) {
+    return unsupported(member.name, module, "counts on from a member that is calculated");
+  }
   const previous = memberValue(ctx, before, home);
   const origin = originOf("operation", member.name, home, [previous]);
   if (!previous.known) {
@@ -100,6 +103,40 @@ function counted(ctx: Context, member: ts.EnumMember, home: Frame): Value {
     return unsupported(member.name, module, "counts on from a text");
   }
   return finish(member.name, home, origin, asNumber(previous.data.value + 1));
+}
+
+/**
+ * Whether a member may count on from this expression: the compiler does so only from literals, operators on them, and names of
+ * constants and members that come down to these.
+ */
+function isCountable(ctx: Context, expression: ts.Expression, module: Module, hops = 0): boolean {
+  const { ts } = ctx;
+  if (hops > 20) return false;
+  const within = (inner: ts.Expression) => isCountable(ctx, inner, module, hops + 1);
+  if (ts.isNumericLiteral(expression)) return true;
+  if (ts.isParenthesizedExpression(expression)) return within(expression.expression);
+  if (ts.isPrefixUnaryExpression(expression)) return within(expression.operand);
+  if (ts.isBinaryExpression(expression)) return within(expression.left) && within(expression.right);
+  if (ts.isPropertyAccessExpression(expression)) {
+    const holder = findTarget(ctx, expression.expression, module);
+    if (holder?.kind !== "binding" || holder.binding.kind !== "enum") return false;
+    const members = holder.binding.declarations.flatMap((each) => (ts.isEnumDeclaration(each) ? [...each.members] : []));
+    const member = members.find(({ name }) => evaluateName(ctx, name, holder.module.root) === expression.name.text);
+    return member !== undefined && isCountableMember(ctx, member, holder.module, hops + 1);
+  }
+  const target = ts.isIdentifier(expression) ? findTarget(ctx, expression, module) : undefined;
+  const declaration = target?.kind === "binding" ? target.binding.declarations[0] : undefined;
+  if (target?.kind !== "binding" || declaration === undefined) return false;
+  if (ts.isEnumMember(declaration)) return isCountableMember(ctx, declaration, target.module, hops + 1);
+  const isConstant = target.binding.kind === "const" && ts.isVariableDeclaration(declaration) && declaration.type === undefined;
+  const initializer = isConstant ? declaration.initializer : undefined;
+  return initializer !== undefined && isCountable(ctx, initializer, target.module, hops + 1);
+}
+
+function isCountableMember(ctx: Context, member: ts.EnumMember, module: Module, hops: number): boolean {
+  const { members } = member.parent;
+  const first = members.slice(0, members.indexOf(member) + 1).findLast(({ initializer }) => initializer !== undefined);
+  return first?.initializer === undefined || isCountable(ctx, first.initializer, module, hops);
 }
 
 function findInNamespace(ctx: Context, declaration: ts.ModuleDeclaration, name: string, module: Module): Member | undefined {

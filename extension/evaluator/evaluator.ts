@@ -12,7 +12,7 @@ import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
-import { valueOfBinding } from "./names.js";
+import { valueOfBinding, valueOfTarget } from "./names.js";
 import { parseSource, type Source } from "./source.js";
 import type { TypeScript } from "./typescript.js";
 import { tooDeep, unknown } from "./unknown.js";
@@ -37,6 +37,8 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
   const evaluations = new Map<Module, FileEvaluation>();
   const nothing: Snapshot = { read: () => undefined };
   const modules = new Map<string, Module>();
+  /** Known to be true of the snapshot that is being read. */
+  const checked = new Set<Module>();
   const evaluate = createEvaluate(ts);
   const ctx: Context = {
     ts,
@@ -49,15 +51,26 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     steps: 0,
     evaluate: (node, frame) => evaluate(ctx, node, frame),
     valueOf: (binding, frame) => valueOfBinding(ctx, binding, frame),
+    valueOfTarget: (target, span) => valueOfTarget(ctx, target, span),
     load: (module, name, span) => loadSpecifier(ctx, module, name, span),
-    open: (file, text) => open(ctx, sources, file, text),
+    open(file, text) {
+      const present = modules.get(file);
+      // One that nothing led to for a while may rest on texts of then.
+      if (present !== undefined && !checked.has(present)) dropStale(ctx, file, evaluations, checked);
+      const module = open(ctx, sources, file, text);
+      checked.add(module);
+      return module;
+    },
   };
   return {
     evaluateFile(file, snapshot) {
       ctx.snapshot = snapshot;
-      dropStale(ctx, file, evaluations);
+      checked.clear();
       const text = snapshot.read(file);
-      if (typeof text !== "string") return withoutText(file, text);
+      if (typeof text !== "string") {
+        dropStale(ctx, file, evaluations, checked);
+        return withoutText(file, text);
+      }
       const module = ctx.open(file, text);
       const evaluation = evaluations.get(module) ?? evaluateModule(ctx, module);
       evaluations.set(module, evaluation);
@@ -114,13 +127,14 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
   }
 }
 
-/** Forgets every module below `file` that rests on a text, or a module, that is no longer what it was. */
-function dropStale(ctx: Context, file: string, evaluations: Map<Module, FileEvaluation>): void {
+/** Forgets every module below `file` that rests on a text, or a module, that is no longer what it was; the others are checked. */
+function dropStale(ctx: Context, file: string, evaluations: Map<Module, FileEvaluation>, checked: Set<Module>): void {
   const start = ctx.modules.get(file);
   if (start === undefined) return;
   const users = new Map<Module, Module[]>();
   const stale: Module[] = [];
   for (const module of listReached(start)) {
+    checked.add(module);
     const isReplaced = ctx.modules.get(module.file) !== module;
     if (isReplaced || [...module.reads].some(([name, text]) => ctx.snapshot.read(name) !== text)) stale.push(module);
     for (const used of module.imports) users.set(used, [...(users.get(used) ?? []), module]);

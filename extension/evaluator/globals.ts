@@ -96,8 +96,8 @@ export function evaluateGlobalMember(holder: string, member: string, span: Span,
     members.map((known) => known.slice(holder.length + 1)),
   );
   const code = Object.hasOwn(MEMBERS[holder] ?? {}, member) ? "unsupported" : "no-such-property";
-  const why = code === "unsupported" ? "is not followed" : `does not exist${hint}`;
-  return unknown(code, `${quoteText(name)} ${why}.`, "write the value as a constant", { ...origin, span });
+  const why = code === "unsupported" ? "is not followed." : `does not exist${hint}`;
+  return unknown(code, `${quoteText(name)} ${why}`, "write the value as a constant", { ...origin, span });
 }
 
 function globalCallable(name: string): Callable {

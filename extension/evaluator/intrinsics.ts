@@ -5,11 +5,12 @@
  */
 import type ts from "typescript";
 import { listItems, listProperties, type Property } from "./access.js";
-import { evaluateElements, inOrder, MOST_ITEMS } from "./aggregates.js";
+import { evaluateElements, MOST_ITEMS } from "./aggregates.js";
 import { callableOf } from "./callable.js";
 import type { Context, Frame } from "./context.js";
 import { callWith } from "./functions.js";
 import { originOf } from "./operations.js";
+import { inOrder } from "./propertyName.js";
 import { dependent, known, primitive, tooDeep, unsupported } from "./unknown.js";
 import type { Known, Origin, Span, Value } from "./value.js";
 

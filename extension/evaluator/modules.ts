@@ -45,14 +45,14 @@ export function exportOf(ctx: Context, loaded: Loaded, name: string, span: Span)
     const definition = ctx.definitions.get(name);
     if (definition !== undefined) return { kind: "definition", definition };
     const hint = suggest(name, ctx.definitions.keys());
-    return fail(span, "no-such-export", `${quoteText(ctx.specifier)} exports no ${quoteText(name)}${hint}.`);
+    return fail(span, "no-such-export", `${quoteText(ctx.specifier)} exports no ${quoteText(name)}${hint}`);
   }
   const { module } = loaded;
   const found = findExport(ctx, module, name, new Set());
   if (found?.kind === "failed") return { kind: "failed", unknown: hop(name, module, span, found.unknown) };
   if (found !== undefined) return found;
   const hint = suggest(name, exportsOf(ctx.ts, module.source).named.keys());
-  return fail(span, "no-such-export", `${quoteText(baseName(module.file))} exports no ${quoteText(name)}${hint}.`);
+  return fail(span, "no-such-export", `${quoteText(baseName(module.file))} exports no ${quoteText(name)}${hint}`);
 }
 
 /** What an expression made of names and dots stands for; `undefined` when only evaluating it could tell. */

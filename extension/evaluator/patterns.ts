@@ -5,9 +5,9 @@
  */
 import type ts from "typescript";
 import { getProperty, listItems, listProperties } from "./access.js";
-import { evaluateName } from "./aggregates.js";
 import type { Context, Frame } from "./context.js";
 import { originOf } from "./operations.js";
+import { evaluateName } from "./propertyName.js";
 import { type Binding, resolveName } from "./source.js";
 import { dependent, known, unsupported } from "./unknown.js";
 import type { Span, Value } from "./value.js";

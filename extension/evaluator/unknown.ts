@@ -45,10 +45,10 @@ export function tooDeep(node: ts.Node, module: Module): Unknown {
   return unknown("too-deep", `${quote(node, module)} takes too many steps to work out.`, "write the value as a constant", origin);
 }
 
-/** "did you mean" for the nearest of the candidates, or nothing. */
+/** The end of a sentence: "did you mean" for the nearest of the candidates, if one is near. */
 export function suggest(name: string, candidates: Iterable<string>): string {
   const near = findNearest(name, candidates);
-  return near === undefined ? "" : `; did you mean \`${near}\`?`;
+  return near === undefined ? "." : `; did you mean \`${near}\`?`;
 }
 
 export function spanOf(node: ts.Node, module: Module): Span {
