@@ -120,7 +120,8 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
     if (target?.kind !== "definition") return listCallsElsewhere(ctx, node, module);
     const frames: readonly Frame[] = listActivations(ctx, node, module);
     return frames.flatMap((frame) => evaluateDefinitionCall(ctx, target.definition, node, frame).call ?? []);
-  } catch {
+  } catch (e) {
+    console.log(e);
     // Every walk is bounded, so this should not happen; a host with a smaller stack must not go down by it.
     ctx.depth = 0;
     return tooDeep(node, module);

@@ -48,6 +48,19 @@ describe("an edit", () => {
     expect(parse.mock.calls.map(([file]) => file)).toEqual(["/constants.ts"]);
   });
 
+  it("in a file that is imported again after a while is seen then", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(FIXTURE);
+    const importing = files.get("/a.ts") ?? "";
+    expect(teethOf(evaluator.evaluateFile("/a.ts", snapshotOf(files)))).toEqual([40]);
+    files.set("/a.ts", "export {};");
+    evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    files.set("/constants.ts", "export const T = 41;");
+    evaluator.evaluateFile("/a.ts", snapshotOf(files));
+    files.set("/a.ts", importing);
+    expect(teethOf(evaluator.evaluateFile("/a.ts", snapshotOf(files)))).toEqual([41]);
+  });
+
   it("in a ring of files reaches all of it", () => {
     const evaluator = makeEvaluator();
     const files = splitFiles(`//- a.ts
