@@ -23,6 +23,8 @@ export function importedAt(analysis: Analysis, file: string, offset: number): Im
   const list = rangeAround(text, LIST, offset);
   const word = list && rangeAround(text, WORD, offset);
   if (list === undefined || word === undefined) return undefined;
+  const used = usedAs(analysis, file, word.text);
+  if (used.length === 1) return { span: { file, start: word.start, end: word.end }, keys: used };
   const name = originalName(text.slice(list.start, list.end), word.text);
   const near = declarationsCalled(analysis, name, analysis.files.get(file)?.dependencies);
   // A file that only passes names on reads nothing itself: nothing then narrows the search.
@@ -36,19 +38,30 @@ function originalName(list: string, word: string): string {
   return renamed?.[1] ?? word;
 }
 
+/** What the name stands for where this file uses it, whatever it is called where it is declared. */
+function usedAs(analysis: Analysis, file: string, word: string): Span[] {
+  const text = analysis.snapshot.read(file) ?? "";
+  const leaves = [...analysis.files.values()].flatMap(({ calls }) => calls).flatMap(leavesOf);
+  const uses = leaves
+    .flatMap(({ value }) => [...originsOf(value)])
+    .filter(({ kind, span }) => kind === "name" && span.file === file && text.slice(span.start, span.end) === word);
+  return distinct(uses.flatMap(({ declaredAt }) => declaredAt ?? []));
+}
+
 function declarationsCalled(analysis: Analysis, name: string, files?: readonly string[]): Span[] {
-  const found: Span[] = [];
-  for (const { calls } of analysis.files.values()) {
-    const named = [
-      ...calls.flatMap(leavesOf).flatMap(({ value }) => [...originsOf(value)].map(({ declaredAt }) => declaredAt)),
-      ...calls.map(({ binding }) => binding?.span),
-    ];
-    for (const at of named) {
-      if (at === undefined || files?.includes(at.file) === false || found.some((span) => sameSpan(span, at))) continue;
-      if (analysis.snapshot.read(at.file)?.slice(at.start, at.end) === name) found.push(at);
-    }
-  }
-  return found;
+  const calls = [...analysis.files.values()].flatMap((evaluation) => evaluation.calls);
+  const origins = calls.flatMap(leavesOf).flatMap(({ value }) => [...originsOf(value)]);
+  const declared = [...origins.map(({ declaredAt }) => declaredAt), ...calls.map(({ binding }) => binding?.span)];
+  return distinct(
+    declared.flatMap((at) => {
+      if (at === undefined || files?.includes(at.file) === false) return [];
+      return analysis.snapshot.read(at.file)?.slice(at.start, at.end) === name ? [at] : [];
+    }),
+  );
+}
+
+function distinct(spans: readonly Span[]): Span[] {
+  return spans.filter((span, index) => spans.findIndex((other) => sameSpan(other, span)) === index);
 }
 
 function rangeAround(text: string, pattern: RegExp, offset: number): { start: number; end: number; text: string } | undefined {

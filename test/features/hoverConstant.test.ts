@@ -120,6 +120,23 @@ export const hoist = mechanism("hoist", {
     );
   });
 
+  it("is the same in the import of a default export", () => {
+    const gearing = "export const PINION = 20;\nconst WHEEL = 80;\nexport default WHEEL;";
+    const source = hoist('import B/*|*/IG, { PINION } from "./gearing.js";', "PINION, BIG");
+    expect(checkStatic(robot({ gearing, hoist: source }), "BIG").rows).toEqual(expected);
+  });
+
+  it.each([
+    ["a member of an enum", "enum Teeth { Pinion = 20, Wh/*|*/eel = 80 }", "Teeth.Pinion, Teeth.Wheel", "Wheel"],
+    ["a field of a class", "class Gear { static readonly WH/*|*/EEL = 80; }", "20, Gear.WHEEL", "WHEEL"],
+    ["a part of a destructured object", "const { big: B/*|*/IG } = { big: 80 } as const;", "20, BIG", "BIG"],
+    ["an item of a list", "const TEETH = [20, 8/*|*/0] as const;", "TEETH[0], TEETH[1]", "80"],
+    ["the chosen one of two", "const SMALL = false;\nconst WHEEL = SMALL ? 40 : 8/*|*/0;", "20, WHEEL", "80"],
+    ["a variable that never changes", "let WH/*|*/EEL = 80;", "20, WHEEL", "WHEEL"],
+  ])("is the same for %s", (_, before, teeth, about) => {
+    expect(checkStatic(robot({ hoist: hoist(before, teeth) }), about).rows).toEqual(expected);
+  });
+
   it("is the same for a property, at its name and at its use", () => {
     const gearing = (name: string): string => `export const TEETH = { pinion: 20, ${name}: 80 } as const;`;
     const source = (use: string): string => hoist('import { TEETH } from "./gearing.js";', `TEETH.pinion, TEETH.${use}`);
