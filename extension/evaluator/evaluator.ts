@@ -120,8 +120,7 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
     if (target?.kind !== "definition") return listCallsElsewhere(ctx, node, module);
     const frames: readonly Frame[] = listActivations(ctx, node, module);
     return frames.flatMap((frame) => evaluateDefinitionCall(ctx, target.definition, node, frame).call ?? []);
-  } catch (e) {
-    console.log(e);
+  } catch {
     // Every walk is bounded, so this should not happen; a host with a smaller stack must not go down by it.
     ctx.depth = 0;
     return tooDeep(node, module);
