@@ -27,6 +27,8 @@ export async function bundleTests({ folder, format, writeEntry }: BundleOptions)
     packages: "external",
     platform: "node",
     format,
+    // A CommonJS module has no such property, but knows its folder by another name.
+    define: format === "cjs" ? { "import.meta.dirname": "__dirname" } : {},
     target: "node20",
     sourcemap: "inline",
     logLevel: "error",
