@@ -53,7 +53,7 @@ export interface SteadyHeat {
 }
 
 /** Above this no motor is one any more: the heat has run away. */
-const RUNAWAY_C = 2000;
+export const RUNAWAY_C = 2000;
 
 /**
  * Steady temperatures under copper heat that grows with the winding's temperature; null: none exists, the heat runs away.

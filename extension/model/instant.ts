@@ -44,6 +44,8 @@ export interface Instant extends Conditions {
 
 /** The motor's constants at its temperature, and the command at its time. */
 interface Conditions {
+  /** Temperature that the constants below stand for, °C. */
+  windingC: number;
   resistanceOhm: number;
   resistanceByHeat: number;
   /** Winding, leads and supply as one motor sees them at this command, ohm. */
@@ -85,6 +87,7 @@ export function createInstant(): Instant {
     trainGap: 1,
     gripGap: 1,
     startGap: 1,
+    windingC: Number.NaN,
     resistanceOhm: 0,
     resistanceByHeat: 0,
     seriesOhm: 0,
@@ -103,20 +106,24 @@ export function createInstant(): Instant {
 
 /** Constants at a winding temperature and the ramp's command at a time. */
 export function setConditions(plant: Plant, timeS: number, windingC: number, at: Instant): void {
-  const { motor, bus } = plant;
-  const copper = copperFactor(windingC);
-  const magnet = magnetFactor(motor.magnet, windingC);
-  const magnetByHeat = magnetFactorSlope(motor.magnet, windingC);
-  const driven = Math.max(motor.torqueConstantNmPerA, motor.backEmfVPerRadPerS);
+  if (windingC !== at.windingC) setConstants(plant, windingC, at);
+  const { bus } = plant;
   const ramping = timeS < plant.rampS;
   at.command = ramping ? (plant.duty * timeS) / plant.rampS : plant.duty;
   at.commandByTime = ramping ? plant.duty / plant.rampS : 0;
   at.headV = Math.max(bus.openCircuitV - plant.dropV, 0);
-  at.resistanceOhm = motor.resistanceOhm * copper;
-  at.resistanceByHeat = motor.resistanceOhm * copperFactorSlope(windingC);
   const supplyOhm = plant.count * bus.resistanceOhm;
   at.seriesOhm = at.resistanceOhm + plant.leadOhm + at.command * at.command * supplyOhm;
   at.seriesByTime = 2 * at.command * at.commandByTime * supplyOhm;
+}
+
+function setConstants({ motor }: Plant, windingC: number, at: Instant): void {
+  const magnet = magnetFactor(motor.magnet, windingC);
+  const magnetByHeat = magnetFactorSlope(motor.magnet, windingC);
+  const driven = Math.max(motor.torqueConstantNmPerA, motor.backEmfVPerRadPerS);
+  at.windingC = windingC;
+  at.resistanceOhm = motor.resistanceOhm * copperFactor(windingC);
+  at.resistanceByHeat = motor.resistanceOhm * copperFactorSlope(windingC);
   at.backEmf = motor.backEmfVPerRadPerS * magnet;
   at.backEmfByHeat = motor.backEmfVPerRadPerS * magnetByHeat;
   at.torqueConstant = motor.torqueConstantNmPerA * magnet;

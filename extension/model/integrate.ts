@@ -20,7 +20,7 @@ export interface OdeSystem extends Rates {
   /** Size of each component that counts as 1 for the tolerance. */
   readonly scale: Float64Array;
   readonly watches: readonly Watch[];
-  /** Everything at the start of a step: rates, their derivatives, and the watched values. */
+  /** Everything at a point where a step may start: rates, their derivatives, and the watched values. */
   readonly prepare: (timeS: number, state: Float64Array, start: StepStart, watched: Float64Array) => void;
   /** The watched values at a point. */
   readonly watch: (timeS: number, state: Float64Array, watched: Float64Array) => void;
@@ -32,7 +32,7 @@ export interface Course {
   readonly endS: number;
   readonly firstStepS: number;
   readonly mostSteps: number;
-  /** After each step; `at` gives states inside it. */
+  /** After each step, the system prepared at its end; `at` gives states inside it. It may set components that no rate depends on. */
   readonly onStep?: (fromS: number, toS: number, state: Float64Array, at: Stepper["at"]) => void;
   readonly onNote?: (watch: number, timeS: number, state: Float64Array, rising: boolean) => void;
 }
@@ -60,13 +60,10 @@ const AT_START = 1e-6;
 export function integrate(system: OdeSystem, startS: number, state: Float64Array, course: Course): Arrival {
   const { size, watches } = system;
   const stepper = createStepper(system);
-  const start: StepStart = {
-    rates: new Float64Array(size),
-    jacobian: new Float64Array(size * size),
-    timeRates: new Float64Array(size),
-  };
-  const before = new Float64Array(watches.length);
-  const after = new Float64Array(watches.length);
+  let start = createStart(size);
+  let end = createStart(size);
+  let before = new Float64Array(watches.length);
+  let after = new Float64Array(watches.length);
   const inner = new Float64Array(size);
   const search = { system, stepper, inner, after: new Float64Array(watches.length) };
   const least = 1e-14;
@@ -91,13 +88,13 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     const next = length * growth;
     let share = 1;
     let landed = -1;
-    system.watch(timeS + length, stepper.end, after);
+    system.prepare(timeS + length, stepper.end, end, after);
     for (let i = 0; i < watches.length; i++) {
       const watch = watches[i] as Watch;
       if (watch.kind === "note") continue;
       const crossing = firstCrossing(search, timeS, length, i, before, after, signs);
       if (crossing === null) continue;
-      if (crossing < AT_START) signs[i] = -(signs[i] as number);
+      if (watch.kind === "kink" && crossing < AT_START) signs[i] = -(signs[i] as number);
       else if (landed < 0 || crossing < share) {
         share = crossing;
         landed = i;
@@ -111,6 +108,7 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
         : Math.min(share * (1 + PAST_KINK), 1) * length;
       if (!stops && cut < length) stepper.step(timeS, state, cut, start);
       length = cut;
+      system.prepare(timeS + length, stepper.end, end, after);
       finishStep(landed);
       const nextStepS = Math.max(next - cut, cut);
       if (stops) return { timeS, stop: landed, finished: true, steps, nextStepS };
@@ -127,14 +125,19 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     const fromS = timeS;
     timeS = length >= course.endS - timeS ? course.endS : timeS + length;
     state.set(stepper.end);
+    [start, end] = [end, start];
+    [before, after] = [after, before];
     course.onStep?.(fromS, timeS, state, stepper.at);
-    system.prepare(timeS, state, start, before);
     for (let i = 0; i < watches.length; i++) {
       const value = before[i] as number;
       if (i === landed) signs[i] = -(signs[i] as number);
       else if (value !== 0) signs[i] = value > 0 ? 1 : -1;
     }
   }
+}
+
+function createStart(size: number): StepStart {
+  return { rates: new Float64Array(size), jacobian: new Float64Array(size * size), timeRates: new Float64Array(size) };
 }
 
 interface Search {

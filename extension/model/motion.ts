@@ -9,23 +9,36 @@ import { BY_HEAT, BY_PROGRESS, BY_SPEED, BY_TIME, type Instant, setConditions, s
 import type { Plant } from "./plant.js";
 import { setSupply } from "./supplyCurrent.js";
 
-/** Fills `at` for a progress (rad from the start), an output speed along the travel (rad/s), a winding temperature and a time. */
-export function moveAt(plant: Plant, timeS: number, progress: number, speed: number, windingC: number, at: Instant): void {
+/**
+ * Fills `at` for a progress (rad from the start), an output speed along the travel (rad/s), a winding temperature and a time;
+ * its derivatives only where asked for.
+ */
+export function moveAt(
+  plant: Plant,
+  timeS: number,
+  progress: number,
+  speed: number,
+  windingC: number,
+  at: Instant,
+  derive: boolean,
+): void {
   setConditions(plant, timeS, windingC, at);
   const { ratio } = plant.train;
   at.motorSpeed = ratio * speed;
-  setGradient(at.motorSpeedBy, 0, ratio, 0, 0);
-  const onLine = setCurrent(plant, at);
-  setTorque(plant, at);
-  const slips = accelerate(plant, progress, speed, at);
+  const onLine = setCurrent(plant, at, derive);
+  setTorque(plant, at, derive);
+  const slips = accelerate(plant, progress, speed, at, derive);
   at.startGap = at.speedRate;
   at.progressRate = speed;
-  setGradient(at.progressRateBy, 0, 1, 0, 0);
-  setSupply(plant, at, onLine && !slips);
+  if (derive) {
+    setGradient(at.motorSpeedBy, 0, ratio, 0, 0);
+    setGradient(at.progressRateBy, 0, 1, 0, 0);
+  }
+  setSupply(plant, at, onLine && !slips, derive);
 }
 
 /** min(line, limit), both ways. True on the line. */
-function setCurrent(plant: Plant, at: Instant): boolean {
+function setCurrent(plant: Plant, at: Instant, derive: boolean): boolean {
   const line = (at.command * at.headV - at.backEmf * at.motorSpeed) / at.seriesOhm;
   at.limitGap = plant.limitA - Math.abs(line);
   if (at.limitGap < 0) {
@@ -34,24 +47,27 @@ function setCurrent(plant: Plant, at: Instant): boolean {
     return false;
   }
   at.currentA = line;
-  setGradient(
-    at.currentBy,
-    0,
-    (-at.backEmf * plant.train.ratio) / at.seriesOhm,
-    (-at.backEmfByHeat * at.motorSpeed - line * at.resistanceByHeat) / at.seriesOhm,
-    (at.commandByTime * at.headV - line * at.seriesByTime) / at.seriesOhm,
-  );
+  if (derive) {
+    setGradient(
+      at.currentBy,
+      0,
+      (-at.backEmf * plant.train.ratio) / at.seriesOhm,
+      (-at.backEmfByHeat * at.motorSpeed - line * at.resistanceByHeat) / at.seriesOhm,
+      (at.commandByTime * at.headV - line * at.seriesByTime) / at.seriesOhm,
+    );
+  }
   return true;
 }
 
 /** T = k·(I − I_loss), k the larger constant where the shaft drives the motor. */
-function setTorque(plant: Plant, at: Instant): void {
+function setTorque(plant: Plant, at: Instant, derive: boolean): void {
   const useful = at.currentA - plant.breakawayA - plant.lossSlopeAsPerRad * at.motorSpeed;
   const driven = useful < 0;
   const constant = driven ? at.drivenConstant : at.torqueConstant;
   const constantByHeat = driven ? at.drivenConstantByHeat : at.torqueConstantByHeat;
   at.drivenGap = useful;
   at.torqueNm = constant * useful;
+  if (!derive) return;
   const by = at.currentBy;
   setGradient(
     at.torqueBy,
@@ -68,11 +84,10 @@ function setTorque(plant: Plant, at: Instant): void {
  * (Lagrange's equation, any textbook of mechanisms). Wheels: no more than the ground takes; then torque and current follow from
  * the acceleration. True where they slip.
  */
-function accelerate(plant: Plant, progress: number, speed: number, at: Instant): boolean {
+function accelerate(plant: Plant, progress: number, speed: number, at: Instant, derive: boolean): boolean {
   const { load, direction, train } = plant;
   const position = load.startRad + direction * progress;
   const opposing = load.opposing(position, direction);
-  const opposingSlope = load.slope(position);
   const inertia = load.inertia(position) + train.inertiaKgM2;
   const inertiaSlope = direction * load.inertiaSlope(position);
   const centrifugal = 0.5 * inertiaSlope * speed * speed;
@@ -95,14 +110,16 @@ function accelerate(plant: Plant, progress: number, speed: number, at: Instant):
   const total = plant.rotorKgM2 + inertiaShare * inertia;
   const rate = (drive * at.torqueNm - torqueShare * opposing - inertiaShare * centrifugal) / total;
   at.speedRate = rate;
-  const by = at.torqueBy;
-  setGradient(
-    at.speedRateBy,
-    (drive * (by[BY_PROGRESS] as number) - torqueShare * opposingSlope - inertiaShare * inertiaSlope * rate) / total,
-    (drive * (by[BY_SPEED] as number) - inertiaShare * inertiaSlope * speed) / total,
-    (drive * (by[BY_HEAT] as number)) / total,
-    (drive * (by[BY_TIME] as number)) / total,
-  );
+  if (derive) {
+    const by = at.torqueBy;
+    setGradient(
+      at.speedRateBy,
+      (drive * (by[BY_PROGRESS] as number) - torqueShare * load.slope(position) - inertiaShare * inertiaSlope * rate) / total,
+      (drive * (by[BY_SPEED] as number) - inertiaShare * inertiaSlope * speed) / total,
+      (drive * (by[BY_HEAT] as number)) / total,
+      (drive * (by[BY_TIME] as number)) / total,
+    );
+  }
   return load.traction !== undefined && gripping(plant, load.traction, opposing, at);
 }
 

@@ -3,12 +3,12 @@ import type { Plant } from "./plant.js";
 
 /**
  * `moving` with inertia; `following` without it: speed follows torque at once; `blocked` at full command, watching for the
- * moment it starts (`startsAs`) or not at all; `held` by a controller at one motor's torque, N·m.
+ * moment it starts (`startsAs`) or not at all; `held` by a controller at one motor's torque (N·m) and speed (rad/s).
  */
 export type Mode =
   | { readonly kind: "moving" | "following" }
   | { readonly kind: "blocked"; readonly startsAs?: "moving" | "following" }
-  | { readonly kind: "held"; readonly torqueNm: number };
+  | { readonly kind: "held"; readonly torqueNm: number; readonly motorSpeedRadPerS: number };
 
 /** Where in the state each quantity stands; −1: not there. */
 export interface Layout {

@@ -20,6 +20,8 @@ export interface MotionSystem extends OdeSystem {
   readonly network: HeatNetwork | null;
   /** The instant at a point of the course; valid until the next call. */
   readonly instantAt: (timeS: number, state: Float64Array) => Instant;
+  /** The instant last prepared: the end of the last step. */
+  readonly front: Instant;
   /** Current that the protection carries at an instant, A. */
   readonly carried: (now: Instant) => number;
   /** Progress (rad), or speed (rad/s) of a flywheel, at which the next stop stands. */
@@ -37,37 +39,48 @@ export interface MotionScales {
 /** Below this share of the speed scale it stands still. */
 const STANDSTILL_SHARE = 1e-9;
 const HEAT_SCALE_K = 100;
+/** Sums are usually this share of full current over the whole time. */
+const SUM_SHARE = 0.1;
 
 export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): MotionSystem {
   const layout = layoutOf(plant);
   const network = heatNetworkOf(plant.motor);
   const rates = motionRates(plant, layout, network);
   const at = createInstant();
+  const front = createInstant();
   const released = createInstant();
   let target = plant.spanRad;
   const stillBelow = STANDSTILL_SHARE * scales.speedRadPerS;
-  const { watches, values, index } = motionWatches({ plant, mode, layout, network, rates, stillBelow, target: () => target });
+  const { watches, values, index } = motionWatches({
+    plant,
+    mode,
+    layout,
+    network,
+    rates,
+    stillBelow,
+    currentScaleA: scales.currentA,
+    target: () => target,
+  });
 
-  function instantAt(timeS: number, state: Float64Array): Instant {
+  function fillInstant(timeS: number, state: Float64Array, now: Instant, derive: boolean): void {
     const windingC = layout.winding < 0 ? SHEET_TEMPERATURE_C : (state[layout.winding] as number);
     const progress = state[layout.progress] as number;
     switch (mode.kind) {
       case "moving":
-        moveAt(plant, timeS, progress, state[layout.speed] as number, windingC, at);
+        moveAt(plant, timeS, progress, state[layout.speed] as number, windingC, now, derive);
         break;
       case "following":
-        followAt(plant, timeS, progress, windingC, at);
+        followAt(plant, timeS, progress, windingC, now);
         break;
       case "held":
-        heldAt(plant, mode.torqueNm, windingC, at);
+        heldAt(plant, mode.torqueNm, mode.motorSpeedRadPerS, windingC, now);
         break;
       case "blocked":
-        blockedAt(plant, timeS, windingC, at);
-        if (mode.startsAs === "moving") moveAt(plant, timeS, progress, 0, windingC, released);
+        blockedAt(plant, timeS, windingC, now);
+        if (mode.startsAs === "moving") moveAt(plant, timeS, progress, 0, windingC, released, false);
         if (mode.startsAs === "following") followAt(plant, timeS, progress, windingC, released);
-        at.startGap = released.startGap;
+        now.startGap = released.startGap;
     }
-    return at;
   }
 
   function watchInstant(state: Float64Array, now: Instant, watched: Float64Array): void {
@@ -81,19 +94,29 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     layout,
     index,
     network,
-    instantAt,
+    instantAt: (timeS, state) => {
+      fillInstant(timeS, state, at, true);
+      return at;
+    },
+    front,
     carried: rates.carried,
     setTarget: (value) => {
       target = value;
     },
-    evaluate: (timeS, state, out) => rates.fill(state, instantAt(timeS, state), out),
-    prepare: (timeS, state, start, watched) => {
-      const now = instantAt(timeS, state);
-      rates.fill(state, now, start.rates);
-      rates.differentiate(now, start.jacobian, start.timeRates);
-      watchInstant(state, now, watched);
+    evaluate: (timeS, state, out) => {
+      fillInstant(timeS, state, at, false);
+      rates.fill(state, at, out);
     },
-    watch: (timeS, state, watched) => watchInstant(state, instantAt(timeS, state), watched),
+    prepare: (timeS, state, start, watched) => {
+      fillInstant(timeS, state, front, true);
+      rates.fill(state, front, start.rates);
+      rates.differentiate(front, start.jacobian, start.timeRates);
+      watchInstant(state, front, watched);
+    },
+    watch: (timeS, state, watched) => {
+      fillInstant(timeS, state, at, true);
+      watchInstant(state, at, watched);
+    },
   };
 }
 
@@ -103,7 +126,7 @@ function scaleOf(plant: Plant, layout: Layout, scales: MotionScales): Float64Arr
   scale[layout.speed] = scales.speedRadPerS;
   if (layout.winding >= 0) scale[layout.winding] = HEAT_SCALE_K;
   if (layout.housing >= 0) scale[layout.housing] = HEAT_SCALE_K;
-  scale[layout.squares] = scales.currentA ** 2 * scales.timeS;
-  scale[layout.energy] = plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
+  scale[layout.squares] = SUM_SHARE * scales.currentA ** 2 * scales.timeS;
+  scale[layout.energy] = SUM_SHARE * plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
   return scale;
 }

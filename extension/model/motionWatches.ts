@@ -3,7 +3,7 @@
  *
  * Deliberately not here: what follows from it (travelRun.ts).
  */
-import type { HeatNetwork } from "./heat.js";
+import { type HeatNetwork, RUNAWAY_C } from "./heat.js";
 import type { Instant } from "./instant.js";
 import type { Watch } from "./integrate.js";
 import type { Layout, Mode } from "./motionLayout.js";
@@ -21,8 +21,8 @@ export interface WatchIndex {
   readonly targetSpeed: number;
   /** A blocked mechanism would start. */
   readonly breakaway: number;
-  /** A fuse's current falls below its first gate. */
-  readonly fuseReset: number;
+  /** The winding is past anything that is still a motor. */
+  readonly burnt: number;
   readonly currentPeak: number;
   readonly supplyPeak: number;
   readonly windingPeak: number;
@@ -49,13 +49,26 @@ export interface WatchedThings {
   readonly rates: MotionRates;
   /** Output speed below which it stands still, rad/s. */
   readonly stillBelow: number;
+  /** One motor's full current, A: what counts as nothing is judged by it. */
+  readonly currentScaleA: number;
   /** Progress (rad) or, for a flywheel, speed (rad/s) to reach. */
   readonly target: () => number;
 }
 
 const KINK: Watch = { kind: "kink", crosses: "both" };
+/** Values that only fade towards a kink stay this share of their size away from it, and no rounding makes them cross. */
+const FADED = 1e-9;
 
-export function motionWatches({ plant, mode, layout, network, rates, stillBelow, target }: WatchedThings): MotionWatches {
+export function motionWatches({
+  plant,
+  mode,
+  layout,
+  network,
+  rates,
+  stillBelow,
+  currentScaleA,
+  target,
+}: WatchedThings): MotionWatches {
   const watches: Watch[] = [];
   const values: WatchValue[] = [];
   const listen = (present: boolean, watch: Watch, value: WatchValue): number => {
@@ -71,13 +84,26 @@ export function motionWatches({ plant, mode, layout, network, rates, stillBelow,
   const floorV = supply?.mustStayAbove?.voltageV;
   const flywheel = plant.load.kind === "flywheel";
 
-  listen(Number.isFinite(plant.limitA) && mode.kind !== "held", KINK, (_, now) => now.limitGap);
-  listen(turning && motor.backEmfVPerRadPerS > motor.torqueConstantNmPerA, KINK, (_, now) => now.drivenGap);
-  listen(turning && plant.train.efficiency < 1, KINK, (_, now) => now.trainGap);
-  listen(moving && plant.load.traction !== undefined, KINK, (_, now) => now.gripGap);
-  listen(turning, KINK, (_, now) => now.supplyA);
-  for (const [multiple] of fuse ? fuseGates(fuse.ratingA).slice(1) : []) {
-    listen(true, KINK, (_, now) => rates.carried(now) - multiple * (fuse?.ratingA ?? 0));
+  const kink = (present: boolean, scale: number, value: (now: Instant) => number): void => {
+    const band = FADED * scale;
+    listen(present, KINK, (_, now) => {
+      const found = value(now);
+      return Math.abs(found) < band ? 0 : found;
+    });
+  };
+  const torqueScale = plant.count * plant.train.ratio * motor.torqueConstantNmPerA * currentScaleA;
+  kink(Number.isFinite(plant.limitA) && mode.kind !== "held", currentScaleA, (now) => now.limitGap);
+  kink(
+    turning && motor.backEmfVPerRadPerS > motor.torqueConstantNmPerA,
+    drivenScale(plant, mode, currentScaleA),
+    (now) => now.drivenGap,
+  );
+  kink(turning && plant.train.efficiency < 1, torqueScale, (now) => now.trainGap);
+  const slipScale = plant.load.traction ? torqueScale / plant.load.traction.groundInertiaKgM2 : 1;
+  kink(moving && plant.load.traction !== undefined, slipScale, (now) => now.gripGap);
+  kink(turning, plant.count * currentScaleA, (now) => now.supplyA);
+  for (const [multiple] of fuse ? fuseGates(fuse.ratingA) : []) {
+    kink(true, 0, (now) => rates.carried(now) - multiple * (fuse?.ratingA ?? 0));
   }
 
   const stop = (crosses: Watch["crosses"]): Watch => ({ kind: "stop", crosses });
@@ -94,11 +120,7 @@ export function motionWatches({ plant, mode, layout, network, rates, stillBelow,
       : listen(turning, stop("down"), (_, now) => now.startGap / plant.train.ratio - stillBelow),
     targetSpeed: listen(moving && flywheel, component(stop("up"), 1), (at) => (at[1] as number) - target()),
     breakaway: listen(mode.kind === "blocked" && mode.startsAs !== undefined, stop("up"), (_, now) => now.startGap),
-    fuseReset: listen(
-      fuse !== null,
-      stop("down"),
-      (_, now) => rates.carried(now) - (fuse ? (fuseGates(fuse.ratingA)[0]?.[0] ?? 1) * fuse.ratingA : 0),
-    ),
+    burnt: listen(network !== null, component(stop("up"), layout.winding), (at) => (at[layout.winding] as number) - RUNAWAY_C),
     currentPeak: listen(true, note("down"), rateOf("currentBy")),
     supplyPeak: listen(true, note("down"), rateOf("supplyBy")),
     windingPeak: listen(network !== null, note("down"), rates.windingRate),
@@ -116,4 +138,9 @@ export function motionWatches({ plant, mode, layout, network, rates, stillBelow,
     floor: listen(floorV !== undefined, note("both"), (_, now) => now.supplyV - (floorV ?? 0)),
   };
   return { watches, values, index };
+}
+
+/** Without inertia the gap is a torque, with it a current. */
+function drivenScale(plant: Plant, mode: Mode, currentA: number): number {
+  return mode.kind === "following" ? plant.motor.torqueConstantNmPerA * currentA : currentA;
 }

@@ -13,6 +13,9 @@ export interface MechanismNumbers {
   readonly stageEfficiency: number;
   readonly available: AvailableNumbers;
   readonly hardest: HardestNumbers;
+  /** null for a roller. */
+  readonly travel: TravelNumbers | null;
+  /** null for a flywheel. */
   readonly hold: HoldNumbers | null;
   readonly stall: StallNumbers;
   readonly feedforward: FeedforwardNumbers;
@@ -48,12 +51,36 @@ export interface HardestNumbers {
   readonly limitedBy: LimitedBy;
 }
 
-export interface HoldNumbers {
-  readonly motorCurrentA: number;
+/** One travel from rest at full command, from cold. */
+export interface TravelNumbers {
+  /** null where it does not arrive. */
+  readonly timeS: number | null;
+  /** In the load's own coordinate per second: m/s, or rad/s for arm, loadCurve and flywheel. */
+  readonly endSpeed: number;
+  readonly peakMotorCurrentA: number;
+  readonly rmsMotorCurrentA: number;
+  /** From the supply's terminals; what is sent back is not credited. */
+  readonly sourceEnergyJ: number;
+  /** null without thermal data. */
+  readonly windingPeakC: number | null;
+  /** null: protection stays closed, or its time cannot be told. */
+  readonly tripsAfterS: number | null;
 }
 
-/** Full command with the output shaft blocked. */
+/** Holding the load where it pulls hardest, from cold. */
+export interface HoldNumbers {
+  readonly motorCurrentA: number;
+  readonly tripsAfterS: number | null;
+  /** After `holdFor`, or for ever; null without thermal data or where the heat runs away. */
+  readonly windingFinalC: number | null;
+  /** Until the winding passes its limit; null: never, or no thermal data. */
+  readonly limitAfterS: number | null;
+}
+
+/** Full command with the output shaft blocked, from cold. */
 export interface StallNumbers {
   readonly motorCurrentA: number;
   readonly sourceCurrentA: number;
+  readonly tripsAfterS: number | null;
+  readonly windingLimitAfterS: number | null;
 }

@@ -3,10 +3,11 @@
  *
  * Deliberately not here: deciding when a course ends (travel.ts, holdRun.ts).
  */
+import type { Instant } from "./instant.js";
 import type { Course } from "./integrate.js";
 import type { MotionSystem } from "./motionSystem.js";
 import type { Plant } from "./plant.js";
-import { isBorderline } from "./protection.js";
+import { fuseRate, isBorderline } from "./protection.js";
 
 /** A moment of a course, for charts; motor values are one motor's. */
 export interface TravelSample {
@@ -73,8 +74,12 @@ export function createObserver(plant: Plant, sampling: boolean): Observer {
   const floorV = supply?.mustStayAbove?.voltageV;
   let belowSinceS: number | null = null;
 
-  function peaks(system: MotionSystem, timeS: number, state: Float64Array): void {
-    const now = system.instantAt(timeS, state);
+  /** Below its first gate a fuse forgets what it has borne. */
+  function fuseRests(system: MotionSystem): boolean {
+    return protection?.kind === "fuse" && fuseRate(protection.ratingA, system.carried(system.front), "fast").rate === 0;
+  }
+
+  function peaks(system: MotionSystem, timeS: number, state: Float64Array, now: Instant): void {
     seen.peakMotorCurrentA = Math.max(seen.peakMotorCurrentA, Math.abs(now.currentA));
     seen.peakSourceCurrentA = Math.max(seen.peakSourceCurrentA, now.supplyA);
     if (!now.supplied) seen.supplied = false;
@@ -102,7 +107,7 @@ export function createObserver(plant: Plant, sampling: boolean): Observer {
   }
 
   function look(system: MotionSystem, timeS: number, state: Float64Array): void {
-    peaks(system, timeS, state);
+    peaks(system, timeS, state, system.instantAt(timeS, state));
     const below = floorV !== undefined && system.instantAt(timeS, state).supplyV < floorV;
     if (below && belowSinceS === null) belowSinceS = timeS;
     if (sampling) sample(system, timeS, state);
@@ -122,13 +127,18 @@ export function createObserver(plant: Plant, sampling: boolean): Observer {
           at(share, inner);
           sample(system, fromS + share * (toS - fromS), inner);
         }
-        peaks(system, toS, state);
+        peaks(system, toS, state, system.front);
+        if (fuseRests(system)) {
+          state[system.layout.protection] = 0;
+          state[system.layout.fast] = 0;
+        }
         if (sampling) sample(system, toS, state);
       },
       onNote: (watch, timeS, state, rising) => {
         const { index } = system;
-        if (watch === index.currentPeak || watch === index.supplyPeak || watch === index.windingPeak) peaks(system, timeS, state);
-        else if (watch === index.windingLimit) seen.windingLimitAfterS ??= timeS;
+        if (watch === index.currentPeak || watch === index.supplyPeak || watch === index.windingPeak) {
+          peaks(system, timeS, state, system.instantAt(timeS, state));
+        } else if (watch === index.windingLimit) seen.windingLimitAfterS ??= timeS;
         else if (watch === index.mayOpen) seen.mayOpenAfterS ??= timeS;
         else if (watch === index.opens && seen.opensAfterS === null && !seen.borderline) {
           // So near to the held current the time would mean nothing.

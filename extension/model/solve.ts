@@ -2,19 +2,35 @@
 import type { Drive } from "./drive.js";
 import { feedforwardNumbers } from "./feedforward.js";
 import { hardestPosition, slipPoint } from "./hardest.js";
-import { holdPoint } from "./hold.js";
+import type { HeldRun } from "./heldRun.js";
 import { availableLine } from "./line.js";
-import type { HardestNumbers, MechanismNumbers } from "./numbers.js";
-import { type OperatingPoint, operatingPointAt, pointAt, stalledPoint } from "./operatingPoint.js";
+import type { HardestNumbers, HoldNumbers, MechanismNumbers, TravelNumbers } from "./numbers.js";
+import { type OperatingPoint, operatingPointAt, pointAt } from "./operatingPoint.js";
+import { solveHold, solveStall } from "./runs.js";
 import { trainOf } from "./stages.js";
+import { solveTravel, type TravelResult } from "./travel.js";
+
+/** The runs behind a mechanism's numbers, for rules and hovers that need more of them. */
+export interface MechanismSolution {
+  readonly numbers: MechanismNumbers;
+  readonly travel: TravelResult | null;
+  readonly hold: HeldRun | null;
+  readonly stall: HeldRun;
+}
 
 /** Numbers of a mechanism. Legal input, however extreme, gives finite numbers or null; the function does not throw. */
 export function solveMechanism(drive: Drive): MechanismNumbers {
+  return solveMechanismRuns(drive).numbers;
+}
+
+/** The same, with the runs. */
+export function solveMechanismRuns(drive: Drive): MechanismSolution {
   const train = trainOf(drive.stages);
   const line = availableLine(drive);
-  const hold = holdPoint(drive);
-  const stall = stalledPoint(drive, line.stallTorqueNm);
-  return {
+  const travel = solveTravel(drive);
+  const hold = solveHold(drive);
+  const stall = solveStall(drive);
+  const numbers: MechanismNumbers = {
     ratio: train.ratio,
     stageEfficiency: train.efficiency,
     available: {
@@ -23,10 +39,27 @@ export function solveMechanism(drive: Drive): MechanismNumbers {
       stallCurrentA: line.stallCurrentA,
     },
     hardest: hardestNumbers(drive, train.efficiency, line.stallTorqueNm),
-    hold: hold && { motorCurrentA: hold.motorCurrentA },
-    stall: { motorCurrentA: stall.currentA, sourceCurrentA: stall.sourceCurrentA },
+    travel: travel && travelNumbers(travel),
+    hold: hold && holdNumbers(hold),
+    stall: {
+      motorCurrentA: stall.motorCurrentA,
+      sourceCurrentA: stall.sourceCurrentA,
+      tripsAfterS: stall.trip.opensAfterS,
+      windingLimitAfterS: stall.limitAfterS,
+    },
     feedforward: feedforwardNumbers(drive),
   };
+  return { numbers, travel, hold, stall };
+}
+
+function travelNumbers(travel: TravelResult): TravelNumbers {
+  const { timeS, endSpeed, peakMotorCurrentA, rmsMotorCurrentA, sourceEnergyJ, windingPeakC } = travel;
+  return { timeS, endSpeed, peakMotorCurrentA, rmsMotorCurrentA, sourceEnergyJ, windingPeakC, tripsAfterS: travel.opensAfterS };
+}
+
+function holdNumbers(hold: HeldRun): HoldNumbers {
+  const { motorCurrentA, windingFinalC, limitAfterS } = hold;
+  return { motorCurrentA, tripsAfterS: hold.trip.opensAfterS, windingFinalC, limitAfterS };
 }
 
 function hardestNumbers(drive: Drive, stageEfficiency: number, stallTorqueNm: number): HardestNumbers {

@@ -23,17 +23,20 @@ export function blockedAt(plant: Plant, timeS: number, windingC: number, at: Ins
     at.currentBy.fill(0);
   }
   at.torqueNm = at.torqueConstant * Math.max(at.currentA - plant.breakawayA, 0);
-  setSupply(plant, at, onLine);
+  setSupply(plant, at, onLine, true);
 }
 
-/** A controller that holds a torque at one motor's shaft: I = T/k_t, no loss current. */
-export function heldAt(plant: Plant, torqueNm: number, windingC: number, at: Instant): void {
+/** A controller that keeps a torque at one motor's shaft at a speed; at standstill I = T/k_t without loss current. */
+export function heldAt(plant: Plant, torqueNm: number, motorSpeedRadPerS: number, windingC: number, at: Instant): void {
   setConditions(plant, plant.rampS, windingC, at);
   stop(at);
+  const loss = motorSpeedRadPerS > 0 ? plant.breakawayA + plant.lossSlopeAsPerRad * motorSpeedRadPerS : 0;
+  const torqueCurrent = torqueNm / at.torqueConstant;
+  at.motorSpeed = motorSpeedRadPerS;
   at.torqueNm = torqueNm;
-  at.currentA = torqueNm / at.torqueConstant;
-  setGradient(at.currentBy, 0, 0, (-at.currentA * at.torqueConstantByHeat) / at.torqueConstant, 0);
-  setSupply(plant, at, false);
+  at.currentA = torqueCurrent + loss;
+  setGradient(at.currentBy, 0, 0, (-torqueCurrent * at.torqueConstantByHeat) / at.torqueConstant, 0);
+  setSupply(plant, at, false, true);
 }
 
 function stop(at: Instant): void {
@@ -104,5 +107,5 @@ export function followAt(plant: Plant, timeS: number, progress: number, windingC
   for (let q = 0; q < 4; q++) at.progressRateBy[q] = (at.motorSpeedBy[q] as number) / train.ratio;
   at.speedRate = 0;
   at.speedRateBy.fill(0);
-  setSupply(plant, at, onLine);
+  setSupply(plant, at, onLine, true);
 }

@@ -10,20 +10,22 @@ import type { Plant } from "./plant.js";
  * At full command I_s = n·d·I. Below it the controller finds its own duty: d·(V_b − V_drop) = U with U = I·(R + R_leads) + k_e·ω and
  * V_b = V_oc − R_s·n·d·I, the root with the highest V_b: d = 2U/(H + √(H² − 4·R_s·n·I·U)), H = V_oc − V_drop.
  */
-export function setSupply(plant: Plant, at: Instant, fullCommand: boolean): void {
+export function setSupply(plant: Plant, at: Instant, fullCommand: boolean, derive: boolean): void {
   at.supplied = true;
   if (fullCommand) {
     const share = plant.count * at.command;
     at.supplyA = share * at.currentA;
-    for (let q = 0; q < 4; q++) at.supplyBy[q] = share * (at.currentBy[q] as number);
-    (at.supplyBy[BY_TIME] as number) += plant.count * at.commandByTime * at.currentA;
+    if (derive) {
+      for (let q = 0; q < 4; q++) at.supplyBy[q] = share * (at.currentBy[q] as number);
+      (at.supplyBy[BY_TIME] as number) += plant.count * at.commandByTime * at.currentA;
+    }
   } else {
-    setControlled(plant, at);
+    setControlled(plant, at, derive);
   }
   at.supplyV = plant.bus.openCircuitV - plant.bus.resistanceOhm * at.supplyA;
 }
 
-function setControlled(plant: Plant, at: Instant): void {
+function setControlled(plant: Plant, at: Instant, derive: boolean): void {
   const winding = at.resistanceOhm + plant.leadOhm;
   const needed = at.currentA * winding + at.backEmf * at.motorSpeed;
   const slope = plant.bus.resistanceOhm * plant.count;
@@ -37,6 +39,7 @@ function setControlled(plant: Plant, at: Instant): void {
   const root = Math.sqrt(discriminant);
   const duty = (2 * needed) / (at.headV + root);
   at.supplyA = plant.count * duty * at.currentA;
+  if (!derive) return;
   for (let q = 0; q < 4; q++) {
     const currentBy = at.currentBy[q] as number;
     let neededBy = currentBy * winding + at.backEmf * (at.motorSpeedBy[q] as number);

@@ -9,6 +9,7 @@ import { ambientOf } from "./heat.js";
 import { type Arrival, integrate } from "./integrate.js";
 import { availableLine } from "./line.js";
 import { layoutOf, type Mode } from "./motionLayout.js";
+import { type CarriedState, carriedState, startState } from "./motionState.js";
 import { type MotionScales, type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observation, type Observer } from "./observer.js";
 import { operatingPointAt } from "./operatingPoint.js";
@@ -36,14 +37,6 @@ export interface TravelResult extends Readonly<Observation> {
   readonly carried: CarriedState;
 }
 
-/** Heat and protection as they are handed on: °C, and θ or damage. */
-export interface CarriedState {
-  readonly windingC: number;
-  readonly housingC: number;
-  readonly protection: number;
-  readonly fast: number;
-}
-
 export interface TravelOptions {
   readonly sampling?: boolean;
   /** Absent: cold, protection at rest. */
@@ -53,9 +46,11 @@ export interface TravelOptions {
 }
 
 /** Error of a step as a share: over a whole travel 1e-8 is kept. */
-export const TOLERANCE = 1e-10;
+export const TOLERANCE = 2e-10;
 /** Past this a travel is given up as unresolved. */
 export const MOST_STEPS = 20_000;
+/** Shorter than this (rad, or rad/s of a flywheel) there is nothing to travel. */
+const NO_TRAVEL = 1e-100;
 const MOST_PHASES = 10_000;
 /** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */
 const FOLLOWING_SHARE = 1e-5;
@@ -68,9 +63,10 @@ export function solveTravel(drive: Drive, options: TravelOptions = {}): TravelRe
   if (plant.load.kind === "roller") return null;
   const scales = scalesOf(plant);
   const observer = createObserver(plant, options.sampling ?? false);
-  const state = startState(plant, options);
+  const state = startState(plant, options.from, options.fromSpeedRadPerS);
   const goal = goalOf(plant);
-  if (goal.target <= (state[plant.load.endless ? 1 : 0] as number)) return finish(plant, observer, state, 0, "arrives");
+  if (goal.target <= Math.max(state[plant.load.endless ? 1 : 0] as number, NO_TRAVEL))
+    return finish(plant, observer, state, 0, "arrives");
   return run(plant, scales, observer, state, goal);
 }
 
@@ -98,7 +94,7 @@ function run(plant: Plant, scales: MotionScales, observer: Observer, state: Floa
   let stepS = firstStep(moving, scales, state);
   observer.look(moving, timeS, state);
 
-  if (!starts(moving, state)) {
+  if (!starts(plant, moving, state)) {
     const wait = awaitStart(plant, scales, observer, state, kind);
     timeS = wait.timeS;
     if (!wait.started) return finish(plant, observer, state, timeS, wait.finished ? "never-starts" : "unresolved");
@@ -112,13 +108,13 @@ function run(plant: Plant, scales: MotionScales, observer: Observer, state: Floa
     stepS = arrival.nextStepS;
     if (!arrival.finished) break;
     if (arrival.stop === null) continue;
+    if (arrival.stop === moving.index.burnt) break;
     if (arrival.stop === moving.index.standstill) return finish(plant, observer, state, timeS, "stands-still");
-    if (arrival.stop === moving.index.fuseReset) {
-      clearDamage(moving, state);
-      continue;
-    }
     next++;
-    if (next === targets.length) return finish(plant, observer, state, timeS, goal.reachable ? "arrives" : "never-reaches-speed");
+    if (next === targets.length) {
+      const speed = moving.front.motorSpeed / plant.train.ratio;
+      return finish(plant, observer, state, timeS, goal.reachable ? "arrives" : "never-reaches-speed", speed);
+    }
     state[0] = pastCorner(targets[next - 1] as number, plant.spanRad);
     moving.setTarget(targets[next] as number);
   }
@@ -136,28 +132,21 @@ function awaitStart(
   if (!(plant.rampS > 0)) return { timeS: 0, started: false, finished: true };
   const mode: Mode = { kind: "blocked", startsAs };
   const blocked = motionSystem(plant, mode, scales);
-  let timeS = 0;
-  for (;;) {
-    const arrival = integrate(blocked, timeS, state, course(blocked, observer, plant.rampS, plant.rampS / 50));
-    timeS = arrival.timeS;
-    if (arrival.stop === blocked.index.fuseReset && arrival.stop >= 0) clearDamage(blocked, state);
-    else return { timeS, started: arrival.stop === blocked.index.breakaway && arrival.stop !== null, finished: arrival.finished };
-  }
+  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50));
+  return {
+    timeS: arrival.timeS,
+    started: arrival.stop !== null && arrival.stop === blocked.index.breakaway,
+    finished: arrival.finished,
+  };
 }
 
 function course(system: MotionSystem, observer: Observer, endS: number, firstStepS: number): Parameters<typeof integrate>[3] {
   return { tolerance: TOLERANCE, endS, firstStepS, mostSteps: MOST_STEPS, ...observer.listen(system) };
 }
 
-/** At standstill with the command growing, a vanishing rate that is about to grow counts as a start. */
-function starts(system: MotionSystem, state: Float64Array): boolean {
-  const now = system.instantAt(0, state);
-  return (state[1] as number) > 0 || now.startGap > 0;
-}
-
-function clearDamage(system: MotionSystem, state: Float64Array): void {
-  state[system.layout.protection] = 0;
-  state[system.layout.fast] = 0;
+/** Looked at a moment after the start: a command that grows from 0 may move a load without friction at once. */
+function starts(plant: Plant, system: MotionSystem, state: Float64Array): boolean {
+  return (state[1] as number) > 0 || system.instantAt(plant.rampS * 1e-9, state).startGap > 0;
 }
 
 function cornersAhead(plant: Plant): number[] {
@@ -199,30 +188,19 @@ function firstStep(system: MotionSystem, scales: MotionScales, state: Float64Arr
   return 0.02 * (damping > 0 ? Math.min(1 / damping, scales.timeS) : scales.timeS);
 }
 
-function startState(plant: Plant, options: TravelOptions): Float64Array {
-  const layout = layoutOf(plant);
-  const state = new Float64Array(layout.size);
-  const ambientC = ambientOf(plant.drive);
-  const put = (index: number, value: number): void => {
-    if (index >= 0) state[index] = value;
-  };
-  put(layout.winding, options.from?.windingC ?? ambientC);
-  put(layout.housing, options.from?.housingC ?? ambientC);
-  put(layout.protection, options.from?.protection ?? 0);
-  put(layout.fast, options.from?.fast ?? 0);
-  state[layout.speed] = options.fromSpeedRadPerS ?? 0;
-  return state;
-}
-
-function finish(plant: Plant, observer: Observer, state: Float64Array, timeS: number, outcome: TravelOutcome): TravelResult {
+function finish(
+  plant: Plant,
+  observer: Observer,
+  state: Float64Array,
+  timeS: number,
+  outcome: TravelOutcome,
+  speed = 0,
+): TravelResult {
   observer.close(timeS);
   const layout = layoutOf(plant);
   const ambientC = ambientOf(plant.drive);
   const at = (index: number, otherwise: number): number => (index < 0 ? otherwise : (state[index] as number));
   const { seen } = observer;
-  const last = seen.samples.at(-1);
-  const speed = outcome === "arrives" || outcome === "never-reaches-speed" || outcome === "unresolved" ? (state[1] as number) : 0;
-  void last;
   return {
     ...seen,
     windingPeakC: layout.winding < 0 ? null : (seen.windingPeakC ?? ambientC),
@@ -232,11 +210,6 @@ function finish(plant: Plant, observer: Observer, state: Float64Array, timeS: nu
     endSpeed: speed * plant.load.ownPerRad,
     rmsMotorCurrentA: timeS > 0 ? Math.sqrt(at(layout.squares, 0) / timeS) : seen.peakMotorCurrentA,
     sourceEnergyJ: at(layout.energy, 0),
-    carried: {
-      windingC: at(layout.winding, ambientC),
-      housingC: at(layout.housing, ambientC),
-      protection: at(layout.protection, 0),
-      fast: at(layout.fast, 0),
-    },
+    carried: carriedState(plant, state),
   };
 }

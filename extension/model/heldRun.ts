@@ -1,0 +1,133 @@
+/**
+ * What happens while a mechanism is held, stalled or kept turning for long: heat, limits, protection.
+ *
+ * Deliberately not here: the travel before it (travel.ts) and what is held (hold.ts).
+ */
+import { heatNetworkOf, heatTimeConstants, holdingHeat, steadyHeat } from "./heat.js";
+import { integrate } from "./integrate.js";
+import type { Mode } from "./motionLayout.js";
+import { type CarriedState, carriedState, coldState, startState } from "./motionState.js";
+import { type MotionSystem, motionSystem } from "./motionSystem.js";
+import { createObserver, type Observation, type Observer } from "./observer.js";
+import type { Plant } from "./plant.js";
+import { fuseRate, isBorderline, NEVER, type TripVerdict, thermalReplica, tripVerdict } from "./protection.js";
+import { MOST_STEPS, scalesOf, TOLERANCE } from "./travel.js";
+
+/** One motor's values unless the name says source. */
+export interface HeldRun {
+  /** At the start, A. */
+  readonly motorCurrentA: number;
+  readonly sourceCurrentA: number;
+  readonly trip: TripVerdict;
+  /** °C at the end of the asked time, or of steady heat; null without thermal data or where the heat runs away. */
+  readonly windingFinalC: number | null;
+  /** s until the winding passes its limit, however long it lasts; null: never. */
+  readonly limitAfterS: number | null;
+  /** True where no steady temperature exists. */
+  readonly runsAway: boolean;
+  /** False where the supply cannot bring the current. */
+  readonly supplied: boolean;
+  /** At the end of the asked time. */
+  readonly carried: CarriedState;
+}
+
+/** For ever: this many of the longest time constant. */
+const FOREVER = 40;
+/** A fuse may need this long just above its rating, s. */
+const FUSE_S = 400_000;
+
+/** Keeps the mode from a state (absent: cold, protection at rest) for a time, and looks further until nothing changes any more. */
+export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: CarriedState): HeldRun {
+  const system = motionSystem(plant, mode, scalesOf(plant));
+  const state = startState(plant, from);
+  const observer = createObserver(plant, false);
+  // At full command: the ramp lies behind.
+  const startS = plant.rampS;
+  observer.look(system, startS, state);
+  const first = system.instantAt(startS, state);
+  const { currentA, supplyA } = first;
+  const carriedA = system.carried(first);
+
+  if (system.network === null && from === undefined) {
+    return {
+      motorCurrentA: currentA,
+      sourceCurrentA: supplyA,
+      trip: steadyTrip(plant, carriedA),
+      windingFinalC: null,
+      limitAfterS: null,
+      runsAway: false,
+      supplied: observer.seen.supplied,
+      carried: replicaAfter(plant, carriedA, lastsS),
+    };
+  }
+  const foreverS = startS + FOREVER * longestTimeConstant(plant);
+  const wantedS = lastsS === undefined ? foreverS : startS + lastsS;
+  let timeS = keep(system, observer, state, startS, wantedS);
+  const whole = timeS >= wantedS;
+  const end = carriedState(plant, state);
+  if (whole && foreverS > wantedS) timeS = keep(system, observer, state, wantedS, foreverS);
+  const lastA = system.carried(system.instantAt(timeS, state));
+
+  const steady = lastsS === undefined ? steadyWinding(plant, mode, end.windingC) : end.windingC;
+  return {
+    motorCurrentA: currentA,
+    sourceCurrentA: supplyA,
+    trip: seenTrip(plant, observer.seen, lastA, startS),
+    windingFinalC: system.network === null || !whole ? null : steady,
+    limitAfterS: observer.seen.windingLimitAfterS === null ? null : observer.seen.windingLimitAfterS - startS,
+    runsAway: system.network !== null && (!whole || steady === null),
+    supplied: observer.seen.supplied,
+    carried: end,
+  };
+}
+
+/** Advances to a time, or to where the winding is past everything; returns the time reached. */
+function keep(system: MotionSystem, observer: Observer, state: Float64Array, fromS: number, toS: number): number {
+  const course = { tolerance: TOLERANCE, endS: toS, firstStepS: (toS - fromS) / 1e4, mostSteps: MOST_STEPS };
+  return integrate(system, fromS, state, { ...course, ...observer.listen(system) }).timeS;
+}
+
+function longestTimeConstant(plant: Plant): number {
+  const network = heatNetworkOf(plant.motor);
+  const { protection } = plant.drive;
+  const protects =
+    protection === undefined ? 0 : protection.kind === "fuse" ? FUSE_S / FOREVER : thermalReplica(protection).timeConstantS;
+  return Math.max(network ? heatTimeConstants(network)[1] : 0, protects);
+}
+
+/** Holding still, the steady temperature has a formula that needs no waiting, however near to running away. */
+function steadyWinding(plant: Plant, mode: Mode, atEnd: number): number | null {
+  const network = heatNetworkOf(plant.motor);
+  if (!network || mode.kind !== "held" || mode.motorSpeedRadPerS > 0) return atEnd;
+  return steadyHeat(network, holdingHeat(plant.motor, mode.torqueNm))?.windingC ?? null;
+}
+
+/** Protection after a time at a steady current, from rest: θ = m²·(1 − e^(−t/τ)). */
+function replicaAfter(plant: Plant, carriedA: number, lastsS = Number.POSITIVE_INFINITY): CarriedState {
+  const cold = coldState(plant);
+  const { protection } = plant.drive;
+  if (!protection) return cold;
+  if (protection.kind === "fuse") {
+    const damage = (gate: "fast" | "slow"): number =>
+      carriedA > 0 ? Math.min(fuseRate(protection.ratingA, carriedA, gate).rate * lastsS, 1) || 0 : 0;
+    return { ...cold, protection: damage("slow"), fast: damage("fast") };
+  }
+  const replica = thermalReplica(protection);
+  return { ...cold, protection: (carriedA / replica.holdCurrentA) ** 2 * -Math.expm1(-lastsS / replica.timeConstantS) };
+}
+
+function steadyTrip(plant: Plant, carriedA: number): TripVerdict {
+  return plant.drive.protection ? tripVerdict(plant.drive.protection, carriedA) : NEVER;
+}
+
+function seenTrip(plant: Plant, seen: Observation, lastA: number, startS: number): TripVerdict {
+  const { protection } = plant.drive;
+  if (!protection) return NEVER;
+  const since = (timeS: number | null): number | null => (timeS === null ? null : timeS - startS);
+  const opensAfterS = since(seen.opensAfterS);
+  return {
+    opensAfterS,
+    mayOpenAfterS: protection.kind === "fuse" ? since(seen.mayOpenAfterS) : opensAfterS,
+    borderline: seen.borderline || (opensAfterS === null && isBorderline(protection, lastA)),
+  };
+}
