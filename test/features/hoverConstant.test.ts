@@ -1,6 +1,6 @@
 /** Hovers on constants: wherever one is written, what it does to every mechanism that it feeds, and what a little more or less would do. */
 import { describe, expect, it } from "vitest";
-import { type HandPoint, handPoint, liftTorque, MOTOR, perCent, three } from "../support/handNumbers.js";
+import { type HandPoint, handPoint, liftTime, liftTorque, MOTOR, perCent, three } from "../support/handNumbers.js";
 import { checkHover, type HoverShown, hoverIn } from "../support/hover.js";
 
 /** The hover with the table's columns about standing torque. */
@@ -61,6 +61,12 @@ describe("a hover on a gear constant", () => {
     );
     expect(rows).toEqual(expected);
     expect(markdown).toMatch(/^\*\*Fine:\*\* hoist, 42 % of stall {2}\nWHEEL is 80\n/);
+  });
+
+  it("shows what becomes of the travel's time", () => {
+    const gearing = "export const PINION = 20;\nexport const WHEEL/*|*/ = 80;";
+    const times = checkHover(robot({ gearing }), "WHEEL").rows.map((cells) => cells[5]);
+    expect(times).toEqual([80, 81, 79].map((driven) => `${three(liftTime(10, 0.05, 0.8, driven / 20, 0.98))} s`));
   });
 
   it("reads like this", () => {

@@ -1,6 +1,6 @@
 /** Hovers on mechanisms: the verdict first, then what is needed against what is available. */
 import { describe, expect, it } from "vitest";
-import { handPoint, liftTorque, MOTOR, perCent, SHEET, three } from "../support/handNumbers.js";
+import { handPoint, liftTime, liftTorque, MOTOR, perCent, SHEET, three } from "../support/handNumbers.js";
 import { checkHover, hoverIn } from "../support/hover.js";
 
 function hoist(driven: number, rest = "", cursor: "name" | "label" | "word" = "name"): string {
@@ -45,6 +45,12 @@ describe("a hover on a mechanism", () => {
     expect(markdown).toContain(
       `needs ${three(OUTPUT_NM)} N·m of ${three(hand.outputStallNm)} N·m at stall, at ${three(hand.outputRpm)} rpm`,
     );
+  });
+
+  it("tells how long the travel takes, by the closed form", () => {
+    const { markdown } = checkHover(hoist(80, 'within: "9 s",'), "hoist");
+    expect(markdown).toContain(`\nTravel: ${three(liftTime(10, 0.05, 0.8, 4, 0.98))} s of the 9 s allowed  \n`);
+    expect(checkHover(hoist(20, 'within: "9 s",'), "hoist").markdown).toContain("\nTravel: never arrives  \n");
   });
 
   it("reads like this", () => {

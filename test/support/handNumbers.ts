@@ -51,3 +51,17 @@ export function three(value: number): string {
 export function perCent(share: number): string {
   return `${Math.round(share * 100)} %`;
 }
+
+/**
+ * Time to raise `massKg` by `travelM` from rest, s. The line and a constant load give J·dω/dt = A − B·ω, so that
+ * θ = ω∞·(t − τ·(1 − e^(−t/τ))), solved for t by repetition; J = m·r² (the rotor has none), both at the output shaft.
+ */
+export function liftTime(massKg: number, radiusM: number, travelM: number, ratio: number, efficiency: number): number {
+  const noLoad = (SHEET.noLoadRpm * Math.PI) / 30;
+  const slope = (ratio * ratio * efficiency * SHEET.stallNm) / noLoad;
+  const steady = (ratio * efficiency * SHEET.stallNm - liftTorque(massKg, radiusM)) / slope;
+  const settling = (massKg * radiusM * radiusM) / slope;
+  let time = travelM / radiusM / steady;
+  for (let round = 0; round < 50; round++) time = travelM / radiusM / steady + settling * (1 - Math.exp(-time / settling));
+  return time;
+}

@@ -3,6 +3,7 @@
  * of it would do.
  */
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
+import type { MechanismNumbers } from "../../model/numbers.js";
 import { writeQuantity, writeShare } from "../../units/write.js";
 import { feedsOf, keyOf, type Leaf, originsOf, sameSpan } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
@@ -14,7 +15,6 @@ import { type Analyse, variantOf } from "../variant.js";
 import { verdictOf, worse } from "../verdict.js";
 import { type Table, writeBlock } from "./block.js";
 import { quantityLine } from "./quantity.js";
-import type { RunNumbers } from "./runLines.js";
 
 /** Mechanisms that are shown with their variants; a longer table is no longer read. */
 const SHOWN = 3;
@@ -125,8 +125,8 @@ function rowOf(label: string, mechanism: AnalysedMechanism): string[] {
   ];
 }
 
-function travelIn({ travel }: RunNumbers): string {
-  if (!travel) return "";
+function travelIn({ travel }: MechanismNumbers): string {
+  if (travel === null) return "";
   return travel.timeS === null ? "never arrives" : writeQuantity(travel.timeS, "time");
 }
 

@@ -1,62 +1,54 @@
-/** What happens over time, a line each: the travel, the hold, a stall. Only what was computed is told. */
+/** What happens over time, a line each: the travel, the hold, a stall. Only what was declared or computed is told. */
 import type { Drive } from "../../model/drive.js";
+import type { MechanismNumbers } from "../../model/numbers.js";
+import { isBorderline } from "../../model/protection.js";
 import { writeIn, writeQuantity } from "../../units/write.js";
 
-type Maybe = number | null | undefined;
-
-/** The groups of a mechanism's numbers that are about time; s, A, °C. */
-export interface RunNumbers {
-  readonly travel?: { readonly timeS: number | null; readonly tripsAfterS?: Maybe; readonly windingPeakC?: Maybe } | null;
-  readonly hold?: {
-    readonly motorCurrentA: number;
-    readonly tripsAfterS?: Maybe;
-    readonly windingFinalC?: Maybe;
-    readonly limitAfterS?: Maybe;
-  } | null;
-  readonly stall?: { readonly motorCurrentA: number; readonly tripsAfterS?: Maybe; readonly windingLimitAfterS?: Maybe } | null;
-}
+export type RunNumbers = Pick<MechanismNumbers, "travel" | "hold" | "stall">;
 
 export function runLines(drive: Drive, { travel, hold, stall }: RunNumbers): string[] {
-  const { withinS, holdForS, protection, motor } = drive;
+  const { holdForS, protection, motor } = drive;
+  const limitC = motor.thermal?.limitC;
   const lines: string[][] = [];
   if (travel) {
-    lines.push([travelled(travel.timeS, withinS), opens(travel.tripsAfterS), peak(travel.windingPeakC, motor.thermal?.limitC)]);
+    lines.push([travelled(drive, travel.timeS), opens(travel.tripsAfterS), winding("up to", travel.windingPeakC, limitC)]);
   }
   if (hold && holdForS !== undefined) {
     const held = `Hold for ${time(holdForS)}: ${writeQuantity(hold.motorCurrentA, "current")}`;
-    lines.push([held, opens(hold.tripsAfterS), reaches(hold.limitAfterS) || ends(hold.windingFinalC, motor.thermal?.limitC)]);
+    const heat = hold.limitAfterS === null ? winding("at", hold.windingFinalC, limitC) : limitReached(hold.limitAfterS);
+    lines.push([held, opens(hold.tripsAfterS), heat]);
   }
-  if (stall && (protection !== undefined || motor.thermal !== undefined)) {
+  if (protection !== undefined || motor.thermal !== undefined) {
     const stalled = `Stalled: ${writeQuantity(stall.motorCurrentA, "current")}`;
-    const never = protection !== undefined && stall.tripsAfterS === null ? "protection never opens" : "";
-    lines.push([stalled, opens(stall.tripsAfterS) || never, reaches(stall.windingLimitAfterS)]);
+    lines.push([stalled, opens(stall.tripsAfterS) || staysClosed(drive, stall), limitReached(stall.windingLimitAfterS)]);
   }
   return lines.map((parts) => parts.filter((part) => part !== "").join(", "));
 }
 
-function travelled(timeS: number | null, withinS: number | undefined): string {
-  const allowed = withinS === undefined ? "" : ` of the ${time(withinS)} allowed`;
-  return timeS === null ? "Travel: never arrives" : `Travel: ${time(timeS)}${allowed}`;
+function travelled({ load, withinS }: Drive, timeS: number | null): string {
+  const spinsUp = load.kind === "flywheel";
+  if (timeS === null) return spinsUp ? "Spin-up: never reaches its speed" : "Travel: never arrives";
+  return `${spinsUp ? "Spin-up" : "Travel"}: ${time(timeS)}${withinS === undefined ? "" : ` of the ${time(withinS)} allowed`}`;
 }
 
-function opens(afterS: Maybe): string {
-  return typeof afterS === "number" ? `protection opens after ${time(afterS)}` : "";
+function opens(afterS: number | null): string {
+  return afterS === null ? "" : `protection opens after ${time(afterS)}`;
 }
 
-function reaches(afterS: Maybe): string {
-  return typeof afterS === "number" ? `winding at its limit after ${time(afterS)}` : "";
+/** So near to what is held for ever that no time means anything, or truly closed. */
+function staysClosed({ protection }: Drive, { motorCurrentA, sourceCurrentA }: MechanismNumbers["stall"]): string {
+  if (protection === undefined) return "";
+  const carried = protection.carries === "motor" ? motorCurrentA : sourceCurrentA;
+  return isBorderline(protection, carried) ? "protection may or may not open" : "protection never opens";
 }
 
-function peak(windingC: Maybe, limitC: number | undefined): string {
-  return typeof windingC === "number" ? `winding up to ${temperature(windingC)}${ofLimit(limitC)}` : "";
+function limitReached(afterS: number | null): string {
+  return afterS === null ? "" : `winding at its limit after ${time(afterS)}`;
 }
 
-function ends(windingC: Maybe, limitC: number | undefined): string {
-  return typeof windingC === "number" ? `winding at ${temperature(windingC)}${ofLimit(limitC)}` : "";
-}
-
-function ofLimit(limitC: number | undefined): string {
-  return limitC === undefined ? "" : ` of ${temperature(limitC)}`;
+function winding(where: "at" | "up to", windingC: number | null, limitC: number | undefined): string {
+  if (windingC === null || limitC === undefined) return "";
+  return `winding ${where} ${temperature(windingC)} of ${temperature(limitC)}`;
 }
 
 function time(seconds: number): string {
