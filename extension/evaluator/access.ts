@@ -190,10 +190,8 @@ function missingProperty(ctx: Context, base: Known, name: string, node: ts.Node,
       origin,
     );
   }
-  const hint = suggest(
-    name,
-    (listProperties(ctx, base) ?? []).map((property) => property.name),
-  );
+  const names = (listProperties(ctx, base) ?? []).map((property) => property.name).filter((each) => !isIndex(each));
+  const hint = suggest(name, names);
   return unknown("no-such-property", `${text} does not exist${hint}`, "", origin);
 }
 

@@ -2,6 +2,7 @@
 import ts from "typescript";
 import type { Value } from "../../../extension/evaluator/value.js";
 import type { Statement } from "./programs.js";
+import { splitFiles } from "./workspace.js";
 
 /** Runs the statements in order until one throws; what each name that it got to stands for in the end. */
 export function runStatements(statements: readonly Statement[]): ReadonlyMap<string, unknown> {
@@ -35,6 +36,32 @@ export function runModule(text: string, require: (specifier: string) => unknown,
   const names = ["require", "module", "exports", ...Object.keys(globals)];
   new Function(...names, outputText)(require, module, module.exports, ...Object.values(globals));
   return module.exports;
+}
+
+/** Runs a fixture's first file with `expression` at its end, and gives the expression's value. */
+export function runFixture(fixture: string, expression: string): unknown {
+  const files = splitFiles(fixture.trim() === "" ? "\n" : fixture);
+  const [[main, text] = ["/main.ts", ""]] = files;
+  files.set(main, `${text}\nexport const shown_ = (${expression});\n`);
+  const ran = new Map<string, unknown>();
+  const load = (file: string): unknown => {
+    if (!ran.has(file)) {
+      const source = files.get(file);
+      if (source === undefined) throw new Error(`No file ${file}.`);
+      ran.set(
+        file,
+        runModule(source, (specifier) => (specifier === "gearbox" ? { probe: () => ({}) } : load(find(files, specifier)))),
+      );
+    }
+    return ran.get(file);
+  };
+  return Reflect.get(load(main) as object, "shown_");
+}
+
+function find(files: ReadonlyMap<string, string>, specifier: string): string {
+  return (
+    [...files.keys()].find((file) => file.replace(/\.[a-z]+$/, "") === specifier.slice(1).replace(/\.[a-z]+$/, "")) ?? specifier
+  );
 }
 
 /** Whether everything that the evaluator claims about a value is true of what the program made; the first difference, or nothing. */
