@@ -6,6 +6,7 @@
 import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
 import type { LocatedIssue, Span } from "../evaluator/value.js";
 import { sameSpan } from "./feeds.js";
+import { plainText } from "./inertText.js";
 
 export interface QuickFix {
   readonly title: string;
@@ -39,7 +40,7 @@ function mend(analysis: Analysis, finding: Finding): QuickFix[] {
   if (meant === undefined || at === undefined || typeof old !== "string") return [];
   const newText = rewritten(old, meant.slice(1, -1));
   if (newText === undefined) return [];
-  return [{ title: `Change to ${newText}`, finding, kind: "mend", edits: [{ ...at, newText }] }];
+  return [{ title: `Change to ${plainText(newText)}`, finding, kind: "mend", edits: [{ ...at, newText }] }];
 }
 
 function issueAt({ files }: Analysis, { at, message }: Finding): LocatedIssue | undefined {
@@ -49,12 +50,17 @@ function issueAt({ files }: Analysis, { at, message }: Finding): LocatedIssue | 
 
 /** Only whole words and whole strings are replaced, in the quotes that they have; an expression is the user's own affair. */
 function rewritten(old: string, meant: string): string | undefined {
-  if (/^[\p{ID_Start}$_][\p{ID_Continue}$]*$/u.test(old)) return /^[\p{ID_Start}$_]/u.test(meant) ? meant : undefined;
+  if (WORD.test(old)) return WORD.test(meant) ? meant : undefined;
   const quoted = /^(["'`])(?:[^"'`\\$]|\$(?!\{))*\1$/.exec(old);
   if (quoted !== null) return `${quoted[1]}${meant}${quoted[1]}`;
-  const access = /^(.*\.\s*)[\p{ID_Start}$_][\p{ID_Continue}$]*$/su.exec(old);
-  return access === null ? undefined : `${access[1]}${meant}`;
+  const allowance = /^(\/\/\s*loadmark-allow\s+)[\w-]+(.*)$/.exec(old);
+  if (allowance !== null) return `${allowance[1]}${meant}${allowance[2]}`;
+  const dot = old.lastIndexOf(".") + 1;
+  const isAccess = dot > 0 && WORD.test(old.slice(dot).trimStart()) && /^[\p{ID_Start}$_]/u.test(old);
+  return isAccess ? `${old.slice(0, dot)}${meant}` : undefined;
 }
+
+const WORD = /^[\p{ID_Start}$_][\p{ID_Continue}$]*$/u;
 
 /** Rules about what the code says, not about what the motor can do, cannot be allowed. */
 const NOT_TO_ALLOW: ReadonlySet<Finding["rule"]> = new Set(["bad-declaration", "not-constant", "sheet-contradicts"]);

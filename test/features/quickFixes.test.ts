@@ -78,6 +78,11 @@ ${robot(MOTOR.replace('"12 V"', "VOLT/*|*/AGE"))}`;
     expect(mended(source)).toBe('export const VOLTAGE = "12 V";');
   });
 
+  it("is put right in an allowance", () => {
+    const before = "// loadmark-allow past-pe/*|*/ek: seen to work, at the end.here\n";
+    expect(mended(robot(MOTOR, "spur(20, 60)", before))).toBe("// loadmark-allow past-peak: seen to work, at the end.here");
+  });
+
   it("is left to the user inside an expression", () => {
     const source = robot(MOTOR.replace('"12 V"', "`$" + "{6 * 2} v/*|*/`"));
     expect(offeredIn(source).fixes).toEqual([]);
