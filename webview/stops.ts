@@ -51,10 +51,15 @@ export function nearestStop(stops: readonly Stop[], torqueNm: number): number {
   return best;
 }
 
-/** The rows of a table: every named stop, and of the others no more than needed for about `rows` in all. */
+/** The rows of a table: every named stop, and of the others about as many as asked for, none right beside a named one. */
 export function thinned(stops: readonly Stop[], rows: number): readonly Stop[] {
+  const named = stops.filter(({ names }) => names.length > 0);
   const plain = stops.filter(({ names }) => names.length === 0);
+  const near = (stops.at(-1)?.torqueNm ?? 0) / (4 * rows);
   const step = Math.max(1, Math.round(plain.length / rows));
-  const kept = new Set(plain.filter((_, index) => index % step === 0));
-  return stops.filter((stop) => stop.names.length > 0 || kept.has(stop));
+  const kept = plain.filter((stop, index) => {
+    const isBeside = named.some(({ torqueNm }) => Math.abs(torqueNm - stop.torqueNm) < near);
+    return index % step === 0 && (index === 0 || !isBeside);
+  });
+  return [...named, ...kept].sort((one, other) => one.torqueNm - other.torqueNm);
 }

@@ -98,6 +98,7 @@ export function answerRequests({ connection, guard, session, settings, hintsOf, 
     CHART,
     guard.answer("A chart", null, async (message: unknown) => {
       const question = readMessage(chartQuestionSchema, message);
+      if (question !== undefined) await session.loadSaved();
       const result = question && (await session.whenCurrent(PATIENCE_MS));
       return question && result ? charts.answer(result, question) : null;
     }),

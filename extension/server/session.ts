@@ -85,6 +85,11 @@ export class Session {
     if (this.#timer !== undefined) this.#start();
   }
 
+  /** Reads what is saved of the open documents, as far as that is not known: an analysis needs only what is open. */
+  async loadSaved(): Promise<void> {
+    await this.#files.load(this.texts.openKeys().filter((file) => !file.startsWith("untitled:")));
+  }
+
   /** What counts now is the disk. */
   async close(uri: string): Promise<void> {
     const key = this.texts.close(uri);

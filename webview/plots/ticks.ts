@@ -43,6 +43,9 @@ function roundStep(value: number): number {
   return step > 0 && Number.isFinite(step * 6) ? step : size;
 }
 
+/** Below this, steps would lose their digits. */
+const NOTHING = 1e-300;
+
 function positive(value: number | undefined): number | undefined {
-  return value !== undefined && value > 0 && Number.isFinite(value) ? value : undefined;
+  return value !== undefined && value > NOTHING && Number.isFinite(value) ? value : undefined;
 }

@@ -61,12 +61,12 @@ export class ChartAnswers {
   }
 
   /** The chart for what is saved; undefined where there is none, or where everything is saved. */
-  #savedChart({ analysis, analyse, snapshot }: Result, name: string): OperatingPointChart | undefined {
-    if (snapshot.isSaved) return undefined;
-    const known = this.#saved.get(snapshot.saved);
-    const saved = known ?? analyse([...analysis.files.keys()], snapshot.saved);
-    this.#saved.set(snapshot.saved, saved);
-    return operatingPointChart(saved, name);
+  #savedChart({ analysis, analyse }: Result, name: string): OperatingPointChart | undefined {
+    const { saved, isSaved } = this.#texts.capture();
+    if (isSaved) return undefined;
+    const known = this.#saved.get(saved) ?? analyse([...analysis.files.keys()], saved);
+    this.#saved.set(saved, known);
+    return operatingPointChart(known, name);
   }
 
   #keep(name: string, chart: OperatingPointChart): void {

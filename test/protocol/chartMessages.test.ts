@@ -1,0 +1,102 @@
+import { describe, expect, it } from "vitest";
+import type { OperatingPointChart as ComputedChart } from "../../extension/features/chart.js";
+import type { OperatingPointChart } from "../../extension/protocol/chart.js";
+import {
+  chartAnswerSchema,
+  chartQuestionSchema,
+  hostMessageSchema,
+  pageMessageSchema,
+} from "../../extension/protocol/chartMessages.js";
+import { chartViewSchema, NO_VIEW } from "../../extension/protocol/chartView.js";
+import { readMessage } from "../../extension/protocol/readMessage.js";
+import { chartIn, hoistSource, shownChart } from "../support/chartFixture.js";
+
+const chart = chartIn(hoistSource(), "tray hoist");
+
+/** Fails to compile where a computed chart is not what travels. */
+const travels: (computed: ComputedChart) => OperatingPointChart = (computed) => computed;
+
+describe("a chart on its way", () => {
+  it("arrives as it was computed", () => {
+    const message = { type: "show", answer: shownChart(chart, { saved: travels(chart as ComputedChart), old: "A reason." }) };
+    expect(readMessage(hostMessageSchema, JSON.parse(JSON.stringify(message)))).toEqual(message);
+  });
+
+  it.each([
+    ["NaN", Number.NaN],
+    ["Infinity", Number.POSITIVE_INFINITY],
+    ["a text", "1"],
+    ["nothing", undefined],
+  ])("is refused with %s among its numbers", (_what, value) => {
+    const samples = chart.samples.map((sample, index) => (index === 3 ? { ...sample, torqueNm: value } : sample));
+    expect(readMessage(chartAnswerSchema, shownChart({ ...chart, samples } as never))).toBeUndefined();
+  });
+
+  it("is refused with a level or a limit that there isn't", () => {
+    const findings = [{ rule: "stalls", level: "fatal", message: "" }];
+    expect(readMessage(chartAnswerSchema, shownChart({ ...chart, findings } as never))).toBeUndefined();
+    const hardest = { ...chart.hardest, limitedBy: "magic" };
+    expect(readMessage(chartAnswerSchema, shownChart({ ...chart, hardest } as never))).toBeUndefined();
+  });
+});
+
+describe("messages that are not known", () => {
+  it.each([
+    undefined,
+    null,
+    7,
+    "show",
+    [],
+    {},
+    { type: "hide" },
+    { type: "show" },
+    { type: "show", answer: { kind: "chart" } },
+    { type: "show", answer: { kind: "nothing", reason: "<b>no</b>" } },
+  ])("are dropped by the page: %j", (message) => {
+    expect(readMessage(hostMessageSchema, message)).toBeUndefined();
+  });
+
+  it.each([
+    undefined,
+    { type: "run", command: "workbench.action.quit" },
+    { type: "ready" },
+    { type: "ready", mechanism: 7 },
+    { type: "savePicture", fileName: "a.png", base64: "not base64!" },
+    { type: "savePicture", fileName: "a.png", base64: "abc" },
+    { type: "savePicture", fileName: "../a.png", base64: "" },
+    { type: "saveTable", fileName: "/etc/passwd", csv: "" },
+    { type: "saveTable", fileName: "a.sh", csv: "" },
+    { type: "saveTable", fileName: "a\\b.csv", csv: "" },
+    { type: "trouble", what: "x".repeat(2001) },
+  ])("are dropped by the host: %j", (message) => {
+    expect(readMessage(pageMessageSchema, message)).toBeUndefined();
+  });
+
+  it("are dropped by the server", () => {
+    for (const message of [
+      undefined,
+      {},
+      { caret: null },
+      { caret: { uri: "file:///a", line: -1, character: 0 }, mechanism: null },
+    ]) {
+      expect(readMessage(chartQuestionSchema, message)).toBeUndefined();
+    }
+  });
+});
+
+describe("a picture of several megabytes", () => {
+  it("passes the check without running out of stack", () => {
+    const message = { type: "savePicture", fileName: "a.png", base64: "AbC/".repeat(4_000_000) };
+    expect(readMessage(pageMessageSchema, message)).toBeDefined();
+  });
+});
+
+describe("what the page remembers", () => {
+  it("is read as it was kept, and nothing where it is not that", () => {
+    expect(readMessage(chartViewSchema, NO_VIEW)).toEqual(NO_VIEW);
+    const view = { mechanism: "hoist", cursorNm: 0.5, tableOpen: true };
+    expect(readMessage(chartViewSchema, view)).toEqual(view);
+    for (const state of [undefined, {}, { ...view, cursorNm: "far" }])
+      expect(readMessage(chartViewSchema, state)).toBeUndefined();
+  });
+});
