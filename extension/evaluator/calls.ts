@@ -7,6 +7,7 @@ import type ts from "typescript";
 import { evaluateBase, getProperty } from "./access.js";
 import { evaluateElements } from "./aggregates.js";
 import { callableOf } from "./callable.js";
+import { requiredSpecifier } from "./commonjs.js";
 import type { Context, Frame } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { callFunction } from "./functions.js";
@@ -15,16 +16,27 @@ import { applyMethod } from "./methods.js";
 import { findTarget } from "./modules.js";
 import { finish, originOf } from "./operations.js";
 import { innermost } from "./outer.js";
-import { dependent, primitive, quote, unknown, unsupported } from "./unknown.js";
+import { dependent, known, primitive, quote, spanOf, unknown, unsupported } from "./unknown.js";
 import type { Known, Value } from "./value.js";
 
 export function evaluateCall(ctx: Context, node: ts.CallExpression, frame: Frame): Value {
   const { ts } = ctx;
   const target = findTarget(ctx, node.expression, frame.module);
   if (target?.kind === "definition") return evaluateDefinitionCall(ctx, target.definition, node, frame).value;
+  if (requiredSpecifier(ts, node, frame.module.source) !== undefined) return evaluateRequire(ctx, node, frame);
   const callee = innermost(ts, node.expression);
   const isMethod = ts.isPropertyAccessExpression(callee) || ts.isElementAccessExpression(callee);
   return isMethod ? callMember(ctx, callee, node, frame) : callValue(ctx, ctx.evaluate(callee, frame), node, frame);
+}
+
+function evaluateRequire(ctx: Context, node: ts.CallExpression, frame: Frame): Value {
+  const target = findTarget(ctx, node, frame.module);
+  const value =
+    target === undefined
+      ? unsupported(node, frame.module, "is not followed")
+      : ctx.valueOfTarget(target, spanOf(node, frame.module));
+  const origin = originOf("import", node, frame, [value]);
+  return value.known ? known(value.data, origin) : dependent(node, frame.module, origin, value);
 }
 
 function callMember(

@@ -4,12 +4,15 @@
  * Reads no other file.
  */
 import type ts from "typescript";
+import { listCommonExports } from "./commonjs.js";
 import { type Binding, resolveName, type Source } from "./source.js";
 import type { TypeScript } from "./typescript.js";
 
 export type Export =
   | { readonly kind: "binding"; readonly binding: Binding }
   | { readonly kind: "expression"; readonly node: ts.Expression }
+  /** Given at more than one place, so that only running it could tell. */
+  | { readonly kind: "unclear"; readonly node: ts.Node }
   /** `name` is undefined for a whole module passed on under one name. */
   | { readonly kind: "passed-on"; readonly node: ts.StringLiteral; readonly name: string | undefined };
 
@@ -43,6 +46,7 @@ function listExports(ts: TypeScript, source: Source): ExportTable {
       named.set(statement.isExportEquals === true ? "export=" : "default", { kind: "expression", node: statement.expression });
     } else if (isMarked(ts, statement, ts.SyntaxKind.ExportKeyword)) listDeclared(ts, source, statement, named);
   }
+  if (named.size === 0 && stars.length === 0) listCommonExports(ts, source, named);
   return { named, stars };
 }
 

@@ -4,6 +4,7 @@
  * What the snapshot hasn't loaded is read again in the next run; until then the names from there are unknown.
  */
 import type { Context, Loaded, Module } from "./context.js";
+import { resolvePackage } from "./packages.js";
 import { isRelative, listCandidates } from "./specifier.js";
 import { quoteText, unknown } from "./unknown.js";
 import type { Span, UnknownReason } from "./value.js";
@@ -18,8 +19,7 @@ export function loadSpecifier(ctx: Context, from: Module, specifier: string, spa
 
 function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
   if (specifier === ctx.specifier) return { kind: "library" };
-  if (!isRelative(specifier))
-    return fail("unresolved-import", `${quoteText(specifier)} is a package, whose code is not read.`, span);
+  if (!isRelative(specifier)) return findPackage(ctx, from, specifier, span);
   const [first, ...rest] = listCandidates(from.file, specifier);
   if (first === undefined) return fail("unresolved-import", `${quoteText(specifier)} leads out of the file system.`, span);
   // The likeliest file alone first: asking for all at once would make a host look for a dozen files that nobody has.
@@ -29,6 +29,24 @@ function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded
   if (answer === null) return fail("unresolved-import", `${quoteText(specifier)} does not lead to a file.`, span);
   from.imports.add(answer);
   return { kind: "module", module: answer };
+}
+
+function findPackage(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
+  const read = (file: string) => {
+    const text = ctx.snapshot.read(file);
+    from.reads.set(file, text);
+    return text;
+  };
+  const resolution = resolvePackage(ctx, from.file, specifier, read);
+  const quoted = quoteText(specifier);
+  if (resolution === "installed") return fail("unresolved-import", `${quoted} is a package, whose code is not read.`, span);
+  if (resolution === "not-loaded") return fail("unresolved-import", `${quoted} is not loaded yet.`, span);
+  const text = resolution === "not-found" ? null : read(resolution.file);
+  if (resolution === "not-found" || text === null) return fail("unresolved-import", `${quoted} does not lead to a file.`, span);
+  if (text === undefined) return fail("unresolved-import", `${quoted} is not loaded yet.`, span);
+  const module = ctx.open(resolution.file, text);
+  from.imports.add(module);
+  return { kind: "module", module };
 }
 
 /** The first of the files that is there; `undefined` while one before it, or all, are not loaded. */

@@ -5,6 +5,7 @@
  * when a name of it is needed.
  */
 import type ts from "typescript";
+import { requiredSpecifier } from "./commonjs.js";
 import type { Context, Loaded, Module, Target } from "./context.js";
 import { exportsOf } from "./exports.js";
 import { innermost } from "./outer.js";
@@ -69,7 +70,11 @@ export function findTarget(ctx: Context, node: ts.Expression, module: Module, ho
     const base = findTarget(ctx, bare.expression, module, hops + 1);
     return base === undefined ? undefined : memberOf(ctx, base, bare.name.text, spanOf(bare, module), hops + 1);
   }
-  return undefined;
+  if (!ts.isCallExpression(bare)) return undefined;
+  const required = requiredSpecifier(ctx.ts, bare, module.source);
+  return required === undefined
+    ? undefined
+    : wholeOf(ctx, ctx.load(module, required.text, spanOf(required, module)), spanOf(bare, module));
 }
 
 /** Follows imports and constants that merely rename something. */
@@ -125,12 +130,24 @@ function lookUpExport(ctx: Context, module: Module, name: string, visited: Set<M
   if (isJson(module)) {
     const [statement] = module.source.root.statements;
     const node = statement !== undefined && ts.isExpressionStatement(statement) ? statement.expression : undefined;
-    return name === "default" && node !== undefined ? { kind: "expression", module, node } : undefined;
+    if (name === "default" && node !== undefined) return { kind: "expression", module, node };
+    // Bundlers give the properties of a JSON file as names, too.
+    const properties = node !== undefined && ts.isObjectLiteralExpression(node) ? node.properties : [];
+    const property = properties.find(
+      (each) => each.name !== undefined && ts.isStringLiteral(each.name) && each.name.text === name,
+    );
+    return property !== undefined && ts.isPropertyAssignment(property)
+      ? { kind: "expression", module, node: property.initializer }
+      : undefined;
   }
   const { named, stars } = exportsOf(ts, module.source);
   const own = named.get(name);
   if (own?.kind === "binding") return { kind: "binding", module, binding: own.binding };
   if (own?.kind === "expression") return { kind: "expression", module, node: own.node };
+  if (own?.kind === "unclear") {
+    const message = `${quoteText(baseName(module.file))} gives ${quoteText(name)} more than one value.`;
+    return fail(spanOf(own.node, module), "unsupported", message);
+  }
   if (own?.kind === "passed-on") {
     const span = spanOf(own.node, module);
     const loaded = ctx.load(module, own.node.text, span);
@@ -139,7 +156,9 @@ function lookUpExport(ctx: Context, module: Module, name: string, visited: Set<M
     const found = findExport(ctx, loaded.module, own.name, new Set(visited));
     return found ?? exportOf(ctx, loaded, own.name, span);
   }
-  return name === "default" ? undefined : findInStars(ctx, module, name, stars, visited);
+  // A default import of a file that says `module.exports = …` gives that.
+  if (name === "default") return named.has("export=") ? lookUpExport(ctx, module, "export=", visited) : undefined;
+  return findInStars(ctx, module, name, stars, visited);
 }
 
 function findInStars(

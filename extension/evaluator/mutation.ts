@@ -6,6 +6,7 @@
  * can't be changed by whoever gets them, so the values themselves are looked at on the way. When in doubt, it may have changed.
  */
 import type ts from "typescript";
+import { exportsObject } from "./commonjs.js";
 import type { Context, Module } from "./context.js";
 import { type Change, type Flow, flowInto, flowIntoName, loseTrack, narrow, relist, type Search, wrap } from "./flow.js";
 import { followImporters } from "./importers.js";
@@ -111,6 +112,9 @@ function stepAssignment(search: Search, module: Module, left: ts.Expression, flo
   const property = ts.isPropertyAccessExpression(target) ? target.name.text : undefined;
   const holder = ts.isPropertyAccessExpression(target) ? innermost(ts, target.expression) : target;
   const binding = ts.isIdentifier(holder) ? resolveName(ts, holder, module.source) : undefined;
+  // What is exported is followed through the files that import it.
+  const root = ts.isPropertyAccessExpression(holder) ? holder.expression : holder;
+  if (ts.isIdentifier(root) && exportsObject(ts, root, module.source) !== undefined) return flow;
   if (binding === undefined) return loseTrack(left.parent, module, flow) ?? flow;
   flowInto(search, module, binding, property === undefined ? flow : wrap(flow, property));
   return flow;

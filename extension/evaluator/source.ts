@@ -117,8 +117,7 @@ function groupReferences(ts: TypeScript, source: Source): ReadonlyMap<Binding, r
 
 function parse(ts: TypeScript, file: string, text: string): ts.SourceFile {
   const options = { languageVersion: ts.ScriptTarget.ESNext, jsDocParsingMode: ts.JSDocParsingMode.ParseNone };
-  if (file.endsWith(".json")) return ts.parseJsonText(file, text);
-  const kind = /\.[cm]?[jt]sx?$/.test(file) ? undefined : ts.ScriptKind.TS;
+  const kind = /\.(json|[cm]?[jt]sx?)$/.test(file) ? undefined : ts.ScriptKind.TS;
   return ts.createSourceFile(file, text, options, true, kind);
 }
 

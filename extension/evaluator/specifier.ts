@@ -20,7 +20,7 @@ export function isRelative(specifier: string): boolean {
 
 /** Files to try, best first. The first of them alone is nearly always right, so a host is asked for it alone. */
 export function listCandidates(fromFile: string, specifier: string): readonly string[] {
-  const target = join(fromFile, specifier);
+  const target = joinPath(fromFile, specifier);
   if (target === undefined) return [];
   const index = [...SOURCE_ENDINGS, ".json"].map((ending) => `${target}/index${ending}`);
   if (/(^|\/)\.{0,2}$/.test(specifier)) return index;
@@ -35,7 +35,7 @@ export function listCandidates(fromFile: string, specifier: string): readonly st
 }
 
 /** Joins by segments; `undefined` when the specifier leads out above the root. */
-function join(fromFile: string, specifier: string): string | undefined {
+export function joinPath(fromFile: string, specifier: string): string | undefined {
   const segments = fromFile.split("/").slice(0, -1);
   const root = /^[a-z][a-z0-9+.-]*:\/\//i.test(fromFile) ? 3 : 1;
   for (const segment of specifier.split("/")) {

@@ -141,6 +141,13 @@ export interface LocatedIssue {
 /** Texts at one moment; immutable while it is being read. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
 export interface Snapshot {
   read(file: string): string | null | undefined;
+  /** The file behind symbolic links; absent: names are what they seem. */
+  canonical?(file: string): string;
+  /**
+   * The files that import this one, as far as the workspace is known; `undefined`: not known yet. Absent: what a file exports counts
+   * as if no other file wrote to it.
+   */
+  importersOf?(file: string): readonly string[] | undefined;
 }
 
 /** What one file says. */

@@ -146,3 +146,36 @@ describe("recognising definitions", () => {
     ]);
   });
 });
+
+describe("files that are not ES modules", () => {
+  it.each<[string, string, string, unknown]>([
+    ["one value", "const c = require('./c');\n//- c.cjs\nmodule.exports = { A: 5 };", "c.A", 5],
+    ["names", "const { A } = require('./c.cjs');\n//- c.cjs\nexports.A = 5; module.exports.B = 6;", "A", 5],
+    [
+      "a name kept in a constant",
+      "const c = require('./c.cjs');\n//- c.cjs\nconst G = { hoist: 40 }; module.exports = { G };",
+      "c.G.hoist",
+      40,
+    ],
+    ["imported by name", "import { A } from './c.cjs';\n//- c.cjs\nmodule.exports = { A: 5 };", "A", 5],
+    ["imported by default", "import c from './c.cjs';\n//- c.cjs\nmodule.exports = { A: 5 };", "c.A", 5],
+    ["a member at once", "const A = require('./c.cjs').A;\n//- c.cjs\nexports.A = 5;", "A", 5],
+  ])("%s", (_name, fixture, expression, value) => {
+    expect(dataOf(`//- main.js\n${fixture}`, expression)).toEqual(value);
+  });
+
+  it.each<[string, string, RegExp]>([
+    ["given twice", "exports.A = 5; exports.A = 6;", /gives `A` more than one value/],
+    ["given in a branch", "if (x) exports.A = 5;", /gives `A` more than one value/],
+    ["mistyped", "exports.AB = 5;", /did you mean `AB`/],
+  ])("%s is unknown", (_name, code, message) => {
+    expect(unknownOf(`//- main.js\nimport { A } from './c.cjs';\n//- c.cjs\n${code}`, "A").message).toMatch(message);
+  });
+
+  it("recognise definitions", () => {
+    const { calls } = evaluateFixture(
+      "//- main.cjs\nconst { gear } = require('gearbox'); const box = require('gearbox'); gear({ teeth: 1 }); box.gear({ teeth: 2 });",
+    );
+    expect(calls.map(({ built }) => built !== undefined)).toEqual([true, true]);
+  });
+});
