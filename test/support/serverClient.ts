@@ -19,7 +19,7 @@ import {
   StreamMessageReader,
   StreamMessageWriter,
 } from "vscode-languageserver/node";
-import type { State } from "../../extension/protocol/state.js";
+import { STATE, type State } from "../../extension/protocol/state.js";
 
 export interface ServerClient {
   readonly connection: ProtocolConnection;
@@ -28,7 +28,7 @@ export interface ServerClient {
   readonly initialized: InitializeResult;
   /** Everything that was published, in order. */
   readonly published: readonly PublishDiagnosticsParams[];
-  /** Requests and notifications of the server by method, in order. */
+  /** The server's states, and its wishes that hints and lenses be asked for anew, in order. */
   readonly said: readonly { readonly method: string; readonly params: unknown }[];
   /** Errors in the server's log. */
   readonly errors: readonly string[];
@@ -101,11 +101,13 @@ export async function startServerClient({ server, files, settings = {}, commands
     }
   });
   connection.onRequest("workspace/configuration", ({ items }: { items: unknown[] }) => items.map(() => settings));
-  connection.onRequest((method, params) => {
-    heard(method, params);
-    return null;
-  });
-  connection.onNotification((method, params) => heard(method, params));
+  for (const method of ["workspace/inlayHint/refresh", "workspace/codeLens/refresh"]) {
+    connection.onRequest(method, () => {
+      heard(method, undefined);
+      return null;
+    });
+  }
+  connection.onNotification(STATE, (params: State) => heard(STATE, params));
   connection.listen();
 
   const initialized = await connection.sendRequest<InitializeResult>("initialize", {
@@ -223,7 +225,7 @@ export async function startServerClient({ server, files, settings = {}, commands
       return findings(file);
     },
     at: (file, text, into = 0) => positionAt(textOf(file), find(file, text) + into),
-    lastState: () => said.findLast(({ method }) => method === "loadmark/state")?.params as State | undefined,
+    lastState: () => said.findLast(({ method }) => method === STATE)?.params as State | undefined,
     async stop() {
       if (child.exitCode === null && child.signalCode === null) {
         const ended = new Promise((resolve) => child.once("exit", resolve));
