@@ -6,7 +6,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { DefinitionCall, Span } from "../evaluator/value.js";
 import type { Supply } from "../model/drive.js";
-import { solveMechanism } from "../model/solve.js";
+import { solveMechanismRuns } from "../model/solve.js";
 import type { MechanismFacts, MechanismRule, RuleId, Verdict } from "../rules/rule.js";
 import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
@@ -66,7 +66,7 @@ export function createJudge(): (declared: Declared) => Judged {
 
 function factsOf(mechanism: Mechanism, supply: Supply | undefined): MechanismFacts {
   const drive = supply === undefined ? mechanism.si : { ...mechanism.si, supply };
-  return { mechanism, drive, numbers: solveMechanism(drive) };
+  return { mechanism, drive, ...solveMechanismRuns(drive) };
 }
 
 /** Every rule at its own worst corner; a rule that speaks silences others. */

@@ -6,7 +6,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
 import type { Drive } from "../model/drive.js";
-import type { MechanismNumbers } from "../model/numbers.js";
+import type { MechanismSolution } from "../model/solve.js";
 
 export type Level = "error" | "warning" | "information";
 
@@ -28,11 +28,11 @@ export type RuleId =
   | "not-constant"
   | "bad-declaration";
 
-export interface MechanismFacts {
+/** Numbers, and the runs behind them. */
+export interface MechanismFacts extends MechanismSolution {
   readonly mechanism: Mechanism;
   /** What the model was told: the declaration with the supply that it runs on. */
   readonly drive: Drive;
-  readonly numbers: MechanismNumbers;
 }
 
 /** What a rule has to say: the two numbers that it compares, with units, and one way out. */

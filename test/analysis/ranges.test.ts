@@ -16,6 +16,7 @@ export const hub = mechanism("hub", { motor: twelveVolt, stages: [], load: rolle
     checkFindings(`${PRELUDE}
 export const hub = mechanism("hub", {
 //           ^^^ warning past-peak: 1.3 N·m
+//           ^^^ information backdrives: at 33.4 mm/s
   motor: twelveVolt,
   stages: [reduction(1.5, { efficiency: between(0.8, 1) })],
   load: lift({ mass: "10 kg", drumRadius: "20 mm", travel: "1 m", counterbalance: between("20 N", "60 N") }),

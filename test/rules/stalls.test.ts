@@ -7,6 +7,7 @@ describe("stalls", () => {
     checkFindings(`${PRELUDE}
 export const hoist = mechanism("hoist", {
 //           ^^^^^ error stalls: each motor must give 2.45 N·m, but stalls at 2 N·m. A ratio of 4.91 instead of 2 would
+//           ^^^^^ information backdrives: Runs back
   motor: twelveVolt,
   stages: [reduction(2, { efficiency: 1 })],
   load: lift({ mass: "10 kg", drumRadius: "50 mm", travel: "1 m" }),
@@ -31,6 +32,7 @@ export const hub = mechanism("hub", { motor: twelveVolt, stages: [], motorCurren
     checkFindings(`${PRELUDE}
 export const base = mechanism("base", {
 //           ^^^^ error stalls: the wheels must push 69.3 N, but grip only 62.4 N
+//           ^^^^ information backdrives: Runs back
   motor: twelveVolt,
   motorCount: 4,
   stages: [],

@@ -1,0 +1,73 @@
+/**
+ * A drive with another ratio, and the ratio that makes its travel quickest.
+ *
+ * Searches the ratio alone, as a number; teeth that exist are chosen elsewhere.
+ */
+import type { Drive, Stage } from "./drive.js";
+import { hardestPosition } from "./hardest.js";
+import { availableLine } from "./line.js";
+import { trainOf } from "./stages.js";
+import { solveTravel } from "./travel.js";
+
+/** The same drive with its whole ratio times `factor`; losses and inertias stay those of its stages. */
+export function withRatioTimes(drive: Drive, factor: number): Drive {
+  const [first, ...rest] = drive.stages;
+  const direct: Stage = {
+    kind: "reduction",
+    ratio: 1,
+    efficiency: 1,
+    backwardEfficiency: 1,
+    nearSelfLocking: false,
+    inertiaKgM2: 0,
+  };
+  const stage = first ?? direct;
+  return { ...drive, stages: [{ ...stage, ratio: stage.ratio * factor }, ...rest] };
+}
+
+export interface QuickestRatio {
+  readonly ratio: number;
+  readonly timeS: number;
+}
+
+/** Golden-section steps: the ratio to about a thousandth, which is finer than any choice of teeth. */
+const STEPS = 14;
+const GOLDEN = (Math.sqrt(5) - 1) / 2;
+
+/**
+ * The ratio with the shortest travel, by golden-section search of log(ratio) (Kiefer 1953), on the side where the motor moves
+ * the load at all; null for a load without travel, or where no ratio makes it arrive.
+ */
+export function quickestRatio(drive: Drive): QuickestRatio | null {
+  const { ratio } = trainOf(drive.stages);
+  const share = hardestPosition(drive).motorTorqueNm / availableLine(drive).stallTorqueNm;
+  if (!Number.isFinite(share)) return null;
+  // Below the first bound it stalls. Inertia can ask for more ratio than the static load does, never for a hundred times more.
+  const least = Math.max(share * 1.02, 1e-3);
+  let low = Math.log(least);
+  let high = Math.log(Math.max(least * 20, 20));
+  let best: QuickestRatio | null = null;
+  const timeAt = (log: number): number => {
+    const factor = Math.exp(log);
+    const timeS = solveTravel(withRatioTimes(drive, factor))?.timeS ?? null;
+    if (timeS !== null && (best === null || timeS < best.timeS)) best = { ratio: ratio * factor, timeS };
+    return timeS ?? Number.POSITIVE_INFINITY;
+  };
+  let inner = high - GOLDEN * (high - low);
+  let outer = low + GOLDEN * (high - low);
+  let atInner = timeAt(inner);
+  let atOuter = timeAt(outer);
+  for (let step = 0; step < STEPS; step++) {
+    if (atInner <= atOuter) {
+      high = outer;
+      [outer, atOuter] = [inner, atInner];
+      inner = high - GOLDEN * (high - low);
+      atInner = timeAt(inner);
+    } else {
+      low = inner;
+      [inner, atInner] = [outer, atOuter];
+      outer = low + GOLDEN * (high - low);
+      atOuter = timeAt(outer);
+    }
+  }
+  return best;
+}
