@@ -70,11 +70,15 @@ function isWorthEvaluating(text: string | null | undefined): boolean {
   return typeof text === "string" && mentionsDeclarations(text);
 }
 
+const LEVELS: readonly Finding["level"][] = ["error", "warning", "information"];
+
+/** By file and position; of findings at one place the worst first. */
 function byPlace(a: Finding, b: Finding): number {
   return (
     compare(a.at.file, b.at.file) ||
     a.at.start - b.at.start ||
     a.at.end - b.at.end ||
+    LEVELS.indexOf(a.level) - LEVELS.indexOf(b.level) ||
     compare(a.rule, b.rule) ||
     compare(a.message, b.message)
   );

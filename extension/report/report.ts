@@ -81,6 +81,7 @@ const NO_NUMBERS: NumbersOrNull = {
   stageEfficiency: null,
   available: null,
   hardest: null,
+  travel: null,
   hold: null,
   stall: null,
   feedforward: null,

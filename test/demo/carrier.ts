@@ -1,8 +1,13 @@
 /** The seedling carrier: trays up, water on, lid closed. */
+import { robot } from "loadmark";
+import { driveBase } from "./mechanisms/driveBase.js";
 import { lidArm } from "./mechanisms/lidArm.js";
+import { seedDrum } from "./mechanisms/seedDrum.js";
 import { shelfLift } from "./mechanisms/shelfLift.js";
+import { soilPress } from "./mechanisms/soilPress.js";
 import { trayHoist, turnsFor } from "./mechanisms/trayHoist.js";
 import { wateringArm } from "./mechanisms/wateringArm.js";
+import { pack } from "./power.js";
 
 const SHELF_HEIGHT_M = 0.62;
 
@@ -11,3 +16,8 @@ export const setPoints = {
   trayTurns: turnsFor(SHELF_HEIGHT_M),
   ratios: [trayHoist, shelfLift, wateringArm, lidArm].map(({ name, ratio }) => ({ name, ratio })),
 };
+
+export const carrier = robot("seedling carrier", {
+  supply: pack,
+  mechanisms: [trayHoist, shelfLift, wateringArm, lidArm, driveBase, seedDrum, soilPress],
+});

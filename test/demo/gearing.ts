@@ -8,5 +8,7 @@ export const WATERING_DRIVEN = 48;
 
 export const SHELF = { driver: 20, driven: 22 } as const;
 
+export const DRUM = { driver: 22, driven: 36 } as const;
+
 /** The lid's drive is a closed gearbox: only its ratio is known. */
 export const LID_RATIO = 4;

@@ -9,5 +9,6 @@ export const shelfLift = mechanism("shelf lift", {
   motorCount: 2,
   stages: [spur(SHELF.driver, SHELF.driven)],
   load: lift({ mass: "13 kg", drumRadius: "25 mm", travel: "0.9 m", frictionForce: "6 N" }),
+  within: "12 s",
   supply: pack,
 });

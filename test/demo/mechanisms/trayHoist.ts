@@ -1,5 +1,5 @@
 /** Lifts a tray of seedlings from the bench to the height of the shelves. */
-import { lift, mechanism, spur } from "loadmark";
+import { breaker, lift, mechanism, spur } from "loadmark";
 import { PINION, TRAY_DRIVEN } from "../gearing.js";
 import { quickMotor } from "../motors.js";
 import { pack } from "../power.js";
@@ -12,6 +12,9 @@ export const trayHoist = mechanism("tray hoist", {
   motor: quickMotor,
   stages: [spur(PINION, TRAY_DRIVEN)],
   load: lift({ mass: `${TRAY_KG + WET_SOIL_KG} kg`, drumRadius: `${DRUM_RADIUS_MM} mm`, travel: "0.7 m" }),
+  within: "5 s",
+  holdFor: "30 s",
+  protect: breaker({ holdCurrent: "3 A", trips: { at: "6 A", after: "4 s" } }),
   supply: pack,
 });
 
