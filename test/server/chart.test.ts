@@ -72,7 +72,7 @@ describe("a chart", () => {
     await start(robot(PAST_PEAK));
     const { chart, old, saved } = shown(await ask(null, "swing arm"));
     expect(chart.hardest.torqueNm).toBeCloseTo(neededNm(PAST_PEAK), 9);
-    expect(chart.findings.map(({ rule, level }) => [rule, level])).toEqual([["past-peak", "warning"]]);
+    expect(chart.findings.map(({ rule, level }) => [rule, level])).toContainEqual(["past-peak", "warning"]);
     expect([old, saved]).toEqual([null, null]);
   });
 

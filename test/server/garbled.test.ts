@@ -57,7 +57,7 @@ describe("garbled text", () => {
   it("gives findings as if it had been there from the start, and good text gives the old ones again", async () => {
     const engine = await loadEngine();
     const good = await findingsOf({ [ROBOT]: SWING_ARM, [GEARS]: gears(PAST_PEAK) });
-    expect(good).toHaveLength(1);
+    expect(good).toContainEqual(expect.stringContaining("past-peak"));
     await fc.assert(
       fc.asyncProperty(fc.array(edit, { minLength: 1, maxLength: 5 }), async (edits) => {
         const { session, current, errors } = start(engine);
