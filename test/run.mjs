@@ -28,6 +28,7 @@ const parts = {
     run: () => runCheck("lint and format", ["node_modules/@biomejs/biome/bin/biome", "check", "."]),
   },
   unit: { title: "tests in Node", run: runUnitTests },
+  chart: { title: "tests of the chart's page in a browser", run: runChartPage },
   development: { title: "tests in VS Code, extension run from the build", run: () => runEditor("development") },
   installed: { title: "tests in VS Code, extension installed from its package", run: () => runEditor("installed") },
 };
@@ -129,6 +130,13 @@ function describeFile({ name, status, message, assertionResults }) {
   });
   const broken = status === "failed" && !assertionResults.some((test) => test.status === "failed");
   return broken ? [...tests, { title: file, failure: message }] : tests;
+}
+
+/** @returns {Promise<PartResult>} */
+async function runChartPage() {
+  const { getChromium, runChartPageTests } = await importTypeScript("test/workbench/index.ts");
+  const chromium = await getChromium();
+  return "missing" in chromium ? { notRun: chromium.missing } : { tests: await runChartPageTests(chromium.path) };
 }
 
 /**

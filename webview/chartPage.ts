@@ -151,7 +151,7 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
       if (answer.kind === "chart") return showChart(answer);
       shown = undefined;
       setShown(parts.content, false);
-      setText(parts.empty, emptyText(answer.reason));
+      setText(parts.emptyReason, emptyText(answer.reason));
     },
   };
 }

@@ -11,6 +11,17 @@ import { repositoryRoot } from "./paths.js";
 const NAMES = ["chromium", "chromium-browser", "google-chrome", "google-chrome-stable", "chrome"];
 const MAC_CHROME = "/Applications/Google Chrome.app/Contents/MacOS/Google Chrome";
 
+/** Quiet, and as root too. */
+export const CHROMIUM_FLAGS = [
+  ...(process.getuid?.() === 0 ? ["--no-sandbox"] : []),
+  "--disable-gpu",
+  "--disable-quic",
+  "--no-first-run",
+  "--disable-background-networking",
+  "--disable-component-update",
+  "--disable-sync",
+];
+
 export type ChromiumSearch = { readonly path: string } | { readonly missing: string };
 
 export async function getChromium(): Promise<ChromiumSearch> {

@@ -6,6 +6,7 @@ import { element } from "./element.js";
 
 export interface Layout {
   readonly empty: HTMLElement;
+  readonly emptyReason: HTMLElement;
   readonly content: HTMLElement;
   readonly old: HTMLElement;
   readonly title: HTMLElement;
@@ -32,7 +33,8 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
   const canvas = (): HTMLCanvasElement => element("canvas", { attributes: { role: "img" } });
   const button = (text: string): HTMLButtonElement => element("button", { text, attributes: { type: "button" } });
   const parts: Layout = {
-    empty: element("p", { class: "empty" }),
+    empty: element("div", { class: "empty" }, [element("h1", { text: "Operating point" })]),
+    emptyReason: element("p"),
     content: element("div", { class: "content" }),
     old: element("p", { class: "old", attributes: { role: "status" } }),
     title: element("h1"),
@@ -57,6 +59,7 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
     notChecked: element("section", { class: "remarks" }),
   };
   parts.tableButton.setAttribute("aria-controls", TABLE_ID);
+  parts.empty.append(parts.emptyReason);
   parts.tableBox.append(parts.table);
   parts.plots.append(element("div", { class: "plot" }, [parts.upper]), element("div", { class: "plot" }, [parts.lower]));
   const actions = element("div", { class: "actions" }, [parts.tableButton, parts.pictureButton, parts.csvButton]);

@@ -26,7 +26,7 @@ export interface OpenedChart {
   readonly page: Page;
   /** What the page has sent, in order. */
   readonly sent: readonly PageMessage[];
-  /** Errors of the page and of its policy. */
+  /** Errors of the page, what its policy refused among them. */
   readonly troubles: readonly string[];
   show(answer: ChartAnswer): Promise<void>;
   post(message: unknown): Promise<void>;
@@ -70,7 +70,7 @@ async function openChart(browser: Browser, address: string, options: ChartPageOp
   const troubles: string[] = [];
   page.on("pageerror", (error) => troubles.push(error.message));
   page.on("console", (message) => {
-    if (message.type() === "error" || message.type() === "warning") troubles.push(message.text());
+    if (message.type() === "error") troubles.push(message.text());
   });
   await page.exposeFunction("keepSent", (message: PageMessage) => void sent.push(message));
   await page.addInitScript(putEditorFunctions, state);
