@@ -6,7 +6,7 @@
 import type ts from "typescript";
 import type { Binding, Source } from "./source.js";
 import type { TypeScript } from "./typescript.js";
-import type { Definition, DefinitionCall, Snapshot, Span, Unknown, Value } from "./value.js";
+import type { Data, Definition, DefinitionCall, Snapshot, Span, Unknown, Value } from "./value.js";
 
 /** One file as it is now, with what was worked out about it; dropped when anything that it read has changed. */
 export interface Module {
@@ -19,8 +19,17 @@ export interface Module {
   readonly imports: Set<Module>;
   readonly loads: Map<string, Loaded>;
   readonly exports: Map<string, Target>;
+  readonly importers: Importers;
   /** By function or loop, the runs that are known of it. */
   readonly runs: Map<ts.Node, readonly Frame[]>;
+}
+
+/** What is known of the files that import a module: they may change the objects that it exports. */
+export interface Importers {
+  readonly lists: Map<string, readonly string[] | undefined>;
+  readonly reads: Map<string, string | null | undefined>;
+  /** The objects, with what was found about them. */
+  readonly guards: { readonly binding: Binding; readonly data: Data; readonly isChanged: boolean }[];
 }
 
 /** One run through a file, a function's body or a loop's body: what its names stand for. */
@@ -60,6 +69,8 @@ export interface Context {
   /** The call that made each built object. */
   readonly makers: WeakMap<object, DefinitionCall>;
   snapshot: Snapshot;
+  /** Modules that are known to be true for the snapshot. */
+  readonly checked: Set<Module>;
   /** Nesting of the evaluation that is going on. */
   depth: number;
   /** Expressions evaluated for this file so far. */

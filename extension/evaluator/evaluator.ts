@@ -10,6 +10,7 @@ import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
+import { dropStale, listReached } from "./freshness.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
 import { valueOfBinding, valueOfTarget } from "./names.js";
@@ -34,11 +35,9 @@ export interface EvaluatorOptions {
 
 export function createEvaluator(ts: TypeScript, { specifier, definitions }: EvaluatorOptions): Evaluator {
   const sources = new Map<string, Source>();
-  const evaluations = new Map<Module, FileEvaluation>();
+  const evaluations = new WeakMap<Module, FileEvaluation>();
   const nothing: Snapshot = { read: () => undefined };
   const modules = new Map<string, Module>();
-  /** Known to be true of the snapshot that is being read. */
-  const checked = new Set<Module>();
   const evaluate = createEvaluate(ts);
   const ctx: Context = {
     ts,
@@ -47,28 +46,22 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     modules,
     makers: new WeakMap(),
     snapshot: nothing,
+    checked: new Set(),
     depth: 0,
     steps: 0,
     evaluate: (node, frame) => evaluate(ctx, node, frame),
     valueOf: (binding, frame) => valueOfBinding(ctx, binding, frame),
     valueOfTarget: (target, span) => valueOfTarget(ctx, target, span),
     load: (module, name, span) => loadSpecifier(ctx, module, name, span),
-    open(file, text) {
-      const present = modules.get(file);
-      // One that nothing led to for a while may rest on texts of then.
-      if (present !== undefined && !checked.has(present)) dropStale(ctx, file, evaluations, checked);
-      const module = open(ctx, sources, file, text);
-      checked.add(module);
-      return module;
-    },
+    open: (file, text) => open(ctx, sources, file, text),
   };
   return {
     evaluateFile(file, snapshot) {
       ctx.snapshot = snapshot;
-      checked.clear();
+      ctx.checked.clear();
       const text = snapshot.read(file);
       if (typeof text !== "string") {
-        dropStale(ctx, file, evaluations, checked);
+        dropStale(ctx, file);
         return withoutText(file, text);
       }
       const module = ctx.open(file, text);
@@ -79,10 +72,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     },
     forget(file) {
       sources.delete(file);
-      const module = modules.get(file);
-      if (module === undefined) return;
       modules.delete(file);
-      evaluations.delete(module);
     },
   };
 }
@@ -100,7 +90,7 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
     else for (const call of found) (call.span.file === file ? calls : elsewhere).add(call);
   }
   const reached = listReached(module);
-  const reads = new Map([...reached].flatMap((each) => [...each.reads]));
+  const reads = new Map([...reached].flatMap((each) => [...each.reads, ...each.importers.reads]));
   const having = (kind: (text: string | null | undefined) => boolean) =>
     [...reads].flatMap(([name, text]) => (kind(text) ? [name] : []));
   return {
@@ -127,36 +117,8 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
   }
 }
 
-/** Forgets every module below `file` that rests on a text, or a module, that is no longer what it was; the others are checked. */
-function dropStale(ctx: Context, file: string, evaluations: Map<Module, FileEvaluation>, checked: Set<Module>): void {
-  const start = ctx.modules.get(file);
-  if (start === undefined) return;
-  const users = new Map<Module, Module[]>();
-  const stale: Module[] = [];
-  for (const module of listReached(start)) {
-    checked.add(module);
-    const isReplaced = ctx.modules.get(module.file) !== module;
-    if (isReplaced || [...module.reads].some(([name, text]) => ctx.snapshot.read(name) !== text)) stale.push(module);
-    for (const used of module.imports) users.set(used, [...(users.get(used) ?? []), module]);
-  }
-  const dropped = new Set<Module>();
-  for (let module = stale.pop(); module !== undefined; module = stale.pop()) {
-    if (dropped.has(module)) continue;
-    dropped.add(module);
-    if (ctx.modules.get(module.file) === module) ctx.modules.delete(module.file);
-    evaluations.delete(module);
-    stale.push(...(users.get(module) ?? []));
-  }
-}
-
-/** The module and everything that its values rest on. */
-function listReached(start: Module): Set<Module> {
-  const reached = new Set([start]);
-  for (const module of reached) for (const used of module.imports) reached.add(used);
-  return reached;
-}
-
 function open(ctx: Context, sources: Map<string, Source>, file: string, text: string): Module {
+  dropStale(ctx, file);
   const present = ctx.modules.get(file);
   if (present !== undefined) return present;
   const kept = sources.get(file);
@@ -170,6 +132,7 @@ function open(ctx: Context, sources: Map<string, Source>, file: string, text: st
     imports: new Set(),
     loads: new Map(),
     exports: new Map(),
+    importers: { lists: new Map(), reads: new Map(), guards: [] },
     runs: new Map(),
   };
   module.root = {
@@ -182,6 +145,7 @@ function open(ctx: Context, sources: Map<string, Source>, file: string, text: st
     height: 0,
   };
   ctx.modules.set(file, module);
+  ctx.checked.add(module);
   return module;
 }
 

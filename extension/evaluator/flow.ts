@@ -24,6 +24,8 @@ export interface Flow {
 
 export interface Search {
   readonly ctx: Context;
+  /** The module whose value depends on the outcome. */
+  readonly home: Module;
   /** Names and expressions that the objects flow into. */
   readonly pending: { readonly module: Module; readonly start: Binding | ts.Node; readonly flow: Flow }[];
   readonly seen: Map<object, Set<string>>;

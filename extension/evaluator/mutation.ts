@@ -7,9 +7,11 @@
  */
 import type ts from "typescript";
 import { exportsObject } from "./commonjs.js";
-import type { Context, Module } from "./context.js";
+import type { Context, Module, Target } from "./context.js";
+import { isExported } from "./exports.js";
 import { type Change, type Flow, flowInto, flowIntoName, loseTrack, narrow, relist, type Search, wrap } from "./flow.js";
 import { followImporters } from "./importers.js";
+import { follow } from "./modules.js";
 import { followCall, followMethod, followResult } from "./mutationCalls.js";
 import { innermost, isOuter, outermost } from "./outer.js";
 import { type Binding, findReferences, resolveName } from "./source.js";
@@ -20,8 +22,13 @@ const MOST_FLOWS = 1000;
 
 /** What in the program may have changed the object that `binding` stands for, or `undefined` when nothing can have. */
 export function findChange(ctx: Context, module: Module, binding: Binding, data: Data): Change | undefined {
-  const search: Search = { ctx, pending: [], seen: new Map() };
-  flowInto(search, module, binding, { objects: [data], wraps: [] });
+  const search: Search = { ctx, home: module, pending: [], seen: new Map() };
+  const whole: Flow = { objects: [data], wraps: [] };
+  flowInto(search, module, binding, whole);
+  const target: Target = binding.kind === "import" ? follow(ctx, { kind: "binding", module, binding }) : { kind: "library" };
+  // What is exported without a name has no search of its own.
+  const elsewhere = target.kind === "expression" ? followImporters(search, target, whole) : undefined;
+  if (elsewhere !== undefined) return elsewhere;
   for (let next = search.pending.pop(), count = 0; next !== undefined; next = search.pending.pop(), count++) {
     const { start, flow } = next;
     if (count > MOST_FLOWS) return { node: module.source.root, module, wording: "hands it round too often to follow" };
@@ -37,7 +44,9 @@ function followName(search: Search, module: Module, binding: Binding, flow: Flow
     const change = followUse(search, module, reference, flow);
     if (change !== undefined) return change;
   }
-  return followImporters(search, module, binding, flow);
+  return isExported(ctx.ts, binding, module.source)
+    ? followImporters(search, { kind: "binding", module, binding }, flow)
+    : undefined;
 }
 
 /** What happens to the objects from one expression on, outwards to where they end. */
@@ -80,6 +89,8 @@ function step(search: Search, module: Module, node: ts.Node, parent: ts.Node, fl
     flowIntoName(search, module, parent.name, flow);
     return undefined;
   }
+  if (ts.isExportAssignment(parent))
+    return followImporters(search, { kind: "expression", module, node: parent.expression }, flow);
   if (ts.isForOfStatement(parent)) return stepLoop(search, module, parent, flow);
   if (ts.isReturnStatement(parent) || (ts.isArrowFunction(parent) && parent.body === node)) {
     return followResult(search, module, parent, flow);
@@ -114,7 +125,11 @@ function stepAssignment(search: Search, module: Module, left: ts.Expression, flo
   const binding = ts.isIdentifier(holder) ? resolveName(ts, holder, module.source) : undefined;
   // What is exported is followed through the files that import it.
   const root = ts.isPropertyAccessExpression(holder) ? holder.expression : holder;
-  if (ts.isIdentifier(root) && exportsObject(ts, root, module.source) !== undefined) return flow;
+  if (ts.isIdentifier(root) && exportsObject(ts, root, module.source) !== undefined) {
+    return (
+      followImporters(search, { kind: "expression", module, node: (left.parent as ts.BinaryExpression).right }, flow) ?? flow
+    );
+  }
   if (binding === undefined) return loseTrack(left.parent, module, flow) ?? flow;
   flowInto(search, module, binding, property === undefined ? flow : wrap(flow, property));
   return flow;
@@ -152,7 +167,6 @@ function isHarmless(ts: Context["ts"], parent: ts.Node): boolean {
     ts.isVoidExpression(parent) ||
     ts.isElementAccessExpression(parent) ||
     ts.isComputedPropertyName(parent) ||
-    ts.isExportAssignment(parent) ||
     ts.isEnumMember(parent)
   );
 }

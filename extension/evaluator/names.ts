@@ -161,6 +161,7 @@ function functionValue(ctx: Context, binding: Binding, home: Frame): Value {
 function guard(ctx: Context, binding: Binding, home: Frame, value: Value): Value {
   if (!value.known || (value.data.kind !== "array" && value.data.kind !== "object")) return value;
   const change = findChange(ctx, home.module, binding, value.data);
+  home.module.importers.guards.push({ binding, data: value.data, isChanged: change !== undefined });
   if (change === undefined) return value;
   const { node, module, wording } = change;
   const cause = unknown("mutated", `${quote(node, module)} ${wording}.`, "", {
