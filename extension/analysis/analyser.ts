@@ -51,7 +51,7 @@ export function createAnalyser(typescript: TypeScript): Analyser {
       for (const one of settings.wanted) wanted.add(one);
       const declared = collectDeclared(calls);
       const judged = judge(declared);
-      const found = [...findInDeclarations(calls, declared, snapshot), ...judged.findings];
+      const found = [...findInDeclarations([...sorted.values()], declared, snapshot), ...judged.findings];
       const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))];
       return {
         mechanisms: judged.mechanisms,

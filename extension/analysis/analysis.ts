@@ -7,6 +7,7 @@ import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
 import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
+import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
 import type { Level, RuleId } from "../rules/rule.js";
 
@@ -27,6 +28,8 @@ export interface AnalysedMechanism {
   readonly call: DefinitionCall;
   /** Absent where a value is unknown or refused. */
   readonly declared?: Mechanism;
+  /** What the model was told: the declaration with the supply that it runs on; present with `numbers`. */
+  readonly drive?: Drive;
   /** Absent where the physics could not be run; `notChecked` then says why. */
   readonly numbers?: MechanismNumbers;
   /** Plain sentences. */

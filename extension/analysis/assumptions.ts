@@ -21,6 +21,13 @@ export function tellAssumptions(
   }
   if (corners > 0)
     assumed.push(`Numbers are for the middle of each range; findings are for the worst of ${corners} combinations of ends.`);
-  const notChecked: string[] = [];
-  return { assumed, notChecked };
+  return { assumed, notChecked: tellNotChecked(mechanism) };
+}
+
+function tellNotChecked({ motor, protect, si }: Mechanism): string[] {
+  const told: string[] = [];
+  if (motor.thermal === undefined) told.push("Heat: the motor has no thermal data.");
+  if (protect === undefined) told.push("Protection: none is declared.");
+  if (si.withinS === undefined && si.load.kind !== "roller") told.push('Time: no "within" is declared.');
+  return told;
 }

@@ -54,9 +54,8 @@ function bits(count: number, isHigh: (index: number) => boolean): boolean[] {
   return Array.from({ length: count }, (_, index) => isHigh(index));
 }
 
-function tell([leaf, plain]: readonly [Leaf, string | number]): string {
-  const field = leaf.path.findLast((key) => typeof key === "string") ?? leaf.call.definition;
-  return `${field} ${typeof plain === "string" ? plain.replaceAll("*", "·") : plain}`;
+function tell([{ label }, plain]: readonly [Leaf, string | number]): string {
+  return `${label} ${typeof plain === "string" ? plain.replaceAll("*", "·") : plain}`;
 }
 
 /** Mulberry32, a small seeded generator: the same draws on every machine. */

@@ -1,17 +1,26 @@
 /** Findings about the declarations themselves: refused arguments, names used twice, values that cannot be known. */
-import type { DefinitionCall, Snapshot, Span, Unknown } from "../evaluator/value.js";
+import type { DefinitionCall, FileEvaluation, Snapshot, Span, Unknown } from "../evaluator/value.js";
 import { badDeclaration, tellIssue, tellMissing, tellNameTwice } from "../rules/badDeclaration.js";
 import { notConstant, tellUnknown } from "../rules/notConstant.js";
 import type { Finding } from "./analysis.js";
 import { type Declared, stringIn } from "./declared.js";
 
-export function findInDeclarations(calls: readonly DefinitionCall[], declared: Declared, snapshot: Snapshot): Finding[] {
+export function findInDeclarations(evaluations: readonly FileEvaluation[], declared: Declared, snapshot: Snapshot): Finding[] {
+  const calls = evaluations.flatMap((evaluation) => evaluation.calls);
   return [
+    ...evaluations.flatMap(findProblem),
     ...calls.flatMap((call) => findIssues(call, calls, snapshot)),
     ...findUnknowns(calls),
     ...findNamesTwice("mechanism", calls),
     ...findNamesTwice("robot", calls),
   ].map((finding) => ({ ...finding, mechanism: finding.mechanism ?? mechanismAround(finding.at, declared) }));
+}
+
+/** A file that could not be read at all, such as one nested too deeply for any parser. */
+function findProblem({ problem }: FileEvaluation): Finding[] {
+  if (problem === undefined) return [];
+  const { message } = tellUnknown(problem);
+  return [{ rule: notConstant.id, level: notConstant.level, mechanism: null, message, at: problem.origin.span, related: [] }];
 }
 
 function findIssues(call: DefinitionCall, calls: readonly DefinitionCall[], snapshot: Snapshot): Finding[] {

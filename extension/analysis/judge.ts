@@ -14,7 +14,8 @@ import type { AnalysedMechanism, AnalysedRobot, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
 import { type Corner, cornersOf } from "./corners.js";
 import type { Declared } from "./declared.js";
-import { spanAt, valueAt } from "./places.js";
+import { robotOf, supplyCallOf } from "./lentSupply.js";
+import { spanAt } from "./places.js";
 
 export interface Judged {
   readonly mechanisms: readonly AnalysedMechanism[];
@@ -57,7 +58,12 @@ export function createJudge(): (declared: Declared) => Judged {
         const facts = solve(mechanism, one.call, robot);
         for (const { rule, verdict } of judgeMechanism(facts))
           findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
-        return { ...one, numbers: facts.nominal.numbers, ...tellAssumptions(mechanism, robot?.declared, facts.corners.length) };
+        return {
+          ...one,
+          drive: facts.nominal.drive,
+          numbers: facts.nominal.numbers,
+          ...tellAssumptions(mechanism, robot?.declared, facts.corners.length),
+        };
       }),
       findings: [...findings, ...motors.flatMap(({ declared, at, call }) => judgeMotor(declared, at, call))],
     };
@@ -114,18 +120,6 @@ function toFinding(
     return span === undefined ? [] : [{ at: span, message: `"${path.join(".")}" is set here.` }];
   });
   return { rule: rule.id, level: verdict.level ?? rule.level, mechanism, message: verdict.message, at, related };
-}
-
-/** The one robot that lists the mechanism; with several, none of them is assumed. */
-function robotOf(mechanism: Mechanism, robots: readonly AnalysedRobot[]): AnalysedRobot | undefined {
-  const listing = robots.filter((robot) => robot.declared.mechanisms.includes(mechanism));
-  return listing.length === 1 ? listing[0] : undefined;
-}
-
-function supplyCallOf({ call }: AnalysedRobot): DefinitionCall | undefined {
-  const argument = call.args[1];
-  const value = argument === undefined ? undefined : valueAt(argument, ["supply"]);
-  return value?.known && value.data.kind === "built" ? value.data.call : undefined;
 }
 
 function tellWhyUnknown(call: DefinitionCall): string {

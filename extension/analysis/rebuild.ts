@@ -3,7 +3,7 @@
  *
  * Works on the evaluated calls, not on text, so that a thousand variants cost no parsing. Untouched parts keep their identity.
  */
-import { DEFINITIONS } from "../declarations/table.js";
+import { ARGUMENT_NAMES, DEFINITIONS } from "../declarations/table.js";
 import type { DefinitionCall, Value } from "../evaluator/value.js";
 
 /** A written number or quantity among the arguments of a call, or a whole `between` call. */
@@ -12,6 +12,8 @@ export interface Leaf {
   /** From the argument tuple inwards. */
   readonly path: readonly (string | number)[];
   readonly plain: string | number;
+  /** From the outermost declaration inwards, such as "motor.stall.torque" or "stages[0].driver". */
+  readonly label: string;
   /** Set where the leaf is a range: both ends; `plain` is then its low end. */
   readonly range?: readonly [low: string | number, high: string | number];
 }
@@ -22,27 +24,33 @@ export type Replacements = ReadonlyMap<Leaf, string | number>;
 export function leavesBelow(call: DefinitionCall): Leaf[] {
   const seen = new Set<DefinitionCall>();
   const leaves: Leaf[] = [];
-  const visitCall = (one: DefinitionCall): void => {
+  const visitCall = (one: DefinitionCall, label: string): void => {
     if (seen.has(one)) return;
     seen.add(one);
-    for (const [index, arg] of one.args.entries()) visit(one, arg, [index]);
+    for (const [index, arg] of one.args.entries())
+      visit(one, arg, [index], join(label, ARGUMENT_NAMES.get(one.definition)?.[index]));
   };
-  const visit = (owner: DefinitionCall, value: Value, path: readonly (string | number)[]): void => {
+  const visit = (owner: DefinitionCall, value: Value, path: readonly (string | number)[], label: string): void => {
     if (!value.known) return;
     const { data } = value;
-    if (data.kind === "array") for (const [index, item] of data.items.entries()) visit(owner, item, [...path, index]);
-    if (data.kind === "object") for (const [key, item] of data.entries) visit(owner, item, [...path, key]);
+    if (data.kind === "array")
+      for (const [index, item] of data.items.entries()) visit(owner, item, [...path, index], `${label}[${index}]`);
+    if (data.kind === "object") for (const [key, item] of data.entries) visit(owner, item, [...path, key], join(label, key));
     if (data.kind === "primitive" && (typeof data.value === "string" || typeof data.value === "number")) {
-      leaves.push({ call: owner, path, plain: data.value });
+      leaves.push({ call: owner, path, plain: data.value, label });
     }
     if (data.kind === "built") {
       const range = rangeOf(data.call);
-      if (range === undefined) visitCall(data.call);
-      else leaves.push({ call: owner, path, plain: range[0], range });
+      if (range === undefined) visitCall(data.call, label);
+      else leaves.push({ call: owner, path, plain: range[0], label, range });
     }
   };
-  visitCall(call);
+  visitCall(call, "");
   return leaves;
+}
+
+function join(label: string, key: string | undefined): string {
+  return key === undefined || label === "" ? `${label}${key ?? ""}` : `${label}.${key}`;
 }
 
 /** What `call` builds with the replacements; `undefined` where a definition refuses them. */

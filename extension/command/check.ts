@@ -4,6 +4,7 @@ import path from "node:path";
 import { createAnalyser } from "../analysis/analyser.js";
 import type { Analysis } from "../analysis/analysis.js";
 import { loadParser } from "../analysis/parser.js";
+import { sensitivitiesOf } from "../analysis/sensitivity.js";
 import { makeReport } from "../report/report.js";
 import { writeText } from "../report/text.js";
 import type { CommandLine, FailOn } from "./commandLine.js";
@@ -27,7 +28,14 @@ export async function check({ path: given, format, failOn }: Extract<CommandLine
   // terminal can open only what counts from the working directory.
   const base = format === "json" ? (stats.isDirectory() ? target : path.dirname(target)) : process.cwd();
   const nameOf = (file: string) => path.relative(base, file).split(path.sep).join("/");
-  const output = format === "json" ? `${JSON.stringify(makeReport(analysis, nameOf), null, 2)}\n` : writeText(analysis, nameOf);
+  const output =
+    format === "json"
+      ? `${JSON.stringify(
+          makeReport(analysis, nameOf, (one) => sensitivitiesOf(analysis, one)),
+          null,
+          2,
+        )}\n`
+      : writeText(analysis, nameOf);
   return { output, status: fails(analysis, failOn) ? 1 : 0 };
 }
 

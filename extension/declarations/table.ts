@@ -50,3 +50,11 @@ export const DEFINITIONS: ReadonlyMap<string, Pick<Definition, "name" | "check">
     betweenDefinition,
   ].map((definition) => [definition.name, definition]),
 );
+
+/** Names of the arguments that stand in a row, for telling where a value is; words that take one object are not listed. */
+export const ARGUMENT_NAMES: ReadonlyMap<string, readonly string[]> = new Map<string, readonly string[]>([
+  ...["spur", "chain", "belt"].map((word) => [word, ["driver", "driven"]] as const),
+  ["planetary", ["sun", "ring"]],
+  ["worm", ["starts", "wheelTeeth"]],
+  ["reduction", ["ratio"]],
+]);

@@ -5,6 +5,7 @@
  * that the last bit of a platform's arithmetic never shows.
  */
 import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { Sensitivity } from "../analysis/sensitivity.js";
 import { createLineFinder, type Place } from "./lines.js";
 
 export interface Report {
@@ -37,42 +38,68 @@ export interface ReportedMechanism extends NumbersOrNull {
   readonly name: string;
   readonly file: string;
   readonly line: number;
+  /** Four digits: differences of solved numbers carry no more. */
+  readonly sensitivity: readonly Sensitivity[];
   readonly assumed: readonly string[];
   readonly notChecked: readonly string[];
 }
 
-/** `nameOf` turns a file of the snapshot into the name that the report carries. */
-export function makeReport(analysis: Analysis, nameOf: (file: string) => string): Report {
-  const finders = new Map<string, (offset: number) => Place>();
-  const placeOf = (file: string, offset: number): Place => {
-    const finder = finders.get(file) ?? createLineFinder(analysis.snapshot.read(file) ?? "");
-    finders.set(file, finder);
-    return finder(offset);
-  };
-  const rangeOf = ({ file, start, end }: Finding["at"]): ReportedRange => {
-    const from = placeOf(file, start);
-    const to = placeOf(file, end);
-    return { file: nameOf(file), line: from.line, column: from.column, endLine: to.line, endColumn: to.column };
-  };
+/**
+ * `nameOf` turns a file of the snapshot into the name that the report carries; `sensitivityOf` computes what is computed only when
+ * asked for.
+ */
+export function makeReport(
+  analysis: Analysis,
+  nameOf: (file: string) => string,
+  sensitivityOf: (mechanism: AnalysedMechanism) => readonly Sensitivity[],
+): Report {
+  const places = createPlaces(analysis);
   return {
     format: "loadmark-report",
     version: 1,
     mechanisms: analysis.mechanisms.map((mechanism) => ({
       name: mechanism.name,
       file: nameOf(mechanism.at.file),
-      line: placeOf(mechanism.at.file, mechanism.at.start).line,
+      line: places.placeOf(mechanism.at.file, mechanism.at.start).line,
       ...(mechanism.numbers === undefined ? NO_NUMBERS : roundNumbers(mechanism.numbers)),
+      sensitivity: sensitivityOf(mechanism).map((one) => ({
+        ...one,
+        perCentPerPerCent: Number(one.perCentPerPerCent.toPrecision(4)),
+      })),
       assumed: mechanism.assumed,
       notChecked: mechanism.notChecked,
     })),
-    findings: analysis.findings.map(({ rule, level, mechanism, message, at, related }) => ({
-      rule,
-      level,
-      mechanism,
-      message,
-      ...rangeOf(at),
-      related: related.map((one) => ({ message: one.message, ...rangeOf(one.at) })),
-    })),
+    findings: reportFindings(analysis, nameOf),
+  };
+}
+
+/** The findings alone, for reports that show no tables of numbers. */
+export function reportFindings(analysis: Analysis, nameOf: (file: string) => string): ReportedFinding[] {
+  const { placeOf } = createPlaces(analysis);
+  const rangeOf = ({ file, start, end }: Finding["at"]): ReportedRange => {
+    const from = placeOf(file, start);
+    const to = placeOf(file, end);
+    return { file: nameOf(file), line: from.line, column: from.column, endLine: to.line, endColumn: to.column };
+  };
+  return analysis.findings.map(({ rule, level, mechanism, message, at, related }) => ({
+    rule,
+    level,
+    mechanism,
+    message,
+    ...rangeOf(at),
+    related: related.map((one) => ({ message: one.message, ...rangeOf(one.at) })),
+  }));
+}
+
+/** Finds lines and columns in the files of an analysis; each file's lines are found once. */
+function createPlaces({ snapshot }: Analysis): { readonly placeOf: (file: string, offset: number) => Place } {
+  const finders = new Map<string, (offset: number) => Place>();
+  return {
+    placeOf(file, offset) {
+      const finder = finders.get(file) ?? createLineFinder(snapshot.read(file) ?? "");
+      finders.set(file, finder);
+      return finder(offset);
+    },
   };
 }
 

@@ -3,11 +3,11 @@ import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
 import { toInertText } from "./inert.js";
-import { makeReport, type ReportedFinding } from "./report.js";
+import { type ReportedFinding, reportFindings } from "./report.js";
 
-/** `nameOf` as in `makeReport`. Lines end in a line feed; the text holds no control characters from the source. */
+/** `nameOf` as in `reportFindings`. Lines end in a line feed; the text holds no control characters from the source. */
 export function writeText(analysis: Analysis, nameOf: (file: string) => string): string {
-  const { findings } = makeReport(analysis, nameOf);
+  const findings = reportFindings(analysis, nameOf);
   const blocks = [
     ...findings.map(writeFinding),
     ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf)),
@@ -17,6 +17,8 @@ export function writeText(analysis: Analysis, nameOf: (file: string) => string):
   return `${blocks.join("\n\n")}\n`;
 }
 
+type Numbers = NonNullable<AnalysedMechanism["numbers"]>;
+
 function writeFinding({ file, line, column, level, rule, message, related }: ReportedFinding): string {
   const where = related.map((one) => `\n    ${one.file}:${one.line}:${one.column}  ${toInertText(one.message)}`).join("");
   return `${file}:${line}:${column}  ${level}  ${rule}\n    ${toInertText(message)}${where}`;
@@ -24,15 +26,20 @@ function writeFinding({ file, line, column, level, rule, message, related }: Rep
 
 function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string): string {
   const rows = mechanism.numbers === undefined ? [] : rowsOf(mechanism.numbers);
-  const notes = [
-    ...mechanism.assumed.map((sentence) => ["assumed", sentence] as const),
-    ...mechanism.notChecked.map((sentence) => ["not checked", sentence] as const),
-  ];
-  const lines = [...rows, ...notes].map(([label, text]) => `  ${label.padEnd(12)} ${toInertText(text)}`);
+  const lines = [...rows, ...notesOf("assumed", mechanism.assumed), ...notesOf("not checked", mechanism.notChecked)].map(
+    ([label, text]) => `  ${label.padEnd(12)} ${toInertText(text)}`,
+  );
   return [`${toInertText(mechanism.name)} (${nameOf(mechanism.at.file)})`, ...lines].join("\n");
 }
 
-function rowsOf(numbers: NonNullable<AnalysedMechanism["numbers"]>): (readonly [label: string, text: string])[] {
+/** The label stands once. */
+function notesOf(label: string, sentences: readonly string[]): Row[] {
+  return sentences.map((sentence, index) => [index === 0 ? label : "", sentence]);
+}
+
+type Row = readonly [label: string, text: string];
+
+function rowsOf(numbers: Numbers): Row[] {
   const { hardest, available, ratio, stageEfficiency } = numbers;
   const share =
     hardest.stallShare === null
@@ -53,7 +60,55 @@ function rowsOf(numbers: NonNullable<AnalysedMechanism["numbers"]>): (readonly [
       `${writeQuantity(hardest.electricalPowerW, "power")} in, ${writeQuantity(hardest.shaftPowerW, "power")} at the shaft, ${writeQuantity(hardest.loadPowerW, "power")} at the load`,
     ],
     ["ratio", `${writeNumber(ratio)}, stages pass ${writeShare(stageEfficiency)}`],
+    ...travelRows(numbers),
+    ...holdRows(numbers),
+    ...stallRows(numbers),
   ];
+}
+
+function travelRows({ travel }: Numbers): Row[] {
+  if (travel === null) return [];
+  const took = travel.timeS === null ? "does not arrive" : `takes ${writeQuantity(travel.timeS, "time")}`;
+  const energy = `${writeQuantity(travel.sourceEnergyJ, "energy")} from the supply`;
+  return [
+    [
+      "travel",
+      [
+        took,
+        `${writeQuantity(travel.rmsMotorCurrentA, "current")} rms per motor`,
+        energy,
+        ...heat(travel.windingPeakC),
+        ...opens(travel.tripsAfterS),
+      ].join(", "),
+    ],
+  ];
+}
+
+function holdRows({ hold }: Numbers): Row[] {
+  if (hold === null || hold.motorCurrentA === 0) return [];
+  return [
+    [
+      "held",
+      [`${writeQuantity(hold.motorCurrentA, "current")} per motor`, ...heat(hold.windingFinalC), ...opens(hold.tripsAfterS)].join(
+        ", ",
+      ),
+    ],
+  ];
+}
+
+function stallRows({ stall }: Numbers): Row[] {
+  const limit =
+    stall.windingLimitAfterS === null ? [] : [`winding at its limit after ${writeQuantity(stall.windingLimitAfterS, "time")}`];
+  const currents = `${writeQuantity(stall.motorCurrentA, "current")} per motor, ${writeQuantity(stall.sourceCurrentA, "current")} from the supply`;
+  return [["stalled", [currents, ...limit, ...opens(stall.tripsAfterS)].join(", ")]];
+}
+
+function heat(windingC: number | null): string[] {
+  return windingC === null ? [] : [`winding ${writeQuantity(windingC + 273.15, "temperature")}`];
+}
+
+function opens(afterS: number | null): string[] {
+  return afterS === null ? [] : [`protection opens after ${writeQuantity(afterS, "time")}`];
 }
 
 function writeSummary(findings: readonly ReportedFinding[], mechanisms: number): string {

@@ -6,7 +6,7 @@ describe("between", () => {
   it("finds the worse end, which is the high one for a load", () => {
     const { mechanisms } = checkFindings(`${PRELUDE}
 export const hub = mechanism("hub", { motor: twelveVolt, stages: [], load: roller({ torque: between("0.6 N*m", "1.2 N*m") }) });
-//           ^^^ warning past-peak: 1.2 N·m, 60 % of the 2 N·m at which it stalls. A ratio of at least 1.2 instead of 1 takes it back below half. (With torque 1.2 N·m.)`);
+//           ^^^ warning past-peak: 1.2 N·m, 60 % of the 2 N·m at which it stalls. A ratio of at least 1.2 instead of 1 takes it back below half. (With load.torque 1.2 N·m.)`);
     expect(mechanisms[0]?.numbers?.hardest.motorTorqueNm).toBeCloseTo(0.9, 12);
     expect(mechanisms[0]?.assumed.join()).toContain("worst of 2 combinations");
   });

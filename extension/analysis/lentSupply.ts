@@ -1,0 +1,18 @@
+/** A mechanism that names no supply runs on that of the one robot that lists it. */
+import type { Mechanism } from "../declarations/mechanism.js";
+import type { DefinitionCall } from "../evaluator/value.js";
+import type { AnalysedRobot } from "./analysis.js";
+import { valueAt } from "./places.js";
+
+/** The one robot that lists the mechanism; with several, none of them is assumed. */
+export function robotOf(mechanism: Mechanism, robots: readonly AnalysedRobot[]): AnalysedRobot | undefined {
+  const listing = robots.filter((robot) => robot.declared.mechanisms.includes(mechanism));
+  return listing.length === 1 ? listing[0] : undefined;
+}
+
+/** The call that declares the robot's supply. */
+export function supplyCallOf({ call }: AnalysedRobot): DefinitionCall | undefined {
+  const argument = call.args[1];
+  const value = argument === undefined ? undefined : valueAt(argument, ["supply"]);
+  return value?.known && value.data.kind === "built" ? value.data.call : undefined;
+}
