@@ -88,21 +88,26 @@ function counted(ctx: Context, member: ts.EnumMember, home: Frame): Value {
     const message = `${quoteText(member.name.getText())} is declared without a value: only the running program has it.`;
     return unknown("ambient", message, "give it its value here", originOf("name", member.name, home, []));
   }
-  const before = member.parent.members[member.parent.members.indexOf(member) - 1];
-  if (before === undefined) return known({ kind: "primitive", value: 0 }, originOf("literal", member.name, home, []));
-  if (!isCountableMember(ctx, before, module, 0)) {
+  const { members } = member.parent;
+  const index = members.indexOf(member);
+  const start = members.slice(0, index).findLastIndex(({ initializer }) => initializer !== undefined);
+  const base = members[start];
+  if (base === undefined) return known({ kind: "primitive", value: index }, originOf("literal", member.name, home, []));
+  if (base.initializer !== undefined && !isCountable(ctx, base.initializer, module)) {
     return unsupported(member.name, module, "counts on from a member that is calculated");
   }
-  const previous = memberValue(ctx, before, home);
-  const origin = originOf("operation", member.name, home, [previous]);
-  if (!previous.known) {
+  const from = memberValue(ctx, base, home);
+  const origin = originOf("operation", member.name, home, [from]);
+  if (!from.known) {
     const message = `${quoteText(member.name.getText())} counts on from a member that cannot be known.`;
-    return unknown("depends", message, "give it its value here", origin, previous);
+    return unknown("depends", message, "give it its value here", origin, from);
   }
-  if (previous.data.kind !== "primitive" || typeof previous.data.value !== "number") {
+  if (from.data.kind !== "primitive" || typeof from.data.value !== "number") {
     return unsupported(member.name, module, "counts on from a text");
   }
-  return finish(member.name, home, origin, asNumber(previous.data.value + 1));
+  let value = from.data.value;
+  for (let step = start; step < index; step++) value += 1;
+  return finish(member.name, home, origin, asNumber(value));
 }
 
 /**

@@ -52,6 +52,10 @@ export function exportOf(ctx: Context, loaded: Loaded, name: string, span: Span)
   const found = findExport(ctx, module, name, new Set());
   if (found?.kind === "failed") return { kind: "failed", unknown: hop(name, module, span, found.unknown) };
   if (found !== undefined) return found;
+  return missingExport(ctx, module, name, span);
+}
+
+function missingExport(ctx: Context, module: Module, name: string, span: Span): Target {
   const hint = suggest(name, exportsOf(ctx.ts, module.source).named.keys());
   return fail(span, "no-such-export", `${quoteText(baseName(module.file))} exports no ${quoteText(name)}${hint}`);
 }
@@ -153,8 +157,7 @@ function lookUpExport(ctx: Context, module: Module, name: string, visited: Set<M
     const loaded = ctx.load(module, own.node.text, span);
     if (own.name === undefined) return loaded;
     if (loaded.kind !== "module") return exportOf(ctx, loaded, own.name, span);
-    const found = findExport(ctx, loaded.module, own.name, new Set(visited));
-    return found ?? exportOf(ctx, loaded, own.name, span);
+    return findExport(ctx, loaded.module, own.name, new Set(visited)) ?? missingExport(ctx, loaded.module, own.name, span);
   }
   // A default import of a file that says `module.exports = …` gives that.
   if (name === "default") return named.has("export=") ? lookUpExport(ctx, module, "export=", visited) : undefined;
