@@ -5,7 +5,8 @@
  */
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { DefinitionCall, Span } from "../evaluator/value.js";
-import type { Supply } from "../model/drive.js";
+import type { Drive, Supply } from "../model/drive.js";
+import type { MechanismNumbers } from "../model/numbers.js";
 import { solveMechanismRuns } from "../model/solve.js";
 import type { MechanismFacts, MechanismRule, RuleId, Verdict } from "../rules/rule.js";
 import { isImpossible } from "../rules/sheetContradicts.js";
@@ -15,6 +16,7 @@ import { tellAssumptions } from "./assumptions.js";
 import { type Corner, cornersOf } from "./corners.js";
 import type { Declared } from "./declared.js";
 import { robotOf, supplyCallOf } from "./lentSupply.js";
+import { createMemory } from "./memory.js";
 import { spanAt } from "./places.js";
 
 export interface Judged {
@@ -25,46 +27,61 @@ export interface Judged {
 /** What is known of one mechanism on one supply. */
 interface Solved {
   readonly supply: Supply | undefined;
+  readonly drive: Drive;
+  readonly numbers: MechanismNumbers;
+  readonly corners: number;
+  readonly verdicts: readonly Judgement[];
+}
+
+interface Judgement {
+  readonly rule: MechanismRule;
+  readonly verdict: Verdict;
+}
+
+interface Facts {
   readonly nominal: MechanismFacts;
   readonly corners: readonly (MechanismFacts & Pick<Corner, "told">)[];
 }
 
 export function createJudge(): (declared: Declared) => Judged {
   const solved = new WeakMap<Mechanism, Solved>();
+  const remembered = createMemory<Pick<Solved, "drive" | "numbers" | "corners" | "verdicts">>();
   const solve = (mechanism: Mechanism, call: DefinitionCall, robot: AnalysedRobot | undefined): Solved => {
     const lent = mechanism.si.supply === undefined ? robot : undefined;
     const supply = lent?.declared.supply.si;
     const before = solved.get(mechanism);
     if (before !== undefined && before.supply === supply) return before;
     const corners = cornersOf(call, lent && supplyCallOf(lent));
+    // An edit makes every declaration of its file anew, most of them with the same numbers as before.
+    const key = JSON.stringify([mechanism.si, supply, corners.map(({ told }) => told)]);
     const result = {
       supply,
-      nominal: factsOf(mechanism, supply),
-      corners: corners.map((corner) => ({ ...factsOf(corner.mechanism, corner.supply ?? supply), told: corner.told })),
+      ...remembered.get(key, () => {
+        const nominal = factsOf(mechanism, supply);
+        const atCorners = corners.map((corner) => ({ ...factsOf(corner.mechanism, corner.supply ?? supply), told: corner.told }));
+        const verdicts = judgeMechanism({ nominal, corners: atCorners });
+        return { drive: nominal.drive, numbers: nominal.numbers, corners: corners.length, verdicts };
+      }),
     };
     solved.set(mechanism, result);
     return result;
   };
   return ({ mechanisms, motors, robots }) => {
     const findings: Finding[] = [];
+    const judged = mechanisms.map((one): AnalysedMechanism => {
+      const mechanism = one.declared;
+      if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
+      if (isImpossible(mechanism.motor)) {
+        return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
+      }
+      const robot = robotOf(mechanism, robots);
+      const { drive, numbers, corners, verdicts } = solve(mechanism, one.call, robot);
+      for (const { rule, verdict } of verdicts) findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
+      return { ...one, drive, numbers, ...tellAssumptions(mechanism, robot?.declared, corners) };
+    });
+    remembered.forgetUnused();
     return {
-      mechanisms: mechanisms.map((one): AnalysedMechanism => {
-        const mechanism = one.declared;
-        if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
-        if (isImpossible(mechanism.motor)) {
-          return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
-        }
-        const robot = robotOf(mechanism, robots);
-        const facts = solve(mechanism, one.call, robot);
-        for (const { rule, verdict } of judgeMechanism(facts))
-          findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
-        return {
-          ...one,
-          drive: facts.nominal.drive,
-          numbers: facts.nominal.numbers,
-          ...tellAssumptions(mechanism, robot?.declared, facts.corners.length),
-        };
-      }),
+      mechanisms: judged,
       findings: [...findings, ...motors.flatMap(({ declared, at, call }) => judgeMotor(declared, at, call))],
     };
   };
@@ -76,7 +93,7 @@ function factsOf(mechanism: Mechanism, supply: Supply | undefined): MechanismFac
 }
 
 /** Every rule at its own worst corner; a rule that speaks silences others. */
-function judgeMechanism({ nominal, corners }: Solved): { readonly rule: MechanismRule; readonly verdict: Verdict }[] {
+function judgeMechanism({ nominal, corners }: Facts): Judgement[] {
   const silenced = new Set<RuleId>();
   return MECHANISM_RULES.flatMap((rule) => {
     if (silenced.has(rule.id)) return [];
@@ -87,7 +104,7 @@ function judgeMechanism({ nominal, corners }: Solved): { readonly rule: Mechanis
   });
 }
 
-function worstVerdict(rule: MechanismRule, nominal: MechanismFacts, corners: Solved["corners"]): Verdict | undefined {
+function worstVerdict(rule: MechanismRule, nominal: MechanismFacts, corners: Facts["corners"]): Verdict | undefined {
   if (corners.length === 0) return rule.judge(nominal);
   return corners
     .flatMap((corner) => {
