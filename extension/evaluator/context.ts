@@ -20,6 +20,8 @@ export interface Module {
   readonly loads: Map<string, Loaded>;
   readonly exports: Map<string, Target>;
   readonly importers: Importers;
+  /** Objects of other files that this one, importing them from the files named, leaves alone. */
+  readonly harmlessTo: WeakMap<Data, Set<Module>>;
   /** By function or loop, the runs that are known of it. */
   readonly runs: Map<ts.Node, readonly Frame[]>;
 }

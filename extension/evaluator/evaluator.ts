@@ -19,6 +19,9 @@ import type { TypeScript } from "./typescript.js";
 import { tooDeep, unknown } from "./unknown.js";
 import type { Definition, DefinitionCall, FileEvaluation, Snapshot, Unknown } from "./value.js";
 
+/** Parses kept for a file: a hover tries a value or two and goes back to the text that is there. */
+const KEPT_TEXTS = 3;
+
 export interface Evaluator {
   /** What a file says. Never throws; microseconds when nothing that it rests on has changed. */
   evaluateFile(file: string, snapshot: Snapshot): FileEvaluation;
@@ -34,7 +37,7 @@ export interface EvaluatorOptions {
 }
 
 export function createEvaluator(ts: TypeScript, { specifier, definitions }: EvaluatorOptions): Evaluator {
-  const sources = new Map<string, Source>();
+  const sources = new Map<string, readonly Source[]>();
   const evaluations = new WeakMap<Module, FileEvaluation>();
   const nothing: Snapshot = { read: () => undefined };
   const modules = new Map<string, Module>();
@@ -57,8 +60,8 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
   };
   return {
     evaluateFile(file, snapshot) {
+      if (ctx.snapshot !== snapshot) ctx.checked.clear();
       ctx.snapshot = snapshot;
-      ctx.checked.clear();
       const text = snapshot.read(file);
       if (typeof text !== "string") {
         dropStale(ctx, file);
@@ -67,7 +70,6 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
       const module = ctx.open(file, text);
       const evaluation = evaluations.get(module) ?? evaluateModule(ctx, module);
       evaluations.set(module, evaluation);
-      ctx.snapshot = nothing;
       return evaluation;
     },
     forget(file) {
@@ -117,13 +119,13 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
   }
 }
 
-function open(ctx: Context, sources: Map<string, Source>, file: string, text: string): Module {
+function open(ctx: Context, sources: Map<string, readonly Source[]>, file: string, text: string): Module {
   dropStale(ctx, file);
   const present = ctx.modules.get(file);
   if (present !== undefined) return present;
-  const kept = sources.get(file);
-  const source = kept?.text === text ? kept : parseSource(ctx.ts, file, text);
-  sources.set(file, source);
+  const kept = sources.get(file) ?? [];
+  const source = kept.find((each) => each.text === text) ?? parseSource(ctx.ts, file, text);
+  sources.set(file, [source, ...kept.filter((each) => each !== source)].slice(0, KEPT_TEXTS));
   const module: { -readonly [Key in keyof Module]: Module[Key] } = {
     file,
     source,
@@ -133,6 +135,7 @@ function open(ctx: Context, sources: Map<string, Source>, file: string, text: st
     loads: new Map(),
     exports: new Map(),
     importers: { lists: new Map(), reads: new Map(), guards: [] },
+    harmlessTo: new WeakMap(),
     runs: new Map(),
   };
   module.root = {

@@ -29,6 +29,8 @@ export interface Search {
   /** Names and expressions that the objects flow into. */
   readonly pending: { readonly module: Module; readonly start: Binding | ts.Node; readonly flow: Flow }[];
   readonly seen: Map<object, Set<string>>;
+  /** Follows what is pending in one file; what leads out of it is left. */
+  exploreIn(pending: Search["pending"], module: Module): Change | undefined;
 }
 
 const NOTHING: Flow = { objects: [], wraps: [] };

@@ -32,16 +32,51 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
       if (text === undefined) return notRead(target);
       if (text === null) continue;
       const importer = ctx.open(file, text);
-      followInto(search, importer, passer, passed, flow);
+      if (isKnownHarmless(importer, passer, flow)) continue;
       const further = passedOn(ctx, importer, passer, passed);
       if (further.length > 0 && !paths.has(importer)) paths.set(importer, further);
+      const change = followInto(search, importer, passer, passed, flow, further.length > 0);
+      if (change !== undefined) return change;
     }
   }
   return undefined;
 }
 
-/** The uses of the object in one file that imports it from `passer`. */
-function followInto(search: Search, importer: Module, passer: Module, paths: readonly Path[], flow: Flow): void {
+/** The uses of the object in one file that imports it from `passer`; what leads out of the file is left pending. */
+function followInto(
+  outer: Search,
+  importer: Module,
+  passer: Module,
+  paths: readonly Path[],
+  flow: Flow,
+  isPassedOn: boolean,
+): Change | undefined {
+  const search: Search = { ...outer, pending: [] };
+  const { lists } = outer.home.importers;
+  const before = lists.size;
+  listUses(search, importer, passer, paths, flow);
+  const change = search.exploreIn(search.pending, importer);
+  if (change !== undefined) return change;
+  const [data] = flow.objects;
+  const endsHere = search.pending.length === 0 && !isPassedOn && lists.size === before;
+  if (endsHere && data !== undefined && isWhole(flow)) {
+    importer.harmlessTo.set(data, (importer.harmlessTo.get(data) ?? new Set()).add(passer));
+  }
+  outer.pending.push(...search.pending);
+  return undefined;
+}
+
+/** Most edits leave most files as they are: what such a file does with the object is known from the last time. */
+function isKnownHarmless(importer: Module, passer: Module, flow: Flow): boolean {
+  const [data] = flow.objects;
+  return data !== undefined && isWhole(flow) && importer.harmlessTo.get(data)?.has(passer) === true;
+}
+
+function isWhole({ objects, wraps }: Flow): boolean {
+  return objects.length === 1 && wraps.length === 0;
+}
+
+function listUses(search: Search, importer: Module, passer: Module, paths: readonly Path[], flow: Flow): void {
   const { ctx } = search;
   const { ts } = ctx;
   const { source } = importer;

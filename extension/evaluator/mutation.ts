@@ -22,20 +22,35 @@ const MOST_FLOWS = 1000;
 
 /** What in the program may have changed the object that `binding` stands for, or `undefined` when nothing can have. */
 export function findChange(ctx: Context, module: Module, binding: Binding, data: Data): Change | undefined {
-  const search: Search = { ctx, home: module, pending: [], seen: new Map() };
+  const search: Search = {
+    ctx,
+    home: module,
+    pending: [],
+    seen: new Map(),
+    exploreIn: (pending, only) => explore({ ...search, pending }, only),
+  };
   const whole: Flow = { objects: [data], wraps: [] };
   flowInto(search, module, binding, whole);
   const target: Target = binding.kind === "import" ? follow(ctx, { kind: "binding", module, binding }) : { kind: "library" };
   // What is exported without a name has no search of its own.
   const elsewhere = target.kind === "expression" ? followImporters(search, target, whole) : undefined;
-  if (elsewhere !== undefined) return elsewhere;
-  for (let next = search.pending.pop(), count = 0; next !== undefined; next = search.pending.pop(), count++) {
-    const { start, flow } = next;
-    if (count > MOST_FLOWS) return { node: module.source.root, module, wording: "hands it round too often to follow" };
-    const change = isNode(start) ? followUse(search, next.module, start, flow) : followName(search, next.module, start, flow);
-    if (change !== undefined) return change;
+  return elsewhere ?? explore(search);
+}
+
+function explore(search: Search, only?: Module): Change | undefined {
+  const { pending } = search;
+  const left: Search["pending"] = [];
+  let change: Change | undefined;
+  for (let count = 0; change === undefined; count++) {
+    const next = pending.pop();
+    if (next === undefined) break;
+    const { module, start, flow } = next;
+    if (only !== undefined && module !== only) left.push(next);
+    else if (count > MOST_FLOWS) change = { node: module.source.root, module, wording: "hands it round too often to follow" };
+    else change = isNode(start) ? followUse(search, module, start, flow) : followName(search, module, start, flow);
   }
-  return undefined;
+  pending.push(...left);
+  return change;
 }
 
 function followName(search: Search, module: Module, binding: Binding, flow: Flow): Change | undefined {

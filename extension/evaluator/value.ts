@@ -138,7 +138,7 @@ export interface LocatedIssue {
   readonly source?: Span;
 }
 
-/** Texts at one moment; immutable while it is being read. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
+/** Texts at one moment; one object answers the same for good. `null`: there is no such file; `undefined`: not loaded yet, ask for it. */
 export interface Snapshot {
   read(file: string): string | null | undefined;
   /** The file behind symbolic links; absent: names are what they seem. */
