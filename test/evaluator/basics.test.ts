@@ -1,4 +1,5 @@
 // biome-ignore-all lint/suspicious/noTemplateCurlyInString: the texts are code
+/** What literals, operators and the functions of the language give. */
 import { describe, expect, it } from "vitest";
 import { dataOf } from "./support/workspace.js";
 

@@ -1,4 +1,5 @@
 // biome-ignore-all lint/suspicious/noTemplateCurlyInString: the texts are code
+/** Calls to definitions: places of issues, unknown arguments, what is built, names and comments. */
 import { describe, expect, it } from "vitest";
 import type { DefinitionCall, FileEvaluation, Span } from "../../extension/evaluator/value.js";
 import { evaluateFixture, splitFiles } from "./support/workspace.js";

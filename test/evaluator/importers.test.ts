@@ -1,21 +1,14 @@
 /** Exported objects, and the files that import them. */
 import { describe, expect, it } from "vitest";
 import { createImportIndex } from "../../extension/evaluator/importIndex.js";
-import type { FileEvaluation, Snapshot } from "../../extension/evaluator/value.js";
-import { makeEvaluator, rootOf, splitFiles } from "./support/workspace.js";
+import type { FileEvaluation } from "../../extension/evaluator/value.js";
+import { indexed, makeEvaluator, rootOf, splitFiles } from "./support/workspace.js";
 
 const CONSTANTS = `//- constants.ts
 export const GEARS = { hoist: 40, in: { deep: 7 } };
 //- main.ts
 import { gear } from "gearbox"; import { GEARS } from "./constants"; gear({ teeth: GEARS.hoist });
 `;
-
-/** A snapshot whose host has seen every text. */
-function indexed(files: ReadonlyMap<string, string>): Snapshot {
-  const index = createImportIndex();
-  for (const [file, text] of files) index.set(file, text);
-  return { read: (file) => files.get(file) ?? null, importersOf: (file) => index.importersOf(file) };
-}
 
 function outcomeOf({ calls }: FileEvaluation): unknown {
   const [call] = calls;

@@ -1,3 +1,4 @@
+/** Names that come from other files, and definitions by whatever name. */
 import { describe, expect, it } from "vitest";
 import { dataOf, evaluateFixture, unknownOf } from "./support/workspace.js";
 

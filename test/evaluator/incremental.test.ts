@@ -1,7 +1,9 @@
+/** What an edit costs, and that what is kept is never out of date. */
+import fc from "fast-check";
 import ts from "typescript";
 import { describe, expect, it, vi } from "vitest";
 import type { FileEvaluation, Snapshot } from "../../extension/evaluator/value.js";
-import { makeEvaluator, plain, snapshotOf, splitFiles } from "./support/workspace.js";
+import { indexed, makeEvaluator, plain, snapshotOf, splitFiles } from "./support/workspace.js";
 
 const FIXTURE = `//- a.ts
 import { gear } from "gearbox"; import { T } from "./shared"; export const a = gear({ teeth: T });
@@ -110,6 +112,72 @@ export const D = 1;
     expect(calls[0]?.unknowns).toHaveLength(1);
     expect(missing).toContain("/constants.ts");
   });
+});
+
+describe("any order of edits", () => {
+  /** Texts that each file may have; `undefined` for no file. */
+  const texts: Readonly<Record<string, readonly (string | undefined)[]>> = {
+    "/a.ts": [
+      'import { gear } from "gearbox"; import { T, O } from "./b"; export const A = T + 1; gear({ teeth: O.x }); gear({ teeth: A });',
+      'import { gear } from "gearbox"; import * as b from "./b"; export const A = 2; gear({ teeth: b.T }); b.O.x;',
+      'import { make } from "./c"; import { O } from "./b"; export const A = 3; make(O.x); make(A);',
+    ],
+    "/b.ts": [
+      'export { T } from "./c"; export { O } from "./c";',
+      'export * from "./c";',
+      'import { A } from "./a"; export const T = 5; export const O = { x: A };',
+      "export const T = ;",
+      undefined,
+    ],
+    "/c.ts": [
+      'import { gear } from "gearbox"; export const T = 7; export const O = { x: 9 }; export const make = (teeth: number) => gear({ teeth });',
+      'import { gear } from "gearbox"; import { A } from "./a"; export const T = A * 2; export const O = { x: T }; export function make(n: number) { return gear({ teeth: n + 1 }); }',
+      "export const T = 7; export const O = { x: 1 } as const;",
+      undefined,
+    ],
+    "/d.ts": [
+      'import { O } from "./c"; O.x = 3;',
+      'import { O } from "./b"; console.log(O.x);',
+      'import { O } from "./b"; setUp(O);',
+      "export {};",
+    ],
+  };
+  const edit = fc
+    .constantFrom(...Object.entries(texts))
+    .chain(([file, choices]) => fc.tuple(fc.constant(file), fc.constantFrom(...choices)));
+  const step = fc.tuple(edit, fc.subarray(Object.keys(texts)));
+
+  it("gives what starting anew gives", () => {
+    fc.assert(
+      fc.property(fc.array(step, { minLength: 2, maxLength: 12 }), fc.boolean(), (steps, isIndexed) => {
+        const evaluator = makeEvaluator();
+        const files = new Map<string, string>();
+        for (const [file, [text = ""]] of Object.entries(texts)) files.set(file, text);
+        for (const [[file, text], asked] of steps) {
+          if (text === undefined) files.delete(file);
+          else files.set(file, text);
+          const snapshot = isIndexed ? indexed(files) : snapshotOf(files);
+          for (const each of asked) {
+            const [kept, fresh] = [evaluator, makeEvaluator()].map((one) => one.evaluateFile(each, snapshot));
+            expect(summary(kept)).toEqual(summary(fresh));
+          }
+        }
+      }),
+      { numRuns: Number(process.env.EVALUATOR_RUNS ?? 150), seed: 20_260_503 },
+    );
+  }, 600_000);
+
+  /** All but the words of a chain of causes, which may begin at another link of a cycle. */
+  function summary(evaluation: FileEvaluation | undefined): unknown {
+    return evaluation?.calls.map(({ definition, span, built, issues, unknowns, open }) => [
+      definition,
+      span,
+      built,
+      issues,
+      unknowns.map(({ origin }) => origin.span),
+      open,
+    ]);
+  }
 });
 
 describe("what the snapshot lacks", () => {

@@ -1,3 +1,4 @@
+/** Calls in loops and helpers: one for each run. */
 import { describe, expect, it } from "vitest";
 import { evaluateFixture } from "./support/workspace.js";
 

@@ -1,4 +1,5 @@
 // biome-ignore-all lint/suspicious/noTemplateCurlyInString: the texts are code
+/** What cannot be known, why it says so, and what it leaves alone. */
 import { describe, expect, it } from "vitest";
 import { dataOf, unknownOf } from "./support/workspace.js";
 

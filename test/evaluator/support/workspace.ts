@@ -1,6 +1,7 @@
 /** Evaluates code that is given as one string, against two small definitions of this room's own. */
 import ts from "typescript";
 import { createEvaluator, type Evaluator } from "../../../extension/evaluator/evaluator.js";
+import { createImportIndex } from "../../../extension/evaluator/importIndex.js";
 import type { TypeScript } from "../../../extension/evaluator/typescript.js";
 import type {
   Definition,
@@ -64,6 +65,13 @@ export function splitFiles(fixture: string): Map<string, string> {
 
 export function snapshotOf(files: ReadonlyMap<string, string>, more: Partial<Snapshot> = {}): Snapshot {
   return { read: (file) => files.get(file) ?? null, ...more };
+}
+
+/** A snapshot whose host has seen every text. */
+export function indexed(files: ReadonlyMap<string, string>): Snapshot {
+  const index = createImportIndex();
+  for (const [file, text] of files) index.set(file, text);
+  return { read: (file) => files.get(file) ?? null, importersOf: (file) => index.importersOf(file) };
 }
 
 /** What the fixture's first file says, or that of `file`. */
