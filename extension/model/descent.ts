@@ -30,7 +30,7 @@ export function descentOf(drive: Drive): Descent | null {
   const train = trainOf(drive.stages);
   const perMotor = train.ratio * drive.motorCount;
   let best = { position: 0, torque: 0 };
-  for (const position of load.extremes) {
+  for (const position of load.extremes()) {
     for (const direction of [1, -1] satisfies Direction[]) {
       const torque = -throughTrain(train, load.opposing(position, direction)) / perMotor;
       if (torque > best.torque) best = { position, torque };

@@ -25,8 +25,9 @@ const TIE = 1e-12;
 export function hardestPosition(drive: Drive): HardestPosition {
   const load = shaftLoadOf(drive);
   const train = trainOf(drive.stages);
-  let best = { position: load.extremes[0] ?? 0, direction: 1 as Direction, torque: 0 };
-  for (const position of load.extremes) {
+  const extremes = load.extremes();
+  let best = { position: extremes[0] ?? 0, direction: 1 as Direction, torque: 0 };
+  for (const position of extremes) {
     for (const direction of [1, -1] as const) {
       const torque = load.opposing(position, direction);
       if (torque > best.torque * (1 + TIE)) best = { position, direction, torque };

@@ -6,12 +6,12 @@
 import { heatNetworkOf, heatTimeConstants, holdingHeat, steadyHeat } from "./heat.js";
 import { integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
+import { MOST_STEPS, STIFF_TOLERANCE, scalesOf } from "./motionScales.js";
 import { type CarriedState, carriedState, coldState, startState } from "./motionState.js";
 import { type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observation, type Observer } from "./observer.js";
 import type { Plant } from "./plant.js";
 import { fuseRate, isBorderline, NEVER, type TripVerdict, thermalReplica, tripVerdict } from "./protection.js";
-import { MOST_STEPS, scalesOf, TOLERANCE } from "./travel.js";
 
 /** One motor's values unless the name says source. */
 export interface HeldRun {
@@ -83,7 +83,7 @@ export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: Carr
 
 /** Advances to a time, or to where the winding is past everything; returns the time reached. */
 function keep(system: MotionSystem, observer: Observer, state: Float64Array, fromS: number, toS: number): number {
-  const course = { tolerance: TOLERANCE, endS: toS, firstStepS: (toS - fromS) / 1e4, mostSteps: MOST_STEPS };
+  const course = { tolerance: STIFF_TOLERANCE, endS: toS, firstStepS: (toS - fromS) / 1e4, mostSteps: MOST_STEPS, stiff: true };
   return integrate(system, fromS, state, { ...course, ...observer.listen(system) }).timeS;
 }
 

@@ -49,8 +49,9 @@ export function holdPoint(drive: Drive): HoldPoint | null {
 
 /** Position (rad at the output shaft) and size of the greatest torque that the load exerts at rest. */
 export function hardestToHold(load: ShaftLoad): { readonly position: number; readonly torque: number } {
-  let best = { position: load.extremes[0] ?? 0, torque: 0 };
-  for (const position of load.extremes) {
+  const extremes = load.extremes();
+  let best = { position: extremes[0] ?? 0, torque: 0 };
+  for (const position of extremes) {
     const torque = Math.abs(load.restTorque(position));
     if (torque > best.torque * (1 + 1e-12)) best = { position, torque };
   }

@@ -7,7 +7,7 @@ import type { Plant } from "./plant.js";
 import { copperFactor, copperFactorSlope, magnetFactor, magnetFactorSlope } from "./temperature.js";
 
 /** Derivatives by progress (rad), output speed (rad/s), winding temperature (K) and time (s), in this order. */
-export type Gradient = Float64Array;
+export type Gradient = number[];
 export const BY_PROGRESS = 0;
 export const BY_SPEED = 1;
 export const BY_HEAT = 2;
@@ -66,7 +66,7 @@ interface Conditions {
 }
 
 export function createInstant(): Instant {
-  const gradient = (): Gradient => new Float64Array(4);
+  const gradient = (): Gradient => [0, 0, 0, 0];
   return {
     progressRate: 0,
     progressRateBy: gradient(),

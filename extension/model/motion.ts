@@ -102,7 +102,8 @@ function accelerate(plant: Plant, progress: number, speed: number, at: Instant, 
   } else {
     const asDriving = (drive * at.torqueNm - forward * (opposing + centrifugal)) / (plant.rotorKgM2 + forward * inertia);
     at.trainGap = opposing + centrifugal + inertia * asDriving;
-    if (at.trainGap < 0) {
+    // A load that only fades to nothing, as on a level turntable, stays on the driving side: no rounding makes it cross.
+    if (at.trainGap < -plant.fadedNm) {
       torqueShare = train.backwardEfficiency;
       inertiaShare = train.backwardEfficiency;
     }

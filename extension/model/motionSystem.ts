@@ -5,11 +5,12 @@
  */
 import { type HeatNetwork, heatNetworkOf } from "./heat.js";
 import { createInstant, type Instant } from "./instant.js";
-import type { OdeSystem } from "./integrate.js";
 import { moveAt } from "./motion.js";
 import { type Layout, layoutOf, type Mode } from "./motionLayout.js";
 import { motionRates } from "./motionRates.js";
+import type { MotionScales } from "./motionScales.js";
 import { motionWatches, type WatchIndex } from "./motionWatches.js";
+import type { OdeSystem } from "./odeSystem.js";
 import type { Plant } from "./plant.js";
 import { blockedAt, followAt, heldAt } from "./stillMotion.js";
 import { SHEET_TEMPERATURE_C } from "./temperature.js";
@@ -28,19 +29,11 @@ export interface MotionSystem extends OdeSystem {
   readonly setTarget: (target: number) => void;
 }
 
-/** Sizes that count as 1 for the tolerance: output shaft in rad and rad/s, s, A of one motor. */
-export interface MotionScales {
-  readonly progressRad: number;
-  readonly speedRadPerS: number;
-  readonly timeS: number;
-  readonly currentA: number;
-}
-
 /** Below this share of the speed scale it stands still. */
 const STANDSTILL_SHARE = 1e-9;
 const HEAT_SCALE_K = 100;
 /** Sums are usually this share of full current over the whole time. */
-const SUM_SHARE = 0.1;
+const SUM_SHARE = 0.01;
 
 export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): MotionSystem {
   const layout = layoutOf(plant);
@@ -89,6 +82,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
 
   return {
     size: layout.size,
+    coupled: layout.squares,
     scale: scaleOf(plant, layout, scales),
     watches,
     layout,
@@ -107,10 +101,10 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
       fillInstant(timeS, state, at, false);
       rates.fill(state, at, out);
     },
-    prepare: (timeS, state, start, watched) => {
+    prepare: (timeS, state, start, watched, stiff) => {
       fillInstant(timeS, state, front, true);
       rates.fill(state, front, start.rates);
-      rates.differentiate(front, start.jacobian, start.timeRates);
+      if (stiff) rates.differentiate(front, start.jacobian, start.timeRates);
       watchInstant(state, front, watched);
     },
     watch: (timeS, state, watched) => {

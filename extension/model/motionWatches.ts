@@ -5,9 +5,9 @@
  */
 import { type HeatNetwork, RUNAWAY_C } from "./heat.js";
 import type { Instant } from "./instant.js";
-import type { Watch } from "./integrate.js";
 import type { Layout, Mode } from "./motionLayout.js";
 import type { MotionRates } from "./motionRates.js";
+import type { Watch } from "./odeSystem.js";
 import type { Plant } from "./plant.js";
 import { fuseGates } from "./protection.js";
 import { rateAlong } from "./supplyCurrent.js";
@@ -108,7 +108,7 @@ export function motionWatches({
 
   const stop = (crosses: Watch["crosses"]): Watch => ({ kind: "stop", crosses });
   const note = (crosses: Watch["crosses"]): Watch => ({ kind: "note", crosses });
-  const component = (watch: Watch, index: number): Watch => ({ ...watch, component: index });
+  const component = ({ kind, crosses }: Watch, index: number): Watch => ({ kind, crosses, component: index });
   const rateOf =
     (by: "currentBy" | "supplyBy"): WatchValue =>
     (at, now) =>

@@ -107,9 +107,9 @@ export function createObserver(plant: Plant, sampling: boolean): Observer {
   }
 
   function look(system: MotionSystem, timeS: number, state: Float64Array): void {
-    peaks(system, timeS, state, system.instantAt(timeS, state));
-    const below = floorV !== undefined && system.instantAt(timeS, state).supplyV < floorV;
-    if (below && belowSinceS === null) belowSinceS = timeS;
+    const now = system.instantAt(timeS, state);
+    peaks(system, timeS, state, now);
+    if (floorV !== undefined && now.supplyV < floorV) belowSinceS ??= timeS;
     if (sampling) sample(system, timeS, state);
   }
 

@@ -4,7 +4,7 @@
  * Deliberately not here: anything that changes with time (motion.ts), except the command's ramp.
  */
 import type { Drive, MotorConstants } from "./drive.js";
-import { leadOhm, supplyOf } from "./line.js";
+import { availableLine, leadOhm, supplyOf } from "./line.js";
 import { breakawayCurrent, lossCurrentSlope } from "./motor.js";
 import { type Direction, type ShaftLoad, shaftLoadOf, travelDirection } from "./shaftLoad.js";
 import { type Train, trainOf } from "./stages.js";
@@ -28,7 +28,12 @@ export interface Plant {
   readonly duty: number;
   readonly rampS: number;
   readonly bus: Bus;
+  /** Torque at the output shaft that counts as nothing, N·m. */
+  readonly fadedNm: number;
 }
+
+/** Share of full torque that counts as nothing. */
+const FADED = 1e-9;
 
 /** What feeds the mechanism: an open-circuit voltage behind a resistance. */
 export interface Bus {
@@ -56,8 +61,13 @@ export function plantOf(drive: Drive): Plant {
     limitA: drive.motorCurrentLimitA ?? Number.POSITIVE_INFINITY,
     duty: drive.pwmDuty,
     rampS: drive.rampS,
+    fadedNm: FADED * drive.motorCount * train.ratio * Math.min(availableLine(drive).stallTorqueNm, limitTorque(drive)),
     bus: { openCircuitV: supply.openCircuitV, resistanceOhm: supply.resistanceOhm },
   };
+}
+
+function limitTorque(drive: Drive): number {
+  return drive.motor.torqueConstantNmPerA * (drive.motorCurrentLimitA ?? Number.POSITIVE_INFINITY);
 }
 
 /** Inertia that the motors must turn at the output shaft, losses left out, kg·m². */

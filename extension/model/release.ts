@@ -6,7 +6,8 @@
 import type { Drive } from "./drive.js";
 import type { CarriedState } from "./motionState.js";
 import { plantOf, turningInertia } from "./plant.js";
-import { solveTravel, type TravelResult } from "./travel.js";
+import { solveTravel } from "./travel.js";
+import type { TravelResult } from "./travelResult.js";
 
 export interface Release {
   /** Just after, rad/s at the output shaft; 0 where the turning inertia holds less than the release takes. */

@@ -11,7 +11,8 @@ import { holdPoint } from "./hold.js";
 import { type CarriedState, coldState } from "./motionState.js";
 import { type Plant, plantOf } from "./plant.js";
 import { solveRelease } from "./release.js";
-import { solveTravel, type TravelResult } from "./travel.js";
+import { solveTravel } from "./travel.js";
+import type { TravelResult } from "./travelResult.js";
 
 export interface RepeatedRun {
   /** Highest winding temperature of a cycle in the periodic state, °C; null without thermal data or where it runs away. */

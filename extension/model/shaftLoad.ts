@@ -34,7 +34,7 @@ export interface ShaftLoad {
   /** Positions where torque or inertia has a corner, rad, rising. */
   readonly corners: readonly number[];
   /** Positions among which the greatest torque lies, rad, rising: ends, corners, interior extremes. */
-  readonly extremes: readonly number[];
+  readonly extremes: () => readonly number[];
   /** True where torque and inertia are the same all along the travel. */
   readonly steady: boolean;
   /** Wheels: what the ground can take. */
@@ -100,7 +100,7 @@ function steadyLoad(
     inertia: () => inertia,
     inertiaSlope: () => 0,
     corners: [],
-    extremes: [0],
+    extremes: () => [0],
     steady: true,
     selfLocking: false,
   };
@@ -189,7 +189,7 @@ function withTorque(base: ShaftLoad, terms: TorqueTerms, friction: number): Shaf
     opposing: (position, direction) => direction * restTorque(position) + friction,
     slope: (position) => (amplitude === 0 ? 0 : -amplitude * Math.sin(position)) - slopeOfHelper(position),
     corners,
-    extremes: flat ? [Math.min(base.startRad, base.endRad)] : torqueExtremes(base, corners, amplitude, slopeOfHelper),
+    extremes: () => (flat ? [Math.min(base.startRad, base.endRad)] : torqueExtremes(base, corners, amplitude, slopeOfHelper)),
     steady: flat || base.startRad === base.endRad,
   };
 }

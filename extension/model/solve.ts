@@ -8,7 +8,8 @@ import type { HardestNumbers, HoldNumbers, MechanismNumbers, TravelNumbers } fro
 import { type OperatingPoint, operatingPointAt, pointAt } from "./operatingPoint.js";
 import { solveHold, solveStall } from "./runs.js";
 import { trainOf } from "./stages.js";
-import { solveTravel, type TravelResult } from "./travel.js";
+import { solveTravel } from "./travel.js";
+import type { TravelResult } from "./travelResult.js";
 
 /** The runs behind a mechanism's numbers, for rules and hovers that need more of them. */
 export interface MechanismSolution {

@@ -1,14 +1,10 @@
-/**
- * One step of the Rosenbrock method, with its error estimate and dense output.
- *
- * Deliberately not here: choosing steps and watching for events (integrate.ts), and what is integrated.
- */
-import { factorise, solveFactorised } from "./linearSystem.js";
-import { ARGUMENT, COUPLING, DENSE, GAMMA, NODES, STAGES, TIME } from "./rodas5p.js";
+/** What a method of integration offers for one step. Deliberately only the contract: see stiffStepper.ts and explicitStepper.ts. */
 
-/** dy/dt = f(t, y), with everything that a step needs at its start. */
+/** dy/dt = f(t, y). */
 export interface Rates {
   readonly size: number;
+  /** Leading components that rates depend on; the rest are sums that nothing depends on. */
+  readonly coupled: number;
   /** f at a point, into `rates`. */
   readonly evaluate: (timeS: number, state: Float64Array, rates: Float64Array) => void;
 }
@@ -23,86 +19,14 @@ export interface StepStart {
 export interface Stepper {
   /** State at the end of the last step tried. */
   readonly end: Float64Array;
-  /** Error estimate of each component of the last step tried. */
-  readonly error: Float64Array;
-  /** Tries a step; the result is in `end` and `error`. */
+  /** Tries a step; the result is in `end`. */
   readonly step: (timeS: number, state: Float64Array, lengthS: number, start: StepStart) => void;
+  /** Error estimate of the last step tried over what is allowed: at most 1 passes. `scale` counts as 1 beside the value itself. */
+  readonly errorSize: (scale: Float64Array, tolerance: number) => number;
+  /** The error grows with the step's length to the power of 1 over this. */
+  readonly growthPower: number;
   /** State at a share 0…1 of the last step tried. */
   readonly at: (share: number, state: Float64Array) => void;
   /** One component of it. */
   readonly componentAt: (share: number, component: number) => number;
-}
-
-export function createStepper({ size: n, evaluate }: Rates): Stepper {
-  const matrix = new Float64Array(n * n);
-  const pivots = new Int32Array(n);
-  const stages = Array.from({ length: STAGES }, () => new Float64Array(n));
-  const bends = Array.from({ length: DENSE.length }, () => new Float64Array(n));
-  const [bend1, bend2, bend3] = bends as [Float64Array, Float64Array, Float64Array];
-  const begin = new Float64Array(n);
-  const argument = new Float64Array(n);
-  const end = new Float64Array(n);
-  const error = stages[STAGES - 1] as Float64Array;
-  let bent = false;
-
-  function step(timeS: number, state: Float64Array, lengthS: number, start: StepStart): void {
-    bent = false;
-    begin.set(state);
-    const diagonal = 1 / (GAMMA * lengthS);
-    for (let i = 0; i < n * n; i++) matrix[i] = -(start.jacobian[i] as number);
-    for (let i = 0; i < n; i++) (matrix[i * n + i] as number) += diagonal;
-    factorise(matrix, pivots, n);
-    for (let stage = 0; stage < STAGES; stage++) takeStage(stage, timeS, lengthS, start);
-    const last = stages[STAGES - 1] as Float64Array;
-    for (let i = 0; i < n; i++) end[i] = (argument[i] as number) + (last[i] as number);
-  }
-
-  /** (I/(γh) − J)·u_i = f(t + c_i·h, y + Σ a_ij·u_j) + Σ C_ij·u_j/h + d_i·h·∂f/∂t. */
-  function takeStage(stage: number, timeS: number, lengthS: number, start: StepStart): void {
-    const u = stages[stage] as Float64Array;
-    if (stage === 0) {
-      u.set(start.rates);
-    } else {
-      combine(argument, ARGUMENT[stage] as readonly number[], stages, n);
-      for (let i = 0; i < n; i++) (argument[i] as number) += begin[i] as number;
-      evaluate(timeS + (NODES[stage] as number) * lengthS, argument, u);
-    }
-    const coupling = COUPLING[stage] as readonly number[];
-    for (let j = 0; j < coupling.length; j++) {
-      const weight = (coupling[j] as number) / lengthS;
-      const earlier = stages[j] as Float64Array;
-      for (let i = 0; i < n; i++) (u[i] as number) += weight * (earlier[i] as number);
-    }
-    const time = (TIME[stage] as number) * lengthS;
-    if (time !== 0) for (let i = 0; i < n; i++) (u[i] as number) += time * (start.timeRates[i] as number);
-    solveFactorised(matrix, pivots, n, u);
-  }
-
-  function bend(): void {
-    if (bent) return;
-    bent = true;
-    for (let k = 0; k < DENSE.length; k++) combine(bends[k] as Float64Array, DENSE[k] as readonly number[], stages, n);
-  }
-
-  function componentAt(share: number, i: number): number {
-    bend();
-    const rest = 1 - share;
-    const inner = (bend1[i] as number) + share * ((bend2[i] as number) + share * (bend3[i] as number));
-    return rest * (begin[i] as number) + share * ((end[i] as number) + rest * inner);
-  }
-
-  function at(share: number, state: Float64Array): void {
-    for (let i = 0; i < n; i++) state[i] = componentAt(share, i);
-  }
-
-  return { end, error, step, at, componentAt };
-}
-
-function combine(into: Float64Array, weights: readonly number[], vectors: readonly Float64Array[], n: number): void {
-  into.fill(0);
-  for (let j = 0; j < weights.length; j++) {
-    const weight = weights[j] as number;
-    const vector = vectors[j] as Float64Array;
-    for (let i = 0; i < n; i++) (into[i] as number) += weight * (vector[i] as number);
-  }
 }

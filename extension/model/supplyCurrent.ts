@@ -3,7 +3,7 @@
  *
  * Deliberately not here: several mechanisms on one supply.
  */
-import { BY_HEAT, BY_SPEED, BY_TIME, type Instant } from "./instant.js";
+import { BY_HEAT, BY_SPEED, BY_TIME, type Gradient, type Instant } from "./instant.js";
 import type { Plant } from "./plant.js";
 
 /**
@@ -50,7 +50,7 @@ function setControlled(plant: Plant, at: Instant, derive: boolean): void {
 }
 
 /** d/dt of a quantity along the motion, from its derivatives. */
-export function rateAlong(at: Instant, by: Float64Array, windingRate: number): number {
+export function rateAlong(at: Instant, by: Gradient, windingRate: number): number {
   return (
     (by[0] as number) * at.progressRate +
     (by[BY_SPEED] as number) * at.speedRate +

@@ -1,0 +1,48 @@
+/**
+ * How large and how fast a mechanism's motion is, before it is known: tolerances and the choice of method rest on it.
+ *
+ * Deliberately not here: the motion itself.
+ */
+import { availableLine } from "./line.js";
+import { type Plant, turningInertia } from "./plant.js";
+
+/** Sizes that count as 1 for the tolerance: output shaft in rad and rad/s, s, A of one motor. */
+export interface MotionScales {
+  readonly progressRad: number;
+  readonly speedRadPerS: number;
+  readonly timeS: number;
+  readonly currentA: number;
+}
+
+/** Error of a step as a share, so that over a whole course 1e-8 is kept; the explicit method stays further below what it is allowed. */
+export const STIFF_TOLERANCE = 2e-10;
+export const EXPLICIT_TOLERANCE = 1e-9;
+/** Past this a course is given up. */
+export const MOST_STEPS = 20_000;
+/** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */
+const FOLLOWING_SHARE = 1e-5;
+
+export function scalesOf(plant: Plant): MotionScales {
+  const line = availableLine(plant.drive);
+  const speedRadPerS = Math.max(line.noLoadSpeedRadPerS, 1e-9 * plant.motor.noLoadSpeedRadPerS) / plant.train.ratio;
+  const inertia = turningInertia(plant, plant.load.startRad);
+  const timeS = plant.load.endless ? Math.max(mechanicalTimeConstant(plant, inertia), 1e-12) : plant.spanRad / speedRadPerS;
+  const progressRad = plant.load.endless ? speedRadPerS * timeS : plant.spanRad;
+  return { progressRad, speedRadPerS, timeS, currentA: Math.max(Math.min(line.stallCurrentA, plant.limitA), 1e-9) };
+}
+
+/** True where inertia does not show: there is none, or its time constant is below 1e-5 of the travel at no-load speed. */
+export function isFollowing(plant: Plant, scales: MotionScales): boolean {
+  const positions = [plant.load.startRad, ...plant.load.corners, plant.load.endRad];
+  const inertia = Math.max(...positions.map((position) => turningInertia(plant, position)));
+  if (inertia === 0) return true;
+  if (plant.load.endless) return false;
+  return mechanicalTimeConstant(plant, inertia) < FOLLOWING_SHARE * scales.timeS;
+}
+
+/** τ = J/(n·N²·k_t·(k_e/R + I_loss′)), losses of the train left out, s. Source: the DC machine's speed step, any textbook of drives. */
+export function mechanicalTimeConstant(plant: Plant, inertiaKgM2: number): number {
+  const line = availableLine(plant.drive);
+  const damping = plant.motor.torqueConstantNmPerA * (plant.motor.backEmfVPerRadPerS / line.seriesOhm + plant.lossSlopeAsPerRad);
+  return inertiaKgM2 / (plant.count * plant.train.ratio * plant.train.ratio * damping);
+}

@@ -1,0 +1,115 @@
+/**
+ * One travel by integration: waiting for the ramp, moving from corner to corner, ending at the target or where it stands still.
+ *
+ * Deliberately not here: the equations (motion.ts) and the closed forms (closedTravel.ts).
+ */
+import { type Course, integrate } from "./integrate.js";
+import type { Mode } from "./motionLayout.js";
+import { EXPLICIT_TOLERANCE, isFollowing, MOST_STEPS, type MotionScales, STIFF_TOLERANCE, scalesOf } from "./motionScales.js";
+import { startState } from "./motionState.js";
+import { type MotionSystem, motionSystem } from "./motionSystem.js";
+import { createObserver, type Observer } from "./observer.js";
+import { createStart } from "./odeSystem.js";
+import type { Plant } from "./plant.js";
+import type { TravelGoal } from "./travelGoal.js";
+import { finishTravel, type TravelOptions, type TravelResult } from "./travelResult.js";
+
+const MOST_PHASES = 10_000;
+/** Travels of more time constants than this go by the stiff method. */
+const STIFF_TIME_CONSTANTS = 150;
+
+/** The travel to the goal. */
+export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelOptions): TravelResult {
+  const scales = scalesOf(plant);
+  const observer = createObserver(plant, options.sampling ?? false);
+  const state = startState(plant, options.from, options.fromSpeedRadPerS);
+  const kind = isFollowing(plant, scales) ? "following" : "moving";
+  const moving = motionSystem(plant, { kind }, scales);
+  const targets = plant.load.endless ? [goal.target] : [...cornersAhead(plant), goal.target];
+  const fastest = fastestRate(moving, state);
+  const stiff = kind === "following" || fastest * scales.timeS > STIFF_TIME_CONSTANTS;
+  let timeS = 0;
+  let stepS = (stiff ? 0.02 : 0.1) * Math.min(1 / fastest, scales.timeS);
+  observer.look(moving, timeS, state);
+
+  if (!starts(plant, moving, state)) {
+    const wait = awaitStart(plant, scales, observer, state, kind);
+    timeS = wait.timeS;
+    if (!wait.started) return finishTravel(plant, observer, state, timeS, wait.finished ? "never-starts" : "unresolved");
+  }
+  let next = 0;
+  moving.setTarget(targets[0] as number);
+  for (let phase = 0; phase < MOST_PHASES; phase++) {
+    const endS = timeS < plant.rampS ? plant.rampS : Number.POSITIVE_INFINITY;
+    const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, stiff));
+    timeS = arrival.timeS;
+    stepS = arrival.nextStepS;
+    if (!arrival.finished) break;
+    if (arrival.stop === null) continue;
+    if (arrival.stop === moving.index.burnt) break;
+    if (arrival.stop === moving.index.standstill) return finishTravel(plant, observer, state, timeS, "stands-still");
+    next++;
+    if (next === targets.length) {
+      const speed = moving.front.motorSpeed / plant.train.ratio;
+      return finishTravel(plant, observer, state, timeS, goal.reachable ? "arrives" : "never-reaches-speed", speed);
+    }
+    state[0] = pastCorner(targets[next - 1] as number, plant.spanRad);
+    moving.setTarget(targets[next] as number);
+  }
+  return finishTravel(plant, observer, state, timeS, "unresolved");
+}
+
+/** Blocked by the stop until the ramp's command is enough. */
+function awaitStart(
+  plant: Plant,
+  scales: MotionScales,
+  observer: Observer,
+  state: Float64Array,
+  startsAs: "moving" | "following",
+): { readonly timeS: number; readonly started: boolean; readonly finished: boolean } {
+  if (!(plant.rampS > 0)) return { timeS: 0, started: false, finished: true };
+  const mode: Mode = { kind: "blocked", startsAs };
+  const blocked = motionSystem(plant, mode, scales);
+  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, true));
+  return {
+    timeS: arrival.timeS,
+    started: arrival.stop !== null && arrival.stop === blocked.index.breakaway,
+    finished: arrival.finished,
+  };
+}
+
+function course(system: MotionSystem, observer: Observer, endS: number, firstStepS: number, stiff: boolean): Course {
+  return {
+    tolerance: stiff ? STIFF_TOLERANCE : EXPLICIT_TOLERANCE,
+    endS,
+    firstStepS,
+    mostSteps: MOST_STEPS,
+    stiff,
+    ...observer.listen(system),
+  };
+}
+
+/** Looked at a moment after the start: a command that grows from 0 may move a load without friction at once. */
+function starts(plant: Plant, system: MotionSystem, state: Float64Array): boolean {
+  if (plant.rampS === 0) return (state[1] as number) > 0 || system.front.startGap > 0;
+  return (state[1] as number) > 0 || system.instantAt(plant.rampS * 1e-9, state).startGap > 0;
+}
+
+/** Rate of the fastest change at the start, 1/s: rotors settling, load swinging, heat or protection; finite and above 0. */
+function fastestRate(system: MotionSystem, state: Float64Array): number {
+  const { size } = system;
+  const start = createStart(size, true);
+  system.prepare(0, state, start, new Float64Array(system.watches.length), true);
+  let fastest = Math.sqrt(Math.abs(start.jacobian[size] as number));
+  for (let i = 0; i < size; i++) fastest = Math.max(fastest, Math.abs(start.jacobian[i * size + i] as number));
+  return Math.min(Math.max(fastest, Number.MIN_VALUE), Number.MAX_VALUE);
+}
+
+function cornersAhead(plant: Plant): number[] {
+  return plant.load.corners.map((corner) => plant.direction * (corner - plant.load.startRad)).sort((one, other) => one - other);
+}
+
+/** A hair beyond a corner, so that slopes are those of the piece ahead. */
+function pastCorner(progress: number, span: number): number {
+  return progress + 1e-13 * span;
+}
