@@ -2,7 +2,7 @@
 // forgotten. It runs nothing.
 
 import { readdir } from "node:fs/promises";
-import { join } from "node:path";
+import { basename, join } from "node:path";
 import { build } from "esbuild";
 import { cacheFolder, repositoryRoot } from "./paths.js";
 
@@ -18,7 +18,7 @@ export async function bundleTests({ folder, format, writeEntry }: BundleOptions)
   const names = (await readdir(folder)).filter((name) => name.endsWith(".test.ts")).sort();
   const imports = names.map((name) => `() => import("./${name}")`);
   // The extension says that each is what it is, whatever the nearest package.json says.
-  const path = join(cacheFolder, `tests.${format === "cjs" ? "cjs" : "mjs"}`);
+  const path = join(cacheFolder, `${basename(folder)}.${format === "cjs" ? "cjs" : "mjs"}`);
   await build({
     absWorkingDir: repositoryRoot,
     stdin: { contents: writeEntry(`[${imports.join(", ")}]`), resolveDir: folder, loader: "ts" },

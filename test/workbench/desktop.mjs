@@ -11,17 +11,18 @@ import { takeStep } from "../../extension/build/takeStep.mjs";
 try {
   await takeStep("building", bundle);
   const { prepareDesktopTests } = await importTypeScript("test/workbench/prepareDesktopTests.ts");
-  const { extensionTestsPath, copy } = await prepareDesktopTests();
-  try {
-    await runTests({
-      cachePath: join(repositoryRoot, ".vscode-test"),
-      extensionDevelopmentPath: repositoryRoot,
-      extensionTestsPath,
-      extensionTestsEnv: { LOADMARK_TEST_OUTPUT: "readable" },
-      launchArgs: [copy.folder, "--disable-extensions", "--disable-workspace-trust"],
-    });
-  } finally {
-    await copy.remove();
+  for (const { extensionTestsPath, copy } of await prepareDesktopTests()) {
+    try {
+      await runTests({
+        cachePath: join(repositoryRoot, ".vscode-test"),
+        extensionDevelopmentPath: repositoryRoot,
+        extensionTestsPath,
+        extensionTestsEnv: { LOADMARK_TEST_OUTPUT: "readable" },
+        launchArgs: [copy.folder, "--disable-extensions", "--disable-workspace-trust"],
+      });
+    } finally {
+      await copy.remove();
+    }
   }
 } catch (error) {
   console.error(`The tests in desktop VS Code did not pass: ${error instanceof Error ? error.message : String(error)}`);

@@ -3,11 +3,12 @@
 
 import { readFile } from "node:fs/promises";
 import { basename, join } from "node:path";
-import type { Frame, Page } from "playwright-core";
+import type { Frame, Locator, Page } from "playwright-core";
 import { findTextInView, readSquiggles, type Squiggle } from "./viewLines.js";
 import { waitUntil } from "./waitUntil.js";
 
 const OPEN_TIMEOUT_MS = 60_000;
+const HOVER_SETTLES_MS = 400;
 
 export class Editor {
   constructor(
@@ -44,6 +45,16 @@ export class Editor {
     await this.page.keyboard.press("Enter");
   }
 
+  /** Opens the Mechanisms view by the status item, in place of the files, and gives its rows. */
+  async showMechanisms(): Promise<Locator> {
+    await this.page.locator("#loadmark\\.loadmark\\.loadmark\\.status a").click();
+    const rows = this.page.locator('.pane:has(> .pane-header[aria-label^="Mechanisms"]) .monaco-list-row');
+    await rows.first().waitFor();
+    // A list shows only the rows that it has room for.
+    await this.page.locator(".pane-header:has(+ .pane-body .explorer-folders-view)").click();
+    return rows;
+  }
+
   /** Scrolls the line of the saved file that holds `text` into the middle and puts the caret there. */
   async reveal(file: string, text: string): Promise<void> {
     const lines = (await readFile(join(this.folder, file), "utf8")).split("\n");
@@ -72,6 +83,11 @@ export class Editor {
     await this.page.waitForSelector(".tab.active:not(.dirty)");
   }
 
+  /** Whether a text is within a line in view. */
+  async shows(text: string): Promise<boolean> {
+    return (await findTextInView(this.page, text)) !== undefined;
+  }
+
   /** The squiggles that the view shows, from top to bottom. */
   squiggles(): Promise<Squiggle[]> {
     return readSquiggles(this.page);
@@ -93,15 +109,17 @@ export class Editor {
 
   /** Hovers over the `text` in view with the mouse, and gives the hover's text once it holds what is expected. */
   async hover(text: string, expected: RegExp, timeoutMs = 15_000): Promise<string> {
-    const box = await waitUntil(`"${text}" in view`, () => findTextInView(this.page, text));
     let last = "";
     const look = async () => {
+      // Looked for each time, since lines move when lenses come.
+      const box = await findTextInView(this.page, text);
+      if (!box) return undefined;
       await this.page.mouse.move(box.x + box.width / 2 + Math.random(), box.y + box.height / 2);
-      const contents = await this.page
-        .locator(".monaco-resizable-hover:visible .hover-contents, .monaco-hover:visible .hover-contents")
-        .allInnerTexts();
-      last = contents.join("\n").replaceAll("\u00a0", " ");
-      return expected.test(last) ? last : undefined;
+      last = await this.hoverText();
+      if (expected.test(last)) return last;
+      // An open hover is not filled up by what comes later: it has to be asked for anew.
+      if (last !== "") await this.leaveHover();
+      return undefined;
     };
     return waitUntil(
       `a hover over "${text}" that holds ${expected}`,
@@ -109,6 +127,15 @@ export class Editor {
       timeoutMs,
       () => `the hover says ${JSON.stringify(last)}`,
     );
+  }
+
+  private async hoverText(): Promise<string> {
+    const contents = this.page.locator(".monaco-resizable-hover:visible .hover-contents, .monaco-hover:visible .hover-contents");
+    const loading = this.page.locator(".monaco-hover:visible", { hasText: "Loading..." });
+    // Its parts arrive one by one; what is there after a moment without "Loading..." is all of it.
+    await this.page.waitForTimeout(HOVER_SETTLES_MS);
+    if ((await loading.count()) > 0) return "";
+    return (await contents.allInnerTexts()).join("\n").replaceAll("\u00a0", " ");
   }
 
   /** Takes the pointer and an open hover away. */

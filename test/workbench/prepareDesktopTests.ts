@@ -1,12 +1,14 @@
-// What a desktop VS Code needs to run the extension host's tests: their bundle and a copy of the demo to open. Starting
-// it is desktop.mjs's work.
+// What a desktop VS Code needs to run the extension host's tests: for each run their bundle and a copy of the folder to
+// open. Starting it is desktop.mjs's work.
 
-import { join } from "node:path";
 import { bundleHostTests } from "./bundleHostTests.js";
 import { copyFolder } from "./folderCopy.js";
-import { demoFolder, workbenchFolder } from "./paths.js";
+import { demoFolder, plainFolder } from "./paths.js";
 
-export async function prepareDesktopTests() {
-  const path = await bundleHostTests(join(workbenchFolder, "host"));
-  return { extensionTestsPath: path, copy: await copyFolder(demoFolder) };
+export function prepareDesktopTests() {
+  return Promise.all([prepare("host", demoFolder), prepare("hostElsewhere", plainFolder)]);
+}
+
+async function prepare(tests: string, workspace: string) {
+  return { extensionTestsPath: await bundleHostTests(tests), copy: await copyFolder(workspace) };
 }

@@ -8,30 +8,29 @@ import { bundleHostTests } from "./bundleHostTests.js";
 import { bundleTests } from "./bundleTests.js";
 import { RESULT_MARK } from "./host/resultMark.js";
 import { runMocha } from "./mochaResults.js";
-import { cacheFolder, demoFolder, workbenchFolder } from "./paths.js";
+import { cacheFolder, demoFolder, plainFolder, workbenchFolder } from "./paths.js";
 import type { TestResult } from "./results.js";
 import { startWorkbench, type Workbench, type WorkbenchOptions } from "./workbench.js";
 
 const HOST_TIMEOUT_MS = 5 * 60_000;
 const PAGE_TEST_TIMEOUT_MS = 90_000;
 
-export type EditorRun = Pick<WorkbenchOptions, "extensionMode" | "browser" | "vsix" | "extension"> & {
-  readonly workspace?: string;
-  /** Where the test modules are; else the folders beside this file. */
-  readonly tests?: { readonly host: string; readonly page: string };
-};
+export type EditorRun = Pick<WorkbenchOptions, "extensionMode" | "browser" | "vsix">;
 
 export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
-  const { host, page } = run.tests ?? { host: join(workbenchFolder, "host"), page: join(workbenchFolder, "page") };
   const workbench = await startWorkbench({ workspace: demoFolder, ...run });
   try {
-    return [...(await runHost(workbench, host)), ...(await runPage(workbench, page, run.extensionMode))];
+    return [
+      ...(await runHost(workbench, "host", demoFolder)),
+      ...(await runHost(workbench, "hostElsewhere", plainFolder)),
+      ...(await runPage(workbench, run.extensionMode)),
+    ];
   } finally {
     await workbench.stop();
   }
 }
 
-async function runHost(workbench: Workbench, folder: string): Promise<TestResult[]> {
+async function runHost(workbench: Workbench, folder: string, workspace: string): Promise<TestResult[]> {
   const results: TestResult[] = [];
   const log: string[] = [];
   const onLog = (line: string) => {
@@ -41,21 +40,17 @@ async function runHost(workbench: Workbench, folder: string): Promise<TestResult
   };
   try {
     const tests = await bundleHostTests(folder);
-    const exitCode = await workbench.runHostTests({
-      tests,
-      emptyExtension: await makeEmptyExtension(),
-      onLog,
-      timeoutMs: HOST_TIMEOUT_MS,
-    });
+    const emptyExtension = await makeEmptyExtension();
+    const exitCode = await workbench.runHostTests({ workspace, tests, emptyExtension, onLog, timeoutMs: HOST_TIMEOUT_MS });
     const explained = exitCode === 0 || results.some(({ failure }) => failure !== undefined);
     if (!explained) throw new Error(`They ended with exit code ${exitCode}.`);
     if (results.length === 0) throw new Error("No tests ran.");
   } catch (error) {
-    const hostLog = `${workbench.logFile}.host`;
+    const hostLog = `${workbench.logFile}.${folder}`;
     await writeFile(hostLog, log.join("\n"));
     const message = error instanceof Error ? error.message : String(error);
     const failure = `${message}\nThe last log line: ${log.at(-1)}\nAll of the log: ${hostLog} and ${workbench.logFile}`;
-    results.push({ title: "the tests in the extension host", failure });
+    results.push({ title: `the tests in the extension host (${folder})`, failure });
   }
   return results;
 }
@@ -69,10 +64,10 @@ async function makeEmptyExtension(): Promise<string> {
   return folder;
 }
 
-async function runPage(workbench: Workbench, folder: string, mode: string): Promise<TestResult[]> {
+async function runPage(workbench: Workbench, mode: string): Promise<TestResult[]> {
   const entry = JSON.stringify(join(workbenchFolder, "page/session.js"));
   const path = await bundleTests({
-    folder,
+    folder: join(workbenchFolder, "page"),
     format: "esm",
     writeEntry: (files) => `export { useWorkbench } from ${entry};\nexport const testFiles = ${files};\n`,
   });

@@ -2,6 +2,7 @@
 // Chromium page that shows it. Each opening takes a fresh copy of the workspace. Nothing here knows what is tested.
 
 import { type BrowserContext, chromium, type Page } from "playwright-core";
+import { CHROMIUM_FLAGS } from "./chromium.js";
 import { Editor } from "./editor.js";
 import { copyFolder } from "./folderCopy.js";
 import { startServer, type WorkbenchServer } from "./server.js";
@@ -28,6 +29,8 @@ export interface WorkbenchOptions {
 }
 
 export interface HostTestOptions {
+  /** The folder that is copied; else that of the workbench. */
+  readonly workspace?: string | undefined;
   /** The module whose `run` the extension host calls. */
   readonly tests: string;
   /** What a development host needs beside the installed extension: any folder with a manifest. */
@@ -39,8 +42,8 @@ export interface HostTestOptions {
 export interface Workbench {
   readonly page: Page;
   readonly logFile: string;
-  /** Opens a fresh copy of the workspace, replacing what was open. */
-  open(openFile?: string): Promise<Editor>;
+  /** Opens a fresh copy of the workspace, or of another folder, replacing what was open. */
+  open(openFile?: string, another?: string): Promise<Editor>;
   /** Runs tests in the extension host, in a fresh copy, and gives their exit code. */
   runHostTests(options: HostTestOptions): Promise<number>;
   /** Settings on top of the quiet ones, from the next opening on. */
@@ -50,16 +53,6 @@ export interface Workbench {
 
 /** A page that was left does not come back: its extension host need not wait for it. */
 const RECONNECT_WITHIN_S = 30;
-
-const CHROMIUM_FLAGS = [
-  ...(process.getuid?.() === 0 ? ["--no-sandbox"] : []),
-  "--disable-gpu",
-  "--disable-quic",
-  "--no-first-run",
-  "--disable-background-networking",
-  "--disable-component-update",
-  "--disable-sync",
-];
 
 export async function startWorkbench(options: WorkbenchOptions): Promise<Workbench> {
   const { extensionMode, settings, browser: executablePath, viewport = { width: 1280, height: 800 } } = options;
@@ -111,25 +104,25 @@ async function drive(
     copy = undefined;
   };
   endings.push(leave);
-  const takeCopy = async () => {
+  const takeCopy = async (another = workspace) => {
     await leave();
-    copy = await copyFolder(workspace);
+    copy = await copyFolder(another);
     return copy.folder;
   };
   return {
     page,
     logFile: server.logFile,
     changeSettings: (more) => server.writeSettings({ ...quietSettings, ...settings, ...more }),
-    open: async (openFile) => {
-      const folder = await takeCopy();
+    open: async (openFile, another) => {
+      const folder = await takeCopy(another);
       await page.goto(server.address({ folder, extension }));
       const editor = new Editor(page, folder);
       await editor.waitUntilReady();
       if (openFile) await editor.openFile(openFile);
       return editor;
     },
-    runHostTests: async ({ tests, emptyExtension, onLog, timeoutMs }) => {
-      const folder = await takeCopy();
+    runHostTests: async ({ workspace: another, tests, emptyExtension, onLog, timeoutMs }) => {
+      const folder = await takeCopy(another);
       const address = server.address({ folder, extension: extension ?? emptyExtension, extensionTests: tests });
       const hostPage = await context.newPage();
       try {

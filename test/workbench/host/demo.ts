@@ -51,6 +51,13 @@ export function waitForFinding(path: string, rule: string): Promise<vscode.Diagn
   return waitForFindings(path, `${path} to have ${rule}`, (findings) => findings.find(({ code }) => code === rule));
 }
 
+/** Waits until a document's finding of the rule lies on these words: those of an older text may lie elsewhere. */
+export async function waitForFindingOn(words: string, document: vscode.TextDocument, rule: string): Promise<void> {
+  const isThere = ({ code, range }: vscode.Diagnostic) => code === rule && document.getText(range) === words;
+  const path = vscode.workspace.asRelativePath(document.uri);
+  await waitForFindings(path, `${rule} on ${words} in ${path}`, (findings) => (findings.some(isThere) ? true : undefined));
+}
+
 /** Waits until a file has no finding of the rule, or none at all. */
 export async function waitForNoFinding(path: string, rule?: string): Promise<void> {
   const isGone = (findings: vscode.Diagnostic[]) =>

@@ -2,7 +2,7 @@
 
 import assert from "node:assert/strict";
 import * as vscode from "vscode";
-import { closeAll, retype, show, textOf, undoAll, waitForFinding, waitForNoFinding } from "./demo.js";
+import { closeAll, retype, show, undoAll, waitForFinding, waitForFindingOn, waitForNoFinding } from "./demo.js";
 import { trayHoist } from "./handDemo.js";
 
 /** Too few teeth: by hand the tray hoist needs more than half of its stall torque. */
@@ -18,7 +18,7 @@ describe("findings while typing", () => {
     await retype(editor, "LID_RATIO, {", "2.4, {");
     const past = await waitForFinding("mechanisms/lidArm.ts", "past-peak");
     assert.equal(past.severity, vscode.DiagnosticSeverity.Warning);
-    assert.equal(editor.document.getText(past.range), "lidArm");
+    await waitForFindingOn("lidArm", editor.document, "past-peak");
     await undoAll(editor, saved);
     await waitForNoFinding("mechanisms/lidArm.ts", "past-peak");
   });
@@ -35,15 +35,10 @@ describe("findings while typing", () => {
   });
 
   it("come in an open file as well, and go when the unsaved constant is dropped", async () => {
-    await show("mechanisms/trayHoist.ts");
+    const { document } = await show("mechanisms/trayHoist.ts");
     const editor = await show("gearing.ts");
     await retype(editor, "54", String(TOO_FEW));
-    const past = await waitForFinding("mechanisms/trayHoist.ts", "past-peak");
-    const text = await textOf("mechanisms/trayHoist.ts");
-    assert.equal(
-      text.split("\n")[past.range.start.line]?.slice(past.range.start.character, past.range.end.character),
-      "trayHoist",
-    );
+    await waitForFindingOn("trayHoist", document, "past-peak");
     await vscode.commands.executeCommand("workbench.action.files.revert");
     await waitForNoFinding("mechanisms/trayHoist.ts", "past-peak");
   });
@@ -54,11 +49,11 @@ describe("findings while typing", () => {
     await waitForFinding("mechanisms/shelfLift.ts", "past-peak");
     editor.selection = new vscode.Selection(0, 0, 0, 0);
     await vscode.commands.executeCommand("type", { text: "\n\n" });
+    await waitForFindingOn("shelfLift", editor.document, "past-peak");
     await retype(editor, "drumRadius: ", "drumRad");
     await waitForFinding("mechanisms/shelfLift.ts", "bad-declaration");
     await undoAll(editor, saved);
-    const past = await waitForFinding("mechanisms/shelfLift.ts", "past-peak");
-    assert.equal(editor.document.getText(past.range), "shelfLift");
+    await waitForFindingOn("shelfLift", editor.document, "past-peak");
     await waitForNoFinding("mechanisms/shelfLift.ts", "bad-declaration");
   });
 });

@@ -2,7 +2,7 @@
 
 import assert from "node:assert/strict";
 import * as vscode from "vscode";
-import { closeAll, rangeOf, retype, show, undoAll, waitForFinding, waitForNoFinding } from "./demo.js";
+import { closeAll, rangeOf, retype, show, undoAll, waitForFinding, waitForFindingOn, waitForNoFinding } from "./demo.js";
 
 const LIFT = "mechanisms/shelfLift.ts";
 
@@ -36,9 +36,8 @@ describe("quick fixes", () => {
     const { document } = await show(LIFT);
     const past = await waitForFinding(LIFT, "past-peak");
     const fixes = await fixesAt(document, past.range);
-    const allow = fixes.at(-1);
-    assert.ok(allow?.edit, `The last of ${JSON.stringify(fixes.map(({ title }) => title))} has no edit.`);
-    assert.match(allow.title, /allow.*past-peak/i);
+    const allow = fixes.find(({ title }) => /allow.*past-peak/i.test(title));
+    assert.ok(allow?.edit, `None of ${JSON.stringify(fixes.map(({ title }) => title))} is it.`);
     assert.ok(!allow.isPreferred);
     await vscode.workspace.applyEdit(allow.edit);
     const line = document.lineAt(past.range.start.line).text;
@@ -54,7 +53,7 @@ describe("quick fixes", () => {
     const saved = editor.document.getText();
     await retype(editor, "drumRadius", "drumRadus");
     const bad = await waitForFinding(LIFT, "bad-declaration");
-    assert.equal(editor.document.getText(bad.range), "drumRadus");
+    await waitForFindingOn("drumRadus", editor.document, "bad-declaration");
     const fixes = await fixesAt(editor.document, bad.range);
     const mend = fixes.find(({ title }) => title === "Change to drumRadius");
     assert.ok(mend?.edit, `None of ${JSON.stringify(fixes.map(({ title }) => title))} is it.`);
