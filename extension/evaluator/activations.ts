@@ -10,6 +10,7 @@ import { listItems } from "./access.js";
 import { type Context, type Frame, type Module, openFrame } from "./context.js";
 import { openShared } from "./functions.js";
 import { outermost } from "./outer.js";
+import { listParameters } from "./parameters.js";
 import { bindPattern } from "./patterns.js";
 import { isReached, leavesLoop } from "./reach.js";
 import { type Binding, findReferences, resolveName } from "./source.js";
@@ -54,7 +55,7 @@ function runsOfFunction(
 ): readonly Frame[] {
   const { ts } = ctx;
   if (ts.isClassElement(node) || ts.isAccessor(node)) return [];
-  if (node.parameters.length === 0) return outer.map((frame) => openShared(frame, node));
+  if (listParameters(ts, node).length === 0) return outer.map((frame) => openShared(frame, node));
   const runs = listCalls(ctx, node, module).flatMap((call) => {
     const callers = runsAround(ctx, call, module, visiting).filter((frame) => isReached(ctx, call, frame));
     return callers.flatMap((frame) => {

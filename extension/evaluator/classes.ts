@@ -8,12 +8,13 @@ import type ts from "typescript";
 import { type Callable, callableData, callableOf } from "./callable.js";
 import type { Context, Frame } from "./context.js";
 import { isExported } from "./exports.js";
+import { isFrozen } from "./flow.js";
+import { findChangeFrom } from "./mutation.js";
 import { originOf } from "./operations.js";
+import { isPropertyWritten, propertyUses } from "./properties.js";
 import { evaluateName } from "./propertyName.js";
-import type { Source } from "./source.js";
 import { dependent, known, quote, quoteText, spanOf, unknown, unsupported } from "./unknown.js";
-import type { Span, Value } from "./value.js";
-import { isWritten } from "./writes.js";
+import type { Origin, Span, Value } from "./value.js";
 
 type ClassCallable = Extract<Callable, { kind: "class" }>;
 interface Member {
@@ -106,9 +107,12 @@ function fieldValue(
   const origin = originOf("name", member.name, frame, []);
   if (memo.has(member))
     return memo.get(member) ?? unknown("cycle", `${quoteText(name)} is defined in terms of itself.`, "", origin);
+  if ([member, node].some((each) => (ts.getDecorators(each)?.length ?? 0) > 0)) {
+    return unsupported(member.name, module, "may be changed by a decorator");
+  }
   const isPrivate = ts.isPrivateIdentifier(member.name) || isMarked(ctx, member, ts.SyntaxKind.PrivateKeyword);
   const isFixed = isPrivate || isMarked(ctx, member, ts.SyntaxKind.ReadonlyKeyword) || !isReachable(ctx, node, frame);
-  if (!isFixed || writtenProperties(ctx, module.source).has(name)) {
+  if (!isFixed || isPropertyWritten(ctx.ts, name, module.source)) {
     const why = isFixed ? "gets another value later" : "is not `readonly`";
     return unknown("not-const", `The field ${quoteText(name)} ${why}.`, "make it `readonly`, with its value", origin);
   }
@@ -123,40 +127,42 @@ function fieldValue(
     );
   }
   memo.set(member, undefined);
-  const value = ctx.evaluate(member.initializer, frame);
+  const value = guardField(ctx, ctx.evaluate(member.initializer, frame), name, node, frame, origin);
   memo.set(member, value);
   return value;
+}
+
+/** An object in a field is handed on only when nothing can have changed it: accesses of that name stand for it. */
+function guardField(
+  ctx: Context,
+  value: Value,
+  name: string,
+  node: ts.ClassLikeDeclaration,
+  frame: Frame,
+  origin: Origin,
+): Value {
+  if (!value.known || isFrozen(value.data)) return value;
+  const { module } = frame;
+  if (isReachable(ctx, node, frame)) {
+    const message = `The field ${quoteText(name)} holds an object that other files may change.`;
+    return unknown("mutated", message, "add `as const`", origin);
+  }
+  const change = findChangeFrom(ctx, module, propertyUses(ctx.ts, name, module.source), value.data);
+  if (change === undefined) return value;
+  const place: Origin = { kind: "operation", span: spanOf(change.node, change.module), from: [] };
+  const cause = unknown("mutated", `${quote(change.node, change.module)} ${change.wording}.`, "", place);
+  return unknown(
+    "mutated",
+    `The field ${quoteText(name)} may hold something else than what is written here.`,
+    "add `as const`",
+    origin,
+    cause,
+  );
 }
 
 function isReachable(ctx: Context, node: ts.ClassLikeDeclaration, { module }: Frame): boolean {
   const binding = node.name === undefined ? undefined : module.source.scopes.get(module.source.root)?.names.get(node.name.text);
   return binding === undefined || isExported(ctx.ts, binding, module.source);
-}
-
-/** Names of properties that anything in a file writes to, or calls a method of. */
-function writtenProperties({ ts }: Context, source: Source): ReadonlySet<string> {
-  if (source.derived.writtenProperties !== undefined) return source.derived.writtenProperties;
-  const names = new Set<string>();
-  const stack: ts.Node[] = [source.root];
-  for (let node = stack.pop(); node !== undefined; node = stack.pop()) {
-    if (ts.isPropertyAccessExpression(node) && isChanged(ts, node)) names.add(node.name.text);
-    ts.forEachChild(node, (child) => {
-      stack.push(child);
-    });
-  }
-  source.derived.writtenProperties = names;
-  return names;
-}
-
-/** Written to itself, or something inside of it is: `this.limits.high = 3`. */
-function isChanged(ts: Context["ts"], access: ts.PropertyAccessExpression): boolean {
-  for (let node: ts.Node = access; ; node = node.parent) {
-    if (isWritten(ts, node)) return true;
-    const { parent } = node;
-    const goesOn = (ts.isPropertyAccessExpression(parent) || ts.isElementAccessExpression(parent)) && parent.expression === node;
-    if (!goesOn && !ts.isNonNullExpression(parent)) return false;
-    if (ts.isCallExpression(parent.parent) && parent.parent.expression === parent) return true;
-  }
 }
 
 /** The member of a class, or the function, that decides what `this` is. */

@@ -9,6 +9,7 @@ import { evaluateElements } from "./aggregates.js";
 import type { Callable } from "./callable.js";
 import { type Context, type Frame, openFrame } from "./context.js";
 import { isTruthy, originOf } from "./operations.js";
+import { listParameters } from "./parameters.js";
 import { bindPattern } from "./patterns.js";
 import type { Binding } from "./source.js";
 import { dependent, known, primitive, tooDeep, unknown, unsupported } from "./unknown.js";
@@ -50,9 +51,8 @@ export function openCall(
   caller: Frame,
   turn: number,
 ): Frame | undefined {
-  const { ts } = ctx;
   if (caller.height >= DEEPEST_CALL) return undefined;
-  if (node.parameters.length === 0) return openShared(frame, node);
+  if (listParameters(ctx.ts, node).length === 0) return openShared(frame, node);
   const turns = caller.children.get(call) ?? [];
   if (caller.height < DEEPEST_KEPT) caller.children.set(call, turns);
   const present = turns[turn];
@@ -60,13 +60,12 @@ export function openCall(
   const bound = new Map<Binding, Value>();
   const opened = openFrame(frame, node, bound, caller.height + 1);
   turns[turn] = opened;
-  for (const [index, parameter] of node.parameters.entries()) {
+  for (const [index, parameter] of listParameters(ctx.ts, node).entries()) {
     const rest = parameter.dotDotDotToken !== undefined;
     const origin: Origin = originOf("call", call, caller, []);
     const given = rest
       ? known({ kind: "array", items: args.slice(index) }, origin)
       : (args[index] ?? primitive(undefined, origin));
-    if (ts.isIdentifier(parameter.name) && parameter.name.text === "this") continue;
     bindPattern(ctx, parameter, given, opened, bound);
   }
   return opened;

@@ -22,19 +22,36 @@ const MOST_FLOWS = 1000;
 
 /** What in the program may have changed the object that `binding` stands for, or `undefined` when nothing can have. */
 export function findChange(ctx: Context, module: Module, binding: Binding, data: Data): Change | undefined {
-  const search: Search = {
-    ctx,
-    home: module,
-    pending: [],
-    seen: new Map(),
-    exploreIn: (pending, only) => explore({ ...search, pending }, only),
-  };
+  const search = begin(ctx, module);
   const whole: Flow = { objects: [data], wraps: [] };
   flowInto(search, module, binding, whole);
   const target: Target = binding.kind === "import" ? follow(ctx, { kind: "binding", module, binding }) : { kind: "library" };
   // What is exported without a name has no search of its own.
   const elsewhere = target.kind === "expression" ? followImporters(search, target, whole) : undefined;
   return elsewhere ?? explore(search);
+}
+
+/** The same for an object that several expressions or names of a file may stand for. */
+export function findChangeFrom(
+  ctx: Context,
+  module: Module,
+  starts: readonly (ts.Node | Binding)[],
+  data: Data,
+): Change | undefined {
+  const search = begin(ctx, module);
+  for (const start of starts) flowInto(search, module, start, { objects: [data], wraps: [] });
+  return explore(search);
+}
+
+function begin(ctx: Context, home: Module): Search {
+  const search: Search = {
+    ctx,
+    home,
+    pending: [],
+    seen: new Map(),
+    exploreIn: (pending, only) => explore({ ...search, pending }, only),
+  };
+  return search;
 }
 
 function explore(search: Search, only?: Module): Change | undefined {

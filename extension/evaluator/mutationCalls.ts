@@ -10,6 +10,7 @@ import { isExported } from "./exports.js";
 import { type Change, type Flow, flowInto, flowIntoName, loseTrack, narrow, relist, type Search, wrap } from "./flow.js";
 import { findTarget } from "./modules.js";
 import { innermost, outermost } from "./outer.js";
+import { listParameters } from "./parameters.js";
 import { type Binding, findReferences, resolveName } from "./source.js";
 
 const CHANGING = new Set(["push", "pop", "shift", "unshift", "splice", "sort", "reverse", "fill", "copyWithin"]);
@@ -160,11 +161,13 @@ function followFunction(search: Search, module: Module, node: ts.Node, given: re
   if (found === "harmless") return undefined;
   const whole = given.find((flow) => flow !== undefined && loseTrack(node, module, flow) !== undefined);
   if (found === undefined) return whole === undefined ? undefined : loseTrack(node.parent, module, whole);
-  const { parameters } = found.node;
+  // `arguments` reaches every parameter under no name of its own.
+  if (/\barguments\b/.test(found.node.getText(found.module.source.root))) return whole && loseTrack(node.parent, module, whole);
+  const parameters = listParameters(ts, found.node);
   for (const [index, flow] of given.entries()) {
     const last = parameters.at(-1);
     const parameter = parameters[index] ?? (last?.dotDotDotToken === undefined ? undefined : last);
-    if (flow === undefined || parameter === undefined || !ts.isParameter(parameter)) continue;
+    if (flow === undefined || parameter === undefined) continue;
     flowIntoName(search, found.module, parameter.name, parameter.dotDotDotToken === undefined ? flow : wrap(flow, "*"));
   }
   return undefined;

@@ -147,7 +147,8 @@ function variableValue(ctx: Context, binding: Binding, declaration: ts.Node, hom
 function functionValue(ctx: Context, binding: Binding, home: Frame): Value {
   const { ts } = ctx;
   const { module } = home;
-  if (isReassigned(ts, binding, module.source)) {
+  const isShared = binding.declarations.some((each) => !ts.isFunctionDeclaration(each) && !ts.isFunctionExpression(each));
+  if (isShared || isReassigned(ts, binding, module.source)) {
     return unknown("not-const", `${quoteText(binding.name)} gets another value later.`, "", at(binding, module));
   }
   const bodies = binding.declarations.filter((node) => ts.isFunctionLike(node) && "body" in node && node.body !== undefined);

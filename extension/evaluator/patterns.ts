@@ -44,21 +44,24 @@ function takePart(ctx: Context, element: ts.BindingElement, whole: Value, frame:
   const { parent: pattern, name } = element;
   if (!whole.known) return dependent(name, frame.module, originOf("access", name, frame, [whole]), whole);
   if (element.dotDotDotToken !== undefined) return takeRest(ctx, element, whole, frame);
-  let key: string;
   if (ts.isArrayBindingPattern(pattern)) {
-    if (listItems(ctx, whole) === undefined)
-      return unsupported(pattern, frame.module, "takes something apart that is not a list");
-    key = String(pattern.elements.indexOf(element));
-  } else {
-    const property = element.propertyName ?? name;
-    if (ts.isObjectBindingPattern(property) || ts.isArrayBindingPattern(property))
-      return unsupported(element, frame.module, "is not followed");
-    const evaluated = evaluateName(ctx, property, frame);
-    if (typeof evaluated !== "string")
-      return dependent(name, frame.module, originOf("access", name, frame, [whole, evaluated]), evaluated);
-    key = evaluated;
+    const items = listItems(ctx, whole);
+    if (items === undefined) return unsupported(pattern, frame.module, "takes something apart that is not a list");
+    const item = items[pattern.elements.indexOf(element)];
+    if (item !== undefined) return orDefault(ctx, element, locate(item, name, frame), frame);
+    return orDefault(ctx, element, getProperty(ctx, whole, String(pattern.elements.indexOf(element)), name, frame), frame);
   }
+  const property = element.propertyName ?? name;
+  if (ts.isObjectBindingPattern(property) || ts.isArrayBindingPattern(property))
+    return unsupported(element, frame.module, "is not followed");
+  const key = evaluateName(ctx, property, frame);
+  if (typeof key !== "string") return dependent(name, frame.module, originOf("access", name, frame, [whole, key]), key);
   return orDefault(ctx, element, getProperty(ctx, whole, key, name, frame), frame);
+}
+
+function locate(item: Value, name: ts.Node, frame: Frame): Value {
+  const origin = originOf("access", name, frame, [item]);
+  return item.known ? known(item.data, origin) : dependent(name, frame.module, origin, item);
 }
 
 function takeRest(ctx: Context, element: ts.BindingElement, whole: Value & { readonly known: true }, frame: Frame): Value {

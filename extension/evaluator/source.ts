@@ -7,6 +7,7 @@
 import type ts from "typescript";
 import { declareNames } from "./declare.js";
 import type { ExportTable } from "./exports.js";
+import type { PropertyTable } from "./properties.js";
 import type { TypeScript } from "./typescript.js";
 
 export type BindingKind =
@@ -61,8 +62,7 @@ export interface Source {
 export interface Derived {
   references?: ReadonlyMap<Binding, readonly ts.Identifier[]>;
   exports?: ExportTable;
-  /** Names of properties that anything in the file writes to. */
-  writtenProperties?: ReadonlySet<string>;
+  properties?: PropertyTable;
 }
 
 /** Parses a file. Never throws: what cannot be parsed is an empty file that says so. */

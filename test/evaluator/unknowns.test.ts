@@ -145,6 +145,7 @@ describe("objects that nothing changes", () => {
     ["a shallow copy's inside", "const a = { x: 1, in: { y: 1 } }; const b = { ...a }; b.in.y = 2;"],
     ["in an import's user", "import { g } from './g'; const a = g; g.x = 2;\n//- g.ts\nexport const g = { x: 1 };"],
     ["a default in a parameter", "const a = { x: 1 }; function f(o = a) { o.x = 2; }"],
+    ["through arguments", "const a = { x: 1 }; function f(o: object) { arguments[0].x = 2; } f(a);"],
     ["in a function nobody calls", "const a = { x: 1 }; () => { a.x = 2; };"],
   ])("changed %s", (_name, code) => {
     expect(unknownOf(code, "a.x").codes).toContain("mutated");
