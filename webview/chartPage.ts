@@ -34,10 +34,8 @@ interface Shown {
 
 export interface ChartPage {
   show(answer: ChartAnswer): void;
-  /** Draws again in the colours of now. */
+  /** Draws again in the colours and for the pixels of now. */
   redraw(): void;
-  /** Fits the plots to the screen's pixels. */
-  resize(): void;
 }
 
 export function createChartPage(root: HTMLElement, host: Host): ChartPage {
@@ -143,9 +141,6 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
 
   return {
     redraw,
-    resize: () => {
-      for (const plot of plots) plot.resize();
-    },
     show(answer) {
       setShown(parts.empty, answer.kind === "nothing");
       if (answer.kind === "chart") return showChart(answer);

@@ -9,7 +9,7 @@ if (root !== null) {
   const page = createChartPage(root, host);
   host.listen(({ answer }) => page.show(answer));
   watchTheme(document, page.redraw);
-  watchPixelRatio(page.resize);
+  watchPixelRatio(page.redraw);
   host.send({ type: "ready", mechanism: host.recall().mechanism });
 }
 

@@ -73,8 +73,10 @@ export class Server implements vscode.Disposable {
 
   /** `undefined` while there is no server, or where its answer cannot be read. */
   async askForChart(question: ChartQuestion): Promise<ChartAnswer | undefined> {
-    const answer = await this.#client?.sendRequest(CHART, question);
-    return readMessage(chartAnswerSchema, answer);
+    const message = (await this.#client?.sendRequest(CHART, question)) ?? undefined;
+    const answer = readMessage(chartAnswerSchema, message);
+    if (message !== undefined && answer === undefined) this.#log.warn("The server sent a chart that cannot be read.");
+    return answer;
   }
 
   async #startClient(): Promise<void> {

@@ -39,7 +39,7 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
     old: element("p", { class: "old", attributes: { role: "status" } }),
     title: element("h1"),
     verdict: element("p", { class: "verdict" }),
-    perMotor: element("p", { class: "note" }),
+    perMotor: element("p", { class: "per-motor" }),
     facts: element("dl", { class: "facts" }),
     findings: element("ul", { class: "findings" }),
     plots: element("div", { class: "plots", attributes: PLOTS }),
@@ -67,11 +67,10 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
   const picture = [parts.plots, parts.spoken, parts.readout, keys];
   const numbers = [actions, parts.tableBox];
   parts.content.append(
-    element("header", {}, [parts.title, parts.verdict, parts.old]),
-    parts.findings,
+    element("header", {}, [parts.title, parts.verdict, parts.perMotor, parts.old]),
     parts.facts,
-    parts.perMotor,
     ...(tableFirst ? [...numbers, ...picture] : [...picture, ...numbers]),
+    parts.findings,
     parts.assumed,
     parts.notChecked,
     element("footer", { class: "cautions" }, [element("p", { text: CAUTIONS })]),

@@ -24,8 +24,6 @@ export interface Plot {
   setCursor(cursor: Cursor | null): void;
   /** Torque in axis units at a distance from the canvas's left edge, px. */
   torqueAt(x: number): number;
-  /** Fits the canvas to its place and to the screen's pixels. */
-  resize(): void;
 }
 
 export interface PlotOptions {
@@ -72,7 +70,6 @@ export function createPlot(canvas: HTMLCanvasElement, { place, pixelRatio }: Plo
       chart?.draw();
     },
     torqueAt: (x) => chart?.scales.torque?.getValueForPixel(x) ?? 0,
-    resize: () => chart?.resize(),
   };
 }
 

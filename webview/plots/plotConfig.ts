@@ -22,8 +22,9 @@ export interface PlotRequest {
   readonly plugins: Plugin<"line">[];
 }
 
-/** Both plots keep the same room beside them, so that they share one torque axis. */
-const AXIS_WIDTH = 56;
+/** Room for a title and its distance from the numbers, and for each character of these, px. */
+const AXIS_ROOM = 36;
+const CHARACTER = 7;
 const TICK_FONT_SIZE = 11;
 const TITLE_FONT_SIZE = 12;
 /** Markers along a curve. */
@@ -58,8 +59,8 @@ export function plotConfig(request: PlotRequest): ChartConfiguration<"line"> {
       ...(pixelRatio === undefined ? {} : { devicePixelRatio: pixelRatio }),
       scales: {
         torque: axisOptions(drawing.torque, "bottom", theme, { title: !upper, labels: !upper }),
-        left: axisOptions(plot.left, "left", theme, { title: true, labels: true }),
-        right: axisOptions(plot.right, "right", theme, { title: true, labels: true }),
+        left: axisOptions(plot.left, "left", theme, { title: true, labels: true }, axisWidth(drawing, "left")),
+        right: axisOptions(plot.right, "right", theme, { title: true, labels: true }, axisWidth(drawing, "right")),
         ...share,
       },
       plugins: { annotation: { annotations: annotationsOf(drawing, theme, fill) } },
@@ -68,11 +69,18 @@ export function plotConfig(request: PlotRequest): ChartConfiguration<"line"> {
   };
 }
 
+/** Both plots keep the same room beside them, so that they share one torque axis. */
+function axisWidth({ motion, power }: Drawing, side: "left" | "right"): number {
+  const labels = [motion, power].flatMap((plot) => plot[side].ticks.map((tick) => writeNumber(tick)));
+  return AXIS_ROOM + CHARACTER * Math.max(...labels.map((label) => label.length));
+}
+
 function axisOptions(
   { max, ticks, title }: AxisDrawing,
   position: "top" | "bottom" | "left" | "right",
   theme: Theme,
   shows: { readonly title: boolean; readonly labels: boolean },
+  width?: number,
 ): ScaleOptionsByType<"linear"> {
   const upright = position === "left" || position === "right";
   const options = {
@@ -85,7 +93,7 @@ function axisOptions(
       scale.ticks = ticks.map((value) => ({ value }));
     },
     afterFit: (scale: Scale) => {
-      if (upright) scale.width = AXIS_WIDTH;
+      if (width !== undefined) scale.width = width;
     },
     border: { color: theme.quiet },
     grid: {

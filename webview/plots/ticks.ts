@@ -10,8 +10,11 @@ export interface Scale {
   readonly ticks: readonly number[];
 }
 
-const MULTIPLES = [1, 2, 2.5, 5, 10];
-const INTERVALS = [4, 5, 6];
+const MULTIPLES = [1, 1.5, 2, 2.5, 3, 4, 5, 10];
+/** Coarser: an axis that ends where it must has room for any. */
+const AXIS_MULTIPLES = [1, 2, 2.5, 5, 10];
+/** Both divide 100 per cent into round parts. */
+const INTERVALS = [4, 5];
 
 /** Scales with the same number of intervals, so that one grid serves all; each ends at a tick not below its value. */
 export function alignedScales(greatest: readonly number[]): readonly Scale[] {
@@ -23,7 +26,7 @@ export function alignedScales(greatest: readonly number[]): readonly Scale[] {
 
 /** Ticks inside an axis that ends where it must. */
 export function ticksWithin(max: number): readonly number[] {
-  const step = roundStep(max / 6);
+  const step = roundStep(max / 6, AXIS_MULTIPLES);
   return scaleOf(Math.floor(max / step + 1e-9), step).ticks;
 }
 
@@ -34,11 +37,11 @@ function scaleOf(intervals: number, step: number): Scale {
 }
 
 /** The least round step that is not below a value; 1 where there is nothing to show. */
-function roundStep(value: number): number {
+function roundStep(value: number, multiples: readonly number[] = MULTIPLES): number {
   const size = positive(value);
   if (size === undefined) return 1;
   const decade = 10 ** Math.floor(Math.log10(size));
-  const multiple = MULTIPLES.find((candidate) => candidate * decade >= size * (1 - 1e-9)) ?? 10;
+  const multiple = multiples.find((candidate) => candidate * decade >= size * (1 - 1e-9)) ?? 10;
   const step = multiple * decade;
   return step > 0 && Number.isFinite(step * 6) ? step : size;
 }

@@ -70,7 +70,10 @@ function wordsOf(chart: Chart, drawing: Drawing, plot: PlotDrawing, theme: Theme
             label(words, theme.foreground, false, (width) => placesWithin(toX(from), toX(to), area, width, LINE_HEIGHT)),
           ),
         ...boundaries.map(({ x, words }) =>
-          label(words, theme.foreground, false, () => placesUpright(toX(x), area, LINE_HEIGHT)),
+          label(words, theme.foreground, false, (width) => [
+            ...placesUpright(toX(x), area, LINE_HEIGHT),
+            ...placesBeside(toX(x), area, width, LINE_HEIGHT),
+          ]),
         ),
         ...(wasNeeded === null || wasNeeded.outside
           ? []

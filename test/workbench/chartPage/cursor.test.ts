@@ -75,7 +75,7 @@ describe("the cursor of the chart's page", () => {
     await chart.page.mouse.move(box.x + 57, box.y + box.height / 2);
     assert.equal(await cursorNm(), 0);
     assert.ok(0 < middle && middle < right, `${middle}, ${right}`);
-    // The plots' axes begin and end 56 px from their sides; the middle of both is half of the axis, which ends at 1.06 of stall.
+    // There is as much room left of the axis as right of it, for numbers as long; the axis ends at 1.06 of stall.
     const stallNm = (1.3 / 4.4) * (12.6 / (12 / 4.4 + 0.1));
     assert.ok(Math.abs(middle / stallNm - 0.53) < 0.02, String(middle / stallNm));
   });
