@@ -14,16 +14,14 @@ export interface TriedStep {
   lengthS: number;
   start: StepStart;
   end: StepStart;
-  before: Float64Array;
-  after: Float64Array;
+  before: number[];
+  after: number[];
   /** Side on which each watched value is taken to be at the start: a kink just landed on has changed it, however it is rounded. */
   readonly signs: number[];
   /** Room for a state and for watched values inside the step. */
   readonly inner: Float64Array;
-  readonly watched: Float64Array;
+  readonly watched: number[];
 }
-
-const INNER_SHARES = [0.25, 0.5, 0.75];
 
 /** Share of the step at which watch i first changes sign the way it is watched for; null: it does not. */
 export function firstCrossing(tried: TriedStep, i: number): number | null {
@@ -37,11 +35,33 @@ export function firstCrossing(tried: TriedStep, i: number): number | null {
   // There and back again: only what runs towards the border at first and away from it at the end can have crossed it.
   const returns = (start.rates[component] as number) * sign < 0 && (end.rates[component] as number) * sign > 0;
   if (!returns || (before[i] as number) * sign < 0) return null;
-  const offset = (after[i] as number) - (stepper.end[component] as number);
-  for (const share of INNER_SHARES) {
-    if ((stepper.componentAt(share, component) + offset) * sign < 0) return rootBefore(tried, i, share);
+  const turn = turningShare((share) => stepper.componentAt(share, component) * sign);
+  return watchedAt(tried, i, turn) * sign < 0 ? rootBefore(tried, i, turn) : null;
+}
+
+/** Share of the step at which a value that falls at first and rises at the end is least: golden section. */
+function turningShare(value: (share: number) => number): number {
+  const golden = (Math.sqrt(5) - 1) / 2;
+  let from = 0;
+  let to = 1;
+  let [left, right] = [1 - golden, golden];
+  let [valueLeft, valueRight] = [value(left), value(right)];
+  for (let k = 0; k < 40; k++) {
+    if (valueLeft < valueRight) {
+      to = right;
+      right = left;
+      valueRight = valueLeft;
+      left = to - golden * (to - from);
+      valueLeft = value(left);
+    } else {
+      from = left;
+      left = right;
+      valueLeft = valueRight;
+      right = from + golden * (to - from);
+      valueRight = value(right);
+    }
   }
-  return null;
+  return (from + to) / 2;
 }
 
 /** Root of watch i between the start and a share of the step: bisection sped up with the secant (Illinois) on the dense output. */

@@ -29,8 +29,9 @@ const DENSE_VECTORS = 3 + DENSE.length;
 
 /** DOP853; needs only the rates of the start. */
 export function createExplicitStepper({ size: n, coupled, evaluate }: Rates): Stepper {
-  const stages = new Float64Array(STAGES * n);
-  const dense = new Float64Array(DENSE_VECTORS * n);
+  // Plain arrays: typed ones of this size would be allocated outside the heap, at the cost of some steps.
+  const stages = new Array<number>(STAGES * n).fill(0);
+  const dense = new Array<number>(DENSE_VECTORS * n).fill(0);
   const begin = new Float64Array(n);
   const argument = new Float64Array(n);
   const rates = new Float64Array(n);
@@ -44,7 +45,7 @@ export function createExplicitStepper({ size: n, coupled, evaluate }: Rates): St
     beginS = timeS;
     lengthS = length;
     begin.set(state);
-    stages.set(start.rates);
+    for (let i = 0; i < n; i++) stages[i] = start.rates[i] as number;
     for (let stage = 1; stage < STEP_STAGES; stage++) takeStage(stage);
     advance(FLAT_ROWS[END_STAGE] as FlatRow, end, n);
   }

@@ -96,11 +96,11 @@ function createTried(system: OdeSystem, course: Course, timeS: number): TriedSte
     lengthS: 0,
     start: createStart(system.size, course.stiff),
     end: createStart(system.size, course.stiff),
-    before: new Float64Array(count),
-    after: new Float64Array(count),
+    before: new Array<number>(count).fill(0),
+    after: new Array<number>(count).fill(0),
     signs: [],
     inner: new Float64Array(system.size),
-    watched: new Float64Array(count),
+    watched: new Array<number>(count).fill(0),
   };
 }
 

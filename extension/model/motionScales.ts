@@ -16,7 +16,9 @@ export interface MotionScales {
 
 /** Error of a step as a share, so that over a whole course 1e-8 is kept; the explicit method stays further below what it is allowed. */
 export const STIFF_TOLERANCE = 2e-10;
-export const EXPLICIT_TOLERANCE = 1e-9;
+export const EXPLICIT_TOLERANCE = 1e-8;
+/** The same where corners of a curve restart it again and again. */
+export const CORNERED_TOLERANCE = 1e-9;
 /** Past this a course is given up. */
 export const MOST_STEPS = 20_000;
 /** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */
@@ -33,8 +35,9 @@ export function scalesOf(plant: Plant): MotionScales {
 
 /** True where inertia does not show: there is none, or its time constant is below 1e-5 of the travel at no-load speed. */
 export function isFollowing(plant: Plant, scales: MotionScales): boolean {
-  const positions = [plant.load.startRad, ...plant.load.corners, plant.load.endRad];
-  const inertia = Math.max(...positions.map((position) => turningInertia(plant, position)));
+  const { load } = plant;
+  let inertia = Math.max(turningInertia(plant, load.startRad), turningInertia(plant, load.endRad));
+  for (const corner of load.corners) inertia = Math.max(inertia, turningInertia(plant, corner));
   if (inertia === 0) return true;
   if (plant.load.endless) return false;
   return mechanicalTimeConstant(plant, inertia) < FOLLOWING_SHARE * scales.timeS;

@@ -76,7 +76,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     }
   }
 
-  function watchInstant(state: Float64Array, now: Instant, watched: Float64Array): void {
+  function watchInstant(state: Float64Array, now: Instant, watched: number[]): void {
     for (let i = 0; i < values.length; i++) watched[i] = (values[i] as (typeof values)[number])(state, now);
   }
 

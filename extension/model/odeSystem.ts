@@ -17,9 +17,9 @@ export interface OdeSystem extends Rates {
   readonly scale: Float64Array;
   readonly watches: readonly Watch[];
   /** Everything at a point where a step may start: rates and watched values; their derivatives too for a stiff method. */
-  readonly prepare: (timeS: number, state: Float64Array, start: StepStart, watched: Float64Array, stiff: boolean) => void;
+  readonly prepare: (timeS: number, state: Float64Array, start: StepStart, watched: number[], stiff: boolean) => void;
   /** The watched values at a point. */
-  readonly watch: (timeS: number, state: Float64Array, watched: Float64Array) => void;
+  readonly watch: (timeS: number, state: Float64Array, watched: number[]) => void;
 }
 
 /** Arrays for a step's start; derivatives only where a stiff method needs them. */

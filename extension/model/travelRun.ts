@@ -5,7 +5,15 @@
  */
 import { type Course, integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
-import { EXPLICIT_TOLERANCE, isFollowing, MOST_STEPS, type MotionScales, STIFF_TOLERANCE, scalesOf } from "./motionScales.js";
+import {
+  CORNERED_TOLERANCE,
+  EXPLICIT_TOLERANCE,
+  isFollowing,
+  MOST_STEPS,
+  type MotionScales,
+  STIFF_TOLERANCE,
+  scalesOf,
+} from "./motionScales.js";
 import { startState } from "./motionState.js";
 import { type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observer } from "./observer.js";
@@ -28,6 +36,7 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   const targets = plant.load.endless ? [goal.target] : [...cornersAhead(plant), goal.target];
   const fastest = fastestRate(moving, state);
   const stiff = kind === "following" || fastest * scales.timeS > STIFF_TIME_CONSTANTS;
+  const method = methodFor(plant, stiff);
   let timeS = 0;
   let stepS = (stiff ? 0.02 : 0.1) * Math.min(1 / fastest, scales.timeS);
   observer.look(moving, timeS, state);
@@ -41,7 +50,7 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   moving.setTarget(targets[0] as number);
   for (let phase = 0; phase < MOST_PHASES; phase++) {
     const endS = timeS < plant.rampS ? plant.rampS : Number.POSITIVE_INFINITY;
-    const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, stiff));
+    const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, method));
     timeS = arrival.timeS;
     stepS = arrival.nextStepS;
     if (!arrival.finished) break;
@@ -70,7 +79,7 @@ function awaitStart(
   if (!(plant.rampS > 0)) return { timeS: 0, started: false, finished: true };
   const mode: Mode = { kind: "blocked", startsAs };
   const blocked = motionSystem(plant, mode, scales);
-  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, true));
+  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, STIFF));
   return {
     timeS: arrival.timeS,
     started: arrival.stop !== null && arrival.stop === blocked.index.breakaway,
@@ -78,15 +87,17 @@ function awaitStart(
   };
 }
 
-function course(system: MotionSystem, observer: Observer, endS: number, firstStepS: number, stiff: boolean): Course {
-  return {
-    tolerance: stiff ? STIFF_TOLERANCE : EXPLICIT_TOLERANCE,
-    endS,
-    firstStepS,
-    mostSteps: MOST_STEPS,
-    stiff,
-    ...observer.listen(system),
-  };
+function course(system: MotionSystem, observer: Observer, endS: number, firstStepS: number, method: Method): Course {
+  const { onStep, onNote } = observer.listen(system);
+  return { stiff: method.stiff, tolerance: method.tolerance, endS, firstStepS, mostSteps: MOST_STEPS, onStep, onNote };
+}
+
+type Method = Pick<Course, "stiff" | "tolerance">;
+const STIFF: Method = { stiff: true, tolerance: STIFF_TOLERANCE };
+
+function methodFor(plant: Plant, stiff: boolean): Method {
+  if (stiff) return STIFF;
+  return { stiff, tolerance: plant.load.corners.length > 0 ? CORNERED_TOLERANCE : EXPLICIT_TOLERANCE };
 }
 
 /** Looked at a moment after the start: a command that grows from 0 may move a load without friction at once. */
@@ -99,7 +110,7 @@ function starts(plant: Plant, system: MotionSystem, state: Float64Array): boolea
 function fastestRate(system: MotionSystem, state: Float64Array): number {
   const { size } = system;
   const start = createStart(size, true);
-  system.prepare(0, state, start, new Float64Array(system.watches.length), true);
+  system.prepare(0, state, start, [], true);
   let fastest = Math.sqrt(Math.abs(start.jacobian[size] as number));
   for (let i = 0; i < size; i++) fastest = Math.max(fastest, Math.abs(start.jacobian[i * size + i] as number));
   return Math.min(Math.max(fastest, Number.MIN_VALUE), Number.MAX_VALUE);
