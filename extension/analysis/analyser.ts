@@ -61,6 +61,7 @@ export function createAnalyser(typescript: TypeScript): Analyser {
         files: sorted,
         wanted: [...wanted].sort(),
         snapshot,
+        toothCounts: settings.toothCounts,
       };
     },
   };

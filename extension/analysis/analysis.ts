@@ -61,4 +61,6 @@ export interface Analysis {
   /** Files to load before the result is whole; the host loads them and runs again. */
   readonly wanted: readonly string[];
   readonly snapshot: Snapshot;
+  /** Tooth counts in stock by file, where the project's settings name them. */
+  readonly toothCounts: ReadonlyMap<string, readonly number[]>;
 }

@@ -6,11 +6,15 @@
 import { ARGUMENT_NAMES, DEFINITIONS } from "../declarations/table.js";
 import type { DefinitionCall, Value } from "../evaluator/value.js";
 
-/** A written number or quantity among the arguments of a call, or a whole `between` call. */
-export interface Leaf {
+/** A place among the arguments of a call; the last key may be a field that is not written, or "+" for the end of a list. */
+export interface Place {
   readonly call: DefinitionCall;
   /** From the argument tuple inwards. */
   readonly path: readonly (string | number)[];
+}
+
+/** A written number or quantity among the arguments of a call, or a whole `between` call. */
+export interface Leaf extends Place {
   readonly plain: string | number;
   /** From the outermost declaration inwards, such as "motor.stall.torque" or "stages[0].driver". */
   readonly label: string;
@@ -18,7 +22,7 @@ export interface Leaf {
   readonly range?: readonly [low: string | number, high: string | number];
 }
 
-export type Replacements = ReadonlyMap<Leaf, string | number>;
+export type Replacements = ReadonlyMap<Place, unknown>;
 
 /** Every leaf that `call` rests on, through all calls that it uses, each call once. */
 export function leavesBelow(call: DefinitionCall): Leaf[] {
@@ -55,9 +59,9 @@ function join(label: string, key: string | undefined): string {
 
 /** What `call` builds with the replacements; `undefined` where a definition refuses them. */
 export function rebuild(call: DefinitionCall, replacements: Replacements): object | undefined {
-  const byCall = new Map<DefinitionCall, Map<string, string | number>>();
+  const byCall = new Map<DefinitionCall, Map<string, unknown>>();
   for (const [{ call: owner, path }, plain] of replacements) {
-    const places = byCall.get(owner) ?? new Map<string, string | number>();
+    const places = byCall.get(owner) ?? new Map<string, unknown>();
     byCall.set(owner, places.set(JSON.stringify(path), plain));
   }
   const made = new Map<DefinitionCall, object | undefined>();
@@ -84,18 +88,36 @@ export function rebuild(call: DefinitionCall, replacements: Replacements): objec
 function plainOf(
   value: Value,
   path: readonly (string | number)[],
-  places: ReadonlyMap<string, string | number> | undefined,
+  places: ReadonlyMap<string, unknown> | undefined,
   build: (call: DefinitionCall) => object | undefined,
 ): unknown {
-  const replaced = places?.get(JSON.stringify(path));
-  if (replaced !== undefined) return replaced;
+  const key = JSON.stringify(path);
+  if (places?.has(key)) return places.get(key);
   if (!value.known) return undefined;
   const { data } = value;
   if (data.kind === "primitive") return data.value;
   if (data.kind === "built") return build(data.call);
-  if (data.kind === "array") return data.items.map((item, index) => plainOf(item, [...path, index], places, build));
+  if (data.kind === "array") {
+    const items = data.items.map((item, index) => plainOf(item, [...path, index], places, build));
+    const added = JSON.stringify([...path, "+"]);
+    return places?.has(added) ? [...items, places.get(added)] : items;
+  }
   if (data.kind !== "object") return undefined;
-  return Object.fromEntries([...data.entries].map(([key, item]) => [key, plainOf(item, [...path, key], places, build)]));
+  const written = [...data.entries].map(([name, item]) => [name, plainOf(item, [...path, name], places, build)] as const);
+  return Object.fromEntries([...written, ...addedFields(data.entries, path, places)]);
+}
+
+function addedFields(
+  entries: ReadonlyMap<string, Value>,
+  path: readonly (string | number)[],
+  places: ReadonlyMap<string, unknown> | undefined,
+): (readonly [string, unknown])[] {
+  return [...(places ?? [])].flatMap(([key, plain]) => {
+    const at: (string | number)[] = JSON.parse(key);
+    const name = at.at(-1);
+    const isHere = at.length === path.length + 1 && path.every((step, index) => step === at[index]);
+    return isHere && typeof name === "string" && !entries.has(name) ? [[name, plain] as const] : [];
+  });
 }
 
 function usedIn(value: Value): DefinitionCall[] {

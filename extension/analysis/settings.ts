@@ -33,6 +33,7 @@ export type Settings = v.InferOutput<typeof settingsSchema>;
 export interface ReadSettings {
   readonly findings: readonly Finding[];
   readonly wanted: readonly string[];
+  readonly toothCounts: ReadonlyMap<string, readonly number[]>;
   /** Findings with the levels of the settings nearest to each; those turned off are left out. */
   applyLevels(findings: readonly Finding[]): Finding[];
 }
@@ -64,6 +65,11 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
     return {
       findings: [...findings.values()],
       wanted: [...wanted],
+      toothCounts: new Map(
+        [...nearestOf].flatMap(([file, { toothCounts }]) =>
+          toothCounts ? [[file, [...toothCounts].sort((a, b) => a - b)] as const] : [],
+        ),
+      ),
       applyLevels: (found) =>
         found.flatMap((finding) => {
           const wished = nearestOf.get(finding.at.file)?.levels?.[finding.rule as RuleId];

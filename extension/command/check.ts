@@ -3,9 +3,10 @@ import { statSync } from "node:fs";
 import path from "node:path";
 import { createAnalyser } from "../analysis/analyser.js";
 import type { Analysis } from "../analysis/analysis.js";
-import { loadParser } from "../analysis/parser.js";
+import { loadParser, type Parser } from "../analysis/parser.js";
+import { type Proposal, proposalsFor } from "../analysis/propose.js";
 import { sensitivitiesOf } from "../analysis/sensitivity.js";
-import { makeReport } from "../report/report.js";
+import { type Extras, makeReport } from "../report/report.js";
 import { writeText } from "../report/text.js";
 import type { CommandLine, FailOn } from "./commandLine.js";
 import { createDiskSnapshot, findSources, toName } from "./disk.js";
@@ -16,27 +17,39 @@ export interface CheckResult {
   readonly status: 0 | 1 | 2;
 }
 
-export async function check({ path: given, format, failOn }: Extract<CommandLine, { kind: "check" }>): Promise<CheckResult> {
+export async function check({
+  path: given,
+  format,
+  failOn,
+  propose,
+}: Extract<CommandLine, { kind: "check" }>): Promise<CheckResult> {
   const target = path.resolve(given);
   const stats = statSync(target, { throwIfNoEntry: false });
   if (stats === undefined) return { output: "", complaint: `there is no "${given}"`, status: 2 };
   const snapshot = createDiskSnapshot();
   const roots = stats.isDirectory() ? findSources(target, snapshot) : [toName(target)];
   if (roots.length === 0) return { output: "", complaint: `no file in "${given}" mentions "loadmark"`, status: 2 };
-  const analysis = createAnalyser(await loadParser()).analyse(roots, snapshot);
+  const parser = await loadParser();
+  const analysis = createAnalyser(parser).analyse(roots, snapshot);
   // Names count from the checked folder, so that the report does not depend on where the command was started; a
   // terminal can open only what counts from the working directory.
   const base = format === "json" ? (stats.isDirectory() ? target : path.dirname(target)) : process.cwd();
   const nameOf = (file: string) => path.relative(base, file).split(path.sep).join("/");
   const output =
     format === "json"
-      ? `${JSON.stringify(
-          makeReport(analysis, nameOf, (one) => sensitivitiesOf(analysis, one)),
-          null,
-          2,
-        )}\n`
-      : writeText(analysis, nameOf);
+      ? `${JSON.stringify(makeReport(analysis, nameOf, extrasOf(analysis, parser)), null, 2)}\n`
+      : writeText(analysis, nameOf, propose ? proposalsOf(analysis, parser) : []);
   return { output, status: fails(analysis, failOn) ? 1 : 0 };
+}
+
+function extrasOf(analysis: Analysis, parser: Parser): Extras {
+  return { sensitivityOf: (mechanism) => sensitivitiesOf(analysis, mechanism), proposals: proposalsOf(analysis, parser) };
+}
+
+/** An analyser of its own tries the changed texts. */
+function proposalsOf(analysis: Analysis, parser: Parser): Proposal[] {
+  const { analyse } = createAnalyser(parser);
+  return analysis.findings.flatMap((finding) => proposalsFor(analysis, finding, analyse));
 }
 
 function fails(analysis: Analysis, failOn: FailOn): boolean {

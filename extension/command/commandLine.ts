@@ -2,7 +2,7 @@
 import { parseArgs } from "node:util";
 
 export type CommandLine =
-  | { readonly kind: "check"; readonly path: string; readonly format: Format; readonly failOn: FailOn }
+  | { readonly kind: "check"; readonly path: string; readonly format: Format; readonly failOn: FailOn; readonly propose: boolean }
   | { readonly kind: "help" }
   | { readonly kind: "version" }
   | { readonly kind: "refused"; readonly message: string };
@@ -17,6 +17,7 @@ export const USAGE = `usage: loadmark check <file or folder> [options]
 
   --format text|json                           text for people (the default), json for programs
   --fail-on error|warning|information|never    exit with 1 from this level up (default: error)
+  --propose                                    with text, also what would clear each finding
   --help, --version
 
 Exit status: 0 nothing at or above --fail-on, 1 findings, 2 the check could not run.
@@ -40,7 +41,7 @@ export function parseCommandLine(words: readonly string[]): CommandLine {
   const failOn = values["fail-on"] ?? "error";
   if (!FORMATS.includes(format)) return refuse(`"${format}" is not a format: ${FORMATS.join(", ")}`);
   if (!FAIL_ON.includes(failOn)) return refuse(`"${failOn}" is not a level: ${FAIL_ON.join(", ")}`);
-  return { kind: "check", path, format: format as Format, failOn: failOn as FailOn };
+  return { kind: "check", path, format: format as Format, failOn: failOn as FailOn, propose: values.propose ?? false };
 }
 
 function parseWords(words: readonly string[]) {
@@ -50,6 +51,7 @@ function parseWords(words: readonly string[]) {
     options: {
       format: { type: "string" },
       "fail-on": { type: "string" },
+      propose: { type: "boolean" },
       help: { type: "boolean", short: "h" },
       version: { type: "boolean" },
     },

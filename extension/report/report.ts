@@ -5,6 +5,7 @@
  * that the last bit of a platform's arithmetic never shows.
  */
 import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { Proposal } from "../analysis/propose.js";
 import type { Sensitivity } from "../analysis/sensitivity.js";
 import { createLineFinder, type Place } from "./lines.js";
 
@@ -13,6 +14,18 @@ export interface Report {
   readonly version: 1;
   readonly mechanisms: readonly ReportedMechanism[];
   readonly findings: readonly ReportedFinding[];
+  readonly proposals: readonly ReportedProposal[];
+}
+
+/** `edits` is empty where nothing in stock helps; the summary then tells the nearest miss. */
+export interface ReportedProposal {
+  readonly mechanism: string;
+  readonly rule: string;
+  readonly summary: string;
+  readonly predicted: Proposal["predicted"];
+  /** Other mechanisms whose numbers change with it. */
+  readonly touches: Proposal["touches"];
+  readonly edits: readonly (ReportedRange & { readonly newText: string })[];
 }
 
 export interface ReportedRange {
@@ -44,15 +57,14 @@ export interface ReportedMechanism extends NumbersOrNull {
   readonly notChecked: readonly string[];
 }
 
-/**
- * `nameOf` turns a file of the snapshot into the name that the report carries; `sensitivityOf` computes what is computed only when
- * asked for.
- */
-export function makeReport(
-  analysis: Analysis,
-  nameOf: (file: string) => string,
-  sensitivityOf: (mechanism: AnalysedMechanism) => readonly Sensitivity[],
-): Report {
+/** What is computed only when it is asked for. */
+export interface Extras {
+  sensitivityOf(mechanism: AnalysedMechanism): readonly Sensitivity[];
+  readonly proposals: readonly Proposal[];
+}
+
+/** `nameOf` turns a file of the snapshot into the name that the report carries. */
+export function makeReport(analysis: Analysis, nameOf: (file: string) => string, { sensitivityOf, proposals }: Extras): Report {
   const places = createPlaces(analysis);
   return {
     format: "loadmark-report",
@@ -70,29 +82,36 @@ export function makeReport(
       notChecked: mechanism.notChecked,
     })),
     findings: reportFindings(analysis, nameOf),
+    proposals: proposals.map(({ mechanism, rule, summary, predicted, touches, edits }) => ({
+      mechanism,
+      rule,
+      summary,
+      predicted: roundNumbers(predicted),
+      touches: touches.map((one) => ({ mechanism: one.mechanism, predicted: roundNumbers(one.predicted) })),
+      edits: edits.map((edit) => ({ ...rangeOf(places, nameOf, edit), newText: edit.newText })),
+    })),
   };
 }
 
 /** The findings alone, for reports that show no tables of numbers. */
 export function reportFindings(analysis: Analysis, nameOf: (file: string) => string): ReportedFinding[] {
-  const { placeOf } = createPlaces(analysis);
-  const rangeOf = ({ file, start, end }: Finding["at"]): ReportedRange => {
-    const from = placeOf(file, start);
-    const to = placeOf(file, end);
-    return { file: nameOf(file), line: from.line, column: from.column, endLine: to.line, endColumn: to.column };
-  };
+  const places = createPlaces(analysis);
   return analysis.findings.map(({ rule, level, mechanism, message, at, related }) => ({
     rule,
     level,
     mechanism,
     message,
-    ...rangeOf(at),
-    related: related.map((one) => ({ message: one.message, ...rangeOf(one.at) })),
+    ...rangeOf(places, nameOf, at),
+    related: related.map((one) => ({ message: one.message, ...rangeOf(places, nameOf, one.at) })),
   }));
 }
 
+interface Places {
+  placeOf(file: string, offset: number): Place;
+}
+
 /** Finds lines and columns in the files of an analysis; each file's lines are found once. */
-function createPlaces({ snapshot }: Analysis): { readonly placeOf: (file: string, offset: number) => Place } {
+function createPlaces({ snapshot }: Analysis): Places {
   const finders = new Map<string, (offset: number) => Place>();
   return {
     placeOf(file, offset) {
@@ -101,6 +120,12 @@ function createPlaces({ snapshot }: Analysis): { readonly placeOf: (file: string
       return finder(offset);
     },
   };
+}
+
+function rangeOf(places: Places, nameOf: (file: string) => string, { file, start, end }: Finding["at"]): ReportedRange {
+  const from = places.placeOf(file, start);
+  const to = places.placeOf(file, end);
+  return { file: nameOf(file), line: from.line, column: from.column, endLine: to.line, endColumn: to.column };
 }
 
 const NO_NUMBERS: NumbersOrNull = {

@@ -1,15 +1,16 @@
 /** The report for a terminal: findings first, then a table per mechanism, then the cautions. */
 import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { Proposal } from "../analysis/propose.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
 import { toInertText } from "./inert.js";
 import { type ReportedFinding, reportFindings } from "./report.js";
 
 /** `nameOf` as in `reportFindings`. Lines end in a line feed; the text holds no control characters from the source. */
-export function writeText(analysis: Analysis, nameOf: (file: string) => string): string {
+export function writeText(analysis: Analysis, nameOf: (file: string) => string, proposals: readonly Proposal[] = []): string {
   const findings = reportFindings(analysis, nameOf);
   const blocks = [
-    ...findings.map(writeFinding),
+    ...findings.map((finding) => writeFinding(finding, proposals)),
     ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf)),
     writeSummary(findings, analysis.mechanisms.length),
     CAUTIONS.terminal,
@@ -19,9 +20,16 @@ export function writeText(analysis: Analysis, nameOf: (file: string) => string):
 
 type Numbers = NonNullable<AnalysedMechanism["numbers"]>;
 
-function writeFinding({ file, line, column, level, rule, message, related }: ReportedFinding): string {
+function writeFinding(
+  { file, line, column, level, rule, mechanism, message, related }: ReportedFinding,
+  proposals: readonly Proposal[],
+): string {
   const where = related.map((one) => `\n    ${one.file}:${one.line}:${one.column}  ${toInertText(one.message)}`).join("");
-  return `${file}:${line}:${column}  ${level}  ${rule}\n    ${toInertText(message)}${where}`;
+  const ways = proposals
+    .filter((one) => one.rule === rule && one.mechanism === mechanism)
+    .map(({ summary }) => `\n    way out: ${toInertText(summary)}`)
+    .join("");
+  return `${file}:${line}:${column}  ${level}  ${rule}\n    ${toInertText(message)}${where}${ways}`;
 }
 
 function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string): string {

@@ -14,7 +14,8 @@ const TABLE: Readonly<Record<string, readonly string[]>> = {
   "extension/declarations": ["model", "units", "valibot"],
   "extension/evaluator": ["typescript"],
   "extension/rules": ["model", "units", "types:declarations", "types:evaluator"],
-  "extension/analysis": ["units", "model", "declarations", "evaluator", "rules", "valibot"],
+  "extension/proposals": ["model", "units", "types:declarations", "types:evaluator"],
+  "extension/analysis": ["units", "model", "declarations", "evaluator", "rules", "proposals", "valibot"],
   "extension/report": ["units", "types:analysis"],
   "extension/features": ["units", "model", "declarations", "evaluator", "rules", "analysis", "report"],
   "extension/protocol": [

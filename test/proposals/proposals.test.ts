@@ -1,0 +1,145 @@
+/** Proposals: each one, applied to the texts and checked again, clears its finding and brings nothing new at that level. */
+import { assert, constantFrom, integer, property, record } from "fast-check";
+import ts from "typescript";
+import { describe, expect, it } from "vitest";
+import { createAnalyser } from "../../extension/analysis/analyser.js";
+import { type Proposal, proposalsFor } from "../../extension/analysis/propose.js";
+import { withEdits } from "../../extension/analysis/writeChange.js";
+import { analyseFixture, PRELUDE } from "../support/checkFindings.js";
+
+const HEAVY = (stages: string, extra = "") => `${PRELUDE}
+export const hoist = mechanism("hoist", {
+  motor: twelveVolt,
+  stages: ${stages},
+  load: lift({ mass: "10 kg", drumRadius: "50 mm", travel: "1 m" }),${extra}
+});`;
+
+/** Proposals for the first finding of a rule. */
+function proposalsIn(
+  text: string,
+  rule: string,
+): { readonly proposals: readonly Proposal[]; readonly apply: (proposal: Proposal) => string[] } {
+  const analysis = analyseFixture(text);
+  const finding = analysis.findings.find((one) => one.rule === rule);
+  if (finding === undefined) throw new Error(`no ${rule} here: ${analysis.findings.map((one) => one.rule).join(", ")}`);
+  const { analyse } = createAnalyser(ts);
+  return {
+    proposals: proposalsFor(analysis, finding, analyse),
+    apply: ({ edits }) => {
+      const roots = [...analysis.files.keys()];
+      const after = createAnalyser(ts).analyse(roots, withEdits(analysis.snapshot, edits));
+      return after.findings.filter(({ level }) => level !== "information").map((one) => one.rule);
+    },
+  };
+}
+
+describe("proposals", () => {
+  // 10 kg on 50 mm is 4.903 N·m; through a loss-free spur stage half of 2 N·m needs a ratio of at least 4.903: 16 → 80 is the first in stock.
+  it("take the smallest change of one gear that is enough", () => {
+    const { proposals, apply } = proposalsIn(HEAVY("[spur(16, 60, { efficiency: 1 })]"), "past-peak");
+    expect(proposals[0]?.summary).toMatch(
+      /^Stage 1 with (12 and 60|16 and 80) teeth: ratio 5 instead of 3.75, 49 % of stall instead of 65 %/,
+    );
+    expect(proposals[0]?.edits).toHaveLength(1);
+    expect(proposals.map(apply)).toEqual(proposals.map(() => []));
+    expect(proposals[0]?.predicted.stallShare).toBeCloseTo(4.903325 / 5 / 2, 9);
+  });
+
+  it("offer more motors beside it", () => {
+    const { proposals } = proposalsIn(HEAVY("[spur(16, 60, { efficiency: 1 })]"), "past-peak");
+    expect(proposals.map(({ edits }) => edits.map(({ newText }) => newText.trim()))).toContainEqual(["motorCount: 2,"]);
+  });
+
+  it("write where the number is declared, and say whom else that touches", () => {
+    const { proposals, apply } = proposalsIn(
+      `//- gears.ts
+export const DRIVER = 16;
+export const WHEEL = 60;
+//- one.ts
+import { DRIVER, WHEEL } from "./gears.js";
+${HEAVY("[spur(DRIVER, WHEEL, { efficiency: 1 })]")}
+//- two.ts
+import { WHEEL } from "./gears.js";
+${PRELUDE}export const fan = mechanism("fan", { motor: twelveVolt, stages: [spur(30, WHEEL)], load: roller({ torque: "0.2 N*m" }) });`,
+      "past-peak",
+    );
+    const shared = proposals.find(({ edits }) => edits.some(({ newText }) => newText === "80"));
+    const own = proposals.find(({ edits }) => edits.some(({ newText }) => newText === "12"));
+    expect((shared ?? own)?.edits[0]?.file).toBe("/robot/gears.ts");
+    if (shared) expect(shared.touches.map(({ mechanism }) => mechanism)).toEqual(["fan"]);
+    expect(proposals.map(apply)).toEqual(proposals.map(() => []));
+  });
+
+  it("add a stage where no pair in stock is enough, with its import", () => {
+    const text = HEAVY("[spur(10, 12)]").replace("spur, ", "").replace("spur(10, 12)", "chain(10, 12)");
+    const { proposals, apply } = proposalsIn(text, "stalls");
+    expect(proposals.length).toBeGreaterThan(0);
+    expect(proposals.map(apply)).toEqual(proposals.map(() => []));
+    const direct = proposalsIn(HEAVY("[]"), "stalls");
+    const added = direct.proposals.find(({ summary }) => summary.startsWith("One more stage"));
+    expect(added?.edits.map(({ newText }) => newText)).toContainEqual(expect.stringMatching(/^spur\(\d+, \d+\)$/));
+    expect(direct.proposals.map(direct.apply)).toEqual(direct.proposals.map(() => []));
+  });
+
+  it("never touch the protection", () => {
+    const { proposals, apply } = proposalsIn(
+      HEAVY("[spur(16, 96)]", `\n  protect: breaker({ holdCurrent: "0.8 A", trips: { at: "1.6 A", after: "1 s" } }),`),
+      "trips",
+    );
+    expect(proposals.length).toBeGreaterThan(0);
+    for (const { edits } of proposals) for (const { newText } of edits) expect(newText).not.toMatch(/breaker|fuse|ptc/);
+    expect(proposals.map(apply)).toEqual(proposals.map(() => []));
+  });
+
+  it("tell the nearest miss where nothing in stock helps", () => {
+    const { proposals } = proposalsIn(
+      `//- loadmark.json
+{ "toothCounts": [16, 18, 20] }
+//- robot.ts
+${HEAVY("[spur(16, 18)]").replace('"10 kg"', '"90 kg"')}`,
+      "stalls",
+    );
+    expect(proposals).toHaveLength(1);
+    expect(proposals[0]?.edits).toEqual([]);
+    expect(proposals[0]?.summary).toMatch(/^Nothing in stock clears it\. Nearest: /);
+  });
+
+  it("clear their finding on random overloaded hoists, and bring nothing new", () => {
+    const hoist = record({
+      mass: integer({ min: 4, max: 40 }),
+      radius: integer({ min: 15, max: 60 }),
+      driver: constantFrom(12, 16, 20, 24),
+      driven: constantFrom(16, 24, 36, 48),
+      within: integer({ min: 1, max: 20 }),
+    });
+    let tried = 0;
+    assert(
+      property(hoist, ({ mass, radius, driver, driven, within }) => {
+        const text = `${PRELUDE}
+export const hoist = mechanism("hoist", {
+  motor: twelveVolt,
+  stages: [spur(${driver}, ${driven})],
+  load: lift({ mass: "${mass} kg", drumRadius: "${radius} mm", travel: "0.6 m" }),
+  within: "${within} s",
+});`;
+        const analysis = analyseFixture(text);
+        const before = analysis.findings.map(({ rule }) => rule);
+        for (const finding of analysis.findings.filter(({ level }) => level !== "information")) {
+          for (const { edits } of proposalsFor(analysis, finding, createAnalyser(ts).analyse).filter(
+            (one) => one.edits.length > 0,
+          )) {
+            const after = createAnalyser(ts).analyse(["/robot/robot.ts"], withEdits(analysis.snapshot, edits)).findings;
+            expect(after.map(({ rule }) => rule)).not.toContain(finding.rule);
+            const newcomers = after.filter(
+              ({ rule, level }) => !before.includes(rule) && (level === "error" || level === finding.level),
+            );
+            expect(newcomers).toEqual([]);
+            tried += 1;
+          }
+        }
+      }),
+      { seed: 7, numRuns: 30 },
+    );
+    expect(tried).toBeGreaterThan(10);
+  }, 120_000);
+});
