@@ -7,5 +7,8 @@ export default defineConfig({
     include: ["**/*.test.ts"],
     exclude: ["**/node_modules/**", "workbench/**"],
     passWithNoTests: false,
+    // A hang must end; a busy machine must not fail.
+    testTimeout: 120_000,
+    hookTimeout: 120_000,
   },
 });

@@ -92,8 +92,9 @@ function travelRows({ travel }: Numbers): Row[] {
   ];
 }
 
-function holdRows({ hold }: Numbers): Row[] {
-  if (hold === null || hold.motorCurrentA === 0) return [];
+/** What turns on and on is not held. */
+function holdRows({ hold, hardest }: Numbers): Row[] {
+  if (hold === null || hold.motorCurrentA === 0 || hardest.position === null) return [];
   return [
     [
       "held",
