@@ -30,6 +30,9 @@ export function heatNetworkOf(motor: MotorConstants): HeatNetwork | null {
   };
 }
 
+/** Above this no motor is one any more, °C: whatever the heat does then, it has run away. */
+export const RUNAWAY_C = 2000;
+
 /** Where everything starts, °C. */
 export function ambientOf({ motor }: Pick<Drive, "motor">): number {
   return motor.thermal?.ambientC ?? SHEET_TEMPERATURE_C;
@@ -46,14 +49,47 @@ export function heatTimeConstants(network: HeatNetwork): readonly [number, numbe
   return [1 / fast, fast / (inner * outer)];
 }
 
+/** Copper heat of a steady current, W: at ambient, and what it grows by for each kelvin of the winding. */
+export interface GrowingHeat {
+  readonly atAmbientW: number;
+  readonly perKW: number;
+}
+
+/**
+ * Winding and housing temperature a time after a steady current began, from ambient, °C.
+ *
+ * The two nodes' equations stay linear with copper's straight line, x″ + s·x′ + p·x = const; both roots are real, since each node
+ * heats the other. Overflows to Infinity where the heat runs away for long.
+ */
+export function heatingCurve(
+  network: HeatNetwork,
+  heat: GrowingHeat,
+  timeS: number,
+): { readonly windingC: number; readonly housingC: number } {
+  const inner = 1 / network.windingToHousingKPerW;
+  const outer = 1 / network.housingToAmbientKPerW;
+  // x′ = A·x + b for the rises of winding and housing.
+  const a = (heat.perKW - inner) / network.windingJPerK;
+  const b = inner / network.windingJPerK;
+  const c = inner / network.housingJPerK;
+  const d = -(inner + outer) / network.housingJPerK;
+  const drive = heat.atAmbientW / network.windingJPerK;
+  const root = Math.sqrt((a - d) ** 2 + 4 * b * c);
+  const fast = (a + d - root) / 2;
+  const slow = fast + root;
+  // e^(At) split into its two modes; ∫ of each over the time so far drives both rises.
+  const grown = (rate: number): number => (rate === 0 ? timeS : Math.expm1(rate * timeS) / rate);
+  const [fastPart, slowPart] = [grown(fast), grown(slow)];
+  const winding = (drive * (slowPart * (a - fast) - fastPart * (a - slow))) / root;
+  const housing = (drive * c * (slowPart - fastPart)) / root;
+  return { windingC: network.ambientC + winding, housingC: network.ambientC + housing };
+}
+
 export interface SteadyHeat {
   readonly windingC: number;
   readonly housingC: number;
   readonly copperW: number;
 }
-
-/** Above this no motor is one any more: the heat has run away. */
-export const RUNAWAY_C = 2000;
 
 /**
  * Steady temperatures under copper heat that grows with the winding's temperature; null: none exists, the heat runs away.
@@ -67,11 +103,10 @@ export function steadyHeat(network: HeatNetwork, copperW: (windingC: number) => 
   let windingC = network.ambientC;
   for (let k = 0; k < 100; k++) {
     const value = excess(windingC);
-    const delta = 1e-4;
+    const delta = 1e-5 * (Math.abs(windingC) + 273);
     const slope = (excess(windingC + delta) - excess(windingC - delta)) / (2 * delta);
     if (slope >= 0 || !Number.isFinite(value)) return null;
     const next = windingC - value / slope;
-    if (next > RUNAWAY_C) return null;
     if (Math.abs(next - windingC) <= 1e-10 * Math.max(1, Math.abs(next))) {
       const heat = copperW(next);
       return { windingC: next, housingC: network.ambientC + heat * network.housingToAmbientKPerW, copperW: heat };

@@ -1,10 +1,14 @@
 /** All topics: their rows and the model's answers to them. */
+import { foundAnswers } from "./answers/found.js";
 import { motorAnswers } from "./answers/motor.js";
 import { temperatureAnswers } from "./answers/temperature.js";
+import { timeAnswers } from "./answers/time.js";
 import { transmissionAnswers } from "./answers/transmission.js";
 import type { Answers, ReferenceRow } from "./row.js";
+import { foundRows } from "./rows/found.js";
 import { motorRows } from "./rows/motor.js";
 import { temperatureRows } from "./rows/temperature.js";
+import { timeRows } from "./rows/time.js";
 import { transmissionRows } from "./rows/transmission.js";
 
 export interface Topic {
@@ -17,6 +21,8 @@ export const topics: readonly Topic[] = [
   { name: "motor", rows: motorRows, answers: motorAnswers },
   { name: "temperature", rows: temperatureRows, answers: temperatureAnswers },
   { name: "transmission", rows: transmissionRows, answers: transmissionAnswers },
+  { name: "time", rows: timeRows, answers: timeAnswers },
+  { name: "found", rows: foundRows, answers: foundAnswers },
 ];
 
 /** Error of an answer as a share of what its row allows: at most 1 passes. */
