@@ -128,6 +128,8 @@ describe("the chart panel", () => {
     await expectAsLeft(editor);
     await editor.page.reload();
     await editor.waitUntilReady();
+    // Which tab was in front the editor keeps a little later than what is in them.
+    await editor.page.locator(PANEL_TAB).click();
     await expectAsLeft(editor);
   });
 
