@@ -13,11 +13,11 @@ import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
 import type { AnalysedMechanism, AnalysedRobot, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
+import { comesFrom } from "./comesFrom.js";
 import { type Corner, cornersOf } from "./corners.js";
 import type { Declared } from "./declared.js";
 import { robotOf, supplyCallOf } from "./lentSupply.js";
 import { createMemory } from "./memory.js";
-import { spanAt } from "./places.js";
 
 export interface Judged {
   readonly mechanisms: readonly AnalysedMechanism[];
@@ -131,11 +131,7 @@ function toFinding(
   call: DefinitionCall,
   mechanism: string | null,
 ): Finding {
-  const argument = call.args.at(-1);
-  const related = (verdict.blames ?? []).flatMap((path) => {
-    const span = argument === undefined ? undefined : spanAt(argument, path);
-    return span === undefined ? [] : [{ at: span, message: `"${path.join(".")}" is set here.` }];
-  });
+  const related = comesFrom(call, verdict.blames ?? []);
   return { rule: rule.id, level: verdict.level ?? rule.level, mechanism, message: verdict.message, at, related };
 }
 

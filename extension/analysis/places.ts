@@ -1,12 +1,7 @@
-/** From a path inside a declaration's argument to the characters that hold the value. */
-import type { Span, Value } from "../evaluator/value.js";
+/** From a path inside a declaration's argument to the value that is written there. */
+import type { Value } from "../evaluator/value.js";
 
-/** The expression of the value at `path`, or `undefined` where nothing is written there. */
-export function spanAt(value: Value, path: readonly (string | number)[]): Span | undefined {
-  return valueAt(value, path)?.origin.span;
-}
-
-/** The value at `path`. */
+/** The value at `path`, or `undefined` where nothing is written there. */
 export function valueAt(value: Value, path: readonly (string | number)[]): Value | undefined {
   const [key, ...rest] = path;
   if (key === undefined) return value;
