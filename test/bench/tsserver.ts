@@ -1,0 +1,84 @@
+// The installed TypeScript's own server as a process, asked as editors ask it: the yardstick of the bench. It counts no time.
+
+import { type ChildProcess, spawn } from "node:child_process";
+import { readFileSync } from "node:fs";
+import { join } from "node:path";
+import { repositoryRoot } from "../workbench/paths.js";
+import type { EditedFile } from "./workspace.js";
+
+interface Message {
+  readonly type: string;
+  readonly event?: string;
+  readonly request_seq?: number;
+  readonly success?: boolean;
+  readonly body?: { readonly file?: string; readonly diagnostics?: readonly unknown[]; readonly request_seq?: number };
+}
+
+export class TsServer {
+  readonly process: ChildProcess;
+  readonly #texts = new Map<string, string>();
+  #sequence = 0;
+  #rest = Buffer.alloc(0);
+  #heard: (message: Message) => void = () => {};
+
+  constructor() {
+    const server = join(repositoryRoot, "node_modules/typescript/lib/tsserver.js");
+    const args = [server, "--noGetErrOnBackgroundUpdate", "--disableAutomaticTypingAcquisition"];
+    this.process = spawn(process.execPath, args, { stdio: ["pipe", "pipe", "inherit"] });
+    this.process.stdout?.on("data", (chunk: Buffer) => this.#read(chunk));
+  }
+
+  open(path: string): void {
+    const text = readFileSync(path, "utf8");
+    this.#texts.set(path, text);
+    this.#send("open", { file: path, fileContent: text, scriptKindName: "TS" });
+  }
+
+  edit({ path, start }: EditedFile, number: string): void {
+    const current = this.#texts.get(path) ?? "";
+    const end = current.indexOf(";", start);
+    this.#texts.set(path, current.slice(0, start) + number + current.slice(end));
+    const lines = current.slice(0, start).split("\n");
+    const line = lines.length;
+    const offset = (lines.at(-1)?.length ?? 0) + 1;
+    this.#send("change", { file: path, line, offset, endLine: line, endOffset: offset + end - start, insertString: number });
+  }
+
+  /** Until the files' semantic diagnostics are there; gives how many there are in all. */
+  semanticDiagnostics(paths: readonly string[]): Promise<number> {
+    const waiting = new Set(paths);
+    let count = 0;
+    const done = new Promise<number>((resolve) => {
+      this.#heard = ({ event, body }) => {
+        if (event !== "semanticDiag" || body?.file === undefined) return;
+        if (waiting.delete(body.file)) count += body.diagnostics?.length ?? 0;
+        if (waiting.size === 0) resolve(count);
+      };
+    });
+    this.#send("geterr", { delay: 0, files: paths });
+    return done;
+  }
+
+  stop(): void {
+    this.process.kill();
+  }
+
+  #send(command: string, args: unknown): void {
+    this.#sequence += 1;
+    this.process.stdin?.write(`${JSON.stringify({ seq: this.#sequence, type: "request", command, arguments: args })}\n`);
+  }
+
+  #read(chunk: Buffer): void {
+    this.#rest = Buffer.concat([this.#rest, chunk]);
+    for (;;) {
+      const headEnd = this.#rest.indexOf("\r\n\r\n");
+      if (headEnd < 0) return;
+      const length = Number(/Content-Length: (\d+)/.exec(this.#rest.toString("latin1", 0, headEnd))?.[1]);
+      const end = headEnd + 4 + length;
+      if (this.#rest.length < end) return;
+      const message: Message = JSON.parse(this.#rest.toString("utf8", headEnd + 4, end));
+      this.#rest = this.#rest.subarray(end);
+      this.#heard(message);
+    }
+  }
+}
