@@ -20,8 +20,8 @@ export interface Module {
   readonly loads: Map<string, Loaded>;
   readonly exports: Map<string, Target>;
   readonly importers: Importers;
-  /** Objects of other files that this one, importing them from the files named, leaves alone. */
-  readonly harmlessTo: WeakMap<Data, Set<Module>>;
+  /** Objects of other files that this one leaves alone, by the name that they are exported for and the file it imports that from. */
+  readonly harmlessTo: WeakMap<Data, Map<object, Set<Module>>>;
   /** By function or loop, the runs that are known of it. */
   readonly runs: Map<ts.Node, readonly Frame[]>;
 }

@@ -32,10 +32,10 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
       if (text === undefined) return notRead(target);
       if (text === null) continue;
       const importer = ctx.open(file, text);
-      if (isKnownHarmless(importer, passer, flow)) continue;
+      if (isKnownHarmless(importer, passer, target, flow)) continue;
       const further = passedOn(ctx, importer, passer, passed);
       if (further.length > 0 && !paths.has(importer)) paths.set(importer, further);
-      const change = followInto(search, importer, passer, passed, flow, further.length > 0);
+      const change = followInto(search, importer, passer, target, passed, flow, further.length > 0);
       if (change !== undefined) return change;
     }
   }
@@ -47,6 +47,7 @@ function followInto(
   outer: Search,
   importer: Module,
   passer: Module,
+  target: Exported,
   paths: readonly Path[],
   flow: Flow,
   isPassedOn: boolean,
@@ -60,16 +61,21 @@ function followInto(
   const [data] = flow.objects;
   const endsHere = search.pending.length === 0 && !isPassedOn && lists.size === before;
   if (endsHere && data !== undefined && isWhole(flow)) {
-    importer.harmlessTo.set(data, (importer.harmlessTo.get(data) ?? new Set()).add(passer));
+    const targets = importer.harmlessTo.get(data) ?? new Map<object, Set<Module>>();
+    importer.harmlessTo.set(data, targets.set(keyOf(target), (targets.get(keyOf(target)) ?? new Set()).add(passer)));
   }
   outer.pending.push(...search.pending);
   return undefined;
 }
 
 /** Most edits leave most files as they are: what such a file does with the object is known from the last time. */
-function isKnownHarmless(importer: Module, passer: Module, flow: Flow): boolean {
+function isKnownHarmless(importer: Module, passer: Module, target: Exported, flow: Flow): boolean {
   const [data] = flow.objects;
-  return data !== undefined && isWhole(flow) && importer.harmlessTo.get(data)?.has(passer) === true;
+  return data !== undefined && isWhole(flow) && importer.harmlessTo.get(data)?.get(keyOf(target))?.has(passer) === true;
+}
+
+function keyOf(target: Exported): object {
+  return target.kind === "binding" ? target.binding : target.node;
 }
 
 function isWhole({ objects, wraps }: Flow): boolean {

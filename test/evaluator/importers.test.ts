@@ -85,6 +85,11 @@ describe("an exported object", () => {
   it.each<[string, string, string]>([
     ["in another", "export const ALL = { g: GEARS };", 'import { ALL } from "./constants"; ALL.g.hoist = 5;'],
     ["by default, in a literal", "export default { g: { h: GEARS } };", 'import all from "./constants"; all.g.h.hoist = 5;'],
+    [
+      "under a second name",
+      "export const SAME = GEARS;",
+      'import { GEARS, SAME } from "./constants"; GEARS.hoist; SAME.hoist = 5;',
+    ],
     ["in a list", "export const ALL = [GEARS];", 'import { ALL } from "./constants"; ALL[0].hoist = 5;'],
   ])("that is handed out %s is followed", (_name, also, code) => {
     const fixture = CONSTANTS.replace("//- main.ts", `${also}\n//- main.ts`);

@@ -24,7 +24,8 @@ export function runStatements(statements: readonly Statement[]): ReadonlyMap<str
 
 /** Runs one file as a module and gives its exports. */
 export function runModule(text: string, require: (specifier: string) => unknown, globals: Record<string, unknown> = {}): unknown {
-  const { outputText } = ts.transpileModule(text, {
+  const { outputText, diagnostics } = ts.transpileModule(text, {
+    reportDiagnostics: true,
     compilerOptions: {
       module: ts.ModuleKind.CommonJS,
       target: ts.ScriptTarget.ES2022,
@@ -32,10 +33,28 @@ export function runModule(text: string, require: (specifier: string) => unknown,
       alwaysStrict: true,
     },
   });
+  // `a < (b) > (c)` of a generated program may read as type arguments, and then as nothing that can run.
+  if (diagnostics !== undefined && diagnostics.length > 0) throw new Error("The program doesn't compile.");
   const module = { exports: {} as unknown };
   const names = ["require", "module", "exports", ...Object.keys(globals)];
   new Function(...names, outputText)(require, module, module.exports, ...Object.values(globals));
   return module.exports;
+}
+
+/** Runs `/main.ts`; what was probed under each name, as it is in the end, or nothing when the program throws. */
+export function runFiles(files: ReadonlyMap<string, string>): ReadonlyMap<string, unknown> {
+  const probed = new Map<string, unknown>();
+  const probe = (name: string, value: unknown): void => {
+    probed.set(name, value);
+  };
+  const load = (file: string): unknown =>
+    runModule(files.get(file) ?? "", (specifier) => (specifier === "gearbox" ? { probe } : load(`/${specifier.slice(2)}.ts`)));
+  try {
+    load("/main.ts");
+  } catch (error) {
+    if (error instanceof SyntaxError) throw error;
+  }
+  return probed;
 }
 
 /** Runs a fixture's first file with `expression` at its end, and gives the expression's value. */
