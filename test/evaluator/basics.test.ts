@@ -1,6 +1,7 @@
 // biome-ignore-all lint/suspicious/noTemplateCurlyInString: the texts are code
 /** What literals, operators and the functions of the language give. */
 import { describe, expect, it } from "vitest";
+import { loadTypeScript } from "../../extension/evaluator/typescript.js";
 import { dataOf } from "./support/workspace.js";
 
 describe("literals and operators", () => {
@@ -58,4 +59,9 @@ describe("literals and operators", () => {
   ])("%s", (expression, value) => {
     expect(dataOf("", expression)).toEqual(value);
   });
+});
+
+it("loads the parser, however the runtime wraps it", async () => {
+  const { createSourceFile } = await loadTypeScript();
+  expect(createSourceFile("a.ts", "1 + 1;", 99).statements).toHaveLength(1);
 });

@@ -1,8 +1,9 @@
 /** Runs small programs for real, to compare with what the evaluator claims. Only tests run anything. */
 import ts from "typescript";
+import { expect } from "vitest";
 import type { Value } from "../../../extension/evaluator/value.js";
 import type { Statement } from "./programs.js";
-import { splitFiles } from "./workspace.js";
+import { evaluate, plain, splitFiles } from "./workspace.js";
 
 /** Runs the statements in order until one throws; what each name that it got to stands for in the end. */
 export function runStatements(statements: readonly Statement[]): ReadonlyMap<string, unknown> {
@@ -75,6 +76,13 @@ export function runFixture(fixture: string, expression: string): unknown {
     return ran.get(file);
   };
   return Reflect.get(load(main) as object, "shown_");
+}
+
+/** Expects a value to be known, to be this, and to be what the running program has. */
+export function checkValue(fixture: string, expression: string, expected: unknown): void {
+  const value = evaluate(fixture, expression);
+  expect(plain(value)).toEqual(expected);
+  expect(findDifference(value, runFixture(fixture, expression))).toBeUndefined();
 }
 
 function find(files: ReadonlyMap<string, string>, specifier: string): string {
