@@ -126,7 +126,10 @@ describe("operatingPointChart", () => {
   it("carries the verdict, the findings and what it rests on", () => {
     const chart = chartOf(hoist("", "spur(20, 60)"));
     expect(chart).toMatchObject({ mechanism: "hoist", motorCount: 1, state: "warning", verdict: "Past its peak of power" });
-    expect(chart.findings.map(({ rule, level }) => [rule, level])).toEqual([["past-peak", "warning"]]);
+    expect(chart.findings.map(({ rule, level }) => [rule, level])).toEqual([
+      ["past-peak", "warning"],
+      ["backdrives", "information"],
+    ]);
     expect(chart.assumed).toContain("Stage 1 (spur): customary efficiency 0.98.");
   });
 

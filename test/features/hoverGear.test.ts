@@ -36,11 +36,11 @@ describe("a hover on a gear constant", () => {
       "**Fine:** hoist, 43 % of stall  
       PINION is 20
 
-      | at the hardest position | output torque, of stall | output speed | current | of stall |
+      | at the hardest position | &ensp;output torque | &ensp;output speed | &ensp;current | &ensp;of stall |
       | --- | ---: | ---: | ---: | ---: |
-      | hoist | 5 N·m of 11.8 N·m | 17.2 rpm | 2.72 A | 43 % |
-      | … with 21, one tooth more | 5 N·m of 11.2 N·m | 17.4 rpm | 2.84 A | 45 % |
-      | … with 19, one tooth fewer | 5 N·m of 12.4 N·m | 17 rpm | 2.6 A | 40 % |
+      | hoist | &ensp;5 N·m of 11.8 N·m | &ensp;17.2 rpm | &ensp;2.72 A | &ensp;43 % |
+      | … with 21, one tooth more | &ensp;5 N·m of 11.2 N·m | &ensp;17.4 rpm | &ensp;2.84 A | &ensp;45 % |
+      | … with 19, one tooth fewer | &ensp;5 N·m of 12.4 N·m | &ensp;17 rpm | &ensp;2.6 A | &ensp;40 % |
 
       [Chart](command:loadmark.showChart?%5B%22hoist%22%5D)"
     `);

@@ -35,6 +35,6 @@ function tableRows(markdown: string): string[][] {
     line
       .slice(2, -2)
       .split(" | ")
-      .map((cell) => cell.trim()),
+      .map((cell) => cell.replace(/^&ensp;/, "").trim()),
   );
 }

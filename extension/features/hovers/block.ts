@@ -34,5 +34,10 @@ function emphasise(verdict: string): string {
 function writeTable({ head, rows }: Table): string {
   // Numbers line up by their units when columns after the first are aligned right.
   const rule = head.map((_, column) => (column === 0 ? "---" : "---:"));
-  return [head, rule, ...rows].map((cells) => `| ${cells.join(" | ")} |`).join("\n");
+  return [spread(head), rule, ...rows.map(spread)].map((cells) => `| ${cells.join(" | ")} |`).join("\n");
+}
+
+/** Hosts set columns so close that "138 %" and "never arrives" would read as one; plain spaces would be taken away. */
+function spread(cells: readonly string[]): string[] {
+  return cells.map((cell, column) => (column === 0 || cell === "" ? cell : `&ensp;${cell}`));
 }

@@ -42,7 +42,7 @@ export function describeConstant(analysis: Analysis, constant: Constant, analyse
   });
 }
 
-const HEAD = ["at the hardest position", "output torque, of stall", "output speed", "current", "of stall", "travel"];
+const HEAD = ["at the hardest position", "output torque", "output speed", "current", "of stall", "travel"];
 
 /** Each mechanism as it is, and below it what each step makes of it. */
 function rowsOf(

@@ -80,6 +80,6 @@ async function rowsAt(path: string, text: string): Promise<string[][]> {
     line
       .split("|")
       .slice(1, -1)
-      .map((cell) => cell.trim()),
+      .map((cell) => cell.trim().replace(/^&ensp;/, "")),
   );
 }
