@@ -4,6 +4,7 @@
  * Edits only; nothing is applied here. Each is offered singly.
  */
 import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { Proposal } from "../analysis/propose.js";
 import type { LocatedIssue, Span } from "../evaluator/value.js";
 import { sameSpan } from "./feeds.js";
 import { plainText } from "./inertText.js";
@@ -11,8 +12,8 @@ import { plainText } from "./inertText.js";
 export interface QuickFix {
   readonly title: string;
   readonly finding: Finding;
-  /** `allow`: silences instead of mending; hosts list it last. */
-  readonly kind: "mend" | "allow";
+  /** `propose`: changes the design, each singly; `allow`: silences instead of mending, hosts list it last. */
+  readonly kind: "mend" | "propose" | "allow";
   readonly edits: readonly Edit[];
   /** Stretch of the first edit's `newText` that the user is to replace, offsets within it. */
   readonly placeholder?: { readonly start: number; readonly end: number };
@@ -22,11 +23,23 @@ export interface Edit extends Span {
   readonly newText: string;
 }
 
-/** Fixes for the findings that touch the range, mending ones first. */
-export function quickFixesAt(analysis: Analysis, file: string, start: number, end: number): QuickFix[] {
+/** Fixes for the findings that touch the range: what was meant, then what `propose` finds, then allowances. */
+export function quickFixesAt(
+  analysis: Analysis,
+  file: string,
+  start: number,
+  end: number,
+  propose: (finding: Finding) => readonly Proposal[] = () => [],
+): QuickFix[] {
   const touched = analysis.findings.filter(({ at }) => at.file === file && at.start <= end && start <= at.end);
   const mending = touched.flatMap((finding) => mend(analysis, finding));
-  return [...mending, ...touched.flatMap((finding) => allow(analysis, finding))];
+  const proposed = touched.flatMap((finding) => propose(finding).flatMap((one) => proposedFix(finding, one)));
+  return [...mending, ...proposed, ...touched.flatMap((finding) => allow(analysis, finding))];
+}
+
+/** A nearest miss has nothing to apply. */
+function proposedFix(finding: Finding, { summary, edits }: Proposal): QuickFix[] {
+  return edits.length === 0 ? [] : [{ title: plainText(summary.replace(/\.$/, "")), finding, kind: "propose", edits }];
 }
 
 /** The declarations' refusals end in the text that was meant. */

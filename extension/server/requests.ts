@@ -8,7 +8,7 @@ import { CHART, chartQuestionSchema } from "../protocol/chartMessages.js";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { ChartAnswers } from "./answers/chart.js";
-import { answerCodeActions } from "./answers/codeActions.js";
+import { answerCodeActions, createProposer } from "./answers/codeActions.js";
 import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
 import { answerCompletions, mayHoldUnit } from "./answers/completions.js";
 import { answerFindPlace } from "./answers/findPlace.js";
@@ -81,10 +81,11 @@ export function answerRequests({ connection, guard, session, settings, hintsOf, 
     }),
   );
   const canFillIn = capabilities.workspace?.workspaceEdit?.snippetEditSupport === true;
+  const propose = createProposer();
   connection.onCodeAction(
     guard.answer("Quick fixes", [], async ({ textDocument, range, context }) => {
       const current = await newestOf(textDocument.uri);
-      return current ? answerCodeActions(current, range, { texts, canFillIn, shown: context.diagnostics }) : [];
+      return current ? answerCodeActions(current, range, { texts, canFillIn, propose, shown: context.diagnostics }) : [];
     }),
   );
   connection.onWorkspaceSymbol(

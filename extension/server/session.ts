@@ -266,7 +266,14 @@ function filesRead({ files }: Analysis): ReadonlySet<string> {
 
 /** Where nothing is declared, nothing need be loaded to say so. */
 function resultOfNothing(snapshot: TextSnapshot): Result {
-  const nothing = { mechanisms: [], motors: [], robots: [], findings: [], wanted: [] };
+  const nothing = {
+    mechanisms: [],
+    motors: [],
+    robots: [],
+    findings: [],
+    wanted: [],
+    toothCounts: new Map<string, readonly number[]>(),
+  };
   const analyse: Engine["analyse"] = (_roots, given) => ({ ...nothing, files: new Map(), snapshot: given });
   return { analysis: analyse([], snapshot), snapshot, analyse };
 }

@@ -72,7 +72,8 @@ describe("a hover on a mechanism", () => {
 
       Feedforward, at the output shaft: 5 V holds the load, 3.82 V per rad/s  
       Assumed: Motor at the 25 °C of its sheet. Stage 1 (spur): customary efficiency 0.98. The motor's no-load loss grows with its speed. And 1 more.  
-      Not checked: Heat: the motor has no thermal data. Protection: none is declared.
+      Not checked: Heat: the motor has no thermal data. Protection: none is declared.  
+      Most by: stage 1 driven, torque, stage 1 driver
 
       [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
     `);

@@ -236,6 +236,26 @@ describe("quick fixes", () => {
     ]);
   });
 
+  it("propose other gears where they are declared, and what is proposed clears the finding", async () => {
+    await start(robot(PAST_PEAK));
+    await client.open("robot.ts");
+    await client.open("gears.ts");
+    await client.waitForRules("robot.ts", ["past-peak"]);
+    const proposed = (await actions("robot.ts", "swing =")).find(({ title }) => title.startsWith("Stage "));
+    expect(proposed?.title).toMatch(/% of stall instead of/);
+    const [change] = proposed?.edit?.documentChanges ?? [];
+    if (change === undefined || !("textDocument" in change)) throw new Error("nothing to change");
+    expect(change.textDocument.uri).toBe(client.uri("gears.ts"));
+    const lines = client.text("gears.ts").split("\n");
+    for (const edit of change.edits) {
+      if (!("newText" in edit)) throw new Error("not plain text");
+      const { start: from, end: to } = edit.range;
+      lines[from.line] = `${lines[from.line]?.slice(0, from.character)}${edit.newText}${lines[from.line]?.slice(to.character)}`;
+    }
+    await client.retype("gears.ts", client.text("gears.ts"), lines.join("\n"));
+    await client.waitForRules("robot.ts", []);
+  });
+
   it("offer the allowance last, with its reason to be filled in", async () => {
     await start(robot(PAST_PEAK));
     await client.open("robot.ts");

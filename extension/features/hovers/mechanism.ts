@@ -1,5 +1,6 @@
 /** A mechanism: whether its motors cope, what is needed against what is available, and what that rests on. */
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
+import { sensitivitiesOf } from "../../analysis/sensitivity.js";
 import type { DefinitionCall, Span } from "../../evaluator/value.js";
 import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
@@ -46,7 +47,7 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
       ...outputOf(mechanism),
     ],
     table: tableOf(drive, numbers),
-    notes: [...runLines(drive, numbers), ...feedforwardOf(numbers), ...assumptions, ...shared],
+    notes: [...runLines(drive, numbers), ...feedforwardOf(numbers), ...assumptions, ...shared, ...mostBy(analysis, mechanism)],
     links: [chartLink(mechanism.name), ...linksOf(mechanism)],
   });
 }
@@ -125,6 +126,24 @@ function feedforwardOf({ feedforward }: MechanismNumbers): string[] {
     voltsPerRadPerS2 ? `${writeNumber(voltsPerRadPerS2)} V per rad/s²` : "",
   ];
   return [`Feedforward, at the output shaft: ${parts.filter((part) => part !== "").join(", ")}`];
+}
+
+/** How many inputs are named. */
+const MOST_NAMED = 3;
+
+/** Which declared numbers move the current, the share of stall or the time most. */
+function mostBy(analysis: Analysis, mechanism: AnalysedMechanism): string[] {
+  const inputs = [...new Set(sensitivitiesOf(analysis, mechanism).map(({ input }) => input))].slice(0, MOST_NAMED);
+  return inputs.length === 0 ? [] : [`Most by: ${inputs.map((input) => inertMarkdown(wordsOf(input))).join(", ")}`];
+}
+
+/** "load.centreOfMass" as "centre of mass", "stages[0].driven" as "stage 1 driven". */
+function wordsOf(input: string): string {
+  return input
+    .replace(/^load\./, "")
+    .replace(/^stages\[(\d+)\]/, (_, index) => `stage ${Number(index) + 1}`)
+    .replaceAll(".", " ")
+    .replace(/[A-Z]/g, (capital) => ` ${capital.toLowerCase()}`);
 }
 
 function linksOf({ call }: AnalysedMechanism): string[] {

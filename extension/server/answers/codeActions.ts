@@ -9,6 +9,8 @@ import {
   type TextDocumentEdit,
   type TextEdit,
 } from "vscode-languageserver";
+import type { Finding } from "../../analysis/analysis.js";
+import { type Proposal, proposalsFor } from "../../analysis/propose.js";
 import { type Edit, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
 import type { CurrentFile } from "../current.js";
 import type { Result } from "../session.js";
@@ -18,19 +20,35 @@ export interface CodeActionParts {
   readonly texts: Texts;
   /** The client can let the user fill in a stretch of what was put in. */
   readonly canFillIn: boolean;
+  /** The proposals for a finding of the result; kept, since the editor asks again with every move of the caret. */
+  readonly propose: (result: Result, finding: Finding) => readonly Proposal[];
   /** What the client shows at the range. */
   readonly shown: readonly Diagnostic[];
+}
+
+/** Proposals are worked out once for a finding: findings live as long as their result. */
+export function createProposer(): CodeActionParts["propose"] {
+  const known = new WeakMap<Finding, readonly Proposal[]>();
+  return (result, finding) => {
+    const before = known.get(finding);
+    if (before !== undefined) return before;
+    const proposals = proposalsFor(result.analysis, finding, result.analyse);
+    known.set(finding, proposals);
+    return proposals;
+  };
 }
 
 /** Nothing while the text is newer than the result: an edit must fit exactly. */
 export function answerCodeActions(
   current: CurrentFile,
   range: Range,
-  { texts, canFillIn, shown }: CodeActionParts,
+  { texts, canFillIn, propose, shown }: CodeActionParts,
 ): CodeAction[] {
   const { result, file, lines } = current;
   if (lines.text !== result.snapshot.read(file)) return [];
-  const fixes = quickFixesAt(result.analysis, file, lines.offsetAt(range.start), lines.offsetAt(range.end));
+  const fixes = quickFixesAt(result.analysis, file, lines.offsetAt(range.start), lines.offsetAt(range.end), (finding) =>
+    propose(result, finding),
+  );
   return fixes
     .filter(({ edits }) => edits.every((edit) => isUnchanged(texts, result, edit.file)))
     .map((fix) => ({
