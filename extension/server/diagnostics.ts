@@ -1,7 +1,7 @@
 /**
  * Findings as the protocol's diagnostics, file by file.
  *
- * Changes nothing about them but places, which become lines and characters here.
+ * Changes nothing about them but places, which become lines and characters here, and spaces between sentences.
  */
 import { type Diagnostic, DiagnosticSeverity } from "vscode-languageserver";
 import type { Finding } from "../analysis/analysis.js";
@@ -27,7 +27,7 @@ export function diagnosticsOf({ analysis, snapshot }: Result, uriOf: UriOf): Rea
     severity: SEVERITIES[level],
     code: rule,
     source: SOURCE,
-    message,
+    message: inLines(message),
     data: { rule, mechanism },
     ...(related.length === 0
       ? {}
@@ -45,4 +45,9 @@ export function diagnosticsOf({ analysis, snapshot }: Result, uriOf: UriOf): Rea
     else diagnostics.push(diagnosticOf(finding));
   }
   return byFile;
+}
+
+/** A line for each sentence: some of the editor's views do not wrap lines, and would cut off the way out. */
+export function inLines(message: string): string {
+  return message.replaceAll(/(?<=[.!?]) (?=\p{Lu})/gu, "\n");
 }

@@ -13,6 +13,7 @@ import type { Finding } from "../../analysis/analysis.js";
 import { type Proposal, proposalsFor } from "../../analysis/propose.js";
 import { type Edit, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
 import type { CurrentFile } from "../current.js";
+import { inLines } from "../diagnostics.js";
 import type { Result } from "../session.js";
 import type { Texts } from "../texts.js";
 
@@ -54,7 +55,7 @@ export function answerCodeActions(
     .map((fix) => ({
       title: fix.title,
       kind: CodeActionKind.QuickFix,
-      diagnostics: shown.filter(({ code, message }) => code === fix.finding.rule && message === fix.finding.message),
+      diagnostics: shown.filter(({ code, message }) => code === fix.finding.rule && message === inLines(fix.finding.message)),
       edit: { documentChanges: documentEditsOf(fix, result, texts, canFillIn) },
     }));
 }
