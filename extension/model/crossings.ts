@@ -12,6 +12,8 @@ export interface TriedStep {
   readonly stepper: Stepper;
   timeS: number;
   lengthS: number;
+  /** Kinks and notes met so far. */
+  events: number;
   start: StepStart;
   end: StepStart;
   before: number[];

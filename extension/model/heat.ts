@@ -85,6 +85,28 @@ export function heatingCurve(
   return { windingC: network.ambientC + winding, housingC: network.ambientC + housing };
 }
 
+/** Time until a steady current brings the winding to a temperature, s; null: it never does. */
+export function timeToTemperature(network: HeatNetwork, heat: GrowingHeat, windingC: number): number | null {
+  if (windingC <= network.ambientC) return 0;
+  const total = network.windingToHousingKPerW + network.housingToAmbientKPerW;
+  const share = heat.perKW * total;
+  if (!(heat.atAmbientW > 0) || (share < 1 && network.ambientC + (heat.atAmbientW * total) / (1 - share) <= windingC))
+    return null;
+  let low = 0;
+  let high = heatTimeConstants(network)[0];
+  while (heatingCurve(network, heat, high).windingC < windingC) {
+    low = high;
+    high *= 2;
+    if (!Number.isFinite(high)) return null;
+  }
+  for (let k = 0; k < 200 && high - low > 1e-12 * high; k++) {
+    const middle = (low + high) / 2;
+    if (heatingCurve(network, heat, middle).windingC < windingC) low = middle;
+    else high = middle;
+  }
+  return high;
+}
+
 export interface SteadyHeat {
   readonly windingC: number;
   readonly housingC: number;

@@ -7,11 +7,12 @@ import { heatNetworkOf, heatTimeConstants, holdingHeat, steadyHeat } from "./hea
 import { integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
 import { MOST_STEPS, STIFF_TOLERANCE, scalesOf } from "./motionScales.js";
-import { type CarriedState, carriedState, coldState, startState } from "./motionState.js";
+import { type CarriedState, carriedState, startState } from "./motionState.js";
 import { type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observation, type Observer } from "./observer.js";
 import type { Plant } from "./plant.js";
-import { fuseRate, isBorderline, NEVER, type TripVerdict, thermalReplica, tripVerdict } from "./protection.js";
+import { isBorderline, NEVER, type TripVerdict, thermalReplica } from "./protection.js";
+import { steadyHold } from "./steadyHold.js";
 
 /** One motor's values unless the name says source. */
 export interface HeldRun {
@@ -46,19 +47,9 @@ export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: Carr
   observer.look(system, startS, state);
   const first = system.instantAt(startS, state);
   const { currentA, supplyA } = first;
-  const carriedA = system.carried(first);
-
-  if (system.network === null && from === undefined) {
-    return {
-      motorCurrentA: currentA,
-      sourceCurrentA: supplyA,
-      trip: steadyTrip(plant, carriedA),
-      windingFinalC: null,
-      limitAfterS: null,
-      runsAway: false,
-      supplied: observer.seen.supplied,
-      carried: replicaAfter(plant, carriedA, lastsS),
-    };
+  if (from === undefined && staysSteady(plant, mode)) {
+    const steady = { currentA, supplyA, carriedA: system.carried(first), supplied: first.supplied };
+    return steadyHold(plant, steady, system.network, lastsS);
   }
   const foreverS = startS + FOREVER * longestTimeConstant(plant);
   const wantedS = lastsS === undefined ? foreverS : startS + lastsS;
@@ -102,22 +93,11 @@ function steadyWinding(plant: Plant, mode: Mode, atEnd: number): number | null {
   return steadyHeat(network, holdingHeat(plant.motor, mode.torqueNm))?.windingC ?? null;
 }
 
-/** Protection after a time at a steady current, from rest: θ = m²·(1 − e^(−t/τ)). */
-function replicaAfter(plant: Plant, carriedA: number, lastsS = Number.POSITIVE_INFINITY): CarriedState {
-  const cold = coldState(plant);
-  const { protection } = plant.drive;
-  if (!protection) return cold;
-  if (protection.kind === "fuse") {
-    const damage = (gate: "fast" | "slow"): number =>
-      carriedA > 0 ? Math.min(fuseRate(protection.ratingA, carriedA, gate).rate * lastsS, 1) || 0 : 0;
-    return { ...cold, protection: damage("slow"), fast: damage("fast") };
-  }
-  const replica = thermalReplica(protection);
-  return { ...cold, protection: (carriedA / replica.holdCurrentA) ** 2 * -Math.expm1(-lastsS / replica.timeConstantS) };
-}
-
-function steadyTrip(plant: Plant, carriedA: number): TripVerdict {
-  return plant.drive.protection ? tripVerdict(plant.drive.protection, carriedA) : NEVER;
+/** Without heat nothing changes; a current that holds a torque changes only with the magnets, what it draws also with the winding. */
+function staysSteady(plant: Plant, mode: Mode): boolean {
+  if (!plant.motor.thermal) return true;
+  const held = mode.kind === "held" && mode.motorSpeedRadPerS === 0;
+  return held && plant.motor.magnet === undefined && plant.drive.protection?.carries !== "supply";
 }
 
 function seenTrip(plant: Plant, seen: Observation, lastA: number, startS: number): TripVerdict {

@@ -26,7 +26,7 @@ export interface Arrival {
   readonly timeS: number;
   /** Index of the stop reached; null: the end time, or too many steps. */
   readonly stop: number | null;
-  /** False where the steps ran out. */
+  /** False where the steps ran out, or the events did. */
   readonly finished: boolean;
   readonly steps: number;
   /** What the next step would be, s. */
@@ -37,6 +37,8 @@ const LEAST_GROWTH = 0.15;
 const MOST_GROWTH = 6;
 const SAFETY = 0.9;
 const LEAST_ERROR = 1e-12;
+/** Kinks and notes past which a course is given up. */
+const MOST_EVENTS = 10_000;
 /** Steps are not shortened below this share of the time. */
 const LEAST_STEP = 1e-14;
 /** A kink is passed by this share of the step, so that the next step starts on the other side. */
@@ -55,7 +57,8 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
   let length = course.firstStepS;
 
   for (let steps = 1; tried.timeS < course.endS; steps++) {
-    if (steps > course.mostSteps) return { timeS: tried.timeS, stop: null, finished: false, steps, nextStepS: length };
+    if (steps > course.mostSteps || tried.events > MOST_EVENTS)
+      return { timeS: tried.timeS, stop: null, finished: false, steps, nextStepS: length };
     const left = course.endS - tried.timeS;
     length = Math.min(length, left);
     if (left - length < 1e-12 * left) length = left;
@@ -76,6 +79,7 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
       length = next;
       continue;
     }
+    tried.events++;
     const stops = (system.watches[landing.watch] as Watch).kind === "stop";
     if (stops) landOnStop(tried, state, landing, course);
     else landPastKink(tried, state, landing.share, course);
@@ -94,6 +98,7 @@ function createTried(system: OdeSystem, course: Course, timeS: number): TriedSte
     stepper: course.stiff ? createStiffStepper(system) : createExplicitStepper(system),
     timeS,
     lengthS: 0,
+    events: 0,
     start: createStart(system.size, course.stiff),
     end: createStart(system.size, course.stiff),
     before: new Array<number>(count).fill(0),
@@ -137,6 +142,7 @@ function report(tried: TriedStep, until: number, course: Course): void {
     if ((watches[i] as Watch).kind !== "note") continue;
     const share = firstCrossing(tried, i);
     if (share === null || share > until) continue;
+    tried.events++;
     tried.stepper.at(share, tried.inner);
     course.onNote(i, tried.timeS + share * tried.lengthS, tried.inner, (tried.signs[i] as number) < 0);
   }

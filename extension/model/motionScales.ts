@@ -24,13 +24,17 @@ export const MOST_STEPS = 20_000;
 /** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */
 const FOLLOWING_SHARE = 1e-5;
 
+/** From the available line, losses and load left out; a heavy mechanism's time is that of its full torque's acceleration. */
 export function scalesOf(plant: Plant): MotionScales {
+  const { load, train, motor, count } = plant;
   const line = availableLine(plant.drive);
-  const speedRadPerS = Math.max(line.noLoadSpeedRadPerS, 1e-9 * plant.motor.noLoadSpeedRadPerS) / plant.train.ratio;
-  const inertia = turningInertia(plant, plant.load.startRad);
-  const timeS = plant.load.endless ? Math.max(mechanicalTimeConstant(plant, inertia), 1e-12) : plant.spanRad / speedRadPerS;
-  const progressRad = plant.load.endless ? speedRadPerS * timeS : plant.spanRad;
-  return { progressRad, speedRadPerS, timeS, currentA: Math.max(Math.min(line.stallCurrentA, plant.limitA), 1e-9) };
+  const speedRadPerS = Math.max(line.noLoadSpeedRadPerS, 1e-9 * motor.noLoadSpeedRadPerS) / train.ratio;
+  const currentA = Math.max(Math.min(line.stallCurrentA, plant.limitA), 1e-9);
+  const acceleration = (count * train.ratio * motor.torqueConstantNmPerA * currentA) / turningInertia(plant, load.startRad);
+  const timeS = load.endless
+    ? Math.max(speedRadPerS / acceleration, 1e-12)
+    : Math.max(plant.spanRad / speedRadPerS, Math.sqrt((2 * plant.spanRad) / acceleration));
+  return { progressRad: load.endless ? speedRadPerS * timeS : plant.spanRad, speedRadPerS, timeS, currentA };
 }
 
 /** True where inertia does not show: there is none, or its time constant is below 1e-5 of the travel at no-load speed. */

@@ -29,7 +29,7 @@ export interface MotionSystem extends OdeSystem {
   readonly setTarget: (target: number) => void;
 }
 
-/** Below this share of the speed scale it stands still. */
+/** Below this share of the highest speed so far it stands still. */
 const STANDSTILL_SHARE = 1e-9;
 const HEAT_SCALE_K = 100;
 /** Sums are usually this share of full current over the whole time. */
@@ -43,15 +43,16 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   const front = createInstant();
   const released = createInstant();
   let target = plant.spanRad;
-  const stillBelow = STANDSTILL_SHARE * scales.speedRadPerS;
+  let highestSpeed = 0;
   const { watches, values, index } = motionWatches({
     plant,
     mode,
     layout,
     network,
     rates,
-    stillBelow,
+    stillBelow: () => STANDSTILL_SHARE * highestSpeed,
     currentScaleA: scales.currentA,
+    timeScaleS: scales.timeS,
     target: () => target,
   });
 
@@ -103,6 +104,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     },
     prepare: (timeS, state, start, watched, stiff) => {
       fillInstant(timeS, state, front, true);
+      highestSpeed = Math.max(highestSpeed, front.progressRate);
       rates.fill(state, front, start.rates);
       if (stiff) rates.differentiate(front, start.jacobian, start.timeRates);
       watchInstant(state, front, watched);

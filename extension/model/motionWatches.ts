@@ -48,9 +48,10 @@ export interface WatchedThings {
   readonly network: HeatNetwork | null;
   readonly rates: MotionRates;
   /** Output speed below which it stands still, rad/s. */
-  readonly stillBelow: number;
-  /** One motor's full current, A: what counts as nothing is judged by it. */
+  readonly stillBelow: () => number;
+  /** One motor's full current, A, and the course's time, s: what counts as nothing is judged by them. */
   readonly currentScaleA: number;
+  readonly timeScaleS: number;
   /** Progress (rad) or, for a flywheel, speed (rad/s) to reach. */
   readonly target: () => number;
 }
@@ -58,6 +59,8 @@ export interface WatchedThings {
 const KINK: Watch = { kind: "kink", crosses: "both" };
 /** Values that only fade towards a kink stay this share of their size away from it, and no rounding makes them cross. */
 const FADED = 1e-9;
+/** Share of the way after which it has left its start. */
+const LEFT = 1e-12;
 
 export function motionWatches({
   plant,
@@ -67,6 +70,7 @@ export function motionWatches({
   rates,
   stillBelow,
   currentScaleA,
+  timeScaleS,
   target,
 }: WatchedThings): MotionWatches {
   const watches: Watch[] = [];
@@ -84,12 +88,19 @@ export function motionWatches({
   const floorV = supply?.mustStayAbove?.voltageV;
   const flywheel = plant.load.kind === "flywheel";
 
-  const kink = (present: boolean, scale: number, value: (now: Instant) => number): void => {
+  const faded = (scale: number, value: WatchValue): WatchValue => {
     const band = FADED * scale;
-    listen(present, KINK, (_, now) => {
-      const found = value(now);
+    return (state, now) => {
+      const found = value(state, now);
       return Math.abs(found) < band ? 0 : found;
-    });
+    };
+  };
+  const kink = (present: boolean, scale: number, value: (now: Instant) => number): void => {
+    listen(
+      present,
+      KINK,
+      faded(scale, (_, now) => value(now)),
+    );
   };
   const torqueScale = plant.count * plant.train.ratio * motor.torqueConstantNmPerA * currentScaleA;
   kink(Number.isFinite(plant.limitA) && mode.kind !== "held", currentScaleA, (now) => now.limitGap);
@@ -113,17 +124,19 @@ export function motionWatches({
     (by: "currentBy" | "supplyBy"): WatchValue =>
     (at, now) =>
       rateAlong(now, now[by], rates.windingRate(at, now));
+  /** At the very start, where a ramp just overcomes the load, rounding is no standstill. */
+  const hasLeft = (at: Float64Array): boolean => plant.load.endless || (at[0] as number) > LEFT * plant.spanRad;
   const index: WatchIndex = {
     arrival: listen(turning && !plant.load.endless, component(stop("up"), 0), (at) => (at[0] as number) - target()),
     standstill: moving
-      ? listen(true, component(stop("down"), 1), (at) => (at[1] as number) - stillBelow)
-      : listen(turning, stop("down"), (_, now) => now.startGap / plant.train.ratio - stillBelow),
+      ? listen(true, component(stop("down"), 1), (at) => (hasLeft(at) ? (at[1] as number) - stillBelow() : -1))
+      : listen(turning, stop("down"), (at, now) => (hasLeft(at) ? now.startGap / plant.train.ratio - stillBelow() : -1)),
     targetSpeed: listen(moving && flywheel, component(stop("up"), 1), (at) => (at[1] as number) - target()),
     breakaway: listen(mode.kind === "blocked" && mode.startsAs !== undefined, stop("up"), (_, now) => now.startGap),
     burnt: listen(network !== null, component(stop("up"), layout.winding), (at) => (at[layout.winding] as number) - RUNAWAY_C),
-    currentPeak: listen(true, note("down"), rateOf("currentBy")),
-    supplyPeak: listen(true, note("down"), rateOf("supplyBy")),
-    windingPeak: listen(network !== null, note("down"), rates.windingRate),
+    currentPeak: listen(true, note("down"), faded(currentScaleA / timeScaleS, rateOf("currentBy"))),
+    supplyPeak: listen(true, note("down"), faded((plant.count * currentScaleA) / timeScaleS, rateOf("supplyBy"))),
+    windingPeak: listen(network !== null, note("down"), faded(1 / timeScaleS, rates.windingRate)),
     windingLimit: listen(
       network !== null,
       component(note("up"), layout.winding),

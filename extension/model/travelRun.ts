@@ -23,6 +23,8 @@ import type { TravelGoal } from "./travelGoal.js";
 import { finishTravel, type TravelOptions, type TravelResult } from "./travelResult.js";
 
 const MOST_PHASES = 10_000;
+/** A course that has not ended by then never does. */
+const NEVER_S = 1e30;
 /** Travels of more time constants than this go by the stiff method. */
 const STIFF_TIME_CONSTANTS = 150;
 
@@ -49,12 +51,13 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   let next = 0;
   moving.setTarget(targets[0] as number);
   for (let phase = 0; phase < MOST_PHASES; phase++) {
-    const endS = timeS < plant.rampS ? plant.rampS : Number.POSITIVE_INFINITY;
+    const endS = timeS < plant.rampS ? plant.rampS : NEVER_S;
     const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, method));
     timeS = arrival.timeS;
     stepS = arrival.nextStepS;
     if (!arrival.finished) break;
-    if (arrival.stop === null) continue;
+    if (arrival.stop === null && timeS < NEVER_S) continue;
+    if (arrival.stop === null) break;
     if (arrival.stop === moving.index.burnt) break;
     if (arrival.stop === moving.index.standstill) return finishTravel(plant, observer, state, timeS, "stands-still");
     next++;

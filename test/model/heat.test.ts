@@ -1,0 +1,176 @@
+/** Heat in the long run: closed forms against the integrator, runaway, magnets, repeats. */
+import fc from "fast-check";
+import { describe, expect, it } from "vitest";
+import type { ThermalConstants } from "../../extension/model/drive.js";
+import { heatingCurve, heatNetworkOf, heatTimeConstants, steadyHeat, timeToTemperature } from "../../extension/model/heat.js";
+import { solveHeld } from "../../extension/model/heldRun.js";
+import { coldState } from "../../extension/model/motionState.js";
+import { plantOf } from "../../extension/model/plant.js";
+import { solveRelease } from "../../extension/model/release.js";
+import { solveRepeats } from "../../extension/model/repeats.js";
+import { solveHold, solveStall, solveTurning } from "../../extension/model/runs.js";
+import { motorAt } from "../../extension/model/temperature.js";
+import { solveTravel } from "../../extension/model/travel.js";
+import { armOf, driveOf, liftOf, plainMotor, reduction, rollerOf } from "./drives.js";
+import "./expectShare.js";
+import { someDrive } from "./randomDrives.js";
+
+const thermal: ThermalConstants = {
+  windingToHousingKPerW: 2,
+  housingToAmbientKPerW: 8,
+  windingTimeS: 12,
+  housingTimeS: 600,
+  limitC: 120,
+};
+const warm = { ...plainMotor, thermal };
+const network = heatNetworkOf(warm);
+if (!network) throw new Error("no network");
+
+describe("holding", () => {
+  const drive = driveOf({ motor: warm, load: liftOf(6, 0.05, 1), stages: [reduction(20, 0.9)], holdForS: 60 });
+
+  it("in closed form agrees with the integrator", () => {
+    const hold = solveHold(drive);
+    // Handing a state on takes the other way: integration from the same cold start.
+    const integrated = solveHold(drive, coldState(plantOf(drive)));
+    expect(hold?.windingFinalC).toBeCloseToShare(integrated?.windingFinalC ?? 0, 1e-8);
+    expect(hold?.carried.housingC).toBeCloseToShare(integrated?.carried.housingC ?? 0, 1e-8);
+    // Longer than it is held for, and told all the same.
+    expect(hold?.limitAfterS ?? 0).toBeGreaterThan(60);
+    expect(hold?.limitAfterS).toBeCloseToShare(integrated?.limitAfterS ?? 0, 1e-7);
+    const light = { ...drive, load: liftOf(2, 0.05, 1) };
+    expect(solveHold(light)?.limitAfterS).toBeNull();
+    expect(solveHold(light, coldState(plantOf(light)))?.limitAfterS).toBeNull();
+  });
+
+  it("approaches the steady temperature, which balances the heat", () => {
+    const { holdForS, ...forEver } = drive;
+    const hold = solveHold(forEver);
+    const hot = motorAt(warm, hold?.windingFinalC ?? 0);
+    const copper = (hold?.motorCurrentA ?? 0) ** 2 * hot.resistanceOhm;
+    expect(holdForS).toBe(60);
+    expect((hold?.windingFinalC ?? 0) - 25).toBeCloseToShare(copper * 10, 1e-9);
+    expect(heatingCurve(network, { atAmbientW: 0, perKW: 0 }, 1e6).windingC).toBe(25);
+  });
+
+  it("says when the heat runs away", () => {
+    const hold = solveHold(driveOf({ motor: warm, load: liftOf(40, 0.05, 1) }));
+    expect(hold).toMatchObject({ runsAway: true, windingFinalC: null });
+    expect(hold?.limitAfterS).toBeGreaterThan(0);
+  });
+
+  it("needs more current as magnets weaken, and gets hotter for it", () => {
+    const forEver = driveOf({ motor: warm, load: liftOf(3, 0.05, 1), stages: [reduction(20, 0.9)] });
+    const plain = solveHold(forEver);
+    const magnet = solveHold({ ...forEver, motor: { ...warm, magnet: "ferrite" } });
+    expect(magnet?.windingFinalC ?? 0).toBeGreaterThan(plain?.windingFinalC ?? Number.POSITIVE_INFINITY);
+  });
+});
+
+describe("the two-node curve", () => {
+  it("starts at the copper's rate, ends at the steady state, and reaches a temperature when it says", () => {
+    const heat = { atAmbientW: 6, perKW: 0.02 };
+    const rate = (heatingCurve(network, heat, 1e-4).windingC - 25) / 1e-4;
+    expect(rate).toBeCloseToShare(6 / network.windingJPerK, 1e-4);
+    const steady = steadyHeat(network, (windingC) => 6 + 0.02 * (windingC - 25));
+    const long = heatingCurve(network, heat, 100 * heatTimeConstants(network)[1]);
+    expect(long.windingC).toBeCloseToShare(steady?.windingC ?? 0, 1e-9);
+    expect(long.housingC).toBeCloseToShare(steady?.housingC ?? 0, 1e-9);
+    const when = timeToTemperature(network, heat, 60);
+    expect(heatingCurve(network, heat, when ?? 0).windingC).toBeCloseTo(60, 8);
+    expect(timeToTemperature(network, heat, 500)).toBeNull();
+  });
+});
+
+describe("a loaded winding", () => {
+  it("is never cooled below ambient by heat, whatever moves", () => {
+    fc.assert(
+      fc.property(someDrive, fc.double({ min: -20, max: 60, noNaN: true }), (drive, ambientC) => {
+        const motor = { ...drive.motor, thermal: { ...thermal, ambientC } };
+        const travel = solveTravel({ ...drive, motor });
+        if (!travel) return;
+        expect(travel.windingPeakC ?? Number.NaN).toBeGreaterThanOrEqual(ambientC);
+        expect(travel.carried.windingC).toBeGreaterThanOrEqual(ambientC - 1e-6);
+        expect(travel.carried.housingC).toBeGreaterThanOrEqual(ambientC - 1e-6);
+      }),
+      { numRuns: 60, seed: 3 },
+    );
+  });
+
+  it("stalled, heats to its limit the sooner the more it draws", () => {
+    const full = solveStall(driveOf({ motor: warm }));
+    const limited = solveStall(driveOf({ motor: warm, motorCurrentLimitA: 25 }));
+    expect(full.limitAfterS ?? 0).toBeGreaterThan(0);
+    expect(limited.limitAfterS ?? 0).toBeGreaterThan(full.limitAfterS ?? Number.POSITIVE_INFINITY);
+  });
+});
+
+describe("turning for long", () => {
+  it("heats a roller's motor by copper and its own friction", () => {
+    const run = solveTurning(driveOf({ motor: warm, load: rollerOf(0.8), stages: [reduction(10, 0.9)] }));
+    expect(run?.windingFinalC).toBeGreaterThan(25);
+    expect(run?.trip.opensAfterS).toBeNull();
+    expect(solveTurning(driveOf())).toBeNull();
+  });
+
+  it("keeps a declared speed by a lowered duty and so draws less from the supply", () => {
+    const roller = { ...rollerOf(0.8), speedRadPerS: 10 };
+    const slow = solveTurning(driveOf({ motor: warm, load: roller, stages: [reduction(10, 0.9)] }));
+    const fast = solveTurning(driveOf({ motor: warm, load: rollerOf(0.8), stages: [reduction(10, 0.9)] }));
+    expect(slow?.sourceCurrentA ?? 0).toBeLessThan(fast?.sourceCurrentA ?? 0);
+  });
+});
+
+describe("repeats", () => {
+  it("settle where a cycle's mean copper heat is steady, between one travel and holding the rms current for ever", () => {
+    const drive = driveOf({ motor: warm, load: armOf(1, 0.4, -1, 1), stages: [reduction(60, 0.8)], everyS: 6 });
+    const repeated = solveRepeats(drive);
+    const travel = solveTravel(drive);
+    expect(repeated).toMatchObject({ runsAway: false, fits: true, tripsAfterS: null });
+    expect(repeated?.windingPeakC ?? 0).toBeGreaterThan(travel?.windingPeakC ?? Number.POSITIVE_INFINITY);
+    // Mean copper heat over the cycle, at the peak's resistance, times both resistances bounds the mean rise.
+    const meanSquare = ((travel?.rmsMotorCurrentA ?? 0) ** 2 * (travel?.timeS ?? 0)) / 6;
+    const bound = 25 + meanSquare * motorAt(warm, repeated?.windingPeakC ?? 25).resistanceOhm * 10;
+    const swing = (travel?.windingPeakC ?? 25) - 25;
+    expect(repeated?.windingPeakC ?? 0).toBeLessThan(bound + 2 * swing + 1);
+    expect(solveRepeats({ ...drive, everyS: 0.2 })?.fits).toBe(false);
+  });
+
+  it("open a breaker that one travel leaves closed", () => {
+    const drive = driveOf({
+      load: armOf(4, 0.4, -1, 1),
+      stages: [reduction(60, 0.8)],
+      everyS: 0.8,
+      protection: { kind: "breaker", holdCurrentA: 12, tripsAtA: 24, tripsAfterS: 3, carries: "motor" },
+    });
+    expect(solveTravel(drive)?.opensAfterS).toBeNull();
+    expect(solveRepeats(drive)?.tripsAfterS ?? 0).toBeGreaterThan(0.8);
+  });
+
+  it("a flywheel's release takes its energy from all that turns, rotors too", () => {
+    const drive = driveOf({
+      motor: { ...plainMotor, rotorInertiaKgM2: 2e-5 },
+      stages: [reduction(0.5)],
+      load: { kind: "flywheel", inertiaKgM2: 1e-3, speedRadPerS: 600, dragNm: 0.05, releaseEnergyJ: 40 },
+    });
+    const release = solveRelease(drive);
+    const inertia = 1e-3 + 2e-5 * 0.25;
+    expect(release?.speedAfterRadPerS).toBeCloseToShare(Math.sqrt(600 ** 2 - 80 / inertia), 1e-12);
+    expect(release?.recovery.outcome).toBe("arrives");
+    expect(release?.recovery.timeS ?? 0).toBeLessThan(solveTravel(drive)?.timeS ?? 0);
+  });
+});
+
+describe("resting", () => {
+  it("cools a warm motor towards ambient", () => {
+    const plant = plantOf(driveOf({ motor: warm }));
+    const rest = solveHeld(plant, { kind: "held", torqueNm: 0, motorSpeedRadPerS: 0 }, 600, {
+      windingC: 100,
+      housingC: 80,
+      protection: 0,
+      fast: 0,
+    });
+    expect(rest.carried.windingC).toBeLessThan(60);
+    expect(rest.carried.windingC).toBeGreaterThan(25);
+  });
+});
