@@ -28,11 +28,10 @@ if (process.argv[1] && resolve(process.argv[1]) === fileURLToPath(import.meta.ur
 
 /** Builds everything once, minified, and removes what an earlier build left. */
 export async function bundle() {
-  const built = presentTargets();
   const [results, types, copied] = await Promise.all([
     Promise.all([
       buildTypeScript(join(dist, "typescript.js")),
-      ...built.map((target) => esbuild.build(optionsOf(target, { minify: true }))),
+      ...targets.map((target) => esbuild.build(optionsOf(target, { minify: true }))),
     ]),
     writeDeclarationTypes(DECLARATIONS, join(dist, "declarations")),
     copyFiles(),
@@ -64,7 +63,7 @@ async function watch() {
     },
   };
   const contexts = await Promise.all(
-    presentTargets().map((target) => {
+    targets.map((target) => {
       const options = optionsOf(target, { sourcemap: true, logLevel: "warning" });
       return esbuild.context({ ...options, plugins: [...options.plugins, announce] });
     }),
@@ -85,14 +84,6 @@ async function refreshTypes() {
   } catch (error) {
     console.error(error instanceof Error ? error.message : error);
   }
-}
-
-function presentTargets() {
-  return targets.filter(({ entry, later }) => {
-    const present = existsSync(join(repositoryRoot, entry));
-    if (!present && !later) throw new Error(`${entry} is missing.`);
-    return present;
-  });
 }
 
 /**

@@ -5,7 +5,6 @@
  * @typedef {object} Target
  * @property {string} entry path from the repository's root
  * @property {string} outfile path inside dist/
- * @property {boolean} [later] the entry may not exist yet
  * @property {import("esbuild").BuildOptions} options
  */
 
@@ -24,14 +23,12 @@ export const targets = [
   {
     entry: "extension/client/browser.ts",
     outfile: "client.web.cjs",
-    later: true,
     options: { ...browser, format: "cjs", external: ["vscode"] },
   },
   { entry: "extension/server/node.ts", outfile: "server.cjs", options: { ...node, format: "cjs" } },
   {
     entry: "extension/server/browser.ts",
     outfile: "server.web.js",
-    later: true,
     options: { ...browser, format: "iife" },
   },
   {

@@ -2,6 +2,7 @@
 import * as vscode from "vscode";
 import { isSource } from "./documents.js";
 import type { GateWorkspace } from "./gate.js";
+import { readText } from "./readText.js";
 
 /** Typing is looked at when it pauses. */
 const PAUSE_MS = 400;
@@ -14,7 +15,7 @@ export const gateWorkspace: GateWorkspace = {
   readNearestManifest: async (uri) => {
     for (const folder of foldersAbove(vscode.Uri.parse(uri))) {
       const text = await readText(vscode.Uri.joinPath(folder, "package.json"));
-      if (text !== undefined) return text;
+      if (text !== null) return text;
     }
     return undefined;
   },
@@ -44,13 +45,5 @@ function* foldersAbove(uri: vscode.Uri): Generator<vscode.Uri> {
   for (let folder = vscode.Uri.joinPath(uri, ".."); ; folder = vscode.Uri.joinPath(folder, "..")) {
     yield folder;
     if (folder.path === "/" || folder.path === "" || folder.path === ".") return;
-  }
-}
-
-async function readText(uri: vscode.Uri): Promise<string | undefined> {
-  try {
-    return new TextDecoder().decode(await vscode.workspace.fs.readFile(uri));
-  } catch {
-    return undefined;
   }
 }

@@ -46,7 +46,11 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
     await ours.server.stop();
     theirs.server.stop();
 
-    async function editBoth(file: BenchWorkspace["mechanism"], shown: readonly string[], into: { ours: number[]; theirs: number[] }) {
+    async function editBoth(
+      file: BenchWorkspace["mechanism"],
+      shown: readonly string[],
+      into: { ours: number[]; theirs: number[] },
+    ) {
       for (let edit = 0; edit < edits; edit++) {
         const number = file.numberAt(round * edits + edit);
         into.ours.push(
@@ -65,7 +69,10 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
       }
     }
   }
-  const pair = ({ ours, theirs }: { ours: number[]; theirs: number[] }): Pair => ({ ours: spreadOf(ours), theirs: spreadOf(theirs) });
+  const pair = ({ ours, theirs }: { ours: number[]; theirs: number[] }): Pair => ({
+    ours: spreadOf(ours),
+    theirs: spreadOf(theirs),
+  });
   return {
     opening: pair(opening),
     editInMechanism: pair(inMechanism),

@@ -28,7 +28,9 @@ async function benchBeside(): Promise<void> {
 async function besideOf(files: number, rounds: Parameters<typeof measureBeside>[1]): Promise<Beside> {
   const workspace = await writeWorkspace(join(cacheFolder, `../bench/workspace${files}`), files);
   const beside = await measureBeside(workspace, rounds);
-  console.log(`\n  ${workspace.files} files, ${workspace.lines} lines, a quarter declare mechanisms; ${beside.findings} findings`);
+  console.log(
+    `\n  ${workspace.files} files, ${workspace.lines} lines, a quarter declare mechanisms; ${beside.findings} findings`,
+  );
   tell("opening", beside.opening, "ms", 1 / 5);
   tell("edit in a mechanism's file", beside.editInMechanism, "ms", 1 / 4);
   tell("edit of a constant that five files use", beside.editOfConstant, "ms", 1 / 4);

@@ -24,7 +24,9 @@ export class LanguageServer {
   #heard: (published: PublishDiagnosticsParams) => void = () => {};
 
   constructor() {
-    this.process = spawn(process.execPath, [join(repositoryRoot, "dist/server.cjs"), "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
+    this.process = spawn(process.execPath, [join(repositoryRoot, "dist/server.cjs"), "--stdio"], {
+      stdio: ["pipe", "pipe", "inherit"],
+    });
     const { stdin, stdout } = this.process;
     if (stdin === null || stdout === null) throw new Error("The server has no streams.");
     this.#connection = createProtocolConnection(new StreamMessageReader(stdout), new StreamMessageWriter(stdin));
@@ -84,7 +86,10 @@ export class LanguageServer {
     const character = lines.at(-1)?.length ?? 0;
     const range = { start: { line, character }, end: { line, character: character + end - start } };
     const textDocument = { uri, version };
-    await this.#connection.sendNotification("textDocument/didChange", { textDocument, contentChanges: [{ range, text: number }] });
+    await this.#connection.sendNotification("textDocument/didChange", {
+      textDocument,
+      contentChanges: [{ range, text: number }],
+    });
     await this.#connection.sendNotification("textDocument/didSave", { textDocument: { uri } });
   }
 

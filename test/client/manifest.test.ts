@@ -2,6 +2,7 @@
 import { existsSync, readdirSync, readFileSync } from "node:fs";
 import path from "node:path";
 import { describe, expect, it } from "vitest";
+import { targets } from "../../extension/build/targets.mjs";
 
 const ROOT = path.join(import.meta.dirname, "../..");
 const manifest = JSON.parse(readFileSync(path.join(ROOT, "package.json"), "utf8"));
@@ -63,5 +64,12 @@ describe("the manifest", () => {
     expect(manifest.activationEvents).not.toContain("*");
     expect(manifest.extensionKind).toEqual(["workspace"]);
     expect(manifest.capabilities.untrustedWorkspaces.supported).toBe(true);
+  });
+
+  it("has an entry for each kind of host, and needs no disk", () => {
+    const built = targets.map(({ outfile }) => `./dist/${outfile}`);
+    expect(built).toContain(manifest.main);
+    expect(built).toContain(manifest.browser);
+    expect(manifest.capabilities.virtualWorkspaces).toBe(true);
   });
 });

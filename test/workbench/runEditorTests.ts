@@ -6,10 +6,12 @@ import { join } from "node:path";
 import { pathToFileURL } from "node:url";
 import { bundleHostTests } from "./bundleHostTests.js";
 import { bundleTests } from "./bundleTests.js";
+import { bundleWorkerTests } from "./bundleWorkerTests.js";
 import { RESULT_MARK } from "./host/resultMark.js";
 import { runMocha } from "./mochaResults.js";
 import { cacheFolder, demoFolder, plainFolder, workbenchFolder } from "./paths.js";
 import type { TestResult } from "./results.js";
+import { stageForBrowser } from "./stageExtension.js";
 import { startWorkbench, type Workbench, type WorkbenchOptions } from "./workbench.js";
 
 const HOST_TIMEOUT_MS = 5 * 60_000;
@@ -21,8 +23,9 @@ export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
   const workbench = await startWorkbench({ workspace: demoFolder, ...run });
   try {
     return [
-      ...(await runHost(workbench, "host", demoFolder)),
-      ...(await runHost(workbench, "hostElsewhere", plainFolder)),
+      ...(await runHost(workbench, "host", { workspace: demoFolder, tests: () => bundleHostTests("host") })),
+      ...(await runHost(workbench, "hostElsewhere", { workspace: plainFolder, tests: () => bundleHostTests("hostElsewhere") })),
+      ...(run.extensionMode === "development" ? await runWorkerHost(workbench) : []),
       ...(await runPage(workbench, run.extensionMode)),
     ];
   } finally {
@@ -30,7 +33,24 @@ export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
   }
 }
 
-async function runHost(workbench: Workbench, folder: string, workspace: string): Promise<TestResult[]> {
+/** An installed extension runs where its host is; only a folder without the Node entry runs in the page's worker. */
+async function runWorkerHost(workbench: Workbench): Promise<TestResult[]> {
+  const staged = await stageForBrowser();
+  try {
+    const tests = () => bundleWorkerTests("hostWorker", staged.folder);
+    return await runHost(workbench, "hostWorker", { workspace: demoFolder, tests, extension: staged.folder });
+  } finally {
+    await staged.remove();
+  }
+}
+
+interface HostRun {
+  readonly workspace: string;
+  readonly tests: () => Promise<string>;
+  readonly extension?: string;
+}
+
+async function runHost(workbench: Workbench, name: string, { workspace, tests, extension }: HostRun): Promise<TestResult[]> {
   const results: TestResult[] = [];
   const log: string[] = [];
   const onLog = (line: string) => {
@@ -39,18 +59,23 @@ async function runHost(workbench: Workbench, folder: string, workspace: string):
     else results.push(JSON.parse(line.slice(at + RESULT_MARK.length)));
   };
   try {
-    const tests = await bundleHostTests(folder);
-    const emptyExtension = await makeEmptyExtension();
-    const exitCode = await workbench.runHostTests({ workspace, tests, emptyExtension, onLog, timeoutMs: HOST_TIMEOUT_MS });
+    const exitCode = await workbench.runHostTests({
+      workspace,
+      extension,
+      tests: await tests(),
+      emptyExtension: await makeEmptyExtension(),
+      onLog,
+      timeoutMs: HOST_TIMEOUT_MS,
+    });
     const explained = exitCode === 0 || results.some(({ failure }) => failure !== undefined);
     if (!explained) throw new Error(`They ended with exit code ${exitCode}.`);
     if (results.length === 0) throw new Error("No tests ran.");
   } catch (error) {
-    const hostLog = `${workbench.logFile}.${folder}`;
+    const hostLog = `${workbench.logFile}.${name}`;
     await writeFile(hostLog, log.join("\n"));
     const message = error instanceof Error ? error.message : String(error);
     const failure = `${message}\nThe last log line: ${log.at(-1)}\nAll of the log: ${hostLog} and ${workbench.logFile}`;
-    results.push({ title: `the tests in the extension host (${folder})`, failure });
+    results.push({ title: `the tests in the extension host (${name})`, failure });
   }
   return results;
 }

@@ -31,6 +31,8 @@ export interface WorkbenchOptions {
 export interface HostTestOptions {
   /** The folder that is copied; else that of the workbench. */
   readonly workspace?: string | undefined;
+  /** Another folder of the extension than the workbench's. */
+  readonly extension?: string | undefined;
   /** The module whose `run` the extension host calls. */
   readonly tests: string;
   /** What a development host needs beside the installed extension: any folder with a manifest. */
@@ -121,9 +123,9 @@ async function drive(
       if (openFile) await editor.openFile(openFile);
       return editor;
     },
-    runHostTests: async ({ workspace: another, tests, emptyExtension, onLog, timeoutMs }) => {
+    runHostTests: async ({ workspace: another, extension: other, tests, emptyExtension, onLog, timeoutMs }) => {
       const folder = await takeCopy(another);
-      const address = server.address({ folder, extension: extension ?? emptyExtension, extensionTests: tests });
+      const address = server.address({ folder, extension: other ?? extension ?? emptyExtension, extensionTests: tests });
       const hostPage = await context.newPage();
       try {
         return await waitForExit(hostPage, address, onLog, timeoutMs);
