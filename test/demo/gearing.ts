@@ -1,6 +1,6 @@
 /** Tooth counts of the gears on the bench: change a gear here and every mechanism that uses it is checked again. */
 
-/** The steel pinion, on the tray hoist and on the watering arm. */
+/** The steel pinion, on the tray hoist, the watering arm and the soil press. */
 export const PINION = 16;
 
 export const TRAY_DRIVEN = 54;

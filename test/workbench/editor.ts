@@ -55,6 +55,25 @@ export class Editor {
     return rows;
   }
 
+  /** Opens the next problem behind the caret in the text, below its line. */
+  async showProblem(text: string): Promise<void> {
+    await this.page.keyboard.press("F8");
+    await this.page.locator(".marker-widget", { hasText: text }).waitFor();
+  }
+
+  /** Takes a view out of the side bar. */
+  async hideView(title: string): Promise<void> {
+    const header = this.page.locator(`.pane-header[aria-label^="${title}"]`);
+    const entry = this.page.locator(".monaco-menu .action-label", { hasText: `Hide '${title}'` });
+    await header.click({ button: "right" });
+    // A menu takes no click right after it came up.
+    const hide = async () => {
+      if ((await entry.count()) > 0) await entry.click({ timeout: 1000 }).catch(() => undefined);
+      return (await header.count()) === 0 ? true : undefined;
+    };
+    await waitUntil(`the view ${title} to be hidden`, hide);
+  }
+
   /** Scrolls the line of the saved file that holds `text` into the middle and puts the caret there. */
   async reveal(file: string, text: string): Promise<void> {
     const lines = (await readFile(join(this.folder, file), "utf8")).split("\n");

@@ -9,6 +9,11 @@ export type Step =
   /** Leaves the hover open; `holds` is what it must say, and guards the picture against showing something else. */
   | { readonly do: "hover"; readonly over: string; readonly holds: RegExp }
   | { readonly do: "runCommand"; readonly title: string }
+  /** Opens the next problem below its line; `holds` is what it must say. */
+  | { readonly do: "showProblem"; readonly holds: string }
+  | { readonly do: "hideView"; readonly title: string }
+  /** Puts the Mechanisms view in place of the files. */
+  | { readonly do: "showMechanisms" }
   /** Waits for a webview that shows what the selector asks for. */
   | { readonly do: "expectWebview"; readonly selector: string };
 
@@ -18,7 +23,55 @@ export interface Shot {
   readonly theme: "Dark Modern" | "Light Modern" | "Default High Contrast" | "Default High Contrast Light";
   /** The file of the demo that is opened first. */
   readonly file: string;
+  /** What is kept of the page, from its upper left corner, in CSS pixels. */
+  readonly size: { readonly width: number; readonly height: number };
   readonly steps: readonly Step[];
 }
 
-export const shots: readonly Shot[] = [];
+const HIDE_SIDE_BAR: Step = { do: "runCommand", title: "View: Toggle Primary Side Bar Visibility" };
+
+const MECHANISMS_ALONE: readonly Step[] = [
+  { do: "hideView", title: "Outline" },
+  { do: "hideView", title: "Timeline" },
+  { do: "showMechanisms" },
+];
+
+const NARROWER: Step = { do: "runCommand", title: "Decrease Editor Width" };
+
+/** The chart of the shelf lift beside its code. */
+const CHART: Pick<Shot, "file" | "size" | "steps"> = {
+  file: "mechanisms/shelfLift.ts",
+  size: { width: 1200, height: 656 },
+  steps: [
+    HIDE_SIDE_BAR,
+    { do: "expectSquiggle", under: "shelfLift" },
+    { do: "reveal", file: "mechanisms/shelfLift.ts", text: "motorCount" },
+    { do: "runCommand", title: "Loadmark: Show Operating Point" },
+    { do: "expectWebview", selector: "#chart .content:not([hidden])" },
+    NARROWER,
+  ],
+};
+
+export const shots: readonly Shot[] = [
+  {
+    name: "warning-dark",
+    theme: "Dark Modern",
+    file: "mechanisms/shelfLift.ts",
+    size: { width: 1200, height: 520 },
+    steps: [
+      { do: "expectSquiggle", under: "shelfLift" },
+      ...MECHANISMS_ALONE,
+      { do: "reveal", file: "mechanisms/shelfLift.ts", text: "import { pack }" },
+      { do: "showProblem", holds: "takes it back below half" },
+    ],
+  },
+  {
+    name: "hover-light",
+    theme: "Light Modern",
+    file: "gearing.ts",
+    size: { width: 1200, height: 520 },
+    steps: [HIDE_SIDE_BAR, { do: "hover", over: "PINION", holds: /tray hoist\t[\s\S]*const PINION/ }],
+  },
+  { name: "chart-dark", theme: "Dark Modern", ...CHART },
+  { name: "chart-light", theme: "Light Modern", ...CHART },
+];

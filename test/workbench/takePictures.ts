@@ -15,11 +15,20 @@ export interface PictureOptions {
   readonly extension?: string;
 }
 
-const VIEWPORT = { width: 1100, height: 640 };
-const DEVICE_PIXELS = 2;
+/** Tall, since an editor lets a hover take a quarter of its height; only a part of it is kept. */
+const VIEWPORT = { width: 1200, height: 1600 };
+const DEVICE_PIXELS = 1.5;
+/** Without what is not about the project. */
 const PICTURE_SETTINGS = {
   "editor.fontSize": 14,
-  "outline.collapseItems": "alwaysCollapse",
+  "editor.lightbulb.enabled": "off",
+  "editor.renderLineHighlight": "none",
+  "editor.scrollbar.horizontal": "hidden",
+  "editor.scrollbar.vertical": "hidden",
+  "editor.overviewRulerBorder": false,
+  "editor.hideCursorInOverviewRuler": true,
+  "workbench.activityBar.location": "hidden",
+  "workbench.editor.editorActionsLocation": "hidden",
 };
 
 export async function takePictures({
@@ -41,14 +50,14 @@ export async function takePictures({
   };
   const workbench = await startWorkbench(options);
   try {
-    for (const { name, theme, file, steps } of list) {
+    for (const { name, theme, file, size, steps } of list) {
       workbench.changeSettings({ ...PICTURE_SETTINGS, "workbench.colorTheme": theme });
       const editor = await workbench.open(file);
       // Else TypeScript's own part of a hover says that it is loading.
       await editor.waitUntilIdle();
       for (const step of steps) await takeStep(editor, step);
       const path = join(into, `${name}.png`);
-      await editor.page.screenshot({ path, animations: "disabled" });
+      await editor.page.screenshot({ path, animations: "disabled", clip: { x: 0, y: 0, ...size } });
       console.log(`  ${path}`);
     }
   } finally {
@@ -72,6 +81,13 @@ async function takeStep(editor: Editor, step: Step): Promise<void> {
       return;
     case "runCommand":
       return editor.runCommand(step.title);
+    case "showProblem":
+      return editor.showProblem(step.holds);
+    case "hideView":
+      return editor.hideView(step.title);
+    case "showMechanisms":
+      await editor.showMechanisms();
+      return;
     case "expectWebview":
       await editor.webview(step.selector);
       return;
