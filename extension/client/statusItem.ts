@@ -12,7 +12,8 @@ export function createStatusItem(server: Server): vscode.Disposable {
       item.hide();
       return;
     }
-    item.text = `$(pulse) ${status.text}`;
+    // With its name: other counts of errors stand in the same bar.
+    item.text = `$(pulse) Loadmark: ${status.text}`;
     item.tooltip = `Loadmark: ${status.tooltip}`;
     item.accessibilityInformation = { label: `Loadmark: ${status.tooltip}` };
     item.show();

@@ -17,7 +17,7 @@ export interface PictureOptions {
 
 /** Tall, since an editor lets a hover take a quarter of its height; only a part of it is kept. */
 const VIEWPORT = { width: 1200, height: 1600 };
-const DEVICE_PIXELS = 1.5;
+const DEVICE_PIXELS = 1.4;
 /** Without what is not about the project. */
 const PICTURE_SETTINGS = {
   "editor.fontSize": 14,

@@ -37,7 +37,7 @@ describe("the overview of the workspace", () => {
 
   it("counts findings in one status item, and follows an edit", async () => {
     const editor = await workbench().open("mechanisms/wateringArm.ts");
-    await waitForStatus(editor, "1 error");
+    await waitForStatus(editor, "Loadmark: 1 error");
     assert.equal(await editor.page.locator(STATUS).count(), 1);
     // It no longer stalls, but is past its peak of power still.
     await editor.retype("spur(PINION, WATERING_DRIVEN)", "spur(10, 60)");
