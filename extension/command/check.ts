@@ -1,15 +1,18 @@
 /** One check of a file or folder: finds the files, analyses them, writes the report. */
-import { statSync } from "node:fs";
+import { realpathSync, statSync } from "node:fs";
 import path from "node:path";
 import { createAnalyser } from "../analysis/analyser.js";
 import type { Analysis } from "../analysis/analysis.js";
 import { loadParser, type Parser } from "../analysis/parser.js";
 import { type Proposal, proposalsFor } from "../analysis/propose.js";
 import { sensitivitiesOf } from "../analysis/sensitivity.js";
+import { mentionsDeclarations } from "../analysis/sources.js";
+import { findMoved, writeMovedMarkdown, writeMovedText } from "../report/changes.js";
 import { type Extras, makeReport } from "../report/report.js";
 import { writeText } from "../report/text.js";
-import type { CommandLine, FailOn } from "./commandLine.js";
+import type { CheckLine, FailOn } from "./commandLine.js";
 import { createDiskSnapshot, findSources, toName } from "./disk.js";
+import { readCommitted } from "./gitSnapshot.js";
 
 export interface CheckResult {
   readonly output: string;
@@ -17,12 +20,8 @@ export interface CheckResult {
   readonly status: 0 | 1 | 2;
 }
 
-export async function check({
-  path: given,
-  format,
-  failOn,
-  propose,
-}: Extract<CommandLine, { kind: "check" }>): Promise<CheckResult> {
+export async function check(line: CheckLine): Promise<CheckResult> {
+  const { path: given, format, failOn, propose } = line;
   const target = path.resolve(given);
   const stats = statSync(target, { throwIfNoEntry: false });
   if (stats === undefined) return { output: "", complaint: `there is no "${given}"`, status: 2 };
@@ -31,6 +30,8 @@ export async function check({
   if (roots.length === 0) return { output: "", complaint: `no file in "${given}" mentions "loadmark"`, status: 2 };
   const parser = await loadParser();
   const analysis = createAnalyser(parser).analyse(roots, snapshot);
+  const status = fails(analysis, failOn) ? 1 : 0;
+  if (line.against !== undefined) return { output: tellMoved(analysis, parser, target, line.against, line), status };
   // Names count from the checked folder, so that the report does not depend on where the command was started; a
   // terminal can open only what counts from the working directory.
   const base = format === "json" ? (stats.isDirectory() ? target : path.dirname(target)) : process.cwd();
@@ -39,7 +40,17 @@ export async function check({
     format === "json"
       ? `${JSON.stringify(makeReport(analysis, nameOf, extrasOf(analysis, parser)), null, 2)}\n`
       : writeText(analysis, nameOf, propose ? proposalsOf(analysis, parser) : []);
-  return { output, status: fails(analysis, failOn) ? 1 : 0 };
+  return { output, status };
+}
+
+/** The same folder as a commit holds it, analysed in the same way. */
+function tellMoved(analysis: Analysis, parser: Parser, target: string, against: string, { format, movedBy }: CheckLine): string {
+  const isFile = statSync(target).isFile();
+  const { snapshot, sources } = readCommitted(realpathSync(isFile ? path.dirname(target) : target), against);
+  const mentioning = sources.filter((file) => mentionsDeclarations(snapshot.read(file) ?? ""));
+  const roots = isFile ? mentioning.filter((file) => path.posix.basename(file) === path.basename(target)) : mentioning;
+  const moved = findMoved(createAnalyser(parser).analyse(roots, snapshot), analysis, movedBy);
+  return format === "markdown" ? writeMovedMarkdown(moved, against) : writeMovedText(moved, against);
 }
 
 function extrasOf(analysis: Analysis, parser: Parser): Extras {

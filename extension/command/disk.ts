@@ -1,10 +1,9 @@
 /** Files on disk for the analysis: names with slashes, texts read once, folders walked by the shared rules. */
 import { readdirSync, readFileSync } from "node:fs";
 import path from "node:path";
-import { mentionsDeclarations } from "../analysis/analyser.js";
 import type { Analysis } from "../analysis/analysis.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
-import { type FolderRules, isLeftOut, isSourceName, readFolderRules } from "../analysis/sources.js";
+import { type FolderRules, isLeftOut, isSourceName, mentionsDeclarations, readFolderRules } from "../analysis/sources.js";
 
 /** Every text is read at most once, so that the whole check sees one moment. */
 export function createDiskSnapshot(): Analysis["snapshot"] {
