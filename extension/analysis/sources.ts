@@ -3,6 +3,7 @@
  *
  * Pure: the hosts walk the disk, this says where not to go.
  */
+import { SPECIFIER } from "../declarations/table.js";
 
 const SOURCE = /\.(?:ts|mts|cts|tsx|js|mjs|cjs|jsx)$/;
 const DECLARATION_FILE = /\.d\.[mc]?ts$/;
@@ -13,6 +14,11 @@ const NEVER = new Set(["node_modules", "bower_components", "dist", "out", "build
 /** True for names of files that may hold declarations. */
 export function isSourceName(name: string): boolean {
   return SOURCE.test(name) && !DECLARATION_FILE.test(name);
+}
+
+/** True for texts worth evaluating: a cheap test before any parsing. */
+export function mentionsDeclarations(text: string): boolean {
+  return text.includes(SPECIFIER);
 }
 
 /** `leaveOut`: folders named by the settings above, relative to `settingsFolder`; all names are slash-separated. */

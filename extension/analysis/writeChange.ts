@@ -25,7 +25,7 @@ export function withEdits(snapshot: Snapshot, edits: readonly Edit[]): Snapshot 
     const text = changed.get(edit.file) ?? snapshot.read(edit.file) ?? "";
     changed.set(edit.file, text.slice(0, edit.start) + edit.newText + text.slice(edit.end));
   }
-  return { read: (file) => changed.get(file) ?? snapshot.read(file) };
+  return { ...snapshot, read: (file) => changed.get(file) ?? snapshot.read(file) };
 }
 
 function editsOf(call: DefinitionCall, setting: Setting, snapshot: Snapshot): Edit[] | undefined {

@@ -14,6 +14,7 @@ import { dropStale, listReached } from "./freshness.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
 import { valueOfBinding, valueOfTarget } from "./names.js";
+import { listPassedOn } from "./passedOn.js";
 import { parseSource, type Source } from "./source.js";
 import type { TypeScript } from "./typescript.js";
 import { tooDeep, unknown } from "./unknown.js";
@@ -91,6 +92,7 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
     if (!Array.isArray(found)) problem ??= found;
     else for (const call of found) (call.span.file === file ? calls : elsewhere).add(call);
   }
+  const passesOn = listPassedOn(ctx, module);
   const reached = listReached(module);
   const reads = new Map([...reached].flatMap((each) => [...each.reads, ...each.importers.reads]));
   const having = (kind: (text: string | null | undefined) => boolean) =>
@@ -101,6 +103,7 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
     dependencies: [...new Set([file, ...having((text) => typeof text === "string")])],
     wanted: having((text) => text === undefined),
     missing: having((text) => text === null),
+    ...(passesOn.length === 0 ? {} : { passesOn }),
     ...(problem === undefined ? {} : { problem }),
   };
 }

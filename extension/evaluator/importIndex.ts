@@ -2,45 +2,103 @@
  * Which files may import which, for a host that has seen the texts of a whole workspace: an exported object may be changed there.
  *
  * Compares the last words of specifiers with the names of files, so it needs no parser and no disk, and may name a file too many but
- * none too few.
+ * none too few. Keeps no text.
  */
 
-export interface ImportIndex {
-  /** Notes a file's text, new or changed. */
-  set(file: string, text: string): void;
-  delete(file: string): void;
+export interface ImportIndex extends ImportView {
+  /** Notes a file's text, new or changed; says whether the file imports something else than before. */
+  set(file: string, text: string): boolean;
+  /** Says whether the file was known. */
+  delete(file: string): boolean;
+  /** Whether `set` would say so. */
+  differs(file: string, text: string): boolean;
+  /** The index as it is now, for good; the same object as long as nothing changes. */
+  capture(): ImportView;
+}
+
+export interface ImportView {
+  has(file: string): boolean;
+  files(): Iterable<string>;
   /** Files that may import this one, sorted. */
   importersOf(file: string): readonly string[];
 }
 
 export function createImportIndex(): ImportIndex {
-  const wordsByFile = new Map<string, ReadonlySet<string>>();
-  const filesByWord = new Map<string, Set<string>>();
-  const drop = (file: string): void => {
-    for (const word of wordsByFile.get(file) ?? []) filesByWord.get(word)?.delete(file);
-    wordsByFile.delete(file);
+  let wordsByFile = new Map<string, readonly string[]>();
+  let view: ImportView | undefined;
+  const pool = new Map<string, string>();
+  const capture = (): ImportView => {
+    view ??= createView(wordsByFile);
+    return view;
+  };
+  const change = (): Map<string, readonly string[]> => {
+    // A view that was handed out keeps the map that it knows.
+    if (view !== undefined) wordsByFile = new Map(wordsByFile);
+    view = undefined;
+    return wordsByFile;
   };
   return {
     set(file, text) {
-      drop(file);
-      const words = new Set(listSpecifiers(text).map(lastWord));
-      wordsByFile.set(file, words);
-      for (const word of words) {
-        const files = filesByWord.get(word) ?? new Set();
-        filesByWord.set(word, files.add(file));
-      }
+      const words = wordsIn(text).map((word) => keep(pool, word));
+      if (sameWords(wordsByFile.get(file), words)) return false;
+      change().set(file, words);
+      return true;
     },
-    delete: drop,
-    importersOf(file) {
-      const found = wordsOf(file).flatMap((word) => [...(filesByWord.get(word) ?? [])]);
-      return [...new Set(found)].filter((other) => other !== file).sort();
-    },
+    delete: (file) => wordsByFile.has(file) && change().delete(file),
+    differs: (file, text) => !sameWords(wordsByFile.get(file), wordsIn(text)),
+    capture,
+    has: (file) => wordsByFile.has(file),
+    files: () => wordsByFile.keys(),
+    importersOf: (file) => capture().importersOf(file),
   };
 }
 
 /** Whether a specifier may lead to a file, by its last word. */
 export function mayLeadTo(specifier: string, file: string): boolean {
   return wordsOf(file).includes(lastWord(specifier));
+}
+
+/** Turned round when it is first asked: most views never are. */
+function createView(wordsByFile: ReadonlyMap<string, readonly string[]>): ImportView {
+  let filesByWord: Map<string, string[]> | undefined;
+  const turnRound = (): Map<string, string[]> => {
+    const files = new Map<string, string[]>();
+    for (const [file, words] of wordsByFile) {
+      for (const word of words) {
+        const sharing = files.get(word);
+        if (sharing === undefined) files.set(word, [file]);
+        else sharing.push(file);
+      }
+    }
+    return files;
+  };
+  return {
+    has: (file) => wordsByFile.has(file),
+    files: () => wordsByFile.keys(),
+    importersOf(file) {
+      filesByWord ??= turnRound();
+      const found = wordsOf(file).flatMap((word) => filesByWord?.get(word) ?? []);
+      return [...new Set(found)].filter((other) => other !== file).sort();
+    },
+  };
+}
+
+/** Each once, in order. */
+function wordsIn(text: string): readonly string[] {
+  return [...new Set(listSpecifiers(text).map(lastWord))];
+}
+
+function sameWords(before: readonly string[] | undefined, after: readonly string[]): boolean {
+  return before?.length === after.length && before.every((word, index) => word === after[index]);
+}
+
+/** A part of a string may hold on to the whole of it, so that one word would keep its file's text: copied once. */
+function keep(pool: Map<string, string>, word: string): string {
+  const known = pool.get(word);
+  if (known !== undefined) return known;
+  const own: string = JSON.parse(JSON.stringify(word));
+  pool.set(own, own);
+  return own;
 }
 
 /** Every text that follows `from`, `import` or `require`. */

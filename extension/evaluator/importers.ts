@@ -158,7 +158,7 @@ function passedOn(ctx: Context, importer: Module, passer: Module, paths: readonl
 }
 
 /** The import that an exported name stands for: `import { A } from …; export { A };`. */
-function importBehind(
+export function importBehind(
   ctx: Context,
   entry: Export,
   module: Module,

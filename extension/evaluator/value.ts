@@ -164,6 +164,8 @@ export interface FileEvaluation {
   readonly wanted: readonly string[];
   /** Files that it looked for in vain: creating one of them may change this evaluation. */
   readonly missing: readonly string[];
+  /** Files whose exports this one exports as well, and the specifier of the definitions where it exports those; absent: none. */
+  readonly passesOn?: readonly string[];
   /** Why nothing of the file could be read; `calls` is then empty. */
   readonly problem?: Unknown;
 }

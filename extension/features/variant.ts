@@ -48,7 +48,7 @@ export function withText(snapshot: Snapshot, { file, start, end }: Span, rewrite
   const before = snapshot.read(file);
   if (typeof before !== "string") return snapshot;
   const changed = before.slice(0, start) + rewrite(before.slice(start, end)) + before.slice(end);
-  return { read: (asked) => (asked === file ? changed : snapshot.read(asked)) };
+  return { ...snapshot, read: (asked) => (asked === file ? changed : snapshot.read(asked)) };
 }
 
 /** The initialiser comes first, so that only this constant changes; then what it was made of, down to the literal. */

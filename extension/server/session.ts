@@ -5,9 +5,9 @@
  * connection or of what is shown; the host gives it files, and the engine is loaded when the first file mentions the declarations.
  */
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
-import { mentionsDeclarations } from "../analysis/analyser.js";
 import type { Analysis } from "../analysis/analysis.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
+import { mentionsDeclarations } from "../analysis/sources.js";
 import type { FileHost } from "./discovery.js";
 import type { Engine } from "./engine.js";
 import { withoutLeftOut } from "./leaveOut.js";

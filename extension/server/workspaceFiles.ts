@@ -3,8 +3,7 @@
  *
  * Every event leads to reading the file again, so that their order doesn't matter. Never watches or polls; unsaved text is not its business.
  */
-import { mentionsDeclarations } from "../analysis/analyser.js";
-import { isSourceName } from "../analysis/sources.js";
+import { isSourceName, mentionsDeclarations } from "../analysis/sources.js";
 import { type FileHost, isBelowSkippedFolder } from "./discovery.js";
 import { pathBelow } from "./fileKeys.js";
 import type { Texts } from "./texts.js";

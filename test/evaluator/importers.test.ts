@@ -179,4 +179,27 @@ describe("the index of imports", () => {
     index.delete("/a.ts");
     expect(index.importersOf("/b.ts")).toEqual([]);
   });
+
+  it("says whether a text imports something else than before", () => {
+    const index = createImportIndex();
+    const text = 'import "./b"; export const n = 1;';
+    expect([index.differs("/a.ts", text), index.set("/a.ts", text)]).toEqual([true, true]);
+    const edited = text.replace("1", "2");
+    expect([index.differs("/a.ts", edited), index.set("/a.ts", edited)]).toEqual([false, false]);
+    expect(index.differs("/a.ts", 'import "./c";')).toBe(true);
+    expect([index.delete("/a.ts"), index.delete("/a.ts")]).toEqual([true, false]);
+  });
+
+  it("hands out views that stay as they are, and the same one while nothing changes", () => {
+    const index = createImportIndex();
+    index.set("/a.ts", 'import "./b";');
+    const early = index.capture();
+    index.set("/a.ts", 'import "./b"; export {};');
+    expect(index.capture()).toBe(early);
+    index.set("/c.ts", 'import "./b";');
+    index.delete("/a.ts");
+    expect([...early.files()]).toEqual(["/a.ts"]);
+    expect(early.importersOf("/b.ts")).toEqual(["/a.ts"]);
+    expect(index.capture().importersOf("/b.ts")).toEqual(["/c.ts"]);
+  });
 });

@@ -180,3 +180,22 @@ describe("files that are not ES modules", () => {
     expect(calls.map(({ built }) => built !== undefined)).toEqual([true, true]);
   });
 });
+
+describe("what a file passes on", () => {
+  it.each<[string, string, string[] | undefined]>([
+    ["a star", 'export * from "gearbox"; export * from "./c";', ["gearbox", "/c.ts"]],
+    ["names", 'export { gear } from "gearbox"; export { A as B } from "./c";', ["gearbox", "/c.ts"]],
+    ["a namespace", 'export * as g from "gearbox";', ["gearbox"]],
+    [
+      "imported names",
+      'import { gear } from "gearbox"; import c from "./c"; export { gear }; export default c;',
+      ["gearbox", "/c.ts"],
+    ],
+    ["nothing of what it merely uses", 'import { gear } from "gearbox"; export const g = gear({ teeth: 4 });', undefined],
+    ["no types", 'export type { T } from "./c";', undefined],
+    ["nothing that is not there", 'export * from "./nowhere";', undefined],
+  ])("%s", (_name, code, files) => {
+    const evaluation = evaluateFixture(`${code}\n//- c.ts\nexport const A = 5; export default A;\n`);
+    expect(evaluation.passesOn?.toSorted()).toEqual(files?.toSorted());
+  });
+});

@@ -4,6 +4,7 @@
  * `//- path.ts` starts a file; without one the text is `robot.ts`. Under a line, `// ^^^^ warning past-peak: text` marks the exact characters of a
  * finding and a part of its message. Marks are comments, so they stay in the text that is analysed.
  */
+import { createImportIndex } from "../../extension/evaluator/importIndex.js";
 import type { Snapshot } from "../../extension/evaluator/value.js";
 
 export interface Mark {
@@ -30,10 +31,12 @@ export function readFixture(text: string): Fixture {
   const [before = "", ...named] = sections;
   if (before.trim() !== "") files.set(`${FOLDER}robot.ts`, before);
   for (let index = 0; index < named.length; index += 2) files.set(FOLDER + (named[index] ?? "").trim(), named[index + 1] ?? "");
+  const index = createImportIndex();
+  for (const [file, content] of files) index.set(file, content);
   return {
     files,
     marks: [...files].flatMap(([file, content]) => readMarks(file, content)),
-    snapshot: { read: (file) => files.get(file) ?? null },
+    snapshot: { read: (file) => files.get(file) ?? null, importersOf: (file) => index.importersOf(file) },
   };
 }
 
