@@ -154,7 +154,7 @@ export class Editor {
     // Its parts arrive one by one; what is there after a moment without "Loading..." is all of it.
     await this.page.waitForTimeout(HOVER_SETTLES_MS);
     if ((await loading.count()) > 0) return "";
-    return (await contents.allInnerTexts()).join("\n").replaceAll("\u00a0", " ");
+    return (await contents.allInnerTexts()).join("\n").replaceAll("\u00a0", " ").replaceAll("\u2002", "");
   }
 
   /** Takes the pointer and an open hover away. */
