@@ -10,18 +10,37 @@ import type { Declared } from "./declared.js";
 export function applyAllowances(findings: readonly Finding[], declared: Declared): Finding[] {
   const about: Finding[] = [];
   const silenced = new Set<Finding>();
-  for (const { name, call } of declared.mechanisms) {
-    for (const comment of call.leadingComments) {
-      const match = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/.exec(comment.text.trim());
-      if (match === null) continue;
-      const [, rule = "", reason = ""] = match;
-      const hit = findings.filter((finding) => finding.rule === rule && finding.mechanism === name);
-      const refusal = refuse(rule, reason, hit.length > 0, name);
-      if (refusal !== undefined) about.push(refusal(comment.span));
-      else for (const finding of hit) silenced.add(finding);
-    }
+  for (const { at, text, names } of listComments(declared)) {
+    const match = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/.exec(text.trim());
+    if (match === null) continue;
+    const [, rule = "", reason = ""] = match;
+    const hit = findings.filter((finding) => finding.rule === rule && finding.mechanism !== null && names.has(finding.mechanism));
+    const [name = ""] = names;
+    const refusal = refuse(rule, reason, hit.length > 0, name);
+    if (refusal !== undefined) about.push(refusal(at));
+    else for (const finding of hit) silenced.add(finding);
   }
   return [...findings.filter((finding) => !silenced.has(finding)), ...about];
+}
+
+interface Comment {
+  readonly at: Span;
+  readonly text: string;
+  /** The mechanisms below it: several where a loop or a helper declares them by one piece of text. */
+  readonly names: Set<string>;
+}
+
+function listComments({ mechanisms }: Declared): Comment[] {
+  const comments = new Map<string, Comment>();
+  for (const { name, call } of mechanisms) {
+    for (const { text, span } of call.leadingComments) {
+      const key = `${span.start} ${span.file}`;
+      const comment = comments.get(key) ?? { at: span, text, names: new Set() };
+      comments.set(key, comment);
+      comment.names.add(name);
+    }
+  }
+  return [...comments.values()];
 }
 
 function refuse(rule: string, reason: string, matches: boolean, mechanism: string): ((at: Span) => Finding) | undefined {

@@ -7,13 +7,17 @@ import { type Declared, stringIn } from "./declared.js";
 
 export function findInDeclarations(evaluations: readonly FileEvaluation[], declared: Declared, snapshot: Snapshot): Finding[] {
   const calls = evaluations.flatMap((evaluation) => evaluation.calls);
-  return [
+  const found = [
     ...evaluations.flatMap(findProblem),
     ...calls.flatMap((call) => findIssues(call, calls, snapshot)),
     ...findUnknowns(calls),
     ...findNamesTwice("mechanism", calls),
     ...findNamesTwice("robot", calls),
-  ].map((finding) => ({ ...finding, mechanism: finding.mechanism ?? mechanismAround(finding.at, declared) }));
+  ];
+  return mergeAlike(found).map((finding) => ({
+    ...finding,
+    mechanism: finding.mechanism ?? mechanismAround(finding.at, declared),
+  }));
 }
 
 /** A file that could not be read at all, such as one nested too deeply for any parser. */
@@ -99,6 +103,18 @@ function findNamesTwice(kind: "mechanism" | "robot", calls: readonly DefinitionC
     }
   }
   return findings;
+}
+
+/** The runs of a loop or a helper say the same of its text: told once, with all that is related. */
+function mergeAlike(findings: readonly Finding[]): Finding[] {
+  const merged = new Map<string, Finding>();
+  for (const finding of findings) {
+    const { at, rule, message, related } = finding;
+    const key = JSON.stringify([at.file, at.start, at.end, rule, message]);
+    const before = merged.get(key);
+    merged.set(key, { ...(before ?? finding), related: distinct([...(before?.related ?? []), ...related], at) });
+  }
+  return [...merged.values()];
 }
 
 function mechanismAround(at: Span, declared: Declared): string | null {

@@ -68,6 +68,7 @@ export function createJudge(): (declared: Declared) => Judged {
   };
   return ({ mechanisms, motors, robots }) => {
     const findings: Finding[] = [];
+    const isShared = sharedPlaces(mechanisms);
     const judged = mechanisms.map((one): AnalysedMechanism => {
       const mechanism = one.declared;
       if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
@@ -76,7 +77,10 @@ export function createJudge(): (declared: Declared) => Judged {
       }
       const robot = robotOf(mechanism, robots);
       const { drive, numbers, corners, verdicts } = solve(mechanism, one.call, robot);
-      for (const { rule, verdict } of verdicts) findings.push(toFinding(rule, verdict, one.at, one.call, one.name));
+      for (const { rule, verdict } of verdicts) {
+        const finding = toFinding(rule, verdict, one.at, one.call, one.name);
+        findings.push(isShared(one.at) ? { ...finding, message: `${one.name}: ${finding.message}` } : finding);
+      }
       return { ...one, drive, numbers, ...tellAssumptions(mechanism, robot?.declared, corners) };
     });
     remembered.forgetUnused();
@@ -133,6 +137,14 @@ function toFinding(
 ): Finding {
   const related = comesFrom(call, verdict.blames ?? []);
   return { rule: rule.id, level: verdict.level ?? rule.level, mechanism, message: verdict.message, at, related };
+}
+
+/** Where a loop or a helper declares several mechanisms by one piece of text: a finding there must say which of them it means. */
+function sharedPlaces(mechanisms: Declared["mechanisms"]): (at: Span) => boolean {
+  const counts = new Map<string, number>();
+  const keyOf = ({ file, start, end }: Span): string => `${start} ${end} ${file}`;
+  for (const { at } of mechanisms) counts.set(keyOf(at), (counts.get(keyOf(at)) ?? 0) + 1);
+  return (at) => (counts.get(keyOf(at)) ?? 0) > 1;
 }
 
 function tellWhyUnknown(call: DefinitionCall): string {

@@ -20,7 +20,8 @@ export function listCallsElsewhere(ctx: Context, node: ts.CallExpression, module
     ctx.evaluate(node, frame);
     const pending = listBelow(frame.children.get(node) ?? [], () => true);
     const seen = new Set<Frame>();
-    for (let next = pending.pop(); next !== undefined; next = pending.pop()) {
+    // What is called on the way joins at the end.
+    for (const next of pending) {
       if (seen.has(next)) continue;
       seen.add(next);
       for (const call of evaluateIn(ctx, next, pending)) if (call.span.file !== module.file) found.add(call);

@@ -44,4 +44,25 @@ export const hub = ${HUB}
 export const hub = ${HUB}
 //           ^^^ warning past-peak: 1.2 N·m`);
   });
+
+  const LIST = '[["left", "1.2 N*m"], ["fine", "0.2 N*m"], ["right", "1.5 N*m"]] as const';
+
+  it("hold for all mechanisms that a loop declares, and match where one of them has the finding", () => {
+    checkFindings(`${PRELUDE}
+for (const [name, torque] of ${LIST}) {
+  // loadmark-allow past-peak: short bursts only
+  mechanism(name, { motor: twelveVolt, stages: [], load: roller({ torque }) });
+}`);
+  });
+
+  it("in a loop are told once", () => {
+    checkFindings(`${PRELUDE}
+for (const [name, torque] of ${LIST}) {
+     // loadmark-allow stalls: it has a spring
+  // ^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^^ warning bad-declaration: Nothing to allow
+  mechanism(name, { motor: twelveVolt, stages: [], load: roller({ torque }) });
+  //        ^^^^ warning past-peak: left
+  //        ^^^^ warning past-peak: right
+}`);
+  });
 });
