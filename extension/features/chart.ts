@@ -12,7 +12,6 @@ import { linePoint } from "../model/peaks.js";
 import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "./bestPoints.js";
 import { type ChartLimit, limitsOf, torqueAtCurrent } from "./chartLimits.js";
 import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./chartPoint.js";
-import { driveOf } from "./drives.js";
 import { positionWords } from "./positionWords.js";
 import { findingsAbout, type State, verdictOf } from "./verdict.js";
 
@@ -74,7 +73,7 @@ const STEPS = 100;
 /** `undefined` for an unknown name, or a mechanism without numbers. */
 export function operatingPointChart(analysis: Analysis, mechanismName: string): OperatingPointChart | undefined {
   const mechanism = analysis.mechanisms.find(({ name, numbers }) => name === mechanismName && numbers !== undefined);
-  const drive = mechanism && driveOf(analysis, mechanism);
+  const drive = mechanism?.drive;
   if (mechanism?.numbers === undefined || drive === undefined) return undefined;
   const { hardest } = mechanism.numbers;
   const { state, words } = verdictOf(analysis, mechanism);

@@ -4,8 +4,8 @@
  * Works on values and their origins alone; knows no field and no unit.
  */
 import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import { robotOf } from "../analysis/lentSupply.js";
 import type { DefinitionCall, Known, Origin, Span, Value } from "../evaluator/value.js";
-import { robotOf } from "./drives.js";
 
 /** One plain value among the arguments of a call. */
 export interface Leaf {
@@ -24,7 +24,8 @@ export function leavesOf(call: DefinitionCall): Leaf[] {
 
 /** Numbers and texts that a mechanism's result rests on, the supply of its robot included. */
 export function feedsOf(analysis: Analysis, mechanism: AnalysedMechanism): Leaf[] {
-  const robot = mechanism.declared?.supply === undefined ? robotOf(analysis, mechanism.declared) : undefined;
+  const { declared } = mechanism;
+  const robot = declared !== undefined && declared.supply === undefined ? robotOf(declared, analysis.robots) : undefined;
   const supply = robot === undefined ? undefined : valueIn(robot.call.args[1], "supply");
   return [...reachableCalls([...mechanism.call.args, ...(supply ? [supply] : [])], mechanism.call)].flatMap(leavesOf);
 }

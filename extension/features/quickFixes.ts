@@ -42,7 +42,9 @@ const LONGEST_TITLE = 160;
 
 /** A nearest miss has nothing to apply. */
 function proposedFix(finding: Finding, { summary, edits }: Proposal): QuickFix[] {
-  return edits.length === 0 ? [] : [{ title: plainText(summary.replace(/\.$/, ""), LONGEST_TITLE), finding, kind: "propose", edits }];
+  return edits.length === 0
+    ? []
+    : [{ title: plainText(summary.replace(/\.$/, ""), LONGEST_TITLE), finding, kind: "propose", edits }];
 }
 
 /** The declarations' refusals end in the text that was meant. */

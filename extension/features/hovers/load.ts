@@ -5,7 +5,6 @@ import type { DefinitionCall } from "../../evaluator/value.js";
 import { hardestPosition } from "../../model/hardest.js";
 import { shaftLoadOf } from "../../model/shaftLoad.js";
 import { writeNumber, writeQuantity } from "../../units/write.js";
-import { driveOf } from "../drives.js";
 import { inertMarkdown } from "../inertText.js";
 import { positionWords } from "../positionWords.js";
 import { type Table, writeBlock } from "./block.js";
@@ -18,7 +17,7 @@ export function describeLoad(analysis: Analysis, call: DefinitionCall): string {
   if (load === undefined)
     return writeBlock({ verdict: `Not checked: ${call.definition}`, notes: ["The declaration is not accepted."] });
   const moving = analysis.mechanisms.filter(({ declared }) => declared?.load === load);
-  const rows = moving.slice(0, SHOWN).flatMap((mechanism) => rowOf(analysis, mechanism));
+  const rows = moving.slice(0, SHOWN).flatMap((mechanism) => rowOf(mechanism));
   return writeBlock({
     verdict: `${load.kind}: ${
       moving.length === 0
@@ -32,8 +31,8 @@ export function describeLoad(analysis: Analysis, call: DefinitionCall): string {
   });
 }
 
-function rowOf(analysis: Analysis, mechanism: AnalysedMechanism): string[][] {
-  const drive = driveOf(analysis, mechanism);
+function rowOf(mechanism: AnalysedMechanism): string[][] {
+  const { drive } = mechanism;
   if (drive === undefined) return [];
   const load = shaftLoadOf(drive);
   const { outputTorqueNm } = hardestPosition(drive);

@@ -6,7 +6,6 @@ import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
 import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
 import { bestEfficiencyPoint, greatestPowerPoint } from "../bestPoints.js";
-import { driveOf } from "../drives.js";
 import { callsWithin } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { chartLink, revealLink } from "../links.js";
@@ -32,7 +31,7 @@ export function describeMechanisms(analysis: Analysis, mechanisms: readonly Anal
 
 function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, shared: readonly string[]): string {
   const verdict = verdictOf(analysis, mechanism);
-  const drive = driveOf(analysis, mechanism);
+  const { drive } = mechanism;
   const { numbers } = mechanism;
   const name = inertMarkdown(mechanism.name);
   if (numbers === undefined || drive === undefined) {
