@@ -1,4 +1,4 @@
-/** The server bundle, built from the sources of now in the way that dist/ is, so that no test ever talks to an old one. */
+/** Bundles of the product, built from the sources of now in the way that dist/ is, so that no test ever talks to an old one. */
 import { existsSync, mkdirSync } from "node:fs";
 import path from "node:path";
 import { build } from "esbuild";
@@ -8,9 +8,18 @@ import { buildTypeScript, shareTypeScript } from "../../extension/build/typescri
 const ROOT = path.join(import.meta.dirname, "../..");
 
 /** Gives the path of a server that can be run with Node. `name` keeps test files that run at once apart. */
-export async function buildServer(name: string): Promise<string> {
-  const target = targets.find(({ outfile }) => outfile === "server.cjs");
-  if (target === undefined) throw new Error("The build has no server.");
+export function buildServer(name: string): Promise<string> {
+  return buildBundle("server.cjs", name);
+}
+
+/** The same for the command. */
+export function buildCommand(name: string): Promise<string> {
+  return buildBundle("command.js", name);
+}
+
+async function buildBundle(bundle: string, name: string): Promise<string> {
+  const target = targets.find(({ outfile }) => outfile === bundle);
+  if (target === undefined) throw new Error(`The build has no ${bundle}.`);
   const folder = path.join(ROOT, "node_modules/.cache/loadmark/server", name);
   mkdirSync(folder, { recursive: true });
   const typescript = path.join(folder, "typescript.js");
