@@ -2,7 +2,8 @@
 
 import assert from "node:assert/strict";
 import * as vscode from "vscode";
-import { closeAll, rangeOf, retype, show, undoAll, waitForFinding, waitForFindingOn, waitForNoFinding } from "./demo.js";
+import { mechanismIn, reportOn } from "../reportOn.js";
+import { closeAll, folder, rangeOf, retype, show, undoAll, waitForFinding, waitForFindingOn, waitForNoFinding } from "./demo.js";
 
 const LIFT = "mechanisms/shelfLift.ts";
 
@@ -45,6 +46,27 @@ describe("quick fixes", () => {
     assert.ok(document.lineAt(past.range.start.line + 1).text.startsWith("export const shelfLift"));
     await waitForNoFinding(LIFT, "past-peak");
     await vscode.commands.executeCommand("workbench.action.files.revert");
+    await waitForFinding(LIFT, "past-peak");
+  });
+
+  it("offer another gear in another file, whose predicted result comes true", async () => {
+    const { document } = await show(LIFT);
+    const past = await waitForFinding(LIFT, "past-peak");
+    const { proposals } = await reportOn(folder().fsPath);
+    const [proposal] = proposals.filter(({ mechanism, rule }) => mechanism === "shelf lift" && rule === "past-peak");
+    assert.equal(proposal?.edits[0]?.file, "gearing.ts");
+    const fixes = await fixesAt(document, past.range);
+    const fix = fixes.find(({ title }) => title === proposal?.summary.replace(/\.$/, ""));
+    assert.ok(fix?.edit, `None of ${JSON.stringify(fixes.map(({ title }) => title))} is "${proposal?.summary}".`);
+    const gearing = await show("gearing.ts");
+    const saved = gearing.document.getText();
+    await vscode.workspace.applyEdit(fix.edit);
+    await waitForNoFinding(LIFT, "past-peak");
+    await gearing.document.save();
+    const { hardest } = mechanismIn(await reportOn(folder().fsPath), "shelf lift");
+    assert.equal(hardest.stallShare, proposal.predicted.stallShare);
+    await undoAll(gearing, saved);
+    await gearing.document.save();
     await waitForFinding(LIFT, "past-peak");
   });
 
