@@ -32,7 +32,7 @@ export function evaluateAll(evaluator: Evaluator, roots: readonly string[], snap
       const evaluation = evaluator.evaluateFile(file, snapshot);
       files.set(file, evaluation);
       for (const one of evaluation.wanted) wanted.add(one);
-      queue.push(...evaluation.dependencies.filter((one) => !files.has(one) && isWorthEvaluating(snapshot.read(one))));
+      queue.push(...evaluation.dependencies.filter((one) => !files.has(one) && isWorthEvaluating(one, snapshot)));
       if (isPasser(evaluation)) passers.add(file);
     }
   };
@@ -53,6 +53,8 @@ function isPasser({ passesOn, calls }: FileEvaluation): boolean {
   return passesOn?.includes(SPECIFIER) === true || calls.some(({ open }) => open);
 }
 
-function isWorthEvaluating(text: string | null | undefined): boolean {
-  return typeof text === "string" && mentionsDeclarations(text);
+/** A file that was found through a link is evaluated under its own name. */
+function isWorthEvaluating(file: string, snapshot: Snapshot): boolean {
+  const text = snapshot.read(file);
+  return typeof text === "string" && mentionsDeclarations(text) && (snapshot.canonical?.(file) ?? file) === file;
 }

@@ -25,7 +25,7 @@ export async function check(line: CheckLine): Promise<CheckResult> {
   const target = path.resolve(given);
   const stats = statSync(target, { throwIfNoEntry: false });
   if (stats === undefined) return { output: "", complaint: `there is no "${given}"`, status: 2 };
-  const snapshot = createDiskSnapshot();
+  const snapshot = createDiskSnapshot(stats.isDirectory() ? target : path.dirname(target));
   const roots = stats.isDirectory() ? findSources(target, snapshot) : [toName(target)];
   if (roots.length === 0) return { output: "", complaint: `no file in "${given}" mentions "loadmark"`, status: 2 };
   const parser = await loadParser();

@@ -4,6 +4,7 @@ import path from "node:path";
 import type { Analysis } from "../analysis/analysis.js";
 import { isLeftOut, isSourceName } from "../analysis/sources.js";
 import { toName } from "./disk.js";
+import { createImporters } from "./importers.js";
 
 export interface CommittedTexts {
   readonly snapshot: Analysis["snapshot"];
@@ -36,7 +37,7 @@ export function readCommitted(folder: string, revision: string): CommittedTexts 
   };
   const below = `${toName(folder)}/`;
   const sources = [...files].filter((file) => file.startsWith(below) && isSourceName(file) && !isBelowLeftOut(file, below));
-  return { snapshot: { read }, sources: sources.sort() };
+  return { snapshot: { read, importersOf: createImporters(() => sources, read) }, sources: sources.sort() };
 }
 
 function isBelowLeftOut(file: string, below: string): boolean {
