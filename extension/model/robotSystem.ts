@@ -69,6 +69,7 @@ export interface RobotSystem extends OdeSystem {
 const HEAT_SCALE_K = 100;
 /** Sums are usually this share of full current over the whole time. */
 const SUM_SHARE = 0.01;
+const LEAST_SCALE = 1e-9;
 
 export function createRobotSystem(parts: readonly RobotPart[], sharing: Sharing): RobotSystem {
   const { supply, bus, plantBus } = sharing;
@@ -224,7 +225,8 @@ function layOut(
 
 function scaleOf(seats: readonly Seat[], places: SharedPlaces, size: number, openCircuitV: number, fullA: number): Float64Array {
   const scale = new Float64Array(size).fill(1);
-  let longestS = 0;
+  /** Without current the sums stay at 0, whatever counts as 1. */
+  let longestS = LEAST_SCALE;
   for (const { unit, place } of seats) {
     const { layout, scales, plant } = unit.part;
     const put = (k: number, value: number): void => {
@@ -237,7 +239,7 @@ function scaleOf(seats: readonly Seat[], places: SharedPlaces, size: number, ope
     put(layout.energy, SUM_SHARE * openCircuitV * plant.count * scales.currentA * scales.timeS);
     if (unit.demand) longestS = Math.max(longestS, scales.timeS);
   }
-  const charge = SUM_SHARE * Math.max(fullA * longestS, Number.MIN_VALUE);
+  const charge = SUM_SHARE * Math.max(fullA, LEAST_SCALE) * longestS;
   scale[places.charge] = charge;
   scale[places.depletion] = charge;
   scale[places.energy] = charge * openCircuitV;
