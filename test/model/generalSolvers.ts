@@ -1,5 +1,6 @@
 /** General-purpose solvers of ordinary differential equations that the model's own integrator is compared with. */
 import { createRequire } from "node:module";
+import { all, create } from "mathjs";
 
 export type Rates = (timeS: number, state: number[]) => number[];
 
@@ -29,4 +30,19 @@ export function solveByOdex(rates: Rates, start: readonly number[], toS: number,
   const result = solver.solve(rates, 0, [...start], toS);
   if (result.outcome !== 0) throw new Error(`odex did not converge: outcome ${result.outcome}`);
   return result.y;
+}
+
+const math = create(all ?? {}) as unknown as {
+  solveODE(
+    rates: Rates,
+    span: readonly [number, number],
+    start: number[],
+    options: object,
+  ): { readonly t: number[]; readonly y: number[][] };
+};
+
+/** Dormand and Prince's method of order 5. */
+export function solveByMathjs(rates: Rates, start: readonly number[], toS: number, tolerance: number): number[] {
+  const options = { method: "RK45", tol: tolerance, firstStep: toS / 1000, maxIter: 100_000 };
+  return math.solveODE(rates, [0, toS], [...start], options).y.at(-1) ?? [];
 }
