@@ -35,12 +35,13 @@ export function createAnalyser(typescript: TypeScript): Analyser {
       const declared = collectDeclared([...files.values()].flatMap(({ calls }) => calls));
       const judged = judge(declared);
       const found = [...findInDeclarations([...files.values()], declared, snapshot), ...judged.findings];
-      const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))];
+      const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))].sort(byPlace);
       return {
         mechanisms: judged.mechanisms,
         motors: declared.motors,
         robots: declared.robots,
-        findings: findings.sort(byPlace),
+        findings,
+        findingsByMechanism: groupByMechanism(findings),
         files,
         wanted: [...new Set([...evaluated.wanted, ...settings.wanted])].sort(),
         snapshot,
@@ -48,6 +49,17 @@ export function createAnalyser(typescript: TypeScript): Analyser {
       };
     },
   };
+}
+
+function groupByMechanism(findings: readonly Finding[]): ReadonlyMap<string, readonly Finding[]> {
+  const groups = new Map<string, Finding[]>();
+  for (const finding of findings) {
+    if (finding.mechanism === null) continue;
+    const group = groups.get(finding.mechanism);
+    if (group === undefined) groups.set(finding.mechanism, [finding]);
+    else group.push(finding);
+  }
+  return groups;
 }
 
 const LEVELS: readonly Finding["level"][] = ["error", "warning", "information"];

@@ -56,6 +56,8 @@ export interface Analysis {
   readonly motors: readonly AnalysedMotor[];
   readonly robots: readonly AnalysedRobot[];
   readonly findings: readonly Finding[];
+  /** The same by name of the mechanism that they are about: an editor asks for every mechanism's after every edit. */
+  readonly findingsByMechanism: ReadonlyMap<string, readonly Finding[]>;
   /** Every file that was evaluated, with what it says. */
   readonly files: ReadonlyMap<string, FileEvaluation>;
   /** Files to load before the result is whole; the host loads them and runs again. */

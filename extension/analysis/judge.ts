@@ -16,7 +16,7 @@ import { tellAssumptions } from "./assumptions.js";
 import { comesFrom } from "./comesFrom.js";
 import { type Corner, cornersOf } from "./corners.js";
 import type { Declared } from "./declared.js";
-import { robotOf, supplyCallOf } from "./lentSupply.js";
+import { indexRobots, supplyCallOf } from "./lentSupply.js";
 import { createMemory } from "./memory.js";
 
 export interface Judged {
@@ -31,6 +31,17 @@ interface Solved {
   readonly numbers: MechanismNumbers;
   readonly corners: number;
   readonly verdicts: readonly Judgement[];
+}
+
+type Declaring = Declared["mechanisms"][number] & { readonly declared: Mechanism };
+
+/** What is said of one call: the same objects as long as nothing that it rests on changed, so that those who show them can tell. */
+interface Told {
+  readonly solution: Solved;
+  readonly robot: AnalysedRobot["declared"] | undefined;
+  readonly isShared: boolean;
+  readonly mechanism: AnalysedMechanism;
+  readonly findings: readonly Finding[];
 }
 
 interface Judgement {
@@ -66,22 +77,38 @@ export function createJudge(): (declared: Declared) => Judged {
     solved.set(mechanism, result);
     return result;
   };
+  const told = new WeakMap<DefinitionCall, Told>();
+  const tell = (one: Declaring, robot: AnalysedRobot | undefined, isShared: boolean): Told => {
+    const solution = solve(one.declared, one.call, robot);
+    const before = told.get(one.call);
+    if (before?.solution === solution && before.robot === robot?.declared && before.isShared === isShared) return before;
+    const { drive, numbers, corners, verdicts } = solution;
+    const result: Told = {
+      solution,
+      robot: robot?.declared,
+      isShared,
+      mechanism: { ...one, drive, numbers, ...tellAssumptions(one.declared, robot?.declared, corners) },
+      findings: verdicts.map(({ rule, verdict }) => {
+        const finding = toFinding(rule, verdict, one.at, one.call, one.name);
+        return isShared ? { ...finding, message: `${one.name}: ${finding.message}` } : finding;
+      }),
+    };
+    told.set(one.call, result);
+    return result;
+  };
   return ({ mechanisms, motors, robots }) => {
     const findings: Finding[] = [];
     const isShared = sharedPlaces(mechanisms);
+    const lending = indexRobots(robots);
     const judged = mechanisms.map((one): AnalysedMechanism => {
-      const mechanism = one.declared;
-      if (mechanism === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
-      if (isImpossible(mechanism.motor)) {
+      const { declared } = one;
+      if (declared === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
+      if (isImpossible(declared.motor)) {
         return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
       }
-      const robot = robotOf(mechanism, robots);
-      const { drive, numbers, corners, verdicts } = solve(mechanism, one.call, robot);
-      for (const { rule, verdict } of verdicts) {
-        const finding = toFinding(rule, verdict, one.at, one.call, one.name);
-        findings.push(isShared(one.at) ? { ...finding, message: `${one.name}: ${finding.message}` } : finding);
-      }
-      return { ...one, drive, numbers, ...tellAssumptions(mechanism, robot?.declared, corners) };
+      const result = tell({ ...one, declared }, lending.get(declared), isShared(one.at));
+      findings.push(...result.findings);
+      return result.mechanism;
     });
     remembered.forgetUnused();
     return {

@@ -10,6 +10,15 @@ export function robotOf(mechanism: Mechanism, robots: readonly AnalysedRobot[]):
   return listing.length === 1 ? listing[0] : undefined;
 }
 
+/** The same for every mechanism that robots list, found at once. */
+export function indexRobots(robots: readonly AnalysedRobot[]): ReadonlyMap<Mechanism, AnalysedRobot | undefined> {
+  const found = new Map<Mechanism, AnalysedRobot | undefined>();
+  for (const robot of robots) {
+    for (const mechanism of new Set(robot.declared.mechanisms)) found.set(mechanism, found.has(mechanism) ? undefined : robot);
+  }
+  return found;
+}
+
 /** The call that declares the robot's supply. */
 export function supplyCallOf({ call }: AnalysedRobot): DefinitionCall | undefined {
   const argument = call.args[1];

@@ -51,16 +51,24 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
     const wanted = new Set<string>();
     const findings = new Map<string, Finding>();
     const nearestOf = new Map<string, Settings>();
-    for (const file of files) {
+    // Files of one folder share their settings: a workspace has far fewer folders than files.
+    const byFolder = new Map<string, Settings | undefined>();
+    const nearestAbove = (file: string): Settings | undefined => {
       for (const candidate of candidatesAbove(file)) {
         const text = snapshot.read(candidate);
         if (text === undefined) wanted.add(candidate);
         if (typeof text !== "string") continue;
         const parsed = parse(candidate, text);
         if (parsed.finding) findings.set(candidate, parsed.finding);
-        nearestOf.set(file, parsed.settings);
-        break;
+        return parsed.settings;
       }
+      return undefined;
+    };
+    for (const file of files) {
+      const folder = file.slice(0, file.lastIndexOf("/"));
+      if (!byFolder.has(folder)) byFolder.set(folder, nearestAbove(file));
+      const settings = byFolder.get(folder);
+      if (settings !== undefined) nearestOf.set(file, settings);
     }
     return {
       findings: [...findings.values()],

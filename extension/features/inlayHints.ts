@@ -25,8 +25,12 @@ export const LONGEST_LABEL = 16;
 /** Hints at offsets from `start` to `end`, in order. */
 export function inlayHintsIn(analysis: Analysis, file: string, start: number, end: number): InlayHint[] {
   const hints = analysis.mechanisms.flatMap((mechanism) => {
+    const places = stagePlaces(mechanism, file);
+    const isNamedHere = mechanism.call.args[0]?.origin.span.file === file;
+    // Words are written only for what stands in this file: a workspace may hold hundreds of others.
+    if (!isNamedHere && places.every((place) => place === undefined)) return [];
     const { state } = verdictOf(analysis, mechanism);
-    return [...shareHints(mechanism, file, state), ...stageHints(mechanism, file, state)];
+    return [...shareHints(mechanism, file, state), ...stageHints(mechanism, places, state)];
   });
   const inRange = hints.filter(({ offset }) => start <= offset && offset <= end);
   return mergeAtSamePlace(inRange).sort((one, other) => one.offset - other.offset);
@@ -42,8 +46,7 @@ function shareHints(mechanism: AnalysedMechanism, file: string, state: State): I
   return [{ offset: at.end, label, tooltip, state }];
 }
 
-function stageHints(mechanism: AnalysedMechanism, file: string, state: State): InlayHint[] {
-  const places = stagePlaces(mechanism, file);
+function stageHints(mechanism: AnalysedMechanism, places: readonly (Span | undefined)[], state: State): InlayHint[] {
   const behind = shaftsOf(mechanism).slice(1);
   return behind.flatMap((shaft, index) => {
     const place = places[index];

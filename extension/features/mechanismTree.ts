@@ -35,11 +35,10 @@ export interface MechanismNode {
 }
 
 export function mechanismTree(analysis: Analysis): MechanismTree {
+  const byDeclared = new Map(analysis.mechanisms.map((mechanism) => [mechanism.declared, mechanism]));
   const listed = new Set<AnalysedMechanism>();
   const robots = analysis.robots.map((robot): RobotNode => {
-    const own = robot.declared.mechanisms.flatMap(
-      (declared) => analysis.mechanisms.find((one) => one.declared === declared) ?? [],
-    );
+    const own = robot.declared.mechanisms.flatMap((declared) => byDeclared.get(declared) ?? []);
     for (const mechanism of own) listed.add(mechanism);
     const mechanisms = own.map((mechanism) => nodeOf(analysis, mechanism));
     const states = [...mechanisms.map(({ state }) => state), ...statesAt(analysis, robot.call.span)];

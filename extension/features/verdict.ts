@@ -43,8 +43,8 @@ const RANK: Readonly<Record<Level, number>> = { error: 0, warning: 1, informatio
 
 /** Findings about one mechanism, worst first. */
 export function findingsAbout(analysis: Analysis, mechanism: AnalysedMechanism): readonly Finding[] {
-  return analysis.findings
-    .filter((finding) => finding.mechanism === mechanism.name && belongs(finding, mechanism))
+  return (analysis.findingsByMechanism.get(mechanism.name) ?? [])
+    .filter((finding) => belongs(finding, mechanism))
     .toSorted((one, other) => RANK[one.level] - RANK[other.level]);
 }
 

@@ -5,7 +5,7 @@
  * connection or of what is shown; the host gives it files, and the engine is loaded when the first file mentions the declarations.
  */
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
-import type { Analysis } from "../analysis/analysis.js";
+import type { Analysis, Finding } from "../analysis/analysis.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
 import { mentionsDeclarations } from "../analysis/sources.js";
 import type { FileHost } from "./discovery.js";
@@ -271,6 +271,7 @@ function resultOfNothing(snapshot: TextSnapshot): Result {
     motors: [],
     robots: [],
     findings: [],
+    findingsByMechanism: new Map<string, readonly Finding[]>(),
     wanted: [],
     toothCounts: new Map<string, readonly number[]>(),
   };
