@@ -32,8 +32,10 @@ export interface Predicted {
 export interface Proposal {
   readonly mechanism: string;
   readonly rule: Finding["rule"];
-  /** One sentence: what is changed, what it gives, what else it touches. */
+  /** One sentence: what is changed, what it gives instead of what is, what else it touches. */
   readonly summary: string;
+  /** The same for a menu's line: without what is, which stands beside it. */
+  readonly title: string;
   readonly predicted: Predicted;
   /** Other mechanisms whose numbers change with it. */
   readonly touches: readonly { readonly mechanism: string; readonly predicted: Predicted }[];
@@ -149,11 +151,14 @@ function prove({ analysis, finding, mechanism, analyse }: Search, change: Change
     return JSON.stringify(one.numbers) === JSON.stringify(before.numbers) ? [] : [{ before, after: one, numbers: one.numbers }];
   });
   const [was, will] = [predict(mechanism.numbers), predict(changed.numbers)];
+  const words = capital(change.words);
   const others = touches.map(({ before, numbers }) => tellTouched(before, predict(numbers)));
+  const names = touches.map(({ before }) => before.name);
   return {
     mechanism: mechanism.name,
     rule: finding.rule,
-    summary: `${capital(change.words)}: ${compare(was, will)}.${others.length === 0 ? "" : ` Also changes ${others.join(", ")}.`}`,
+    summary: `${words}: ${compare(was, will)}.${others.length === 0 ? "" : ` Also changes ${others.join(", ")}.`}`,
+    title: `${words}: ${tellNew(was, will)}${names.length === 0 ? "" : `; also changes ${names.join(", ")}`}`,
     predicted: will,
     touches: touches.map(({ after: one, numbers }) => ({ mechanism: one.name, predicted: predict(numbers) })),
     edits,
@@ -170,6 +175,7 @@ function tellMiss({ mechanism, finding, facts }: Search, { change, facts: after 
     mechanism: mechanism.name,
     rule: finding.rule,
     summary: `Nothing in stock clears it. Nearest: ${change.words}: ${compare(was, will)}.`,
+    title: `Nearest in stock: ${change.words}: ${tellNew(was, will)}`,
     predicted: will,
     touches: [],
     edits: [],
@@ -187,36 +193,46 @@ function predict({ ratio, hardest, travel }: MechanismFacts["numbers"]): Predict
   };
 }
 
+const NO_CHANGE = "the numbers stay as they are";
+
 /** The numbers that differ, new instead of old. */
 function compare(was: Predicted, will: Predicted): string {
-  const parts = [
-    tell(was.ratio, will.ratio, (value) => `ratio ${writeNumber(value)}`, writeNumber),
-    tell(was.stallShare, will.stallShare, (value) => `${writeShare(value)} of stall`, writeShare),
-    tell(
-      was.motorCurrentA,
-      will.motorCurrentA,
-      (value) => `${writeQuantity(value, "current")} per motor`,
-      (value) => writeQuantity(value, "current"),
-    ),
-    tell(
-      was.timeS,
-      will.timeS,
-      (value) => `travel ${writeQuantity(value, "time")}`,
-      (value) => writeQuantity(value, "time"),
-    ),
-  ].flatMap((part) => part ?? []);
-  return parts.length === 0 ? "the numbers stay as they are" : parts.join(", ");
+  const parts = differences(was, will).map(({ now, before }) => (before === undefined ? now : `${now} instead of ${before}`));
+  return parts.length === 0 ? NO_CHANGE : parts.join(", ");
 }
 
-function tell(
+/** The numbers that differ, new. */
+function tellNew(was: Predicted, will: Predicted): string {
+  const parts = differences(was, will).map(({ now }) => now);
+  return parts.length === 0 ? NO_CHANGE : parts.join(", ");
+}
+
+interface Difference {
+  readonly now: string;
+  readonly before: string | undefined;
+}
+
+function differences(was: Predicted, will: Predicted): Difference[] {
+  const inAmpere = (value: number) => writeQuantity(value, "current");
+  const inSeconds = (value: number) => writeQuantity(value, "time");
+  return [
+    ...differenceOf(was.ratio, will.ratio, writeNumber, (text) => `ratio ${text}`),
+    ...differenceOf(was.stallShare, will.stallShare, writeShare, (text) => `${text} of stall`),
+    ...differenceOf(was.motorCurrentA, will.motorCurrentA, inAmpere, (text) => `${text} per motor`),
+    ...differenceOf(was.timeS, will.timeS, inSeconds, (text) => `travel ${text}`),
+  ];
+}
+
+/** None where both read the same. */
+function differenceOf(
   was: number | null,
   will: number | null,
-  say: (value: number) => string,
-  sayOld: (value: number) => string,
-): string | undefined {
-  if (will === null) return undefined;
-  if (was === null) return say(will);
-  return sayOld(was) === sayOld(will) ? undefined : `${say(will)} instead of ${sayOld(was)}`;
+  write: (value: number) => string,
+  say: (text: string) => string,
+): Difference[] {
+  if (will === null) return [];
+  const [before, now] = [was === null ? undefined : write(was), write(will)];
+  return before === now ? [] : [{ now: say(now), before }];
 }
 
 function tellTouched({ name, numbers }: AnalysedMechanism, will: Predicted): string {

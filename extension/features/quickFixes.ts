@@ -38,13 +38,11 @@ export function quickFixesAt(
 }
 
 /** A menu's line: room for the numbers that a proposal predicts. */
-const LONGEST_TITLE = 160;
+const LONGEST_TITLE = 110;
 
 /** A nearest miss has nothing to apply. */
-function proposedFix(finding: Finding, { summary, edits }: Proposal): QuickFix[] {
-  return edits.length === 0
-    ? []
-    : [{ title: plainText(summary.replace(/\.$/, ""), LONGEST_TITLE), finding, kind: "propose", edits }];
+function proposedFix(finding: Finding, { title, edits }: Proposal): QuickFix[] {
+  return edits.length === 0 ? [] : [{ title: plainText(title, LONGEST_TITLE), finding, kind: "propose", edits }];
 }
 
 /** The declarations' refusals end in the text that was meant. */

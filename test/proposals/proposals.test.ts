@@ -40,6 +40,9 @@ describe("proposals", () => {
     expect(proposals[0]?.summary).toMatch(
       /^Stage 1 with (12 and 60|16 and 80) teeth: ratio 5 instead of 3.75, 49 % of stall instead of 65 %/,
     );
+    expect(proposals[0]?.title).toMatch(
+      /^Stage 1 with \d+ and \d+ teeth: ratio 5, 49 % of stall, [\d.]+ A per motor, travel [\d.]+ s$/,
+    );
     expect(proposals[0]?.edits).toHaveLength(1);
     expect(proposals.map(apply)).toEqual(proposals.map(() => []));
     expect(proposals[0]?.predicted.stallShare).toBeCloseTo(4.903325 / 5 / 2, 9);
