@@ -22,7 +22,8 @@ export function createDiskSnapshot(checked: string): Analysis["snapshot"] {
     return text;
   };
   // What is checked may lie where the rules of its project do not lead.
-  const listAround = () => [projectFolderOf(checked), checked].flatMap((folder) => [...listSources(folder, read, listReadable)]);
+  const listAround = () =>
+    [projectFolderOf(checked), checked].flatMap((folder) => [...listSources({ top: folder, read, list: listReadable })]);
   return {
     read,
     canonical: (file) => nameBehindLinks(file, realName),
@@ -32,7 +33,9 @@ export function createDiskSnapshot(checked: string): Analysis["snapshot"] {
 
 /** The files below `folder` that mention the declarations, in order of name. */
 export function findSources(folder: string, snapshot: Analysis["snapshot"]): string[] {
-  return [...listSources(folder, snapshot.read, listEntries)].filter((file) => mentionsDeclarations(snapshot.read(file) ?? ""));
+  return [...listSources({ top: folder, read: snapshot.read, list: listEntries })].filter((file) =>
+    mentionsDeclarations(snapshot.read(file) ?? ""),
+  );
 }
 
 /** A path of this platform with slashes. */
@@ -40,21 +43,29 @@ export function toName(file: string): string {
   return file.split(path.sep).join("/");
 }
 
-/** In order of name. Links are not followed: what they lead to is found where it lies. */
-function* listSources(
-  folder: string,
-  read: Analysis["snapshot"]["read"],
-  list: (folder: string) => Dirent[],
-  above: readonly FolderRules[] = [],
-): Generator<string> {
+interface Walk {
+  readonly top: string;
+  readonly read: Analysis["snapshot"]["read"];
+  readonly list: (folder: string) => Dirent[];
+}
+
+/** In order of name. */
+function* listSources(walk: Walk, folder = walk.top, above: readonly FolderRules[] = []): Generator<string> {
   const name = toName(folder);
-  const settings = read(`${name}/${SETTINGS_FILE}`);
+  const settings = walk.read(`${name}/${SETTINGS_FILE}`);
   const rules = typeof settings === "string" ? [...above, readFolderRules(name, settings)] : above;
-  for (const entry of list(folder).sort((a, b) => (a.name < b.name ? -1 : 1))) {
+  for (const entry of walk.list(folder).sort((a, b) => (a.name < b.name ? -1 : 1))) {
     const inner = path.join(folder, entry.name);
-    if (entry.isFile() && isSourceName(entry.name)) yield toName(inner);
-    if (entry.isDirectory() && !isLeftOut(toName(inner), rules)) yield* listSources(inner, read, list, rules);
+    if (isSourceName(entry.name) && (entry.isFile() || (entry.isSymbolicLink() && leadsOut(walk.top, inner))))
+      yield toName(inner);
+    if (entry.isDirectory() && !isLeftOut(toName(inner), rules)) yield* listSources(walk, inner, rules);
   }
+}
+
+/** A link to a file of the same folder would count it twice. */
+function leadsOut(top: string, link: string): boolean {
+  const real = realName(toName(link));
+  return real !== undefined && !real.startsWith(`${realName(toName(top))}/`);
 }
 
 function listEntries(folder: string): Dirent[] {

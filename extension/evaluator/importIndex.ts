@@ -8,7 +8,7 @@
 export interface ImportIndex extends ImportView {
   /** Notes a file's text, new or changed; says whether the file imports something else than before. */
   set(file: string, text: string): boolean;
-  /** Says whether the file was known. */
+  /** Says whether the file imported anything. */
   delete(file: string): boolean;
   /** Whether `set` would say so. */
   differs(file: string, text: string): boolean;
@@ -19,9 +19,13 @@ export interface ImportIndex extends ImportView {
 export interface ImportView {
   has(file: string): boolean;
   files(): Iterable<string>;
+  /** The last words of the file's specifiers, each once, in order. */
+  wordsOf(file: string): readonly string[];
   /** Files that may import this one, sorted. */
   importersOf(file: string): readonly string[];
 }
+
+const NONE: readonly string[] = [];
 
 export function createImportIndex(): ImportIndex {
   let wordsByFile = new Map<string, readonly string[]>();
@@ -39,23 +43,29 @@ export function createImportIndex(): ImportIndex {
   };
   return {
     set(file, text) {
+      const before = wordsByFile.get(file);
       const words = wordsIn(text).map((word) => keep(pool, word));
-      if (sameWords(wordsByFile.get(file), words)) return false;
+      if (before !== undefined && sameWords(before, words)) return false;
       change().set(file, words);
-      return true;
+      return !sameWords(before ?? NONE, words);
     },
-    delete: (file) => wordsByFile.has(file) && change().delete(file),
-    differs: (file, text) => !sameWords(wordsByFile.get(file), wordsIn(text)),
+    delete(file) {
+      const before = wordsByFile.get(file);
+      if (before !== undefined) change().delete(file);
+      return before !== undefined && before.length > 0;
+    },
+    differs: (file, text) => !sameWords(wordsByFile.get(file) ?? NONE, wordsIn(text)),
     capture,
     has: (file) => wordsByFile.has(file),
     files: () => wordsByFile.keys(),
+    wordsOf: (file) => wordsByFile.get(file) ?? NONE,
     importersOf: (file) => capture().importersOf(file),
   };
 }
 
 /** Whether a specifier may lead to a file, by its last word. */
 export function mayLeadTo(specifier: string, file: string): boolean {
-  return wordsOf(file).includes(lastWord(specifier));
+  return namesOf(file).includes(lastWord(specifier));
 }
 
 /** Turned round when it is first asked: most views never are. */
@@ -75,9 +85,10 @@ function createView(wordsByFile: ReadonlyMap<string, readonly string[]>): Import
   return {
     has: (file) => wordsByFile.has(file),
     files: () => wordsByFile.keys(),
+    wordsOf: (file) => wordsByFile.get(file) ?? NONE,
     importersOf(file) {
       filesByWord ??= turnRound();
-      const found = wordsOf(file).flatMap((word) => filesByWord?.get(word) ?? []);
+      const found = namesOf(file).flatMap((word) => filesByWord?.get(word) ?? []);
       return [...new Set(found)].filter((other) => other !== file).sort();
     },
   };
@@ -88,8 +99,8 @@ function wordsIn(text: string): readonly string[] {
   return [...new Set(listSpecifiers(text).map(lastWord))];
 }
 
-function sameWords(before: readonly string[] | undefined, after: readonly string[]): boolean {
-  return before?.length === after.length && before.every((word, index) => word === after[index]);
+export function sameWords(before: readonly string[], after: readonly string[]): boolean {
+  return before.length === after.length && before.every((word, index) => word === after[index]);
 }
 
 /** A part of a string may hold on to the whole of it, so that one word would keep its file's text: copied once. */
@@ -107,7 +118,7 @@ function listSpecifiers(text: string): string[] {
 }
 
 /** What a specifier of this file may end with. */
-function wordsOf(file: string): string[] {
+function namesOf(file: string): string[] {
   const segments = file.split("/");
   const name = withoutEnding(segments.at(-1) ?? "");
   // An index file stands for its folder, and a package's entry for whatever the package is called.

@@ -8,6 +8,8 @@ import { isLeftOut } from "../analysis/sources.js";
 export interface FileHost {
   /** The text on disk; `null` where there is no such file, or none that can be read. Never rejects. */
   readFile(file: string): Promise<string | null>;
+  /** Where a file really lies, links followed; `undefined` where nobody can tell. Absent: no links are known. */
+  realPath?(file: string): string | undefined;
   /** The sources below a folder, in batches; nothing where it is no folder. Never rejects. */
   listSources(folder: string): AsyncIterable<readonly string[]>;
 }

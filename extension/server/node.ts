@@ -3,6 +3,7 @@
  *
  * Talks over whichever channel its arguments name (`--stdio`, `--node-ipc`); the only file of the room that knows Node.
  */
+import { realpathSync } from "node:fs";
 import { readdir, readFile } from "node:fs/promises";
 import { join } from "node:path";
 import { fileURLToPath } from "node:url";
@@ -21,7 +22,7 @@ process.on("unhandledRejection", report);
 serve(connection, { host: createDisk(), loadEngine });
 
 function createDisk(): FileHost {
-  return { readFile: readText, listSources };
+  return { readFile: readText, listSources, realPath };
 }
 
 async function readText(file: string): Promise<string | null> {
@@ -36,29 +37,52 @@ async function readText(file: string): Promise<string | null> {
   }
 }
 
+function realPath(file: string): string | undefined {
+  const path = pathOf(file);
+  try {
+    return path === undefined ? undefined : keyOfPath(realpathSync.native(path));
+  } catch {
+    return undefined;
+  }
+}
+
 /** Breadth first, one batch a level of folders. Links to folders are not followed: they may run in a circle. */
 async function* listSources(folder: string): AsyncIterable<readonly string[]> {
   const start = pathOf(folder);
+  const top = realPath(folder) ?? folder;
   for (let level = start === undefined ? [] : [start]; level.length > 0; ) {
-    const listings = await Promise.all(level.map(listFolder));
+    const listings = await Promise.all(level.map((one) => listFolder(one, top)));
     const files = listings.flatMap((listing) => listing.files);
     if (files.length > 0) yield files;
     level = listings.flatMap((listing) => listing.folders);
   }
 }
 
-async function listFolder(folder: string): Promise<{ readonly files: string[]; readonly folders: string[] }> {
+async function listFolder(folder: string, top: string): Promise<{ readonly files: string[]; readonly folders: string[] }> {
   try {
     const entries = await readdir(folder, { withFileTypes: true });
     const folders = entries.filter((entry) => entry.isDirectory() && !isSkippedFolder(entry.name));
-    const files = entries.filter((entry) => (entry.isFile() || entry.isSymbolicLink()) && isSourceName(entry.name));
+    const sources = entries.filter(({ name }) => isSourceName(name));
+    const files = sources.filter(
+      (entry) => entry.isFile() || (entry.isSymbolicLink() && leadsOut(join(folder, entry.name), top)),
+    );
     return {
       folders: folders.map(({ name }) => join(folder, name)),
-      files: files.map(({ name }) => keyOf(uriOf(join(folder, name).replaceAll("\\", "/")))),
+      files: files.map(({ name }) => keyOfPath(join(folder, name))),
     };
   } catch {
     return { files: [], folders: [] };
   }
+}
+
+/** A link to a file of the same folder would count it twice. */
+function leadsOut(link: string, top: string): boolean {
+  const real = realPath(keyOfPath(link));
+  return real !== undefined && !real.startsWith(`${top}/`);
+}
+
+function keyOfPath(path: string): string {
+  return keyOf(uriOf(path.replaceAll("\\", "/")));
 }
 
 /** A path that Node understands; `undefined` for what is not on its disk. */

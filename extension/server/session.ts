@@ -6,6 +6,7 @@
  */
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
 import type { Analysis, Finding } from "../analysis/analysis.js";
+import { nameBehindLinks } from "../analysis/linkedName.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
 import { mentionsDeclarations } from "../analysis/sources.js";
 import type { FileHost } from "./discovery.js";
@@ -36,7 +37,7 @@ export interface SessionOptions {
 const FORGET_STEP = 256;
 
 export class Session {
-  readonly texts = new Texts();
+  readonly texts: Texts;
   readonly #files: WorkspaceFiles;
   readonly #options: SessionOptions;
   #engine: Promise<Engine> | undefined;
@@ -58,8 +59,13 @@ export class Session {
   #disposed = false;
 
   constructor(options: SessionOptions) {
+    const { host } = options;
     this.#options = options;
-    this.#files = new WorkspaceFiles(this.texts, options.host);
+    this.texts = new Texts({
+      keepImporters: (files, snapshot) => this.#withoutLeftOut(files, snapshot).filter((file) => this.#files.accepts(file)),
+      canonical: (file) => nameBehindLinks(file, (name) => host.realPath?.(name)),
+    });
+    this.#files = new WorkspaceFiles(this.texts, host);
   }
 
   /** The last good result, if there is one yet. */
@@ -142,7 +148,7 @@ export class Session {
     const text = this.texts.openText(key)?.text;
     if (text !== undefined && this.#files.accepts(key) && mentionsDeclarations(text)) return true;
     this.#resultReads ??= filesRead(this.#result.analysis);
-    return this.#resultReads.has(key);
+    return this.#resultReads.has(key) || this.texts.imports.differs(key, text);
   }
 
   /** Later work replaces what is planned; work that can wait less never hurries text that is being typed. */
@@ -201,15 +207,19 @@ export class Session {
       const mentioning = this.#mentioning(snapshot);
       if (mentioning.length === 0) return this.#accept(resultOfNothing(snapshot), moment);
       const engine = await this.#load();
-      // Settings above the workspace leave nothing out of it, as with the command in its folder.
-      const settingsFiles = [...this.#settingsFiles].filter((file) => this.#files.isInWorkspace(file));
-      const analysis = engine.analyse(withoutLeftOut(mentioning, settingsFiles, snapshot), snapshot);
+      const analysis = engine.analyse(this.#withoutLeftOut(mentioning, snapshot), snapshot);
       const wanted = analysis.wanted.filter((file) => snapshot.read(file) === undefined);
       if (wanted.length === 0) return this.#accept({ analysis, snapshot, analyse: engine.analyse }, moment);
       for (const file of wanted) if (file.endsWith(`/${SETTINGS_FILE}`)) this.#settingsFiles.add(file);
       await this.#files.load(wanted);
       if (this.#timer !== undefined) return;
     }
+  }
+
+  /** Settings above the workspace leave nothing out of it, as with the command in its folder. */
+  #withoutLeftOut(files: readonly string[], snapshot: Analysis["snapshot"]): readonly string[] {
+    const settingsFiles = [...this.#settingsFiles].filter((file) => this.#files.isInWorkspace(file));
+    return withoutLeftOut(files, settingsFiles, snapshot);
   }
 
   #accept(result: Result, moment: number): void {

@@ -7,6 +7,7 @@ import { TextDocument, type TextDocumentContentChangeEvent } from "vscode-langua
 import type { Snapshot } from "../evaluator/value.js";
 import type { Edit } from "./editTrail.js";
 import { keyOf, uriOf } from "./fileKeys.js";
+import { Imports, type ImportsView } from "./imports.js";
 import { createLineMap, type LineMap } from "./lineMap.js";
 
 export interface OpenText {
@@ -26,18 +27,33 @@ export interface TextSnapshot extends Snapshot {
   lineMap(file: string): LineMap;
 }
 
+export interface TextsOptions {
+  /** Of files that import another, those that count. */
+  readonly keepImporters: (files: readonly string[], snapshot: Snapshot) => readonly string[];
+  /** The name of a file behind links. */
+  readonly canonical: (file: string) => string;
+}
+
 interface OpenDocument {
   readonly document: TextDocument;
   readonly edits: { readonly version: number; readonly edit: Edit }[];
 }
 
 export class Texts {
+  readonly imports = new Imports();
+  readonly #options: TextsOptions;
   readonly #open = new Map<string, OpenDocument>();
   #disk = new Map<string, string | null>();
   /** True while a snapshot shares the map of disk texts: the next change then works on a copy. */
   #diskIsShared = false;
-  #saved: { readonly disk: ReadonlyMap<string, string | null>; readonly snapshot: Snapshot } | undefined;
+  #saved:
+    | { readonly disk: ReadonlyMap<string, string | null>; readonly imports: ImportsView["saved"]; readonly snapshot: Snapshot }
+    | undefined;
   readonly #lineMaps = new Map<string, LineMap>();
+
+  constructor(options: TextsOptions) {
+    this.#options = options;
+  }
 
   /** Gives the document's key. */
   open(uri: string, version: number, text: string): string {
@@ -122,19 +138,40 @@ export class Texts {
     const versions = new Map([...this.#open].map(([key, { document }]) => [key, document.version]));
     const disk = this.#disk;
     this.#diskIsShared = true;
+    const imports = this.imports.capture(open);
     const read = (file: string) => open.get(file) ?? disk.get(file);
     return {
-      read,
+      ...this.#snapshotOf(read, imports.importersOf),
       versions,
-      saved: this.#savedSnapshot(disk),
+      saved: this.#savedSnapshot(disk, imports.saved),
       isSaved: [...open].every(([file, text]) => text === (disk.get(file) ?? text)),
       lineMap: (file) => this.#lineMap(file, read(file) ?? ""),
     };
   }
 
-  #savedSnapshot(disk: ReadonlyMap<string, string | null>): Snapshot {
-    if (this.#saved?.disk !== disk) this.#saved = { disk, snapshot: { read: (file) => disk.get(file) } };
+  #savedSnapshot(disk: ReadonlyMap<string, string | null>, imports: ImportsView["saved"]): Snapshot {
+    if (this.#saved?.disk !== disk || this.#saved.imports !== imports) {
+      const snapshot = this.#snapshotOf(
+        (file) => disk.get(file),
+        (file) => imports?.importersOf(file),
+      );
+      this.#saved = { disk, imports, snapshot };
+    }
     return this.#saved.snapshot;
+  }
+
+  /** Answers are kept, so that they stay the same for good. */
+  #snapshotOf(read: Snapshot["read"], importersOf: ImportsView["importersOf"]): Snapshot {
+    const { keepImporters, canonical } = this.#options;
+    const snapshot: Snapshot = {
+      read,
+      canonical: keepAnswers(canonical),
+      importersOf: keepAnswers((file) => {
+        const importers = importersOf(file);
+        return importers && keepImporters(importers, snapshot);
+      }),
+    };
+    return snapshot;
   }
 
   #lineMap(file: string, text: string): LineMap {
@@ -150,6 +187,17 @@ export class Texts {
     this.#diskIsShared = false;
     return this.#disk;
   }
+}
+
+function keepAnswers<Answer>(ask: (file: string) => Answer): (file: string) => Answer {
+  const answers = new Map<string, Answer>();
+  return (file) => {
+    const known = answers.get(file);
+    if (known !== undefined) return known;
+    const answer = ask(file);
+    answers.set(file, answer);
+    return answer;
+  };
 }
 
 function editOf(document: TextDocument, change: TextDocumentContentChangeEvent): Edit {

@@ -1,5 +1,6 @@
 /**
- * The files of the workspace that mention the declarations, and the disk texts that were asked for, kept true by change events.
+ * The files of the workspace that mention the declarations, who imports whom, and the disk texts that were asked for, kept true by change
+ * events.
  *
  * Every event leads to reading the file again, so that their order doesn't matter. Never watches or polls; unsaved text is not its business.
  */
@@ -49,11 +50,14 @@ export class WorkspaceFiles {
 
   /** Replaces the workspace folders, forgets files outside of them and reads the new ones. */
   async setFolders(folders: readonly string[]): Promise<void> {
+    const { imports } = this.#texts;
     const added = folders.filter((folder) => !this.#folders.includes(folder));
     // A folder inside another one counts for itself.
     this.#folders = folders.toSorted((a, b) => b.length - a.length);
     for (const file of this.#mentioning) if (!this.isInWorkspace(file)) this.#mentioning.delete(file);
+    for (const file of [...imports.diskFiles()]) if (!this.isInWorkspace(file)) imports.setDiskText(file, null);
     for (const folder of added) await this.#scan(folder);
+    imports.markWhole();
   }
 
   /** Loads texts that an analysis asked for; what is known already stays. */
@@ -117,13 +121,15 @@ export class WorkspaceFiles {
   }
 
   #apply(file: string, text: string | null): boolean {
-    const mentions = text !== null && this.#isCandidate(file) && mentionsDeclarations(text);
+    const source = this.#isCandidate(file) ? text : null;
+    const mentions = source !== null && mentionsDeclarations(source);
+    const importsOthers = this.#texts.imports.setDiskText(file, source);
     const before = this.#texts.diskText(file);
     const mattered = this.#isKnown(file);
     if (mentions) this.#mentioning.add(file);
     else this.#mentioning.delete(file);
     if (mentions || mattered) this.#texts.setDiskText(file, text);
-    return (mentions || mattered) && before !== text;
+    return importsOthers || ((mentions || mattered) && before !== text);
   }
 
   #isKnown(file: string): boolean {
@@ -133,6 +139,7 @@ export class WorkspaceFiles {
   *#known(): Iterable<string> {
     yield* this.#mentioning;
     yield* this.#texts.diskKeys();
+    yield* this.#texts.imports.diskFiles();
   }
 
   #isCandidate(file: string): boolean {

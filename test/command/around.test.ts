@@ -121,6 +121,21 @@ export default robot("carrier", { supply: battery({ openCircuit: "12 V", resista
   });
 });
 
+describe("a link to a file", () => {
+  it("counts where it leads out of what is checked, and not twice where it does not", async () => {
+    write({
+      "in/robot.ts": ROBOT,
+      "in/gears.ts": GEARS,
+      "out/robot.ts": ROBOT.replace('"hub"', '"other"').replace("./gears", "../in/gears"),
+    });
+    symlinkSync(path.join(folder, "in/robot.ts"), path.join(folder, "in/again.ts"));
+    symlinkSync(path.join(folder, "out/robot.ts"), path.join(folder, "in/other.ts"));
+    const { mechanisms, findings } = await check("in");
+    expect(mechanisms.map(({ name, file }) => `${name} ${file}`)).toEqual(["other other.ts", "hub robot.ts"]);
+    expect(findings.filter(({ rule }) => rule === "bad-declaration")).toEqual([]);
+  });
+});
+
 describe("the folder of the project", () => {
   it.each([
     ["the nearest that is marked", { "a/tsconfig.json": "{}", "a/b/c/x.ts": "" }, "a/b/c", "a"],
