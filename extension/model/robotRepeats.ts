@@ -52,16 +52,19 @@ export function markCycle(run: RobotRun): CycleMark {
   };
 }
 
-/** What may be skipped of the cycles left, after one that led from one mark to the next; null: nothing. */
-export function planSkip(run: RobotRun, before: CycleMark, after: CycleMark, left: number, cycleS: number): Skip | null {
-  if (!repeats(run, before, after)) return null;
-  const changes = run.parts.map((part, i) => changeOf(part, before, after, i, cycleS));
+/** What may be skipped of the cycles left; `marks`: after the last cycle, before it, and, where it was followed too, one earlier. Null: nothing. */
+export function planSkip(run: RobotRun, marks: readonly CycleMark[], left: number, cycleS: number): Skip | null {
+  const [after, before] = marks;
+  if (!after || !before || !repeats(run, before, after)) return null;
+  const changes = run.parts.map((part) => changeOf(part, marks, cycleS));
   if (changes.some(({ perCycleK }) => perCycleK >= PERIODIC_K)) return null;
   if (slowestProtector(run, before, after, left, cycleS) > REPEATS) return null;
   const riseK = (cycles: number): number =>
     Math.max(0, ...changes.map((change) => change.perCycleK * repeated(change.share, cycles)));
   const fits = cyclesThatFit(run, before, after);
   const periodic = riseK(left) < PERIODIC_K;
+  // Not yet known how it goes on, or ever faster.
+  if (!periodic && changes.some(({ share }) => share >= 1)) return null;
   let cycles = left;
   if (!periodic) while (riseK(cycles) > MOST_RISE_K) cycles = Math.floor(cycles / 2);
   cycles = Math.min(cycles, fits);
@@ -107,25 +110,33 @@ function repeats({ parts }: RobotRun, before: CycleMark, after: CycleMark): bool
   );
 }
 
-/** A node's change in the cycle, and the share of it that the next cycle brings: e^(−cycle/τ) of the network's slow time constant. */
-function changeOf(
-  { network }: RobotPart,
-  before: CycleMark,
-  after: CycleMark,
-  i: number,
-  cycleS: number,
-): { readonly byNodeK: readonly [number, number]; readonly perCycleK: number; readonly share: number } {
+type Nodes = readonly [winding: number, housing: number];
+
+interface Change {
+  readonly byNodeK: Nodes;
+  readonly perCycleK: number;
+  /** Of this change that the next cycle brings. */
+  readonly share: number;
+}
+
+/**
+ * Changes of both nodes in the cycle, and how they go on: by the greatest ratio to the cycle before, since copper that grows with heat makes
+ * a network slower than its own time constant; no faster than that one, e^(−cycle/τ).
+ */
+function changeOf({ network, index }: RobotPart, marks: readonly CycleMark[], cycleS: number): Change {
   if (!network) return { byNodeK: [0, 0], perCycleK: 0, share: 0 };
-  const [winding, housing] = after.heatC[i] ?? [0, 0];
-  const [windingBefore, housingBefore] = before.heatC[i] ?? [0, 0];
-  const byNodeK = [winding - windingBefore, housing - housingBefore] as const;
-  const share = Math.exp(-cycleS / heatTimeConstants(network)[1]);
-  return { byNodeK, perCycleK: Math.max(Math.abs(byNodeK[0]), Math.abs(byNodeK[1])), share };
+  const [after, before, earlier] = marks.map(({ heatC }): Nodes => heatC[index] ?? [0, 0]);
+  const changes = (to: Nodes = [0, 0], from: Nodes = to): Nodes => [(to[0] ?? 0) - (from[0] ?? 0), (to[1] ?? 0) - (from[1] ?? 0)];
+  const byNodeK = changes(after, before);
+  const perCycleK = Math.max(...byNodeK.map(Math.abs));
+  const own = Math.exp(-cycleS / heatTimeConstants(network)[1]);
+  const ratios = earlier ? changes(before, earlier).map((was, node) => (was === 0 ? 0 : (byNodeK[node] ?? 0) / was)) : [1];
+  return { byNodeK, perCycleK, share: perCycleK === 0 ? 0 : Math.max(own, ...ratios) };
 }
 
 /** q + q² + … + q^n. */
 function repeated(share: number, cycles: number): number {
-  return share >= 1 ? cycles : (share * (1 - share ** cycles)) / (1 - share);
+  return share >= 1 ? share * cycles : (share * (1 - share ** cycles)) / (1 - share);
 }
 
 /** The most that any protector's state still changes in the cycles left. */

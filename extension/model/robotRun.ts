@@ -114,16 +114,23 @@ function reconsiderAll(run: RobotRun, system: RobotSystem, state: Float64Array):
   for (const { unit, place } of system.seats) {
     const theta = place[unit.part.layout.protection] ?? -1;
     const own = run.sharing.own.find(({ mechanism }) => mechanism === unit.part.index);
-    if (!own || own.open || theta < 0 || !((state[theta] as number) >= 1)) continue;
-    trip(own, momentOf(run), unit.rates.carried(unit.front));
+    const currentA = unit.rates.carried(unit.front);
+    if (!own || own.open || theta < 0 || !isTripped(own, state[theta] as number, currentA)) continue;
+    trip(own, momentOf(run), currentA);
     changed = true;
   }
   for (const { protector, state: theta } of system.places.protectors) {
-    if (protector.open || !((state[theta] as number) >= 1)) continue;
-    trip(protector, momentOf(run), system.carriedBy(protector, "front"));
+    const currentA = system.carriedBy(protector, "front");
+    if (protector.open || !isTripped(protector, state[theta] as number, currentA)) continue;
+    trip(protector, momentOf(run), currentA);
     changed = true;
   }
   return changed;
+}
+
+/** At what opens it, and not cooling. */
+function isTripped({ replica }: RobotProtector, borne: number, currentA: number): boolean {
+  return borne >= 1 && (replica === null || Math.abs(currentA) > replica.holdCurrentA);
 }
 
 /** Integrates to the next event and does what it asks for. */

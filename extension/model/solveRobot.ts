@@ -9,7 +9,7 @@ import type { RobotDrive } from "./robotDrive.js";
 import { createRobotObserver } from "./robotObserver.js";
 import { createPart, type MutableBus, type RobotPart } from "./robotPart.js";
 import { createProtector, historyOf, type RobotProtector } from "./robotProtector.js";
-import { addSums, markCycle, planSkip, skip, sumsBetween } from "./robotRepeats.js";
+import { addSums, type CycleMark, markCycle, planSkip, skip, sumsBetween } from "./robotRepeats.js";
 import { type RobotRun, runStep } from "./robotRun.js";
 import type { MechanismHistory, RobotOptions, RobotSolution, StepTravel } from "./robotSolution.js";
 import { createSharedBus } from "./sharedBus.js";
@@ -26,12 +26,14 @@ export function solveRobot(drive: RobotDrive, options: RobotOptions = {}): Robot
   /** Cycles skipped with the last followed one's sums, until the next one shows how these have changed. */
   let owed: { readonly cycles: number; readonly sums: readonly number[] } | null = null;
 
+  let marks = [markCycle(run)];
   while (drive.steps.length > 0 && run.cycle < drive.cycles && run.outcome === "done") {
-    const before = markCycle(run);
+    const [before] = marks as [CycleMark];
     const whole = runCycle(run, drive, cycleS, travels);
     followed++;
     if (!whole) break;
     const after = markCycle(run);
+    marks = [after, ...marks].slice(0, 3);
     const sums = sumsBetween(before, after);
     run.cycle++;
     if (owed) {
@@ -42,11 +44,13 @@ export function solveRobot(drive: RobotDrive, options: RobotOptions = {}): Robot
         cycles,
       );
       owed = null;
+      marks[0] = markCycle(run);
     }
     const left = drive.cycles - run.cycle;
-    const plan = left > 0 ? planSkip(run, before, after, left, cycleS) : null;
+    const plan = left > 0 ? planSkip(run, marks, left, cycleS) : null;
     if (!plan) continue;
     skip(run, plan, sums);
+    marks = [markCycle(run)];
     periodic ||= plan.periodic;
     if (!plan.periodic) owed = { cycles: plan.cycles, sums };
   }
