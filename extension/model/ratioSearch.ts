@@ -46,9 +46,14 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
   let low = Math.log(least);
   let high = Math.log(Math.max(least * 20, 20));
   let best: QuickestRatio | null = null;
+  let unresolved = 0;
   const timeAt = (log: number): number => {
     const factor = Math.exp(log);
-    const timeS = solveTravel(withRatioTimes(drive, factor))?.timeS ?? null;
+    // Travels that take too many steps to follow are absurd and slow: one of them ends the search.
+    if (unresolved > 0) return Number.POSITIVE_INFINITY;
+    const travel = solveTravel(withRatioTimes(drive, factor));
+    if (travel?.outcome === "unresolved") unresolved++;
+    const timeS = travel?.timeS ?? null;
     if (timeS !== null && (best === null || timeS < best.timeS)) best = { ratio: ratio * factor, timeS };
     return timeS ?? Number.POSITIVE_INFINITY;
   };

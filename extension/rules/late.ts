@@ -8,6 +8,8 @@ export const late: MechanismRule = { id: "late", level: "warning", silences: [],
 function judge({ mechanism, drive, travel }: MechanismFacts): Verdict | undefined {
   const within = drive.withinS;
   if (within === undefined || travel === null || (travel.timeS !== null && travel.timeS <= within)) return undefined;
+  // Too many steps to follow: nothing is known of its time.
+  if (travel.outcome === "unresolved") return undefined;
   const took = travel.timeS === null ? "the travel never ends" : `the travel takes ${writeQuantity(travel.timeS, "time")}`;
   return {
     message: `Late: ${took}, but may take ${writeQuantity(within, "time")}. ${wayOut(mechanism.ratio, drive, within)}`,
