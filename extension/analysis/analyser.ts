@@ -10,8 +10,8 @@ import type { TypeScript } from "../evaluator/typescript.js";
 import type { Snapshot } from "../evaluator/value.js";
 import { applyAllowances } from "./allowances.js";
 import type { Analysis, Finding } from "./analysis.js";
-import { findInDeclarations } from "./declarationFindings.js";
-import { collectDeclared } from "./declared.js";
+import { createDeclarationFinder } from "./declarationFindings.js";
+import { createCollector } from "./declared.js";
 import { evaluateAll } from "./evaluateAll.js";
 import { createJudge } from "./judge.js";
 import { placeCalls } from "./placeCalls.js";
@@ -25,6 +25,8 @@ export interface Analyser {
 /** `typescript`: the loaded parser, so that loading it stays the host's decision. */
 export function createAnalyser(typescript: TypeScript): Analyser {
   const evaluator = createEvaluator(typescript, { specifier: SPECIFIER, definitions: DEFINITIONS });
+  const collectDeclared = createCollector();
+  const findInDeclarations = createDeclarationFinder();
   const judge = createJudge();
   const readSettings = createSettingsReader(typescript);
   return {
@@ -32,7 +34,7 @@ export function createAnalyser(typescript: TypeScript): Analyser {
       const evaluated = evaluateAll(evaluator, roots, snapshot);
       const files = placeCalls(evaluated.files);
       const settings = readSettings([...files.keys()], snapshot);
-      const declared = collectDeclared([...files.values()].flatMap(({ calls }) => calls));
+      const declared = collectDeclared(files.values());
       const judged = judge(declared);
       const found = [...findInDeclarations([...files.values()], declared, snapshot), ...judged.findings];
       const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))].sort(byPlace);

@@ -5,19 +5,49 @@ import { notConstant, tellUnknown } from "../rules/notConstant.js";
 import type { Finding } from "./analysis.js";
 import { type Declared, stringIn } from "./declared.js";
 
-export function findInDeclarations(evaluations: readonly FileEvaluation[], declared: Declared, snapshot: Snapshot): Finding[] {
-  const calls = evaluations.flatMap((evaluation) => evaluation.calls);
-  const found = [
-    ...evaluations.flatMap(findProblem),
-    ...calls.flatMap((call) => findIssues(call, calls, snapshot)),
-    ...findUnknowns(calls),
-    ...findNamesTwice("mechanism", calls),
-    ...findNamesTwice("robot", calls),
-  ];
-  return mergeAlike(found).map((finding) => ({
-    ...finding,
-    mechanism: finding.mechanism ?? mechanismAround(finding.at, declared),
-  }));
+type Finder = (evaluations: readonly FileEvaluation[], declared: Declared, snapshot: Snapshot) => Finding[];
+
+/** What concerns one file alone is kept for as long as its evaluation is; names and causes are compared over all files. */
+export function createDeclarationFinder(): Finder {
+  const known = new WeakMap<FileEvaluation, FileFacts>();
+  const factsOf = (evaluation: FileEvaluation, snapshot: Snapshot): FileFacts => {
+    const before = known.get(evaluation);
+    if (before !== undefined) return before;
+    const { calls } = evaluation;
+    const facts: FileFacts = {
+      findings: [...findProblem(evaluation), ...calls.flatMap((call) => findIssues(call, calls, snapshot))],
+      unknowns: calls.flatMap((call) => call.unknowns),
+      names: calls.flatMap(namesGivenBy),
+    };
+    known.set(evaluation, facts);
+    return facts;
+  };
+  return (evaluations, declared, snapshot) => {
+    const all = evaluations.map((evaluation) => factsOf(evaluation, snapshot));
+    const names = all.flatMap((facts) => facts.names);
+    const found = [
+      ...all.flatMap((facts) => facts.findings),
+      ...findUnknowns(all.flatMap((facts) => facts.unknowns)),
+      ...findNamesTwice("mechanism", names),
+      ...findNamesTwice("robot", names),
+    ];
+    return mergeAlike(found).map((finding) => ({
+      ...finding,
+      mechanism: finding.mechanism ?? mechanismAround(finding.at, declared),
+    }));
+  };
+}
+
+interface FileFacts {
+  readonly findings: readonly Finding[];
+  readonly unknowns: readonly Unknown[];
+  readonly names: readonly GivenName[];
+}
+
+interface GivenName {
+  readonly kind: "mechanism" | "robot";
+  readonly name: string;
+  readonly at: Span;
 }
 
 /** A file that could not be read at all, such as one nested too deeply for any parser. */
@@ -52,12 +82,14 @@ function issuesToTell(call: DefinitionCall, calls: readonly DefinitionCall[], sn
 }
 
 /** One finding per root cause, at the use that lies nearest to it; other uses are related. */
-function findUnknowns(calls: readonly DefinitionCall[]): Finding[] {
+function findUnknowns(unknowns: readonly Unknown[]): Finding[] {
   const byRoot = new Map<string, Unknown[]>();
-  for (const unknown of calls.flatMap((call) => call.unknowns)) {
+  for (const unknown of unknowns) {
     const root = rootOf(unknown);
     const key = JSON.stringify([root.origin.span, root.reason.code]);
-    byRoot.set(key, [...(byRoot.get(key) ?? []), unknown]);
+    const uses = byRoot.get(key);
+    if (uses === undefined) byRoot.set(key, [unknown]);
+    else uses.push(unknown);
   }
   return [...byRoot.values()].map((uses) => {
     const nearest = uses.reduce((best, use) => (depthOf(use) < depthOf(best) ? use : best));
@@ -82,22 +114,27 @@ function findUnknowns(calls: readonly DefinitionCall[]): Finding[] {
   });
 }
 
-function findNamesTwice(kind: "mechanism" | "robot", calls: readonly DefinitionCall[]): Finding[] {
+function namesGivenBy({ definition, args }: DefinitionCall): GivenName[] {
+  const [value] = args;
+  const name = value === undefined ? undefined : stringIn(value);
+  if (value === undefined || name === undefined || (definition !== "mechanism" && definition !== "robot")) return [];
+  return [{ kind: definition, name, at: value.origin.span }];
+}
+
+function findNamesTwice(wanted: GivenName["kind"], names: readonly GivenName[]): Finding[] {
   const first = new Map<string, Span>();
   const findings: Finding[] = [];
-  for (const call of calls) {
-    const value = call.args[0];
-    const name = value === undefined ? undefined : stringIn(value);
-    if (call.definition !== kind || value === undefined || name === undefined) continue;
+  for (const { kind, name, at } of names) {
+    if (kind !== wanted) continue;
     const before = first.get(name);
-    if (before === undefined) first.set(name, value.origin.span);
+    if (before === undefined) first.set(name, at);
     else {
       findings.push({
         ...badDeclaration,
         rule: badDeclaration.id,
         mechanism: kind === "mechanism" ? name : null,
         message: tellNameTwice(kind, name),
-        at: value.origin.span,
+        at,
         related: [{ at: before, message: "First used here." }],
       });
     }
@@ -137,9 +174,12 @@ function depthOf(unknown: Unknown): number {
 }
 
 function distinct<Item extends { readonly at: Span }>(items: readonly Item[], except: Span): Item[] {
-  return items.filter(
-    (item, index) => !sameSpan(item.at, except) && items.findIndex((other) => sameSpan(other.at, item.at)) === index,
-  );
+  const seen = new Set([keyOf(except)]);
+  return items.filter(({ at }) => seen.size < seen.add(keyOf(at)).size);
+}
+
+function keyOf({ file, start, end }: Span): string {
+  return `${start} ${end} ${file}`;
 }
 
 function sameSpan(a: Span, b: Span): boolean {

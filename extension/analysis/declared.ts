@@ -2,7 +2,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
 import type { Robot } from "../declarations/robot.js";
-import type { DefinitionCall, Span, Value } from "../evaluator/value.js";
+import type { DefinitionCall, FileEvaluation, Span, Value } from "../evaluator/value.js";
 import type { AnalysedMechanism, AnalysedMotor, AnalysedRobot } from "./analysis.js";
 
 export interface Declared {
@@ -11,7 +11,26 @@ export interface Declared {
   readonly robots: readonly AnalysedRobot[];
 }
 
-export function collectDeclared(calls: readonly DefinitionCall[]): Declared {
+/** What each file declares is kept for as long as its evaluation is. */
+export function createCollector(): (evaluations: Iterable<FileEvaluation>) => Declared {
+  const known = new WeakMap<FileEvaluation, Declared>();
+  return (evaluations) => {
+    const all = [...evaluations].map((evaluation) => {
+      const before = known.get(evaluation);
+      if (before !== undefined) return before;
+      const declared = declaredBy(evaluation.calls);
+      known.set(evaluation, declared);
+      return declared;
+    });
+    return {
+      mechanisms: all.flatMap(({ mechanisms }) => mechanisms),
+      motors: all.flatMap(({ motors }) => motors),
+      robots: all.flatMap(({ robots }) => robots),
+    };
+  };
+}
+
+function declaredBy(calls: readonly DefinitionCall[]): Declared {
   return {
     mechanisms: calls
       .filter((call) => call.definition === "mechanism")

@@ -7,6 +7,7 @@ import { type Diagnostic, DiagnosticSeverity } from "vscode-languageserver";
 import type { Finding } from "../analysis/analysis.js";
 import type { Span } from "../evaluator/value.js";
 import type { Level } from "../rules/rule.js";
+import type { LineMap } from "./lineMap.js";
 import type { Result } from "./session.js";
 
 export const SOURCE = "Loadmark";
@@ -19,11 +20,46 @@ const SEVERITIES: Readonly<Record<Level, DiagnosticSeverity>> = {
 
 export type UriOf = (file: string) => string;
 
-/** Files without findings are absent. */
-export function diagnosticsOf({ analysis, snapshot }: Result, uriOf: UriOf): ReadonlyMap<string, readonly Diagnostic[]> {
-  const rangeOf = (span: Span) => snapshot.lineMap(span.file).rangeOf(span);
-  const diagnosticOf = ({ rule, level, mechanism, message, at, related }: Finding): Diagnostic => ({
-    range: rangeOf(at),
+export type DiagnosticsOf = (result: Result, uriOf: UriOf) => ReadonlyMap<string, readonly Diagnostic[]>;
+
+interface Written {
+  /** Of every file that it has a place in: a place lies elsewhere once its text is another. */
+  readonly lines: readonly LineMap[];
+  readonly uris: readonly string[];
+  readonly diagnostic: Diagnostic;
+}
+
+/** Most findings are those of the last result: their diagnostics are, too. Files without findings are absent. */
+export function createDiagnosticsReader(): DiagnosticsOf {
+  const known = new WeakMap<Finding, Written>();
+  return ({ analysis, snapshot }, uriOf) => {
+    const byFile = new Map<string, Diagnostic[]>();
+    for (const finding of analysis.findings) {
+      const spans = [finding.at, ...finding.related.map(({ at }) => at)];
+      const lines = spans.map(({ file }) => snapshot.lineMap(file));
+      const uris = spans.map(({ file }) => uriOf(file));
+      const before = known.get(finding);
+      const isSame = before !== undefined && sameItems(before.lines, lines) && sameItems(before.uris, uris);
+      const diagnostic = isSame ? before.diagnostic : diagnosticOf(finding, lines, uris);
+      if (!isSame) known.set(finding, { lines, uris, diagnostic });
+      const { file } = finding.at;
+      const diagnostics = byFile.get(file);
+      if (diagnostics === undefined) byFile.set(file, [diagnostic]);
+      else diagnostics.push(diagnostic);
+    }
+    return byFile;
+  };
+}
+
+/** `lines` and `uris`: of the finding's own place, then of the related ones. */
+function diagnosticOf(
+  { rule, level, mechanism, message, at, related }: Finding,
+  lines: readonly LineMap[],
+  uris: readonly string[],
+): Diagnostic {
+  const rangeOf = (span: Span, index: number) => (lines[index] as LineMap).rangeOf(span);
+  return {
+    range: rangeOf(at, 0),
     severity: SEVERITIES[level],
     code: rule,
     source: SOURCE,
@@ -32,19 +68,16 @@ export function diagnosticsOf({ analysis, snapshot }: Result, uriOf: UriOf): Rea
     ...(related.length === 0
       ? {}
       : {
-          relatedInformation: related.map((one) => ({
-            location: { uri: uriOf(one.at.file), range: rangeOf(one.at) },
+          relatedInformation: related.map((one, index) => ({
+            location: { uri: uris[index + 1] as string, range: rangeOf(one.at, index + 1) },
             message: one.message,
           })),
         }),
-  });
-  const byFile = new Map<string, Diagnostic[]>();
-  for (const finding of analysis.findings) {
-    const diagnostics = byFile.get(finding.at.file);
-    if (diagnostics === undefined) byFile.set(finding.at.file, [diagnosticOf(finding)]);
-    else diagnostics.push(diagnosticOf(finding));
-  }
-  return byFile;
+  };
+}
+
+export function sameItems<Item>(one: readonly Item[], other: readonly Item[]): boolean {
+  return one.length === other.length && one.every((item, index) => item === other[index]);
 }
 
 /** A line for each sentence: some of the editor's views do not wrap lines, and would cut off the way out. */

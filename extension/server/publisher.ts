@@ -4,6 +4,7 @@
  * Decides when to send; what diagnostics say is not its business.
  */
 import type { Diagnostic, PublishDiagnosticsParams } from "vscode-languageserver";
+import { sameItems } from "./diagnostics.js";
 
 export interface FileDiagnostics {
   readonly uri: string;
@@ -15,6 +16,7 @@ export interface FileDiagnostics {
 interface Published {
   readonly uri: string;
   readonly version: number | undefined;
+  readonly diagnostics: readonly Diagnostic[];
   readonly content: string;
 }
 
@@ -37,12 +39,13 @@ export class Publisher {
       this.#published.delete(file);
     }
     for (const [file, { uri, version, diagnostics }] of current) {
-      const content = JSON.stringify(diagnostics);
       const before = this.#published.get(file);
+      const isAsBefore = before !== undefined && sameItems(before.diagnostics, diagnostics);
+      const content = isAsBefore ? before.content : JSON.stringify(diagnostics);
       // A newer version is told even of the same diagnostics: typing may have moved what the editor shows of the old ones.
       const same = content === (before?.content ?? NOTHING) && (content === NOTHING || version === before?.version);
       if (!same) this.#send({ uri, ...(version === undefined ? {} : { version }), diagnostics: [...diagnostics] });
-      this.#published.set(file, { uri, version, content });
+      this.#published.set(file, { uri, version, diagnostics, content });
     }
   }
 }

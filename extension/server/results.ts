@@ -9,7 +9,7 @@ import { NO_STATE, STATE } from "../protocol/state.js";
 import { changesCodeLenses } from "./answers/codeLenses.js";
 import { changesInlayHints, type HintsOf } from "./answers/inlayHints.js";
 import { currentFile } from "./current.js";
-import { diagnosticsOf } from "./diagnostics.js";
+import { createDiagnosticsReader, type DiagnosticsOf } from "./diagnostics.js";
 import type { Report } from "./guard.js";
 import { type FileDiagnostics, Publisher } from "./publisher.js";
 import type { Result } from "./session.js";
@@ -40,6 +40,7 @@ export function showResults({ connection, capabilities, hintsOf, report }: Resul
     if (canRefreshLenses)
       connection.sendRequest("workspace/codeLens/refresh").catch((error) => report("Refreshing lenses", error));
   };
+  const diagnosticsOf = createDiagnosticsReader();
   let shown: Result | undefined;
   let stateSent = JSON.stringify(NO_STATE);
   /** One surface that fails must not keep the others from the result. */
@@ -53,7 +54,7 @@ export function showResults({ connection, capabilities, hintsOf, report }: Resul
   return {
     show(texts, result) {
       const uriOf = (file: string) => texts.uriOf(file);
-      attempt("Publishing findings", () => publisher.publish(fileDiagnosticsOf(texts, result)));
+      attempt("Publishing findings", () => publisher.publish(fileDiagnosticsOf(diagnosticsOf, texts, result)));
       attempt("Telling the state", () => {
         const state = stateOf(result, uriOf);
         const content = JSON.stringify(state);
@@ -83,7 +84,7 @@ export function showResults({ connection, capabilities, hintsOf, report }: Resul
 }
 
 /** Open documents are told of whether they have findings or not, so that what they are told carries their version. */
-function fileDiagnosticsOf(texts: Texts, result: Result): Map<string, FileDiagnostics> {
+function fileDiagnosticsOf(diagnosticsOf: DiagnosticsOf, texts: Texts, result: Result): Map<string, FileDiagnostics> {
   const { versions } = result.snapshot;
   const uriOf = (file: string) => texts.uriOf(file);
   const byFile = diagnosticsOf(result, uriOf);
