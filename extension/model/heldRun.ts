@@ -6,7 +6,7 @@
 import { heatNetworkOf, heatTimeConstants, holdingHeat, steadyHeat } from "./heat.js";
 import { integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
-import { MOST_STEPS, STIFF_TOLERANCE, scalesOf } from "./motionScales.js";
+import { MOST_STEPS, scalesOf } from "./motionScales.js";
 import { type CarriedState, carriedState, startState } from "./motionState.js";
 import { type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observation, type Observer } from "./observer.js";
@@ -32,6 +32,8 @@ export interface HeldRun {
   readonly carried: CarriedState;
 }
 
+/** Error of a step as a share: temperatures and times of minutes need no more. */
+const HELD_TOLERANCE = 3e-9;
 /** For ever: this many of the longest time constant. */
 const FOREVER = 40;
 /** A fuse may need this long just above its rating, s. */
@@ -72,10 +74,13 @@ export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: Carr
   };
 }
 
-/** Advances to a time, or to where the winding is past everything; returns the time reached. */
+/** Advances to a time, or to where the winding is past everything; returns the time reached. What has settled stays so. */
 function keep(system: MotionSystem, observer: Observer, state: Float64Array, fromS: number, toS: number): number {
-  const course = { tolerance: STIFF_TOLERANCE, endS: toS, firstStepS: (toS - fromS) / 1e4, mostSteps: MOST_STEPS, stiff: true };
-  return integrate(system, fromS, state, { ...course, ...observer.listen(system) }).timeS;
+  const { onStep, onNote } = observer.listen(system);
+  const firstStepS = (toS - fromS) / 1e4;
+  const course = { tolerance: HELD_TOLERANCE, endS: toS, firstStepS, mostSteps: MOST_STEPS, stiff: true, onStep, onNote };
+  const arrival = integrate(system, fromS, state, course);
+  return arrival.stop !== null && arrival.stop === system.index.settled ? toS : arrival.timeS;
 }
 
 function longestTimeConstant(plant: Plant): number {

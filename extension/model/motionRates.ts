@@ -4,7 +4,7 @@
  * Heat: C_w·T_w′ = I²R − (T_w − T_h)/R_wh, C_h·T_h′ = (T_w − T_h)/R_wh + (k_e·I − T)·ω − (T_h − T_a)/R_ha. Breaker and PTC:
  * θ′ = ((I/hold)² − θ)/τ. Fuse: damage′ = 1/t(I). Deliberately not here: the instant itself (motion.ts, stillMotion.ts).
  */
-import type { HeatNetwork } from "./heat.js";
+import { type HeatNetwork, heatTimeConstants } from "./heat.js";
 import { BY_HEAT, BY_PROGRESS, BY_SPEED, BY_TIME, type Gradient, type Instant } from "./instant.js";
 import type { Layout } from "./motionLayout.js";
 import type { Plant } from "./plant.js";
@@ -15,6 +15,8 @@ export interface MotionRates {
   readonly carried: (now: Instant) => number;
   /** T_w′, K/s; 0 without thermal data. */
   readonly windingRate: (state: Float64Array, now: Instant) => number;
+  /** What heat (K) and protection (hundredths of its state) would still change by at their present rates, each over its own time constant. */
+  readonly unrest: (state: Float64Array, now: Instant) => number;
   readonly fill: (state: Float64Array, now: Instant, rates: Float64Array) => void;
   /** Jacobian (row-major) and time derivatives of what `fill` gives. */
   readonly differentiate: (now: Instant, jacobian: Float64Array, timeRates: Float64Array) => void;
@@ -32,6 +34,19 @@ export function motionRates(plant: Plant, layout: Layout, network: HeatNetwork |
     if (!network) return 0;
     const flow = ((state[winding] as number) - (state[housing] as number)) / network.windingToHousingKPerW;
     return (now.currentA * now.currentA * now.resistanceOhm - flow) / network.windingJPerK;
+  }
+
+  const slowS = network ? heatTimeConstants(network)[1] : 0;
+  function unrest(state: Float64Array, now: Instant): number {
+    let left = 0;
+    if (network) {
+      const inner = ((state[winding] as number) - (state[housing] as number)) / network.windingToHousingKPerW;
+      const outer = ((state[housing] as number) - network.ambientC) / network.housingToAmbientKPerW;
+      left = (Math.abs(windingRate(state, now)) + Math.abs(inner - outer) / network.housingJPerK) * slowS;
+    }
+    if (replica) left += Math.abs((carried(now) / replica.holdCurrentA) ** 2 - (state[layout.protection] as number)) * 100;
+    if (fuse) left += fuseRate(fuse.ratingA, carried(now), "slow").rate > 0 && (state[layout.protection] as number) < 1 ? 1 : 0;
+    return left;
   }
 
   function fill(state: Float64Array, now: Instant, rates: Float64Array): void {
@@ -95,5 +110,5 @@ export function motionRates(plant: Plant, layout: Layout, network: HeatNetwork |
     if (now.supplyA > 0) add(layout.energy, now.supplyV - plant.bus.resistanceOhm * now.supplyA, now.supplyBy);
   }
 
-  return { carried, windingRate, fill, differentiate };
+  return { carried, windingRate, unrest, fill, differentiate };
 }

@@ -32,6 +32,7 @@ export interface MotionSystem extends OdeSystem {
 /** Below this share of the highest speed so far it stands still. */
 const STANDSTILL_SHARE = 1e-9;
 const HEAT_SCALE_K = 100;
+const UNCHECKED = 1e300;
 /** Sums are usually this share of full current over the whole time. */
 const SUM_SHARE = 0.01;
 
@@ -84,7 +85,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   return {
     size: layout.size,
     coupled: layout.squares,
-    scale: scaleOf(plant, layout, scales),
+    scale: scaleOf(plant, layout, scales, mode),
     watches,
     layout,
     index,
@@ -116,12 +117,18 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   };
 }
 
-function scaleOf(plant: Plant, layout: Layout, scales: MotionScales): Float64Array {
+function scaleOf(plant: Plant, layout: Layout, scales: MotionScales, mode: Mode): Float64Array {
   const scale = new Float64Array(layout.size).fill(1);
   scale[layout.progress] = scales.progressRad;
   scale[layout.speed] = scales.speedRadPerS;
   if (layout.winding >= 0) scale[layout.winding] = HEAT_SCALE_K;
   if (layout.housing >= 0) scale[layout.housing] = HEAT_SCALE_K;
+  if (mode.kind === "held") {
+    // Nobody asks for the sums of a hold, and at a collapsing supply they have no smooth rate.
+    scale[layout.squares] = UNCHECKED;
+    scale[layout.energy] = UNCHECKED;
+    return scale;
+  }
   scale[layout.squares] = SUM_SHARE * scales.currentA ** 2 * scales.timeS;
   scale[layout.energy] = SUM_SHARE * plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
   return scale;

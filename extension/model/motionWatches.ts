@@ -23,6 +23,8 @@ export interface WatchIndex {
   readonly breakaway: number;
   /** The winding is past anything that is still a motor. */
   readonly burnt: number;
+  /** Held or stalled for long, nothing changes any more. */
+  readonly settled: number;
   readonly currentPeak: number;
   readonly supplyPeak: number;
   readonly windingPeak: number;
@@ -59,6 +61,8 @@ export interface WatchedThings {
 const KINK: Watch = { kind: "kink", crosses: "both" };
 /** Values that only fade towards a kink stay this share of their size away from it, and no rounding makes them cross. */
 const FADED = 1e-9;
+/** What is left to change, in K and hundredths of a protector's state, when a held mechanism counts as settled. */
+const SETTLED = 1e-6;
 /** Share of the way after which it has left its start. */
 const LEFT = 1e-12;
 
@@ -124,6 +128,9 @@ export function motionWatches({
     (by: "currentBy" | "supplyBy"): WatchValue =>
     (at, now) =>
       rateAlong(now, now[by], rates.windingRate(at, now));
+  const lasts =
+    mode.kind === "held" ||
+    (mode.kind === "blocked" ? mode.startsAs === undefined : mode.kind === "following" && plant.load.endless);
   /** At the very start, where a ramp just overcomes the load, rounding is no standstill. */
   const hasLeft = (at: Float64Array): boolean => plant.load.endless || (at[0] as number) > LEFT * plant.spanRad;
   const index: WatchIndex = {
@@ -134,6 +141,7 @@ export function motionWatches({
     targetSpeed: listen(moving && flywheel, component(stop("up"), 1), (at) => (at[1] as number) - target()),
     breakaway: listen(mode.kind === "blocked" && mode.startsAs !== undefined, stop("up"), (_, now) => now.startGap),
     burnt: listen(network !== null, component(stop("up"), layout.winding), (at) => (at[layout.winding] as number) - RUNAWAY_C),
+    settled: listen(lasts, stop("down"), (at, now) => rates.unrest(at, now) - SETTLED),
     currentPeak: listen(true, note("down"), faded(currentScaleA / timeScaleS, rateOf("currentBy"))),
     supplyPeak: listen(true, note("down"), faded((plant.count * currentScaleA) / timeScaleS, rateOf("supplyBy"))),
     windingPeak: listen(network !== null, note("down"), faded(1 / timeScaleS, rates.windingRate)),
