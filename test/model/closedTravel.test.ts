@@ -36,5 +36,5 @@ describe("a travel in closed form", () => {
       }),
       { numRuns: 120, seed: 11 },
     );
-  });
+  }, 60_000);
 });

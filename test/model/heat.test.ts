@@ -95,7 +95,7 @@ describe("a loaded winding", () => {
       }),
       { numRuns: 60, seed: 3 },
     );
-  });
+  }, 60_000);
 
   it("stalled, heats to its limit the sooner the more it draws", () => {
     const full = solveStall(driveOf({ motor: warm }));

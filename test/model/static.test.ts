@@ -154,7 +154,7 @@ describe("numbers of a mechanism", () => {
       fc.property(someDrive, (drive) => expectFinite(solveMechanism(drive))),
       { numRuns: 300 },
     );
-  });
+  }, 60_000);
 });
 
 function expectFinite(value: unknown, path = ""): void {
