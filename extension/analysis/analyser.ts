@@ -14,7 +14,7 @@ import { createDeclarationFinder } from "./declarationFindings.js";
 import { createCollector } from "./declared.js";
 import { evaluateAll } from "./evaluateAll.js";
 import { createJudge } from "./judge.js";
-import { placeCalls } from "./placeCalls.js";
+import { createCallPlacer } from "./placeCalls.js";
 import { createSettingsReader } from "./settings.js";
 
 export interface Analyser {
@@ -25,6 +25,7 @@ export interface Analyser {
 /** `typescript`: the loaded parser, so that loading it stays the host's decision. */
 export function createAnalyser(typescript: TypeScript): Analyser {
   const evaluator = createEvaluator(typescript, { specifier: SPECIFIER, definitions: DEFINITIONS });
+  const placeCalls = createCallPlacer();
   const collectDeclared = createCollector();
   const findInDeclarations = createDeclarationFinder();
   const judge = createJudge();

@@ -25,13 +25,13 @@ export function createDeclarationFinder(): Finder {
   return (evaluations, declared, snapshot) => {
     const all = evaluations.map((evaluation) => factsOf(evaluation, snapshot));
     const names = all.flatMap((facts) => facts.names);
-    const found = [
+    const aboutText = [
       ...all.flatMap((facts) => facts.findings),
-      ...findUnknowns(all.flatMap((facts) => facts.unknowns)),
       ...findNamesTwice("mechanism", names),
       ...findNamesTwice("robot", names),
     ];
-    return mergeAlike(found).map((finding) => ({
+    const unknowns = findUnknowns(all.flatMap((facts) => facts.unknowns));
+    return [...mergeAlike(aboutText), ...unknowns].map((finding) => ({
       ...finding,
       mechanism: finding.mechanism ?? mechanismAround(finding.at, declared),
     }));

@@ -104,6 +104,24 @@ export const left = make("left", readTorque());
     expect(analysis.findings.map(({ rule }) => rule)).toEqual(["not-constant"]);
   });
 
+  it("is evaluated anew only where something changed", () => {
+    const { files, snapshot } = readFixture(`${HELPER}//- main.ts
+import { make } from "./make";
+export const left = make("left", "0.2 N*m");
+//- alone.ts
+${PRELUDE}export const hub = mechanism("hub", ${ROLL});
+`);
+    const { analyse } = createAnalyser(ts);
+    const before = analyse([...files.keys()], snapshot);
+    const same = analyse([...files.keys()], { ...snapshot });
+    const edited = new Map(files).set("/robot/main.ts", (files.get("/robot/main.ts") ?? "").replace("0.2", "0.3"));
+    const after = analyse([...files.keys()], { ...snapshot, read: (file) => edited.get(file) ?? null });
+    const kept = (one: Analysis) =>
+      [...one.files].filter(([file, each]) => each === before.files.get(file)).map(([file]) => file);
+    expect(kept(same)).toEqual(["/robot/alone.ts", "/robot/main.ts", "/robot/make.ts"]);
+    expect(kept(after)).toEqual(["/robot/alone.ts"]);
+  });
+
   it("stands in the order of files and positions", () => {
     const analysis = analyseAsHost(`//- a.ts
 import { make } from "./make";
