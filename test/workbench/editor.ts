@@ -4,11 +4,11 @@
 import { readFile } from "node:fs/promises";
 import { basename, join } from "node:path";
 import type { Frame, Locator, Page } from "playwright-core";
-import { findTextInView, readSquiggles, type Squiggle } from "./viewLines.js";
+import { type Box, findTextInView, readSquiggles, type Squiggle } from "./viewLines.js";
 import { waitUntil } from "./waitUntil.js";
 
 const OPEN_TIMEOUT_MS = 60_000;
-const HOVER_SETTLES_MS = 400;
+const SETTLES_MS = 400;
 
 export class Editor {
   constructor(
@@ -19,6 +19,11 @@ export class Editor {
 
   async waitUntilReady(): Promise<void> {
     await this.page.waitForSelector(".monaco-workbench .explorer-folders-view .monaco-list-row", { timeout: OPEN_TIMEOUT_MS });
+  }
+
+  /** Waits until a lens tells that the open file has been checked. */
+  async waitForLens(): Promise<void> {
+    await this.page.waitForSelector(".editor-group-container.active .codelens-decoration a");
   }
 
   /** Waits until the status bar no longer says that a language service is still working. */
@@ -87,7 +92,7 @@ export class Editor {
 
   /** Selects `text` where the view first shows it, and types over it. */
   async retype(text: string, replacement: string): Promise<void> {
-    const box = await waitUntil(`"${text}" in view`, () => findTextInView(this.page, text));
+    const box = await this.findSettled(text);
     await this.page.mouse.click(box.x + 1, box.y + box.height / 2);
     for (let step = 0; step < text.length; step += 1) await this.page.keyboard.press("Shift+ArrowRight");
     await this.page.keyboard.type(replacement, { delay: 20 });
@@ -95,6 +100,14 @@ export class Editor {
 
   async undo(): Promise<void> {
     await this.page.keyboard.press("Control+z");
+  }
+
+  /** Undoes until the view shows a text again. */
+  async undoUntil(text: string): Promise<void> {
+    for (let step = 0; !(await this.shows(text)); step += 1) {
+      if (step === 20) throw new Error(`Undoing did not bring back "${text}".`);
+      await this.undo();
+    }
   }
 
   async save(): Promise<void> {
@@ -152,7 +165,7 @@ export class Editor {
     const contents = this.page.locator(".monaco-resizable-hover:visible .hover-contents, .monaco-hover:visible .hover-contents");
     const loading = this.page.locator(".monaco-hover:visible", { hasText: "Loading..." });
     // Its parts arrive one by one; what is there after a moment without "Loading..." is all of it.
-    await this.page.waitForTimeout(HOVER_SETTLES_MS);
+    await this.page.waitForTimeout(SETTLES_MS);
     if ((await loading.count()) > 0) return "";
     return (await contents.allInnerTexts()).join("\n").replaceAll("\u00a0", " ").replaceAll("\u2002", "");
   }
@@ -173,6 +186,18 @@ export class Editor {
       return undefined;
     };
     return waitUntil(`a webview with ${selector}`, look, timeoutMs);
+  }
+
+  /** Where a text is once it stays there: lines move when lenses come. */
+  private findSettled(text: string): Promise<Box> {
+    let last: Box | undefined;
+    return waitUntil(`"${text}" at rest in view`, async () => {
+      const box = await findTextInView(this.page, text);
+      const rests = box !== undefined && box.x === last?.x && box.y === last.y;
+      last = box;
+      if (!rests) await this.page.waitForTimeout(SETTLES_MS);
+      return rests ? box : undefined;
+    });
   }
 
   private async fillQuickInput(text: string): Promise<void> {

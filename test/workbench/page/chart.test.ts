@@ -76,7 +76,7 @@ describe("the chart panel", () => {
     await editor.openFile("gearing.ts");
     await editor.retype("54;", "40;");
     await waitForNeeded(editor, "tray hoist", trayHoist({ driven: 40 }), trayHoist());
-    await undoUntil(editor, "TRAY_DRIVEN = 54;");
+    await editor.undoUntil("TRAY_DRIVEN = 54;");
     await waitForNeeded(editor, "tray hoist", trayHoist());
   });
 
@@ -91,7 +91,7 @@ describe("the chart panel", () => {
     await old.waitFor({ state: "visible" });
     assert.match((await old.textContent()) ?? "", /last result/);
     await waitForNeeded(editor, "tray hoist", trayHoist());
-    await undoUntil(editor, "TRAY_DRIVEN = 54;");
+    await editor.undoUntil("TRAY_DRIVEN = 54;");
     await old.waitFor({ state: "hidden" });
   });
 
@@ -143,8 +143,7 @@ describe("the chart panel", () => {
 
 async function openAtCaret(file: string, text: string): Promise<Editor> {
   const editor = await workbench().open(file);
-  // The lens says that the file has been looked at.
-  await editor.page.waitForSelector(".codelens-decoration a");
+  await editor.waitForLens();
   await editor.reveal(file, text);
   return editor;
 }
@@ -198,9 +197,4 @@ async function confirmSaving(editor: Editor, name: string): Promise<void> {
 
 function readSaved(editor: Editor, name: string): Promise<Buffer> {
   return waitUntil(`the file ${name}`, () => readFile(join(editor.folder, name)).catch(() => undefined));
-}
-
-async function undoUntil(editor: Editor, text: string): Promise<void> {
-  for (let step = 0; step < 20 && !(await editor.shows(text)); step += 1) await editor.undo();
-  assert.ok(await editor.shows(text), `Undoing did not bring back "${text}".`);
 }

@@ -37,6 +37,7 @@ describe("the overview of the workspace", () => {
 
   it("counts findings in one status item, and follows an edit", async () => {
     const editor = await workbench().open("mechanisms/wateringArm.ts");
+    await editor.waitForLens();
     await waitForStatus(editor, "Loadmark: 1 error");
     assert.equal(await editor.page.locator(STATUS).count(), 1);
     // It no longer stalls, but is past its peak of power still.

@@ -1,30 +1,29 @@
 // What a person sees while typing: the squiggle of an overloaded motor comes with a worse ratio, and goes with undo.
 
 import assert from "node:assert/strict";
-import type { Editor } from "../editor.js";
 import type { Squiggle } from "../viewLines.js";
 import { workbench } from "./session.js";
 
 describe("the squiggle of an overloaded motor", () => {
   it("comes while a worse ratio is typed, and goes when that is undone", async () => {
     const editor = await workbench().open("mechanisms/lidArm.ts");
-    await waitForNotes(editor);
+    await editor.waitForLens();
     assert.deepEqual((await editor.squiggles()).filter(isWarning), []);
     await editor.retype("LID_RATIO,", "2.4,");
     await editor.waitForSquiggles("a warning under the mechanism", isUnder("lidArm"));
-    await undoUntil(editor, "LID_RATIO, {");
+    await editor.undoUntil("LID_RATIO, {");
     await editor.waitForSquiggles("no warning", (squiggles) => !squiggles.some(isWarning));
   });
 
   it("comes in another file from the unsaved constant that it imports, and goes with it", async () => {
     const editor = await workbench().open("mechanisms/trayHoist.ts");
-    await waitForNotes(editor);
+    await editor.waitForLens();
     await editor.openFile("gearing.ts");
     await editor.retype("54;", "40;");
     await editor.openFile("mechanisms/trayHoist.ts");
     await editor.waitForSquiggles("a warning under the mechanism", isUnder("trayHoist"));
     await editor.openFile("gearing.ts");
-    await undoUntil(editor, "TRAY_DRIVEN = 54;");
+    await editor.undoUntil("TRAY_DRIVEN = 54;");
     await editor.openFile("mechanisms/trayHoist.ts");
     await editor.waitForSquiggles("no warning", (squiggles) => !squiggles.some(isWarning));
   });
@@ -44,14 +43,4 @@ function isWarning({ level }: Squiggle): boolean {
 
 function isUnder(name: string): (squiggles: readonly Squiggle[]) => boolean {
   return (squiggles) => squiggles.some(({ text, level }) => text === name && level === "warning");
-}
-
-/** The lens says that the file has been looked at. */
-async function waitForNotes(editor: Editor): Promise<void> {
-  await editor.page.waitForSelector(".codelens-decoration a, .codelens-decoration span");
-}
-
-async function undoUntil(editor: Editor, text: string): Promise<void> {
-  for (let step = 0; step < 20 && !(await editor.shows(text)); step += 1) await editor.undo();
-  assert.ok(await editor.shows(text), `Undoing did not bring back "${text}".`);
 }
