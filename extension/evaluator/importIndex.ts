@@ -1,8 +1,8 @@
 /**
  * Which files may import which, for a host that has seen the texts of a whole workspace: an exported object may be changed there.
  *
- * Compares the last words of specifiers with the names of files, so it needs no parser and no disk, and may name a file too many but
- * none too few. Keeps no text.
+ * Compares the last words of specifiers with the names of files, so it needs no parser and no disk, and may name a file too many. None
+ * is missing but those that use an alias of another name. Keeps no text.
  */
 
 export interface ImportIndex extends ImportView {
