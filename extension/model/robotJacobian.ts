@@ -7,7 +7,6 @@ import { depletionCurrent } from "./battery.js";
 import type { Supply } from "./drive.js";
 import { BY_HEAT, BY_PROGRESS, BY_SPEED, BY_TIME } from "./instant.js";
 import { fuseRate } from "./protection.js";
-import type { MutableBus } from "./robotPart.js";
 import { isKeptOpen, type RobotProtector } from "./robotProtector.js";
 import type { BusPoint, Seat, SharedPlaces } from "./robotSystem.js";
 import type { BusDemand, SharedBus } from "./sharedBus.js";
@@ -36,21 +35,19 @@ export function addSeatDerivatives(
 export interface BusAt {
   readonly supply: Supply;
   readonly bus: SharedBus;
-  readonly plantBus: MutableBus;
   /** Seats of the mechanisms that draw current. */
   readonly live: readonly Seat[];
   readonly places: SharedPlaces;
   /** At the front, prepared with derivatives. */
   readonly point: BusPoint;
-  readonly timeS: number;
 }
 
 export interface BusGradient {
   readonly add: (at: BusAt, jacobian: Float64Array, timeRates: Float64Array) => void;
 }
 
-/** Share of the voltage by which the bus is moved to see what rates do: they are at most squares and reciprocals of it. */
-const NUDGE = 1e-5;
+/** Share of the current by which it is moved to see the depletion's slope. */
+const NUDGE = 1e-6;
 
 export function createBusGradient(size: number): BusGradient {
   /** By the state, and last by time. */
@@ -124,21 +121,16 @@ export function createBusGradient(size: number): BusGradient {
     return sum;
   }
 
-  /** Mechanisms' rates by the bus's voltage, by a nudge both ways. */
-  function setByVolts({ live, plantBus, point, timeS }: BusAt): void {
+  /** Mechanisms' rates by the bus's voltage. */
+  function setByVolts({ live, point }: BusAt): void {
     byVolts.fill(0);
-    const nudgeV = NUDGE * Math.max(point.voltageV, Number.MIN_VALUE);
-    for (const side of [1, -1]) {
-      plantBus.openCircuitV = point.voltageV + side * nudgeV;
-      for (const { unit, state, rates, place } of live) {
-        unit.fill(timeS, state, unit.at, false);
-        unit.rates.fill(state, unit.at, rates);
-        for (let k = 0; k < place.length; k++) {
-          if ((place[k] as number) >= 0) (byVolts[place[k] as number] as number) += (side * (rates[k] as number)) / (2 * nudgeV);
-        }
-      }
+    for (const { unit, state, jacobian, timeRates, place } of live) {
+      unit.fillByVolts(state);
+      unit.rates.differentiate(unit.at, jacobian, timeRates);
+      const { supplyA } = unit.front;
+      timeRates[unit.part.layout.energy] = supplyA > 0 ? supplyA + point.voltageV * (unit.demand as BusDemand).slope : 0;
+      for (let k = 0; k < place.length; k++) if ((place[k] as number) >= 0) byVolts[place[k] as number] = timeRates[k] as number;
     }
-    plantBus.openCircuitV = point.voltageV;
   }
 
   return { add };

@@ -42,7 +42,7 @@ export interface RobotRun {
 }
 
 const MOST_EVENTS = 10_000;
-const MOST_STEPS_OF_RUN = 400_000;
+const MOST_STEPS_OF_RUN = 60_000;
 const MOST_SETTLING = 100;
 /** Courses of more time constants than this go by the stiff method. */
 const STIFF_TIME_CONSTANTS = 150;

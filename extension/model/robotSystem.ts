@@ -70,6 +70,7 @@ const HEAT_SCALE_K = 100;
 /** Sums are usually this share of full current over the whole time. */
 const SUM_SHARE = 0.01;
 const LEAST_SCALE = 1e-9;
+const LEAST_TIME_S = 1e-3;
 
 export function createRobotSystem(parts: readonly RobotPart[], sharing: Sharing): RobotSystem {
   const { supply, bus, plantBus } = sharing;
@@ -155,11 +156,11 @@ export function createRobotSystem(parts: readonly RobotPart[], sharing: Sharing)
     }
   }
 
-  function differentiate(timeS: number, jacobian: Float64Array, timeRates: Float64Array): void {
+  function differentiate(jacobian: Float64Array, timeRates: Float64Array): void {
     jacobian.fill(0);
     timeRates.fill(0);
     for (const seat of seats) addSeatDerivatives(seat, size, jacobian, timeRates, kept.has(seat));
-    gradient.add({ supply, bus, plantBus, live, places, point: front, timeS }, jacobian, timeRates);
+    gradient.add({ supply, bus, live, places, point: front }, jacobian, timeRates);
   }
 
   return {
@@ -181,7 +182,7 @@ export function createRobotSystem(parts: readonly RobotPart[], sharing: Sharing)
       see(timeS, state, "front", true);
       fillRates("front", front, state, start.rates);
       watchAll("front", front, state, values);
-      if (stiff) differentiate(timeS, start.jacobian, start.timeRates);
+      if (stiff) differentiate(start.jacobian, start.timeRates);
     },
     watch: (timeS, state, values) => watchAll("at", see(timeS, state, "at", true), state, values),
   };
@@ -226,17 +227,17 @@ function layOut(
 function scaleOf(seats: readonly Seat[], places: SharedPlaces, size: number, openCircuitV: number, fullA: number): Float64Array {
   const scale = new Float64Array(size).fill(1);
   /** Without current the sums stay at 0, whatever counts as 1. */
-  let longestS = LEAST_SCALE;
+  let longestS = LEAST_TIME_S;
   for (const { unit, place } of seats) {
     const { layout, scales, plant } = unit.part;
     const put = (k: number, value: number): void => {
-      if (k >= 0 && (place[k] as number) >= 0) scale[place[k] as number] = value;
+      if (k >= 0 && (place[k] as number) >= 0) scale[place[k] as number] = Math.max(value, LEAST_SCALE);
     };
-    put(layout.progress, scales.progressRad);
+    put(layout.progress, scales.progressRad || 1);
     put(layout.speed, scales.speedRadPerS);
     put(layout.winding, HEAT_SCALE_K);
     put(layout.housing, HEAT_SCALE_K);
-    put(layout.energy, SUM_SHARE * openCircuitV * plant.count * scales.currentA * scales.timeS);
+    put(layout.energy, SUM_SHARE * openCircuitV * plant.count * scales.currentA * Math.max(scales.timeS, LEAST_TIME_S));
     if (unit.demand) longestS = Math.max(longestS, scales.timeS);
   }
   const charge = SUM_SHARE * Math.max(fullA, LEAST_SCALE) * longestS;

@@ -48,7 +48,8 @@ export function reconsider(part: RobotPart, unit: RobotUnit, stepS: number): boo
         return passTarget(part, now);
       const speed = now.motorSpeed / part.plant.train.ratio;
       if (askedRadPerS !== null && speed >= askedRadPerS * (1 - THERE) && spareToHold(part, now) > 0) return keepSpeed(part);
-      const stands = mode.kind === "following" ? !(now.startGap > 0) : speed <= stillBelow(part) && !(now.speedRate > 0);
+      const stands =
+        mode.kind === "following" ? now.startGap < -slack(part) : speed <= stillBelow(part) && now.speedRate < -slack(part);
       if (stands) block(part);
       return stands;
     }
@@ -59,6 +60,11 @@ export function reconsider(part: RobotPart, unit: RobotUnit, stepS: number): boo
     default:
       return false;
   }
+}
+
+/** Speed (rad/s of the motor) or acceleration (rad/s²) below 0 that may be rounding of what has just started. */
+function slack({ moves, plant, scales }: RobotPart): number {
+  return THERE * (moves === "following" ? plant.train.ratio * scales.speedRadPerS : scales.speedRadPerS / scales.timeS);
 }
 
 /** What a crossing of one mechanism's own makes of it. */

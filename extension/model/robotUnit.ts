@@ -4,7 +4,7 @@
  *
  * Deliberately not here: the formulae themselves (motion.ts, stillMotion.ts, motionRates.ts) and the bus (sharedBus.ts).
  */
-import { createInstant, type Instant, setConditions } from "./instant.js";
+import { BY_TIME, createInstant, type Instant, setConditions } from "./instant.js";
 import { moveAt } from "./motion.js";
 import type { Mode } from "./motionLayout.js";
 import { type MotionRates, motionRates } from "./motionRates.js";
@@ -50,10 +50,14 @@ export interface RobotUnit {
   readonly ask: (timeS: number, state: Float64Array, now: Instant) => void;
   /** Fills an instant at the bus's voltage. */
   readonly fill: (timeS: number, state: Float64Array, now: Instant, derive: boolean) => void;
+  /** Derivatives of motion and current by the bus's voltage, per volt, where the front stands: as `at`'s derivatives by time. */
+  readonly fillByVolts: (state: Float64Array) => void;
 }
 
 /** Share of the highest speed since it started below which it stands still. */
 const STANDSTILL_SHARE = 1e-9;
+/** Shorter times do not count, s. */
+const LEAST_TIME_S = 1e-3;
 /** A ramp is never looked at nearer to its start than this share: with no command at all nothing would start. */
 const RAMP_BEGUN = 1e-9;
 
@@ -61,7 +65,10 @@ export function createUnit(part: RobotPart): RobotUnit {
   const { plant, layout, network, mode } = part;
   const rates = motionRates(plant, layout, network);
   const base = { part, rates, front: createInstant(), at: createInstant() };
-  if (mode.kind === "idle") return { ...base, demand: null, watches: [], ask: () => {}, fill: () => {} };
+  if (mode.kind === "idle") {
+    const nothing = (): void => {};
+    return { ...base, demand: null, watches: [], ask: nothing, fill: nothing, fillByVolts: nothing };
+  }
   const demand = createDemand();
   demand.count = plant.count;
   demand.dropV = plant.dropV;
@@ -79,28 +86,39 @@ export function createUnit(part: RobotPart): RobotUnit {
   }
 
   function fill(timeS: number, state: Float64Array, now: Instant, derive: boolean): void {
-    const since = sinceStart(part, timeS);
-    const windingC = windingOf(part, state);
-    const progress = state[0] as number;
-    switch (mode.kind) {
-      case "moving":
-        moveAt(plant, since, progress, state[1] as number, windingC, now, derive);
-        break;
-      case "following":
-        followAt(plant, since, progress, windingC, now);
-        break;
-      case "held":
-        holdAt(plant, mode, windingC, now);
-        break;
-      case "blocked":
-        if (part.moves === "moving") moveAt(plant, since, progress, 0, windingC, released, false);
-        else followAt(plant, since, progress, windingC, released);
-        blockedAt(plant, since, windingC, now);
-        now.startGap = released.startGap;
-    }
+    const since = mode.kind === "held" ? plant.rampS : sinceStart(part, timeS);
+    fillAs(plant, since, state, now, derive);
+    if (mode.kind !== "blocked") return;
+    if (part.moves === "moving") moveAt(plant, since, state[0] as number, 0, windingOf(part, state), released, false);
+    else followAt(plant, since, state[0] as number, windingOf(part, state), released);
+    now.startGap = released.startGap;
   }
 
-  return { ...base, demand, ask, fill, watches: watchesOf(part, mode, rates) };
+  function fillAs(as: Plant, since: number, state: Float64Array, now: Instant, derive: boolean): void {
+    const windingC = windingOf(part, state);
+    const progress = state[0] as number;
+    if (mode.kind === "moving") moveAt(as, since, progress, state[1] as number, windingC, now, derive);
+    else if (mode.kind === "following") followAt(as, since, progress, windingC, now);
+    else if (mode.kind === "held") holdAt(as, mode, since, windingC, now);
+    else blockedAt(as, since, windingC, now);
+  }
+
+  /** A ramp whose command at 1 s is the present one, and grows as a share of itself each second: as the voltage does by 1/head for each volt. */
+  const ramped = { ...plant, rampS: 2 };
+
+  function fillByVolts(state: Float64Array): void {
+    const { command } = base.front;
+    ramped.duty = 2 * command;
+    fillAs(ramped, 1, state, base.at, true);
+    const { at } = base;
+    const perVolt = at.headV > 0 ? 1 / at.headV : 0;
+    for (const by of [at.progressRateBy, at.speedRateBy, at.currentBy, at.torqueBy, at.motorSpeedBy]) {
+      by[BY_TIME] = perVolt * (by[BY_TIME] as number);
+    }
+    at.supplyBy[BY_TIME] = demand.slope;
+  }
+
+  return { ...base, demand, ask, fill, fillByVolts, watches: watchesOf(part, mode, rates) };
 }
 
 /** By how much line and limit give more than the mechanism needs to be held or kept at its speed, A of one motor. */
@@ -130,11 +148,12 @@ function heldCurrent(plant: Plant, held: RobotPart["held"], now: Instant): numbe
 }
 
 /** Where the supply does not bring the hold's current, all that full command gives; `limitGap` tells, A. */
-function holdAt(plant: Plant, held: RobotPart["held"], windingC: number, now: Instant): void {
+function holdAt(plant: Plant, held: RobotPart["held"], since: number, windingC: number, now: Instant): void {
   heldAt(plant, held.torqueNm, held.motorSpeedRadPerS, windingC, now);
-  const line = (now.command * now.headV - now.backEmf * now.motorSpeed) / (now.resistanceOhm + plant.leadOhm);
+  const command = since < plant.rampS ? (plant.duty * since) / plant.rampS : plant.duty;
+  const line = (command * now.headV - now.backEmf * now.motorSpeed) / (now.resistanceOhm + plant.leadOhm);
   const spare = Math.min(line, plant.limitA) - now.currentA;
-  if (spare < 0 && held.motorSpeedRadPerS === 0) blockedAt(plant, plant.rampS, windingC, now);
+  if (spare < 0 && held.motorSpeedRadPerS === 0) blockedAt(plant, since, windingC, now);
   now.limitGap = spare;
 }
 
@@ -181,7 +200,7 @@ function watchesOf(part: RobotPart, mode: Mode, rates: MotionRates): UnitWatch[]
     rates,
     stillBelow: () => stillBelow(part),
     currentScaleA: scales.currentA,
-    timeScaleS: scales.timeS,
+    timeScaleS: Math.max(scales.timeS, LEAST_TIME_S),
     target: () => targetOf(part),
   });
   const events = new Map<number, UnitEvent>([
