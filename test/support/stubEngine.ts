@@ -46,7 +46,17 @@ function analyse(roots: readonly string[], snapshot: Snapshot): Analysis {
     }
     files.set(file, { file, calls: [], dependencies, wanted: [], missing: [] });
   }
-  return { mechanisms: [], motors: [], robots: [], findings, findingsByMechanism: new Map(), files, wanted: [...wanted], toothCounts: new Map(), snapshot };
+  return {
+    mechanisms: [],
+    motors: [],
+    robots: [],
+    findings,
+    findingsByMechanism: new Map(),
+    files,
+    wanted: [...wanted],
+    toothCounts: new Map(),
+    snapshot,
+  };
 }
 
 function finding(file: string, message: string, start: number, end: number): Finding {
