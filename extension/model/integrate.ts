@@ -43,6 +43,9 @@ const MOST_EVENTS = 10_000;
 const LEAST_STEP = 1e-14;
 /** A kink is passed by this share of the step, so that the next step starts on the other side. */
 const PAST_KINK = 1e-9;
+/** A step refused is aimed this share past the kink inside it, unless that hardly shortens it. */
+const JUST_PAST = 1e-6;
+const KINK_RETRY = 0.9999;
 /** Crossings nearer to the start of a step than this are the kink that it started from. */
 const AT_START = 1e-6;
 /** Misses of a stop below this share of the step are made good along the rates: the error is their square. */
@@ -67,7 +70,7 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     const error = Math.max(stepper.errorSize(system.scale, course.tolerance), LEAST_ERROR);
     const growth = growthOf(error, stepper.growthPower);
     if (!(error <= 1) && length > LEAST_STEP * Math.max(Math.abs(tried.timeS), course.firstStepS)) {
-      length *= growth;
+      length = shorter(tried, length, growth, course);
       continue;
     }
     const next = length * growth;
@@ -107,6 +110,18 @@ function createTried(system: OdeSystem, course: Course, timeS: number): TriedSte
     inner: new Float64Array(system.size),
     watched: new Array<number>(count).fill(0),
   };
+}
+
+/** A step refused for a kink inside it is tried again to just past that kink, where the kink cannot disturb it any more. */
+function shorter(tried: TriedStep, length: number, growth: number, course: Course): number {
+  const { system, stepper } = tried;
+  if (!Number.isFinite(stepper.end[0] as number)) return length * growth;
+  system.prepare(tried.timeS + length, stepper.end, tried.end, tried.after, course.stiff);
+  let share = 1;
+  for (let i = 0; i < system.watches.length; i++) {
+    if ((system.watches[i] as Watch).kind === "kink") share = Math.min(share, firstCrossing(tried, i) ?? 1);
+  }
+  return share > growth / 2 && share < KINK_RETRY ? length * share * (1 + JUST_PAST) : length * growth;
 }
 
 function growthOf(error: number, power: number): number {
