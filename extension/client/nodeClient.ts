@@ -1,6 +1,7 @@
 /** The language client for a server in a Node process. */
 import { LanguageClient, TransportKind } from "vscode-languageclient/node";
 import { type ClientParts, clientOptions } from "./clientOptions.js";
+import { ENGINE_OPTIONS } from "./serverProcess.js";
 
 export interface NodeServer {
   readonly serverModule: string;
@@ -9,6 +10,6 @@ export interface NodeServer {
 }
 
 export function makeNodeClient({ serverModule, folder }: NodeServer, parts: ClientParts): LanguageClient {
-  const server = { module: serverModule, transport: TransportKind.ipc, options: { cwd: folder } };
+  const server = { module: serverModule, transport: TransportKind.ipc, options: { cwd: folder, execArgv: [...ENGINE_OPTIONS] } };
   return new LanguageClient("loadmark", "Loadmark", { run: server, debug: server }, clientOptions(parts));
 }

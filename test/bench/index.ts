@@ -1,15 +1,81 @@
 // The bench: prints how fast and how large the product is, as ratios against what an editor runs anyway, measured in this one run.
 // Numbers wobble with the machine; the ratios less. It asserts nothing: it is read by people.
 
+import { readFileSync, statSync } from "node:fs";
 import { join } from "node:path";
-import { cacheFolder } from "../workbench/paths.js";
+import { gzipSync } from "node:zlib";
+import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
+import { measureActivation } from "./activation.js";
+import { measureAnalysis } from "./analysis.js";
 import { type Beside, measureBeside, type Pair } from "./beside.js";
+import { soak } from "./soak.js";
 import { tellNumber, tellRatio, tellSpread } from "./spread.js";
+import { measureTravels } from "./travel.js";
 import { writeWorkspace } from "./workspace.js";
 
-export const sections: Record<string, { readonly title: string; readonly run: () => Promise<void> }> = {
+export interface BenchHost {
+  /** Packs the product into a folder and gives the paths. */
+  readonly makePackages: (folder: string) => Promise<{ readonly vsix: string; readonly tgz: string }>;
+}
+
+export const sections: Record<string, { readonly title: string; readonly run: (host: BenchHost) => Promise<void> }> = {
+  model: { title: "one mechanism", run: benchModel },
   editor: { title: "beside TypeScript's server", run: benchBeside },
+  client: { title: "activation and sizes", run: benchClient },
+  soak: { title: "10,000 edits", run: benchSoak },
 };
+
+const benchFolder = join(cacheFolder, "../bench");
+
+async function benchModel(): Promise<void> {
+  for (const { name, ours, odex, mathjs } of measureTravels(200)) {
+    console.log(
+      `  travel of the ${name}: ours ${tellSpread(ours, "ms")}, odex ${tellSpread(odex, "ms")}, mathjs ${tellSpread(mathjs, "ms")}`,
+    );
+    console.log(`  ${tellRatio("over odex", ours.median / odex.median, 1)}`);
+    console.log(`  ${tellRatio("over mathjs", ours.median / mathjs.median, 1 / 50)}`);
+  }
+  const times = measureAnalysis(100);
+  console.log(`  from text to findings: ${tellSpread(times.without, "ms")}`);
+  console.log(
+    `  with ${times.sensitivities} sensitivities: ${tellSpread(times.with, "ms")}, bar 5 ms: ${tellBar(times.with.median, 5)}`,
+  );
+}
+
+async function benchClient({ makePackages }: BenchHost): Promise<void> {
+  const activation = measureActivation(9);
+  console.log(
+    `  loading and activating the client: ${tellSpread(activation, "ms")}, bar 50 ms: ${tellBar(activation.median, 50)}`,
+  );
+  const { vsix } = await makePackages(join(benchFolder, "packages"));
+  const kilobytes = (file: string) => statSync(join(repositoryRoot, file)).size / 1000;
+  for (const name of [
+    "client.cjs",
+    "client.web.cjs",
+    "server.cjs",
+    "server.web.js",
+    "command.js",
+    "webview/main.js",
+    "typescript.js",
+  ]) {
+    const packed = gzipSync(readFileSync(join(repositoryRoot, "dist", name))).length / 1000;
+    const bar = name.startsWith("client") ? `, bar 550 kB: ${tellBar(kilobytes(`dist/${name}`), 550)}` : "";
+    console.log(`  ${name}: ${tellNumber(kilobytes(`dist/${name}`))} kB, ${tellNumber(packed)} kB packed${bar}`);
+  }
+  const size = statSync(vsix).size / 1e6;
+  console.log(`  the packed extension: ${tellNumber(size)} MB, bar 2.5 MB: ${tellBar(size, 2.5)}`);
+}
+
+async function benchSoak(): Promise<void> {
+  const workspace = await writeWorkspace(join(benchFolder, "workspace200"), 200);
+  await soak(workspace, 10_000, 10, ({ edits, memoryMB, msAnEdit }) =>
+    console.log(`  after ${edits} edits: ${tellNumber(memoryMB)} MB${edits === 0 ? "" : `, ${tellNumber(msAnEdit)} ms an edit`}`),
+  );
+}
+
+function tellBar(value: number, bar: number): string {
+  return value <= bar ? "holds" : "DOES NOT HOLD";
+}
 
 async function benchBeside(): Promise<void> {
   const small = await besideOf(200, { openings: 4, edits: 25 });
@@ -26,7 +92,7 @@ async function benchBeside(): Promise<void> {
 }
 
 async function besideOf(files: number, rounds: Parameters<typeof measureBeside>[1]): Promise<Beside> {
-  const workspace = await writeWorkspace(join(cacheFolder, `../bench/workspace${files}`), files);
+  const workspace = await writeWorkspace(join(benchFolder, `workspace${files}`), files);
   const beside = await measureBeside(workspace, rounds);
   console.log(
     `\n  ${workspace.files} files, ${workspace.lines} lines, a quarter declare mechanisms; ${beside.findings} findings`,

@@ -12,6 +12,7 @@ import {
   StreamMessageReader,
   StreamMessageWriter,
 } from "vscode-languageserver/node";
+import { ENGINE_OPTIONS } from "../../extension/client/serverProcess.js";
 import { repositoryRoot } from "../workbench/paths.js";
 import type { EditedFile } from "./workspace.js";
 
@@ -24,9 +25,8 @@ export class LanguageServer {
   #heard: (published: PublishDiagnosticsParams) => void = () => {};
 
   constructor() {
-    this.process = spawn(process.execPath, [join(repositoryRoot, "dist/server.cjs"), "--stdio"], {
-      stdio: ["pipe", "pipe", "inherit"],
-    });
+    const server = join(repositoryRoot, "dist/server.cjs");
+    this.process = spawn(process.execPath, [...ENGINE_OPTIONS, server, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
     const { stdin, stdout } = this.process;
     if (stdin === null || stdout === null) throw new Error("The server has no streams.");
     this.#connection = createProtocolConnection(new StreamMessageReader(stdout), new StreamMessageWriter(stdin));

@@ -5,7 +5,7 @@
 export function plainFile(cell: number, part: number): string {
   const head = part < 100 ? `import { DRIVEN, PINION } from "./gearing.js";\n` : "";
   const sections = Array.from({ length: 6 }, (_, section) => sectionOf(cell, part, section));
-  return `${head}\n${sections.join("\n")}\nexport const ratioOfPart${part} = DRIVEN.slow / PINION;\n`;
+  return `import { setTimeout as pause } from "node:timers/promises";\n${head}\n${sections.join("\n")}\nexport const ratioOfPart${part} = DRIVEN.slow / PINION;\n`;
 }
 
 function sectionOf(cell: number, part: number, section: number): string {
@@ -36,6 +36,11 @@ export class ${name}Follower {
     if (spread > ${(gain * 10).toFixed(1)}) this.#state = { kind: "stopped", why: \`spread \${spread.toFixed(2)}\` };
     else if (this.#state.kind === "idle") this.#state = { kind: "moving", target: this.#smoothed, since: reading.atMs };
     return this.#state;
+  }
+
+  async settle(forMs: number): Promise<number> {
+    await pause(forMs);
+    return this.#smoothed;
   }
 
   get smoothed(): number {

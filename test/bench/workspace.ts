@@ -1,7 +1,7 @@
 // Writes a workspace the way a robot project looks, seeded, so that every run measures the same texts: cells of twenty files, five of
 // which declare mechanisms, the others their shared numbers and the code around them. It measures nothing.
 
-import { cp, mkdir, rm, writeFile } from "node:fs/promises";
+import { cp, mkdir, rm, symlink, writeFile } from "node:fs/promises";
 import { dirname, join } from "node:path";
 import { repositoryRoot } from "../workbench/paths.js";
 import { plainFile } from "./plainCode.js";
@@ -49,6 +49,9 @@ export async function writeWorkspace(folder: string, files: number): Promise<Ben
   await mkdir(library, { recursive: true });
   await cp(join(repositoryRoot, "package.json"), join(library, "package.json"));
   await cp(join(repositoryRoot, "dist/declarations"), join(library, "dist/declarations"), { recursive: true });
+  // Robot code on a small computer is compiled against Node's types, as a rule.
+  await mkdir(join(folder, "node_modules/@types"), { recursive: true });
+  await symlink(join(repositoryRoot, "node_modules/@types/node"), join(folder, "node_modules/@types/node"));
   const edited = (path: string, name: string, numberAt: (edit: number) => string): EditedFile => {
     const text = texts.get(path) ?? "";
     const { index, 0: declaration } = new RegExp(`(?<=const ${name} = )[^;]+`).exec(text) ?? { index: 0, 0: "" };
@@ -153,7 +156,7 @@ export default robot("cell ${cell}", { supply: pack, mechanisms: [${numbers.map(
 
 const TSCONFIG = `{
   "compilerOptions": {
-    "target": "es2023", "module": "nodenext", "moduleResolution": "nodenext", "lib": ["es2023"], "types": [],
+    "target": "es2023", "module": "nodenext", "moduleResolution": "nodenext", "lib": ["es2023"], "types": ["node"],
     "strict": true, "noEmit": true, "skipLibCheck": true
   },
   "include": ["src"]

@@ -1,0 +1,52 @@
+// A full analysis of one mechanism, from text to findings, with and without the sensitivities of every declared number. Each text holds
+// another number, so that nothing can be remembered.
+
+import typescript from "typescript";
+import { createAnalyser } from "../../extension/analysis/analyser.js";
+import { sensitivitiesOf } from "../../extension/analysis/sensitivity.js";
+import { type Spread, spreadOf } from "./spread.js";
+
+const WARM = 30;
+const FILE = "/bench/hoist.ts";
+
+const textWith = (kilograms: number) => `import { battery, breaker, lift, mechanism, motor, spur } from "loadmark";
+const slow = motor({ voltage: "12 V", noLoad: { speed: "138 rpm", current: "0.31 A" }, stall: { torque: "2.9 N*m", current: "4.7 A" } });
+const pack = battery({ openCircuit: "12.8 V", resistance: "90 mohm", mustStayAbove: "9.5 V" });
+export const hoist = mechanism("hoist", {
+  motor: slow,
+  motorCount: 2,
+  stages: [spur(16, 40)],
+  load: lift({ mass: "${kilograms} kg", drumRadius: "40 mm", travel: "0.8 m" }),
+  within: "9 s",
+  protect: breaker({ holdCurrent: "2 A", trips: { at: "4 A", after: "6 s" } }),
+  supply: pack,
+});
+`;
+
+export interface AnalysisTimes {
+  /** ms. */
+  readonly without: Spread;
+  readonly with: Spread;
+  readonly sensitivities: number;
+}
+
+export function measureAnalysis(rounds: number): AnalysisTimes {
+  const { analyse } = createAnalyser(typescript);
+  const without: number[] = [];
+  const whole: number[] = [];
+  let sensitivities = 0;
+  for (let turn = 0; turn < WARM + rounds; turn++) {
+    const text = textWith(12 + turn / 1000);
+    const start = performance.now();
+    const analysis = analyse([FILE], { read: (file) => (file === FILE ? text : null) });
+    const analysed = performance.now();
+    const [mechanism] = analysis.mechanisms;
+    if (mechanism?.numbers === undefined) throw new Error("The bench's mechanism has no numbers.");
+    sensitivities = sensitivitiesOf(analysis, mechanism).length;
+    const end = performance.now();
+    if (turn < WARM) continue;
+    without.push(analysed - start);
+    whole.push(end - start);
+  }
+  return { without: spreadOf(without), with: spreadOf(whole), sensitivities };
+}
