@@ -49,14 +49,17 @@ function fileArguments() {
   return file ? ["--goto", file] : [];
 }
 
-/** The first file with something to see, from the check's own report. */
+/** The file with the worst to see, from the check's own report. */
 function fileWithFinding() {
   const { stdout } = spawnSync(process.execPath, [command, "check", demo, "--format", "json"], {
     cwd: demo,
     encoding: "utf8",
   });
   try {
-    const file = JSON.parse(stdout).findings[0]?.file;
+    /** @type {{ level: string, file: string }[]} */
+    const findings = JSON.parse(stdout).findings;
+    const worst = ["error", "warning"].map((level) => findings.find((finding) => finding.level === level));
+    const file = worst.find((finding) => finding)?.file;
     return typeof file === "string" ? join(demo, file) : undefined;
   } catch {
     return undefined;

@@ -14,6 +14,7 @@ export const calmSettings: Readonly<Record<string, unknown>> = {
   "chat.commandCenter.enabled": false,
   "telemetry.telemetryLevel": "off",
   "security.workspace.trust.enabled": false,
+  "git.openRepositoryInParentFolders": "never",
   "extensions.autoUpdate": false,
   "extensions.autoCheckUpdates": false,
   "extensions.ignoreRecommendations": true,
