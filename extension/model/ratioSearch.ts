@@ -47,11 +47,12 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
   let high = Math.log(Math.max(least * 20, 20));
   let best: QuickestRatio | null = null;
   let unresolved = 0;
+  const unwatched = withoutWatches(drive);
   const timeAt = (log: number): number => {
     const factor = Math.exp(log);
     // Travels that take too many steps to follow are absurd and slow: one of them ends the search.
     if (unresolved > 0) return Number.POSITIVE_INFINITY;
-    const travel = solveTravel(withRatioTimes(drive, factor));
+    const travel = solveTravel(withRatioTimes(unwatched, factor));
     if (travel?.outcome === "unresolved") unresolved++;
     const timeS = travel?.timeS ?? null;
     if (timeS !== null && (best === null || timeS < best.timeS)) best = { ratio: ratio * factor, timeS };
@@ -75,4 +76,11 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
     }
   }
   return best;
+}
+
+/** Protection and the voltage floor are only watched: the time is the same without them, and found in closed form more often. */
+function withoutWatches({ protection: _protection, supply, ...drive }: Drive): Drive {
+  if (supply === undefined) return drive;
+  const { mustStayAbove: _floor, ...unwatched } = supply;
+  return { ...drive, supply: unwatched };
 }
