@@ -20,10 +20,12 @@ export interface CodeLens {
 
 export function codeLensesOf(analysis: Analysis, file: string): CodeLens[] {
   const here = analysis.mechanisms.filter(({ at }) => at.file === file);
+  const counts = new Map<number, number>();
+  for (const { at } of here) counts.set(at.start, (counts.get(at.start) ?? 0) + 1);
   return here.map((mechanism) => {
-    const alone = here.filter(({ at }) => at.start === mechanism.at.start).length === 1;
+    const isAlone = counts.get(mechanism.at.start) === 1;
     const title = titleOf(analysis, mechanism);
-    return { span: mechanism.at, title: alone ? title : `${plainText(mechanism.name)}: ${title}`, mechanism: mechanism.name };
+    return { span: mechanism.at, title: isAlone ? title : `${plainText(mechanism.name)}: ${title}`, mechanism: mechanism.name };
   });
 }
 

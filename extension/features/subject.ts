@@ -29,8 +29,9 @@ export interface Constant {
 /** The innermost subject at an offset; ends of words count, so that a caret right behind one finds it. */
 export function subjectAt(analysis: Analysis, file: string, offset: number): Subject | undefined {
   const calls = [...analysis.files.values()].flatMap((evaluation) => evaluation.calls);
+  const mechanismsOf = indexByPlace(analysis.mechanisms);
   const found = [
-    ...calls.flatMap((call) => subjectsOf(analysis, call)),
+    ...calls.flatMap((call) => subjectsOf(mechanismsOf, call)),
     ...calls.flatMap(leavesOf).flatMap((leaf) => constantsOf(analysis, leaf)),
   ];
   const here = found.filter(({ span }) => span.file === file && span.start <= offset && offset <= span.end);
@@ -43,20 +44,33 @@ export function subjectAt(analysis: Analysis, file: string, offset: number): Sub
   return imported && { ...imported, span: word.span };
 }
 
-function subjectsOf(analysis: Analysis, call: DefinitionCall): Subject[] {
+type MechanismsOf = (call: DefinitionCall) => readonly AnalysedMechanism[];
+
+/** A loop declares several mechanisms by one piece of text. */
+function indexByPlace(mechanisms: readonly AnalysedMechanism[]): MechanismsOf {
+  const nameOf = ({ span: { file, start, end } }: DefinitionCall) => `${start} ${end} ${file}`;
+  const byPlace = new Map<string, AnalysedMechanism[]>();
+  for (const one of mechanisms) {
+    const same = byPlace.get(nameOf(one.call));
+    if (same === undefined) byPlace.set(nameOf(one.call), [one]);
+    else same.push(one);
+  }
+  return (call) => byPlace.get(nameOf(call)) ?? [];
+}
+
+function subjectsOf(mechanismsOf: MechanismsOf, call: DefinitionCall): Subject[] {
   const own = [call.callee, ...(call.binding ? [call.binding.span] : [])];
   const label = call.definition === "mechanism" || call.definition === "robot" ? call.args[0] : undefined;
   if (label?.known && label.origin.kind === "literal") own.push(label.origin.span);
   return [
-    ...own.flatMap((span) => subjectOf(analysis, call, span)),
-    ...call.args.flatMap((arg) => usesIn(arg)).flatMap(({ span, call: used }) => subjectOf(analysis, used, span)),
+    ...own.flatMap((span) => subjectOf(mechanismsOf, call, span)),
+    ...call.args.flatMap((arg) => usesIn(arg)).flatMap(({ span, call: used }) => subjectOf(mechanismsOf, used, span)),
   ];
 }
 
-function subjectOf(analysis: Analysis, call: DefinitionCall, span: Span): Subject[] {
+function subjectOf(mechanismsOf: MechanismsOf, call: DefinitionCall, span: Span): Subject[] {
   if (call.definition !== "mechanism") return [{ kind: "built", span, call }];
-  // A loop declares several mechanisms by one piece of text.
-  const mechanisms = analysis.mechanisms.filter((one) => one.call === call || sameSpan(one.call.span, call.span));
+  const mechanisms = mechanismsOf(call);
   return mechanisms.length === 0 ? [] : [{ kind: "mechanism", span, mechanisms }];
 }
 
