@@ -1,5 +1,5 @@
-/** `// loadmark-allow rule: reason` above a mechanism: silences one rule there. A reason is required; one that matches nothing is told. */
-import type { Span } from "../evaluator/value.js";
+/** `// loadmark-allow rule: reason` above a mechanism or a robot: silences one rule there. A reason is required; one that matches nothing is told. */
+import type { DefinitionCall, Span } from "../evaluator/value.js";
 import { badDeclaration } from "../rules/badDeclaration.js";
 import { RULES } from "../rules/table.js";
 import { nearest } from "../units/nearest.js";
@@ -10,12 +10,14 @@ import type { Declared } from "./declared.js";
 export function applyAllowances(findings: readonly Finding[], declared: Declared): Finding[] {
   const about: Finding[] = [];
   const silenced = new Set<Finding>();
-  for (const { at, text, names } of listComments(declared)) {
+  for (const { at, text, names, robots } of listComments(declared)) {
     const match = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/.exec(text.trim());
     if (match === null) continue;
     const [, rule = "", reason = ""] = match;
-    const hit = findings.filter((finding) => finding.rule === rule && finding.mechanism !== null && names.has(finding.mechanism));
-    const [name = ""] = names;
+    const isMeant = (finding: Finding): boolean =>
+      finding.mechanism === null ? robots.some((one) => isAt(finding, one)) : names.has(finding.mechanism);
+    const hit = findings.filter((finding) => finding.rule === rule && isMeant(finding));
+    const [name = null] = names;
     const refusal = refuse(rule, reason, hit.length > 0, name);
     if (refusal !== undefined) about.push(refusal(at));
     else for (const finding of hit) silenced.add(finding);
@@ -28,22 +30,29 @@ interface Comment {
   readonly text: string;
   /** The mechanisms below it: several where a loop or a helper declares them by one piece of text. */
   readonly names: Set<string>;
+  /** Where the findings of a robot below it sit. */
+  readonly robots: Span[];
 }
 
-function listComments({ mechanisms }: Declared): Comment[] {
+function listComments({ mechanisms, robots }: Declared): Comment[] {
   const comments = new Map<string, Comment>();
-  for (const { name, call } of mechanisms) {
-    for (const { text, span } of call.leadingComments) {
+  const commentsAbove = ({ leadingComments }: DefinitionCall): Comment[] =>
+    leadingComments.map(({ text, span }) => {
       const key = `${span.start} ${span.file}`;
-      const comment = comments.get(key) ?? { at: span, text, names: new Set() };
+      const comment = comments.get(key) ?? { at: span, text, names: new Set(), robots: [] };
       comments.set(key, comment);
-      comment.names.add(name);
-    }
-  }
+      return comment;
+    });
+  for (const { name, call } of mechanisms) for (const { names } of commentsAbove(call)) names.add(name);
+  for (const { at, call } of robots) for (const comment of commentsAbove(call)) comment.robots.push(at);
   return [...comments.values()];
 }
 
-function refuse(rule: string, reason: string, matches: boolean, mechanism: string): ((at: Span) => Finding) | undefined {
+function isAt({ at }: Finding, { file, start, end }: Span): boolean {
+  return at.file === file && at.start === start && at.end === end;
+}
+
+function refuse(rule: string, reason: string, matches: boolean, mechanism: string | null): ((at: Span) => Finding) | undefined {
   const told = (level: Finding["level"], message: string) => (at: Span) => ({
     rule: badDeclaration.id,
     level,

@@ -14,12 +14,16 @@ import { createDeclarationFinder } from "./declarationFindings.js";
 import { createCollector } from "./declared.js";
 import { evaluateAll } from "./evaluateAll.js";
 import { createJudge } from "./judge.js";
+import { createRobotJudge, unjudged } from "./judgeRobots.js";
 import { createCallPlacer } from "./placeCalls.js";
 import { createSettingsReader } from "./settings.js";
 
 export interface Analyser {
-  /** `roots`: the files to check; what they import is checked with them. File names are slash-separated and absolute, or URIs. */
-  analyse(roots: readonly string[], snapshot: Snapshot): Analysis;
+  /**
+   * `roots`: the files to check; what they import is checked with them. File names are slash-separated and absolute, or URIs.
+   * `mechanismsOnly`: for a what-if about mechanisms; robots' load cycles, which take longer, are then not run.
+   */
+  analyse(roots: readonly string[], snapshot: Snapshot, mechanismsOnly?: boolean): Analysis;
 }
 
 /** `typescript`: the loaded parser, so that loading it stays the host's decision. */
@@ -29,20 +33,26 @@ export function createAnalyser(typescript: TypeScript): Analyser {
   const collectDeclared = createCollector();
   const findInDeclarations = createDeclarationFinder();
   const judge = createJudge();
+  const judgeRobots = createRobotJudge();
   const readSettings = createSettingsReader(typescript);
   return {
-    analyse(roots, snapshot) {
+    analyse(roots, snapshot, mechanismsOnly = false) {
       const evaluated = evaluateAll(evaluator, roots, snapshot);
       const files = placeCalls(evaluated.files);
       const settings = readSettings([...files.keys()], snapshot);
       const declared = collectDeclared(files.values());
       const judged = judge(declared);
-      const found = [...findInDeclarations([...files.values()], declared, snapshot), ...judged.findings];
+      const judgedRobots = mechanismsOnly ? unjudged(declared) : judgeRobots(declared, judged);
+      const found = [
+        ...findInDeclarations([...files.values()], declared, snapshot),
+        ...judged.findings,
+        ...judgedRobots.findings,
+      ];
       const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))].sort(byPlace);
       return {
         mechanisms: judged.mechanisms,
         motors: declared.motors,
-        robots: declared.robots,
+        robots: judgedRobots.robots,
         findings,
         findingsByMechanism: groupByMechanism(findings),
         files,

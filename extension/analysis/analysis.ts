@@ -9,6 +9,8 @@ import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
 import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
+import type { RobotDrive } from "../model/robotDrive.js";
+import type { RobotNumbers } from "../model/robotSolution.js";
 import type { Level, RuleId } from "../rules/rule.js";
 
 export interface Finding {
@@ -47,7 +49,15 @@ export interface AnalysedRobot {
   readonly name: string;
   readonly at: Span;
   readonly call: DefinitionCall;
-  readonly declared: Robot;
+  /** Absent where a value is unknown or refused. */
+  readonly declared?: Robot;
+  /** What the model was told of its load cycle; present with `numbers`. */
+  readonly drive?: RobotDrive;
+  /** Absent without a load cycle, or where its physics could not be run; `notChecked` then says why. */
+  readonly numbers?: RobotNumbers;
+  /** Plain sentences. */
+  readonly assumed: readonly string[];
+  readonly notChecked: readonly string[];
 }
 
 export interface Analysis {

@@ -8,7 +8,16 @@ import type { AnalysedMechanism, AnalysedMotor, AnalysedRobot } from "./analysis
 export interface Declared {
   readonly mechanisms: readonly Omit<AnalysedMechanism, "assumed" | "notChecked" | "numbers">[];
   readonly motors: readonly AnalysedMotor[];
-  readonly robots: readonly AnalysedRobot[];
+  readonly robots: readonly DeclaredRobot[];
+  /** Those of which a value is unknown or refused. */
+  readonly unknownRobots: readonly RobotCall[];
+}
+
+/** Where a robot is declared. */
+export type RobotCall = Pick<AnalysedRobot, "name" | "at" | "call">;
+
+export interface DeclaredRobot extends RobotCall {
+  readonly declared: Robot;
 }
 
 /** What each file declares is kept for as long as its evaluation is. */
@@ -26,6 +35,7 @@ export function createCollector(): (evaluations: Iterable<FileEvaluation>) => De
       mechanisms: all.flatMap(({ mechanisms }) => mechanisms),
       motors: all.flatMap(({ motors }) => motors),
       robots: all.flatMap(({ robots }) => robots),
+      unknownRobots: all.flatMap(({ unknownRobots }) => unknownRobots),
     };
   };
 }
@@ -47,6 +57,9 @@ function declaredBy(calls: readonly DefinitionCall[]): Declared {
     robots: calls.flatMap((call) =>
       call.definition === "robot" && call.built !== undefined ? [{ ...place(call), call, declared: call.built as Robot }] : [],
     ),
+    unknownRobots: calls
+      .filter((call) => call.definition === "robot" && call.built === undefined)
+      .map((call) => ({ ...place(call), call })),
   };
 }
 

@@ -11,11 +11,11 @@ import { solveMechanismRuns } from "../model/solve.js";
 import type { MechanismFacts, MechanismRule, RuleId, Verdict } from "../rules/rule.js";
 import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
-import type { AnalysedMechanism, AnalysedRobot, Finding } from "./analysis.js";
+import type { AnalysedMechanism, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
 import { comesFrom } from "./comesFrom.js";
 import { type Corner, cornersOf } from "./corners.js";
-import type { Declared } from "./declared.js";
+import type { Declared, DeclaredRobot } from "./declared.js";
 import { indexRobots, supplyCallOf } from "./lentSupply.js";
 import { createMemory } from "./memory.js";
 
@@ -38,7 +38,7 @@ type Declaring = Declared["mechanisms"][number] & { readonly declared: Mechanism
 /** What is said of one call: the same objects as long as nothing that it rests on changed, so that those who show them can tell. */
 interface Told {
   readonly solution: Solved;
-  readonly robot: AnalysedRobot["declared"] | undefined;
+  readonly robot: DeclaredRobot["declared"] | undefined;
   readonly isShared: boolean;
   readonly mechanism: AnalysedMechanism;
   readonly findings: readonly Finding[];
@@ -57,7 +57,7 @@ interface Facts {
 export function createJudge(): (declared: Declared) => Judged {
   const solved = new WeakMap<Mechanism, Solved>();
   const remembered = createMemory<Pick<Solved, "drive" | "numbers" | "corners" | "verdicts">>();
-  const solve = (mechanism: Mechanism, call: DefinitionCall, robot: AnalysedRobot | undefined): Solved => {
+  const solve = (mechanism: Mechanism, call: DefinitionCall, robot: DeclaredRobot | undefined): Solved => {
     const lent = mechanism.si.supply === undefined ? robot : undefined;
     const supply = lent?.declared.supply.si;
     const before = solved.get(mechanism);
@@ -78,7 +78,7 @@ export function createJudge(): (declared: Declared) => Judged {
     return result;
   };
   const told = new WeakMap<DefinitionCall, Told>();
-  const tell = (one: Declaring, robot: AnalysedRobot | undefined, isShared: boolean): Told => {
+  const tell = (one: Declaring, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
     const solution = solve(one.declared, one.call, robot);
     const before = told.get(one.call);
     if (before?.solution === solution && before.robot === robot?.declared && before.isShared === isShared) return before;
@@ -174,7 +174,7 @@ function sharedPlaces(mechanisms: Declared["mechanisms"]): (at: Span) => boolean
   return (at) => (counts.get(keyOf(at)) ?? 0) > 1;
 }
 
-function tellWhyUnknown(call: DefinitionCall): string {
+export function tellWhyUnknown(call: DefinitionCall): string {
   const unknown = call.unknowns[0];
   if (unknown !== undefined) return `Nothing: ${unknown.reason.message}`;
   return "Nothing: the declaration is not accepted.";

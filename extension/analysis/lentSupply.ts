@@ -1,18 +1,21 @@
 /** A mechanism that names no supply runs on that of the one robot that lists it. */
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { DefinitionCall } from "../evaluator/value.js";
-import type { AnalysedRobot } from "./analysis.js";
+import type { DeclaredRobot, RobotCall } from "./declared.js";
 import { valueAt } from "./places.js";
 
 /** The one robot that lists the mechanism; with several, none of them is assumed. */
-export function robotOf(mechanism: Mechanism, robots: readonly AnalysedRobot[]): AnalysedRobot | undefined {
-  const listing = robots.filter((robot) => robot.declared.mechanisms.includes(mechanism));
+export function robotOf<Listing extends Partial<DeclaredRobot>>(
+  mechanism: Mechanism,
+  robots: readonly Listing[],
+): Listing | undefined {
+  const listing = robots.filter(({ declared }) => declared?.mechanisms.includes(mechanism));
   return listing.length === 1 ? listing[0] : undefined;
 }
 
 /** The same for every mechanism that robots list, found at once. */
-export function indexRobots(robots: readonly AnalysedRobot[]): ReadonlyMap<Mechanism, AnalysedRobot | undefined> {
-  const found = new Map<Mechanism, AnalysedRobot | undefined>();
+export function indexRobots(robots: readonly DeclaredRobot[]): ReadonlyMap<Mechanism, DeclaredRobot | undefined> {
+  const found = new Map<Mechanism, DeclaredRobot | undefined>();
   for (const robot of robots) {
     for (const mechanism of new Set(robot.declared.mechanisms)) found.set(mechanism, found.has(mechanism) ? undefined : robot);
   }
@@ -20,7 +23,7 @@ export function indexRobots(robots: readonly AnalysedRobot[]): ReadonlyMap<Mecha
 }
 
 /** The call that declares the robot's supply. */
-export function supplyCallOf({ call }: AnalysedRobot): DefinitionCall | undefined {
+export function supplyCallOf({ call }: RobotCall): DefinitionCall | undefined {
   const argument = call.args[1];
   const value = argument === undefined ? undefined : valueAt(argument, ["supply"]);
   return value?.known && value.data.kind === "built" ? value.data.call : undefined;

@@ -37,11 +37,16 @@ export interface MechanismNode {
 export function mechanismTree(analysis: Analysis): MechanismTree {
   const byDeclared = new Map(analysis.mechanisms.map((mechanism) => [mechanism.declared, mechanism]));
   const listed = new Set<AnalysedMechanism>();
-  const robots = analysis.robots.map((robot): RobotNode => {
-    const own = robot.declared.mechanisms.flatMap((declared) => byDeclared.get(declared) ?? []);
+  const declared = analysis.robots.filter((robot) => robot.declared !== undefined);
+  const robots = declared.map((robot): RobotNode => {
+    const own = (robot.declared?.mechanisms ?? []).flatMap((declared) => byDeclared.get(declared) ?? []);
     for (const mechanism of own) listed.add(mechanism);
     const mechanisms = own.map((mechanism) => nodeOf(analysis, mechanism));
-    const states = [...mechanisms.map(({ state }) => state), ...statesAt(analysis, robot.call.span)];
+    const states = [
+      ...mechanisms.map(({ state }) => state),
+      ...statesAt(analysis, robot.call.span),
+      ...statesAt(analysis, robot.at),
+    ];
     return { label: plainText(robot.name), at: robot.at, state: states.reduce(worse, "fine"), mechanisms };
   });
   const apart = analysis.mechanisms.filter((mechanism) => !listed.has(mechanism)).map((mechanism) => nodeOf(analysis, mechanism));

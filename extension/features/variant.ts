@@ -23,7 +23,7 @@ export function variantOf(
 ): readonly AnalysedMechanism[] | undefined {
   const roots = rootsOf(analysis, fed);
   for (const place of placesToWrite(origin)) {
-    const changed = analyse(roots, withText(analysis.snapshot, place, rewrite));
+    const changed = analyse(roots, withText(analysis.snapshot, place, rewrite), true);
     const found = fed.flatMap((mechanism) => counterpart(mechanism, analysis, changed) ?? []);
     if (found.length === fed.length && found.every((one, index) => isChanged(fed[index], one))) return found;
   }
@@ -32,7 +32,7 @@ export function variantOf(
 
 /** Only what is asked about is analysed: its files, and those of the robots that may supply it. */
 function rootsOf({ robots }: Analysis, fed: readonly AnalysedMechanism[]): string[] {
-  const listing = robots.filter(({ declared }) => fed.some((one) => one.declared && declared.mechanisms.includes(one.declared)));
+  const listing = robots.filter(({ declared }) => fed.some((one) => one.declared && declared?.mechanisms.includes(one.declared)));
   return [...new Set([...fed, ...listing].map(({ call }) => call.span.file))];
 }
 

@@ -106,9 +106,12 @@ export function createBusGradient(size: number): BusGradient {
       const { unit, place } = seat;
       const { layout } = unit.part;
       const { supplyBy } = unit.front;
-      by[place[layout.progress] as number] = supplyBy[BY_PROGRESS] as number;
-      by[place[layout.speed] as number] = supplyBy[BY_SPEED] as number;
-      if (layout.winding >= 0) by[place[layout.winding] as number] = supplyBy[BY_HEAT] as number;
+      const put = (k: number, value: number): void => {
+        if (k >= 0 && (place[k] as number) >= 0) by[place[k] as number] = value;
+      };
+      put(layout.progress, supplyBy[BY_PROGRESS] as number);
+      put(layout.speed, supplyBy[BY_SPEED] as number);
+      put(layout.winding, supplyBy[BY_HEAT] as number);
       (by[size] as number) += supplyBy[BY_TIME] as number;
       slope += (unit.demand as BusDemand).slope;
     }

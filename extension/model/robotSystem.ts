@@ -208,7 +208,7 @@ function layOut(
     const place = new Int32Array(layout.size).fill(-1);
     const carried = [layout.winding, layout.housing, layout.protection, layout.fast].filter((k) => k >= 0);
     if (idle && carried.length === 0) return [];
-    for (const k of idle ? carried : [layout.progress, layout.speed, ...carried]) place[k] = next++;
+    for (const k of [...motionOf(part), ...carried]) place[k] = next++;
     const own = (): Float64Array => new Float64Array(layout.size);
     const jacobian = new Float64Array(layout.size * layout.size);
     return [{ unit: createUnit(part), place, state: own(), rates: own(), jacobian, timeRates: own() }];
@@ -222,6 +222,12 @@ function layOut(
   for (const { unit, place } of seats) if (unit.demand) place[unit.part.layout.energy] = next++;
   const places = { protectors, charge: next++, depletion: next++, energy: next++ };
   return { seats, places, size: next, coupled };
+}
+
+/** What of its motion changes by itself. */
+function motionOf({ mode, layout }: RobotPart): number[] {
+  if (mode.kind === "moving") return [layout.progress, layout.speed];
+  return mode.kind === "following" ? [layout.progress] : [];
 }
 
 function scaleOf(seats: readonly Seat[], places: SharedPlaces, size: number, openCircuitV: number, fullA: number): Float64Array {

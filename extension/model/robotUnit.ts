@@ -99,7 +99,8 @@ export function createUnit(part: RobotPart): RobotUnit {
     const progress = state[0] as number;
     if (mode.kind === "moving") moveAt(as, since, progress, state[1] as number, windingC, now, derive);
     else if (mode.kind === "following") followAt(as, since, progress, windingC, now);
-    else if (mode.kind === "held") holdAt(as, mode, since, windingC, now);
+    else if (mode.kind === "held" && (derive || !holdBriefly(as, mode, windingC, now))) holdAt(as, mode, since, windingC, now);
+    else if (mode.kind === "held") return;
     else blockedAt(as, since, windingC, now);
   }
 
@@ -145,6 +146,26 @@ function windingOf({ layout }: RobotPart, state: Float64Array): number {
 function heldCurrent(plant: Plant, held: RobotPart["held"], now: Instant): number {
   const speed = held.motorSpeedRadPerS;
   return held.torqueNm / now.torqueConstant + (speed > 0 ? plant.breakawayA + plant.lossSlopeAsPerRad * speed : 0);
+}
+
+/** The same without derivatives, where the supply brings the hold's current; else false. */
+function holdBriefly(plant: Plant, held: RobotPart["held"], windingC: number, now: Instant): boolean {
+  setConditions(plant, plant.rampS, windingC, now);
+  const seriesOhm = now.resistanceOhm + plant.leadOhm;
+  const backV = now.backEmf * held.motorSpeedRadPerS;
+  const current = heldCurrent(plant, held, now);
+  const spare = Math.min((plant.duty * now.headV - backV) / seriesOhm, plant.limitA) - current;
+  if (!(spare >= 0 && now.headV > 0)) return false;
+  now.progressRate = 0;
+  now.speedRate = 0;
+  now.motorSpeed = held.motorSpeedRadPerS;
+  now.torqueNm = held.torqueNm;
+  now.currentA = current;
+  now.supplyA = (plant.count * current * (current * seriesOhm + backV)) / now.headV;
+  now.supplyV = plant.bus.openCircuitV;
+  now.supplied = true;
+  now.limitGap = spare;
+  return true;
 }
 
 /** Where the supply does not bring the hold's current, all that full command gives; `limitGap` tells, A. */

@@ -4,7 +4,7 @@
  * SI throughout; no absolute paths, no timestamps; the same analysis gives the same bytes. Numbers carry ten significant digits, so
  * that the last bit of a platform's arithmetic never shows.
  */
-import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/propose.js";
 import type { Sensitivity } from "../analysis/sensitivity.js";
 import { createLineFinder, type Place } from "./lines.js";
@@ -13,6 +13,7 @@ export interface Report {
   readonly format: "loadmark-report";
   readonly version: 1;
   readonly mechanisms: readonly ReportedMechanism[];
+  readonly robots: readonly ReportedRobot[];
   readonly findings: readonly ReportedFinding[];
   readonly proposals: readonly ReportedProposal[];
 }
@@ -57,6 +58,11 @@ export interface ReportedMechanism extends NumbersOrNull {
   readonly notChecked: readonly string[];
 }
 
+type RobotNumbers = NonNullable<AnalysedRobot["numbers"]>;
+
+/** null without a load cycle, or where it could not be run. */
+export type ReportedRobot = { readonly name: string } & { readonly [Field in keyof RobotNumbers]: RobotNumbers[Field] | null };
+
 /** What is computed only when it is asked for. */
 export interface Extras {
   sensitivityOf(mechanism: AnalysedMechanism): readonly Sensitivity[];
@@ -80,6 +86,10 @@ export function makeReport(analysis: Analysis, nameOf: (file: string) => string,
       })),
       assumed: mechanism.assumed,
       notChecked: mechanism.notChecked,
+    })),
+    robots: analysis.robots.map(({ name, numbers }) => ({
+      name,
+      ...(numbers === undefined ? NO_ROBOT_NUMBERS : roundNumbers(numbers)),
     })),
     findings: reportFindings(analysis, nameOf),
     proposals: proposals.map(({ mechanism, rule, summary, predicted, touches, edits }) => ({
@@ -137,6 +147,15 @@ const NO_NUMBERS: NumbersOrNull = {
   hold: null,
   stall: null,
   feedforward: null,
+};
+
+const NO_ROBOT_NUMBERS = {
+  lowestVoltageV: null,
+  lowestVoltageAtS: null,
+  peakCurrentA: null,
+  sourceEnergyJ: null,
+  chargeUsedAh: null,
+  cyclesDone: null,
 };
 
 function roundNumbers<T>(value: T): T {

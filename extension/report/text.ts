@@ -1,5 +1,5 @@
 /** The report for a terminal: findings first, then a table per mechanism, then the cautions. */
-import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/propose.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
@@ -12,6 +12,7 @@ export function writeText(analysis: Analysis, nameOf: (file: string) => string, 
   const blocks = [
     ...findings.map((finding) => writeFinding(finding, proposals)),
     ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf)),
+    ...analysis.robots.map((robot) => writeRobot(robot, nameOf)),
     writeSummary(findings, analysis.mechanisms.length),
     CAUTIONS.terminal,
   ];
@@ -34,10 +35,34 @@ function writeFinding(
 
 function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string): string {
   const rows = mechanism.numbers === undefined ? [] : rowsOf(mechanism.numbers);
-  const lines = [...rows, ...notesOf("assumed", mechanism.assumed), ...notesOf("not checked", mechanism.notChecked)].map(
+  return writeTable(`${mechanism.name} (${nameOf(mechanism.at.file)})`, rows, mechanism);
+}
+
+function writeTable(
+  title: string,
+  rows: readonly Row[],
+  { assumed, notChecked }: Pick<AnalysedRobot, "assumed" | "notChecked">,
+): string {
+  const lines = [...rows, ...notesOf("assumed", assumed), ...notesOf("not checked", notChecked)].map(
     ([label, text]) => `  ${label.padEnd(12)} ${toInertText(text)}`,
   );
-  return [`${toInertText(mechanism.name)} (${nameOf(mechanism.at.file)})`, ...lines].join("\n");
+  return [toInertText(title), ...lines].join("\n");
+}
+
+function writeRobot(robot: AnalysedRobot, nameOf: (file: string) => string): string {
+  const { numbers } = robot;
+  const rows: Row[] = numbers === undefined ? [] : robotRows(numbers);
+  return writeTable(`robot ${robot.name} (${nameOf(robot.at.file)})`, rows, robot);
+}
+
+function robotRows(numbers: NonNullable<AnalysedRobot["numbers"]>): Row[] {
+  const { lowestVoltageV, lowestVoltageAtS, peakCurrentA, sourceEnergyJ, chargeUsedAh, cyclesDone } = numbers;
+  return [
+    ["supply", `falls to ${writeQuantity(lowestVoltageV, "voltage")} after ${writeQuantity(lowestVoltageAtS, "time")}`],
+    ["draws", `${writeQuantity(peakCurrentA, "current")} at most`],
+    ["takes", `${writeQuantity(sourceEnergyJ, "energy")}, ${writeQuantity(chargeUsedAh * 3600, "charge")} of the battery`],
+    ["cycles", `${cyclesDone} done`],
+  ];
 }
 
 /** The label stands once. */

@@ -9,6 +9,11 @@ import { notConstant } from "./notConstant.js";
 import { overheats } from "./overheats.js";
 import { overloads } from "./overloads.js";
 import { pastPeak } from "./pastPeak.js";
+import { robotEmpties } from "./robotEmpties.js";
+import { robotOverheats } from "./robotOverheats.js";
+import type { RobotRule } from "./robotRule.js";
+import { robotSags } from "./robotSags.js";
+import { robotTrips } from "./robotTrips.js";
 import type { Level, MechanismRule, MotorRule, RuleId } from "./rule.js";
 import { sags } from "./sags.js";
 import { sheetContradicts } from "./sheetContradicts.js";
@@ -33,6 +38,9 @@ export const MECHANISM_RULES: readonly MechanismRule[] = [
   noHeadroom,
 ];
 export const MOTOR_RULES: readonly MotorRule[] = [sheetContradicts];
+
+/** Over a robot's load cycle; they share their names and settings with the rules above. */
+export const ROBOT_RULES: readonly RobotRule[] = [robotTrips, robotOverheats, robotSags, robotEmpties];
 
 /** Rules and their levels, for settings and documentation. */
 export const RULES: readonly { readonly id: RuleId; readonly level: Level }[] = [
