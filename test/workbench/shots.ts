@@ -38,40 +38,43 @@ const MECHANISMS_ALONE: readonly Step[] = [
 
 const NARROWER: Step = { do: "runCommand", title: "Decrease Editor Width" };
 
-/** The chart of the shelf lift beside its code. */
-const CHART: Pick<Shot, "file" | "size" | "steps"> = {
-  file: "mechanisms/shelfLift.ts",
-  size: { width: 1200, height: 656 },
-  steps: [
-    HIDE_SIDE_BAR,
-    { do: "expectSquiggle", under: "shelfLift" },
-    { do: "reveal", file: "mechanisms/shelfLift.ts", text: "motorCount" },
-    { do: "runCommand", title: "Loadmark: Show Operating Point" },
-    { do: "expectWebview", selector: "#chart .content:not([hidden])" },
-    NARROWER,
-  ],
-};
+const LIFT = "mechanisms/shelfLift.ts";
 
-export const shots: readonly Shot[] = [
+/** What is shown; each in dark and in light, so that a README can follow its reader's colours. */
+const scenes: readonly Omit<Shot, "theme">[] = [
   {
-    name: "warning-dark",
-    theme: "Dark Modern",
-    file: "mechanisms/shelfLift.ts",
+    name: "warning",
+    file: LIFT,
     size: { width: 1200, height: 520 },
     steps: [
       { do: "expectSquiggle", under: "shelfLift" },
       ...MECHANISMS_ALONE,
-      { do: "reveal", file: "mechanisms/shelfLift.ts", text: "import { pack }" },
+      { do: "reveal", file: LIFT, text: "import { pack }" },
       { do: "showProblem", holds: "takes it back below half" },
     ],
   },
   {
-    name: "hover-light",
-    theme: "Light Modern",
+    name: "hover",
     file: "gearing.ts",
     size: { width: 1200, height: 520 },
     steps: [HIDE_SIDE_BAR, { do: "hover", over: "PINION", holds: /tray hoist\t[\s\S]*const PINION/ }],
   },
-  { name: "chart-dark", theme: "Dark Modern", ...CHART },
-  { name: "chart-light", theme: "Light Modern", ...CHART },
+  {
+    name: "chart",
+    file: LIFT,
+    size: { width: 1200, height: 656 },
+    steps: [
+      HIDE_SIDE_BAR,
+      { do: "expectSquiggle", under: "shelfLift" },
+      { do: "reveal", file: LIFT, text: "motorCount" },
+      { do: "runCommand", title: "Loadmark: Show Operating Point" },
+      { do: "expectWebview", selector: "#chart .content:not([hidden])" },
+      NARROWER,
+    ],
+  },
 ];
+
+export const shots: readonly Shot[] = scenes.flatMap((scene) => [
+  { ...scene, name: `${scene.name}-dark`, theme: "Dark Modern" },
+  { ...scene, name: `${scene.name}-light`, theme: "Light Modern" },
+]);
