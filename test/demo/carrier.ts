@@ -20,4 +20,13 @@ export const setPoints = {
 export const carrier = robot("seedling carrier", {
   supply: pack,
   mechanisms: [trayHoist, shelfLift, wateringArm, lidArm, driveBase, seedDrum, soilPress],
+  // One row of trays: drive there, lift a tray, press its soil while the drum meters out seeds, open the lid, and on with the shelf.
+  loadCycle: [
+    { lasts: "5 s", moving: [driveBase] },
+    { lasts: "5 s", moving: [trayHoist, seedDrum] },
+    { lasts: "13 s", moving: [soilPress, seedDrum], holding: [trayHoist] },
+    { lasts: "2 s", moving: [lidArm] },
+    { lasts: "10 s", moving: [driveBase, shelfLift, lidArm] },
+  ],
+  cycles: 30,
 });
