@@ -33,7 +33,7 @@ interface Solved {
   readonly verdicts: readonly Judgement[];
 }
 
-type Declaring = Declared["mechanisms"][number] & { readonly declared: Mechanism };
+type Declaring = Declared["mechanisms"][number];
 
 /** What is said of one call: the same objects as long as nothing that it rests on changed, so that those who show them can tell. */
 interface Told {
@@ -78,8 +78,8 @@ export function createJudge(): (declared: Declared) => Judged {
     return result;
   };
   const told = new WeakMap<DefinitionCall, Told>();
-  const tell = (one: Declaring, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
-    const solution = solve(one.declared, one.call, robot);
+  const tell = (one: Declaring, declared: Mechanism, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
+    const solution = solve(declared, one.call, robot);
     const before = told.get(one.call);
     if (before?.solution === solution && before.robot === robot?.declared && before.isShared === isShared) return before;
     const { drive, numbers, corners, verdicts } = solution;
@@ -87,7 +87,7 @@ export function createJudge(): (declared: Declared) => Judged {
       solution,
       robot: robot?.declared,
       isShared,
-      mechanism: { ...one, drive, numbers, ...tellAssumptions(one.declared, robot?.declared, corners) },
+      mechanism: { ...one, drive, numbers, ...tellAssumptions(declared, robot?.declared, corners) },
       findings: verdicts.map(({ rule, verdict }) => {
         const finding = toFinding(rule, verdict, one.at, one.call, one.name);
         return isShared ? { ...finding, message: `${one.name}: ${finding.message}` } : finding;
@@ -106,7 +106,7 @@ export function createJudge(): (declared: Declared) => Judged {
       if (isImpossible(declared.motor)) {
         return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
       }
-      const result = tell({ ...one, declared }, lending.get(declared), isShared(one.at));
+      const result = tell(one, declared, lending.get(declared), isShared(one.at));
       findings.push(...result.findings);
       return result.mechanism;
     });

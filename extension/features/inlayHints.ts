@@ -25,15 +25,24 @@ export const LONGEST_LABEL = 16;
 /** Hints at offsets from `start` to `end`, in order. */
 export function inlayHintsIn(analysis: Analysis, file: string, start: number, end: number): InlayHint[] {
   const hints = analysis.mechanisms.flatMap((mechanism) => {
-    const places = stagePlaces(mechanism, file);
-    const isNamedHere = mechanism.call.args[0]?.origin.span.file === file;
-    // Words are written only for what stands in this file: a workspace may hold hundreds of others.
-    if (!isNamedHere && places.every((place) => place === undefined)) return [];
+    // Nothing is written for what has no place in this file: a workspace may hold hundreds of others.
+    if (!mayStandIn(mechanism, file)) return [];
     const { state } = verdictOf(analysis, mechanism);
-    return [...shareHints(mechanism, file, state), ...stageHints(mechanism, places, state)];
+    return [...shareHints(mechanism, file, state), ...stageHints(mechanism, stagePlaces(mechanism, file), state)];
   });
   const inRange = hints.filter(({ offset }) => start <= offset && offset <= end);
   return mergeAtSamePlace(inRange).sort((one, other) => one.offset - other.offset);
+}
+
+/** A look at its name and the ways of its stages, which costs next to nothing. */
+function mayStandIn({ call }: AnalysedMechanism, file: string): boolean {
+  if (call.span.file === file || call.args[0]?.origin.span.file === file) return true;
+  const stages = fieldOf(call.args[1], "stages");
+  if (!stages?.known || stages.data.kind !== "array") return false;
+  return stages.data.items.some(({ origin }) => {
+    for (let one: Origin | undefined = origin; one !== undefined; [one] = one.from) if (one.span.file === file) return true;
+    return false;
+  });
 }
 
 function shareHints(mechanism: AnalysedMechanism, file: string, state: State): InlayHint[] {

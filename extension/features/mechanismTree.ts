@@ -38,14 +38,15 @@ export function mechanismTree(analysis: Analysis): MechanismTree {
   const byDeclared = new Map(analysis.mechanisms.map((mechanism) => [mechanism.declared, mechanism]));
   const listed = new Set<AnalysedMechanism>();
   const declared = analysis.robots.filter((robot) => robot.declared !== undefined);
+  const general = analysis.findings.filter(({ mechanism }) => mechanism === null);
   const robots = declared.map((robot): RobotNode => {
     const own = (robot.declared?.mechanisms ?? []).flatMap((declared) => byDeclared.get(declared) ?? []);
     for (const mechanism of own) listed.add(mechanism);
     const mechanisms = own.map((mechanism) => nodeOf(analysis, mechanism));
     const states = [
       ...mechanisms.map(({ state }) => state),
-      ...statesAt(analysis, robot.call.span),
-      ...statesAt(analysis, robot.at),
+      ...statesAt(general, robot.call.span),
+      ...statesAt(general, robot.at),
     ];
     return { label: plainText(robot.name), at: robot.at, state: states.reduce(worse, "fine"), mechanisms };
   });
@@ -69,9 +70,8 @@ function nodeOf(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNode
   };
 }
 
-function statesAt({ findings }: Analysis, { file, start, end }: Span): State[] {
-  const here = findings.filter(
-    ({ at, mechanism }) => mechanism === null && at.file === file && start <= at.start && at.end <= end,
-  );
+/** `general`: findings about no mechanism in particular. */
+function statesAt(general: Analysis["findings"], { file, start, end }: Span): State[] {
+  const here = general.filter(({ at }) => at.file === file && start <= at.start && at.end <= end);
   return here.flatMap(({ level }) => (level === "information" ? [] : [level]));
 }

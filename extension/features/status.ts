@@ -16,7 +16,10 @@ export function statusOf(analysis: Analysis): Status | undefined {
   if (mechanisms.length + motors.length + robots.length === 0) return undefined;
   const errors = findings.filter(({ level }) => level === "error").length;
   const warnings = findings.filter(({ level }) => level === "warning").length;
-  const unknown = mechanisms.filter((mechanism) => verdictOf(analysis, mechanism).state === "unknown").length;
+  // Only one without numbers can be unknown: the others need no verdict, and there may be hundreds.
+  const unknown = mechanisms.filter(
+    (mechanism) => mechanism.numbers === undefined && verdictOf(analysis, mechanism).state === "unknown",
+  ).length;
   const tooltip = [
     count(mechanisms.length, "mechanism"),
     ...(robots.length > 0 ? [count(robots.length, "robot")] : []),

@@ -34,10 +34,11 @@ export function createDiagnosticsReader(): DiagnosticsOf {
   const known = new WeakMap<Finding, Written>();
   return ({ analysis, snapshot }, uriOf) => {
     const byFile = new Map<string, Diagnostic[]>();
+    const addressOf = rememberAddresses(uriOf);
     for (const finding of analysis.findings) {
       const spans = [finding.at, ...finding.related.map(({ at }) => at)];
       const lines = spans.map(({ file }) => snapshot.lineMap(file));
-      const uris = spans.map(({ file }) => uriOf(file));
+      const uris = spans.map(({ file }) => addressOf(file));
       const before = known.get(finding);
       const isSame = before !== undefined && sameItems(before.lines, lines) && sameItems(before.uris, uris);
       const diagnostic = isSame ? before.diagnostic : diagnosticOf(finding, lines, uris);
@@ -73,6 +74,18 @@ function diagnosticOf(
             message: one.message,
           })),
         }),
+  };
+}
+
+/** Writing an address costs more than all else that is done for a place, and most places share a few files. */
+export function rememberAddresses(uriOf: UriOf): UriOf {
+  const known = new Map<string, string>();
+  return (file) => {
+    const before = known.get(file);
+    if (before !== undefined) return before;
+    const uri = uriOf(file);
+    known.set(file, uri);
+    return uri;
   };
 }
 

@@ -5,10 +5,12 @@ import { type MechanismNode, mechanismTree } from "../features/mechanismTree.js"
 import { statusOf } from "../features/status.js";
 import type { Place } from "../protocol/place.js";
 import type { MechanismState, State } from "../protocol/state.js";
+import { rememberAddresses } from "./diagnostics.js";
 import type { Result } from "./session.js";
 
 export function stateOf({ analysis, snapshot }: Result, uriOf: (file: string) => string): State {
-  const placeOf = (at: Span): Place => ({ uri: uriOf(at.file), range: snapshot.lineMap(at.file).rangeOf(at) });
+  const addressOf = rememberAddresses(uriOf);
+  const placeOf = (at: Span): Place => ({ uri: addressOf(at.file), range: snapshot.lineMap(at.file).rangeOf(at) });
   const mechanismOf = ({ name, label, description, tooltip, at, state }: MechanismNode): MechanismState => ({
     name,
     label,
