@@ -129,7 +129,7 @@ export class Editor {
   async waitForSquiggles(
     what: string,
     accept: (squiggles: readonly Squiggle[]) => boolean,
-    timeoutMs = 15_000,
+    timeoutMs = 45_000,
   ): Promise<Squiggle[]> {
     let last: Squiggle[] = [];
     const look = async () => {
@@ -140,7 +140,7 @@ export class Editor {
   }
 
   /** Hovers over the `text` in view with the mouse, and gives the hover's text once it holds what is expected. */
-  async hover(text: string, expected: RegExp, timeoutMs = 15_000): Promise<string> {
+  async hover(text: string, expected: RegExp, timeoutMs = 45_000): Promise<string> {
     let last = "";
     const look = async () => {
       // Looked for each time, since lines move when lenses come.
@@ -178,7 +178,7 @@ export class Editor {
   }
 
   /** The frame of a webview that holds what the selector asks for. */
-  webview(selector: string, timeoutMs = 15_000): Promise<Frame> {
+  webview(selector: string, timeoutMs = 45_000): Promise<Frame> {
     const look = async () => {
       for (const frame of this.page.frames()) {
         if (frame !== this.page.mainFrame() && (await frame.$(selector).catch(() => null))) return frame;

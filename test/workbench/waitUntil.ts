@@ -3,7 +3,7 @@
 export async function waitUntil<T>(
   what: string,
   look: () => Promise<T | undefined>,
-  timeoutMs = 10_000,
+  timeoutMs = 30_000,
   describeLast?: () => string,
 ): Promise<T> {
   const end = Date.now() + timeoutMs;
