@@ -11,7 +11,7 @@ import { runMocha } from "./mochaResults.js";
 import { workbenchFolder } from "./paths.js";
 import type { TestResult } from "./results.js";
 
-const TEST_TIMEOUT_MS = 30_000;
+const TEST_TIMEOUT_MS = 90_000;
 
 /** `executablePath`: the browser's, see getChromium. */
 export async function runChartPageTests(executablePath: string): Promise<TestResult[]> {

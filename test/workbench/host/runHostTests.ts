@@ -5,7 +5,7 @@ import { runMocha } from "../mochaResults.js";
 import type { TestResult } from "../results.js";
 import { RESULT_MARK } from "./resultMark.js";
 
-const TEST_TIMEOUT_MS = 30_000;
+const TEST_TIMEOUT_MS = 90_000;
 
 export async function runHostTests(files: readonly (() => Promise<unknown>)[]): Promise<void> {
   const { default: Mocha } = await import("mocha");

@@ -6,7 +6,7 @@ import type { TestResult } from "../results.js";
 
 export type WorkerTests = Readonly<Record<string, () => Promise<void>>>;
 
-const TEST_TIMEOUT_MS = 60_000;
+const TEST_TIMEOUT_MS = 90_000;
 
 export async function runWorkerTests(groups: readonly WorkerTests[]): Promise<void> {
   const all = [["the host is a browser's worker", checkIsWorker] as const, ...groups.flatMap((tests) => Object.entries(tests))];
