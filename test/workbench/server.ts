@@ -93,6 +93,7 @@ function launch({ node, server }: InstalledWorkbench, own: readonly string[], lo
   const log = createWriteStream(logFile);
   child.stdout.pipe(log, { end: false });
   child.stderr.pipe(log, { end: false });
+  child.once("exit", (status, signal) => log.end(`The server ended with ${signal ?? `exit status ${status}`}.\n`));
   return child;
 }
 
