@@ -6,6 +6,8 @@ export type Step =
   | { readonly do: "retype"; readonly text: string; readonly by: string }
   /** Waits for a squiggle under a text that holds this one. */
   | { readonly do: "expectSquiggle"; readonly under: string }
+  /** Waits for the lens above a mechanism, which comes on its own time. */
+  | { readonly do: "expectLens" }
   /** Leaves the hover open; `holds` is what it must say, and guards the picture against showing something else. */
   | { readonly do: "hover"; readonly over: string; readonly holds: RegExp }
   | { readonly do: "runCommand"; readonly title: string }
@@ -51,6 +53,7 @@ const scenes: readonly Scene[] = [
     size: { width: 1200, height: 520 },
     steps: [
       { do: "expectSquiggle", under: "shelfLift" },
+      { do: "expectLens" },
       ...MECHANISMS_ALONE,
       { do: "reveal", file: LIFT, text: "import { pack }" },
       { do: "showProblem", holds: "takes it back below half" },
@@ -71,6 +74,7 @@ const scenes: readonly Scene[] = [
     steps: [
       HIDE_SIDE_BAR,
       { do: "expectSquiggle", under: "shelfLift" },
+      { do: "expectLens" },
       { do: "reveal", file: LIFT, text: "motorCount" },
       { do: "runCommand", title: "Loadmark: Show Operating Point" },
       { do: "expectWebview", selector: "#chart .content:not([hidden])" },

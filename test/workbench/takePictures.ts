@@ -76,6 +76,8 @@ async function takeStep(editor: Editor, step: Step): Promise<void> {
         squiggles.some(({ text }) => text.includes(step.under)),
       );
       return;
+    case "expectLens":
+      return editor.waitForLens();
     case "hover":
       await editor.hover(step.over, step.holds);
       return;
