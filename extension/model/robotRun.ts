@@ -5,7 +5,6 @@
  */
 import { type Course, integrate } from "./integrate.js";
 import { MOST_STEPS } from "./motionScales.js";
-import { startState } from "./motionState.js";
 import { createStart } from "./odeSystem.js";
 import { fuseRate } from "./protection.js";
 import type { RobotStep } from "./robotDrive.js";
@@ -13,7 +12,8 @@ import type { RobotObserver } from "./robotObserver.js";
 import { type Command, type RobotPart, targetOf } from "./robotPart.js";
 import { isKeptOpen, type Moment, type RobotProtector } from "./robotProtector.js";
 import type { RobotOutcome } from "./robotSolution.js";
-import { createRobotSystem, type RobotSystem, type Seat, type Sharing } from "./robotSystem.js";
+import { gather, type RunSums, scatter } from "./robotState.js";
+import { createRobotSystem, type RobotSystem, type Sharing } from "./robotSystem.js";
 import { beginStep, reconsider, reset, trip, turn } from "./robotTurns.js";
 import type { RobotEvent } from "./robotWatches.js";
 
@@ -24,7 +24,7 @@ export interface RobotRun {
   readonly observer: RobotObserver;
   /** Systems by the modes that they are for. */
   readonly systems: Map<string, RobotSystem>;
-  readonly sums: { chargeAs: number; depletedAs: number; energyJ: number };
+  readonly sums: RunSums;
   /** By mechanism: first moment stalled at full command, s. */
   readonly stalledAtS: (number | null)[];
   cycle: number;
@@ -141,7 +141,7 @@ function advance(run: RobotRun, { system, state }: Seated, endS: number): boolea
   run.observer.look(system, run.stepStartS + run.stepS);
   const untilS = nextKnown(run, endS);
   const arrival = integrate(system, run.stepS, state, courseOf(run, system, untilS));
-  scatter(run, system, state);
+  scatter(run.sums, system, state);
   run.stepS = arrival.timeS;
   run.nextStepS = arrival.nextStepS;
   run.events++;
@@ -261,51 +261,6 @@ function systemFor(run: RobotRun): RobotSystem {
   const made = createRobotSystem(run.parts, run.sharing);
   run.systems.set(key, made);
   return made;
-}
-
-function gather(system: RobotSystem): Float64Array {
-  const state = new Float64Array(system.size);
-  for (const { unit, place, state: own } of system.seats) {
-    const { part } = unit;
-    own.set(startState(part.plant, part.carried, part.speedRadPerS));
-    own[0] = part.progressRad;
-    for (let k = 0; k < place.length; k++) if ((place[k] as number) >= 0) state[place[k] as number] = own[k] as number;
-  }
-  for (const { protector, state: theta, fast } of system.places.protectors) {
-    state[theta] = protector.state;
-    if (fast >= 0) state[fast] = protector.fast;
-  }
-  return state;
-}
-
-/** Hands the state back to mechanisms and protectors, and adds the sums up. */
-function scatter({ sums }: RobotRun, system: RobotSystem, state: Float64Array): void {
-  for (const seat of system.seats) handBack(seat, state);
-  for (const { protector, state: theta, fast } of system.places.protectors) {
-    protector.state = state[theta] as number;
-    if (fast >= 0) protector.fast = state[fast] as number;
-  }
-  sums.chargeAs += state[system.places.charge] as number;
-  sums.depletedAs += state[system.places.depletion] as number;
-  sums.energyJ += state[system.places.energy] as number;
-}
-
-function handBack({ unit, place }: Seat, state: Float64Array): void {
-  const { part } = unit;
-  const { layout, carried } = part;
-  const at = (k: number, otherwise: number): number => {
-    const from = k < 0 ? -1 : (place[k] as number);
-    return from < 0 ? otherwise : (state[from] as number);
-  };
-  part.progressRad = at(layout.progress, part.progressRad);
-  part.speedRadPerS = at(layout.speed, part.speedRadPerS);
-  part.energyJ += at(layout.energy, 0);
-  part.carried = {
-    windingC: at(layout.winding, carried.windingC),
-    housingC: at(layout.housing, carried.housingC),
-    protection: at(layout.protection, carried.protection),
-    fast: at(layout.fast, carried.fast),
-  };
 }
 
 function tellStalls(run: RobotRun): void {

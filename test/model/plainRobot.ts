@@ -2,21 +2,19 @@
  * A robot's load cycle written a second time, the slow way: the plain equations of each mechanism on a bus voltage that is found by
  * iteration, integrated by a general solver in short pieces, events found by halving the piece that holds them.
  */
-import type { Drive, Protection, Supply } from "../../extension/model/drive.js";
+import type { Drive, Supply } from "../../extension/model/drive.js";
 import type { RobotDrive, RobotStep } from "../../extension/model/robotDrive.js";
 import { solveByOdex } from "./generalSolvers.js";
 import { PLAIN, plainInstant, plainSpan } from "./plainEquations.js";
+import { type PlainDoing, replicaRate, stillAt } from "./plainStill.js";
 
-const G = 9.80665;
 const PIECE_S = 0.04;
 const TOLERANCE = 1e-10;
-
-type Doing = "off" | "moving" | "holding" | "turning" | "open";
 
 interface PlainPart {
   readonly drive: Drive;
   readonly state: number[];
-  doing: Doing;
+  doing: PlainDoing;
   command: "off" | "move" | "hold";
   arrived: boolean;
   startedS: number;
@@ -259,13 +257,6 @@ export function runPlainly(robot: RobotDrive): PlainRobot {
   }
 }
 
-function replicaRate(protection: Protection, currentA: number, theta: number): number {
-  if (protection.kind === "fuse") return 0;
-  const { holdCurrentA, tripsAtA, tripsAfterS } = protection;
-  const tau = tripsAfterS / Math.log(tripsAtA ** 2 / (tripsAtA ** 2 - holdCurrentA ** 2));
-  return ((currentA / holdCurrentA) ** 2 - theta) / tau;
-}
-
 function partAt(part: PlainPart, timeS: number, state: readonly number[], volts: number): { supplyA: number; rates: number[] } {
   const supply: Supply = { openCircuitV: volts, resistanceOhm: 0, peukert: 1 };
   if (part.doing === "moving") {
@@ -273,69 +264,5 @@ function partAt(part: PlainPart, timeS: number, state: readonly number[], volts:
     rates[PLAIN.energy] = volts * Math.max(supplyA, 0);
     return { supplyA, rates };
   }
-  return stillAt(part, state, volts);
-}
-
-/** Holding still, turning at a speed, or without current. */
-function stillAt({ drive, doing }: PlainPart, state: readonly number[], volts: number): { supplyA: number; rates: number[] } {
-  const { motor, load, motorCount: count } = drive;
-  const windingC = state[PLAIN.winding] as number;
-  const housingC = state[PLAIN.housing] as number;
-  const resistance = motor.resistanceOhm * (motor.thermal ? (1 + 0.00393 * (windingC - 20)) / (1 + 0.00393 * 5) : 1);
-  const series = resistance + drive.wiringOhm + (drive.driver?.resistanceOhm ?? 0);
-  const head = volts - (drive.driver?.dropV ?? 0);
-  const ratio = drive.stages.reduce((product, stage) => product * stage.ratio, 1);
-  const efficiency = drive.stages.reduce((product, stage) => product * stage.efficiency, 1);
-  let current = 0;
-  let speed = 0;
-  let torque = 0;
-  if (doing === "holding") {
-    torque = holdingTorque(drive) / (ratio * count);
-    current = torque / motor.torqueConstantNmPerA;
-  } else if (doing === "turning" && load.kind === "flywheel") {
-    speed = load.speedRadPerS * ratio;
-    torque = (load.dragNm + drive.dragNm) / (efficiency * ratio * count);
-    const share = motor.speedLossShare;
-    current =
-      torque / motor.torqueConstantNmPerA + motor.noLoadCurrentA * (1 - share + (share * speed) / motor.noLoadSpeedRadPerS);
-  }
-  const needed = current * series + motor.backEmfVPerRadPerS * speed;
-  let duty = current === 0 ? 0 : needed / head;
-  if (duty > drive.pwmDuty && speed === 0) {
-    duty = drive.pwmDuty;
-    current = (duty * head) / series;
-  }
-  const supplyA = count * duty * current;
-  const rates = [0, 0, 0, 0, 0, current * current, volts * Math.max(supplyA, 0)];
-  if (doing === "turning") rates[PLAIN.progress] = speed / ratio;
-  if (motor.thermal) {
-    const { windingToHousingKPerW: rwh, housingToAmbientKPerW: rha, windingTimeS, housingTimeS, ambientC = 25 } = motor.thermal;
-    rates[PLAIN.winding] = (current * current * resistance - (windingC - housingC) / rwh) / (windingTimeS / rwh);
-    rates[PLAIN.housing] =
-      ((windingC - housingC) / rwh + (motor.backEmfVPerRadPerS * current - torque) * speed - (housingC - ambientC) / rha) /
-      (housingTimeS / rha);
-  }
-  const { protection } = drive;
-  if (protection) {
-    rates[PLAIN.replica] = replicaRate(
-      protection,
-      protection.carries === "supply" ? supplyA : current,
-      state[PLAIN.replica] as number,
-    );
-  }
-  return { supplyA, rates };
-}
-
-/** Greatest torque of the load at rest, at the output shaft. */
-function holdingTorque({ load }: Drive): number {
-  if (load.kind === "lift" && typeof load.counterbalanceN === "number") {
-    const force = load.massKg * G * Math.sin(load.slopeRad) - load.counterbalanceN;
-    return Math.abs(force) * load.carriagePerRope * load.drumRadiusM;
-  }
-  if (load.kind === "arm") {
-    const level = Math.min(load.fromRad, load.toRad) <= 0 && Math.max(load.fromRad, load.toRad) >= 0;
-    const nearest = level ? 1 : Math.max(Math.abs(Math.cos(load.fromRad)), Math.abs(Math.cos(load.toRad)));
-    return load.massKg * G * load.centreOfMassM * Math.sin(load.slopeRad) * nearest;
-  }
-  throw new Error("this check does not know how to hold such a load");
+  return stillAt(part.drive, part.doing, state, volts);
 }
