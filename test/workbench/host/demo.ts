@@ -70,7 +70,7 @@ function waitForFindings<T>(path: string, what: string, choose: (findings: vscod
   return waitFor(what, () => choose(findingsIn(path)), vscode.languages.onDidChangeDiagnostics, last);
 }
 
-/** Selects a text and types over it, as a person would. */
+/** Selects a text and types over it, as a person would: an editor may close a bracket by itself, so no open one goes in. */
 export async function retype(editor: vscode.TextEditor, text: string, replacement: string): Promise<void> {
   const { start, end } = rangeOf(editor.document, text);
   editor.selection = new vscode.Selection(start, end);

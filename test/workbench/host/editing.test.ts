@@ -15,7 +15,7 @@ describe("findings while typing", () => {
     const editor = await show("mechanisms/lidArm.ts");
     await waitForNoFinding("mechanisms/lidArm.ts", "past-peak");
     const saved = editor.document.getText();
-    await retype(editor, "LID_RATIO, {", "2.4, {");
+    await retype(editor, "LID_RATIO, ", "2.4, ");
     const past = await waitForFinding("mechanisms/lidArm.ts", "past-peak");
     assert.equal(past.severity, vscode.DiagnosticSeverity.Warning);
     await waitForFindingOn("lidArm", editor.document, "past-peak");

@@ -62,7 +62,7 @@ describe("notes beside the code", () => {
   it("follow what is typed", async () => {
     const editor = await show("mechanisms/lidArm.ts");
     const saved = editor.document.getText();
-    await retype(editor, "LID_RATIO, {", "5, {");
+    await retype(editor, "LID_RATIO, ", "5, ");
     await waitForLabel(editor.document, "28 % of stall");
     await undoAll(editor, saved);
     await waitForLabel(editor.document, "35 % of stall");
