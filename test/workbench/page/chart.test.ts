@@ -120,7 +120,8 @@ describe("the chart panel", () => {
     await frame.locator(".plots").focus();
     await editor.page.keyboard.press("Home");
     await frame.locator(".readout caption", { hasText: "At 0 N·m" }).waitFor();
-    // A file in the panel's own group covers it.
+    // A file in the panel's own group covers it; a click makes that group the one that files open in.
+    await editor.page.locator(PANEL_TAB).click();
     await editor.openFile("motors.ts");
     await editor.page.waitForSelector(`${PANEL_TAB}:not(.active)`);
     await waitUntil("a hidden page that is gone", async () => (frame.isDetached() ? true : undefined));
