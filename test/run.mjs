@@ -58,6 +58,8 @@ for (const [name, { title, run }] of Object.entries(parts)) {
     console.log(`could not run: ${result.notRun}`);
     continue;
   }
+  for (const { title: test, firstTry } of result.tests)
+    if (firstTry !== undefined) console.log(`PASSED ON THE SECOND TRY ${test}\n${indent(firstTry)}`);
   const failures = result.tests.filter(({ failure }) => failure !== undefined);
   for (const { title: test, failure } of failures) console.log(`FAILED ${test}\n${indent(failure ?? "")}`);
   console.log(`${result.tests.length - failures.length} passed, ${failures.length} failed (${seconds} s)`);

@@ -9,13 +9,15 @@ export interface MochaRun {
   /** Each import defines its tests. */
   readonly files: readonly (() => Promise<unknown>)[];
   readonly timeoutMs: number;
+  /** How often a failed test is tried again. Only for tests that drive the editor by mouse: it may draw anew under a click. */
+  readonly retries?: number;
   readonly onResult: (result: TestResult) => void;
   /** What to add to a failure, such as where its picture is. */
   readonly onFailure?: ((title: string) => Promise<string>) | undefined;
 }
 
-export async function runMocha({ Mocha, files, timeoutMs, onResult, onFailure }: MochaRun): Promise<void> {
-  const mocha = new Mocha({ ui: "bdd", timeout: timeoutMs, reporter: class {} as never });
+export async function runMocha({ Mocha, files, timeoutMs, retries = 0, onResult, onFailure }: MochaRun): Promise<void> {
+  const mocha = new Mocha({ ui: "bdd", timeout: timeoutMs, retries, reporter: class {} as never });
   mocha.suite.emit("pre-require", globalThis, "", mocha);
   for (const load of files) await load();
   const notes = new Map<string, string>();
@@ -33,7 +35,9 @@ export async function runMocha({ Mocha, files, timeoutMs, onResult, onFailure }:
         onResult({ title, failure: [failure, notes.get(title)].filter(Boolean).join("\n") });
       resolve();
     });
-    runner.on("pass", (test) => onResult({ title: test.fullTitle() }));
+    const firstTries = new Map<string, string>();
+    runner.on("retry", (test, error) => firstTries.set(test.fullTitle(), describe(error)));
+    runner.on("pass", (test) => onResult({ title: test.fullTitle(), firstTry: firstTries.get(test.fullTitle()) }));
     runner.on("pending", (test) => onResult({ title: test.fullTitle(), failure: "The test was skipped." }));
     runner.on("fail", (test, error) => failures.push({ title: test.fullTitle(), failure: describe(error) }));
   });

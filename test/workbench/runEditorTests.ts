@@ -104,6 +104,7 @@ async function runPage(workbench: Workbench, mode: string): Promise<TestResult[]
     Mocha,
     files: testFiles,
     timeoutMs: PAGE_TEST_TIMEOUT_MS,
+    retries: 1,
     onResult: (result) => results.push(result),
     onFailure: (title) => takePicture(workbench, `${mode} ${title}`),
   });

@@ -15,6 +15,7 @@ import { workbench } from "./session.js";
 
 const SHOW = "Loadmark: Show Operating Point";
 const CONTENT = "#chart .content:not([hidden])";
+const SOON = { timeout: 3000 };
 const PANEL_TAB = '.tab[aria-label^="Operating Point"]';
 
 describe("the chart panel", () => {
@@ -97,18 +98,22 @@ describe("the chart panel", () => {
 
   it("opens from a lens, a hover's link and the view, each for its own mechanism", async () => {
     const editor = await openAtCaret("mechanisms/trayHoist.ts", "stages");
-    await editor.page.locator(".codelens-decoration a").first().click();
+    await openPanelBy(editor, () => editor.page.locator(".codelens-decoration a").first().click(SOON));
     await waitForTitle(editor, "tray hoist");
     await editor.openFile("mechanisms/lidArm.ts");
     await closePanel(editor);
-    await editor.hover("lidArm =", /Chart/);
-    await editor.page.locator(".monaco-hover:visible a", { hasText: "Chart" }).first().click();
+    await openPanelBy(editor, async () => {
+      await editor.hover("lidArm =", /Chart/);
+      await editor.page.locator(".monaco-hover:visible a", { hasText: "Chart" }).first().click(SOON);
+    });
     await waitForTitle(editor, "lid arm");
     await closePanel(editor);
     await editor.page.locator('.pane-header[aria-label^="Mechanisms"]').click();
     const row = editor.page.locator(".pane .monaco-list-row", { hasText: "watering arm" });
-    await row.hover();
-    await row.getByRole("button", { name: "Show Operating Point" }).click();
+    await openPanelBy(editor, async () => {
+      await row.hover(SOON);
+      await row.getByRole("button", { name: "Show Operating Point" }).click(SOON);
+    });
     await waitForTitle(editor, "watering arm");
   });
 
@@ -147,6 +152,18 @@ async function openAtCaret(file: string, text: string): Promise<Editor> {
   await editor.waitForLens();
   await editor.reveal(file, text);
   return editor;
+}
+
+/** Clicks until the panel is there: lenses, hovers and rows are drawn anew while results come, and a click in between is lost. */
+async function openPanelBy(editor: Editor, click: () => Promise<void>): Promise<void> {
+  const tab = editor.page.locator(PANEL_TAB);
+  await waitUntil("the chart panel", async () => {
+    await click().catch(() => undefined);
+    return tab.waitFor({ timeout: 3000 }).then(
+      () => true,
+      () => undefined,
+    );
+  });
 }
 
 async function title(editor: Editor): Promise<string> {
