@@ -1,6 +1,7 @@
 /** The page's end of the wire: the editor's functions for this page, with every message checked. Keeps them to itself. */
+
+import { type ChartMemory, chartMemorySchema, NO_MEMORY } from "../extension/protocol/chartMemory.js";
 import { type HostMessage, hostMessageSchema, type PageMessage } from "../extension/protocol/chartMessages.js";
-import { type ChartView, chartViewSchema, NO_VIEW } from "../extension/protocol/chartView.js";
 import { readMessage } from "../extension/protocol/readMessage.js";
 
 interface EditorApi {
@@ -14,8 +15,8 @@ declare function acquireVsCodeApi(): EditorApi;
 export interface Host {
   send(message: PageMessage): void;
   /** What was remembered; nothing where it cannot be read. */
-  recall(): ChartView;
-  remember(view: ChartView): void;
+  recall(): ChartMemory;
+  remember(memory: ChartMemory): void;
   listen(onMessage: (message: HostMessage) => void): void;
 }
 
@@ -25,8 +26,8 @@ export function connectHost(): Host {
   const send = (message: PageMessage): void => api.postMessage(message);
   return {
     send,
-    recall: () => readMessage(chartViewSchema, api.getState()) ?? NO_VIEW,
-    remember: (view) => api.setState(view),
+    recall: () => readMessage(chartMemorySchema, api.getState()) ?? NO_MEMORY,
+    remember: (memory) => api.setState(memory),
     listen(onMessage) {
       window.addEventListener("message", ({ data }: MessageEvent<unknown>) => {
         const message = readMessage(hostMessageSchema, data);

@@ -1,5 +1,5 @@
 /** The page's start: connects its parts to the editor. */
-import { createChartPage } from "./chartPage.js";
+import { createChartPage } from "./frame/chartPage.js";
 import { connectHost } from "./host.js";
 import { watchTheme } from "./theme/theme.js";
 
@@ -7,10 +7,9 @@ const root = document.getElementById("chart");
 if (root !== null) {
   const host = connectHost();
   const page = createChartPage(root, host);
-  host.listen(({ answer }) => page.show(answer));
+  host.listen(page.receive);
   watchTheme(document, page.redraw);
   watchPixelRatio(page.redraw);
-  host.send({ type: "ready", mechanism: host.recall().mechanism });
 }
 
 /** A change of zoom or screen changes the pixels under an unchanged page. */

@@ -21,7 +21,7 @@ export function chartHtml({ cspSource, nonce, scriptUri, styleUri }: ChartHtmlOp
 <meta http-equiv="Content-Security-Policy" content="${escapeAttribute(chartPolicy(cspSource, nonce))}">
 <meta name="viewport" content="width=device-width, initial-scale=1">
 <link rel="stylesheet" href="${escapeAttribute(styleUri)}">
-<title>Operating point</title>
+<title>Loadmark chart</title>
 </head>
 <body>
 <main id="chart"></main>

@@ -4,6 +4,7 @@
  * Follows the caret until it is told a mechanism, and again as soon as the caret moves. Draws nothing and knows no number.
  */
 import * as vscode from "vscode";
+import { chartMemorySchema } from "../protocol/chartMemory.js";
 import {
   type ChartAnswer,
   type ChartQuestion,
@@ -11,7 +12,7 @@ import {
   type PageMessage,
   pageMessageSchema,
 } from "../protocol/chartMessages.js";
-import { chartViewSchema } from "../protocol/chartView.js";
+import { VIEW_NAMES, type ViewName, type Want } from "../protocol/charts/views.js";
 import { SHOW_CHART } from "../protocol/commands.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { chartHtml } from "./chartHtml.js";
@@ -20,6 +21,17 @@ import { saveAs } from "./saveAs.js";
 import type { Server } from "./server.js";
 
 export const CHART_VIEW = "loadmark.chart";
+
+/** The command that opens each view. */
+const COMMANDS: Readonly<Record<ViewName, string>> = { "operating-point": SHOW_CHART };
+
+/** On the panel's own tab. */
+const titleOf: Readonly<Record<ViewName, () => string>> = { "operating-point": () => vscode.l10n.t("Operating Point") };
+
+interface Subject {
+  readonly mechanism: string | null;
+  readonly robot: string | null;
+}
 
 export interface ChartParts {
   readonly extensionUri: vscode.Uri;
@@ -33,9 +45,12 @@ export function registerChart(parts: ChartParts): vscode.Disposable {
   const { window, commands } = vscode;
   return vscode.Disposable.from(
     chart,
-    commands.registerCommand(SHOW_CHART, (wanted: unknown) => chart.open(nameIn(wanted))),
+    ...VIEW_NAMES.map((view) => commands.registerCommand(COMMANDS[view], (wanted: unknown) => chart.open(view, nameIn(wanted)))),
     window.registerWebviewPanelSerializer(CHART_VIEW, {
-      deserializeWebviewPanel: async (panel, state) => chart.adopt(panel, readMessage(chartViewSchema, state)?.mechanism ?? null),
+      deserializeWebviewPanel: async (panel, state) => {
+        const memory = readMessage(chartMemorySchema, state);
+        chart.adopt(panel, { mechanism: memory?.mechanism ?? null, robot: memory?.robot ?? null });
+      },
     }),
     window.onDidChangeTextEditorSelection(({ textEditor }) => chart.follow(textEditor)),
     window.onDidChangeActiveTextEditor((editor) => chart.follow(editor)),
@@ -48,7 +63,10 @@ class ChartPanel implements vscode.Disposable {
   #panel: vscode.WebviewPanel | undefined;
   /** True from the page's first word until the editor throws it away. */
   #isReady = false;
-  #mechanism: string | null = null;
+  #subject: Subject = { mechanism: null, robot: null };
+  /** What the page asked for last; the view that someone asked the editor for, until the page asks for it too. */
+  #want: Want = { view: "operating-point" };
+  #opening: ViewName | undefined;
   #caret: ChartQuestion["caret"] = null;
   #shown = "";
   #asking: { again: boolean } | undefined;
@@ -57,25 +75,28 @@ class ChartPanel implements vscode.Disposable {
     this.#parts = parts;
   }
 
-  /** Shows the chart of a mechanism, or of the one at the caret. The keyboard stays where it is. */
-  open(mechanism: string | undefined): void {
+  /** Shows a view of a mechanism, or of the one at the caret. The keyboard stays where it is. */
+  open(view: ViewName, mechanism: string | undefined): void {
     const editor = vscode.window.activeTextEditor;
     this.#caret = mechanism === undefined && editor && isSource(editor.document) ? caretOf(editor) : null;
-    this.#mechanism = mechanism ?? this.#mechanism;
+    const subject = mechanism === undefined ? this.#subject : { mechanism, robot: null };
+    this.#opening = view;
     if (this.#panel !== undefined) {
+      this.#subject = subject;
       this.#panel.reveal(undefined, true);
+      this.#openView();
       void this.refresh();
       return;
     }
     const column = { viewColumn: vscode.ViewColumn.Beside, preserveFocus: true };
-    this.adopt(vscode.window.createWebviewPanel(CHART_VIEW, vscode.l10n.t("Operating Point"), column), this.#mechanism);
+    this.adopt(vscode.window.createWebviewPanel(CHART_VIEW, titleOf[view](), column), subject);
   }
 
   /** Takes a panel that is new, or that the editor brings back. */
-  adopt(panel: vscode.WebviewPanel, mechanism: string | null): void {
+  adopt(panel: vscode.WebviewPanel, subject: Subject): void {
     const other = this.#panel;
     this.#panel = panel;
-    this.#mechanism = mechanism;
+    this.#subject = subject;
     this.#leavePage();
     other?.dispose();
     panel.onDidDispose(() => {
@@ -132,13 +153,13 @@ class ChartPanel implements vscode.Disposable {
 
   async #ask(): Promise<void> {
     const { server } = this.#parts;
-    const answer = await server.askForChart({ caret: this.#caret, mechanism: this.#mechanism });
+    const answer = await server.askForChart({ caret: this.#caret, ...this.#subject, want: this.#want });
     if (answer !== undefined) this.#show(answer);
-    else if (!server.isWanted) this.#show({ kind: "nothing", reason: "nothing-declared" });
+    else if (!server.isWanted) this.#show(nothingDeclared(this.#want.view));
   }
 
   #show(answer: ChartAnswer): void {
-    if (answer.kind === "chart") this.#mechanism = answer.chart.mechanism;
+    if (answer.kind === "chart") this.#subject = { ...this.#subject, ...subjectOf(answer) };
     const content = JSON.stringify(answer);
     if (!this.#isReady || content === this.#shown) return;
     this.#shown = content;
@@ -156,7 +177,16 @@ class ChartPanel implements vscode.Disposable {
       case "ready":
         this.#isReady = true;
         this.#shown = "";
-        this.#mechanism ??= message.mechanism;
+        this.#subject = {
+          mechanism: this.#subject.mechanism ?? message.mechanism,
+          robot: this.#subject.robot ?? message.robot,
+        };
+        this.#turnTo(message.want);
+        this.#openView();
+        void this.refresh();
+        return;
+      case "ask":
+        this.#turnTo(message.want);
         void this.refresh();
         return;
       case "savePicture":
@@ -173,6 +203,20 @@ class ChartPanel implements vscode.Disposable {
     }
   }
 
+  #turnTo(want: Want): void {
+    this.#want = want;
+    if (this.#opening === want.view) this.#opening = undefined;
+    const title = titleOf[want.view]();
+    if (this.#panel !== undefined && this.#panel.title !== title) this.#panel.title = title;
+  }
+
+  /** The page keeps the views, so it is told which one is wanted, and asks for it by itself. */
+  #openView(): void {
+    if (!this.#isReady || this.#opening === undefined) return;
+    void this.#panel?.webview.postMessage({ type: "open", view: this.#opening } satisfies HostMessage);
+    this.#opening = undefined;
+  }
+
   #leavePage(): void {
     this.#isReady = false;
     this.#shown = "";
@@ -184,6 +228,14 @@ function nameIn(wanted: unknown): string | undefined {
   if (typeof wanted === "string") return wanted;
   const name = typeof wanted === "object" && wanted !== null && "name" in wanted ? wanted.name : undefined;
   return typeof name === "string" ? name : undefined;
+}
+
+function subjectOf({ chart }: Extract<ChartAnswer, { kind: "chart" }>): Partial<Subject> {
+  return { mechanism: chart.mechanism };
+}
+
+function nothingDeclared(view: ViewName): ChartAnswer {
+  return { kind: "nothing", view, reason: "nothing-declared", says: [], example: null };
 }
 
 function caretOf({ document, selection }: vscode.TextEditor): ChartQuestion["caret"] {

@@ -2,10 +2,10 @@
  * What the chart's page, the client and the server say to each other.
  *
  * The page asks first, and each answer is the full state. Whoever reads a message checks it with `readMessage`, and ignores and logs
- * what it does not know. What the numbers of a chart are stands in chart.ts.
+ * what it does not know. What the numbers of a chart are stands in charts/, a file for each view.
  */
 import * as v from "valibot";
-import { operatingPointChartSchema } from "./chart.js";
+import { shownSchema, viewNameSchema, wantSchema } from "./charts/views.js";
 
 /** The client's question to the server: takes a question, gives an answer. */
 export const CHART = "loadmark/chart";
@@ -16,23 +16,25 @@ export const CHART_MAY_DIFFER = "loadmark/chartMayDiffer";
 const count = v.pipe(v.number(), v.integer(), v.minValue(0));
 
 export const chartQuestionSchema = v.object({
-  /** Lines and characters from 0. The mechanism declared here comes first. */
+  /** Lines and characters from 0. What is declared here comes first. */
   caret: v.nullable(v.object({ uri: v.string(), line: count, character: count })),
-  /** The mechanism that is shown, kept where the caret is in none. */
+  /** What is shown, kept where the caret is in none. */
   mechanism: v.nullable(v.string()),
+  robot: v.nullable(v.string()),
+  want: wantSchema,
 });
 
-export const chartAnswerSchema = v.variant("kind", [
-  v.object({ kind: v.literal("nothing"), reason: v.picklist(["nothing-declared", "nothing-computed"]) }),
-  v.object({
-    kind: v.literal("chart"),
-    chart: operatingPointChartSchema,
-    /** The result for what is saved, where that is another one. */
-    saved: v.nullable(operatingPointChartSchema),
-    /** Why this is not the result for the text of now, in a plain sentence; null where it is. */
-    old: v.nullable(v.string()),
-  }),
-]);
+export const nothingSchema = v.object({
+  kind: v.literal("nothing"),
+  view: viewNameSchema,
+  reason: v.picklist(["nothing-declared", "nothing-computed", "does-not-apply"]),
+  /** Plain sentences: why, and what to do. */
+  says: v.array(v.string()),
+  /** What could be written; null where that is not the matter. */
+  example: v.nullable(v.string()),
+});
+
+export const chartAnswerSchema = v.variant("kind", [nothingSchema, shownSchema]);
 
 const CONTENT_LIMIT = 32 * 1024 * 1024;
 /** A name alone: never a path. */
@@ -42,8 +44,10 @@ const content = v.pipe(v.string(), v.maxLength(CONTENT_LIMIT));
 const BASE64 = /^[A-Za-z\d+/]*={0,2}$/;
 
 export const pageMessageSchema = v.variant("type", [
-  /** The page is there, or there again; it may remember which mechanism it showed. */
-  v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()) }),
+  /** The page is there, or there again; it may remember what it showed. */
+  v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()), robot: v.nullable(v.string()), want: wantSchema }),
+  /** It wants to see something else. */
+  v.object({ type: v.literal("ask"), want: wantSchema }),
   /** A PNG file in base 64. */
   v.object({
     type: v.literal("savePicture"),
@@ -59,11 +63,15 @@ export const pageMessageSchema = v.variant("type", [
   v.object({ type: v.literal("trouble"), what: v.pipe(v.string(), v.maxLength(2000)) }),
 ]);
 
-export const hostMessageSchema = v.variant("type", [v.object({ type: v.literal("show"), answer: chartAnswerSchema })]);
+export const hostMessageSchema = v.variant("type", [
+  v.object({ type: v.literal("show"), answer: chartAnswerSchema }),
+  /** Someone asked the editor for a view; the page then asks for it. */
+  v.object({ type: v.literal("open"), view: viewNameSchema }),
+]);
 
 export type ChartQuestion = v.InferOutput<typeof chartQuestionSchema>;
 export type ChartAnswer = v.InferOutput<typeof chartAnswerSchema>;
-export type ShownChart = Extract<ChartAnswer, { kind: "chart" }>;
+export type Nothing = v.InferOutput<typeof nothingSchema>;
 /** From the chart's page to its host. */
 export type PageMessage = v.InferOutput<typeof pageMessageSchema>;
 /** From the host to the chart's page. */

@@ -1,6 +1,6 @@
 /** Half-typed and garbled files: no feature throws, and every span that one gives lies within its file. */
 import { describe, expect, it } from "vitest";
-import { operatingPointChart } from "../../extension/features/chart.js";
+import { operatingPointChart } from "../../extension/features/charts/operatingPoint.js";
 import { codeLensesOf } from "../../extension/features/codeLenses.js";
 import { completionsAt } from "../../extension/features/completions.js";
 import { hoverAt } from "../../extension/features/hover.js";

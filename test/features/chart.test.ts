@@ -2,8 +2,8 @@
 import fc from "fast-check";
 import * as v from "valibot";
 import { describe, expect, it } from "vitest";
-import { type OperatingPointChart, operatingPointChart } from "../../extension/features/chart.js";
-import { operatingPointChartSchema } from "../../extension/protocol/chart.js";
+import { type OperatingPointChart, operatingPointChart } from "../../extension/features/charts/operatingPoint.js";
+import { operatingPointChartSchema } from "../../extension/protocol/charts/operatingPoint.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { handPoint, liftTorque, MOTOR, SHEET } from "../support/handNumbers.js";
 

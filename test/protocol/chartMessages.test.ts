@@ -1,16 +1,17 @@
 import { describe, expect, it } from "vitest";
-import type { OperatingPointChart as ComputedChart } from "../../extension/features/chart.js";
-import type { OperatingPointChart } from "../../extension/protocol/chart.js";
+import type { OperatingPointChart as ComputedChart } from "../../extension/features/charts/operatingPoint.js";
+import { chartMemorySchema, NO_MEMORY } from "../../extension/protocol/chartMemory.js";
 import {
   chartAnswerSchema,
   chartQuestionSchema,
   hostMessageSchema,
   pageMessageSchema,
 } from "../../extension/protocol/chartMessages.js";
-import { chartViewSchema, NO_VIEW } from "../../extension/protocol/chartView.js";
+import type { OperatingPointChart } from "../../extension/protocol/charts/operatingPoint.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { chartIn, hoistSource, shownChart } from "../support/chartFixture.js";
 
+const WANT = { view: "operating-point" };
 const chart = chartIn(hoistSource(), "tray hoist");
 
 /** Fails to compile where a computed chart is not what travels. */
@@ -51,7 +52,8 @@ describe("messages that are not known", () => {
     { type: "hide" },
     { type: "show" },
     { type: "show", answer: { kind: "chart" } },
-    { type: "show", answer: { kind: "nothing", reason: "<b>no</b>" } },
+    { type: "show", answer: { kind: "nothing", view: "operating-point", reason: "<b>no</b>", says: [], example: null } },
+    { type: "open", view: "elsewhere" },
   ])("are dropped by the page: %j", (message) => {
     expect(readMessage(hostMessageSchema, message)).toBeUndefined();
   });
@@ -60,7 +62,9 @@ describe("messages that are not known", () => {
     undefined,
     { type: "run", command: "workbench.action.quit" },
     { type: "ready" },
-    { type: "ready", mechanism: 7 },
+    { type: "ready", mechanism: 7, robot: null, want: WANT },
+    { type: "ready", mechanism: null, robot: null, want: { view: "elsewhere" } },
+    { type: "ask" },
     { type: "savePicture", fileName: "a.png", base64: "not base64!" },
     { type: "savePicture", fileName: "a.png", base64: "abc" },
     { type: "savePicture", fileName: "../a.png", base64: "" },
@@ -77,7 +81,8 @@ describe("messages that are not known", () => {
       undefined,
       {},
       { caret: null },
-      { caret: { uri: "file:///a", line: -1, character: 0 }, mechanism: null },
+      { caret: { uri: "file:///a", line: -1, character: 0 }, mechanism: null, robot: null, want: WANT },
+      { caret: null, mechanism: null, robot: null, want: { view: "elsewhere" } },
     ]) {
       expect(readMessage(chartQuestionSchema, message)).toBeUndefined();
     }
@@ -93,10 +98,11 @@ describe("a picture of several megabytes", () => {
 
 describe("what the page remembers", () => {
   it("is read as it was kept, and nothing where it is not that", () => {
-    expect(readMessage(chartViewSchema, NO_VIEW)).toEqual(NO_VIEW);
-    const view = { mechanism: "hoist", cursorNm: 0.5, tableOpen: true };
-    expect(readMessage(chartViewSchema, view)).toEqual(view);
-    for (const state of [undefined, {}, { ...view, cursorNm: "far" }])
-      expect(readMessage(chartViewSchema, state)).toBeUndefined();
+    expect(readMessage(chartMemorySchema, NO_MEMORY)).toEqual(NO_MEMORY);
+    const memory = { ...NO_MEMORY, mechanism: "hoist", tableOpen: true };
+    expect(readMessage(chartMemorySchema, memory)).toEqual(memory);
+    const views = { ...NO_MEMORY.views, "operating-point": { cursor: "far" } };
+    for (const state of [undefined, {}, { ...memory, view: "elsewhere" }, { ...memory, views }])
+      expect(readMessage(chartMemorySchema, state)).toBeUndefined();
   });
 });

@@ -1,13 +1,8 @@
 /** Charts from the built server: which mechanism, how it follows edits, and what stands beside it. */
 import { afterEach, beforeAll, describe, expect, it, vi } from "vitest";
 import type { Position } from "vscode-languageserver/node";
-import {
-  CHART,
-  CHART_MAY_DIFFER,
-  type ChartAnswer,
-  chartAnswerSchema,
-  type ShownChart,
-} from "../../extension/protocol/chartMessages.js";
+import { CHART, CHART_MAY_DIFFER, type ChartAnswer, chartAnswerSchema } from "../../extension/protocol/chartMessages.js";
+import type { ShownChart } from "../../extension/protocol/charts/views.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { buildServer } from "../support/builtServer.js";
 import { type ServerClient, startServerClient } from "../support/serverClient.js";
@@ -38,18 +33,23 @@ async function start(files: Readonly<Record<string, string>>): Promise<void> {
 }
 
 async function ask(caret: { file: string; at: Position } | null, mechanism: string | null = null): Promise<ChartAnswer> {
-  const question = { caret: caret && { uri: client.uri(caret.file), ...caret.at }, mechanism };
+  const question = {
+    caret: caret && { uri: client.uri(caret.file), ...caret.at },
+    mechanism,
+    robot: null,
+    want: { view: "operating-point" },
+  };
   const answer = readMessage(chartAnswerSchema, await client.connection.sendRequest(CHART, question));
   if (answer === undefined) throw new Error("The answer cannot be read.");
   return answer;
 }
 
-async function chartAt(file: string, text: string, mechanism: string | null = null): Promise<ShownChart> {
+async function chartAt(file: string, text: string, mechanism: string | null = null): Promise<ShownChart<"operating-point">> {
   return shown(await ask({ file, at: client.at(file, text, 1) }, mechanism));
 }
 
-function shown(answer: ChartAnswer): ShownChart {
-  if (answer.kind !== "chart") throw new Error(`There is no chart: ${answer.reason}.`);
+function shown(answer: ChartAnswer): ShownChart<"operating-point"> {
+  if (answer.kind === "nothing") throw new Error(`There is no chart: ${answer.reason}.`);
   return answer;
 }
 
@@ -127,10 +127,10 @@ describe("a chart", () => {
 
   it("is absent, with what to do, where nothing is declared or nothing can be computed", async () => {
     await start({ "robot.ts": 'import { motor } from "loadmark";\n' });
-    expect(await ask(null)).toEqual({ kind: "nothing", reason: "nothing-declared" });
+    expect(await ask(null)).toMatchObject({ kind: "nothing", reason: "nothing-declared" });
     await client.write("gears.ts", "export const DRIVEN = ;\n");
     await client.write("robot.ts", SWING_ARM);
-    await expect.poll(() => ask(null)).toEqual({ kind: "nothing", reason: "nothing-computed" });
+    await expect.poll(() => ask(null)).toMatchObject({ kind: "nothing", reason: "nothing-computed" });
   });
 
   it("may differ after each result, which the client is told", async () => {

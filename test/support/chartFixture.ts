@@ -2,9 +2,9 @@
 import ts from "typescript";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
-import { operatingPointChart } from "../../extension/features/chart.js";
-import { type OperatingPointChart, operatingPointChartSchema } from "../../extension/protocol/chart.js";
-import type { ShownChart } from "../../extension/protocol/chartMessages.js";
+import { operatingPointChart } from "../../extension/features/charts/operatingPoint.js";
+import { type OperatingPointChart, operatingPointChartSchema } from "../../extension/protocol/charts/operatingPoint.js";
+import type { ShownChart as AnyShownChart } from "../../extension/protocol/charts/views.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { readFixture } from "./fixture.js";
 
@@ -21,8 +21,10 @@ export function chartIn(source: string, mechanism: string): OperatingPointChart 
   return travelled;
 }
 
+export type ShownChart = AnyShownChart<"operating-point">;
+
 export function shownChart(chart: OperatingPointChart, more: Partial<ShownChart> = {}): ShownChart {
-  return { kind: "chart", chart, saved: null, old: null, ...more };
+  return { kind: "chart", view: "operating-point", chart, saved: null, old: null, ...more };
 }
 
 export interface HoistNumbers {

@@ -1,7 +1,7 @@
 /** The drawing against numbers worked out by hand from the declaration. */
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { type Drawing, drawChart } from "../../webview/plots/drawing.js";
+import { type Drawing, drawChart } from "../../webview/views/operatingPoint/drawing.js";
 import { chartIn, type HoistNumbers, hoistSource } from "../support/chartFixture.js";
 
 const RPM = (2 * Math.PI) / 60;

@@ -2,14 +2,15 @@
 import { describe, expect, it } from "vitest";
 import { pageMessageSchema } from "../../extension/protocol/chartMessages.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
-import { csvOf } from "../../webview/csv.js";
 import { fileNameOf } from "../../webview/fileName.js";
-import { stopsOf } from "../../webview/stops.js";
+import { csvOf } from "../../webview/frame/csv.js";
+import { fileOf } from "../../webview/views/operatingPoint/csv.js";
+import { stopsOf } from "../../webview/views/operatingPoint/stops.js";
 import { chartIn, hoistSource } from "../support/chartFixture.js";
 
 describe("the numbers as CSV", () => {
   const chart = chartIn(hoistSource(), "tray hoist");
-  const lines = csvOf(stopsOf(chart)).split("\r\n");
+  const lines = csvOf(fileOf(stopsOf(chart))).split("\r\n");
   const [header = "", ...rows] = lines.slice(0, -1);
 
   it("name each column with its unit", () => {
@@ -47,17 +48,17 @@ describe("the name of a file", () => {
     ["tray hoist", "tray-hoist-operating-point.png"],
     ["../../etc/passwd", "etc-passwd-operating-point.png"],
     ["C:\\aux<>|?*", "C-aux-operating-point.png"],
-    ["", "mechanism-operating-point.png"],
-    ["\u202e\u0000", "mechanism-operating-point.png"],
+    ["", "unnamed-operating-point.png"],
+    ["\u202e\u0000", "unnamed-operating-point.png"],
     ["Förderband 2", "Förderband-2-operating-point.png"],
     ["רובוט", "רובוט-operating-point.png"],
   ])("of %j is %s", (mechanism, name) => {
-    expect(fileNameOf(mechanism, "png")).toBe(name);
+    expect(fileNameOf(mechanism, "operating-point", "png")).toBe(name);
   });
 
   it("is taken by the host, however long or odd the mechanism's", () => {
     for (const mechanism of ["x".repeat(9999), "𝔘".repeat(300), "a/b", ".", "..", "e\u0301".repeat(99), "🤖"]) {
-      const message = { type: "saveTable", fileName: fileNameOf(mechanism, "csv"), csv: "" };
+      const message = { type: "saveTable", fileName: fileNameOf(mechanism, "operating-point", "csv"), csv: "" };
       expect(readMessage(pageMessageSchema, message), mechanism.slice(0, 9)).toEqual(message);
     }
   });

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { nearestStop, stopsOf, thinned } from "../../webview/stops.js";
+import { nearestStop } from "../../webview/frame/cursorKeys.js";
+import { stopsOf, thinned } from "../../webview/views/operatingPoint/stops.js";
 import { chartIn, hoistSource } from "../support/chartFixture.js";
 
 const chart = chartIn(hoistSource(), "tray hoist");
@@ -29,9 +30,10 @@ describe("stops", () => {
   });
 
   it("are found by torque", () => {
-    expect(nearestStop(stops, -1)).toBe(0);
-    expect(nearestStop(stops, 99)).toBe(stops.length - 1);
-    expect(stops[nearestStop(stops, chart.hardest.torqueNm * 1.0001)]?.names).toEqual(["needed"]);
+    const torques = stops.map(({ torqueNm }) => torqueNm);
+    expect(nearestStop(torques, -1)).toBe(0);
+    expect(nearestStop(torques, 99)).toBe(stops.length - 1);
+    expect(stops[nearestStop(torques, chart.hardest.torqueNm * 1.0001)]?.names).toEqual(["needed"]);
     expect(nearestStop([], 1)).toBe(-1);
   });
 });

@@ -1,15 +1,24 @@
 /** The page's sentences and facts, read as its reader does; the numbers in them are checked where they are drawn. */
 import { describe, expect, it } from "vitest";
+import type { Nothing } from "../../extension/protocol/chartMessages.js";
+import { factsBeside } from "../../webview/frame/sheet.js";
 import { CAUTIONS } from "../../webview/page/cautions.js";
-import { describeMotion, describePower } from "../../webview/page/describe.js";
-import { emptyText } from "../../webview/page/emptyText.js";
-import { factsOf } from "../../webview/page/facts.js";
-import { readoutSentence, torqueText } from "../../webview/page/readout.js";
-import { drawChart } from "../../webview/plots/drawing.js";
-import { stopsOf } from "../../webview/stops.js";
-import { unitsOf } from "../../webview/units.js";
+import { emptySentences } from "../../webview/page/emptyText.js";
+import { describeMotion, describePower } from "../../webview/views/operatingPoint/describe.js";
+import { drawChart } from "../../webview/views/operatingPoint/drawing.js";
+import { writtenFacts } from "../../webview/views/operatingPoint/facts.js";
+import { readoutOf } from "../../webview/views/operatingPoint/readout.js";
+import { stopsOf } from "../../webview/views/operatingPoint/stops.js";
+import { unitsOf } from "../../webview/views/operatingPoint/units.js";
 import { chartIn, hoistSource } from "../support/chartFixture.js";
 
+const nothing = (reason: Nothing["reason"]): Nothing => ({
+  kind: "nothing",
+  view: "operating-point",
+  reason,
+  says: [],
+  example: null,
+});
 const chart = chartIn(hoistSource(), "tray hoist");
 const drawing = drawChart({ chart, saved: null });
 const units = unitsOf(drawing);
@@ -33,16 +42,16 @@ describe("the page's words", () => {
     const needed = stopsOf(chart).find(({ names }) => names.includes("needed"));
     const last = stopsOf(chart).at(-1);
     if (needed === undefined || last === undefined) throw new Error("There are no stops.");
-    expect(torqueText(needed, units)).toBe("0.525 N·m, 40 % of stall");
-    expect(readoutSentence(needed, units)).toMatchInlineSnapshot(
+    expect(readoutOf(needed, units).at).toBe("0.525 N·m, 40 % of stall");
+    expect(readoutOf(needed, units).spoken).toMatchInlineSnapshot(
       `"needed. Available: speed 195 rpm, current 2 A, output power 10.7 W, efficiency 43 %. Sheet: speed 185 rpm, current 1.98 A, output power 10.2 W, efficiency 43 %."`,
     );
-    expect(readoutSentence(last, units)).toContain("Beyond the sheet's line.");
+    expect(readoutOf(last, units).spoken).toContain("Beyond the sheet's line.");
   });
 
   it("tell facts, and what they were where they read differently", () => {
     const changed = chartIn(hoistSource({ driven: 40 }), "tray hoist");
-    const facts = factsOf(changed, chart, units);
+    const facts = factsBeside(writtenFacts(changed, units), writtenFacts(chart, units));
     // 54 teeth instead of 40 ask for 40/54 of the torque.
     expect(facts.find(({ name }) => name === "Torque needed")).toEqual({
       name: "Torque needed",
@@ -50,12 +59,12 @@ describe("the page's words", () => {
       was: "0.525 N·m",
     });
     expect(facts.find(({ name }) => name === "Torque at stall")?.was).toBeNull();
-    expect(factsOf(chart, chart, units).every(({ was }) => was === null)).toBe(true);
+    expect(factsBeside(writtenFacts(chart, units), writtenFacts(chart, units)).every(({ was }) => was === null)).toBe(true);
   });
 
   it("say what to do where there is nothing to show", () => {
-    expect(emptyText("nothing-declared")).toContain("mechanism(…)");
-    expect(emptyText("nothing-computed")).toContain("Problems");
+    expect(emptySentences(nothing("nothing-declared"))[0]).toContain("mechanism(…)");
+    expect(emptySentences(nothing("nothing-computed"))[0]).toContain("Problems");
   });
 
   it("hold the cautions", () => {

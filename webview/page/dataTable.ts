@@ -1,22 +1,10 @@
-/** The table behind the plots: the same points in numbers. */
-import { QUANTITIES } from "../plots/quantities.js";
-import { type Stop, thinned } from "../stops.js";
-import { type ChartUnits, shareNumber, torqueNumber, valueNumber } from "../units.js";
+/** A table of a sheet as elements of the page. */
+import type { Table } from "../frame/sheet.js";
 import { element } from "./element.js";
 
-/** About this many rows beside the named ones. */
-const ROWS = 20;
-
-export function showDataTable(table: HTMLTableElement, mechanism: string, stops: readonly Stop[], units: ChartUnits): void {
-  const head = [
-    `Torque (${units.torque.text})`,
-    "Share of stall (%)",
-    ...QUANTITIES.map(({ title, name }) => `${title} (${units.of[name].text})`),
-    ...QUANTITIES.map(({ title, name }) => `${title}, sheet (${units.of[name].text})`),
-    "Point",
-  ];
+export function showDataTable(table: HTMLTableElement, { caption, head, rows }: Table): void {
   table.replaceChildren(
-    element("caption", { text: `${mechanism}: one motor over torque` }),
+    element("caption", { text: caption }),
     element("thead", {}, [
       element(
         "tr",
@@ -27,20 +15,12 @@ export function showDataTable(table: HTMLTableElement, mechanism: string, stops:
     element(
       "tbody",
       {},
-      thinned(stops, ROWS).map((stop) => rowOf(stop, units)),
+      rows.map(([first = "", ...cells]) =>
+        element("tr", {}, [
+          element("th", { text: first, attributes: { scope: "row" } }),
+          ...cells.map((text) => element("td", { text })),
+        ]),
+      ),
     ),
   );
-}
-
-function rowOf({ torqueNm, shareOfStall, available, sheet, names }: Stop, units: ChartUnits): HTMLElement {
-  const cells = [
-    shareNumber(shareOfStall),
-    ...QUANTITIES.map((quantity) => valueNumber(units, quantity, available)),
-    ...QUANTITIES.map((quantity) => valueNumber(units, quantity, sheet)),
-    names.join(", "),
-  ];
-  return element("tr", {}, [
-    element("th", { text: torqueNumber(units, torqueNm), attributes: { scope: "row" } }),
-    ...cells.map((text) => element("td", { text })),
-  ]);
 }

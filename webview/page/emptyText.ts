@@ -1,15 +1,23 @@
 /** What the page says instead of a chart, and what to do then. */
-import type { ChartAnswer } from "../../extension/protocol/chartMessages.js";
+import type { Nothing } from "../../extension/protocol/chartMessages.js";
+import { element } from "./element.js";
 
-type Reason = Extract<ChartAnswer, { kind: "nothing" }>["reason"];
-
-const TEXTS: Readonly<Record<Reason, string>> = {
-  "nothing-declared":
-    'No mechanism is declared in this workspace yet. Declare one with mechanism(…) from "loadmark", and its operating point appears here.',
-  "nothing-computed":
-    "No mechanism can be computed yet. The Problems view says which values are missing; the operating point appears here once they are known.",
+const TEXTS: Readonly<Record<Nothing["reason"], readonly string[]>> = {
+  "nothing-declared": [
+    'No mechanism is declared in this workspace yet. Declare one with mechanism(…) from "loadmark", and its chart appears here.',
+  ],
+  "nothing-computed": [
+    "No mechanism can be computed yet. The Problems view says which values are missing; the chart appears here once they are known.",
+  ],
+  "does-not-apply": [],
 };
 
-export function emptyText(reason: Reason): string {
-  return TEXTS[reason];
+export function emptySentences({ reason, says }: Nothing): readonly string[] {
+  return [...TEXTS[reason], ...says];
+}
+
+export function showEmpty(box: HTMLElement, nothing: Nothing): void {
+  const example =
+    nothing.example === null ? [] : [element("pre", { class: "example" }, [element("code", { text: nothing.example })])];
+  box.replaceChildren(...emptySentences(nothing).map((text) => element("p", { text })), ...example);
 }

@@ -1,5 +1,5 @@
 /** Findings, assumptions and what was not checked, as lists of sentences. */
-import type { ChartFinding } from "../../extension/protocol/chart.js";
+import type { ChartFinding } from "../../extension/protocol/charts/parts.js";
 import { element } from "./element.js";
 
 const LEVEL: Readonly<Record<ChartFinding["level"], string>> = {

@@ -1,5 +1,5 @@
 /** One unit for a whole axis, chosen by its greatest value. */
-import { fromSi } from "../../extension/units/parse.js";
+import { fromSi, toSi } from "../../extension/units/parse.js";
 import { type Dimension, UNITS } from "../../extension/units/table.js";
 import { suitableSymbol, typeset } from "../../extension/units/write.js";
 
@@ -7,12 +7,14 @@ export interface AxisUnit {
   /** As people read it: "mN·m". */
   readonly text: string;
   readonly fromSi: (si: number) => number;
+  readonly toSi: (value: number) => number;
 }
 
 export function axisUnit(greatestSi: number, dimension: Dimension): AxisUnit {
   const symbol = suitableSymbol(greatestSi, dimension);
   const unit = UNITS.get(symbol);
-  return { text: typeset(symbol), fromSi: (si) => (unit === undefined ? si : fromSi(si, unit)) };
+  if (unit === undefined) return { text: typeset(symbol), fromSi: (si) => si, toSi: (value) => value };
+  return { text: typeset(symbol), fromSi: (si) => fromSi(si, unit), toSi: (value) => toSi(value, unit) };
 }
 
-export const PER_CENT: AxisUnit = { text: "%", fromSi: (share) => share * 100 };
+export const PER_CENT: AxisUnit = { text: "%", fromSi: (share) => share * 100, toSi: (perCent) => perCent / 100 };

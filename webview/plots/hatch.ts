@@ -1,5 +1,5 @@
 /** Hatches as on a drawing: lines at an angle, drawn for the pixels of the device so that they stay sharp. */
-import type { Zone } from "./limits.js";
+import type { Zone } from "../views/operatingPoint/limits.js";
 
 export type HatchKind = Zone["kind"] | "boundary";
 

@@ -4,7 +4,7 @@
  * Chosen so that the two curves of one plot stay apart with every kind of colour blindness, with a contrast of at least 3 to the
  * usual grounds. High contrast themes use the foreground colour instead.
  */
-import type { QuantityName } from "../plots/quantities.js";
+import type { QuantityName } from "../views/operatingPoint/quantities.js";
 
 export type Palette = Readonly<Record<QuantityName, string>>;
 

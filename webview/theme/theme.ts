@@ -3,7 +3,7 @@
  *
  * Reads the classes and variables that the editor puts on the page; says when they change.
  */
-import { QUANTITIES, type QuantityName } from "../plots/quantities.js";
+import { QUANTITIES, type QuantityName } from "../views/operatingPoint/quantities.js";
 import { blend, type Colour, luminance, parseColour, withContrast, writeColour } from "./colour.js";
 import { ON_DARK, ON_LIGHT } from "./palette.js";
 

@@ -1,12 +1,15 @@
 /**
- * The chart of the mechanism at the caret, or of the one that is shown, beside the saved result; the last good one while there is none.
+ * The chart of a view: of what is declared at the caret, or of what is shown, beside the saved result; the last good one while there is none.
  *
- * Keeps good charts, so that half-typed code does not take away what people look at. Computes no number itself.
+ * Keeps good charts, so that half-typed code does not take away what people look at. Computes no number itself, and knows no view.
  */
 import type { Analysis } from "../../analysis/analysis.js";
-import { type OperatingPointChart, operatingPointChart } from "../../features/chart.js";
+import type { ChartFeature, Wish } from "../../features/charts/feature.js";
+import { createChartFeatures } from "../../features/charts/features.js";
 import { mechanismsAround } from "../../features/mechanismsAround.js";
+import { robotsAround } from "../../features/robotsAround.js";
 import type { ChartAnswer, ChartQuestion } from "../../protocol/chartMessages.js";
+import type { Want } from "../../protocol/charts/views.js";
 import { currentFile } from "../current.js";
 import { keyOf } from "../fileKeys.js";
 import type { Result } from "../session.js";
@@ -15,9 +18,13 @@ import type { Texts } from "../texts.js";
 /** Good charts that are kept; the one that was asked for longest ago goes first. */
 const KEPT = 32;
 
+/** What only the view itself knows more of. */
+type AnyFeature = ChartFeature<unknown, Want>;
+
 export class ChartAnswers {
   readonly #texts: Texts;
-  readonly #lastGood = new Map<string, OperatingPointChart>();
+  readonly #features = createChartFeatures();
+  readonly #lastGood = new Map<string, unknown>();
   /** Analyses of what is saved, by the texts that they are of. */
   readonly #saved = new WeakMap<object, Analysis>();
 
@@ -26,66 +33,63 @@ export class ChartAnswers {
   }
 
   answer(result: Result, question: ChartQuestion): ChartAnswer {
-    for (const name of this.#wanted(result, question)) {
-      const answer = this.#chartOf(result, name);
-      if (answer !== undefined) return answer;
+    const { want } = question;
+    // Each feature takes the wants of its own view, which the compiler cannot follow through the table.
+    const feature = this.#features[want.view] as AnyFeature;
+    const wish = this.#wishOf(result, question);
+    for (const name of feature.subjects(result.analysis, wish)) {
+      const shown = this.#chartOf(result, feature, name, want);
+      if (shown !== undefined) return { kind: "chart", view: want.view, ...shown } as ChartAnswer;
     }
-    const declared = result.analysis.mechanisms.length > 0;
-    return { kind: "nothing", reason: declared ? "nothing-computed" : "nothing-declared" };
+    const { reason, says, example } = feature.nothing(result.analysis, wish);
+    return { kind: "nothing", view: want.view, reason, says: [...says], example };
   }
 
-  /** Names of mechanisms, the most wanted first. */
-  #wanted(result: Result, { caret, mechanism: shown }: ChartQuestion): Set<string> {
+  #wishOf(result: Result, { caret, mechanism, robot }: ChartQuestion): Wish {
+    const { analysis } = result;
     const file = caret === null ? undefined : keyOf(caret.uri);
     const current = file === undefined ? undefined : currentFile(this.#texts, result, file);
     const offset = current && caret ? current.carryBack(current.lines.offsetAt(caret)) : undefined;
-    const { analysis } = result;
-    const around = file === undefined || offset === undefined ? [] : mechanismsAround(analysis, file, offset);
-    const atCaret = around.map(({ name }) => name);
-    const kept = shown === null ? [] : [shown];
-    const others = analysis.mechanisms.toSorted((one, other) => Number(other.at.file === file) - Number(one.at.file === file));
-    // Where a loop declares several at once, the one that is shown stays.
-    const first = shown !== null && atCaret.includes(shown) ? [shown] : [];
-    return new Set([...first, ...atCaret, ...kept, ...others.map(({ name }) => name)]);
+    const isKnown = file !== undefined && offset !== undefined;
+    return {
+      mechanisms: isKnown ? mechanismsAround(analysis, file, offset) : [],
+      robots: isKnown ? robotsAround(analysis, file, offset) : [],
+      file,
+      shownMechanism: mechanism,
+      shownRobot: robot,
+    };
   }
 
-  #chartOf(result: Result, name: string): ChartAnswer | undefined {
-    const chart = operatingPointChart(result.analysis, name);
-    const saved = this.#savedChart(result, name);
+  #chartOf(result: Result, feature: AnyFeature, name: string, want: Want) {
+    const chart = feature.chartOf(result.analysis, name, want);
+    const saved = this.#savedChart(result, feature, name, want);
+    const beside = (shown: unknown) => (saved === undefined || isSame(shown, saved) ? null : saved);
+    const key = JSON.stringify([want.view, name]);
     if (chart !== undefined) {
-      this.#keep(name, chart);
-      return { kind: "chart", chart, saved: isSame(chart, saved) ? null : (saved ?? null), old: null };
+      this.#keep(key, chart);
+      return { chart, saved: beside(chart), old: null };
     }
-    const last = this.#lastGood.get(name) ?? saved;
-    return last && { kind: "chart", chart: last, saved: isSame(last, saved) ? null : (saved ?? null), old: whyOld(result, name) };
+    const last = this.#lastGood.get(key) ?? saved;
+    return last === undefined ? undefined : { chart: last, saved: beside(last), old: feature.whyOld(result.analysis, name) };
   }
 
   /** The chart for what is saved; undefined where there is none, or where everything is saved. */
-  #savedChart({ analysis, analyse }: Result, name: string): OperatingPointChart | undefined {
+  #savedChart({ analysis, analyse }: Result, feature: AnyFeature, name: string, want: Want): unknown {
     const { saved, isSaved } = this.#texts.capture();
     if (isSaved) return undefined;
     const known = this.#saved.get(saved) ?? analyse([...analysis.files.keys()], saved);
     this.#saved.set(saved, known);
-    return operatingPointChart(known, name);
+    return feature.chartOf(known, name, want);
   }
 
-  #keep(name: string, chart: OperatingPointChart): void {
-    this.#lastGood.delete(name);
-    this.#lastGood.set(name, chart);
+  #keep(key: string, chart: unknown): void {
+    this.#lastGood.delete(key);
+    this.#lastGood.set(key, chart);
     const [oldest] = this.#lastGood.keys();
     if (this.#lastGood.size > KEPT && oldest !== undefined) this.#lastGood.delete(oldest);
   }
 }
 
-function whyOld({ analysis }: Result, name: string): string {
-  const mechanism = analysis.mechanisms.find((one) => one.name === name);
-  const why =
-    mechanism === undefined
-      ? "The code as it stands does not declare this mechanism."
-      : (mechanism.notChecked[0] ?? "A value is missing.");
-  return `${why} What is shown is its last result.`;
-}
-
-function isSame(one: OperatingPointChart, other: OperatingPointChart | undefined): boolean {
-  return other !== undefined && JSON.stringify(one) === JSON.stringify(other);
+function isSame(one: unknown, other: unknown): boolean {
+  return JSON.stringify(one) === JSON.stringify(other);
 }

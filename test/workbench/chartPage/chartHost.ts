@@ -83,7 +83,7 @@ async function openChart(browser: Browser, address: string, options: ChartPageOp
     post,
     async show(answer) {
       await post({ type: "show", answer });
-      const selector = answer.kind === "chart" ? ".content:not([hidden])" : ".empty:not([hidden])";
+      const selector = `#view-${answer.view} ${answer.kind === "chart" ? ".content" : ".empty"}:not([hidden])`;
       await page.waitForSelector(selector);
       // Two frames: the plots follow the size of their boxes after these are laid out.
       await page.evaluate(() => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))));

@@ -1,8 +1,11 @@
 // The charts that the page's tests show: a hoist in several states, computed as the product computes them.
 
-import type { OperatingPointChart } from "../../../extension/protocol/chart.js";
-import type { ShownChart } from "../../../extension/protocol/chartMessages.js";
-import { chartIn, type HoistNumbers, hoistSource, shownChart } from "../../support/chartFixture.js";
+import { type ChartMemory, NO_MEMORY } from "../../../extension/protocol/chartMemory.js";
+import type { Nothing } from "../../../extension/protocol/chartMessages.js";
+import type { OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
+import type { ViewName } from "../../../extension/protocol/charts/views.js";
+import { withView } from "../../../webview/frame/memory.js";
+import { chartIn, type HoistNumbers, hoistSource, type ShownChart, shownChart } from "../../support/chartFixture.js";
 
 export function hoistChart(numbers: HoistNumbers = {}): OperatingPointChart {
   return chartIn(hoistSource(numbers), numbers.name ?? "tray hoist");
@@ -21,6 +24,15 @@ export const crowded = (): ShownChart =>
     }),
     { saved: hoistChart({ stallTorque: "1 N*m" }), old: "A value is missing. What is shown is its last result." },
   );
+
+export function nothingDeclared(view: ViewName = "operating-point"): Nothing {
+  return { kind: "nothing", view, reason: "nothing-declared", says: [], example: null };
+}
+
+/** A memory of the page, with a cursor in the view of the operating point. */
+export function remembered({ cursor = null, ...rest }: Partial<ChartMemory> & { readonly cursor?: number | null }): ChartMemory {
+  return withView({ ...NO_MEMORY, ...rest }, "operating-point", { cursor });
+}
 
 /** By hand, for the hoist as it is: N·m, from 5.9 kg on 30 mm through 54 : 16 and the customary 0.98 of a spur stage. */
 export const NEEDED_NM = (5.9 * 9.80665 * 0.03) / ((54 / 16) * 0.98);

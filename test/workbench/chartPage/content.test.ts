@@ -1,10 +1,13 @@
 // What the page shows and hands out: numbers in facts, read-out, table and files, and the states without a chart.
 
 import assert from "node:assert/strict";
+import { NO_MEMORY } from "../../../extension/protocol/chartMemory.js";
 import { shownChart } from "../../support/chartFixture.js";
 import type { OpenedChart } from "./chartHost.js";
-import { crowded, fine, hoistChart, NEEDED_NM, pastPeak } from "./charts.js";
+import { crowded, fine, hoistChart, NEEDED_NM, nothingDeclared, pastPeak, remembered } from "./charts.js";
 import { chartHost } from "./session.js";
+
+const WANT = { view: "operating-point" };
 
 describe("the chart's page", () => {
   let chart: OpenedChart;
@@ -18,21 +21,21 @@ describe("the chart's page", () => {
 
   it("asks first, and says what it showed before", async () => {
     chart = await chartHost().open();
-    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: null });
+    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: null, robot: null, want: WANT });
     await chart.close();
-    chart = await chartHost().open({ state: { mechanism: "lid arm", cursorNm: null, tableOpen: null } });
-    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: "lid arm" });
+    chart = await chartHost().open({ state: { ...NO_MEMORY, mechanism: "lid arm" } });
+    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: "lid arm", robot: null, want: WANT });
   });
 
   it("starts anew from a memory that it cannot read", async () => {
     chart = await chartHost().open({ state: { mechanism: 7 } });
-    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: null });
+    assert.deepEqual(await chart.waitForSent("ready"), { type: "ready", mechanism: null, robot: null, want: WANT });
   });
 
   it("shows nothing until it is answered", async () => {
     chart = await chartHost().open();
     await chart.waitForSent("ready");
-    assert.equal((await text("body")).trim(), "");
+    assert.equal((await text("[role=tabpanel]:not([hidden])")).trim(), "");
   });
 
   it("shows the verdict and what is needed", async () => {
@@ -65,7 +68,7 @@ describe("the chart's page", () => {
 
   it("says what to do where there is no chart, and shows one when it comes", async () => {
     chart = await chartHost().open();
-    await chart.show({ kind: "nothing", reason: "nothing-declared" });
+    await chart.show(nothingDeclared());
     assert.match(await text("body"), /Declare one/);
     assert.equal(await chart.page.locator("canvas").first().isVisible(), false);
     await chart.show(fine());
@@ -99,7 +102,7 @@ describe("the chart's page", () => {
     );
     const head = await table.locator("thead th").allTextContents();
     assert.deepEqual(head.slice(0, 3), ["Torque (N·m)", "Share of stall (%)", "Speed (rpm)"]);
-    assert.deepEqual(await chart.state(), { mechanism: "tray hoist", cursorNm: null, tableOpen: true });
+    assert.deepEqual(await chart.state(), { ...NO_MEMORY, mechanism: "tray hoist", tableOpen: true });
     await chart.page.getByRole("button", { name: "Hide table" }).click();
     assert.equal(await table.isVisible(), false);
   });
@@ -116,7 +119,7 @@ describe("the chart's page", () => {
   });
 
   it("comes back as it was left", async () => {
-    chart = await chartHost().open({ state: { mechanism: "tray hoist", cursorNm: 0, tableOpen: true } });
+    chart = await chartHost().open({ state: remembered({ mechanism: "tray hoist", cursor: 0, tableOpen: true }) });
     await chart.show(fine());
     assert.equal(await chart.page.getByRole("region", { name: "Table" }).isVisible(), true);
     assert.match(await text(".readout caption"), /^At 0 N·m, 0 % of stall/);
@@ -148,11 +151,11 @@ describe("the chart's page", () => {
     await chart.show(shownChart({ ...hostile, findings }, { old: name }));
     assert.equal(await chart.page.locator(".content h1").textContent(), name);
     assert.equal(await chart.page.locator("#chart img, #chart b").count(), 0);
-    assert.equal(await chart.page.title(), "Operating point");
+    assert.equal(await chart.page.title(), "Loadmark chart");
   });
 
   it("shows absurd values without a number that is none", async () => {
-    chart = await chartHost().open({ width: 400, state: { mechanism: null, cursorNm: null, tableOpen: true } });
+    chart = await chartHost().open({ width: 400, state: remembered({ tableOpen: true }) });
     for (const mass of ["0.000000001 kg", "1000000000 kg"]) {
       for (const stallTorque of ["0.000000001 N*m", "1000000000 N*m"]) {
         for (const openCircuit of ["0.000000001 V", "1000000000 V"]) {

@@ -1,6 +1,7 @@
 // The read-out by mouse and by keyboard.
 
 import assert from "node:assert/strict";
+import type { ChartMemory } from "../../../extension/protocol/chartMemory.js";
 import { waitUntil } from "../waitUntil.js";
 import type { OpenedChart } from "./chartHost.js";
 import { fine, NEEDED_NM, pastPeak } from "./charts.js";
@@ -23,9 +24,11 @@ describe("the cursor of the chart's page", () => {
       .locator("canvas")
       .first()
       .evaluate((canvas) => (canvas as HTMLCanvasElement).toDataURL());
-  const cursorNm = async () => ((await chart.state()) as { cursorNm: number | null } | undefined)?.cursorNm;
+  const cursorNm = async () => ((await chart.state()) as ChartMemory | undefined)?.views["operating-point"].cursor;
 
   it("is reached and moved by keys alone", async () => {
+    await chart.page.keyboard.press("Tab");
+    assert.equal(await chart.page.evaluate(() => document.activeElement?.getAttribute("role")), "tab");
     await chart.page.keyboard.press("Tab");
     const plots = chart.page.getByRole("slider", { name: "Torque of the read-out" });
     assert.equal(await plots.evaluate((element) => element === document.activeElement), true);

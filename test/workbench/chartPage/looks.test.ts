@@ -3,7 +3,7 @@
 import assert from "node:assert/strict";
 import axe from "axe-core";
 import type { OpenedChart } from "./chartHost.js";
-import { crowded, fine, pastPeak } from "./charts.js";
+import { crowded, fine, nothingDeclared, pastPeak, remembered } from "./charts.js";
 import { chartHost } from "./session.js";
 import { pageThemes, type ThemeName } from "./themes.js";
 
@@ -24,8 +24,8 @@ describe("the looks of the chart's page", () => {
 
   for (const theme of themes) {
     it(`break no rule of accessibility in ${theme}`, async () => {
-      chart = await chartHost().open({ theme, state: { mechanism: null, cursorNm: 0.3, tableOpen: true } });
-      for (const answer of [pastPeak(), crowded(), { kind: "nothing", reason: "nothing-declared" } as const]) {
+      chart = await chartHost().open({ theme, state: remembered({ cursor: 0.3, tableOpen: true }) });
+      for (const answer of [pastPeak(), crowded(), nothingDeclared()]) {
         await chart.show(answer);
         assert.deepEqual(await violations(chart), []);
       }

@@ -1,6 +1,6 @@
 /** The four quantities that are plotted over torque: what they are called, where they stand and how they are drawn apart. */
-import type { CurveValues } from "../../extension/protocol/chart.js";
-import type { Dimension } from "../../extension/units/table.js";
+import type { CurveValues } from "../../../extension/protocol/charts/operatingPoint.js";
+import type { Dimension } from "../../../extension/units/table.js";
 
 export type QuantityName = "speed" | "current" | "power" | "efficiency";
 

@@ -3,9 +3,9 @@
  */
 import { Chart, LinearScale, LineController, LineElement, type Plugin, PointElement } from "chart.js";
 import annotationPlugin from "chartjs-plugin-annotation";
-import type { Theme } from "../theme/theme.js";
+import { hatchPattern } from "../../plots/hatch.js";
+import type { Theme } from "../../theme/theme.js";
 import type { Drawing } from "./drawing.js";
-import { hatchPattern } from "./hatch.js";
 import { type PlotPlace, plotConfig, plotOf } from "./plotConfig.js";
 import type { QuantityName } from "./quantities.js";
 import { drawWords } from "./words.js";
@@ -24,6 +24,7 @@ export interface Plot {
   setCursor(cursor: Cursor | null): void;
   /** Torque in axis units at a distance from the canvas's left edge, px. */
   torqueAt(x: number): number;
+  destroy(): void;
 }
 
 export interface PlotOptions {
@@ -69,6 +70,7 @@ export function createPlot(canvas: HTMLCanvasElement, { place, pixelRatio }: Plo
       cursor = next;
       chart?.draw();
     },
+    destroy: () => chart?.destroy(),
     torqueAt: (x) => chart?.scales.torque?.getValueForPixel(x) ?? 0,
   };
 }

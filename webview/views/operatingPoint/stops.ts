@@ -3,7 +3,7 @@
  *
  * Only points that were computed: nothing is interpolated.
  */
-import type { ChartSample, OperatingPointChart } from "../extension/protocol/chart.js";
+import type { ChartSample, OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
 
 export interface Stop extends ChartSample {
   readonly shareOfStall: number | null;
@@ -40,15 +40,6 @@ export function stopsOf(chart: OperatingPointChart): readonly Stop[] {
       shareOfStall: available.stallTorqueNm > 0 ? sample.torqueNm / available.stallTorqueNm : null,
       names: nameOf(sample.torqueNm),
     }));
-}
-
-/** Index of the stop nearest to a torque; -1 where there is none. */
-export function nearestStop(stops: readonly Stop[], torqueNm: number): number {
-  let best = stops.length > 0 ? 0 : -1;
-  for (const [index, stop] of stops.entries()) {
-    if (Math.abs(stop.torqueNm - torqueNm) < Math.abs((stops[best]?.torqueNm ?? 0) - torqueNm)) best = index;
-  }
-  return best;
 }
 
 /** The rows of a table: every named stop, and of the others about as many as asked for, none right beside a named one. */

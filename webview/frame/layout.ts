@@ -1,22 +1,24 @@
 /**
- * The page's fixed parts, made once: results only change what is in them, so that focus and scroll stay where they are.
+ * The fixed parts of one view's page, made once: results only change what is in them, so that focus and scroll stay where they are.
  */
-import { CAUTIONS } from "./cautions.js";
-import { element } from "./element.js";
+import type { ViewName } from "../../extension/protocol/charts/views.js";
+import { CAUTIONS } from "../page/cautions.js";
+import { element } from "../page/element.js";
+import { panelId, tabId } from "./tabs.js";
 
 export interface Layout {
+  readonly panel: HTMLElement;
   readonly empty: HTMLElement;
-  readonly emptyReason: HTMLElement;
+  readonly emptyText: HTMLElement;
   readonly content: HTMLElement;
   readonly old: HTMLElement;
   readonly title: HTMLElement;
   readonly verdict: HTMLElement;
-  readonly perMotor: HTMLElement;
+  readonly notes: HTMLElement;
   readonly facts: HTMLElement;
   readonly findings: HTMLElement;
+  /** For what a view adds of its own above its plots. */
   readonly plots: HTMLElement;
-  readonly upper: HTMLCanvasElement;
-  readonly lower: HTMLCanvasElement;
   readonly readout: HTMLTableElement;
   readonly spoken: HTMLElement;
   readonly tableButton: HTMLButtonElement;
@@ -29,22 +31,28 @@ export interface Layout {
 }
 
 /** `tableFirst`: with a reader of the screen the numbers come before the pictures. */
-export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
-  const canvas = (): HTMLCanvasElement => element("canvas", { attributes: { role: "img" } });
+export function buildLayout(name: ViewName, heading: string, tableFirst: boolean): Layout {
   const button = (text: string): HTMLButtonElement => element("button", { text, attributes: { type: "button" } });
+  const tableId = `table-${name}`;
+  const keysId = `keys-${name}`;
+  const plots = {
+    role: "slider",
+    tabindex: "0",
+    "aria-orientation": "horizontal",
+    "aria-describedby": keysId,
+  };
   const parts: Layout = {
-    empty: element("div", { class: "empty" }, [element("h1", { text: "Operating point" })]),
-    emptyReason: element("p"),
+    panel: element("section", { attributes: { id: panelId(name), role: "tabpanel", "aria-labelledby": tabId(name) } }),
+    empty: element("div", { class: "empty" }, [element("h1", { text: heading })]),
+    emptyText: element("div"),
     content: element("div", { class: "content" }),
     old: element("p", { class: "old", attributes: { role: "status" } }),
     title: element("h1"),
     verdict: element("p", { class: "verdict" }),
-    perMotor: element("p", { class: "per-motor" }),
+    notes: element("p", { class: "per-motor" }),
     facts: element("dl", { class: "facts" }),
     findings: element("ul", { class: "findings" }),
-    plots: element("div", { class: "plots", attributes: PLOTS }),
-    upper: canvas(),
-    lower: canvas(),
+    plots: element("div", { class: "plots", attributes: plots }),
     readout: element("table", { class: "readout", attributes: { "aria-hidden": "true" } }),
     spoken: element("p", { class: "spoken", attributes: { "aria-live": "polite" } }),
     tableButton: button("Show table"),
@@ -52,22 +60,21 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
     csvButton: button("Save numbers (CSV)"),
     tableBox: element("div", {
       class: "table-box",
-      attributes: { id: TABLE_ID, role: "region", "aria-label": "Table", tabindex: "0" },
+      attributes: { id: tableId, role: "region", "aria-label": "Table", tabindex: "0" },
     }),
     table: element("table", { class: "data" }),
     assumed: element("section", { class: "remarks" }),
     notChecked: element("section", { class: "remarks" }),
   };
-  parts.tableButton.setAttribute("aria-controls", TABLE_ID);
-  parts.empty.append(parts.emptyReason);
+  parts.tableButton.setAttribute("aria-controls", tableId);
+  parts.empty.append(parts.emptyText);
   parts.tableBox.append(parts.table);
-  parts.plots.append(element("div", { class: "plot" }, [parts.upper]), element("div", { class: "plot" }, [parts.lower]));
   const actions = element("div", { class: "actions" }, [parts.tableButton, parts.pictureButton, parts.csvButton]);
-  const keys = element("p", { class: "note", text: KEYS, attributes: { id: KEYS_ID } });
+  const keys = element("p", { class: "note", text: KEYS, attributes: { id: keysId } });
   const picture = [parts.plots, parts.spoken, parts.readout, keys];
   const numbers = [actions, parts.tableBox];
   parts.content.append(
-    element("header", {}, [parts.title, parts.verdict, parts.perMotor, parts.old]),
+    element("header", {}, [parts.title, parts.verdict, parts.notes, parts.old]),
     parts.facts,
     ...(tableFirst ? [...numbers, ...picture] : [...picture, ...numbers]),
     parts.findings,
@@ -75,18 +82,8 @@ export function buildLayout(root: HTMLElement, tableFirst: boolean): Layout {
     parts.notChecked,
     element("footer", { class: "cautions" }, [element("p", { text: CAUTIONS })]),
   );
-  root.replaceChildren(parts.empty, parts.content);
+  parts.panel.append(parts.empty, parts.content);
   return parts;
 }
 
-const TABLE_ID = "numbers";
-const KEYS_ID = "keys";
 const KEYS = "Read off with the mouse, or with the keys ← → Home End while the plots have the focus; Esc takes the cursor away.";
-
-const PLOTS = {
-  role: "slider",
-  tabindex: "0",
-  "aria-label": "Torque of the read-out",
-  "aria-orientation": "horizontal",
-  "aria-describedby": KEYS_ID,
-};

@@ -1,5 +1,5 @@
 /** One motor at one torque, as charts and their tables carry it: SI. */
-import type { OperatingPoint } from "../model/operatingPoint.js";
+import type { OperatingPoint } from "../../model/operatingPoint.js";
 
 export interface ChartValues {
   readonly speedRadPerS: number;

@@ -1,9 +1,9 @@
 /** The plots in sentences, for those who hear them: what is drawn, and every limit that is hatched. */
-import type { OperatingPointChart } from "../../extension/protocol/chart.js";
-import { writeNumber } from "../../extension/units/write.js";
-import type { Drawing } from "../plots/drawing.js";
-import { CURRENT, EFFICIENCY, POWER, SPEED } from "../plots/quantities.js";
-import { type ChartUnits, unitsOf, writeTorque, writeValue } from "../units.js";
+import type { OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
+import { writeNumber } from "../../../extension/units/write.js";
+import type { Drawing } from "./drawing.js";
+import { CURRENT, EFFICIENCY, POWER, SPEED } from "./quantities.js";
+import { type ChartUnits, unitsOf, writeTorque, writeValue } from "./units.js";
 
 export function describeMotion({ available, hardest, sheet }: OperatingPointChart, drawing: Drawing): string {
   const units = unitsOf(drawing);

@@ -3,9 +3,10 @@
  *
  * Words are not its work: they are placed with the curves' own (words.ts).
  */
-import type { Theme } from "../theme/theme.js";
+
+import type { HatchKind } from "../../plots/hatch.js";
+import type { Theme } from "../../theme/theme.js";
 import type { Drawing } from "./drawing.js";
-import type { HatchKind } from "./hatch.js";
 
 /** The part of the plugin's options that is used here; its own types cannot be read from an ES module. */
 export type AnnotationOptions = BoxOptions | LineOptions;

@@ -3,8 +3,8 @@
  *
  * Places and words only; how a hatch looks is hatch.ts.
  */
-import type { OperatingPointChart } from "../../extension/protocol/chart.js";
-import { writeQuantity } from "../../extension/units/write.js";
+import type { OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
+import { writeQuantity } from "../../../extension/units/write.js";
 
 export interface Zone {
   readonly kind: "past-peak" | "current-limit" | "no-go";

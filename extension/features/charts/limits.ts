@@ -3,9 +3,9 @@
  *
  * Only limits that the declaration names or that follow from the line; whether one is a finding is up to the rules.
  */
-import type { Drive, Protection } from "../model/drive.js";
-import { slipPoint } from "../model/hardest.js";
-import type { MotorLine } from "../model/line.js";
+import type { Drive, Protection } from "../../model/drive.js";
+import { slipPoint } from "../../model/hardest.js";
+import type { MotorLine } from "../../model/line.js";
 
 export interface ChartLimit {
   readonly kind: "protection" | "rated-torque" | "stage-torque" | "grip";

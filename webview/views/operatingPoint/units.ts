@@ -1,11 +1,11 @@
 /**
  * The units of one chart: what its axes show, its words, facts and table show as well.
  */
-import type { CurveValues } from "../extension/protocol/chart.js";
-import { writeNumber, writeShare } from "../extension/units/write.js";
-import type { AxisUnit } from "./plots/axisUnit.js";
-import type { Drawing } from "./plots/drawing.js";
-import type { Quantity, QuantityName } from "./plots/quantities.js";
+import type { CurveValues } from "../../../extension/protocol/charts/operatingPoint.js";
+import { writeNumber, writeShare } from "../../../extension/units/write.js";
+import type { AxisUnit } from "../../plots/axisUnit.js";
+import type { Drawing } from "./drawing.js";
+import type { Quantity, QuantityName } from "./quantities.js";
 
 export interface ChartUnits {
   readonly torque: AxisUnit;

@@ -3,13 +3,13 @@
  *
  * Scales numbers and chooses units; the numbers themselves come with the message.
  */
-import type { CurveValues, OperatingPointChart } from "../../extension/protocol/chart.js";
-import type { ShownChart } from "../../extension/protocol/chartMessages.js";
-import { writeNumber } from "../../extension/units/write.js";
-import { type AxisUnit, axisUnit, PER_CENT } from "./axisUnit.js";
+import type { CurveValues, OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
+import type { ShownChart } from "../../../extension/protocol/charts/views.js";
+import { writeNumber } from "../../../extension/units/write.js";
+import { type AxisUnit, axisUnit, PER_CENT } from "../../plots/axisUnit.js";
+import { alignedScales, type Scale, ticksWithin } from "../../plots/ticks.js";
 import { type Boundary, boundariesOf, type Zone, zonesOf } from "./limits.js";
 import { CURRENT, EFFICIENCY, POWER, type Quantity, SPEED } from "./quantities.js";
-import { alignedScales, type Scale, ticksWithin } from "./ticks.js";
 
 export interface AxisDrawing extends Scale {
   /** With its unit: "Speed (rpm)". */
@@ -64,7 +64,7 @@ const BEHIND = 1.06;
 /** A needed torque up to this multiple of the longer line stretches the axis; a greater one is named at its end. */
 const STRETCH = 2;
 
-export function drawChart({ chart, saved }: Pick<ShownChart, "chart" | "saved">): Drawing {
+export function drawChart({ chart, saved }: Pick<ShownChart<"operating-point">, "chart" | "saved">): Drawing {
   const torque = torqueAxis(chart, saved);
   const toX = torque.unit.fromSi;
   const plot = (left: Quantity, right: Quantity): PlotDrawing => {

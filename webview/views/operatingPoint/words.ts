@@ -2,8 +2,6 @@
  * The words in a plot: names at the curves, what is needed, and what each hatch means, each where it hides nothing.
  */
 import type { Chart } from "chart.js";
-import type { Theme } from "../theme/theme.js";
-import type { Curve, Drawing, PlotDrawing } from "./drawing.js";
 import {
   type Box,
   type Place,
@@ -14,7 +12,9 @@ import {
   placesUpright,
   placesWithin,
   type WantedLabel,
-} from "./placing.js";
+} from "../../plots/placing.js";
+import type { Theme } from "../../theme/theme.js";
+import type { Curve, Drawing, PlotDrawing } from "./drawing.js";
 
 interface Words extends WantedLabel {
   readonly text: string;

@@ -3,17 +3,19 @@
  *
  * SI throughout, one motor unless the name says otherwise; what does not apply is null. How it looks is the chart's business.
  */
-import type { Analysis, Finding } from "../analysis/analysis.js";
-import type { Drive } from "../model/drive.js";
-import { availableLine, type MotorLine, sheetLine } from "../model/line.js";
-import type { MechanismNumbers } from "../model/numbers.js";
-import { operatingPointAt } from "../model/operatingPoint.js";
-import { linePoint } from "../model/peaks.js";
-import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "./bestPoints.js";
-import { type ChartLimit, limitsOf, torqueAtCurrent } from "./chartLimits.js";
-import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./chartPoint.js";
-import { positionWords } from "./positionWords.js";
-import { findingsAbout, type State, verdictOf } from "./verdict.js";
+import type { Analysis, Finding } from "../../analysis/analysis.js";
+import type { Drive } from "../../model/drive.js";
+import { availableLine, type MotorLine, sheetLine } from "../../model/line.js";
+import type { MechanismNumbers } from "../../model/numbers.js";
+import { operatingPointAt } from "../../model/operatingPoint.js";
+import { linePoint } from "../../model/peaks.js";
+import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "../bestPoints.js";
+import { positionWords } from "../positionWords.js";
+import { findingsAbout, type State, verdictOf } from "../verdict.js";
+import type { ChartFeature } from "./feature.js";
+import { type ChartLimit, limitsOf, torqueAtCurrent } from "./limits.js";
+import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
+import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./point.js";
 
 /** One abscissa; a line is null where it does not reach. */
 export interface ChartSample {
@@ -69,6 +71,13 @@ export interface OperatingPointChart {
 
 /** Steps of the abscissa between its ends. */
 const STEPS = 100;
+
+export const operatingPointFeature: ChartFeature<OperatingPointChart, unknown> = {
+  subjects: mechanismSubjects,
+  chartOf: operatingPointChart,
+  whyOld: whyMechanismIsOld,
+  nothing: noMechanism,
+};
 
 /** `undefined` for an unknown name, or a mechanism without numbers. */
 export function operatingPointChart(analysis: Analysis, mechanismName: string): OperatingPointChart | undefined {

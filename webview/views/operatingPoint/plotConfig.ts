@@ -4,8 +4,8 @@
  * No animation, no events and no box of keys: words stand at the curves, and the page moves the cursor.
  */
 import type { ChartConfiguration, ChartDataset, Plugin, Scale, ScaleOptionsByType } from "chart.js";
-import { writeNumber } from "../../extension/units/write.js";
-import type { Theme } from "../theme/theme.js";
+import { writeNumber } from "../../../extension/units/write.js";
+import type { Theme } from "../../theme/theme.js";
 import { annotationsOf, type HatchFill } from "./annotations.js";
 import type { AxisDrawing, Curve, Drawing, Mark, PlotDrawing } from "./drawing.js";
 

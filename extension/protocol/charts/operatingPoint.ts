@@ -4,12 +4,9 @@
  * SI values of one motor; what does not apply is null. What the numbers mean stands with the feature that computes them.
  */
 import * as v from "valibot";
+import { listOf, number, said, shownEntries, text } from "./parts.js";
 
-const number = v.pipe(v.number(), v.finite());
-const text = v.string();
-
-/** What arrived is nobody's to change. */
-const listOf = <S extends v.GenericSchema>(item: S) => v.pipe(v.array(item), v.readonly());
+const VIEW = "operating-point";
 
 const values = {
   speedRadPerS: number,
@@ -54,14 +51,10 @@ const limitsSchema = v.object({
   others: listOf(limitSchema),
 });
 
-const findingSchema = v.object({ rule: text, level: v.picklist(["error", "warning", "information"]), message: text });
-
 export const operatingPointChartSchema = v.object({
   mechanism: text,
   motorCount: number,
-  state: v.picklist(["error", "warning", "fine", "unknown"]),
-  /** A few words. */
-  verdict: text,
+  ...said,
   available: endsSchema,
   sheet: endsSchema,
   /** Rising torque from 0 to the end of the longer line; marked points are among them. */
@@ -71,12 +64,21 @@ export const operatingPointChartSchema = v.object({
   peakPower: v.nullable(pointSchema),
   bestEfficiency: v.nullable(pointSchema),
   limits: limitsSchema,
-  findings: listOf(findingSchema),
-  assumed: listOf(text),
-  notChecked: listOf(text),
 });
+
+export const operatingPointShown = v.object(shownEntries(VIEW, operatingPointChartSchema));
+
+/** What the page asks for. */
+export const operatingPointWant = v.object({ view: v.literal(VIEW) });
+
+/** What the page remembers of this view. */
+export const operatingPointMemory = v.object({
+  /** Torque where the cursor stands, N·m. */
+  cursor: v.nullable(number),
+});
+
+export const NO_OPERATING_POINT_MEMORY: v.InferOutput<typeof operatingPointMemory> = { cursor: null };
 
 export type OperatingPointChart = v.InferOutput<typeof operatingPointChartSchema>;
 export type ChartSample = v.InferOutput<typeof sampleSchema>;
 export type CurveValues = v.InferOutput<typeof valuesSchema>;
-export type ChartFinding = v.InferOutput<typeof findingSchema>;

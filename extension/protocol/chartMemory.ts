@@ -1,0 +1,27 @@
+/**
+ * What the chart's page remembers of its own: kept by the editor while the page is hidden, and given back after a reload.
+ *
+ * Results are not in it; the page asks for those.
+ */
+import * as v from "valibot";
+import { memoriesSchema, NO_MEMORIES, viewNameSchema } from "./charts/views.js";
+
+export const chartMemorySchema = v.object({
+  view: viewNameSchema,
+  /** The mechanism and the robot that were shown. */
+  mechanism: v.nullable(v.string()),
+  robot: v.nullable(v.string()),
+  /** Null until someone opens or closes the table. */
+  tableOpen: v.nullable(v.boolean()),
+  views: memoriesSchema,
+});
+
+export type ChartMemory = v.InferOutput<typeof chartMemorySchema>;
+
+export const NO_MEMORY: ChartMemory = {
+  view: "operating-point",
+  mechanism: null,
+  robot: null,
+  tableOpen: null,
+  views: NO_MEMORIES,
+};

@@ -1,0 +1,26 @@
+/**
+ * The views of the chart panel: for each what the page asks for, what it is shown and what it remembers.
+ *
+ * A new view adds its file beside this one and a line to each table here; the compiler then asks for the rest.
+ */
+import * as v from "valibot";
+import { NO_OPERATING_POINT_MEMORY, operatingPointMemory, operatingPointShown, operatingPointWant } from "./operatingPoint.js";
+
+/** In the order of their tabs. */
+export const VIEW_NAMES = ["operating-point"] as const;
+
+export const viewNameSchema = v.picklist(VIEW_NAMES);
+
+export const wantSchema = v.variant("view", [operatingPointWant]);
+
+export const shownSchema = v.variant("view", [operatingPointShown]);
+
+export const memoriesSchema = v.object({ "operating-point": operatingPointMemory });
+
+export const NO_MEMORIES: v.InferOutput<typeof memoriesSchema> = { "operating-point": NO_OPERATING_POINT_MEMORY };
+
+export type ViewName = v.InferOutput<typeof viewNameSchema>;
+/** What the page asks for: a view, and what it wants to see of it. */
+export type Want = v.InferOutput<typeof wantSchema>;
+export type ShownChart<V extends ViewName = ViewName> = Extract<v.InferOutput<typeof shownSchema>, { view: V }>;
+export type ViewMemory<V extends ViewName = ViewName> = v.InferOutput<typeof memoriesSchema>[V];

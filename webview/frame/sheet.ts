@@ -1,0 +1,93 @@
+/**
+ * All that the page shows of one answer, as each view gives it: words, facts, plots, the read-out at each abscissa, and the table.
+ *
+ * The frame does the same with every sheet: cursor, keys, table, files. Sheets hold text for people and no element of the page.
+ */
+import type { ChartFinding } from "../../extension/protocol/charts/parts.js";
+import type { Theme } from "../theme/theme.js";
+
+export interface Sheet {
+  /** The name of what it is about; text from people's code. */
+  readonly title: string;
+  readonly state: "error" | "warning" | "fine" | "unknown";
+  readonly verdict: string;
+  /** Short remarks beside the verdict. */
+  readonly notes: readonly string[];
+  readonly facts: readonly Fact[];
+  readonly findings: readonly ChartFinding[];
+  readonly assumed: readonly string[];
+  readonly notChecked: readonly string[];
+  readonly plots: readonly PlotPart[];
+  /** What lies across, for the cursor's own name: "Torque". */
+  readonly across: string;
+  /** Where the cursor can stand, rising, SI. */
+  readonly stops: readonly number[];
+  /** Where the read-out stands, and the cursor at its first step; SI. */
+  readonly restsAt: number;
+  readonly readAt: (stop: number) => ReadOut;
+  /** For people: some rows, numbers as they are written. */
+  readonly table: () => Table;
+  /** For programs: all rows, each number with ten digits. */
+  readonly file: () => Table;
+  /** A line below the picture that is saved. */
+  readonly footnote: string;
+}
+
+export interface Fact {
+  readonly name: string;
+  readonly now: string;
+  /** Of the saved result; null where it reads the same. */
+  readonly was: string | null;
+}
+
+/** All values at one abscissa. */
+export interface ReadOut {
+  /** "0.525 N·m, 40 % of stall" */
+  readonly at: string;
+  /** What the place is known for; may be empty. */
+  readonly names: string;
+  readonly head: readonly string[];
+  readonly rows: readonly { readonly name: string; readonly cells: readonly string[] }[];
+  /** The same in a sentence, for those who hear it. */
+  readonly spoken: string;
+}
+
+export interface Table {
+  readonly caption: string;
+  readonly head: readonly string[];
+  readonly rows: readonly (readonly string[])[];
+}
+
+/** One plot of a sheet, and how it is described to those who do not see it. */
+export interface PlotPart {
+  /** Of the plot on the page, px. */
+  readonly height: number;
+  readonly words: string;
+  readonly create: (canvas: HTMLCanvasElement, options: PlotOptions) => Plot;
+}
+
+export interface PlotOptions {
+  /** Device pixels per px. Where absent the plot follows the size of what it stands in. */
+  readonly pixelRatio?: number;
+}
+
+export interface Plot {
+  draw(theme: Theme): void;
+  /** By index of the stop; null takes it away. */
+  setCursor(stop: number | null): void;
+  /** Abscissa at a distance from the canvas's left edge, SI. */
+  at(px: number): number;
+  destroy(): void;
+}
+
+/** What was, beside what is; only where it reads differently. */
+export function factsBeside(
+  now: readonly (readonly [name: string, text: string])[],
+  saved: readonly (readonly [name: string, text: string])[],
+): readonly Fact[] {
+  const before = new Map(saved);
+  return now.map(([name, text]) => {
+    const was = before.get(name) ?? null;
+    return { name, now: text, was: was === text ? null : was };
+  });
+}

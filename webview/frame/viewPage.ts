@@ -1,0 +1,160 @@
+/**
+ * One view's page: shows each answer by the view's sheet, and turns keys, mouse and buttons into changes of what is remembered.
+ *
+ * Computes no number; sheets know what they say, and plots how they look.
+ */
+import type { ChartAnswer } from "../../extension/protocol/chartMessages.js";
+import type { ShownChart, ViewMemory, ViewName } from "../../extension/protocol/charts/views.js";
+import { fileNameOf } from "../fileName.js";
+import type { Host } from "../host.js";
+import { showDataTable } from "../page/dataTable.js";
+import { setShown, setText } from "../page/element.js";
+import { showEmpty } from "../page/emptyText.js";
+import { showFacts } from "../page/facts.js";
+import { showReadout } from "../page/readout.js";
+import { showFindings, showSentences } from "../page/remarks.js";
+import { readTheme } from "../theme/theme.js";
+import type { View } from "../views/view.js";
+import { csvOf } from "./csv.js";
+import { cursorAfterKey, nearestStop } from "./cursorKeys.js";
+import { buildLayout } from "./layout.js";
+import { drawPicture } from "./picture.js";
+import { createPlotRow } from "./plotRow.js";
+import type { Sheet } from "./sheet.js";
+
+/** What the page as a whole does for one of its views. */
+export interface ViewSurroundings<V extends ViewName> {
+  readonly host: Host;
+  readonly withReader: boolean;
+  readonly memory: () => ViewMemory<V>;
+  readonly remember: (change: Partial<ViewMemory<V>>) => void;
+  readonly tableOpen: () => boolean | null;
+  readonly openTable: (open: boolean) => void;
+}
+
+export interface ViewPage<V extends ViewName> {
+  readonly panel: HTMLElement;
+  show(answer: ChartAnswer & { readonly view: V }): void;
+  /** After a change of what is remembered. */
+  update(): void;
+  /** Draws again in the colours and for the pixels of now. */
+  redraw(): void;
+}
+
+export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSurroundings<V>): ViewPage<V> {
+  const { host, withReader } = around;
+  const parts = buildLayout(view.name, view.title, withReader);
+  const plots = createPlotRow(parts.plots);
+  let shown: ShownChart<V> | undefined;
+  let sheet: Sheet | undefined;
+  setShown(parts.content, false);
+  setShown(parts.empty, false);
+
+  const setCursor = (cursor: number | null): void => around.remember({ cursor } as Partial<ViewMemory<V>>);
+
+  const redraw = (): void => {
+    if (sheet === undefined) return;
+    plots.draw(readTheme(document.body));
+    showCursor(sheet);
+  };
+
+  const showCursor = ({ stops, restsAt, readAt }: Sheet): void => {
+    const { cursor } = around.memory();
+    const stop = nearestStop(stops, cursor ?? restsAt);
+    if (stop < 0) return;
+    const read = readAt(stop);
+    plots.setCursor(cursor === null ? null : stop);
+    showReadout(parts.readout, read);
+    setText(parts.spoken, cursor === null ? "" : read.spoken);
+    parts.plots.setAttribute("aria-valuemin", "0");
+    parts.plots.setAttribute("aria-valuemax", String(stops.length - 1));
+    parts.plots.setAttribute("aria-valuenow", String(stop));
+    parts.plots.setAttribute("aria-valuetext", read.at);
+  };
+
+  const showTable = (): void => {
+    const open = around.tableOpen() ?? withReader;
+    setShown(parts.tableBox, open);
+    parts.tableButton.setAttribute("aria-expanded", String(open));
+    setText(parts.tableButton, open ? "Hide table" : "Show table");
+    if (open && sheet !== undefined) showDataTable(parts.table, sheet.table());
+  };
+
+  const showSheet = (next: Sheet, old: string | null): void => {
+    sheet = next;
+    setText(parts.title, sheet.title);
+    setText(parts.verdict, sheet.verdict);
+    parts.verdict.dataset.state = sheet.state;
+    setText(parts.old, old ?? "");
+    setShown(parts.old, old !== null);
+    setText(parts.notes, sheet.notes.join(" "));
+    setShown(parts.notes, sheet.notes.length > 0);
+    showFindings(parts.findings, sheet.findings);
+    showFacts(parts.facts, sheet.facts);
+    showSentences(parts.assumed, "Assumed", sheet.assumed);
+    showSentences(parts.notChecked, "Not checked", sheet.notChecked);
+    parts.plots.setAttribute("aria-label", `${sheet.across} of the read-out`);
+    setShown(parts.content, true);
+    plots.show(sheet.plots);
+    redraw();
+    showTable();
+  };
+
+  const update = (): void => {
+    if (shown !== undefined) showSheet(view.sheet(shown, around.memory()), shown.old);
+  };
+
+  const savePicture = (): void => {
+    if (sheet === undefined || shown === undefined) return;
+    const base64 = drawPicture(sheet, shown.old !== null, readTheme(document.body));
+    const fileName = fileNameOf(sheet.title, view.name, "png");
+    if (base64 !== undefined) host.send({ type: "savePicture", fileName, base64 });
+    else host.send({ type: "trouble", what: "The canvas gave no picture." });
+  };
+
+  const saveTable = (): void => {
+    if (sheet === undefined) return;
+    host.send({ type: "saveTable", fileName: fileNameOf(sheet.title, view.name, "csv"), csv: csvOf(sheet.file()) });
+  };
+
+  parts.plots.addEventListener("keydown", (event) => {
+    if (sheet === undefined || event.altKey || event.ctrlKey || event.metaKey) return;
+    const cursor = cursorAfterKey(event.key, around.memory().cursor, sheet.stops, sheet.restsAt);
+    if (cursor === undefined) return;
+    event.preventDefault();
+    setCursor(cursor);
+    showCursor(sheet);
+  });
+  const placeAt = (event: PointerEvent): void => {
+    const wanted = plots.at(event.clientX);
+    const stop = sheet === undefined || wanted === undefined ? undefined : sheet.stops[nearestStop(sheet.stops, wanted)];
+    if (sheet === undefined || stop === undefined) return;
+    setCursor(stop);
+    showCursor(sheet);
+  };
+  parts.plots.addEventListener("pointermove", placeAt);
+  parts.plots.addEventListener("pointerdown", placeAt);
+  parts.tableButton.addEventListener("click", () => {
+    around.openTable(Boolean(parts.tableBox.hidden));
+    showTable();
+  });
+  parts.pictureButton.addEventListener("click", savePicture);
+  parts.csvButton.addEventListener("click", saveTable);
+
+  return {
+    panel: parts.panel,
+    redraw,
+    update,
+    show(answer) {
+      setShown(parts.empty, answer.kind === "nothing");
+      if (answer.kind === "chart") {
+        // The answer is of this view, which the compiler does not see through a type parameter.
+        shown = answer as unknown as ShownChart<V>;
+        return update();
+      }
+      [shown, sheet] = [undefined, undefined];
+      setShown(parts.content, false);
+      showEmpty(parts.emptyText, answer);
+    },
+  };
+}

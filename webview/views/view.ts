@@ -1,0 +1,14 @@
+/** What the frame needs of a view. Everything else about it is the view's own. */
+import type { ShownChart, ViewMemory, ViewName, Want } from "../../extension/protocol/charts/views.js";
+import type { Sheet } from "../frame/sheet.js";
+
+export interface View<V extends ViewName> {
+  readonly name: V;
+  /** On its tab. */
+  readonly title: string;
+  /** What the page asks for, after what it remembers. */
+  want(memory: ViewMemory<V>): Want;
+  /** Names of what is shown: a cursor of one means nothing on another. */
+  subject(shown: ShownChart<V>): { readonly mechanism?: string; readonly robot?: string };
+  sheet(shown: ShownChart<V>, memory: ViewMemory<V>): Sheet;
+}
