@@ -10,7 +10,7 @@ import type { DefinitionCall, FileEvaluation, Snapshot, Span } from "../evaluato
 import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
 import type { RobotDrive } from "../model/robotDrive.js";
-import type { RobotNumbers } from "../model/robotSolution.js";
+import type { RobotNumbers, RobotSolution } from "../model/robotSolution.js";
 import type { Level, RuleId } from "../rules/rule.js";
 
 export interface Finding {
@@ -18,6 +18,8 @@ export interface Finding {
   readonly level: Level;
   /** Name of the mechanism that it is about, or `null`. */
   readonly mechanism: string | null;
+  /** Of a finding about a robot: which one, and what of it, as its rule tells them apart. */
+  readonly robot?: { readonly name: string; readonly subject: string };
   readonly message: string;
   readonly at: Span;
   readonly related: readonly { readonly at: Span; readonly message: string }[];
@@ -55,6 +57,8 @@ export interface AnalysedRobot {
   readonly drive?: RobotDrive;
   /** Absent without a load cycle, or where its physics could not be run; `notChecked` then says why. */
   readonly numbers?: RobotNumbers;
+  /** The run behind the numbers. */
+  readonly solution?: RobotSolution;
   /** Plain sentences. */
   readonly assumed: readonly string[];
   readonly notChecked: readonly string[];

@@ -43,6 +43,7 @@ export function createRobotJudge(): (declared: Declared, judged: Judged) => Judg
         ...robot,
         drive: model.drive,
         numbers: solution.numbers,
+        solution,
         assumed: tellAssumed(solution, hasRanges(robot.call)),
         notChecked: [...notChecked, ...tellUnresolved(solution)],
       };
@@ -83,7 +84,7 @@ function findingsOf(robot: DeclaredRobot, model: RobotModel, solution: RobotSolu
 }
 
 function toFinding(
-  { at, call }: DeclaredRobot,
+  { name, at, call }: DeclaredRobot,
   rule: RobotRule,
   verdict: RobotVerdict,
   places: readonly (Span | undefined)[],
@@ -96,6 +97,7 @@ function toFinding(
     rule: rule.id,
     level: verdict.level ?? rule.level,
     mechanism: null,
+    robot: { name, subject: verdict.subject },
     message: verdict.message,
     at,
     related: [...mechanisms, ...comesFrom(call, verdict.blames)],

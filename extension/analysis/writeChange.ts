@@ -45,7 +45,7 @@ function editsOf(call: DefinitionCall, setting: Setting, snapshot: Snapshot): Ed
 }
 
 /** The literal that the value comes from unchanged, else the expression at the use. Quotes stay as they are. */
-function writeOver(origin: Origin, written: string, snapshot: Snapshot): Edit {
+export function writeOver(origin: Origin, written: string, snapshot: Snapshot): Edit {
   const source = sourceOf(origin);
   const place = source.kind === "literal" ? source.span : origin.span;
   const quote = snapshot.read(place.file)?.[place.start];

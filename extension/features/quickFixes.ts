@@ -4,7 +4,7 @@
  * Edits only; nothing is applied here. Each is offered singly.
  */
 import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
-import type { Proposal } from "../analysis/propose.js";
+import type { Proposal } from "../analysis/proposal.js";
 import type { LocatedIssue, Span } from "../evaluator/value.js";
 import { sameSpan } from "./feeds.js";
 import { plainText } from "./inertText.js";

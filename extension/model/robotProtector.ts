@@ -22,6 +22,8 @@ export interface RobotProtector {
   /** θ, or damage at a fuse's slow and fast gate, of a shared one; a mechanism's own stands with the mechanism. */
   state: number;
   fast: number;
+  /** The greatest share of what opens it that it has borne. */
+  peak: number;
   count: number;
   mayOpenAtS: number | null;
   mayOpenA: number | null;
@@ -44,6 +46,7 @@ export function createProtector(
     closesAtS: Number.POSITIVE_INFINITY,
     state: 0,
     fast: 0,
+    peak: 0,
     count: 0,
     mayOpenAtS: null,
     mayOpenA: null,
@@ -86,6 +89,7 @@ export function close(protector: RobotProtector, runS: number): void {
     protector.openings[protector.openings.length - 1] = { ...last, closesAtS: runS };
 }
 
-export function historyOf({ mechanism, shared, openings, count, mayOpenAtS, mayOpenA }: RobotProtector): ProtectorHistory {
-  return { mechanism, shared, openings, count, mayOpenAtS, mayOpenA };
+export function historyOf(protector: RobotProtector): ProtectorHistory {
+  const { mechanism, shared, openings, count, peak, mayOpenAtS, mayOpenA } = protector;
+  return { mechanism, shared, openings, count, peakShare: count > 0 ? 1 : Math.min(peak, 1), mayOpenAtS, mayOpenA };
 }

@@ -180,6 +180,7 @@ function courseOf(run: RobotRun, system: RobotSystem, endS: number): Course {
     onStep: (fromS, toS, state, at) => {
       run.steps++;
       restFuses(system, state);
+      notePeaks(run, system, state);
       observer.stepped(system, stepStartS, fromS, toS, at);
     },
     onNote: (watch, timeS, state, rising) => {
@@ -200,6 +201,15 @@ function noteMayOpen(run: RobotRun, system: RobotSystem, event: RobotEvent, time
   protector.mayOpenAtS = run.stepStartS + timeS;
   protector.mayOpenA =
     event.kind === "protector" ? system.carriedBy(event.protector, "at") : event.unit.rates.carried(event.unit.at);
+}
+
+function notePeaks({ sharing }: RobotRun, system: RobotSystem, state: Float64Array): void {
+  for (const { unit, place } of system.seats) {
+    const at = place[unit.part.layout.protection];
+    const own = at === undefined ? undefined : sharing.own.find(({ mechanism }) => mechanism === unit.part.index);
+    if (own !== undefined && at !== undefined) own.peak = Math.max(own.peak, state[at] as number);
+  }
+  for (const { protector, state: at } of system.places.protectors) protector.peak = Math.max(protector.peak, state[at] as number);
 }
 
 /** Below its first gate a fuse forgets what it has borne. */

@@ -99,6 +99,8 @@ export interface ProtectorHistory {
   readonly shared: number | null;
   readonly openings: readonly Opening[];
   readonly count: number;
+  /** The most that it has borne, as a share of what opens it; seen at the ends of the solver's steps. A fuse's slow gate. */
+  readonly peakShare: number;
   /** A fuse's fast gate: it may open from here on; null: never. */
   readonly mayOpenAtS: number | null;
   /** A fuse's current then, A. */

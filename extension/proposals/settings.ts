@@ -1,5 +1,6 @@
 /** Other settings of a mechanism: more motors, a current limit, a lower command, more time; the smallest change first. */
 import type { Change, Situation } from "./change.js";
+import { roundDown, roundUp } from "./roundTo.js";
 
 /** Up to this many motors more: beyond, another motor is the better answer. */
 const MOST_MORE = 4;
@@ -15,7 +16,7 @@ export function moreMotors({ mechanism }: Situation): Change[] {
 /** From just below the current at stall down to a tenth of it. */
 export function currentLimits({ stall }: Situation): Change[] {
   return [0.9, 0.8, 0.7, 0.6, 0.5, 0.4, 0.3, 0.2, 0.1].map((share) => {
-    const value = `${twoDigits(stall.motorCurrentA * share, Math.floor)} A`;
+    const value = `${roundDown(stall.motorCurrentA * share)} A`;
     return { sets: [{ field: "motorCurrentLimit", value }], words: `a motor current limit of ${value}` };
   });
 }
@@ -32,11 +33,6 @@ export function lowerCommands({ drive }: Situation): Change[] {
 /** The time that the travel takes, rounded up. */
 export function moreTime({ travel }: Situation): Change[] {
   if (travel === null || travel.timeS === null) return [];
-  const value = `${twoDigits(travel.timeS * 1.02, Math.ceil)} s`;
+  const value = `${roundUp(travel.timeS * 1.02)} s`;
   return [{ sets: [{ field: "within", value }], words: `${value} for the travel` }];
-}
-
-function twoDigits(value: number, round: (value: number) => number): number {
-  const step = 10 ** (Math.floor(Math.log10(value)) - 1);
-  return Number((round(value / step) * step).toPrecision(2));
 }

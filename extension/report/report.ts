@@ -5,7 +5,7 @@
  * that the last bit of a platform's arithmetic never shows.
  */
 import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
-import type { Proposal } from "../analysis/propose.js";
+import type { Proposal } from "../analysis/proposal.js";
 import type { Sensitivity } from "../analysis/sensitivity.js";
 import { createLineFinder, type Place } from "./lines.js";
 
@@ -20,7 +20,9 @@ export interface Report {
 
 /** `edits` is empty where nothing in stock helps; the summary then tells the nearest miss. */
 export interface ReportedProposal {
-  readonly mechanism: string;
+  /** One of the two is null: a finding is about a mechanism or about a robot. */
+  readonly mechanism: string | null;
+  readonly robot: string | null;
   readonly rule: string;
   readonly summary: string;
   readonly predicted: Proposal["predicted"];
@@ -92,8 +94,9 @@ export function makeReport(analysis: Analysis, nameOf: (file: string) => string,
       ...(numbers === undefined ? NO_ROBOT_NUMBERS : roundNumbers(numbers)),
     })),
     findings: reportFindings(analysis, nameOf),
-    proposals: proposals.map(({ mechanism, rule, summary, predicted, touches, edits }) => ({
+    proposals: proposals.map(({ mechanism, robot, rule, summary, predicted, touches, edits }) => ({
       mechanism,
+      robot,
       rule,
       summary,
       predicted: roundNumbers(predicted),

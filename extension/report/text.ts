@@ -1,6 +1,6 @@
 /** The report for a terminal: findings first, then a table per mechanism, then the cautions. */
-import type { AnalysedMechanism, AnalysedRobot, Analysis } from "../analysis/analysis.js";
-import type { Proposal } from "../analysis/propose.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
+import type { Proposal } from "../analysis/proposal.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
 import { toInertText } from "./inert.js";
@@ -10,7 +10,7 @@ import { type ReportedFinding, reportFindings } from "./report.js";
 export function writeText(analysis: Analysis, nameOf: (file: string) => string, proposals: readonly Proposal[] = []): string {
   const findings = reportFindings(analysis, nameOf);
   const blocks = [
-    ...findings.map((finding) => writeFinding(finding, proposals)),
+    ...findings.map((finding, index) => writeFinding(finding, waysOut(proposals, analysis.findings[index]))),
     ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf)),
     ...analysis.robots.map((robot) => writeRobot(robot, nameOf)),
     writeSummary(findings, analysis.mechanisms.length),
@@ -21,16 +21,17 @@ export function writeText(analysis: Analysis, nameOf: (file: string) => string, 
 
 type Numbers = NonNullable<AnalysedMechanism["numbers"]>;
 
-function writeFinding(
-  { file, line, column, level, rule, mechanism, message, related }: ReportedFinding,
-  proposals: readonly Proposal[],
-): string {
+function writeFinding({ file, line, column, level, rule, message, related }: ReportedFinding, ways: string): string {
   const where = related.map((one) => `\n    ${one.file}:${one.line}:${one.column}  ${toInertText(one.message)}`).join("");
-  const ways = proposals
-    .filter((one) => one.rule === rule && one.mechanism === mechanism)
-    .map(({ summary }) => `\n    way out: ${toInertText(summary)}`)
-    .join("");
   return `${file}:${line}:${column}  ${level}  ${rule}\n    ${toInertText(message)}${where}${ways}`;
+}
+
+/** A nearest miss is no way out. */
+function waysOut(proposals: readonly Proposal[], finding: Finding | undefined): string {
+  return proposals
+    .filter((one) => one.finding === finding)
+    .map(({ summary, edits }) => `\n    ${edits.length === 0 ? "no way out" : "way out"}: ${toInertText(summary)}`)
+    .join("");
 }
 
 function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string): string {

@@ -22,6 +22,7 @@ function judge({ drive, solution, names }: RobotFacts): RobotVerdict[] {
         `Sags: the battery is empty ${lasts}${writeQuantity(emptyAtS, "time")} from the start; all of them take about ` +
         `${writeCharge(neededAh)}, and its capacity is ${writeCharge(capacityAh)}. Move less in each cycle, or change the battery in time; ` +
         `"${names[most]}" takes most.`,
+      subject: "charge",
       about: [{ mechanism: most, says: `"${names[most]}" takes most of the battery's energy.` }],
       blames: [["supply"], ["cycles"]],
     },

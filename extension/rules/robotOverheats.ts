@@ -17,6 +17,7 @@ function judge(facts: RobotFacts): RobotVerdict[] {
         message:
           `Overheats: in the load cycle the winding of "${names[mechanism]}" comes to ${writeCelsius(windingPeakC)}; its limit is ` +
           `${writeCelsius(limitC)}.${when} Rest longer between its moves, or lower its current with a higher ratio or less load. Hot windings burn.`,
+        subject: `winding of ${names[mechanism]}`,
         about: [{ mechanism, says: `"${names[mechanism]}" gets too hot.` }],
         blames: [["cycles"]],
       },

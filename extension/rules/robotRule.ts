@@ -19,6 +19,8 @@ export interface RobotFacts {
 /** The two numbers that it compares, with units, and one way out. */
 export interface RobotVerdict {
   readonly message: string;
+  /** What of the robot it judges: tells it from other verdicts of the same rule over the same robot. */
+  readonly subject: string;
   /** Mechanisms that it is about, each with what it has to do with it. */
   readonly about: readonly { readonly mechanism: number; readonly says: string }[];
   /** Fields of the robot's declaration that the message speaks of. */

@@ -8,6 +8,8 @@ export const robotSags: RobotRule = { id: "sags", level: "warning", judge };
 
 /** Currents below this share of the supply's are not worth a name. */
 const LEAST_SHARE = 0.02;
+/** A supply that breaks down is a deeper sag, not another finding. */
+const VOLTAGE = "voltage";
 
 function judge(facts: RobotFacts): RobotVerdict[] {
   const floor = facts.drive.supply.mustStayAbove;
@@ -33,6 +35,7 @@ function judge(facts: RobotFacts): RobotVerdict[] {
         `Sags: the supply falls to ${writeQuantity(worst.lowestV, "voltage")}, below its ${writeQuantity(floor.voltageV, "voltage")}, for ` +
         `${writeQuantity(worst.lastsS, "time")}${allowed}, ${tellMoment(facts.drive, worst.startS)}${often}, while it feeds ${names.join(", ")}. ` +
         `${wayOut}: up to ${writeQuantity(allowedA, "current")} in all instead of ${writeQuantity(sumA, "current")} it stays up.`,
+      subject: VOLTAGE,
       about: drawing.map(({ mechanism, amperes, moved }) => ({
         mechanism,
         says: `"${facts.names[mechanism]}" ${moved ? "moves" : "holds"} then, with ${writeQuantity(amperes, "current")} from the supply.`,
@@ -80,6 +83,7 @@ function collapse({ drive, solution, names, isTold }: RobotFacts): RobotVerdict[
         `Sags: ${tellMoment(drive, collapsesAtS)} the supply of ${writeQuantity(drive.supply.openCircuitV, "voltage")} cannot bring what ` +
         `is asked of it, with ${tellNames(names.filter((_, i) => isUsed(drive.steps, i)))} on it; it falls to ${writeQuantity(numbers.lowestVoltageV, "voltage")}. ` +
         "Let them move one after the other, or limit the current of one.",
+      subject: VOLTAGE,
       about: [],
       blames: [["supply"]],
     },

@@ -47,9 +47,10 @@ function mayOpen(facts: RobotFacts, history: ProtectorHistory, protection: Prote
   };
 }
 
-function placesOf(facts: RobotFacts, history: ProtectorHistory): Pick<RobotVerdict, "about" | "blames"> {
+function placesOf(facts: RobotFacts, history: ProtectorHistory): Pick<RobotVerdict, "subject" | "about" | "blames"> {
   const fed = fedBy(facts, history);
   return {
+    subject: subjectOf(facts, history),
     about: fed.map((mechanism) => ({ mechanism, says: `"${facts.names[mechanism]}" is fed through it.` })),
     blames: history.shared === null ? [] : [["shared", history.shared, "protect"]],
   };
@@ -58,6 +59,11 @@ function placesOf(facts: RobotFacts, history: ProtectorHistory): Pick<RobotVerdi
 function nameOf(facts: RobotFacts, { mechanism }: ProtectorHistory, protection: Protection): string {
   const told = tellProtection(protection);
   return mechanism === null ? told.replace("the ", "the shared ") : told.replace(" (", ` of "${facts.names[mechanism]}" (`);
+}
+
+/** Which protector: a shared one by its place in the list. */
+function subjectOf({ names }: RobotFacts, { mechanism, shared }: ProtectorHistory): string {
+  return mechanism === null ? `shared ${shared}` : `protection of ${names[mechanism]}`;
 }
 
 function protectionOf({ drive }: RobotFacts, { mechanism, shared }: ProtectorHistory): Protection | undefined {

@@ -3,7 +3,8 @@ import { assert, constantFrom, integer, property, record } from "fast-check";
 import ts from "typescript";
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
-import { type Proposal, proposalsFor } from "../../extension/analysis/propose.js";
+import type { Proposal } from "../../extension/analysis/proposal.js";
+import { proposalsFor } from "../../extension/analysis/propose.js";
 import { withEdits } from "../../extension/analysis/writeChange.js";
 import { analyseFixture, PRELUDE } from "../support/checkFindings.js";
 
@@ -45,7 +46,7 @@ describe("proposals", () => {
     );
     expect(proposals[0]?.edits).toHaveLength(1);
     expect(proposals.map(apply)).toEqual(proposals.map(() => []));
-    expect(proposals[0]?.predicted.stallShare).toBeCloseTo(4.903325 / 5 / 2, 9);
+    expect(proposals[0]?.predicted).toMatchObject({ stallShare: expect.closeTo(4.903325 / 5 / 2, 9) });
   });
 
   it("offer more motors beside it", () => {

@@ -10,7 +10,8 @@ import {
   type TextEdit,
 } from "vscode-languageserver";
 import type { Finding } from "../../analysis/analysis.js";
-import { type Proposal, proposalsFor } from "../../analysis/propose.js";
+import type { Proposal } from "../../analysis/proposal.js";
+import { proposalsFor } from "../../analysis/propose.js";
 import { type Edit, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
 import type { CurrentFile } from "../current.js";
 import { inLines } from "../diagnostics.js";

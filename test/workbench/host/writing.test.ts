@@ -56,6 +56,7 @@ describe("quick fixes", () => {
     const { proposals } = await reportOn(folder().fsPath);
     const [proposal] = proposals.filter(({ mechanism, rule }) => mechanism === "shelf lift" && rule === "past-peak");
     assert.equal(proposal?.edits[0]?.file, "gearing.ts");
+    assert.ok("stallShare" in proposal.predicted);
     const fixes = await fixesAt(document, past.range);
     const words = proposal.summary.split(":")[0] ?? "";
     const fix = fixes.find(({ title }) => title.startsWith(words));

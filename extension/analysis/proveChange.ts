@@ -1,0 +1,84 @@
+/**
+ * Whether edits of the texts clear a finding: the texts are analysed again with them, and nothing may newly come at its level.
+ *
+ * Mechanisms alone first, since a robot's load cycle takes longer; what passes there is run in full.
+ */
+import type { Analyser } from "./analyser.js";
+import type { AnalysedMechanism, Analysis, Finding } from "./analysis.js";
+import { differencesOf, predict } from "./predict.js";
+import type { Touched } from "./proposal.js";
+import { type Edit, withEdits } from "./writeChange.js";
+
+/** `undefined` where the edits do not help. `analyse`: as for proposals. */
+export function provenBy(
+  analysis: Analysis,
+  finding: Finding,
+  edits: readonly Edit[],
+  analyse: Analyser["analyse"],
+): Analysis | undefined {
+  const roots = [...analysis.files.keys()];
+  const texts = withEdits(analysis.snapshot, edits);
+  const before = analysis.findings;
+  const alone = analyse(roots, texts, true);
+  const runs = analysis.robots.some(({ numbers }) => numbers !== undefined);
+  // Without the robots' findings their allowances would count as unused.
+  const judged = runs ? alone.findings.filter(({ rule }) => rule !== "bad-declaration") : alone.findings;
+  if (isWorse(before, judged, finding)) return undefined;
+  if (!runs) return alone;
+  const after = analyse(roots, texts);
+  return isWorse(before, after.findings, finding) ? undefined : after;
+}
+
+/** The finding is still there, or another one newly at its level or above. */
+function isWorse(before: readonly Finding[], after: readonly Finding[], finding: Finding): boolean {
+  const ranks = new Map<string, number>();
+  for (const one of before) ranks.set(keyOf(one), Math.max(ranks.get(keyOf(one)) ?? 0, rankOf(one.level)));
+  const cleared = keyOf(finding);
+  return after.some((one) => {
+    const rank = rankOf(one.level);
+    return rank >= rankOf(finding.level) && (keyOf(one) === cleared || (ranks.get(keyOf(one)) ?? -1) < rank);
+  });
+}
+
+export function rankOf(level: Finding["level"]): number {
+  return ["information", "warning", "error"].indexOf(level);
+}
+
+/** Places move with edits: a finding is the same where its rule and what it is about are. */
+function keyOf({ rule, mechanism, robot, at }: Finding): string {
+  return JSON.stringify([rule, mechanism ?? [at.file, robot]]);
+}
+
+/** A mechanism whose numbers an edit changed. */
+export interface Changed extends Touched {
+  /** Its name, with how its numbers change. */
+  readonly told: string;
+}
+
+/** Every mechanism whose numbers the edits changed but `except`. */
+export function changedBy(before: Analysis, after: Analysis, except: string | null): Changed[] {
+  return after.mechanisms.flatMap((one): Changed[] => {
+    const was = before.mechanisms.find(({ name }) => name === one.name);
+    if (one.name === except || !hasNumbers(one) || was === undefined || !hasNumbers(was)) return [];
+    if (JSON.stringify(one.numbers) === JSON.stringify(was.numbers)) return [];
+    const predicted = predict(one.numbers, one.drive);
+    const differences = differencesOf(predict(was.numbers, was.drive), predicted);
+    const numbers = differences.map(({ now, before: old }) => (old === undefined ? now : `${now} instead of ${old}`));
+    return [
+      {
+        mechanism: one.name,
+        predicted,
+        told: numbers.length === 0 ? one.name : `${one.name} (${numbers.slice(0, MOST_TOLD).join(", ")})`,
+      },
+    ];
+  });
+}
+
+/** Numbers told of each mechanism that is touched beside; the report holds all. */
+const MOST_TOLD = 2;
+
+export function hasNumbers(
+  one: AnalysedMechanism,
+): one is AnalysedMechanism & Required<Pick<AnalysedMechanism, "numbers" | "drive">> {
+  return one.numbers !== undefined && one.drive !== undefined;
+}
