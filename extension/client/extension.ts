@@ -10,6 +10,7 @@ import type { ClientParts } from "./clientOptions.js";
 import { LINKED_COMMANDS, registerCommands } from "./commands.js";
 import { usesDeclarations } from "./gate.js";
 import { gateWorkspace, onGateMayOpen } from "./gateWorkspace.js";
+import { shareCommits } from "./gitCommits.js";
 import { createMechanismsView } from "./mechanismsView.js";
 import { Server } from "./server.js";
 import { createStatusItem } from "./statusItem.js";
@@ -29,6 +30,7 @@ export function activateWith(context: vscode.ExtensionContext, makeHostClient: M
     log,
     server,
     registerCommands(server, log),
+    shareCommits(server, log),
     registerChart({ extensionUri: context.extensionUri, server, log }),
     createMechanismsView(server),
     createStatusItem(server),

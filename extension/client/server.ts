@@ -18,6 +18,8 @@ export class Server implements vscode.Disposable {
   readonly #stateChanged = new vscode.EventEmitter<State>();
   readonly #chartMayDiffer = new vscode.EventEmitter<void>();
   #state = NO_STATE;
+  /** What the server may ask, by method. */
+  readonly #answers = new Map<string, (message: unknown) => Promise<unknown>>();
   #client: BaseLanguageClient | undefined;
   /** Starting and stopping happen one after the other. */
   #queue: Promise<void> = Promise.resolve();
@@ -67,6 +69,16 @@ export class Server implements vscode.Disposable {
     this.#chartMayDiffer.dispose();
   }
 
+  /** Answers the server's requests, each server's that is started from here on. */
+  answer(method: string, handler: (message: unknown) => Promise<unknown>): void {
+    this.#answers.set(method, handler);
+  }
+
+  /** Nothing while there is no server: one that starts knows nothing yet. */
+  tell(method: string): void {
+    if (this.#client?.isRunning()) void this.#client.sendNotification(method);
+  }
+
   async findPlace(query: PlaceQuery): Promise<Place | undefined> {
     return readMessage(placeSchema, await this.#client?.sendRequest(FIND_PLACE, query));
   }
@@ -87,6 +99,7 @@ export class Server implements vscode.Disposable {
       else this.#setState(state);
     });
     client.onNotification(CHART_MAY_DIFFER, () => this.#chartMayDiffer.fire());
+    for (const [method, handler] of this.#answers) client.onRequest(method, handler);
     this.#client = client;
     await client.start();
   }

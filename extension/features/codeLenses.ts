@@ -8,6 +8,7 @@ import type { Span } from "../evaluator/value.js";
 import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
 import { outputShaftOf } from "./shaft.js";
+import { type Committed, movedSince, NO_COMMIT } from "./sinceCommit.js";
 import { verdictOf } from "./verdict.js";
 
 export interface CodeLens {
@@ -18,13 +19,16 @@ export interface CodeLens {
   readonly mechanism: string;
 }
 
-export function codeLensesOf(analysis: Analysis, file: string): CodeLens[] {
+/** `committed`: what the last commit has; its changes stand at the end of a title. */
+export function codeLensesOf(analysis: Analysis, file: string, committed: Committed = NO_COMMIT): CodeLens[] {
   const here = analysis.mechanisms.filter(({ at }) => at.file === file);
   const counts = new Map<number, number>();
   for (const { at } of here) counts.set(at.start, (counts.get(at.start) ?? 0) + 1);
   return here.map((mechanism) => {
     const isAlone = counts.get(mechanism.at.start) === 1;
-    const title = titleOf(analysis, mechanism);
+    const [moved] = movedSince(committed, mechanism);
+    const own = titleOf(analysis, mechanism);
+    const title = moved === undefined ? own : `${own} · ${moved} since the last commit`;
     return { span: mechanism.at, title: isAlone ? title : `${plainText(mechanism.name)}: ${title}`, mechanism: mechanism.name };
   });
 }

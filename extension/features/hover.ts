@@ -6,6 +6,7 @@ import { describeLoad } from "./hovers/load.js";
 import { describeMechanisms } from "./hovers/mechanism.js";
 import { describeMotor } from "./hovers/motor.js";
 import { describeStage } from "./hovers/stage.js";
+import { type Committed, NO_COMMIT } from "./sinceCommit.js";
 import { type Subject, subjectAt } from "./subject.js";
 import type { Analyse } from "./variant.js";
 
@@ -15,19 +16,30 @@ export interface Hover {
   readonly markdown: string;
 }
 
-/** `analyse`: how the analysis was made, to ask what another value would do. */
-export function hoverAt(analysis: Analysis, file: string, offset: number, analyse: Analyse): Hover | undefined {
+/** `analyse`: how the analysis was made, to ask what another value would do. `committed`: what the last commit has. */
+export function hoverAt(
+  analysis: Analysis,
+  file: string,
+  offset: number,
+  analyse: Analyse,
+  committed: Committed = NO_COMMIT,
+): Hover | undefined {
   const subject = subjectAt(analysis, file, offset);
-  const markdown = subject && describe(analysis, subject, analyse);
+  const markdown = subject && describe(analysis, subject, { analyse, committed });
   return subject && markdown !== undefined ? { span: subject.span, markdown } : undefined;
 }
 
-function describe(analysis: Analysis, subject: Subject, analyse: Analyse): string | undefined {
+interface Asking {
+  readonly analyse: Analyse;
+  readonly committed: Committed;
+}
+
+function describe(analysis: Analysis, subject: Subject, { analyse, committed }: Asking): string | undefined {
   switch (subject.kind) {
     case "mechanism":
-      return describeMechanisms(analysis, subject.mechanisms);
+      return describeMechanisms(analysis, subject.mechanisms, committed);
     case "constant":
-      return describeConstant(analysis, subject.constant, analyse);
+      return describeConstant(analysis, subject.constant, analyse, committed);
     case "built":
       return describeBuilt(analysis, subject.call);
   }

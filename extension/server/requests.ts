@@ -5,6 +5,7 @@
  */
 import type { ClientCapabilities, Connection } from "vscode-languageserver";
 import { CHART, chartQuestionSchema } from "../protocol/chartMessages.js";
+import { COMMIT_MOVED } from "../protocol/committed.js";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { ChartAnswers } from "./answers/chart.js";
@@ -15,6 +16,7 @@ import { answerFindPlace } from "./answers/findPlace.js";
 import { answerHover } from "./answers/hover.js";
 import { answerInlayHints, type HintsOf } from "./answers/inlayHints.js";
 import { answerWorkspaceSymbols } from "./answers/workspaceSymbols.js";
+import type { CommittedMechanisms } from "./committed.js";
 import { type CurrentFile, currentFile } from "./current.js";
 import type { DisplaySettingsReader } from "./displaySettings.js";
 import { keyOf } from "./fileKeys.js";
@@ -29,6 +31,7 @@ export interface RequestParts {
   readonly settings: DisplaySettingsReader;
   readonly hintsOf: HintsOf;
   readonly capabilities: ClientCapabilities;
+  readonly committed: CommittedMechanisms;
   /** Commands that the client has. */
   readonly commands: readonly string[];
 }
@@ -36,7 +39,16 @@ export interface RequestParts {
 /** How long an answer may wait for the first result, or for that of an edit just made. */
 const PATIENCE_MS = 2000;
 
-export function answerRequests({ connection, guard, session, settings, hintsOf, capabilities, commands }: RequestParts): void {
+export function answerRequests({
+  connection,
+  guard,
+  session,
+  settings,
+  hintsOf,
+  capabilities,
+  committed,
+  commands,
+}: RequestParts): void {
   const { texts } = session;
   const lastOf = (uri: string): CurrentFile | undefined => session.result && currentFile(texts, session.result, keyOf(uri));
   /** Whatever is known of the file; waits only when that is nothing. */
@@ -54,7 +66,7 @@ export function answerRequests({ connection, guard, session, settings, hintsOf, 
   connection.onHover(
     guard.answer("A hover", null, async ({ textDocument, position }) => {
       const current = await newestOf(textDocument.uri);
-      return current ? answerHover(current, position, commands) : null;
+      return current ? answerHover(current, position, commands, committed) : null;
     }),
   );
   connection.languages.inlayHint.on(
@@ -70,7 +82,9 @@ export function answerRequests({ connection, guard, session, settings, hintsOf, 
     }),
   );
   connection.onCodeLensResolve((lens) =>
-    guard.answer("A code lens", lens, () => (session.result ? resolveCodeLens(session.result, lens, commands) : lens))(),
+    guard.answer("A code lens", lens, () =>
+      session.result ? resolveCodeLens(session.result, lens, commands, committed.of(session.result)) : lens,
+    )(),
   );
   connection.onCompletion(
     guard.answer("Completions", [], async ({ textDocument, position }) => {
@@ -103,6 +117,10 @@ export function answerRequests({ connection, guard, session, settings, hintsOf, 
       const result = question && (await session.whenCurrent(PATIENCE_MS));
       return question && result ? charts.answer(result, question) : null;
     }),
+  );
+  connection.onNotification(
+    COMMIT_MOVED,
+    guard.act("Following commits", () => committed.moved()),
   );
   connection.onRequest(
     FIND_PLACE,

@@ -4,6 +4,7 @@
  * What the surfaces say is built elsewhere; this decides what is sent.
  */
 import type { ClientCapabilities, Connection } from "vscode-languageserver";
+import type { Committed } from "../features/sinceCommit.js";
 import { CHART_MAY_DIFFER } from "../protocol/chartMessages.js";
 import { NO_STATE, STATE } from "../protocol/state.js";
 import { changesCodeLenses } from "./answers/codeLenses.js";
@@ -20,6 +21,8 @@ export interface ResultsParts {
   readonly connection: Connection;
   readonly capabilities: ClientCapabilities;
   readonly hintsOf: HintsOf;
+  /** What is known of the last commit. */
+  readonly committedOf: (result: Result) => Committed;
   readonly report: Report;
 }
 
@@ -27,9 +30,11 @@ export interface Results {
   show(texts: Texts, result: Result): void;
   /** Asks for hints and lenses anew, as after changed settings. */
   refresh(): void;
+  /** The same for lenses alone. */
+  refreshLenses(): void;
 }
 
-export function showResults({ connection, capabilities, hintsOf, report }: ResultsParts): Results {
+export function showResults({ connection, capabilities, hintsOf, committedOf, report }: ResultsParts): Results {
   const publisher = new Publisher((params) => void connection.sendDiagnostics(params));
   const canRefreshHints = capabilities.workspace?.inlayHint?.refreshSupport === true;
   const canRefreshLenses = capabilities.workspace?.codeLens?.refreshSupport === true;
@@ -70,7 +75,7 @@ export function showResults({ connection, capabilities, hintsOf, report }: Resul
         if (texts.openKeys().some((file) => changesInlayHints(hintsOf, before(file), result, file))) refreshHints();
       });
       attempt("Comparing lenses", () => {
-        if (texts.openKeys().some((file) => changesCodeLenses(before(file), result, file))) refreshLenses();
+        if (texts.openKeys().some((file) => changesCodeLenses(before(file), result, file, committedOf))) refreshLenses();
       });
       shown = result;
       const { files, mechanisms, findings } = result.analysis;
@@ -80,6 +85,7 @@ export function showResults({ connection, capabilities, hintsOf, report }: Resul
       refreshHints();
       refreshLenses();
     },
+    refreshLenses,
   };
 }
 

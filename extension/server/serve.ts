@@ -10,7 +10,10 @@ import {
   type InitializeResult,
   TextDocumentSyncKind,
 } from "vscode-languageserver";
+import { committedAnswerSchema, READ_COMMITTED } from "../protocol/committed.js";
+import { readMessage } from "../protocol/readMessage.js";
 import { createHintReader } from "./answers/inlayHints.js";
+import { CommittedMechanisms } from "./committed.js";
 import type { FileHost } from "./discovery.js";
 import { DisplaySettingsReader } from "./displaySettings.js";
 import type { Engine } from "./engine.js";
@@ -34,10 +37,24 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
     const settings = new DisplaySettingsReader(connection, params.capabilities.workspace?.configuration === true);
     const { capabilities } = params;
     const hintsOf = createHintReader();
-    const results = showResults({ connection, capabilities, hintsOf, report });
+    const committed: CommittedMechanisms = new CommittedMechanisms({
+      ask: async (uris) => readMessage(committedAnswerSchema, await connection.sendRequest(READ_COMMITTED, { uris })) ?? null,
+      uriOf: (file) => session.texts.uriOf(file),
+      whenQuiet: () => session.whenCurrent(QUIET_PATIENCE_MS),
+      onMore: () => results.refreshLenses(),
+      // A client that knows no commits does not know the question.
+      onError: (what, error) => connection.console.debug(`${what}: ${describeError(error)}`),
+    });
+    const results = showResults({
+      connection,
+      capabilities,
+      hintsOf,
+      committedOf: (result) => committed.knownOf(result),
+      report,
+    });
     const session = new Session({ host, loadEngine, onResult: (result) => results.show(session.texts, result), onError: report });
     followTexts(connection, guard, session, settings);
-    answerRequests({ connection, guard, session, settings, hintsOf, capabilities, commands: commandsOf(params) });
+    answerRequests({ connection, guard, session, settings, hintsOf, capabilities, committed, commands: commandsOf(params) });
     connection.onDidChangeConfiguration(
       guard.act("Reading changed settings", () => {
         settings.forget();
@@ -50,6 +67,9 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
   });
   connection.listen();
 }
+
+/** The last commit is looked at once typing has stopped for a while, or after this time. */
+const QUIET_PATIENCE_MS = 10_000;
 
 const CAPABILITIES: InitializeResult = {
   serverInfo: { name: "Loadmark" },

@@ -9,6 +9,7 @@ import { feedsOf, keyOf, type Leaf, originsOf, sameSpan } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { chartLink } from "../links.js";
 import { outputShaftOf } from "../shaft.js";
+import { type Committed, movedSince } from "../sinceCommit.js";
 import { countedBy, stepsOf } from "../step.js";
 import type { Constant } from "../subject.js";
 import { type Analyse, variantOf } from "../variant.js";
@@ -23,7 +24,12 @@ const SHOWN = 3;
 const NAMED = 5;
 
 /** `undefined` for a text that is no quantity, such as the name of a magnet. */
-export function describeConstant(analysis: Analysis, constant: Constant, analyse: Analyse): string | undefined {
+export function describeConstant(
+  analysis: Analysis,
+  constant: Constant,
+  analyse: Analyse,
+  committed: Committed,
+): string | undefined {
   const { plain } = constant;
   if (typeof plain === "string" && quantityLine(plain) === undefined) return undefined;
   const fed = fedBy(analysis, constant);
@@ -37,9 +43,15 @@ export function describeConstant(analysis: Analysis, constant: Constant, analyse
     verdict: verdictOfAll(analysis, fed),
     lines: [title],
     table: withoutEmptyColumns(HEAD, rowsOf(analysis, constant, fed, shown, analyse)),
-    notes: more.length === 0 ? [] : [`Feeds ${others} too.`],
+    notes: [...shown.flatMap((one) => changesOf(committed, one)), ...(more.length === 0 ? [] : [`Feeds ${others} too.`])],
     links: charted === undefined ? [] : [chartLink(charted.name)],
   });
+}
+
+/** "hoist: current 1.9 → 2.7 A since the last commit"; none for what is new: the mechanism's own hover says that. */
+function changesOf(committed: Committed, mechanism: AnalysedMechanism): string[] {
+  const [first] = movedSince(committed, mechanism);
+  return first === undefined ? [] : [`${inertMarkdown(mechanism.name)}: ${first} since the last commit`];
 }
 
 const HEAD = ["at the hardest position", "output torque", "output speed", "current", "of stall", "travel"];

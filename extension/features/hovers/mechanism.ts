@@ -11,13 +11,18 @@ import { inertMarkdown } from "../inertText.js";
 import { chartLink, revealLink } from "../links.js";
 import { positionWords } from "../positionWords.js";
 import { outputShaftOf } from "../shaft.js";
+import { type Committed, sinceCommitLine } from "../sinceCommit.js";
 import { findingsAbout, verdictOf, worse } from "../verdict.js";
 import { type Table, writeBlock } from "./block.js";
 import { runLines } from "./runLines.js";
 import { sentences } from "./sentences.js";
 
 /** One piece of text may declare several mechanisms: the worst is described, the others named. */
-export function describeMechanisms(analysis: Analysis, mechanisms: readonly AnalysedMechanism[]): string | undefined {
+export function describeMechanisms(
+  analysis: Analysis,
+  mechanisms: readonly AnalysedMechanism[],
+  committed: Committed,
+): string | undefined {
   const states = mechanisms.map((one) => verdictOf(analysis, one).state);
   const mechanism = mechanisms[states.indexOf(states.reduce(worse, "fine"))];
   if (mechanism === undefined) return undefined;
@@ -26,10 +31,15 @@ export function describeMechanisms(analysis: Analysis, mechanisms: readonly Anal
     others.length === 0
       ? []
       : [`Declared by the same text: ${others.slice(0, 5).join(", ")}${others.length > 5 ? " and more" : ""}.`];
-  return describeMechanism(analysis, mechanism, shared);
+  return describeMechanism(analysis, mechanism, shared, sinceCommitLine(committed, mechanism));
 }
 
-function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, shared: readonly string[]): string {
+function describeMechanism(
+  analysis: Analysis,
+  mechanism: AnalysedMechanism,
+  shared: readonly string[],
+  sinceCommit: string | undefined,
+): string {
   const verdict = verdictOf(analysis, mechanism);
   const { drive } = mechanism;
   const { numbers } = mechanism;
@@ -44,6 +54,7 @@ function describeMechanism(analysis: Analysis, mechanism: AnalysedMechanism, sha
     lines: [
       `${name} · ${motorsOf(drive)} · ratio ${writeNumber(numbers.ratio)} · ${whereOf(drive, mechanism)}`,
       ...outputOf(mechanism),
+      ...(sinceCommit === undefined ? [] : [sinceCommit]),
     ],
     table: tableOf(drive, numbers),
     notes: [...runLines(drive, numbers), ...feedforwardOf(numbers), ...assumptions, ...shared, ...mostBy(analysis, mechanism)],

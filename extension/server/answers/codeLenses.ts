@@ -1,6 +1,7 @@
 /** Code lenses: places at once, titles when one comes into view, from the result of then. */
 import type { CodeLens } from "vscode-languageserver";
 import { codeLensesOf, type CodeLens as Lens } from "../../features/codeLenses.js";
+import type { Committed } from "../../features/sinceCommit.js";
 import { SHOW_CHART } from "../../protocol/commands.js";
 import type { CurrentFile } from "../current.js";
 import type { Result } from "../session.js";
@@ -23,21 +24,29 @@ export function answerCodeLenses({ result, file, lines, carry }: CurrentFile): C
 }
 
 /** `commands`: those that the client has. */
-export function resolveCodeLens(result: Result, lens: CodeLens, commands: readonly string[]): CodeLens {
+export function resolveCodeLens(result: Result, lens: CodeLens, commands: readonly string[], committed: Committed): CodeLens {
   const { file, mechanism, index } = lens.data as LensData;
-  const found = codeLensesOf(result.analysis, file).filter((one) => one.mechanism === mechanism)[index];
+  const found = codeLensesOf(result.analysis, file, committed).filter((one) => one.mechanism === mechanism)[index];
   const title = found?.title ?? mechanism;
   const opens = found !== undefined && commands.includes(SHOW_CHART);
   return { ...lens, command: opens ? { title, command: SHOW_CHART, arguments: [mechanism] } : { title, command: "" } };
 }
 
-/** True when `next` gives other lenses than those shown, which moved along with the text. */
-export function changesCodeLenses(shown: CurrentFile | undefined, next: Result, file: string): boolean {
+/** True when `next` gives other lenses than those shown, which moved along with the text. `committedOf`: what the last commit has. */
+export function changesCodeLenses(
+  shown: CurrentFile | undefined,
+  next: Result,
+  file: string,
+  committedOf: (result: Result) => Committed,
+): boolean {
   const before =
     shown === undefined
       ? []
-      : codeLensesOf(shown.result.analysis, file).map((lens) => ({ ...lens, span: shown.carry(lens.span) }));
-  return summary(before) !== summary(codeLensesOf(next.analysis, file));
+      : codeLensesOf(shown.result.analysis, file, committedOf(shown.result)).map((lens) => ({
+          ...lens,
+          span: shown.carry(lens.span),
+        }));
+  return summary(before) !== summary(codeLensesOf(next.analysis, file, committedOf(next)));
 }
 
 function summary(lenses: readonly Lens[]): string {
