@@ -35,6 +35,16 @@ const AT_ONCE = 6;
 export function shareCommits(server: Server, log: vscode.LogOutputChannel): vscode.Disposable {
   const listeners: vscode.Disposable[] = [];
   let git: Promise<Git | undefined> | undefined;
+  /** Switched on or off by the user's settings, it is another one, and its interface with it. */
+  const onEnablement = (event: vscode.Event<boolean>) => {
+    listeners.push(
+      event(() => {
+        git = undefined;
+        commits.clear();
+        server.tell(COMMIT_MOVED);
+      }),
+    );
+  };
   /** By repository, the commit that the server was told of. */
   const commits = new Map<Repository, string | undefined>();
   const follow = (repository: Repository) => {
@@ -50,7 +60,7 @@ export function shareCommits(server: Server, log: vscode.LogOutputChannel): vsco
     );
   };
   const load = async () => {
-    const found = await findGit(log);
+    const found = await findGit(log, onEnablement);
     if (found === undefined) return undefined;
     for (const repository of found.repositories) follow(repository);
     listeners.push(
@@ -79,11 +89,21 @@ export function shareCommits(server: Server, log: vscode.LogOutputChannel): vsco
   return { dispose: () => vscode.Disposable.from(...listeners).dispose() };
 }
 
-async function findGit(log: vscode.LogOutputChannel): Promise<Git | undefined> {
-  const extension = vscode.extensions.getExtension<{ readonly enabled: boolean; getAPI(version: 1): Git }>(EXTENSION);
+interface GitExtension {
+  readonly enabled: boolean;
+  readonly onDidChangeEnablement: vscode.Event<boolean>;
+  getAPI(version: 1): Git;
+}
+
+async function findGit(
+  log: vscode.LogOutputChannel,
+  onEnablement: (event: vscode.Event<boolean>) => void,
+): Promise<Git | undefined> {
+  const extension = vscode.extensions.getExtension<GitExtension>(EXTENSION);
   if (extension === undefined) return undefined;
   try {
     const exported = await extension.activate();
+    onEnablement(exported.onDidChangeEnablement);
     // Switched off in the settings it gives no interface.
     return exported.enabled ? exported.getAPI(1) : undefined;
   } catch (error) {
