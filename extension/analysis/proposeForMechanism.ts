@@ -147,7 +147,7 @@ function tellMiss({ mechanism, finding, facts }: Search, { change, facts: after 
     robot: null,
     rule: finding.rule,
     summary: `Nothing in stock clears it. Nearest: ${tellDifferences(change.words, differences)}`,
-    title: `Nearest in stock: ${tellBriefly(change.words, differences)}`,
+    title: `Nothing in stock clears it; nearest: ${tellBriefly(change.words, differences)}`,
     predicted: will,
     touches: [],
     edits: [],

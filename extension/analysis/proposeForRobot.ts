@@ -226,7 +226,7 @@ function tellMiss({ finding, analysed, one, before }: Search, { sets }: Tried): 
     robot: analysed.name,
     rule: finding.rule,
     summary: `No change of the load cycle or of one current clears it. Nearest: ${tellDifferences(words, differences)}`,
-    title: `Nearest: ${tellBriefly(words, differences)}`,
+    title: `Nothing clears it; nearest: ${tellBriefly(words, differences)}`,
     predicted: will,
     touches: [],
     edits: [],

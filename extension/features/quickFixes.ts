@@ -3,7 +3,7 @@
  *
  * Edits only; nothing is applied here. Each is offered singly.
  */
-import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
 import type { LocatedIssue, Span } from "../evaluator/value.js";
 import { sameSpan } from "./feeds.js";
@@ -14,6 +14,7 @@ export interface QuickFix {
   readonly finding: Finding;
   /** `propose`: changes the design, each singly; `allow`: silences instead of mending, hosts list it last. */
   readonly kind: "mend" | "propose" | "allow";
+  /** Empty for the nearest miss, which its title tells. */
   readonly edits: readonly Edit[];
   /** Stretch of the first edit's `newText` that the user is to replace, offsets within it. */
   readonly placeholder?: { readonly start: number; readonly end: number };
@@ -23,26 +24,32 @@ export interface Edit extends Span {
   readonly newText: string;
 }
 
-/** Fixes for the findings that touch the range: what was meant, then what `propose` finds, then allowances. */
+/** Findings that touch the range. */
+export function findingsTouching({ findings }: Analysis, file: string, start: number, end: number): readonly Finding[] {
+  return findings.filter(({ at }) => at.file === file && at.start <= end && start <= at.end);
+}
+
+/** Fixes for the findings that touch the range: what was meant, then what is proposed for them, then allowances. */
 export function quickFixesAt(
   analysis: Analysis,
   file: string,
   start: number,
   end: number,
-  propose: (finding: Finding) => readonly Proposal[] = () => [],
+  proposals: readonly Proposal[] = [],
 ): QuickFix[] {
-  const touched = analysis.findings.filter(({ at }) => at.file === file && at.start <= end && start <= at.end);
+  const touched = findingsTouching(analysis, file, start, end);
   const mending = touched.flatMap((finding) => mend(analysis, finding));
-  const proposed = touched.flatMap((finding) => propose(finding).flatMap((one) => proposedFix(finding, one)));
+  const proposed = touched.flatMap((finding) =>
+    proposals.filter((one) => one.finding === finding).map((one) => proposedFix(finding, one)),
+  );
   return [...mending, ...proposed, ...touched.flatMap((finding) => allow(analysis, finding))];
 }
 
 /** A menu's line: room for the numbers that a proposal predicts. */
 const LONGEST_TITLE = 110;
 
-/** A nearest miss has nothing to apply. */
-function proposedFix(finding: Finding, { title, edits }: Proposal): QuickFix[] {
-  return edits.length === 0 ? [] : [{ title: plainText(title, LONGEST_TITLE), finding, kind: "propose", edits }];
+function proposedFix(finding: Finding, { title, edits }: Proposal): QuickFix {
+  return { title: plainText(title, LONGEST_TITLE), finding, kind: "propose", edits };
 }
 
 /** The declarations' refusals end in the text that was meant. */
@@ -82,13 +89,10 @@ const WORD = /^[\p{ID_Start}$_][\p{ID_Continue}$]*$/u;
 const NOT_TO_ALLOW: ReadonlySet<Finding["rule"]> = new Set(["bad-declaration", "not-constant", "sheet-contradicts"]);
 
 function allow(analysis: Analysis, finding: Finding): QuickFix[] {
-  if (finding.mechanism === null || NOT_TO_ALLOW.has(finding.rule)) return [];
-  const mechanism =
-    analysis.mechanisms.find(({ name, at }) => name === finding.mechanism && sameSpan(at, finding.at)) ??
-    byName(analysis, finding);
-  const text = mechanism && analysis.snapshot.read(mechanism.call.span.file);
-  if (mechanism === undefined || typeof text !== "string") return [];
-  const { call } = mechanism;
+  const declared = finding.robot === undefined ? mechanismOf(analysis, finding) : robotOf(analysis, finding);
+  const text = declared && analysis.snapshot.read(declared.call.span.file);
+  if (NOT_TO_ALLOW.has(finding.rule) || declared === undefined || typeof text !== "string") return [];
+  const { call } = declared;
   const first = Math.min(call.binding?.span.start ?? call.span.start, call.span.start);
   const lineStart = text.lastIndexOf("\n", first - 1) + 1;
   const indent = /^[ \t]*/.exec(text.slice(lineStart))?.[0] ?? "";
@@ -96,7 +100,7 @@ function allow(analysis: Analysis, finding: Finding): QuickFix[] {
   const start = `${indent}// loadmark-allow ${finding.rule}: `;
   return [
     {
-      title: `Allow "${finding.rule}" for this mechanism`,
+      title: `Allow "${finding.rule}" for this ${finding.robot === undefined ? "mechanism" : "robot"}`,
       finding,
       kind: "allow",
       edits: [{ file: call.span.file, start: lineStart, end: lineStart, newText: `${start}${REASON}${lineBreak}` }],
@@ -107,6 +111,12 @@ function allow(analysis: Analysis, finding: Finding): QuickFix[] {
 
 const REASON = "reason";
 
-function byName({ mechanisms }: Analysis, { mechanism }: Finding): AnalysedMechanism | undefined {
-  return mechanisms.find(({ name }) => name === mechanism);
+function mechanismOf({ mechanisms }: Analysis, { mechanism, at }: Finding): AnalysedMechanism | undefined {
+  if (mechanism === null) return undefined;
+  const named = mechanisms.filter(({ name }) => name === mechanism);
+  return named.find((one) => sameSpan(one.at, at)) ?? named[0];
+}
+
+function robotOf({ robots }: Analysis, { at, robot }: Finding): AnalysedRobot | undefined {
+  return robots.find((one) => one.name === robot?.name && sameSpan(one.at, at));
 }

@@ -9,7 +9,7 @@ import { COMMIT_MOVED } from "../protocol/committed.js";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { ChartAnswers } from "./answers/chart.js";
-import { answerCodeActions, createProposer } from "./answers/codeActions.js";
+import { answerCodeActions } from "./answers/codeActions.js";
 import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
 import { answerCompletions, mayHoldUnit } from "./answers/completions.js";
 import { answerFindPlace } from "./answers/findPlace.js";
@@ -22,6 +22,7 @@ import type { DisplaySettingsReader } from "./displaySettings.js";
 import { keyOf } from "./fileKeys.js";
 import type { Guard } from "./guard.js";
 import { createLineMap } from "./lineMap.js";
+import { createProposer } from "./proposer.js";
 import type { Session } from "./session.js";
 
 export interface RequestParts {
@@ -95,11 +96,13 @@ export function answerRequests({
     }),
   );
   const canFillIn = capabilities.workspace?.workspaceEdit?.snippetEditSupport === true;
-  const propose = createProposer();
+  const propose = createProposer(() => session.moment);
   connection.onCodeAction(
     guard.answer("Quick fixes", [], async ({ textDocument, range, context }) => {
       const current = await newestOf(textDocument.uri);
-      return current ? answerCodeActions(current, range, { texts, canFillIn, propose, shown: context.diagnostics }) : [];
+      return current
+        ? answerCodeActions(current, range, { texts, canFillIn, propose, commands, shown: context.diagnostics })
+        : [];
     }),
   );
   connection.onWorkspaceSymbol(

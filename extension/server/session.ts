@@ -73,6 +73,11 @@ export class Session {
     return this.#result;
   }
 
+  /** Counts what happened to texts: another number than before means that long work is out of date. */
+  get moment(): number {
+    return this.#moment;
+  }
+
   /** Files on disk that mention the declarations. */
   get fileCount(): number {
     return this.#files.mentioning.size;

@@ -1,6 +1,9 @@
 /** Quick fixes, each applied to the text and analysed again: the finding that it names is gone. */
+import ts from "typescript";
 import { describe, expect, it } from "vitest";
-import { type QuickFix, quickFixesAt } from "../../extension/features/quickFixes.js";
+import { createAnalyser } from "../../extension/analysis/analyser.js";
+import { proposalsFor } from "../../extension/analysis/propose.js";
+import { findingsTouching, type QuickFix, quickFixesAt } from "../../extension/features/quickFixes.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { MOTOR } from "../support/handNumbers.js";
 
@@ -160,5 +163,46 @@ describe("an allowance", () => {
 
   it("is not offered elsewhere", () => {
     expect(offeredIn(pastPeak(robot()).replace("import {", "im/*|*/port {")).fixes).toEqual([]);
+  });
+});
+
+describe("proposals", () => {
+  const asked = (source: string) => {
+    const { analysis, cursor } = analyseWithCursor(source);
+    const { analyse } = createAnalyser(ts);
+    const proposals = findingsTouching(analysis, cursor.file, cursor.offset, cursor.offset).flatMap((finding) =>
+      proposalsFor(analysis, finding, analyse),
+    );
+    return quickFixesAt(analysis, cursor.file, cursor.offset, cursor.offset, proposals);
+  };
+
+  it("stand before the allowance, each with what it predicts and what gets worse", () => {
+    const fixes = asked(robot(MOTOR, "spur(20, 60)").replace("const hoist", "const ho/*|*/ist"));
+    const kinds = fixes.map(({ kind }) => kind);
+    expect(kinds.indexOf("allow")).toBeGreaterThan(kinds.lastIndexOf("propose"));
+    expect(kinds).toContain("propose");
+    expect(fixes[0]?.title).toMatch(/^Stage 1 with \d+ and \d+ teeth: ratio [\d.]+, \d+ % of stall, [\d.]+ A per motor/);
+  });
+
+  it("tell the nearest miss, which changes nothing, where nothing in stock helps", () => {
+    const settings = '//- loadmark.json\n{ "toothCounts": [16, 18, 20] }\n//- robot.ts\n';
+    const heavy = robot(MOTOR, "spur(16, 18)").replace('"10 kg"', '"90 kg"').replace("const hoist", "const ho/*|*/ist");
+    const misses = asked(settings + heavy).filter(({ finding, kind }) => finding.rule === "stalls" && kind === "propose");
+    expect(misses).toMatchObject([{ title: expect.stringMatching(/^Nothing in stock clears it; nearest: /), edits: [] }]);
+  });
+
+  it("for a robot come with an allowance above it", () => {
+    const source = `import { battery, lift, mechanism, motor, robot, spur } from "loadmark";
+const pack = battery({ openCircuit: "12 V", resistance: "100 mohm", mustStayAbove: "10.5 V" });
+const load = lift({ mass: "5 kg", drumRadius: "20 mm", travel: "0.4 m" });
+const left = mechanism("left", { motor: ${MOTOR}, stages: [spur(20, 80)], load });
+const right = mechanism("right", { motor: ${MOTOR}, motorCount: 2, stages: [spur(20, 80)], load });
+export const mo/*|*/ver = robot("mover", { supply: pack, mechanisms: [left, right], loadCycle: [{ lasts: "4 s", moving: [left, right] }] });
+`;
+    const fixes = asked(source).filter(({ finding }) => finding.rule === "sags");
+    expect(fixes[0]?.title).toMatch(/^"(left|right)" in a step of its own behind step 1, [\d.]+ s: supply down to /);
+    const last = fixes.at(-1);
+    expect(last).toMatchObject({ kind: "allow", title: 'Allow "sags" for this robot' });
+    expect(last?.edits[0]?.newText).toBe("// loadmark-allow sags: reason\n");
   });
 });

@@ -9,12 +9,12 @@ import {
   type TextDocumentEdit,
   type TextEdit,
 } from "vscode-languageserver";
-import type { Finding } from "../../analysis/analysis.js";
 import type { Proposal } from "../../analysis/proposal.js";
-import { proposalsFor } from "../../analysis/propose.js";
-import { type Edit, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
+import { type Edit, findingsTouching, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
+import { SHOW_CHART } from "../../protocol/commands.js";
 import type { CurrentFile } from "../current.js";
 import { inLines } from "../diagnostics.js";
+import type { Proposer } from "../proposer.js";
 import type { Result } from "../session.js";
 import type { Texts } from "../texts.js";
 
@@ -22,43 +22,43 @@ export interface CodeActionParts {
   readonly texts: Texts;
   /** The client can let the user fill in a stretch of what was put in. */
   readonly canFillIn: boolean;
-  /** The proposals for a finding of the result; kept, since the editor asks again with every move of the caret. */
-  readonly propose: (result: Result, finding: Finding) => readonly Proposal[];
+  readonly propose: Proposer;
+  /** Commands that the client has. */
+  readonly commands: readonly string[];
   /** What the client shows at the range. */
   readonly shown: readonly Diagnostic[];
 }
 
-/** Proposals are worked out once for a finding: findings live as long as their result. */
-export function createProposer(): CodeActionParts["propose"] {
-  const known = new WeakMap<Finding, readonly Proposal[]>();
-  return (result, finding) => {
-    const before = known.get(finding);
-    if (before !== undefined) return before;
-    const proposals = proposalsFor(result.analysis, finding, result.analyse);
-    known.set(finding, proposals);
-    return proposals;
-  };
-}
-
-/** Nothing while the text is newer than the result: an edit must fit exactly. */
-export function answerCodeActions(
-  current: CurrentFile,
+/** Nothing while the text is newer than the result, or where it changes meanwhile: an edit must fit exactly. */
+export async function answerCodeActions(
+  { result, file, lines }: CurrentFile,
   range: Range,
-  { texts, canFillIn, propose, shown }: CodeActionParts,
-): CodeAction[] {
-  const { result, file, lines } = current;
+  { texts, canFillIn, propose, commands, shown }: CodeActionParts,
+): Promise<CodeAction[]> {
   if (lines.text !== result.snapshot.read(file)) return [];
-  const fixes = quickFixesAt(result.analysis, file, lines.offsetAt(range.start), lines.offsetAt(range.end), (finding) =>
-    propose(result, finding),
-  );
-  return fixes
-    .filter(({ edits }) => edits.every((edit) => isUnchanged(texts, result, edit.file)))
+  const [start, end] = [lines.offsetAt(range.start), lines.offsetAt(range.end)];
+  const proposals: Proposal[] = [];
+  for (const finding of findingsTouching(result.analysis, file, start, end)) {
+    const found = await propose(result, finding);
+    if (found === undefined) return [];
+    proposals.push(...found);
+  }
+  return quickFixesAt(result.analysis, file, start, end, proposals)
+    .filter(({ edits }) => [file, ...edits.map((edit) => edit.file)].every((one) => isUnchanged(texts, result, one)))
     .map((fix) => ({
       title: fix.title,
       kind: CodeActionKind.QuickFix,
       diagnostics: shown.filter(({ code, message }) => code === fix.finding.rule && message === inLines(fix.finding.message)),
-      edit: { documentChanges: documentEditsOf(fix, result, texts, canFillIn) },
+      ...(fix.edits.length === 0
+        ? opening(fix, commands)
+        : { edit: { documentChanges: documentEditsOf(fix, result, texts, canFillIn) } }),
     }));
+}
+
+/** A nearest miss changes nothing: it leads to the chart. */
+function opening({ title, finding }: QuickFix, commands: readonly string[]): Pick<CodeAction, "command"> {
+  const leads = finding.mechanism !== null && commands.includes(SHOW_CHART);
+  return leads ? { command: { title, command: SHOW_CHART, arguments: [finding.mechanism] } } : {};
 }
 
 function documentEditsOf(fix: QuickFix, result: Result, texts: Texts, canFillIn: boolean): TextDocumentEdit[] {
