@@ -48,6 +48,8 @@ const JUST_PAST = 1e-6;
 const KINK_RETRY = 0.9999;
 /** Crossings nearer to the start of a step than this are the kink that it started from. */
 const AT_START = 1e-6;
+/** A step reaches at most this many times the straight way to a stop. */
+const PAST_STOP = 1.25;
 /** Misses of a stop below this share of the step are made good along the rates: the error is their square. */
 const NEAR_STOP = 1e-6;
 
@@ -56,14 +58,16 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
   const tried = createTried(system, course, startS);
   const { stepper, signs } = tried;
   system.prepare(startS, state, tried.start, tried.before, course.stiff);
+  system.accept?.();
   for (const value of tried.before) signs.push(value >= 0 ? 1 : -1);
   let length = course.firstStepS;
+  let usual = 0;
 
   for (let steps = 1; tried.timeS < course.endS; steps++) {
     if (steps > course.mostSteps || tried.events > MOST_EVENTS)
       return { timeS: tried.timeS, stop: null, finished: false, steps, nextStepS: length };
     const left = course.endS - tried.timeS;
-    length = Math.min(length, left);
+    length = Math.min(length, left, reachOfStops(tried));
     if (left - length < 1e-12 * left) length = left;
     tried.lengthS = length;
     stepper.step(tried.timeS, state, length, tried.start);
@@ -79,6 +83,7 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     report(tried, landing?.share ?? 1, course);
     if (!landing) {
       finish(tried, state, course, null);
+      usual = length;
       length = next;
       continue;
     }
@@ -86,7 +91,8 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     const stops = (system.watches[landing.watch] as Watch).kind === "stop";
     if (stops) landOnStop(tried, state, landing, course);
     else landPastKink(tried, state, landing.share, course);
-    const nextStepS = Math.max(next - tried.lengthS, tried.lengthS);
+    // On the other side of a kink it goes on in steps like those before it, however short the last one was cut.
+    const nextStepS = Math.max(next - tried.lengthS, tried.lengthS, usual / 2);
     finish(tried, state, course, landing.watch);
     if (stops) return { timeS: tried.timeS, stop: landing.watch, finished: true, steps, nextStepS };
     length = nextStepS;
@@ -112,6 +118,19 @@ function createTried(system: OdeSystem, course: Course, timeS: number): TriedSte
   };
 }
 
+/** No step goes much further than to where a straight line would meet the next stop: what lies behind is never asked for. */
+function reachOfStops({ system, start, before }: TriedStep): number {
+  let reach = Number.POSITIVE_INFINITY;
+  for (let i = 0; i < system.watches.length; i++) {
+    const { kind, component, crosses } = system.watches[i] as Watch;
+    if (kind !== "stop" || component === undefined) continue;
+    const rate = start.rates[component] as number;
+    const straightS = -(before[i] as number) / rate;
+    if (straightS > 0 && crosses !== (rate > 0 ? "down" : "up")) reach = Math.min(reach, PAST_STOP * straightS);
+  }
+  return reach;
+}
+
 /** A step refused for a kink inside it is tried again to just past that kink, where the kink cannot disturb it any more. */
 function shorter(tried: TriedStep, length: number, growth: number, course: Course): number {
   const { system, stepper } = tried;
@@ -119,9 +138,21 @@ function shorter(tried: TriedStep, length: number, growth: number, course: Cours
   system.prepare(tried.timeS + length, stepper.end, tried.end, tried.after, course.stiff);
   let share = 1;
   for (let i = 0; i < system.watches.length; i++) {
-    if ((system.watches[i] as Watch).kind === "kink") share = Math.min(share, firstCrossing(tried, i) ?? 1);
+    if ((system.watches[i] as Watch).kind === "kink") share = Math.min(share, kinkShare(tried, i));
   }
-  return share > growth / 2 && share < KINK_RETRY ? length * share * (1 + JUST_PAST) : length * growth;
+  return share < KINK_RETRY ? length * share * (1 + JUST_PAST) : length * growth;
+}
+
+/**
+ * Where inside a refused step a kink is worth aiming at. A kink far ahead of the step's end has bent the dense output so much that it
+ * may be shown anywhere: twice the way to it along a straight line then reaches past it, and the next try sees it better.
+ */
+function kinkShare(tried: TriedStep, i: number): number {
+  const share = firstCrossing(tried, i);
+  if (share === null || share < AT_START) return 1;
+  const [before, after] = [Math.abs(tried.before[i] as number), Math.abs(tried.after[i] as number)];
+  const straight = before / (before + after);
+  return straight > AT_START ? Math.min(share, 2 * straight) : share;
 }
 
 function growthOf(error: number, power: number): number {
@@ -200,12 +231,20 @@ function finish(tried: TriedStep, state: Float64Array, course: Course, landed: n
   const fromS = tried.timeS;
   tried.timeS = tried.lengthS >= course.endS - fromS ? course.endS : fromS + tried.lengthS;
   state.set(tried.stepper.end);
+  tried.system.accept?.();
   [tried.start, tried.end] = [tried.end, tried.start];
   [tried.before, tried.after] = [tried.after, tried.before];
   for (let i = 0; i < tried.signs.length; i++) {
     const value = tried.before[i] as number;
     if (i === landed) tried.signs[i] = -(tried.signs[i] as number);
-    else if (value !== 0) tried.signs[i] = value > 0 ? 1 : -1;
+    else if (value !== 0 && !(landed !== null && isOnStop(tried, i, value))) tried.signs[i] = value > 0 ? 1 : -1;
   }
   course.onStep?.(fromS, tried.timeS, state, tried.stepper.at);
+}
+
+/** A stop crossed together with the kink just landed on keeps its side, so that the next step finds it at its start. */
+function isOnStop({ system, signs }: TriedStep, i: number, value: number): boolean {
+  const { kind, crosses } = system.watches[i] as Watch;
+  const sign = signs[i] as number;
+  return kind === "stop" && value * sign < 0 && crosses !== (sign < 0 ? "down" : "up");
 }

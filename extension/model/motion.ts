@@ -62,11 +62,11 @@ function setCurrent(plant: Plant, at: Instant, derive: boolean): boolean {
 /** T = k·(I − I_loss), k the larger constant where the shaft drives the motor. */
 function setTorque(plant: Plant, at: Instant, derive: boolean): void {
   const useful = at.currentA - plant.breakawayA - plant.lossSlopeAsPerRad * at.motorSpeed;
-  const driven = useful < 0;
+  const driven = useful < -plant.fadedA;
   const constant = driven ? at.drivenConstant : at.torqueConstant;
   const constantByHeat = driven ? at.drivenConstantByHeat : at.torqueConstantByHeat;
-  at.drivenGap = useful;
-  at.torqueNm = constant * useful;
+  at.drivenGap = useful + plant.fadedA;
+  at.torqueNm = constant * useful + (driven ? plant.fadedA * (constant - at.torqueConstant) : 0);
   if (!derive) return;
   const by = at.currentBy;
   setGradient(
@@ -81,7 +81,8 @@ function setTorque(plant: Plant, at: Instant, derive: boolean): void {
 /**
  * n·N·T = J_rotors·α + Φ(T_load + J·α + ½·J′·ω²), Φ(x) = x/η for x ≥ 0, else η_b·x; where the train does not run back, Φ is
  * judged on the static torque and inertia counts by 1/η. ½·J′·ω² is what a turning inertia that changes with position asks
- * (Lagrange's equation, any textbook of mechanisms). Wheels: no more than the ground takes; then torque and current follow from
+ * (Lagrange's equation, any textbook of mechanisms). A load that only fades to nothing, as on a level turntable, stays on the driving
+ * side, so that no rounding makes it cross: Φ bends not at 0 but a hair below, and so does the motor's T. Wheels: no more than the ground takes; then torque and current follow from
  * the acceleration. True where they slip.
  */
 function accelerate(plant: Plant, progress: number, speed: number, at: Instant, derive: boolean): boolean {
@@ -96,20 +97,21 @@ function accelerate(plant: Plant, progress: number, speed: number, at: Instant, 
   const forward = 1 / train.efficiency;
   let torqueShare = forward;
   let inertiaShare = forward;
+  let slack = 0;
   at.trainGap = opposing;
   if (!train.runsBack) {
     if (opposing < 0) torqueShare = train.backwardEfficiency;
   } else {
     const asDriving = (drive * at.torqueNm - forward * (opposing + centrifugal)) / (plant.rotorKgM2 + forward * inertia);
-    at.trainGap = opposing + centrifugal + inertia * asDriving;
-    // A load that only fades to nothing, as on a level turntable, stays on the driving side: no rounding makes it cross.
-    if (at.trainGap < -plant.fadedNm) {
+    at.trainGap = opposing + centrifugal + inertia * asDriving + plant.fadedNm;
+    if (at.trainGap < 0) {
       torqueShare = train.backwardEfficiency;
       inertiaShare = train.backwardEfficiency;
+      slack = plant.fadedNm * (forward - train.backwardEfficiency);
     }
   }
   const total = plant.rotorKgM2 + inertiaShare * inertia;
-  const rate = (drive * at.torqueNm - torqueShare * opposing - inertiaShare * centrifugal) / total;
+  const rate = (drive * at.torqueNm - torqueShare * opposing - inertiaShare * centrifugal + slack) / total;
   at.speedRate = rate;
   if (derive) {
     const by = at.torqueBy;

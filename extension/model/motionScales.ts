@@ -15,10 +15,10 @@ export interface MotionScales {
 }
 
 /** Error of a step as a share, so that over a whole course 1e-8 is kept; the explicit method stays further below what it is allowed. */
-export const STIFF_TOLERANCE = 2e-10;
-export const EXPLICIT_TOLERANCE = 4e-9;
-/** The same where corners of a curve restart it again and again. */
-export const CORNERED_TOLERANCE = 1e-9;
+export const STIFF_TOLERANCE = 1e-10;
+export const EXPLICIT_TOLERANCE = 2e-9;
+/** Share of it where corners of a curve start the method again and again. */
+export const CORNERED_SHARE = 0.25;
 /** Past this a course is given up. */
 export const MOST_STEPS = 20_000;
 /** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */

@@ -25,8 +25,8 @@ export interface MotionSystem extends OdeSystem {
   readonly front: Instant;
   /** Current that the protection carries at an instant, A. */
   readonly carried: (now: Instant) => number;
-  /** Progress (rad), or speed (rad/s) of a flywheel, at which the next stop stands. */
-  readonly setTarget: (target: number) => void;
+  /** Progress (rad), or speed (rad/s) of a flywheel, at which the next stop stands, and the plant with the load on the way there. */
+  readonly setTarget: (target: number, piece?: Plant) => void;
 }
 
 /** Below this share of the highest speed so far it stands still. */
@@ -44,6 +44,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   const front = createInstant();
   const released = createInstant();
   let target = plant.spanRad;
+  let here = plant;
   let highestSpeed = 0;
   const { watches, values, index } = motionWatches({
     plant,
@@ -62,10 +63,10 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     const progress = state[layout.progress] as number;
     switch (mode.kind) {
       case "moving":
-        moveAt(plant, timeS, progress, state[layout.speed] as number, windingC, now, derive);
+        moveAt(here, timeS, progress, state[layout.speed] as number, windingC, now, derive);
         break;
       case "following":
-        followAt(plant, timeS, progress, windingC, now);
+        followAt(here, timeS, progress, windingC, now);
         break;
       case "held":
         heldAt(plant, mode.torqueNm, mode.motorSpeedRadPerS, windingC, now);
@@ -96,8 +97,9 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     },
     front,
     carried: rates.carried,
-    setTarget: (value) => {
+    setTarget: (value, piece = plant) => {
       target = value;
+      here = piece;
     },
     evaluate: (timeS, state, out) => {
       fillInstant(timeS, state, at, false);
@@ -105,10 +107,12 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
     },
     prepare: (timeS, state, start, watched, stiff) => {
       fillInstant(timeS, state, front, true);
-      highestSpeed = Math.max(highestSpeed, front.progressRate);
       rates.fill(state, front, start.rates);
       if (stiff) rates.differentiate(front, start.jacobian, start.timeRates);
       watchInstant(state, front, watched);
+    },
+    accept: () => {
+      highestSpeed = Math.max(highestSpeed, front.progressRate);
     },
     watch: (timeS, state, watched) => {
       fillInstant(timeS, state, at, true);

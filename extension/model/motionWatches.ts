@@ -19,6 +19,8 @@ export interface WatchIndex {
   readonly standstill: number;
   /** A flywheel reaches the target speed. */
   readonly targetSpeed: number;
+  /** A flywheel's speed rises no more: its motors get hot faster than it gets quick. */
+  readonly topSpeed: number;
   /** A blocked mechanism would start. */
   readonly breakaway: number;
   /** The winding is past anything that is still a motor. */
@@ -132,13 +134,15 @@ export function motionWatches({
     mode.kind === "held" ||
     (mode.kind === "blocked" ? mode.startsAs === undefined : mode.kind === "following" && plant.load.endless);
   /** At the very start, where a ramp just overcomes the load, rounding is no standstill. */
-  const hasLeft = (at: Float64Array): boolean => plant.load.endless || (at[0] as number) > LEFT * plant.spanRad;
+  const hasLeft = (at: Float64Array): boolean =>
+    plant.load.endless ? stillBelow() > 0 : (at[0] as number) > LEFT * plant.spanRad;
   const index: WatchIndex = {
     arrival: listen(turning && !plant.load.endless, component(stop("up"), 0), (at) => (at[0] as number) - target()),
     standstill: moving
       ? listen(true, component(stop("down"), 1), (at) => (hasLeft(at) ? (at[1] as number) - stillBelow() : -1))
       : listen(turning, stop("down"), (at, now) => (hasLeft(at) ? now.startGap / plant.train.ratio - stillBelow() : -1)),
     targetSpeed: listen(moving && flywheel, component(stop("up"), 1), (at) => (at[1] as number) - target()),
+    topSpeed: listen(moving && flywheel, stop("down"), (at, now) => (hasLeft(at) ? now.speedRate : 1)),
     breakaway: listen(mode.kind === "blocked" && mode.startsAs !== undefined, stop("up"), (_, now) => now.startGap),
     burnt: listen(network !== null, component(stop("up"), layout.winding), (at) => (at[layout.winding] as number) - RUNAWAY_C),
     settled: listen(lasts, stop("down"), (at, now) => rates.unrest(at, now) - SETTLED),

@@ -18,6 +18,8 @@ export interface OdeSystem extends Rates {
   readonly watches: readonly Watch[];
   /** Everything at a point where a step may start: rates and watched values; their derivatives too for a stiff method. */
   readonly prepare: (timeS: number, state: Float64Array, start: StepStart, watched: number[], stiff: boolean) => void;
+  /** The point last prepared is taken: a course begins there or a step ends there. */
+  readonly accept?: () => void;
   /** The watched values at a point. */
   readonly watch: (timeS: number, state: Float64Array, watched: number[]) => void;
 }

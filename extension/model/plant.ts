@@ -28,12 +28,13 @@ export interface Plant {
   readonly duty: number;
   readonly rampS: number;
   readonly bus: Bus;
-  /** Torque at the output shaft that counts as nothing, N·m. */
+  /** Torque at the output shaft and current of one motor that count as nothing, N·m and A. */
   readonly fadedNm: number;
+  readonly fadedA: number;
 }
 
 /** Share of full torque that counts as nothing. */
-const FADED = 1e-9;
+const FADED = 1e-10;
 
 /** What feeds the mechanism: an open-circuit voltage behind a resistance. */
 export interface Bus {
@@ -62,6 +63,7 @@ export function plantOf(drive: Drive): Plant {
     duty: drive.pwmDuty,
     rampS: drive.rampS,
     fadedNm: FADED * drive.motorCount * train.ratio * Math.min(availableLine(drive).stallTorqueNm, limitTorque(drive)),
+    fadedA: FADED * Math.min(availableLine(drive).stallCurrentA, drive.motorCurrentLimitA ?? Number.POSITIVE_INFINITY),
     bus: { openCircuitV: supply.openCircuitV, resistanceOhm: supply.resistanceOhm },
   };
 }

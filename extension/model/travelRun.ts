@@ -6,11 +6,12 @@
 import { type Course, integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
 import {
-  CORNERED_TOLERANCE,
+  CORNERED_SHARE,
   EXPLICIT_TOLERANCE,
   isFollowing,
   MOST_STEPS,
   type MotionScales,
+  mechanicalTimeConstant,
   STIFF_TOLERANCE,
   scalesOf,
 } from "./motionScales.js";
@@ -18,7 +19,8 @@ import { startState } from "./motionState.js";
 import { type MotionSystem, motionSystem } from "./motionSystem.js";
 import { createObserver, type Observer } from "./observer.js";
 import { createStart } from "./odeSystem.js";
-import type { Plant } from "./plant.js";
+import { pieceAround } from "./piece.js";
+import { type Plant, turningInertia } from "./plant.js";
 import type { TravelGoal } from "./travelGoal.js";
 import { finishTravel, type TravelOptions, type TravelResult } from "./travelResult.js";
 
@@ -36,8 +38,9 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   const kind = isFollowing(plant, scales) ? "following" : "moving";
   const moving = motionSystem(plant, { kind }, scales);
   const targets = plant.load.endless ? [goal.target] : [...cornersAhead(plant), goal.target];
-  const fastest = fastestRate(moving, state);
-  const stiff = kind === "following" || fastest * scales.timeS > STIFF_TIME_CONSTANTS;
+  // At a current limit the start shows nothing of the line's own time constant.
+  const fastest = Math.max(fastestRate(moving, 0, state), mechanicalRate(plant));
+  const stiff = kind === "following" || fastest * Math.max(scales.timeS, plant.rampS) > STIFF_TIME_CONSTANTS;
   const method = methodFor(plant, stiff);
   let timeS = 0;
   let stepS = (stiff ? 0.02 : 0.1) * Math.min(1 / fastest, scales.timeS);
@@ -49,7 +52,7 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
     if (!wait.started) return finishTravel(plant, observer, state, timeS, wait.finished ? "never-starts" : "unresolved");
   }
   let next = 0;
-  moving.setTarget(targets[0] as number);
+  moving.setTarget(targets[0] as number, pieceTowards(plant, 0, targets[0] as number));
   for (let phase = 0; phase < MOST_PHASES; phase++) {
     const endS = timeS < plant.rampS ? plant.rampS : NEVER_S;
     const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, method));
@@ -59,14 +62,18 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
     if (arrival.stop === null && timeS < NEVER_S) continue;
     if (arrival.stop === null) break;
     if (arrival.stop === moving.index.burnt) break;
+    if (arrival.stop === moving.index.topSpeed) {
+      return finishTravel(plant, observer, state, timeS, "never-reaches-speed", moving.front.motorSpeed / plant.train.ratio);
+    }
     if (arrival.stop === moving.index.standstill) return finishTravel(plant, observer, state, timeS, "stands-still");
     next++;
     if (next === targets.length) {
       const speed = moving.front.motorSpeed / plant.train.ratio;
       return finishTravel(plant, observer, state, timeS, goal.reachable ? "arrives" : "never-reaches-speed", speed);
     }
-    state[0] = pastCorner(targets[next - 1] as number, plant.spanRad);
-    moving.setTarget(targets[next] as number);
+    const [corner, target] = [targets[next - 1] as number, targets[next] as number];
+    state[0] = pastCorner(corner, plant.spanRad);
+    moving.setTarget(target, pieceTowards(plant, corner, target));
   }
   return finishTravel(plant, observer, state, timeS, "unresolved");
 }
@@ -82,7 +89,8 @@ function awaitStart(
   if (!(plant.rampS > 0)) return { timeS: 0, started: false, finished: true };
   const mode: Mode = { kind: "blocked", startsAs };
   const blocked = motionSystem(plant, mode, scales);
-  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, STIFF));
+  const method = methodFor(plant, fastestRate(blocked, plant.rampS, state) * plant.rampS > STIFF_TIME_CONSTANTS);
+  const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, method));
   return {
     timeS: arrival.timeS,
     started: arrival.stop !== null && arrival.stop === blocked.index.breakaway,
@@ -96,11 +104,10 @@ function course(system: MotionSystem, observer: Observer, endS: number, firstSte
 }
 
 type Method = Pick<Course, "stiff" | "tolerance">;
-const STIFF: Method = { stiff: true, tolerance: STIFF_TOLERANCE };
 
 function methodFor(plant: Plant, stiff: boolean): Method {
-  if (stiff) return STIFF;
-  return { stiff, tolerance: plant.load.corners.length > 0 ? CORNERED_TOLERANCE : EXPLICIT_TOLERANCE };
+  const share = plant.load.corners.length > 0 ? CORNERED_SHARE : 1;
+  return { stiff, tolerance: share * (stiff ? STIFF_TOLERANCE : EXPLICIT_TOLERANCE) };
 }
 
 /** Looked at a moment after the start: a command that grows from 0 may move a load without friction at once. */
@@ -109,18 +116,28 @@ function starts(plant: Plant, system: MotionSystem, state: Float64Array): boolea
   return (state[1] as number) > 0 || system.instantAt(plant.rampS * 1e-9, state).startGap > 0;
 }
 
-/** Rate of the fastest change at the start, 1/s: rotors settling, load swinging, heat or protection; finite and above 0. */
-function fastestRate(system: MotionSystem, state: Float64Array): number {
+/** Rate of the fastest change at a time, 1/s: rotors settling, load swinging, heat or protection; finite and above 0. */
+function fastestRate(system: MotionSystem, timeS: number, state: Float64Array): number {
   const { size } = system;
   const start = createStart(size, true);
-  system.prepare(0, state, start, [], true);
+  system.prepare(timeS, state, start, [], true);
   let fastest = Math.sqrt(Math.abs(start.jacobian[size] as number));
   for (let i = 0; i < size; i++) fastest = Math.max(fastest, Math.abs(start.jacobian[i * size + i] as number));
   return Math.min(Math.max(fastest, Number.MIN_VALUE), Number.MAX_VALUE);
 }
 
+function mechanicalRate(plant: Plant): number {
+  const timeS = mechanicalTimeConstant(plant, turningInertia(plant, plant.load.startRad));
+  return timeS > 0 ? Math.min(1 / timeS, Number.MAX_VALUE) : 0;
+}
+
 function cornersAhead(plant: Plant): number[] {
   return plant.load.corners.map((corner) => plant.direction * (corner - plant.load.startRad)).sort((one, other) => one - other);
+}
+
+/** The plant with the load between two points of progress (rad). */
+function pieceTowards(plant: Plant, from: number, to: number): Plant {
+  return plant.load.endless ? plant : pieceAround(plant, plant.load.startRad + (plant.direction * (from + to)) / 2);
 }
 
 /** A hair beyond a corner, so that slopes are those of the piece ahead. */
