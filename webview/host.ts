@@ -1,8 +1,9 @@
 /** The page's end of the wire: the editor's functions for this page, with every message checked. Keeps them to itself. */
 
-import { type ChartMemory, chartMemorySchema, NO_MEMORY } from "../extension/protocol/chartMemory.js";
+import { type ChartMemory, chartMemorySchema, NO_MEMORY, UNIT_SYSTEMS } from "../extension/protocol/chartMemory.js";
 import { type HostMessage, hostMessageSchema, type PageMessage } from "../extension/protocol/chartMessages.js";
 import { readMessage } from "../extension/protocol/readMessage.js";
+import type { UnitSystem } from "../extension/units/systems.js";
 
 interface EditorApi {
   postMessage(message: unknown): void;
@@ -17,6 +18,8 @@ export interface Host {
   /** What was remembered; nothing where it cannot be read. */
   recall(): ChartMemory;
   remember(memory: ChartMemory): void;
+  /** Chosen in an earlier chart. */
+  readonly units: UnitSystem;
   listen(onMessage: (message: HostMessage) => void): void;
 }
 
@@ -26,6 +29,7 @@ export function connectHost(): Host {
   const send = (message: PageMessage): void => api.postMessage(message);
   return {
     send,
+    units: UNIT_SYSTEMS.find((system) => system === document.body.dataset.units) ?? "metric",
     recall: () => readMessage(chartMemorySchema, api.getState()) ?? NO_MEMORY,
     remember: (memory) => api.setState(memory),
     listen(onMessage) {

@@ -11,9 +11,11 @@ export interface ChartHtmlOptions {
   readonly nonce: string;
   readonly scriptUri: string;
   readonly styleUri: string;
+  /** The units that were chosen in an earlier chart. */
+  readonly units: string;
 }
 
-export function chartHtml({ cspSource, nonce, scriptUri, styleUri }: ChartHtmlOptions): string {
+export function chartHtml({ cspSource, nonce, scriptUri, styleUri, units }: ChartHtmlOptions): string {
   return `<!DOCTYPE html>
 <html lang="en">
 <head>
@@ -23,7 +25,7 @@ export function chartHtml({ cspSource, nonce, scriptUri, styleUri }: ChartHtmlOp
 <link rel="stylesheet" href="${escapeAttribute(styleUri)}">
 <title>Loadmark chart</title>
 </head>
-<body>
+<body data-units="${escapeAttribute(units)}">
 <main id="chart"></main>
 <script nonce="${escapeAttribute(nonce)}" src="${escapeAttribute(scriptUri)}"></script>
 </body>

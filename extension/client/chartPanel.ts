@@ -13,7 +13,7 @@ import {
   pageMessageSchema,
 } from "../protocol/chartMessages.js";
 import { VIEW_NAMES, type ViewName, type Want } from "../protocol/charts/views.js";
-import { SHOW_CHART } from "../protocol/commands.js";
+import { SHOW_CHART, SHOW_POWER } from "../protocol/commands.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { chartHtml } from "./chartHtml.js";
 import { isSource } from "./documents.js";
@@ -23,10 +23,13 @@ import type { Server } from "./server.js";
 export const CHART_VIEW = "loadmark.chart";
 
 /** The command that opens each view. */
-const COMMANDS: Readonly<Record<ViewName, string>> = { "operating-point": SHOW_CHART };
+const COMMANDS: Readonly<Record<ViewName, string>> = { "operating-point": SHOW_CHART, power: SHOW_POWER };
 
 /** On the panel's own tab. */
-const titleOf: Readonly<Record<ViewName, () => string>> = { "operating-point": () => vscode.l10n.t("Operating Point") };
+const titleOf: Readonly<Record<ViewName, () => string>> = {
+  "operating-point": () => vscode.l10n.t("Operating Point"),
+  power: () => vscode.l10n.t("Power by Mechanism"),
+};
 
 interface Subject {
   readonly mechanism: string | null;
@@ -37,7 +40,11 @@ export interface ChartParts {
   readonly extensionUri: vscode.Uri;
   readonly server: Server;
   readonly log: vscode.LogOutputChannel;
+  /** Kept from one window to the next. */
+  readonly memory: vscode.Memento;
 }
+
+const UNITS_KEY = "loadmark.chartUnits";
 
 /** Registers the command, the panel's return after a reload, and what it follows. */
 export function registerChart(parts: ChartParts): vscode.Disposable {
@@ -116,6 +123,7 @@ class ChartPanel implements vscode.Disposable {
       nonce: makeNonce(),
       scriptUri: uriOf("main.js"),
       styleUri: uriOf("panel.css"),
+      units: this.#parts.memory.get<string>(UNITS_KEY) ?? "",
     });
   }
 
@@ -189,6 +197,9 @@ class ChartPanel implements vscode.Disposable {
         this.#turnTo(message.want);
         void this.refresh();
         return;
+      case "chooseUnits":
+        void this.#parts.memory.update(UNITS_KEY, message.units);
+        return;
       case "savePicture":
         void saveAs(
           message.fileName,
@@ -231,7 +242,7 @@ function nameIn(wanted: unknown): string | undefined {
 }
 
 function subjectOf({ chart }: Extract<ChartAnswer, { kind: "chart" }>): Partial<Subject> {
-  return { mechanism: chart.mechanism };
+  return "robot" in chart ? { robot: chart.robot } : { mechanism: chart.mechanism };
 }
 
 function nothingDeclared(view: ViewName): ChartAnswer {

@@ -31,7 +31,7 @@ export function activateWith(context: vscode.ExtensionContext, makeHostClient: M
     server,
     registerCommands(server, log),
     shareCommits(server, log),
-    registerChart({ extensionUri: context.extensionUri, server, log }),
+    registerChart({ extensionUri: context.extensionUri, server, log, memory: context.globalState }),
     createMechanismsView(server),
     createStatusItem(server),
     server.onDidChangeState(({ status }) => {

@@ -3,7 +3,7 @@
  *
  * Judges nothing itself.
  */
-import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Level, RuleId } from "../rules/rule.js";
 import { writeShare } from "../units/write.js";
 
@@ -57,6 +57,23 @@ export function verdictOf(analysis: Analysis, mechanism: AnalysedMechanism): Ver
   if (worst !== undefined && worst.level !== "information") return { state: worst.level, words: WORDS[worst.rule], ...rest };
   if (mechanism.numbers === undefined) return { state: "unknown", words: "Not checked", ...rest };
   return { state: "fine", words: "Fine", ...rest };
+}
+
+/** Findings about a robot as a whole, worst first. */
+export function findingsAboutRobot({ findings }: Analysis, { at, call: { span } }: AnalysedRobot): readonly Finding[] {
+  const places = [span, at];
+  const isHere = ({ at: here }: Finding): boolean =>
+    places.some(({ file, start, end }) => file === here.file && start <= here.start && here.end <= end);
+  return findings
+    .filter((finding) => finding.mechanism === null && isHere(finding))
+    .toSorted((one, other) => RANK[one.level] - RANK[other.level]);
+}
+
+/** A robot's verdict as a whole; its mechanisms have their own. */
+export function robotVerdictOf(analysis: Analysis, robot: AnalysedRobot): Pick<Verdict, "state" | "words"> {
+  const worst = findingsAboutRobot(analysis, robot).find(({ level }) => level !== "information");
+  if (worst !== undefined && worst.level !== "information") return { state: worst.level, words: WORDS[worst.rule] };
+  return robot.numbers === undefined ? { state: "unknown", words: "Not checked" } : { state: "fine", words: "Fine" };
 }
 
 /** The worse of two states. */

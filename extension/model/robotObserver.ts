@@ -125,6 +125,8 @@ export function createRobotObserver(
       const share = k / (INNER_SAMPLES + 1);
       sample(system, voltsAt(share), "at", stepStartS + fromS + share * (toS - fromS));
     }
+    // Back to the end of the step, where the extremes are looked for.
+    if (wants(stepStartS + fromS)) voltsAt(1);
     const breaksDown = lastV - system.front.voltageV > JUMP_SHARE * supply.openCircuitV && toS - fromS < JUMP_S;
     if (breaksDown) seen.collapsesAtS ??= stepStartS + toS;
     look(system, stepStartS + toS);

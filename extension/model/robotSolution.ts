@@ -28,6 +28,8 @@ export interface RobotSolution {
   readonly coveredS: number;
   /** Cycles that were followed one by one; the others repeat them. */
   readonly cyclesFollowed: number;
+  /** The last of them, from 0. */
+  readonly lastFollowed: number;
   /** True where the state repeats from cycle to cycle before the last one. */
   readonly periodic: boolean;
   /** Charge taken from the rated one, with Peukert's loss, A·h. */

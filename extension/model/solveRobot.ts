@@ -22,6 +22,7 @@ export function solveRobot(drive: RobotDrive, options: RobotOptions = {}): Robot
   const travels = new Map<string, StepTravel>();
   const cycleS = drive.steps.reduce((sum, { lastsS }) => sum + lastsS, 0);
   let followed = 0;
+  let lastFollowed = 0;
   let periodic = false;
   /** Cycles skipped with the last followed one's sums, until the next one shows how these have changed. */
   let owed: { readonly cycles: number; readonly sums: readonly number[] } | null = null;
@@ -29,6 +30,7 @@ export function solveRobot(drive: RobotDrive, options: RobotOptions = {}): Robot
   let marks = [markCycle(run)];
   while (drive.steps.length > 0 && run.cycle < drive.cycles && run.outcome === "done") {
     const [before] = marks as [CycleMark];
+    lastFollowed = run.cycle;
     const whole = runCycle(run, drive, cycleS, travels);
     followed++;
     if (!whole) break;
@@ -54,7 +56,7 @@ export function solveRobot(drive: RobotDrive, options: RobotOptions = {}): Robot
     periodic ||= plan.periodic;
     if (!plan.periodic) owed = { cycles: plan.cycles, sums };
   }
-  return finish(run, followed, periodic, cycleS, travels);
+  return finish(run, { cyclesFollowed: followed, lastFollowed, periodic }, cycleS, travels);
 }
 
 function runCycle(run: RobotRun, drive: RobotDrive, cycleS: number, travels: Map<string, StepTravel>): boolean {
@@ -132,8 +134,7 @@ function createRun(drive: RobotDrive, options: RobotOptions): RobotRun {
 
 function finish(
   run: RobotRun,
-  cyclesFollowed: number,
-  periodic: boolean,
+  followed: Pick<RobotSolution, "cyclesFollowed" | "lastFollowed" | "periodic">,
   cycleS: number,
   travels: ReadonlyMap<string, StepTravel>,
 ): RobotSolution {
@@ -152,8 +153,7 @@ function finish(
     },
     outcome,
     coveredS,
-    cyclesFollowed,
-    periodic,
+    ...followed,
     depletedAh: sums.depletedAs / SECONDS_PER_HOUR,
     emptyAtS: outcome === "empty" ? coveredS : null,
     collapsesAtS,

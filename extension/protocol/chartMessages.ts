@@ -5,6 +5,7 @@
  * what it does not know. What the numbers of a chart are stands in charts/, a file for each view.
  */
 import * as v from "valibot";
+import { UNIT_SYSTEMS } from "./chartMemory.js";
 import { shownSchema, viewNameSchema, wantSchema } from "./charts/views.js";
 
 /** The client's question to the server: takes a question, gives an answer. */
@@ -48,6 +49,8 @@ export const pageMessageSchema = v.variant("type", [
   v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()), robot: v.nullable(v.string()), want: wantSchema }),
   /** It wants to see something else. */
   v.object({ type: v.literal("ask"), want: wantSchema }),
+  /** Kept for charts to come. */
+  v.object({ type: v.literal("chooseUnits"), units: v.picklist(UNIT_SYSTEMS) }),
   /** A PNG file in base 64. */
   v.object({
     type: v.literal("savePicture"),

@@ -3,42 +3,12 @@
  *
  * The only place that turns a number into text with a unit. Does not know which quantity matters or why.
  */
-import { fromSi } from "./parse.js";
-import { type Dimension, UNITS, unitsOf } from "./table.js";
-
-/** Units to choose from when writing, by falling size; the first whose number is at least 1 is taken. */
-const WRITTEN: Readonly<Record<Dimension, readonly string[]>> = {
-  voltage: ["V", "mV"],
-  current: ["A", "mA"],
-  resistance: ["ohm", "mohm"],
-  torque: ["N*m", "mN*m"],
-  speed: ["rpm"],
-  torqueConstant: ["N*m/A", "mN*m/A"],
-  mass: ["kg", "g"],
-  length: ["m", "mm"],
-  time: ["s", "ms"],
-  inertia: ["kg*m^2", "g*m^2", "kg*mm^2", "g*mm^2"],
-  angle: ["deg"],
-  force: ["kN", "N", "mN"],
-  energy: ["kJ", "J", "mJ"],
-  power: ["kW", "W", "mW"],
-  charge: ["A*h", "mA*h"],
-  temperature: ["degC"],
-  thermalResistance: ["K/W"],
-  linearSpeed: ["m/s", "mm/s"],
-};
+import { numberIn, suitableSymbol, type UnitSystem } from "./systems.js";
+import { type Dimension, unitsOf } from "./table.js";
 
 /** `si` in the unit that suits its size: 0.0123 N·m is "12.3 mN·m". Fewer digits only where room is short. */
-export function writeQuantity(si: number, dimension: Dimension, digits = 3): string {
-  return writeIn(si, suitableSymbol(si, dimension), digits);
-}
-
-/** The unit in which a value of this size is written. */
-export function suitableSymbol(si: number, dimension: Dimension): string {
-  const symbols = WRITTEN[dimension];
-  const fits = symbols.find((symbol) => Math.abs(numberIn(si, symbol)) >= 0.9995);
-  const symbol = si === 0 ? symbols.find((candidate) => UNITS.get(candidate)?.factor === 1) : fits;
-  return symbol ?? symbols.at(-1) ?? "";
+export function writeQuantity(si: number, dimension: Dimension, digits = 3, system: UnitSystem = "metric"): string {
+  return writeIn(si, suitableSymbol(si, dimension, system), digits);
 }
 
 /** `si` in the unit named. */
@@ -82,11 +52,6 @@ export function typeset(symbol: string): string {
     .replace(/^deg/, "°")
     .replace(/ohm$/, "Ω")
     .replace(/^u/, "µ");
-}
-
-function numberIn(si: number, symbol: string): number {
-  const unit = UNITS.get(symbol);
-  return unit === undefined ? si : fromSi(si, unit);
 }
 
 function isSpelledTwice(symbol: string): boolean {

@@ -9,6 +9,7 @@ const options = {
   nonce: "bm9uY2U",
   scriptUri: "https://host.example/dist/webview/main.js?a=1&b=2",
   styleUri: "https://host.example/dist/webview/panel.css",
+  units: "inch",
 };
 const html = chartHtml(options);
 

@@ -188,6 +188,8 @@ describe("flywheels and rollers", () => {
 });
 
 describe("samples for charts", () => {
+  const thermal = { windingToHousingKPerW: 2, housingToAmbientKPerW: 5, windingTimeS: 8, housingTimeS: 400, limitC: 400 };
+
   it("are bounded, and hold the lowest voltage and each mechanism's power", () => {
     const lift = driveOf({ protection: breaker({ resetsS: 0.2, tripsAfterS: 0.05 }) });
     const drives = [lift, driveOf({ load: liftOf(8, 0.04, 0.5) })];
@@ -201,6 +203,30 @@ describe("samples for charts", () => {
       expect(Math.abs(sum - supplyVoltageV * supplyCurrentA)).toBeLessThan(1e-9 * (1 + Math.abs(sum)));
     }
     const times = samples.map(({ timeS }) => timeS);
+    // What is looked at for a chart changes nothing of the run.
+    const unseen = solveRobot(robot).numbers;
+    for (const [name, value] of Object.entries(numbers)) {
+      expect(unseen[name as keyof typeof unseen], name).toBeCloseToShare(value, 1e-12);
+    }
     expect(times).toEqual([...times].sort((one, other) => one - other));
+  });
+
+  it("hold each winding as it is at their time", () => {
+    const warm = driveOf({ motor: { ...plainMotor, thermal } });
+    const { samples, mechanisms } = solveRobot(robotOf([warm], [hold(20, 0)], {}), { sampled: { fromS: 0, toS: 20 } });
+    const windings = samples.map(({ windingC }) => windingC[0] ?? Number.NaN);
+    // Held at one current it only warms, from sample to sample.
+    for (const [index, one] of windings.entries())
+      if (index > 0) expect(one).toBeGreaterThanOrEqual(windings[index - 1] ?? Number.NaN);
+    expect(windings.at(-1)).toBeCloseTo(mechanisms[0]?.windingEndC ?? Number.NaN, 9);
+  });
+
+  it("can be of the last cycle that is followed", () => {
+    const warm = driveOf({ motor: { ...plainMotor, thermal } });
+    const robot = robotOf([warm], [hold(20, 0)], { cycles: 7 });
+    const { lastFollowed } = solveRobot(robot);
+    const { samples } = solveRobot(robot, { sampled: { fromS: lastFollowed * 20, toS: (lastFollowed + 1) * 20 } });
+    expect(samples.length).toBeGreaterThan(2);
+    expect(samples.every(({ timeS }) => timeS >= lastFollowed * 20)).toBe(true);
   });
 });

@@ -50,6 +50,7 @@ async function chartAt(file: string, text: string, mechanism: string | null = nu
 
 function shown(answer: ChartAnswer): ShownChart<"operating-point"> {
   if (answer.kind === "nothing") throw new Error(`There is no chart: ${answer.reason}.`);
+  if (answer.view !== "operating-point") throw new Error(`It is another view: ${answer.view}.`);
   return answer;
 }
 

@@ -10,7 +10,7 @@ import { chartIn, hoistSource } from "../support/chartFixture.js";
 
 describe("the numbers as CSV", () => {
   const chart = chartIn(hoistSource(), "tray hoist");
-  const lines = csvOf(fileOf(stopsOf(chart))).split("\r\n");
+  const lines = csvOf(fileOf(stopsOf(chart), "metric")).split("\r\n");
   const [header = "", ...rows] = lines.slice(0, -1);
 
   it("name each column with its unit", () => {

@@ -85,13 +85,26 @@ describe("contrast", () => {
 });
 
 describe.each(GROUNDS)("the palette on %s ground", (_name, palette, grounds) => {
-  it.each(Object.entries(palette))("draws %s with a contrast of at least 3", (_quantity, text) => {
-    for (const ground of grounds) expect(contrast(colour(text), colour(ground)), ground).toBeGreaterThanOrEqual(3);
-  });
+  it.each([...Object.entries(palette.curves), ...palette.stack.map((text, index) => [`part ${index}`, text] as const)])(
+    "draws %s with a contrast of at least 3",
+    (_quantity, text) => {
+      for (const ground of grounds) expect(contrast(colour(text), colour(ground)), ground).toBeGreaterThanOrEqual(3);
+    },
+  );
 
   it.each(Object.keys(MISSING))("keeps the curves of one plot apart, %s cones missing", (missing) => {
     // A difference of about 2.3 is just noticed; twenty is another colour.
-    expect(distance(palette.speed, palette.current, missing)).toBeGreaterThan(20);
-    expect(distance(palette.power, palette.efficiency, missing)).toBeGreaterThan(20);
+    const { speed, current, power, efficiency, torque, voltage } = palette.curves;
+    expect(distance(speed, current, missing)).toBeGreaterThan(20);
+    expect(distance(power, efficiency, missing)).toBeGreaterThan(20);
+    expect(distance(voltage, current, missing)).toBeGreaterThan(20);
+    expect(distance(torque, efficiency, missing)).toBeGreaterThan(20);
+  });
+
+  it.each(Object.keys(MISSING))("keeps neighbours in a stack apart, %s cones missing", (missing) => {
+    for (const [index, text] of palette.stack.entries()) {
+      const next = palette.stack[(index + 1) % palette.stack.length] ?? "";
+      expect(distance(text, next, missing), `${index}`).toBeGreaterThan(10);
+    }
   });
 });

@@ -6,11 +6,12 @@
 import type { ChartAnswer, HostMessage } from "../../extension/protocol/chartMessages.js";
 import { VIEW_NAMES, type ViewName } from "../../extension/protocol/charts/views.js";
 import type { Host } from "../host.js";
-import { element, setShown } from "../page/element.js";
+import { element } from "../page/element.js";
 import { VIEWS } from "../views/table.js";
 import type { View } from "../views/view.js";
 import { withSubject, withView } from "./memory.js";
 import { createTabs } from "./tabs.js";
+import { createUnitsChoice } from "./unitsChoice.js";
 import { createViewPage, type ViewPage } from "./viewPage.js";
 
 export interface ChartPage {
@@ -28,6 +29,7 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
     host.remember(memory);
   };
 
+  const system = () => memory.units ?? host.units;
   const pageOf = <V extends ViewName>(view: View<V>): ViewPage<V> =>
     createViewPage(view, {
       host,
@@ -36,6 +38,8 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
       remember: (change) => remember(withView(memory, view.name, change)),
       tableOpen: () => memory.tableOpen,
       openTable: (open) => remember({ ...memory, tableOpen: open }),
+      system,
+      ask: () => host.send({ type: "ask", want: want() }),
     });
   const pages = new Map(VIEW_NAMES.map((name) => [name, pageOf(VIEWS[name] as View<ViewName>)] as const));
   const want = () => VIEWS[memory.view].want(memory.views[memory.view] as never);
@@ -46,16 +50,23 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
     showChosen();
     host.send({ type: "ask", want: want() });
   };
+  const units = createUnitsChoice(system(), (next) => {
+    remember({ ...memory, units: next });
+    host.send({ type: "chooseUnits", units: next });
+    for (const { update } of pages.values()) update();
+  });
+  const place = element("div");
   const tabs = createTabs(
     VIEW_NAMES.map((name) => ({ name, title: VIEWS[name].title })),
     choose,
   );
   const showChosen = (): void => {
     tabs.select(memory.view);
-    for (const [name, { panel, redraw }] of pages) {
-      setShown(panel, name === memory.view);
-      if (name === memory.view) redraw();
-    }
+    const page = pages.get(memory.view);
+    if (page === undefined) return;
+    // Only the chosen one is on the page: nothing of the others can be reached, or read by mistake.
+    place.replaceChildren(page.panel);
+    page.redraw();
   };
 
   const show = (answer: ChartAnswer): void => {
@@ -66,7 +77,7 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
     pages.get(answer.view)?.show(answer);
   };
 
-  root.replaceChildren(element("div", { class: "bar" }, [tabs.element]), ...[...pages.values()].map(({ panel }) => panel));
+  root.replaceChildren(element("div", { class: "bar" }, [tabs.element, units.element]), place);
   showChosen();
   host.send({ type: "ready", mechanism: memory.mechanism, robot: memory.robot, want: want() });
   return {

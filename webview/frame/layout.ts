@@ -17,7 +17,8 @@ export interface Layout {
   readonly notes: HTMLElement;
   readonly facts: HTMLElement;
   readonly findings: HTMLElement;
-  /** For what a view adds of its own above its plots. */
+  /** What there is to set, above the plots. */
+  readonly controls: HTMLElement;
   readonly plots: HTMLElement;
   readonly readout: HTMLTableElement;
   readonly spoken: HTMLElement;
@@ -30,8 +31,13 @@ export interface Layout {
   readonly notChecked: HTMLElement;
 }
 
-/** `tableFirst`: with a reader of the screen the numbers come before the pictures. */
-export function buildLayout(name: ViewName, heading: string, tableFirst: boolean): Layout {
+export interface LayoutOptions {
+  /** With a reader of the screen the numbers come before the pictures. */
+  readonly tableFirst: boolean;
+  readonly canZoom: boolean;
+}
+
+export function buildLayout(name: ViewName, heading: string, { tableFirst, canZoom }: LayoutOptions): Layout {
   const button = (text: string): HTMLButtonElement => element("button", { text, attributes: { type: "button" } });
   const tableId = `table-${name}`;
   const keysId = `keys-${name}`;
@@ -52,6 +58,7 @@ export function buildLayout(name: ViewName, heading: string, tableFirst: boolean
     notes: element("p", { class: "per-motor" }),
     facts: element("dl", { class: "facts" }),
     findings: element("ul", { class: "findings" }),
+    controls: element("div", { class: "controls" }),
     plots: element("div", { class: "plots", attributes: plots }),
     readout: element("table", { class: "readout", attributes: { "aria-hidden": "true" } }),
     spoken: element("p", { class: "spoken", attributes: { "aria-live": "polite" } }),
@@ -70,8 +77,8 @@ export function buildLayout(name: ViewName, heading: string, tableFirst: boolean
   parts.empty.append(parts.emptyText);
   parts.tableBox.append(parts.table);
   const actions = element("div", { class: "actions" }, [parts.tableButton, parts.pictureButton, parts.csvButton]);
-  const keys = element("p", { class: "note", text: KEYS, attributes: { id: keysId } });
-  const picture = [parts.plots, parts.spoken, parts.readout, keys];
+  const keys = element("p", { class: "note", text: canZoom ? KEYS + ZOOM_KEYS : KEYS, attributes: { id: keysId } });
+  const picture = [parts.controls, parts.plots, parts.spoken, parts.readout, keys];
   const numbers = [actions, parts.tableBox];
   parts.content.append(
     element("header", {}, [parts.title, parts.verdict, parts.notes, parts.old]),
@@ -87,3 +94,4 @@ export function buildLayout(name: ViewName, heading: string, tableFirst: boolean
 }
 
 const KEYS = "Read off with the mouse, or with the keys ← → Home End while the plots have the focus; Esc takes the cursor away.";
+const ZOOM_KEYS = " Drag over a span to zoom to it, or press + and −; 0 shows all.";

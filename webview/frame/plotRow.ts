@@ -19,7 +19,8 @@ export function createPlotRow(box: HTMLElement): PlotRow {
       for (const plot of plots) plot.destroy();
       if (canvases.length !== parts.length) {
         canvases = parts.map(() => element("canvas", { attributes: { role: "img" } }));
-        box.replaceChildren(...canvases.map((canvas) => element("div", { class: "plot" }, [canvas])));
+        for (const old of box.querySelectorAll(":scope > .plot")) old.remove();
+        box.prepend(...canvases.map((canvas) => element("div", { class: "plot" }, [canvas])));
       }
       plots = parts.flatMap(({ create, words, height }, index) => {
         const canvas = canvases[index];

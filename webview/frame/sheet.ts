@@ -29,8 +29,30 @@ export interface Sheet {
   readonly table: () => Table;
   /** For programs: all rows, each number with ten digits. */
   readonly file: () => Table;
+  /** What of it can be chosen; may be empty. */
+  readonly choices: readonly Choice[];
+  /** Null where the abscissa is always shown whole. */
+  readonly zoom: Zoom | null;
   /** A line below the picture that is saved. */
   readonly footnote: string;
+}
+
+/** One of a few things to choose from; what is chosen is remembered under its key. */
+export interface Choice {
+  readonly key: string;
+  readonly label: string;
+  readonly chosen: string;
+  readonly options: readonly { readonly value: string; readonly words: string }[];
+}
+
+/** What is shown of the abscissa, and all that could be, SI. */
+export interface Zoom {
+  readonly from: number;
+  readonly to: number;
+  readonly least: number;
+  readonly greatest: number;
+  /** A span in words: "from 3 s to 5 s". */
+  readonly words: (from: number, to: number) => string;
 }
 
 export interface Fact {
@@ -47,9 +69,16 @@ export interface ReadOut {
   /** What the place is known for; may be empty. */
   readonly names: string;
   readonly head: readonly string[];
-  readonly rows: readonly { readonly name: string; readonly cells: readonly string[] }[];
+  readonly rows: readonly ReadOutRow[];
   /** The same in a sentence, for those who hear it. */
   readonly spoken: string;
+}
+
+export interface ReadOutRow {
+  readonly name: string;
+  readonly cells: readonly string[];
+  /** How it is filled in the plot; absent for what is not. */
+  readonly swatch?: (canvas: HTMLCanvasElement, theme: Theme) => void;
 }
 
 export interface Table {

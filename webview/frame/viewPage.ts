@@ -5,6 +5,7 @@
  */
 import type { ChartAnswer } from "../../extension/protocol/chartMessages.js";
 import type { ShownChart, ViewMemory, ViewName } from "../../extension/protocol/charts/views.js";
+import type { UnitSystem } from "../../extension/units/systems.js";
 import { fileNameOf } from "../fileName.js";
 import type { Host } from "../host.js";
 import { showDataTable } from "../page/dataTable.js";
@@ -15,12 +16,14 @@ import { showReadout } from "../page/readout.js";
 import { showFindings, showSentences } from "../page/remarks.js";
 import { readTheme } from "../theme/theme.js";
 import type { View } from "../views/view.js";
+import { createChoices } from "./choices.js";
 import { csvOf } from "./csv.js";
 import { cursorAfterKey, nearestStop } from "./cursorKeys.js";
 import { buildLayout } from "./layout.js";
 import { drawPicture } from "./picture.js";
 import { createPlotRow } from "./plotRow.js";
 import type { Sheet } from "./sheet.js";
+import { createZoomControl } from "./zoomControl.js";
 
 /** What the page as a whole does for one of its views. */
 export interface ViewSurroundings<V extends ViewName> {
@@ -30,6 +33,9 @@ export interface ViewSurroundings<V extends ViewName> {
   readonly remember: (change: Partial<ViewMemory<V>>) => void;
   readonly tableOpen: () => boolean | null;
   readonly openTable: (open: boolean) => void;
+  readonly system: () => UnitSystem;
+  /** Asks the host anew, after a change of what is wanted. */
+  readonly ask: () => void;
 }
 
 export interface ViewPage<V extends ViewName> {
@@ -43,18 +49,21 @@ export interface ViewPage<V extends ViewName> {
 
 export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSurroundings<V>): ViewPage<V> {
   const { host, withReader } = around;
-  const parts = buildLayout(view.name, view.title, withReader);
+  const parts = buildLayout(view.name, view.title, { tableFirst: withReader, canZoom: view.zoomed !== undefined });
   const plots = createPlotRow(parts.plots);
   let shown: ShownChart<V> | undefined;
   let sheet: Sheet | undefined;
+  let theme = readTheme(document.body);
   setShown(parts.content, false);
   setShown(parts.empty, false);
 
   const setCursor = (cursor: number | null): void => around.remember({ cursor } as Partial<ViewMemory<V>>);
 
   const redraw = (): void => {
-    if (sheet === undefined) return;
-    plots.draw(readTheme(document.body));
+    // Without a size; it is drawn when it is chosen.
+    if (sheet === undefined || !parts.panel.isConnected) return;
+    theme = readTheme(document.body);
+    plots.draw(theme);
     showCursor(sheet);
   };
 
@@ -64,7 +73,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     if (stop < 0) return;
     const read = readAt(stop);
     plots.setCursor(cursor === null ? null : stop);
-    showReadout(parts.readout, read);
+    showReadout(parts.readout, read, theme);
     setText(parts.spoken, cursor === null ? "" : read.spoken);
     parts.plots.setAttribute("aria-valuemin", "0");
     parts.plots.setAttribute("aria-valuemax", String(stops.length - 1));
@@ -95,14 +104,34 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     showSentences(parts.notChecked, "Not checked", sheet.notChecked);
     parts.plots.setAttribute("aria-label", `${sheet.across} of the read-out`);
     setShown(parts.content, true);
+    choices.show(sheet.choices);
+    zoom.show(sheet.zoom);
     plots.show(sheet.plots);
     redraw();
     showTable();
   };
 
   const update = (): void => {
-    if (shown !== undefined) showSheet(view.sheet(shown, around.memory()), shown.old);
+    if (shown !== undefined) showSheet(view.sheet(shown, around.memory(), around.system()), shown.old);
   };
+
+  const zoom = createZoomControl({
+    box: parts.plots,
+    at: plots.at,
+    onZoom(span) {
+      const change = view.zoomed?.(span);
+      if (change === undefined) return;
+      around.remember(change);
+      update();
+      around.ask();
+    },
+  });
+  const choices = createChoices(view.name, (key, value) => {
+    around.remember({ [key]: value } as Partial<ViewMemory<V>>);
+    update();
+    around.ask();
+  });
+  parts.controls.append(choices.element, zoom.element);
 
   const savePicture = (): void => {
     if (sheet === undefined || shown === undefined) return;
@@ -119,6 +148,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
 
   parts.plots.addEventListener("keydown", (event) => {
     if (sheet === undefined || event.altKey || event.ctrlKey || event.metaKey) return;
+    if (zoom.onKey(event, around.memory().cursor ?? sheet.restsAt)) return event.preventDefault();
     const cursor = cursorAfterKey(event.key, around.memory().cursor, sheet.stops, sheet.restsAt);
     if (cursor === undefined) return;
     event.preventDefault();
@@ -126,6 +156,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     showCursor(sheet);
   });
   const placeAt = (event: PointerEvent): void => {
+    if (zoom.isDragging()) return;
     const wanted = plots.at(event.clientX);
     const stop = sheet === undefined || wanted === undefined ? undefined : sheet.stops[nearestStop(sheet.stops, wanted)];
     if (sheet === undefined || stop === undefined) return;

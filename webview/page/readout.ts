@@ -1,8 +1,9 @@
 /** All values at the cursor, as cells that keep their places. */
-import type { ReadOut } from "../frame/sheet.js";
+import type { ReadOut, ReadOutRow } from "../frame/sheet.js";
+import type { Theme } from "../theme/theme.js";
 import { element } from "./element.js";
 
-export function showReadout(table: HTMLTableElement, { at, names, head, rows }: ReadOut): void {
+export function showReadout(table: HTMLTableElement, { at, names, head, rows }: ReadOut, theme: Theme): void {
   table.replaceChildren(
     element("caption", { text: `At ${at}${names === "" ? "" : `: ${names}`}` }),
     element("thead", {}, [
@@ -11,12 +12,19 @@ export function showReadout(table: HTMLTableElement, { at, names, head, rows }: 
     element(
       "tbody",
       {},
-      rows.map(({ name, cells }) =>
+      rows.map(({ name, cells, swatch }) =>
         element("tr", {}, [
-          element("th", { text: name, attributes: { scope: "row" } }),
+          element("th", { attributes: { scope: "row" } }, [...keyOf(swatch, theme), document.createTextNode(name)]),
           ...cells.map((text) => element("td", { text })),
         ]),
       ),
     ),
   );
+}
+
+function keyOf(swatch: ReadOutRow["swatch"], theme: Theme): HTMLElement[] {
+  if (swatch === undefined) return [];
+  const canvas = element("canvas", { class: "swatch" });
+  swatch(canvas, theme);
+  return [canvas];
 }

@@ -1,7 +1,8 @@
 /** One unit for a whole axis, chosen by its greatest value. */
 import { fromSi, toSi } from "../../extension/units/parse.js";
+import { suitableSymbol, type UnitSystem } from "../../extension/units/systems.js";
 import { type Dimension, UNITS } from "../../extension/units/table.js";
-import { suitableSymbol, typeset } from "../../extension/units/write.js";
+import { typeset } from "../../extension/units/write.js";
 
 export interface AxisUnit {
   /** As people read it: "mN·m". */
@@ -10,8 +11,8 @@ export interface AxisUnit {
   readonly toSi: (value: number) => number;
 }
 
-export function axisUnit(greatestSi: number, dimension: Dimension): AxisUnit {
-  const symbol = suitableSymbol(greatestSi, dimension);
+export function axisUnit(greatestSi: number, dimension: Dimension, system: UnitSystem = "metric"): AxisUnit {
+  const symbol = suitableSymbol(greatestSi, dimension, system);
   const unit = UNITS.get(symbol);
   if (unit === undefined) return { text: typeset(symbol), fromSi: (si) => si, toSi: (value) => value };
   return { text: typeset(symbol), fromSi: (si) => fromSi(si, unit), toSi: (value) => toSi(value, unit) };

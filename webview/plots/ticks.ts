@@ -30,6 +30,16 @@ export function ticksWithin(max: number): readonly number[] {
   return scaleOf(Math.floor(max / step + 1e-9), step).ticks;
 }
 
+/** Round numbers between two ends, `around` them or `within` them, with about as many intervals as asked for. */
+export function ticksBetween(from: number, to: number, intervals: number, place: "around" | "within"): readonly number[] {
+  const step = roundStep((to - from) / intervals, AXIS_MULTIPLES);
+  // A hair, so that an end that is a tick but for rounding counts as one.
+  const first = place === "around" ? Math.floor(from / step + 1e-9) : Math.ceil(from / step - 1e-9);
+  const last = place === "around" ? Math.ceil(to / step - 1e-9) : Math.floor(to / step + 1e-9);
+  if (!(last >= first && last - first < 100)) return [from, to];
+  return Array.from({ length: last - first + 1 }, (_, index) => Number(((first + index) * step).toPrecision(12)));
+}
+
 function scaleOf(intervals: number, step: number): Scale {
   // Twelve digits take off what 3 · 0.1 has too much.
   const ticks = Array.from({ length: intervals + 1 }, (_, index) => Number((index * step).toPrecision(12)));

@@ -3,9 +3,8 @@
  *
  * Reads the classes and variables that the editor puts on the page; says when they change.
  */
-import { QUANTITIES, type QuantityName } from "../views/operatingPoint/quantities.js";
 import { blend, type Colour, luminance, parseColour, withContrast, writeColour } from "./colour.js";
-import { ON_DARK, ON_LIGHT } from "./palette.js";
+import { type ColourName, ON_DARK, ON_LIGHT, type Palette } from "./palette.js";
 
 export type ThemeKind = "light" | "dark" | "high-contrast" | "high-contrast-light";
 
@@ -17,7 +16,9 @@ export interface Theme {
   readonly grid: string;
   readonly quiet: string;
   readonly hatch: string;
-  readonly curves: Readonly<Record<QuantityName, string>>;
+  readonly curves: Palette["curves"];
+  /** For the parts of a stack, in turn; the letters' colour alone in high contrast. */
+  readonly stack: readonly string[];
   readonly fontFamily: string;
 }
 
@@ -48,7 +49,7 @@ export function readTheme(body: HTMLElement): Theme {
       ? tint(1)
       : writeColour(withContrast(blend(foreground, background, 0.65), background, LEAST_CONTRAST, foreground)),
     hatch: isHighContrast ? tint(0.65) : tint(0.32),
-    curves: isHighContrast ? allAlike(writeColour(foreground)) : curveColours(background, foreground),
+    ...(isHighContrast ? allAlike(writeColour(foreground)) : coloursOn(background, foreground)),
     fontFamily: style.getPropertyValue("--vscode-font-family").trim() || "sans-serif",
   };
 }
@@ -63,20 +64,19 @@ export function watchTheme(document: Document, onChange: () => void): void {
 const WHITE: Colour = { red: 255, green: 255, blue: 255, alpha: 1 };
 const BLACK: Colour = { red: 0, green: 0, blue: 0, alpha: 1 };
 
-function curveColours(background: Colour, foreground: Colour): Theme["curves"] {
-  const palette = luminance(background) > 0.2 ? ON_LIGHT : ON_DARK;
-  return eachQuantity((name) => {
-    const colour = parseColour(palette[name]) ?? foreground;
-    return writeColour(withContrast(colour, background, LEAST_CONTRAST, foreground));
-  });
+function coloursOn(background: Colour, foreground: Colour): Palette {
+  const { curves, stack } = luminance(background) > 0.2 ? ON_LIGHT : ON_DARK;
+  const readable = (text: string): string =>
+    writeColour(withContrast(parseColour(text) ?? foreground, background, LEAST_CONTRAST, foreground));
+  return { curves: eachCurve((name) => readable(curves[name])), stack: stack.map(readable) };
 }
 
-function allAlike(colour: string): Theme["curves"] {
-  return eachQuantity(() => colour);
+function allAlike(colour: string): Palette {
+  return { curves: eachCurve(() => colour), stack: [colour] };
 }
 
-function eachQuantity(give: (name: QuantityName) => string): Theme["curves"] {
-  return Object.fromEntries(QUANTITIES.map(({ name }) => [name, give(name)])) as Record<QuantityName, string>;
+function eachCurve(give: (name: ColourName) => string): Palette["curves"] {
+  return Object.fromEntries(Object.keys(ON_DARK.curves).map((name) => [name, give(name as ColourName)])) as Palette["curves"];
 }
 
 /** Any colour that a style sheet may hold, opaque: a canvas gives it back in one of two forms. */

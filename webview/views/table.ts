@@ -1,8 +1,10 @@
 /** The views by name. A new view adds its folder beside this file and a line here. */
 import type { ViewName } from "../../extension/protocol/charts/views.js";
 import { operatingPointView } from "./operatingPoint/view.js";
+import { powerView } from "./power/view.js";
 import type { View } from "./view.js";
 
 export const VIEWS: { readonly [V in ViewName]: View<V> } = {
   "operating-point": operatingPointView,
+  power: powerView,
 };

@@ -1,5 +1,6 @@
 /** What the frame needs of a view. Everything else about it is the view's own. */
 import type { ShownChart, ViewMemory, ViewName, Want } from "../../extension/protocol/charts/views.js";
+import type { UnitSystem } from "../../extension/units/systems.js";
 import type { Sheet } from "../frame/sheet.js";
 
 export interface View<V extends ViewName> {
@@ -10,5 +11,7 @@ export interface View<V extends ViewName> {
   want(memory: ViewMemory<V>): Want;
   /** Names of what is shown: a cursor of one means nothing on another. */
   subject(shown: ShownChart<V>): { readonly mechanism?: string; readonly robot?: string };
-  sheet(shown: ShownChart<V>, memory: ViewMemory<V>): Sheet;
+  sheet(shown: ShownChart<V>, memory: ViewMemory<V>, system: UnitSystem): Sheet;
+  /** What is remembered of a span that someone zooms to; null for all. Absent where there is no zoom. */
+  zoomed?(span: { readonly from: number; readonly to: number } | null): Partial<ViewMemory<V>>;
 }

@@ -1,9 +1,10 @@
 /** The views of the chart panel by name. A new view adds its file beside this one and a line here. */
 import { operatingPointFeature } from "./operatingPoint.js";
+import { createPowerFeature } from "./power.js";
 
 /** What some of them keep between two questions lives as long as what this returns. */
 export function createChartFeatures() {
-  return { "operating-point": operatingPointFeature } as const;
+  return { "operating-point": operatingPointFeature, power: createPowerFeature() } as const;
 }
 
 export type ChartFeatures = ReturnType<typeof createChartFeatures>;

@@ -7,6 +7,9 @@ export const text = v.string();
 /** What arrived is nobody's to change. */
 export const listOf = <S extends v.GenericSchema>(item: S) => v.pipe(v.array(item), v.readonly());
 
+/** A series: long, so checked in one go. */
+export const numbers = v.custom<readonly number[]>((value) => Array.isArray(value) && value.every(Number.isFinite));
+
 export const findingSchema = v.object({ rule: text, level: v.picklist(["error", "warning", "information"]), message: text });
 
 /** What every chart says in words, whatever it plots. */

@@ -5,19 +5,23 @@
  */
 import * as v from "valibot";
 import { NO_OPERATING_POINT_MEMORY, operatingPointMemory, operatingPointShown, operatingPointWant } from "./operatingPoint.js";
+import { NO_POWER_MEMORY, powerMemory, powerShown, powerWant } from "./power.js";
 
 /** In the order of their tabs. */
-export const VIEW_NAMES = ["operating-point"] as const;
+export const VIEW_NAMES = ["operating-point", "power"] as const;
 
 export const viewNameSchema = v.picklist(VIEW_NAMES);
 
-export const wantSchema = v.variant("view", [operatingPointWant]);
+export const wantSchema = v.variant("view", [operatingPointWant, powerWant]);
 
-export const shownSchema = v.variant("view", [operatingPointShown]);
+export const shownSchema = v.variant("view", [operatingPointShown, powerShown]);
 
-export const memoriesSchema = v.object({ "operating-point": operatingPointMemory });
+export const memoriesSchema = v.object({ "operating-point": operatingPointMemory, power: powerMemory });
 
-export const NO_MEMORIES: v.InferOutput<typeof memoriesSchema> = { "operating-point": NO_OPERATING_POINT_MEMORY };
+export const NO_MEMORIES: v.InferOutput<typeof memoriesSchema> = {
+  "operating-point": NO_OPERATING_POINT_MEMORY,
+  power: NO_POWER_MEMORY,
+};
 
 export type ViewName = v.InferOutput<typeof viewNameSchema>;
 /** What the page asks for: a view, and what it wants to see of it. */

@@ -122,10 +122,16 @@ function changeTheme({ bodyClass: classes, variables }: PageTheme): void {
 async function answer(server: Server, { pathname, searchParams }: URL): Promise<{ type: string; body: string }> {
   if (pathname === "/") {
     const base = origin(server);
-    const html = chartHtml({ cspSource: base, nonce: NONCE, scriptUri: `${base}/main.js`, styleUri: `${base}/panel.css` });
+    const html = chartHtml({
+      cspSource: base,
+      nonce: NONCE,
+      scriptUri: `${base}/main.js`,
+      styleUri: `${base}/panel.css`,
+      units: "",
+    });
     const themed = `<link rel="stylesheet" href="${base}/theme.css?${searchParams}">\n<title>`;
     const body = `<body class="${searchParams.get("class") ?? ""}">`;
-    return { type: "text/html", body: html.replace("<title>", themed).replace("<body>", body) };
+    return { type: "text/html", body: html.replace("<title>", themed).replace('<body data-units="">', body) };
   }
   if (pathname === "/theme.css") {
     const { variables } = pageThemes[(searchParams.get("theme") ?? "dark") as ThemeName];

@@ -30,6 +30,8 @@ describe("the cursor of the chart's page", () => {
     await chart.page.keyboard.press("Tab");
     assert.equal(await chart.page.evaluate(() => document.activeElement?.getAttribute("role")), "tab");
     await chart.page.keyboard.press("Tab");
+    assert.equal(await chart.page.evaluate(() => document.activeElement?.tagName), "SELECT");
+    await chart.page.keyboard.press("Tab");
     const plots = chart.page.getByRole("slider", { name: "Torque of the read-out" });
     assert.equal(await plots.evaluate((element) => element === document.activeElement), true);
     const before = await picture();

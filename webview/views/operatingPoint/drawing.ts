@@ -5,6 +5,7 @@
  */
 import type { CurveValues, OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
 import type { ShownChart } from "../../../extension/protocol/charts/views.js";
+import type { UnitSystem } from "../../../extension/units/systems.js";
 import { writeNumber } from "../../../extension/units/write.js";
 import { type AxisUnit, axisUnit, PER_CENT } from "../../plots/axisUnit.js";
 import { alignedScales, type Scale, ticksWithin } from "../../plots/ticks.js";
@@ -64,11 +65,14 @@ const BEHIND = 1.06;
 /** A needed torque up to this multiple of the longer line stretches the axis; a greater one is named at its end. */
 const STRETCH = 2;
 
-export function drawChart({ chart, saved }: Pick<ShownChart<"operating-point">, "chart" | "saved">): Drawing {
-  const torque = torqueAxis(chart, saved);
+export function drawChart(
+  { chart, saved }: Pick<ShownChart<"operating-point">, "chart" | "saved">,
+  system: UnitSystem = "metric",
+): Drawing {
+  const torque = torqueAxis(chart, saved, system);
   const toX = torque.unit.fromSi;
   const plot = (left: Quantity, right: Quantity): PlotDrawing => {
-    const [leftAxis, rightAxis] = valueAxes(chart, saved, left, right);
+    const [leftAxis, rightAxis] = valueAxes(chart, saved, left, right, system);
     const draw = (quantity: Quantity, { unit }: AxisDrawing): { curves: Curve[]; marks: Mark[] } => ({
       curves: curvesOf(chart, saved, quantity, toX, unit.fromSi),
       marks: marksOf(chart, quantity, toX, unit.fromSi),
@@ -94,13 +98,13 @@ export function drawChart({ chart, saved }: Pick<ShownChart<"operating-point">, 
   };
 }
 
-function torqueAxis(chart: OperatingPointChart, saved: OperatingPointChart | null): AxisDrawing {
+function torqueAxis(chart: OperatingPointChart, saved: OperatingPointChart | null, system: UnitSystem): AxisDrawing {
   const lines = [chart, ...(saved ? [saved] : [])].flatMap(({ samples }) => samples.map(({ torqueNm }) => torqueNm));
   const longest = Math.max(0, ...lines);
   const needed = chart.hardest.torqueNm;
   const stretched = needed <= longest * STRETCH ? Math.max(longest, needed) : longest;
   const greatest = stretched > 0 ? stretched : needed > 0 ? needed : 1;
-  const unit = axisUnit(greatest, "torque");
+  const unit = axisUnit(greatest, "torque", system);
   const max = unit.fromSi(greatest) * BEHIND;
   return { max, ticks: ticksWithin(max), title: `Torque at one motor's shaft (${unit.text})`, unit };
 }
@@ -119,10 +123,11 @@ function valueAxes(
   saved: OperatingPointChart | null,
   left: Quantity,
   right: Quantity,
+  system: UnitSystem,
 ): readonly [AxisDrawing, AxisDrawing] {
   const drafts = [left, right].map((quantity) => {
     const greatest = Math.max(0, ...valuesOf(chart, quantity), ...(saved ? valuesOf(saved, quantity) : []));
-    const unit = quantity.dimension === "share" ? PER_CENT : axisUnit(greatest, quantity.dimension);
+    const unit = quantity.dimension === "share" ? PER_CENT : axisUnit(greatest, quantity.dimension, system);
     // Efficiency is read against the whole.
     const shown = quantity.dimension === "share" ? Math.max(greatest, 1) : greatest;
     return { unit, greatest: unit.fromSi(shown), title: `${quantity.title} (${unit.text})` };

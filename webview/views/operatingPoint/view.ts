@@ -1,6 +1,7 @@
 /** The view of one mechanism's operating point: two plots over torque, of what its motors give and what its load needs. */
 import type { OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
 import type { ShownChart } from "../../../extension/protocol/charts/views.js";
+import type { UnitSystem } from "../../../extension/units/systems.js";
 import { factsBeside, type PlotPart, type ReadOut, type Sheet } from "../../frame/sheet.js";
 import type { View } from "../view.js";
 import { fileOf } from "./csv.js";
@@ -25,9 +26,9 @@ export const operatingPointView: View<"operating-point"> = {
   sheet: operatingPointSheet,
 };
 
-export function operatingPointSheet(shown: Shown): Sheet {
+export function operatingPointSheet(shown: Shown, _memory: unknown, system: UnitSystem): Sheet {
   const { chart, saved } = shown;
-  const drawing = drawChart(shown);
+  const drawing = drawChart(shown, system);
   const units = unitsOf(drawing);
   const stops = stopsOf(chart);
   const read = (stop: number): ReadOut => readoutOf(stops[stop] as Stop, units);
@@ -49,7 +50,9 @@ export function operatingPointSheet(shown: Shown): Sheet {
     restsAt: chart.hardest.torqueNm,
     readAt: read,
     table: () => tableOf(chart.mechanism, stops, units),
-    file: () => fileOf(stops),
+    file: () => fileOf(stops, system),
+    choices: [],
+    zoom: null,
     footnote: footnoteOf(chart),
   };
 }

@@ -1,0 +1,48 @@
+/** Axes of series: from their least to their greatest value, 0 among them where that is near, with round ticks. Pure. */
+
+import type { UnitSystem } from "../../../extension/units/systems.js";
+import type { Dimension } from "../../../extension/units/table.js";
+import { type AxisUnit, axisUnit } from "../axisUnit.js";
+import { ticksBetween } from "../ticks.js";
+import type { SeriesAxis } from "./drawing.js";
+
+/** Least room that a value axis leaves beyond its greatest value, as a share. */
+const HEADROOM = 0.06;
+
+/** An axis of values: it ends at ticks. `fromZero`: 0 belongs to it. */
+export function valueAxis(
+  name: string,
+  values: Iterable<number>,
+  dimension: Dimension,
+  system: UnitSystem,
+  { fromZero = true, intervals = 4 }: { readonly fromZero?: boolean; readonly intervals?: number } = {},
+): SeriesAxis {
+  const [least, greatest] = extent(values, fromZero);
+  const unit = axisUnit(Math.max(Math.abs(least), Math.abs(greatest)), dimension, system);
+  const [low, high] = [unit.fromSi(least), unit.fromSi(greatest)];
+  const room = (high - low) * HEADROOM;
+  const ticks = ticksBetween(
+    low < 0 || !fromZero ? low - room : low,
+    high > 0 || !fromZero ? high + room : high,
+    intervals,
+    "around",
+  );
+  return { min: ticks[0] ?? 0, max: ticks.at(-1) ?? 1, ticks, title: `${name} (${unit.text})`, unit };
+}
+
+/** An axis that ends where it must, such as one of time. */
+export function fixedAxis(name: string, unit: AxisUnit, from: number, to: number): SeriesAxis {
+  const [min, max] = to > from ? [from, to] : [from, from + (Math.abs(from) || 1)];
+  return { min, max, ticks: ticksBetween(min, max, 6, "within"), title: `${name} (${unit.text})`, unit };
+}
+
+function extent(values: Iterable<number>, fromZero: boolean): readonly [number, number] {
+  let [least, greatest] = fromZero ? [0, 0] : [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (const value of values) {
+    if (value < least) least = value;
+    if (value > greatest) greatest = value;
+  }
+  if (!Number.isFinite(least) || !Number.isFinite(greatest)) return [0, 1];
+  if (least < greatest) return [least, greatest];
+  return least === 0 ? [0, 1] : [Math.min(least, least * 0.9, least * 1.1), Math.max(least, least * 0.9, least * 1.1)];
+}
