@@ -1,12 +1,12 @@
 /**
  * Which declared numbers matter: per cent of a result for one per cent of an input.
  *
- * Central differences of logarithms, by building the declaration again; counts (teeth, motors) go by one up and down. Costs two solutions
- * for every number, so it is computed when asked for and not on every edit.
+ * Central differences of logarithms, by building the declaration again; counts (teeth, motors) go by one up and down. Costs two short
+ * solutions for every number that the results depend on, so it is computed when asked for and not on every edit.
  */
 import type { Mechanism } from "../declarations/mechanism.js";
-import type { Supply } from "../model/drive.js";
-import { solveMechanism } from "../model/solve.js";
+import type { Drive, Supply } from "../model/drive.js";
+import { type Effects, effectsOf, withoutWatches } from "../model/effects.js";
 import type { AnalysedMechanism, Analysis } from "./analysis.js";
 import { robotOf, supplyCallOf } from "./lentSupply.js";
 import { type Leaf, leavesBelow, rebuild } from "./rebuild.js";
@@ -18,13 +18,13 @@ export interface Sensitivity {
   readonly perCentPerPerCent: number;
 }
 
-/** Step of a quantity as a share: the error of the difference is its square, the solver's noise 1e-8 over it. */
-const STEP = 1e-3;
+/** Step of a quantity as a share: the error of the difference is about its square over 6, the solver's noise 1e-7 over twice of it. */
+const STEP = 3e-3;
 /** Below this an input does not matter: it is the noise of the solver. */
 const LEAST = 1e-4;
 
 /** By falling size; empty where the mechanism has no numbers. */
-export function sensitivitiesOf(analysis: Analysis, { call, declared, numbers }: AnalysedMechanism): Sensitivity[] {
+export function sensitivitiesOf(analysis: Analysis, { call, declared, numbers, drive }: AnalysedMechanism): Sensitivity[] {
   if (declared === undefined || numbers === undefined) return [];
   const robot = declared.si.supply === undefined ? robotOf(declared, analysis.robots) : undefined;
   const supplyCall = robot && supplyCallOf(robot);
@@ -32,33 +32,39 @@ export function sensitivitiesOf(analysis: Analysis, { call, declared, numbers }:
     ...leavesBelow(call),
     ...(supplyCall === undefined ? [] : leavesBelow(supplyCall).map((leaf) => ({ ...leaf, label: `supply.${leaf.label}` }))),
   ];
-  const outputsWith = (leaf: Leaf, plain: string | number): Outputs | undefined => {
+  const driveWith = (leaf: Leaf, plain: string | number): Drive | undefined => {
     const replacements = new Map([[leaf, plain]]);
     const mechanism = rebuild(call, replacements) as Mechanism | undefined;
     const lent = supplyCall && (rebuild(supplyCall, replacements) as { readonly si: Supply } | undefined)?.si;
-    if (mechanism === undefined) return undefined;
-    return outputsOf(solveMechanism(lent === undefined ? mechanism.si : { ...mechanism.si, supply: lent }));
+    return mechanism && withoutWatches(lent === undefined ? mechanism.si : { ...mechanism.si, supply: lent });
   };
+  const nominal = JSON.stringify(drive && withoutWatches(drive));
   const found = leaves.flatMap((leaf): Sensitivity[] => {
     const steps = stepsOf(leaf);
-    const [low, high] = steps?.map(({ plain }) => outputsWith(leaf, plain)) ?? [];
-    if (steps === undefined || low === undefined || high === undefined) return [];
-    const span = Math.log(steps[1].value / steps[0].value);
-    return OUTPUTS.flatMap((output) => {
-      const [before, after] = [low[output], high[output]];
-      if (!(before !== null && after !== null && before > 0 && after > 0)) return [];
-      const perCentPerPerCent = Math.log(after / before) / span;
-      return Math.abs(perCentPerPerCent) < LEAST ? [] : [{ input: leaf.label, output, perCentPerPerCent }];
-    });
+    const high = steps && driveWith(leaf, steps[1].plain);
+    // What is only watched moves nothing.
+    if (steps === undefined || high === undefined || JSON.stringify(high) === nominal) return [];
+    const low = driveWith(leaf, steps[0].plain);
+    return low === undefined
+      ? []
+      : between(leaf.label, effectsOf(low), effectsOf(high), Math.log(steps[1].value / steps[0].value));
   });
   return found.sort((a, b) => Math.abs(b.perCentPerPerCent) - Math.abs(a.perCentPerPerCent) || compare(a, b));
 }
 
-type Outputs = Readonly<Record<Sensitivity["output"], number | null>>;
-const OUTPUTS = ["current", "time", "share"] as const;
+const OUTPUTS = { current: "currentA", time: "timeS", share: "share" } as const satisfies Record<
+  Sensitivity["output"],
+  keyof Effects
+>;
 
-function outputsOf({ hardest, travel }: ReturnType<typeof solveMechanism>): Outputs {
-  return { current: hardest.motorCurrentA, time: travel?.timeS ?? null, share: hardest.stallShare };
+/** `span`: between the logarithms of the input. */
+function between(input: string, low: Effects, high: Effects, span: number): Sensitivity[] {
+  return Object.entries(OUTPUTS).flatMap(([output, effect]) => {
+    const [before, after] = [low[effect], high[effect]];
+    if (!(before !== null && after !== null && before > 0 && after > 0)) return [];
+    const perCentPerPerCent = Math.log(after / before) / span;
+    return Math.abs(perCentPerPerCent) < LEAST ? [] : [{ input, output: output as Sensitivity["output"], perCentPerPerCent }];
+  });
 }
 
 interface Step {

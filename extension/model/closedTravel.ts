@@ -39,8 +39,11 @@ export function hasClosedForm(plant: Plant): boolean {
   return load.steady && !plant.motor.thermal && !protection && plant.rampS === 0 && supply?.mustStayAbove === undefined;
 }
 
-/** From a speed at which it accelerates to the goal; null where it does not start or never gets there. */
-export function closedTravel(plant: Plant, fromRadPerS: number, goal: ClosedGoal): ClosedTravel | null {
+/**
+ * From a speed at which it accelerates to the goal; null where it does not start or never gets there. `sums`: whether the integrals are
+ * wanted; without them they stay 0.
+ */
+export function closedTravel(plant: Plant, fromRadPerS: number, goal: ClosedGoal, sums = true): ClosedTravel | null {
   const at = createInstant();
   const seen = {
     timeS: 0,
@@ -65,7 +68,7 @@ export function closedTravel(plant: Plant, fromRadPerS: number, goal: ClosedGoal
     const lastsS = arrives ? timeToProgress(piece, left, borderS) : borderS;
     if (lastsS === null) return null;
     const end = !arrives && Number.isFinite(Math.min(border, target)) ? Math.min(border, target) : speedAfter(piece, lastsS);
-    addIntegrals(plant, piece, lastsS, at, seen);
+    if (sums) addIntegrals(plant, piece, lastsS, at, seen);
     progress += progressAfter(piece, lastsS);
     seen.timeS += lastsS;
     speed = end;

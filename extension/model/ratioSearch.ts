@@ -4,6 +4,7 @@
  * Searches the ratio alone, as a number; teeth that exist are chosen elsewhere.
  */
 import type { Drive, Stage } from "./drive.js";
+import { withoutWatches } from "./effects.js";
 import { hardestPosition } from "./hardest.js";
 import { availableLine } from "./line.js";
 import { trainOf } from "./stages.js";
@@ -52,7 +53,7 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
     const factor = Math.exp(log);
     // Travels that take too many steps to follow are absurd and slow: one of them ends the search.
     if (unresolved > 0) return Number.POSITIVE_INFINITY;
-    const travel = solveTravel(withRatioTimes(unwatched, factor));
+    const travel = solveTravel(withRatioTimes(unwatched, factor), { coarse: true, timeOnly: true });
     if (travel?.outcome === "unresolved") unresolved++;
     const timeS = travel?.timeS ?? null;
     if (timeS !== null && (best === null || timeS < best.timeS)) best = { ratio: ratio * factor, timeS };
@@ -76,11 +77,4 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
     }
   }
   return best;
-}
-
-/** Protection and the voltage floor are only watched: the time is the same without them, and found in closed form more often. */
-function withoutWatches({ protection: _protection, supply, ...drive }: Drive): Drive {
-  if (supply === undefined) return drive;
-  const { mustStayAbove: _floor, ...unwatched } = supply;
-  return { ...drive, supply: unwatched };
 }

@@ -25,18 +25,19 @@ export function solveTravel(drive: Drive, options: TravelOptions = {}): TravelRe
   const start = plant.load.endless ? (options.fromSpeedRadPerS ?? 0) : 0;
   if (goal.reachable && goal.target <= Math.max(start, NO_TRAVEL)) return nothingToDo(plant, options);
   const closed = goal.reachable && !options.sampling && hasClosedForm(plant) && !isFollowing(plant, scalesOf(plant));
-  return (closed ? inClosedForm(plant, goal, start) : null) ?? integrateTravel(plant, goal, options);
+  return (closed ? inClosedForm(plant, goal, start, !options.timeOnly) : null) ?? integrateTravel(plant, goal, options);
 }
 
 function nothingToDo(plant: Plant, options: TravelOptions): TravelResult {
   return finishTravel(plant, createObserver(plant, false), startState(plant, options.from), 0, "arrives");
 }
 
-function inClosedForm(plant: Plant, goal: TravelGoal, fromRadPerS: number): TravelResult | null {
+function inClosedForm(plant: Plant, goal: TravelGoal, fromRadPerS: number, sums: boolean): TravelResult | null {
   const found = closedTravel(
     plant,
     fromRadPerS,
     plant.load.endless ? { speedRadPerS: goal.target } : { progressRad: goal.target },
+    sums,
   );
   if (!found) return null;
   return {

@@ -28,6 +28,10 @@ export interface TravelResult extends Readonly<Observation> {
 
 export interface TravelOptions {
   readonly sampling?: boolean;
+  /** To 1e-7 instead of 1e-8, for what-ifs. */
+  readonly coarse?: boolean;
+  /** Current and energy over the time are not wanted; they are then 0 where a closed form holds. */
+  readonly timeOnly?: boolean;
   /** Absent: cold, protection at rest. */
   readonly from?: CarriedState;
   /** Speed that a flywheel starts from, rad/s. */

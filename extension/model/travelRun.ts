@@ -6,6 +6,7 @@
 import { type Course, integrate } from "./integrate.js";
 import type { Mode } from "./motionLayout.js";
 import {
+  COARSE_FACTOR,
   CORNERED_SHARE,
   EXPLICIT_TOLERANCE,
   isFollowing,
@@ -27,6 +28,8 @@ import { finishTravel, type TravelOptions, type TravelResult } from "./travelRes
 const MOST_PHASES = 10_000;
 /** A course that has not ended by then never does. */
 const NEVER_S = 1e30;
+/** After this many time constants what settled at the start is below 1e-8. */
+const SETTLING_TIME_CONSTANTS = 20;
 /** Travels of more time constants than this go by the stiff method. */
 const STIFF_TIME_CONSTANTS = 150;
 
@@ -41,21 +44,26 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   // At a current limit the start shows nothing of the line's own time constant.
   const fastest = Math.max(fastestRate(moving, 0, state), mechanicalRate(plant));
   const stiff = kind === "following" || fastest * Math.max(scales.timeS, plant.rampS) > STIFF_TIME_CONSTANTS;
-  const method = methodFor(plant, stiff);
+  const method = methodFor(plant, stiff, options.coarse);
+  const settling = methodFor(plant, false, options.coarse);
   let timeS = 0;
   let stepS = (stiff ? 0.02 : 0.1) * Math.min(1 / fastest, scales.timeS);
   observer.look(moving, timeS, state);
 
   if (!starts(plant, moving, state)) {
-    const wait = awaitStart(plant, scales, observer, state, kind);
+    const wait = awaitStart(plant, scales, observer, state, kind, options.coarse);
     timeS = wait.timeS;
     if (!wait.started) return finishTravel(plant, observer, state, timeS, wait.finished ? "never-starts" : "unresolved");
   }
+  // What settles at the start does so fastest by the explicit method; only then its short time constant is in the way.
+  const settledS = stiff && kind === "moving" ? timeS + SETTLING_TIME_CONSTANTS / fastest : timeS;
   let next = 0;
   moving.setTarget(targets[0] as number, pieceTowards(plant, 0, targets[0] as number));
   for (let phase = 0; phase < MOST_PHASES; phase++) {
-    const endS = timeS < plant.rampS ? plant.rampS : NEVER_S;
-    const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, method));
+    const settles = timeS < settledS;
+    const rampedS = timeS < plant.rampS ? plant.rampS : NEVER_S;
+    const endS = settles ? Math.min(settledS, rampedS) : rampedS;
+    const arrival = integrate(moving, timeS, state, course(moving, observer, endS, stepS, settles ? settling : method));
     timeS = arrival.timeS;
     stepS = arrival.nextStepS;
     if (!arrival.finished) break;
@@ -85,11 +93,12 @@ function awaitStart(
   observer: Observer,
   state: Float64Array,
   startsAs: "moving" | "following",
+  coarse = false,
 ): { readonly timeS: number; readonly started: boolean; readonly finished: boolean } {
   if (!(plant.rampS > 0)) return { timeS: 0, started: false, finished: true };
   const mode: Mode = { kind: "blocked", startsAs };
   const blocked = motionSystem(plant, mode, scales);
-  const method = methodFor(plant, fastestRate(blocked, plant.rampS, state) * plant.rampS > STIFF_TIME_CONSTANTS);
+  const method = methodFor(plant, fastestRate(blocked, plant.rampS, state) * plant.rampS > STIFF_TIME_CONSTANTS, coarse);
   const arrival = integrate(blocked, 0, state, course(blocked, observer, plant.rampS, plant.rampS / 50, method));
   return {
     timeS: arrival.timeS,
@@ -105,8 +114,8 @@ function course(system: MotionSystem, observer: Observer, endS: number, firstSte
 
 type Method = Pick<Course, "stiff" | "tolerance">;
 
-function methodFor(plant: Plant, stiff: boolean): Method {
-  const share = plant.load.corners.length > 0 ? CORNERED_SHARE : 1;
+function methodFor(plant: Plant, stiff: boolean, coarse = false): Method {
+  const share = (plant.load.corners.length > 0 ? CORNERED_SHARE : 1) * (coarse ? COARSE_FACTOR : 1);
   return { stiff, tolerance: share * (stiff ? STIFF_TOLERANCE : EXPLICIT_TOLERANCE) };
 }
 
