@@ -1,6 +1,7 @@
 /** The numbers that a proposal predicts, and how they are told beside those that are: what stays good or gets better, then what gets worse. */
 import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
+import type { RuleId } from "../rules/rule.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import type { Predicted } from "./proposal.js";
 
@@ -30,8 +31,8 @@ export interface Difference {
   readonly worse: boolean;
 }
 
-/** The mechanism's numbers that differ. */
-export function differencesOf(was: Predicted, will: Predicted): Difference[] {
+/** The mechanism's numbers that differ; those of a stall only for a finding about one. */
+export function differencesOf(was: Predicted, will: Predicted, rule: RuleId): Difference[] {
   const seconds = (value: number) => writeQuantity(value, "time");
   const celsius = (value: number) => writeQuantity(value + CELSIUS_ZERO_K, "temperature");
   return [
@@ -50,6 +51,13 @@ export function differencesOf(was: Predicted, will: Predicted): Difference[] {
       gone: "protection stays closed",
     }),
     ...differenceOf(was.windingPeakC, will.windingPeakC, { write: celsius, say: (text) => `winding ${text}`, isWorse: more }),
+    ...(rule === "unprotected" ? stallDifferences(was, will) : []),
+  ];
+}
+
+function stallDifferences(was: Predicted, will: Predicted): Difference[] {
+  const seconds = (value: number) => writeQuantity(value, "time");
+  return [
     ...differenceOf(was.stalledLimitAfterS, will.stalledLimitAfterS, {
       write: seconds,
       say: (text) => `stalled, the winding's limit after ${text}`,

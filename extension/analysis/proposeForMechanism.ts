@@ -5,6 +5,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import { DEFINITIONS } from "../declarations/table.js";
 import type { DefinitionCall } from "../evaluator/value.js";
+import { lazySolution } from "../model/lazySolution.js";
 import { solveMechanismRuns } from "../model/solve.js";
 import { candidateGroups, type Group } from "../proposals/candidates.js";
 import type { Change, Setting, Situation } from "../proposals/change.js";
@@ -95,7 +96,26 @@ function factsWith({ mechanism: { call, drive, declared } }: Search, change: Cha
   if (changed === undefined || drive === undefined) return undefined;
   const lent = declared?.si.supply === undefined && drive.supply !== undefined ? { supply: drive.supply } : {};
   const changedDrive = { ...changed.si, ...lent };
-  return { mechanism: changed, drive: changedDrive, ...solveMechanismRuns(changedDrive) };
+  return lazyFacts(changed, changedDrive);
+}
+
+/** Most candidates are dropped by one number: the others are then never worked out. */
+function lazyFacts(mechanism: Mechanism, drive: MechanismFacts["drive"]): MechanismFacts {
+  const solution = lazySolution(drive);
+  return {
+    mechanism,
+    drive,
+    numbers: solution.numbers,
+    get travel() {
+      return solution.travel;
+    },
+    get hold() {
+      return solution.hold;
+    },
+    get stall() {
+      return solution.stall;
+    },
+  };
 }
 
 /** `undefined` where the finding is gone and no other rule newly speaks at its level or above. */
@@ -120,9 +140,9 @@ function prove({ analysis, finding, mechanism, analyse }: Search, change: Change
   const changed = after?.mechanisms.find(({ name }) => name === mechanism.name);
   if (edits === undefined || after === undefined || changed === undefined || !hasNumbers(changed) || !hasNumbers(mechanism))
     return undefined;
-  const touches = changedBy(analysis, after, mechanism.name);
+  const touches = changedBy(analysis, after, finding);
   const will = predict(changed.numbers, changed.drive);
-  const differences = differencesOf(predict(mechanism.numbers, mechanism.drive), will);
+  const differences = differencesOf(predict(mechanism.numbers, mechanism.drive), will, finding.rule);
   const words = capital(change.words);
   const names = touches.map((one) => one.mechanism);
   return {
@@ -140,7 +160,7 @@ function prove({ analysis, finding, mechanism, analyse }: Search, change: Change
 
 function tellMiss({ mechanism, finding, facts }: Search, { change, facts: after }: Miss): Proposal {
   const will = predict(after.numbers, after.drive);
-  const differences = differencesOf(predict(facts.numbers, facts.drive), will);
+  const differences = differencesOf(predict(facts.numbers, facts.drive), will, finding.rule);
   return {
     finding,
     mechanism: mechanism.name,

@@ -177,7 +177,7 @@ function prove(search: Search, tried: Tried): Proposal | undefined {
   const { solution, drive } = changed ?? {};
   if (after === undefined || edits === undefined || solution === undefined || drive === undefined) return undefined;
   if (missesOf(solution) > search.misses) return undefined;
-  const touches = changedBy(analysis, after, null);
+  const touches = changedBy(analysis, after, finding);
   const [was, will] = [predictRobot(one, search.before), predictRobot(one, { solution, drive })];
   const differences = robotDifferences(was, will);
   const words = tellSettings(one, tried.sets);

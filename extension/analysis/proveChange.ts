@@ -55,14 +55,14 @@ export interface Changed extends Touched {
   readonly told: string;
 }
 
-/** Every mechanism whose numbers the edits changed but `except`. */
-export function changedBy(before: Analysis, after: Analysis, except: string | null): Changed[] {
+/** Every mechanism whose numbers the edits for a finding changed, but the one that it is about. */
+export function changedBy(before: Analysis, after: Analysis, { rule, mechanism: except }: Finding): Changed[] {
   return after.mechanisms.flatMap((one): Changed[] => {
     const was = before.mechanisms.find(({ name }) => name === one.name);
     if (one.name === except || !hasNumbers(one) || was === undefined || !hasNumbers(was)) return [];
     if (JSON.stringify(one.numbers) === JSON.stringify(was.numbers)) return [];
     const predicted = predict(one.numbers, one.drive);
-    const differences = differencesOf(predict(was.numbers, was.drive), predicted);
+    const differences = differencesOf(predict(was.numbers, was.drive), predicted, rule);
     const numbers = differences.map(({ now, before: old }) => (old === undefined ? now : `${now} instead of ${old}`));
     return [
       {

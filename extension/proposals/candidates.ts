@@ -3,6 +3,7 @@
  *
  * Never a bigger fuse or breaker.
  */
+import { quickestRatio } from "../model/ratioSearch.js";
 import type { Change, Situation } from "./change.js";
 import { oneGear, oneMoreStage, twoGears, type Wanted } from "./gears.js";
 import { currentLimits, lowerCommands, moreMotors, moreTime } from "./settings.js";
@@ -15,7 +16,6 @@ export interface Group {
 
 const HIGHER: Wanted = { atLeast: 1, atMost: 100 };
 const LOWER: Wanted = { atLeast: 0.01, atMost: 1 };
-const EITHER: Wanted = { atLeast: 0.01, atMost: 100 };
 
 /** Empty for rules that no change of these kinds can clear. */
 export function candidateGroups(rule: string, situation: Situation): Group[] {
@@ -37,7 +37,11 @@ export function candidateGroups(rule: string, situation: Situation): Group[] {
     case "sags":
       return [{ changes: currentLimits(situation) }, { changes: lowerCommands(situation) }];
     case "late":
-      return [...gearGroups(situation, EITHER), { changes: moreMotors(situation) }, { changes: moreTime(situation) }];
+      return [
+        ...gearGroups(situation, towardsQuickest(situation)),
+        { changes: moreMotors(situation) },
+        { changes: moreTime(situation) },
+      ];
     case "beyond-speed":
     case "no-headroom":
       return gearGroups(situation, LOWER);
@@ -48,6 +52,17 @@ export function candidateGroups(rule: string, situation: Situation): Group[] {
 
 function strongerGroups(situation: Situation, wanted: Wanted): Group[] {
   return [...gearGroups(situation, wanted), { changes: moreMotors(situation) }];
+}
+
+/**
+ * From the ratio that is to as far beyond the quickest one: the time has one minimum over the ratio, and teeth in stock may miss it.
+ * Either way where no ratio arrives.
+ */
+function towardsQuickest({ drive, numbers }: Situation): Wanted {
+  const quickest = quickestRatio(drive);
+  if (quickest === null) return { atLeast: 0.01, atMost: 100 };
+  const beyond = (quickest.ratio / numbers.ratio) ** 2;
+  return { atLeast: Math.min(beyond, 1), atMost: Math.max(beyond, 1) };
 }
 
 function gearGroups(situation: Situation, wanted: Wanted): Group[] {

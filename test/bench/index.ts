@@ -8,6 +8,7 @@ import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
 import { measureActivation } from "./activation.js";
 import { measureAnalysis } from "./analysis.js";
 import { type Beside, measureBeside, type Pair } from "./beside.js";
+import { measureProposals } from "./proposals.js";
 import { soak } from "./soak.js";
 import { tellNumber, tellRatio, tellSpread } from "./spread.js";
 import { measureTravels } from "./travel.js";
@@ -20,6 +21,7 @@ export interface BenchHost {
 
 export const sections: Record<string, { readonly title: string; readonly run: (host: BenchHost) => Promise<void> }> = {
   model: { title: "one mechanism", run: benchModel },
+  proposals: { title: "what clears a finding", run: benchProposals },
   editor: { title: "beside TypeScript's server", run: benchBeside },
   client: { title: "activation and sizes", run: benchClient },
   soak: { title: "10,000 edits", run: benchSoak },
@@ -40,6 +42,15 @@ async function benchModel(): Promise<void> {
   console.log(
     `  with ${times.sensitivities} sensitivities: ${tellSpread(times.with, "ms")}, bar 5 ms: ${tellBar(times.with.median, 5)}`,
   );
+}
+
+async function benchProposals(): Promise<void> {
+  for (const { name, time, candidatesPerSecond, found } of measureProposals(15)) {
+    const bar = name.startsWith("a robot") ? "" : `, bar 100 ms: ${tellBar(time.median, 100)}`;
+    console.log(
+      `  ${name}: ${tellSpread(time, "ms")} to ${found} proposals, ${tellNumber(candidatesPerSecond)} candidates/s${bar}`,
+    );
+  }
 }
 
 async function benchClient({ makePackages }: BenchHost): Promise<void> {
