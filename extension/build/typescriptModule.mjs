@@ -1,11 +1,13 @@
-// Makes dist/typescript.js: TypeScript's own compiler file, minified, as one module that the server, the command and a
-// browser worker share and load lazily. The file's function wrapper is taken off, since an engine compiles what is
-// inside such a wrapper at once but a module's functions only when called (loading took 130 ms instead of 220 ms), and
-// `require` is defined away, so that the module reaches neither disk nor process. It changes nothing else of the compiler.
+// Makes dist/typescript.js: the parser of TypeScript's own compiler file, minified, as one module that the server, the
+// command and a browser worker share and load lazily. The file is taken apart into a module of plain declarations, so
+// that the bundler can leave out whatever the names of parserNames.ts do not need: the checker, the emitter and all that
+// editors ask of a language service, three quarters of the file. `require` is defined away, so that the module reaches
+// neither disk nor process. An identifier gets its text, which is left to the language service; else nothing is changed.
 
 import { readFile } from "node:fs/promises";
 import { join } from "node:path";
 import { build } from "esbuild";
+import { importTypeScript } from "./importTypeScript.mjs";
 import { repositoryRoot } from "./repositoryRoot.mjs";
 
 /**
@@ -23,13 +25,11 @@ export function shareTypeScript(up) {
 }
 
 /** @param {string} outfile */
-export function buildTypeScript(outfile) {
+export async function buildTypeScript(outfile) {
   const compiler = join(repositoryRoot, "node_modules/typescript/lib/typescript.js");
+  const { PARSER_NAMES, START_OF_NODE } = await importTypeScript("extension/evaluator/parserNames.ts");
   return build({
-    stdin: {
-      contents: `export { default } from ${JSON.stringify(compiler)}; export * from ${JSON.stringify(compiler)};`,
-      resolveDir: repositoryRoot,
-    },
+    entryPoints: [compiler],
     outfile,
     bundle: true,
     minify: true,
@@ -42,10 +42,10 @@ export function buildTypeScript(outfile) {
     logLevel: "error",
     plugins: [
       {
-        name: "unwrap-typescript",
+        name: "cut-out-parser",
         setup(builder) {
           builder.onLoad({ filter: /[\\/]typescript\.js$/ }, async ({ path }) => ({
-            contents: unwrap(await readFile(path, "utf8")),
+            contents: cutOut([...PARSER_NAMES, START_OF_NODE], await readFile(path, "utf8")),
             loader: "js",
           }));
         },
@@ -54,18 +54,31 @@ export function buildTypeScript(outfile) {
   });
 }
 
-/** @param {string} source */
-function unwrap(source) {
-  const open = 'var ts = {}; ((module) => {\n"use strict";\n';
-  const publish = "module.exports = __toCommonJS(typescript_exports);\n";
-  const close = "// Annotate the CommonJS export names for ESM import in node:";
-  const [notice, afterOpen] = splitOnce(source, open);
-  const [beforePublish, afterPublish] = splitOnce(afterOpen, publish);
-  const [body] = splitOnce(afterPublish, close);
-  const names = [...beforePublish.matchAll(/^ {2}(\w+): \(\) => (\w+),?$/gm)].map(([, name, local]) =>
-    name === local ? name : `${local} as ${name}`,
+/**
+ * @param {readonly string[]} names of the compiler's namespace
+ * @param {string} source the compiler's file
+ */
+function cutOut(names, source) {
+  const [notice, afterOpen] = splitOnce(source, 'var ts = {}; ((module) => {\n"use strict";\n');
+  const [helpers, afterHelpers] = splitOnce(afterOpen, "__export(typescript_exports, {");
+  const [list, rest] = splitOnce(afterHelpers, "module.exports = __toCommonJS(typescript_exports);\n");
+  // What comes behind the compiler only makes use of it.
+  const [compiler] = splitOnce(rest, "\n// src/jsTyping/");
+  const locals = new Map([...list.matchAll(/^ {2}(\w+): \(\) => (\w+),?$/gm)].map(([, name, local]) => [name, local]));
+  const entries = names.map((name) => {
+    if (!locals.has(name)) throw new Error(`TypeScript no longer has ${name}: parserNames.ts must learn its new name.`);
+    return `${name}: ${locals.get(name)}`;
+  });
+  // Lists of a part's own names: only those are kept that something asks for.
+  const declarations = compiler.replaceAll(
+    /^var (\w+) = \{\};\n__export\(\1, (\{[\s\S]*?\n\})\);$/gm,
+    "var $1 = /* @__PURE__ */ listed($2);",
   );
-  return `${notice}${beforePublish}${body}\nexport { typescript_exports as default, ${names.join(", ")} };`;
+  const named = `
+    class Named extends objectAllocator.getIdentifierConstructor() { get text() { return idText(this); } }
+    setObjectAllocator({ ...objectAllocator, getIdentifierConstructor: () => Named, getPrivateIdentifierConstructor: () => Named });`;
+  const listed = "function listed(names) { const list = {}; __export(list, names); return list; }";
+  return `${notice}${helpers}${declarations}\n${listed}\n${named}\nexport default { ${entries.join(", ")} };`;
 }
 
 /**

@@ -33,11 +33,11 @@ export function findBinding({ ts }: Context, node: ts.CallExpression, module: Mo
 export function findComments({ ts }: Context, node: ts.CallExpression, module: Module): DefinitionCall["leadingComments"] {
   const { text } = module.source;
   let holder: ts.Node = node;
-  while (holder.parent !== undefined && !(isHolder(ts, holder) && startsItsLine(text, holder.getStart(module.source.root)))) {
+  while (holder.parent !== undefined && !(isHolder(ts, holder) && startsItsLine(text, module.source.startOf(holder)))) {
     holder = holder.parent;
   }
   const comments: { text: string; span: { file: string; start: number; end: number } }[] = [];
-  let below = holder.getStart(module.source.root);
+  let below = module.source.startOf(holder);
   for (const { pos, end } of [...(ts.getLeadingCommentRanges(text, holder.pos) ?? [])].reverse()) {
     const isRightAbove = text.slice(end, below).split("\n").length <= 2;
     // A comment behind the code of the line before belongs to that line.

@@ -175,7 +175,7 @@ function findThisHolder({ ts }: Context, node: ts.Node): ts.Node | undefined {
 }
 
 function isInside(node: ts.Node, outer: ts.Node): boolean {
-  return node.pos >= outer.pos && node.end <= outer.end && node.getSourceFile() === outer.getSourceFile();
+  return node.pos >= outer.pos && node.end <= outer.end;
 }
 
 function isMarked({ ts }: Context, node: ts.Node, kind: ts.SyntaxKind): boolean {

@@ -11,7 +11,7 @@ import { finish, originOf } from "./operations.js";
 import { asNumber } from "./operators.js";
 import { evaluateName, inOrder } from "./propertyName.js";
 import type { Binding } from "./source.js";
-import { known, quoteText, spanOf, unknown, unsupported } from "./unknown.js";
+import { known, quote, spanOf, unknown, unsupported } from "./unknown.js";
 import type { Origin, Span, Value } from "./value.js";
 
 interface Member {
@@ -67,7 +67,7 @@ export function memberValue(ctx: Context, member: ts.EnumMember, home: Frame): V
   const { module, memo } = home;
   const origin: Origin = { kind: "name", span: spanOf(member.name, module), from: [] };
   if (memo.has(member))
-    return memo.get(member) ?? unknown("cycle", `${quoteText(member.name.getText())} is defined in terms of itself.`, "", origin);
+    return memo.get(member) ?? unknown("cycle", `${quote(member.name, module)} is defined in terms of itself.`, "", origin);
   memo.set(member, undefined);
   const value = member.initializer === undefined ? counted(ctx, member, home) : initialised(ctx, member.initializer, home);
   memo.set(member, value);
@@ -85,7 +85,7 @@ function initialised(ctx: Context, initializer: ts.Expression, home: Frame): Val
 function counted(ctx: Context, member: ts.EnumMember, home: Frame): Value {
   const { module } = home;
   if (isAmbient(ctx.ts, member.parent)) {
-    const message = `${quoteText(member.name.getText())} is declared without a value: only the running program has it.`;
+    const message = `${quote(member.name, module)} is declared without a value: only the running program has it.`;
     return unknown("ambient", message, "give it its value here", originOf("name", member.name, home, []));
   }
   const { members } = member.parent;
@@ -99,7 +99,7 @@ function counted(ctx: Context, member: ts.EnumMember, home: Frame): Value {
   const from = memberValue(ctx, base, home);
   const origin = originOf("operation", member.name, home, [from]);
   if (!from.known) {
-    const message = `${quoteText(member.name.getText())} counts on from a member that cannot be known.`;
+    const message = `${quote(member.name, module)} counts on from a member that cannot be known.`;
     return unknown("depends", message, "give it its value here", origin, from);
   }
   if (from.data.kind !== "primitive" || typeof from.data.value !== "number") {

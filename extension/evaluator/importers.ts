@@ -178,7 +178,7 @@ export function importBehind(
 
 function leadsTo(ctx: Context, from: Module, specifier: ts.StringLiteralLike, passer: Module): boolean {
   if (!mayLeadTo(specifier.text, passer.file)) return false;
-  const span = { file: from.file, start: specifier.getStart(from.source.root), end: specifier.end };
+  const span = { file: from.file, start: from.source.startOf(specifier), end: specifier.end };
   const loaded = ctx.load(from, specifier.text, span);
   return loaded.kind === "module" && loaded.module === passer;
 }

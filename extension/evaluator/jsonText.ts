@@ -20,7 +20,9 @@ export function readJsonText(typescript: TypeScript, file: string, text: string)
     ...describeError(typescript, error, root === undefined, text),
     placeOf(path, of) {
       const node = root === undefined ? undefined : nodeAt(typescript, root, path, of);
-      return node === undefined ? { start: 0, end: text.length } : { start: node.getStart(source), end: node.getEnd() };
+      return node === undefined
+        ? { start: 0, end: text.length }
+        : { start: typescript.getTokenPosOfNode(node, source), end: node.end };
     },
   };
 }

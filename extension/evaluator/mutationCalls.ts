@@ -5,7 +5,7 @@
  * A call that isn't known to leave its arguments alone may change them.
  */
 import type ts from "typescript";
-import type { Module } from "./context.js";
+import type { Frame, Module } from "./context.js";
 import { isExported } from "./exports.js";
 import { type Change, type Flow, flowInto, flowIntoName, loseTrack, narrow, relist, type Search, wrap } from "./flow.js";
 import { findTarget } from "./modules.js";
@@ -162,7 +162,7 @@ function followFunction(search: Search, module: Module, node: ts.Node, given: re
   const whole = given.find((flow) => flow !== undefined && loseTrack(node, module, flow) !== undefined);
   if (found === undefined) return whole === undefined ? undefined : loseTrack(node.parent, module, whole);
   // `arguments` reaches every parameter under no name of its own.
-  if (/\barguments\b/.test(found.node.getText(found.module.source.root))) return whole && loseTrack(node.parent, module, whole);
+  if (/\barguments\b/.test(found.module.source.textOf(found.node))) return whole && loseTrack(node.parent, module, whole);
   const parameters = listParameters(ts, found.node);
   for (const [index, flow] of given.entries()) {
     const last = parameters.at(-1);
@@ -246,7 +246,8 @@ function callsOwnFunction({ ctx }: Search, method: string, { objects, wraps }: F
     const own = data.kind === "object" ? data.entries.get(method) : undefined;
     const callable =
       own?.known === true && own.data.kind === "function" && "callable" in own.data ? own.data.callable : undefined;
-    const { node } = (callable ?? {}) as { readonly node?: ts.Node };
-    return node !== undefined && !/\bthis\b/.test(node.getText()) && ctx.ts.isFunctionLike(node);
+    const { node, frame } = (callable ?? {}) as { readonly node?: ts.Node; readonly frame?: Frame };
+    if (node === undefined || frame === undefined || !ctx.ts.isFunctionLike(node)) return false;
+    return !/\bthis\b/.test(frame.module.source.textOf(node));
   });
 }

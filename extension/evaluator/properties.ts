@@ -58,7 +58,7 @@ function listProperties(ts: TypeScript, source: Source): PropertyTable {
       if (ts.isIdentifier(property) && binding !== undefined) add(property.text, binding);
     } else if (ts.isCallExpression(node)) {
       const [first] = node.arguments;
-      if (first !== undefined && DEFINING.has(node.expression.getText(source.root)) && isClassOrThis(ts, first, source))
+      if (first !== undefined && DEFINING.has(source.textOf(node.expression)) && isClassOrThis(ts, first, source))
         written.add(ANY);
     }
     ts.forEachChild(node, (child) => {

@@ -56,6 +56,9 @@ export interface Source {
   /** Identifiers that stand for a value, in no order. */
   readonly identifiers: readonly ts.Identifier[];
   readonly derived: Derived;
+  /** Offset of a node's first character, behind the blanks and comments before it. */
+  startOf(node: ts.Node): number;
+  textOf(node: ts.Node): string;
 }
 
 /** What follows from the text as well, worked out once something asks for it. */
@@ -139,8 +142,10 @@ function walk(ts: TypeScript, file: string, text: string, root: ts.SourceFile, u
       stack.push({ node: child, scope });
     });
   }
-  calls.sort((a, b) => a.getStart(root) - b.getStart(root) || b.end - a.end);
-  return { file, text, root, unreadable, scopes, calls, identifiers, derived: {} };
+  const startOf = (each: ts.Node): number => ts.getTokenPosOfNode(each, root);
+  const textOf = (each: ts.Node): string => text.slice(startOf(each), each.end);
+  calls.sort((a, b) => startOf(a) - startOf(b) || b.end - a.end);
+  return { file, text, root, unreadable, scopes, calls, identifiers, derived: {}, startOf, textOf };
 }
 
 /** Types leave nothing behind at run time; `extends X<T>` is written as a type but is an expression. */

@@ -4,11 +4,13 @@
  * Everything else in this room takes the namespace as a value, so that importing the room costs nothing.
  */
 import type ts from "typescript";
+import type { PARSER_NAMES, START_OF_NODE } from "./parserNames.js";
 
-export type TypeScript = typeof ts;
+export type TypeScript = Pick<typeof ts, (typeof PARSER_NAMES)[number]> &
+  Record<typeof START_OF_NODE, (node: ts.Node, source: ts.SourceFile) => number>;
 
 /** The compiler's namespace, whichever way the bundler or the runtime wraps a CommonJS module. */
 export async function loadTypeScript(): Promise<TypeScript> {
-  const loaded: TypeScript & { readonly default?: TypeScript } = await import("typescript");
+  const loaded = (await import("typescript")) as unknown as TypeScript & { readonly default?: TypeScript };
   return loaded.default?.createSourceFile === undefined ? loaded : loaded.default;
 }

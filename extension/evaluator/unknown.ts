@@ -52,12 +52,12 @@ export function suggest(name: string, candidates: Iterable<string>): string {
 }
 
 export function spanOf(node: ts.Node, module: Module): Span {
-  return { file: module.file, start: node.getStart(module.source.root), end: node.end };
+  return { file: module.file, start: module.source.startOf(node), end: node.end };
 }
 
 /** The expression's own text on one line, shortened, in backquotes. */
 export function quote(node: ts.Node, module: Module): string {
-  const start = node.getStart(module.source.root);
+  const start = module.source.startOf(node);
   return quoteText(module.source.text.slice(start, Math.min(node.end, start + 400)));
 }
 

@@ -1,8 +1,9 @@
 /** `loadmark.json`: the nearest one above a file sets the levels there. */
-import ts from "typescript";
+
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import { analyseFixture, checkFindings, PRELUDE } from "../support/checkFindings.js";
+import { parser as ts } from "../support/parser.js";
 
 const hub = (name: string) =>
   `export const ${name} = mechanism("${name}", { motor: twelveVolt, stages: [], load: roller({ torque: "1.2 N*m" }) });`;

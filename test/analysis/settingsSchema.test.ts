@@ -1,10 +1,10 @@
 /** The shipped JSON Schema and the settings that the analysis takes say the same. */
 import { readFileSync } from "node:fs";
 import path from "node:path";
-import ts from "typescript";
 import { describe, expect, it } from "vitest";
 import { parseSettings } from "../../extension/analysis/settings.js";
 import { RULES } from "../../extension/rules/table.js";
+import { parser as ts } from "../support/parser.js";
 
 const schema = JSON.parse(readFileSync(path.join(import.meta.dirname, "../../extension/analysis/loadmark.schema.json"), "utf8"));
 

@@ -1,10 +1,11 @@
 /** Mechanisms that shared helpers, loops and barrels declare: each once, by its own name, with its own findings. */
-import ts from "typescript";
+
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
 import { checkFindings, PRELUDE } from "../support/checkFindings.js";
 import { readFixture } from "../support/fixture.js";
+import { parser as ts } from "../support/parser.js";
 
 /** As a host does it: the files that name the library are the roots. */
 function analyseAsHost(text: string): Analysis {

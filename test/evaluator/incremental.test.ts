@@ -1,8 +1,8 @@
 /** What an edit costs, and that what is kept is never out of date. */
 import fc from "fast-check";
-import ts from "typescript";
 import { describe, expect, it, vi } from "vitest";
 import type { FileEvaluation, Snapshot } from "../../extension/evaluator/value.js";
+import { parser as ts } from "../support/parser.js";
 import { indexed, makeEvaluator, plain, snapshotOf, splitFiles } from "./support/workspace.js";
 
 const FIXTURE = `//- a.ts

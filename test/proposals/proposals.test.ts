@@ -1,12 +1,12 @@
 /** Proposals: each one, applied to the texts and checked again, clears its finding and brings nothing new at that level. */
 import { assert, constantFrom, integer, property, record } from "fast-check";
-import ts from "typescript";
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Proposal } from "../../extension/analysis/proposal.js";
 import { proposalsFor } from "../../extension/analysis/propose.js";
 import { withEdits } from "../../extension/analysis/writeChange.js";
 import { analyseFixture, PRELUDE } from "../support/checkFindings.js";
+import { parser as ts } from "../support/parser.js";
 
 const HEAVY = (stages: string, extra = "") => `${PRELUDE}
 export const hoist = mechanism("hoist", {

@@ -1,6 +1,5 @@
 /** Proposals for a whole robot: staggered steps and limited currents, each applied to the texts and checked again. */
 import { array, assert, constantFrom, integer, property, record, subarray } from "fast-check";
-import ts from "typescript";
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis, Finding } from "../../extension/analysis/analysis.js";
@@ -8,6 +7,7 @@ import type { Proposal } from "../../extension/analysis/proposal.js";
 import { proposalsFor } from "../../extension/analysis/propose.js";
 import { withEdits } from "../../extension/analysis/writeChange.js";
 import { analyseFixture } from "../support/checkFindings.js";
+import { parser as ts } from "../support/parser.js";
 
 const HEAD = `import { battery, breaker, lift, mechanism, motor, reduction, robot, roller } from "loadmark";
 const twelveVolt = motor({ voltage: "12 V", noLoad: { speed: "100 rpm", current: "0.2 A" }, stall: { torque: "2 N*m", current: "4 A" } });

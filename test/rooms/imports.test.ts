@@ -2,7 +2,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { isBuiltin } from "node:module";
 import path from "node:path";
-import ts from "typescript";
+import ts from "typescript/lib/typescript.js";
 import { describe, expect, it } from "vitest";
 
 const ROOT = path.join(import.meta.dirname, "../..");

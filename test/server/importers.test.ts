@@ -1,9 +1,10 @@
 /** The session with the real analysis, over files that import each other: who changes an object, who calls a helper, what comes later. */
-import ts from "typescript";
+
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import { type Result, Session, TYPING_DELAY_MS } from "../../extension/server/session.js";
 import { createMemoryFiles } from "../support/memoryFiles.js";
+import { parser as ts } from "../support/parser.js";
 
 beforeEach(() => {
   vi.useFakeTimers();

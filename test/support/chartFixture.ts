@@ -1,5 +1,5 @@
 /** A chart as the page gets it, from declarations in a string, through the whole way: evaluation, model, chart, JSON. */
-import ts from "typescript";
+
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
 import { operatingPointChart } from "../../extension/features/charts/operatingPoint.js";
@@ -7,6 +7,7 @@ import { type OperatingPointChart, operatingPointChartSchema } from "../../exten
 import type { ShownChart as AnyShownChart } from "../../extension/protocol/charts/views.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { readFixture } from "./fixture.js";
+import { parser as ts } from "./parser.js";
 
 export function analyseFixture(source: string): Analysis {
   const { files, snapshot } = readFixture(source);

@@ -1,9 +1,10 @@
 /** Analyses a fixture and holds its findings to its marks: both ways, ranges included. */
-import ts from "typescript";
+
 import { expect } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
 import { readFixture } from "./fixture.js";
+import { parser as ts } from "./parser.js";
 
 /** Motors, supply and imports that most fixtures start with: invented, with round numbers. */
 export const PRELUDE = `import { arm, battery, between, breaker, chain, flywheel, lift, mechanism, motor, reduction, roller, spur, wheels } from "loadmark";

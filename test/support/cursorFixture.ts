@@ -1,8 +1,9 @@
 /** A fixture with a cursor, which is a comment that holds nothing but a bar, analysed. */
-import ts from "typescript";
+
 import { type Analyser, createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
 import { readFixture } from "./fixture.js";
+import { parser as ts } from "./parser.js";
 
 export interface Analysed {
   readonly analysis: Analysis;

@@ -1,5 +1,5 @@
 /** Runs small programs for real, to compare with what the evaluator claims. Only tests run anything. */
-import ts from "typescript";
+import ts from "typescript/lib/typescript.js";
 import { expect } from "vitest";
 import type { Value } from "../../../extension/evaluator/value.js";
 import type { Statement } from "./programs.js";

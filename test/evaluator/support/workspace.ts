@@ -1,5 +1,5 @@
 /** Evaluates code that is given as one string, against two small definitions of this room's own. */
-import ts from "typescript";
+
 import { createEvaluator, type Evaluator } from "../../../extension/evaluator/evaluator.js";
 import { createImportIndex } from "../../../extension/evaluator/importIndex.js";
 import type { TypeScript } from "../../../extension/evaluator/typescript.js";
@@ -12,6 +12,7 @@ import type {
   Unknown,
   Value,
 } from "../../../extension/evaluator/value.js";
+import { parser as ts } from "../../support/parser.js";
 
 /** Accepts anything: for looking at values. */
 const probe: Definition = {
