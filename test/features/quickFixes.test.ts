@@ -1,11 +1,12 @@
 /** Quick fixes, each applied to the text and analysed again: the finding that it names is gone. */
-import ts from "typescript";
+
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import { proposalsFor } from "../../extension/analysis/propose.js";
 import { findingsTouching, type QuickFix, quickFixesAt } from "../../extension/features/quickFixes.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { MOTOR } from "../support/handNumbers.js";
+import { parser as ts } from "../support/parser.js";
 
 interface Offered {
   readonly fixes: readonly QuickFix[];

@@ -1,11 +1,12 @@
 /** Proposals of the server: found in slices, kept, and stopped by a change of the text. */
-import ts from "typescript";
+
 import { describe, expect, it } from "vitest";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Finding } from "../../extension/analysis/analysis.js";
 import { createProposer } from "../../extension/server/proposer.js";
 import type { Result } from "../../extension/server/session.js";
 import { analyseFixture, PRELUDE } from "../support/checkFindings.js";
+import { parser as ts } from "../support/parser.js";
 
 /** A hoist past its peak: what may clear it is searched over gears and motors. */
 function resultWithFinding(): { readonly result: Result; readonly finding: Finding; readonly analyses: { count: number } } {
