@@ -11,7 +11,7 @@ export function applyAllowances(findings: readonly Finding[], declared: Declared
   const about: Finding[] = [];
   const silenced = new Set<Finding>();
   for (const { at, text, names, robots } of listComments(declared)) {
-    const match = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/.exec(text.trim());
+    const match = ALLOWANCE.exec(text.trim());
     if (match === null) continue;
     const [, rule = "", reason = ""] = match;
     const isMeant = (finding: Finding): boolean =>
@@ -23,6 +23,18 @@ export function applyAllowances(findings: readonly Finding[], declared: Declared
     else for (const finding of hit) silenced.add(finding);
   }
   return [...findings.filter((finding) => !silenced.has(finding)), ...about];
+}
+
+const ALLOWANCE = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/;
+
+/** Rules that are allowed, with a reason, above a declaration. */
+export function allowedRules({ leadingComments }: DefinitionCall): Set<string> {
+  return new Set(
+    leadingComments.flatMap(({ text }) => {
+      const [, rule = "", reason = ""] = ALLOWANCE.exec(text.trim()) ?? [];
+      return reason.trim() === "" ? [] : [rule];
+    }),
+  );
 }
 
 interface Comment {

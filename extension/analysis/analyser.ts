@@ -58,6 +58,7 @@ export function createAnalyser(typescript: TypeScript): Analyser {
         files,
         wanted: [...new Set([...evaluated.wanted, ...settings.wanted])].sort(),
         snapshot,
+        levels: settings.levels,
         toothCounts: settings.toothCounts,
       };
     },

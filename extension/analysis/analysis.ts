@@ -64,6 +64,8 @@ export interface AnalysedRobot {
   readonly notChecked: readonly string[];
 }
 
+export type Levels = Readonly<Partial<Record<RuleId, Level | "off">>>;
+
 export interface Analysis {
   /** In order of file, then position; so are findings. */
   readonly mechanisms: readonly AnalysedMechanism[];
@@ -77,6 +79,8 @@ export interface Analysis {
   /** Files to load before the result is whole; the host loads them and runs again. */
   readonly wanted: readonly string[];
   readonly snapshot: Snapshot;
+  /** Levels of rules by file, where the project's settings name them. */
+  readonly levels: ReadonlyMap<string, Levels>;
   /** Tooth counts in stock by file, where the project's settings name them. */
   readonly toothCounts: ReadonlyMap<string, readonly number[]>;
 }

@@ -10,7 +10,7 @@ import type { Snapshot } from "../evaluator/value.js";
 import { badDeclaration } from "../rules/badDeclaration.js";
 import type { Level, RuleId } from "../rules/rule.js";
 import { RULES } from "../rules/table.js";
-import type { Finding } from "./analysis.js";
+import type { Finding, Levels } from "./analysis.js";
 
 export const SETTINGS_FILE = "loadmark.json";
 
@@ -34,6 +34,7 @@ export interface ReadSettings {
   readonly findings: readonly Finding[];
   readonly wanted: readonly string[];
   readonly toothCounts: ReadonlyMap<string, readonly number[]>;
+  readonly levels: ReadonlyMap<string, Levels>;
   /** Findings with the levels of the settings nearest to each; those turned off are left out. */
   applyLevels(findings: readonly Finding[]): Finding[];
 }
@@ -78,6 +79,7 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
           toothCounts ? [[file, [...toothCounts].sort((a, b) => a - b)] as const] : [],
         ),
       ),
+      levels: new Map([...nearestOf].flatMap(([file, { levels }]) => (levels ? [[file, levels] as const] : []))),
       applyLevels: (found) =>
         found.flatMap((finding) => {
           const wished = nearestOf.get(finding.at.file)?.levels?.[finding.rule as RuleId];

@@ -6,6 +6,9 @@
 import type { Stage } from "../declarations/stages.js";
 import type { Change, Situation } from "./change.js";
 
+/** What a choice of gears rests on. */
+export type Gearing = Pick<Situation, "mechanism" | "toothCounts">;
+
 /** Bounds of the new ratio over the old one. */
 export interface Wanted {
   readonly atLeast: number;
@@ -17,7 +20,7 @@ const TOOTHED: ReadonlySet<Stage["kind"]> = new Set(["spur", "chain", "belt"]);
 const SLACK = 1e-9;
 
 /** One gear of one stage, or the number of one plain reduction. */
-export function oneGear({ mechanism, toothCounts }: Situation, wanted: Wanted): Change[] {
+export function oneGear({ mechanism, toothCounts }: Gearing, wanted: Wanted): Change[] {
   return mechanism.stages
     .flatMap((stage, index) => {
       if (stage.kind === "reduction") return otherReduction(stage, index, wanted);
@@ -29,7 +32,7 @@ export function oneGear({ mechanism, toothCounts }: Situation, wanted: Wanted): 
 }
 
 /** Both gears of one stage. */
-export function twoGears({ mechanism, toothCounts }: Situation, wanted: Wanted): Change[] {
+export function twoGears({ mechanism, toothCounts }: Gearing, wanted: Wanted): Change[] {
   return mechanism.stages
     .flatMap((stage, index) => {
       if (!TOOTHED.has(stage.kind)) return [];
@@ -52,7 +55,7 @@ export function twoGears({ mechanism, toothCounts }: Situation, wanted: Wanted):
 }
 
 /** One more pair of spur gears behind the stages that are there. */
-export function oneMoreStage({ toothCounts }: Situation, wanted: Wanted): Change[] {
+export function oneMoreStage({ toothCounts }: Gearing, wanted: Wanted): Change[] {
   return toothCounts
     .flatMap((driver) => toothCounts.map((driven) => ({ driver, driven, factor: driven / driver })))
     .filter(({ factor }) => factor !== 1 && isWanted(factor, wanted))

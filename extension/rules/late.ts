@@ -5,11 +5,17 @@ import type { MechanismFacts, MechanismRule, Verdict } from "./rule.js";
 
 export const late: MechanismRule = { id: "late", level: "warning", silences: [], judge };
 
-function judge({ mechanism, drive, travel }: MechanismFacts): Verdict | undefined {
-  const within = drive.withinS;
-  if (within === undefined || travel === null || (travel.timeS !== null && travel.timeS <= within)) return undefined;
+/** Without the way out, which is dear to work out. */
+export function isLate({ drive: { withinS }, travel }: Pick<MechanismFacts, "drive" | "travel">): boolean {
+  if (withinS === undefined || travel === null || (travel.timeS !== null && travel.timeS <= withinS)) return false;
   // Too many steps to follow: nothing is known of its time.
-  if (travel.outcome === "unresolved") return undefined;
+  return travel.outcome !== "unresolved";
+}
+
+function judge(facts: MechanismFacts): Verdict | undefined {
+  const { mechanism, drive, travel } = facts;
+  const within = drive.withinS;
+  if (!isLate(facts) || within === undefined || travel === null) return undefined;
   const took = travel.timeS === null ? "the travel never ends" : `the travel takes ${writeQuantity(travel.timeS, "time")}`;
   return {
     message: `Late: ${took}, but may take ${writeQuantity(within, "time")}. ${wayOut(mechanism.ratio, drive, within)}`,

@@ -288,6 +288,7 @@ function resultOfNothing(snapshot: TextSnapshot): Result {
     findings: [],
     findingsByMechanism: new Map<string, readonly Finding[]>(),
     wanted: [],
+    levels: new Map(),
     toothCounts: new Map<string, readonly number[]>(),
   };
   const analyse: Engine["analyse"] = (_roots, given) => ({ ...nothing, files: new Map(), snapshot: given });

@@ -54,6 +54,7 @@ function analyse(roots: readonly string[], snapshot: Snapshot): Analysis {
     findingsByMechanism: new Map(),
     files,
     wanted: [...wanted],
+    levels: new Map(),
     toothCounts: new Map(),
     snapshot,
   };

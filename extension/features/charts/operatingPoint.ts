@@ -4,12 +4,12 @@
  * SI throughout, one motor unless the name says otherwise; what does not apply is null. How it looks is the chart's business.
  */
 import type { Analysis, Finding } from "../../analysis/analysis.js";
+import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
 import { availableLine, type MotorLine, sheetLine } from "../../model/line.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
 import { operatingPointAt } from "../../model/operatingPoint.js";
 import { linePoint } from "../../model/peaks.js";
-import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "../bestPoints.js";
 import { positionWords } from "../positionWords.js";
 import { findingsAbout, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";

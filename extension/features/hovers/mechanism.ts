@@ -2,10 +2,10 @@
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
 import { sensitivitiesOf } from "../../analysis/sensitivity.js";
 import type { DefinitionCall, Span } from "../../evaluator/value.js";
+import { bestEfficiencyPoint, greatestPowerPoint } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
 import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
-import { bestEfficiencyPoint, greatestPowerPoint } from "../bestPoints.js";
 import { callsWithin } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { chartLink, revealLink } from "../links.js";

@@ -4,10 +4,10 @@
  * Efficiency here is that of reports: from the motor's terminals, so that supply and wiring do not count. Found by narrowing, since a
  * current limit bends the line and the terminals' voltage changes along it.
  */
-import type { Drive } from "../model/drive.js";
-import { availableLine } from "../model/line.js";
-import { breakawayCurrent } from "../model/motor.js";
-import { type OperatingPoint, operatingPointAt } from "../model/operatingPoint.js";
+import type { Drive } from "./drive.js";
+import { availableLine } from "./line.js";
+import { breakawayCurrent } from "./motor.js";
+import { type OperatingPoint, operatingPointAt } from "./operatingPoint.js";
 
 /** Torque at which one motor stands still, N·m: the available line's, or less under a current limit. */
 export function greatestTorque(drive: Drive): number {
