@@ -6,7 +6,7 @@ import { join } from "node:path";
 import { gzipSync } from "node:zlib";
 import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
 import { measureActivation } from "./activation.js";
-import { measureAnalysis } from "./analysis.js";
+import { measureAnalyses } from "./analysis.js";
 import { type Beside, measureBeside, type Pair } from "./beside.js";
 import { measureProposals } from "./proposals.js";
 import { soak } from "./soak.js";
@@ -30,18 +30,17 @@ export const sections: Record<string, { readonly title: string; readonly run: (h
 const benchFolder = join(cacheFolder, "../bench");
 
 async function benchModel(): Promise<void> {
-  for (const { name, ours, odex, mathjs } of measureTravels(200)) {
-    console.log(
-      `  travel of the ${name}: ours ${tellSpread(ours, "ms")}, odex ${tellSpread(odex, "ms")}, mathjs ${tellSpread(mathjs, "ms")}`,
-    );
+  const travels = measureTravels(270);
+  for (const { name, ours, odex, mathjs } of travels) {
+    const rest = mathjs === undefined ? "" : `, mathjs ${tellSpread(mathjs, "ms")}`;
+    console.log(`  travel of the ${name}: ours ${tellSpread(ours, "ms")}, odex ${tellSpread(odex, "ms")}${rest}`);
     console.log(`  ${tellRatio("over odex", ours.median / odex.median, 1)}`);
-    console.log(`  ${tellRatio("over mathjs", ours.median / mathjs.median, 1 / 50)}`);
+    if (mathjs !== undefined) console.log(`  ${tellRatio("over mathjs", ours.median / mathjs.median, 1 / 50)}`);
   }
-  const times = measureAnalysis(100);
-  console.log(`  from text to findings: ${tellSpread(times.without, "ms")}`);
-  console.log(
-    `  with ${times.sensitivities} sensitivities: ${tellSpread(times.with, "ms")}, bar 5 ms: ${tellBar(times.with.median, 5)}`,
-  );
+  for (const { name, without, with: whole, sensitivities } of measureAnalyses(100)) {
+    console.log(`  ${name}: from text to findings ${tellSpread(without, "ms")}`);
+    console.log(`    with ${sensitivities} sensitivities: ${tellSpread(whole, "ms")}, bar 5 ms: ${tellBar(whole.median, 5)}`);
+  }
 }
 
 async function benchProposals(): Promise<void> {
