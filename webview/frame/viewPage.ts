@@ -127,7 +127,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     },
   });
   const choices = createChoices(view.name, (key, value) => {
-    around.remember({ [key]: value } as Partial<ViewMemory<V>>);
+    around.remember(view.chosen?.(key, value) ?? ({ [key]: value } as Partial<ViewMemory<V>>));
     update();
     around.ask();
   });

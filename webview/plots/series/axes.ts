@@ -9,7 +9,7 @@ import type { SeriesAxis } from "./drawing.js";
 /** Least room that a value axis leaves beyond its greatest value, as a share. */
 const HEADROOM = 0.06;
 
-/** An axis of values: it ends at ticks. `fromZero`: 0 belongs to it. */
+/** An axis of values: it ends at ticks, but below 0. `fromZero`: 0 belongs to it. */
 export function valueAxis(
   name: string,
   values: Iterable<number>,
@@ -21,13 +21,13 @@ export function valueAxis(
   const unit = axisUnit(Math.max(Math.abs(least), Math.abs(greatest)), dimension, system);
   const [low, high] = [unit.fromSi(least), unit.fromSi(greatest)];
   const room = (high - low) * HEADROOM;
-  const ticks = ticksBetween(
-    low < 0 || !fromZero ? low - room : low,
-    high > 0 || !fromZero ? high + room : high,
-    intervals,
-    "around",
-  );
-  return { min: ticks[0] ?? 0, max: ticks.at(-1) ?? 1, ticks, title: `${name} (${unit.text})`, unit };
+  const top = high > 0 || !fromZero ? high + room : high;
+  const around = ticksBetween(fromZero ? Math.max(low, 0) : low - room, top, intervals, "around");
+  if (!fromZero || low >= 0)
+    return { min: around[0] ?? 0, max: around.at(-1) ?? 1, ticks: around, title: `${name} (${unit.text})`, unit };
+  // Below 0 it ends where the values do: another whole interval would be empty for most.
+  const [min, max] = [low - room, high > 0 ? (around.at(-1) ?? top) : 0];
+  return { min, max, ticks: ticksBetween(min, max, intervals, "within"), title: `${name} (${unit.text})`, unit };
 }
 
 /** An axis that ends where it must, such as one of time. */

@@ -56,7 +56,8 @@ export interface Level {
 export interface Upright {
   readonly x: number;
   readonly words: string;
-  readonly kind: "event" | "part" | "saved";
+  /** `due`: when something should have happened. */
+  readonly kind: "event" | "part" | "due";
 }
 
 export interface Dot {

@@ -103,9 +103,9 @@ function paintLevels(
 function paintUpright(pen: CanvasRenderingContext2D, { x, kind }: Upright, frame: Frame, theme: Theme): void {
   const at = Math.round(frame.x(x)) + 0.5;
   pen.save();
-  pen.strokeStyle = kind === "event" ? theme.foreground : theme.quiet;
+  pen.strokeStyle = kind === "part" ? theme.quiet : theme.foreground;
   pen.lineWidth = 1;
-  pen.setLineDash(kind === "event" ? [] : kind === "part" ? [4, 3] : [1, 3]);
+  pen.setLineDash(kind === "event" ? [] : [4, 3]);
   pen.beginPath();
   pen.moveTo(at, frame.area.top);
   pen.lineTo(at, frame.area.bottom);

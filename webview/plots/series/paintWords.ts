@@ -77,7 +77,7 @@ function wordsOf(
     ...drawing.uprights
       .filter(({ x, words }) => words !== "" && isSeen(x))
       .map(({ x, words, kind }) =>
-        label(words, kind === "event" ? theme.foreground : theme.quiet, kind !== "event", (width) => [
+        label(words, kind === "part" ? theme.quiet : theme.foreground, kind === "part", (width) => [
           ...placesBeside(frame.x(x), area, width, LINE_HEIGHT).filter((place) => kind !== "part" || place.x > frame.x(x)),
           ...placesUpright(frame.x(x), area, LINE_HEIGHT).filter((place) => kind !== "part" || place.x > frame.x(x)),
         ]),

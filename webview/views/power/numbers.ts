@@ -1,16 +1,14 @@
 /** The same load cycle in numbers: facts of the whole run, the read-out at a moment, the table and the file. */
 import type { PowerChart } from "../../../extension/protocol/charts/power.js";
-import { numberIn, plainSymbol, type UnitSystem } from "../../../extension/units/systems.js";
+import type { UnitSystem } from "../../../extension/units/systems.js";
 import { typeset, writeNumber, writeQuantity } from "../../../extension/units/write.js";
 import { digits } from "../../frame/csv.js";
 import type { ReadOut, Table } from "../../frame/sheet.js";
 import { paintSwatch } from "../../plots/series/bandFill.js";
+import { listed, NOTHING, temperatureColumn, writeTemperature } from "../../quantity.js";
 import { totalsOf } from "./drawings.js";
-import { listed, writeTemperature } from "./stateRows.js";
 
-const NOTHING = "–";
 const SECONDS_PER_HOUR = 3600;
-const KELVIN = 273.15;
 /** About this many rows for people. */
 const ROWS = 24;
 
@@ -71,7 +69,7 @@ export function powerTable(chart: PowerChart, stops: readonly number[], system: 
   const { robot, timesS, voltageV, currentA, mechanisms } = chart;
   const totals = totalsOf(chart);
   const least = stops.reduce((one, other) => ((voltageV[other] ?? 0) < (voltageV[one] ?? 0) ? other : one), stops[0] ?? 0);
-  const temperature = plainSymbol("temperature", system);
+  const temperature = temperatureColumn(system);
   const cell = (value: number | undefined): string => writeNumber(cleared(value ?? 0));
   return {
     caption: `${robot}: electrical power over the load cycle`,
@@ -81,7 +79,9 @@ export function powerTable(chart: PowerChart, stops: readonly number[], system: 
       "Current (A)",
       "All (W)",
       ...mechanisms.map(({ name }) => `${name} (W)`),
-      ...mechanisms.flatMap(({ name, windingC }) => (windingC === null ? [] : [`${name}, winding (${typeset(temperature)})`])),
+      ...mechanisms.flatMap(({ name, windingC }) =>
+        windingC === null ? [] : [`${name}, winding (${typeset(temperature.symbol)})`],
+      ),
     ],
     rows: evenly(stops, timesS, least).map((index) => [
       cell(timesS[index]),
@@ -89,9 +89,7 @@ export function powerTable(chart: PowerChart, stops: readonly number[], system: 
       cell(currentA[index]),
       cell(totals[index]),
       ...mechanisms.map(({ powerW }) => cell(powerW[index])),
-      ...mechanisms.flatMap(({ windingC }) =>
-        windingC === null ? [] : [cell(numberIn((windingC[index] ?? 0) + KELVIN, temperature))],
-      ),
+      ...mechanisms.flatMap(({ windingC }) => (windingC === null ? [] : [cell(temperature.numberOf(windingC[index] ?? 0))])),
     ]),
   };
 }
@@ -100,7 +98,7 @@ export function powerTable(chart: PowerChart, stops: readonly number[], system: 
 export function powerFile(chart: PowerChart, system: UnitSystem): Table {
   const { timesS, voltageV, currentA, mechanisms } = chart;
   const totals = totalsOf(chart);
-  const temperature = plainSymbol("temperature", system);
+  const temperature = temperatureColumn(system);
   return {
     caption: "",
     head: [
@@ -109,7 +107,7 @@ export function powerFile(chart: PowerChart, system: UnitSystem): Table {
       "Supply current (A)",
       "All mechanisms (W)",
       ...mechanisms.map(({ name }) => `Power of ${name} (W)`),
-      ...mechanisms.flatMap(({ name, windingC }) => (windingC === null ? [] : [`Winding of ${name} (${temperature})`])),
+      ...mechanisms.flatMap(({ name, windingC }) => (windingC === null ? [] : [`Winding of ${name} (${temperature.symbol})`])),
     ],
     rows: timesS.map((timeS, index) => [
       digits(timeS),
@@ -117,9 +115,7 @@ export function powerFile(chart: PowerChart, system: UnitSystem): Table {
       digits(currentA[index] ?? null),
       digits(totals[index] ?? null),
       ...mechanisms.map(({ powerW }) => digits(powerW[index] ?? null)),
-      ...mechanisms.flatMap(({ windingC }) =>
-        windingC === null ? [] : [digits(numberIn((windingC[index] ?? 0) + KELVIN, temperature))],
-      ),
+      ...mechanisms.flatMap(({ windingC }) => (windingC === null ? [] : [digits(temperature.numberOf(windingC[index] ?? 0))])),
     ]),
   };
 }

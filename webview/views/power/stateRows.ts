@@ -1,20 +1,14 @@
 /** How protection and windings stand, in words, with the spans of time in which something is the matter. */
 import type { PowerChart } from "../../../extension/protocol/charts/power.js";
-import { numberIn, suitableSymbol, type UnitSystem } from "../../../extension/units/systems.js";
-import { typeset, writeNumber, writeQuantity } from "../../../extension/units/write.js";
+import type { UnitSystem } from "../../../extension/units/systems.js";
+import { writeQuantity } from "../../../extension/units/write.js";
 import type { StateRow } from "../../plots/series/drawing.js";
+import { listed, writeTemperature } from "../../quantity.js";
 
 const NOUNS = { breaker: "breaker", ptc: "PTC", fuse: "fuse" } as const;
-const KELVIN = 273.15;
 
 export function rowsOf(chart: PowerChart, system: UnitSystem): readonly StateRow[] {
   return [...protectorRows(chart), ...windingRows(chart, system)];
-}
-
-/** `celsius` as people read it in their units. */
-export function writeTemperature(celsius: number, system: UnitSystem): string {
-  const symbol = suitableSymbol(celsius + KELVIN, "temperature", system);
-  return `${writeNumber(numberIn(celsius + KELVIN, symbol))} ${typeset(symbol)}`;
 }
 
 function protectorRows({ protectors, cycleS }: PowerChart): StateRow[] {
@@ -51,10 +45,4 @@ function windingRows({ windings, cycles }: PowerChart, system: UnitSystem): Stat
       spans: above.map(({ fromS, toS }) => ({ from: fromS, to: toS })),
     };
   });
-}
-
-/** "hoist, arm and base" */
-export function listed(names: readonly string[]): string {
-  const last = names.at(-1) ?? "nothing";
-  return names.length < 2 ? last : `${names.slice(0, -1).join(", ")} and ${last}`;
 }
