@@ -85,18 +85,15 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
   const now = add(declared.ratio);
   const efficientAt = mostEfficientRatio(drive, declared.ratio);
   const bestEfficiency = efficientAt === null || efficientAt < from || efficientAt > to ? null : add(efficientAt);
-  const neverKept = rulesIn(points).filter((rule) => points.every(({ breaks }) => breaks.includes(rule)));
+  const neverKept = rulesIn(points).filter((rule) => points.every((point) => isBrokenOrSilent(rule, point)));
   const excused = new Set(neverKept.filter((rule) => !ESSENTIAL.has(rule)));
   const counted = ({ breaks }: RatioPoint): readonly RuleId[] => breaks.filter((rule) => !excused.has(rule));
   const keeps = (point: RatioPoint): boolean => counted(point).length === 0;
   const sorted = () => points.toSorted((one, other) => one.ratio - other.ratio);
-  const edges = function* (test: (point: RatioPoint) => boolean): Generator<undefined, RatioSpan[]> {
-    return yield* spansWhere(sorted(), test, pointAt, (point) => points.push(point));
-  };
-  const kept = yield* edges(keeps);
-  const broken: { rule: RuleId; spans: RatioSpan[] }[] = [];
-  for (const rule of rulesIn(points).filter((one) => !neverKept.includes(one)))
-    broken.push({ rule, spans: yield* edges(({ breaks }) => breaks.includes(rule)) });
+  const kept = yield* keptSpans(sorted(), keeps, { pointAt, onPoint: (point) => points.push(point) });
+  const broken = rulesIn(points)
+    .filter((rule) => !neverKept.includes(rule))
+    .map((rule) => ({ rule, spans: spansBetween(sorted(), ({ breaks }) => breaks.includes(rule)) }));
   const fastest = yield* fastestIn(kept, points, { keeps, pointAt });
   if (fastest !== null) points.push(fastest);
   const toothCounts = analysis.toothCounts.get(mechanism.at.file) ?? COMMON_TOOTH_COUNTS;
@@ -154,14 +151,16 @@ function createPointReader(analysis: Analysis, { at, call }: AnalysedMechanism, 
       stall,
     };
     const { hardest } = solution.numbers;
+    const broken = breaks(facts);
     return {
       ratio,
       stallShare: hardest.stallShare,
       motorCurrentA: hardest.motorCurrentA,
-      timeS: solution.travel?.timeS ?? null,
+      // What stalls does not arrive; following it is slow.
+      timeS: broken.includes("stalls") ? null : (solution.travel?.timeS ?? null),
       outputRadPerS: hardest.motorSpeedRadPerS / ratio,
       motorEfficiency: hardest.motorEfficiency,
-      breaks: breaks(facts),
+      breaks: broken,
     };
   };
 }
@@ -184,24 +183,33 @@ function mostEfficientRatio(drive: Drive, ratio: number): number | null {
   return motorTorqueNm > 0 && best !== undefined && best.torqueNm > 0 ? (ratio * motorTorqueNm) / best.torqueNm : null;
 }
 
+/** What another rule silences is not kept: nothing is known of it. */
+function isBrokenOrSilent(rule: RuleId, { breaks }: RatioPoint): boolean {
+  return breaks.some((one) => one === rule || MECHANISM_RULES.some(({ id, silences }) => id === one && silences.includes(rule)));
+}
+
 function rulesIn(points: readonly RatioPoint[]): RuleId[] {
   const found = new Set(points.flatMap(({ breaks }) => breaks));
   return MECHANISM_RULES.map(({ id }) => id).filter((id) => found.has(id));
 }
 
-/** Spans of neighbours that pass the test, their ends found by halving; each end lies where the test is passed. */
-function* spansWhere(
+interface Edges {
+  readonly pointAt: PointReader;
+  readonly onPoint: (point: RatioPoint) => void;
+}
+
+/** Spans of neighbours that keep the rules, their ends found by halving; each end lies where they are kept. */
+function* keptSpans(
   points: readonly RatioPoint[],
-  test: (point: RatioPoint) => boolean,
-  pointAt: PointReader,
-  onPoint: (point: RatioPoint) => void,
+  keeps: (point: RatioPoint) => boolean,
+  { pointAt, onPoint }: Edges,
 ): Generator<undefined, RatioSpan[]> {
   const edge = function* (inside: RatioPoint, outside: RatioPoint): Generator<undefined, number> {
     let [low, high] = [inside, outside];
     for (let round = 0; round < HALVINGS; round++) {
       yield;
       const middle = pointAt(Math.sqrt(low.ratio * high.ratio));
-      if (test(middle)) low = middle;
+      if (keeps(middle)) low = middle;
       else high = middle;
     }
     onPoint(low);
@@ -212,10 +220,27 @@ function* spansWhere(
   let from: number | undefined;
   for (const [index, point] of points.entries()) {
     const before = points[index - 1];
-    const passes = test(point);
+    const passes = keeps(point);
     if (passes && from === undefined) from = before === undefined ? point.ratio : yield* edge(point, before);
     if (passes || from === undefined || before === undefined) continue;
     spans.push({ from, to: yield* edge(before, point) });
+    from = undefined;
+  }
+  const last = points.at(-1);
+  if (from !== undefined && last !== undefined) spans.push({ from, to: last.ratio });
+  return spans;
+}
+
+/** Spans of neighbours that pass a test, ending midway to those that do not: exact where the ends of what is kept are among them. */
+function spansBetween(points: readonly RatioPoint[], test: (point: RatioPoint) => boolean): RatioSpan[] {
+  const spans: RatioSpan[] = [];
+  let from: number | undefined;
+  for (const [index, point] of points.entries()) {
+    const before = points[index - 1]?.ratio ?? point.ratio;
+    const passes = test(point);
+    if (passes && from === undefined) from = Math.sqrt(before * point.ratio);
+    if (passes || from === undefined) continue;
+    spans.push({ from, to: Math.sqrt(before * point.ratio) });
     from = undefined;
   }
   const last = points.at(-1);
