@@ -91,16 +91,18 @@ function plainOf(
   places: ReadonlyMap<string, unknown> | undefined,
   build: (call: DefinitionCall) => object | undefined,
 ): unknown {
-  const key = JSON.stringify(path);
-  if (places?.has(key)) return places.get(key);
+  if (places !== undefined) {
+    const key = JSON.stringify(path);
+    if (places.has(key)) return places.get(key);
+  }
   if (!value.known) return undefined;
   const { data } = value;
   if (data.kind === "primitive") return data.value;
   if (data.kind === "built") return build(data.call);
   if (data.kind === "array") {
     const items = data.items.map((item, index) => plainOf(item, [...path, index], places, build));
-    const added = JSON.stringify([...path, "+"]);
-    return places?.has(added) ? [...items, places.get(added)] : items;
+    const added = places && JSON.stringify([...path, "+"]);
+    return added !== undefined && places?.has(added) ? [...items, places.get(added)] : items;
   }
   if (data.kind !== "object") return undefined;
   const written = [...data.entries].map(([name, item]) => [name, plainOf(item, [...path, name], places, build)] as const);

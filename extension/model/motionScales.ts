@@ -19,8 +19,8 @@ export const STIFF_TOLERANCE = 1e-10;
 export const EXPLICIT_TOLERANCE = 2e-9;
 /** Share of it where corners of a curve start the method again and again. */
 export const CORNERED_SHARE = 0.25;
-/** Times as much where 1e-7 will do. */
-export const COARSE_FACTOR = 20;
+/** Times as much for what-ifs, whose times are then off by 1e-7 at most in practice. */
+export const COARSE_FACTOR = 200;
 /** Past this a course is given up. */
 export const MOST_STEPS = 20_000;
 /** Shorter mechanical time constants than this share of the travel: speed follows torque at once. */

@@ -27,6 +27,8 @@ export interface MotionSystem extends OdeSystem {
   readonly carried: (now: Instant) => number;
   /** Progress (rad), or speed (rad/s) of a flywheel, at which the next stop stands, and the plant with the load on the way there. */
   readonly setTarget: (target: number, piece?: Plant) => void;
+  /** Nobody asks for the sums: they need no accuracy. */
+  readonly ignoreSums: () => void;
 }
 
 /** Below this share of the highest speed so far it stands still. */
@@ -40,6 +42,13 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   const layout = layoutOf(plant);
   const network = heatNetworkOf(plant.motor);
   const rates = motionRates(plant, layout, network);
+  const scale = scaleOf(plant, layout, scales);
+  const ignoreSums = (): void => {
+    scale[layout.squares] = UNCHECKED;
+    scale[layout.energy] = UNCHECKED;
+  };
+  // At a collapsing supply they have no smooth rate.
+  if (mode.kind === "held") ignoreSums();
   const at = createInstant();
   const front = createInstant();
   const released = createInstant();
@@ -86,7 +95,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   return {
     size: layout.size,
     coupled: layout.squares,
-    scale: scaleOf(plant, layout, scales, mode),
+    scale,
     watches,
     layout,
     index,
@@ -101,6 +110,7 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
       target = value;
       here = piece;
     },
+    ignoreSums,
     evaluate: (timeS, state, out) => {
       fillInstant(timeS, state, at, false);
       rates.fill(state, at, out);
@@ -121,18 +131,12 @@ export function motionSystem(plant: Plant, mode: Mode, scales: MotionScales): Mo
   };
 }
 
-function scaleOf(plant: Plant, layout: Layout, scales: MotionScales, mode: Mode): Float64Array {
+function scaleOf(plant: Plant, layout: Layout, scales: MotionScales): Float64Array {
   const scale = new Float64Array(layout.size).fill(1);
   scale[layout.progress] = scales.progressRad;
   scale[layout.speed] = scales.speedRadPerS;
   if (layout.winding >= 0) scale[layout.winding] = HEAT_SCALE_K;
   if (layout.housing >= 0) scale[layout.housing] = HEAT_SCALE_K;
-  if (mode.kind === "held") {
-    // Nobody asks for the sums of a hold, and at a collapsing supply they have no smooth rate.
-    scale[layout.squares] = UNCHECKED;
-    scale[layout.energy] = UNCHECKED;
-    return scale;
-  }
   scale[layout.squares] = SUM_SHARE * scales.currentA ** 2 * scales.timeS;
   scale[layout.energy] = SUM_SHARE * plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
   return scale;

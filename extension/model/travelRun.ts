@@ -40,6 +40,7 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   const state = startState(plant, options.from, options.fromSpeedRadPerS);
   const kind = isFollowing(plant, scales) ? "following" : "moving";
   const moving = motionSystem(plant, { kind }, scales);
+  if (options.timeOnly) moving.ignoreSums();
   const targets = plant.load.endless ? [goal.target] : [...cornersAhead(plant), goal.target];
   // At a current limit the start shows nothing of the line's own time constant.
   const fastest = Math.max(fastestRate(moving, 0, state), mechanicalRate(plant));

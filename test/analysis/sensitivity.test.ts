@@ -55,4 +55,61 @@ export const hoist = mechanism("hoist", {
 robot("one", { supply: pack, mechanisms: [hoist] });`);
     expect(of("supply.openCircuit", "share")).toBeCloseTo(-1, 5);
   });
+
+  /** Every number of this text is written once. */
+  const heatedArm = `${PRELUDE}
+const warm = motor({
+  voltage: "12.1 V",
+  noLoad: { speed: "137 rpm", current: "0.31 A" },
+  stall: { torque: "2.9 N*m", current: "4.7 A" },
+  thermal: { windingToHousing: "3.3 K/W", housingToAmbient: "9.1 K/W", windingTime: "4.4 s", housingTime: "310 s", limit: "131 degC" },
+});
+export const reach = mechanism("reach", {
+  motor: warm,
+  stages: [spur(20, 80, { efficiency: 0.93, inertia: "15 kg*cm^2" })],
+  load: arm({ mass: "2.2 kg", centreOfMass: "0.27 m", from: "-40 deg", to: "55 deg" }),
+  within: "7 s",
+  motorCurrentLimit: "4.5 A",
+  ramp: "0.21 s",
+  protect: breaker({ holdCurrent: "2.6 A", trips: { at: "5.2 A", after: "6.6 s" } }),
+  supply: battery({ openCircuit: "12.7 V", resistance: "92 mohm", mustStayAbove: "9.6 V" }),
+});`;
+
+  it.each([
+    ["motor.voltage", "12.1 V"],
+    ["motor.noLoad.speed", "137 rpm"],
+    ["motor.noLoad.current", "0.31 A"],
+    ["motor.stall.torque", "2.9 N*m"],
+    ["motor.stall.current", "4.7 A"],
+    ["motor.thermal.windingToHousing", "3.3 K/W"],
+    ["motor.thermal.windingTime", "4.4 s"],
+    ["motor.thermal.limit", "131 degC"],
+    ["stages[0].inertia", "15 kg*cm^2"],
+    ["load.mass", "2.2 kg"],
+    ["load.centreOfMass", "0.27 m"],
+    ["load.from", "-40 deg"],
+    ["load.to", "55 deg"],
+    ["within", "7 s"],
+    ["motorCurrentLimit", "4.5 A"],
+    ["ramp", "0.21 s"],
+    ["protect.holdCurrent", "2.6 A"],
+    ["protect.trips.after", "6.6 s"],
+    ["supply.openCircuit", "12.7 V"],
+    ["supply.resistance", "92 mohm"],
+    ["supply.mustStayAbove", "9.6 V"],
+  ])("of %s are what writing another number gives", (input, written) => {
+    const [digits = "", unit = ""] = written.split(" ");
+    const numbersWith = (factor: number) => {
+      const text = heatedArm.replace(`"${written}"`, `"${Number(digits) * factor} ${unit}"`);
+      const numbers = analyseFixture(text).mechanisms[0]?.numbers;
+      if (numbers === undefined) throw new Error(`no numbers with ${input} times ${factor}`);
+      return { current: numbers.hardest.motorCurrentA, share: numbers.hardest.stallShare ?? 0, time: numbers.travel?.timeS ?? 0 };
+    };
+    const of = sensitivityIn(heatedArm);
+    const [low, high] = [numbersWith(0.995), numbersWith(1.005)];
+    for (const output of ["current", "share", "time"] as const) {
+      const expected = Math.log(high[output] / low[output]) / Math.log(1.005 / 0.995);
+      expect(of(input, output) ?? 0, output).toBeCloseTo(Math.abs(expected) < 1e-4 ? 0 : expected, 3);
+    }
+  });
 });

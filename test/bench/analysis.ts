@@ -6,7 +6,7 @@ import { sensitivitiesOf } from "../../extension/analysis/sensitivity.js";
 import { parser as typescript } from "../support/parser.js";
 import { type Spread, spreadOf } from "./spread.js";
 
-const WARM = 30;
+const WARM = 150;
 const FILE = "/bench/hoist.ts";
 
 const THERMAL =
