@@ -3,6 +3,7 @@
  *
  * The frame does the same with every sheet: cursor, keys, table, files. Sheets hold text for people and no element of the page.
  */
+import type { PageMessage } from "../../extension/protocol/chartMessages.js";
 import type { ChartFinding } from "../../extension/protocol/charts/parts.js";
 import type { Theme } from "../theme/theme.js";
 
@@ -31,10 +32,23 @@ export interface Sheet {
   readonly file: () => Table;
   /** What of it can be chosen; may be empty. */
   readonly choices: readonly Choice[];
+  /** What a person may have written into the code; absent: nothing. */
+  readonly actions?: readonly SheetAction[];
+  /** Null where nothing can be tried. */
+  readonly probe: SheetProbe | null;
+  /** As long as this stays the same so do the plots; absent where they always may differ. */
+  readonly plotsKey?: string;
   /** Null where the abscissa is always shown whole. */
   readonly zoom: Zoom | null;
   /** A line below the picture that is saved. */
   readonly footnote: string;
+}
+
+/** A button. Nothing happens in the code before it is pressed. */
+export interface SheetAction {
+  /** What it writes, with numbers. */
+  readonly words: string;
+  readonly message: PageMessage;
 }
 
 /** One of a few things to choose from; what is chosen is remembered under its key. */
@@ -43,6 +57,21 @@ export interface Choice {
   readonly label: string;
   readonly chosen: string;
   readonly options: readonly { readonly value: string; readonly words: string }[];
+}
+
+/** Something to try at an abscissa: what is dragged, and what the model answers. */
+export interface SheetProbe {
+  readonly label: string;
+  /** Where it stands, SI; null while nobody tries. */
+  readonly at: number | null;
+  /** Where it starts. */
+  readonly restsAt: number;
+  readonly least: number;
+  readonly greatest: number;
+  readonly words: (at: number) => string;
+  /** What the model says of it; the last answer while the next is on its way. */
+  readonly says: readonly string[];
+  readonly canWrite: boolean;
 }
 
 /** What is shown of the abscissa, and all that could be, SI. */
@@ -104,6 +133,8 @@ export interface Plot {
   draw(theme: Theme): void;
   /** By index of the stop; null takes it away. */
   setCursor(stop: number | null): void;
+  /** Where the probe stands, SI; absent where there is none. */
+  setProbe?(at: number | null): void;
   /** Abscissa at a distance from the canvas's left edge, SI. */
   at(px: number): number;
   destroy(): void;
