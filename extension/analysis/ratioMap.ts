@@ -4,41 +4,19 @@
  * The whole ratio is varied by the first stage's; losses and inertias stay. Judged with the middle of ranges. Computed when asked for, a
  * ratio at a time, so that a host can stop it.
  */
-import type { Mechanism } from "../declarations/mechanism.js";
 import { bestEfficiencyPoint } from "../model/bestPoints.js";
 import type { Drive } from "../model/drive.js";
 import { hardestPosition } from "../model/hardest.js";
-import { lazySolution } from "../model/lazySolution.js";
 import { availableLine } from "../model/line.js";
-import { quickestRatio, withRatioTimes } from "../model/ratioSearch.js";
+import { quickestRatio } from "../model/ratioSearch.js";
 import { COMMON_TOOTH_COUNTS } from "../proposals/stock.js";
-import { stockRatios } from "../proposals/stockRatios.js";
-import { isLate } from "../rules/late.js";
-import type { MechanismFacts, RuleId } from "../rules/rule.js";
+import { plainRatios, stockRatios } from "../proposals/stockRatios.js";
+import type { RuleId } from "../rules/rule.js";
 import { MECHANISM_RULES } from "../rules/table.js";
-import { allowedRules } from "./allowances.js";
 import type { AnalysedMechanism, Analysis } from "./analysis.js";
-import { goldenLeast } from "./goldenLeast.js";
-import { rankOf } from "./proveChange.js";
-
-export interface RatioPoint {
-  readonly ratio: number;
-  readonly stallShare: number | null;
-  /** At the hardest position, one motor. */
-  readonly motorCurrentA: number;
-  /** Of the travel; null for a load without one, or where it does not arrive. */
-  readonly timeS: number | null;
-  /** Of the output shaft at the hardest position. */
-  readonly outputRadPerS: number;
-  readonly motorEfficiency: number | null;
-  /** Rules of level warning or error that it breaks. */
-  readonly breaks: readonly RuleId[];
-}
-
-export interface RatioSpan {
-  readonly from: number;
-  readonly to: number;
-}
+import { bestWritable, fastestIn, interpolated, timeCost, type WritableRatio } from "./ratioBest.js";
+import { createPointReader, type RatioPoint } from "./ratioPoint.js";
+import { keptSpans, type RatioSpan, spansBetween } from "./ratioSpans.js";
 
 export interface RatioMap {
   /** Rising ratio; the marked ones are among them. */
@@ -54,6 +32,8 @@ export interface RatioMap {
   readonly fastest: RatioPoint | null;
   /** Where the motor wastes least at the hardest position; null where that lies outside, or without a load to stand against. */
   readonly bestEfficiency: RatioPoint | null;
+  /** The best of each that can be written into the code and keeps every rule; null where there is none, or it is the ratio that is. */
+  readonly toWrite: { readonly fastest: WritableRatio | null; readonly bestEfficiency: WritableRatio | null };
   readonly stock: readonly { readonly ratio: number; readonly words: string; readonly gears: 1 | 2; readonly keeps: boolean }[];
   /** True where any ratio can be had: a plain reduction. */
   readonly anyRatio: boolean;
@@ -63,8 +43,6 @@ export interface RatioMap {
 const ESSENTIAL: ReadonlySet<RuleId> = new Set(["stalls", "cannot-hold", "beyond-speed", "late"]);
 
 const SAMPLES = 64;
-/** Halvings of the span between a ratio that keeps a rule and its neighbour that does not: to a ten-thousandth of it. */
-const HALVINGS = 13;
 
 /** `undefined` where the mechanism has no numbers. Yields after each ratio. */
 export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Generator<undefined, RatioMap | undefined> {
@@ -94,10 +72,19 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
   const broken = rulesIn(points)
     .filter((rule) => !neverKept.includes(rule))
     .map((rule) => ({ rule, spans: spansBetween(sorted(), ({ breaks }) => breaks.includes(rule)) }));
-  const fastest = yield* fastestIn(kept, points, { keeps, pointAt });
+  const search = { keeps, pointAt, cost: timeCost(points) };
+  const fastest = yield* fastestIn(kept, points, search);
   if (fastest !== null) points.push(fastest);
-  const toothCounts = analysis.toothCounts.get(mechanism.at.file) ?? COMMON_TOOTH_COUNTS;
   const isKept = (ratio: number): boolean => kept.some((span) => span.from <= ratio && ratio <= span.to);
+  const toothCounts = analysis.toothCounts.get(mechanism.at.file) ?? COMMON_TOOTH_COUNTS;
+  const stock = stockRatios({ mechanism: declared, toothCounts }, from, to);
+  const aims = [fastest, bestEfficiency].flatMap((point) => (point === null ? [] : [point.ratio]));
+  const choices = [...stock, ...aims.flatMap((ratio) => plainRatios(declared, ratio))].filter(({ ratio }) => isKept(ratio));
+  const toEfficient = (ratio: number): number =>
+    bestEfficiency === null ? Number.POSITIVE_INFINITY : Math.abs(Math.log(ratio / bestEfficiency.ratio));
+  const quickest = yield* bestWritable(choices, interpolated(sorted(), search.cost), search);
+  const efficient = yield* bestWritable(choices, toEfficient, { ...search, cost: ({ ratio }) => toEfficient(ratio) });
+  const orNone = (found: WritableRatio | null) => (found === null || isSame(found.ratio, declared.ratio) ? null : found);
   return {
     samples: distinct(sorted()),
     kept,
@@ -106,63 +93,14 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
     now,
     fastest,
     bestEfficiency,
-    stock: stockRatios({ mechanism: declared, toothCounts }, from, to).map(({ ratio, change, gears }) => ({
-      ratio,
-      words: change.words,
-      gears,
-      keeps: isKept(ratio),
-    })),
+    toWrite: { fastest: orNone(quickest), bestEfficiency: orNone(efficient) },
+    stock: stock.map(({ ratio, change, gears }) => ({ ratio, words: change.words, gears, keeps: isKept(ratio) })),
     anyRatio: declared.stages.some(({ kind }) => kind === "reduction"),
   };
 }
 
-type PointReader = (ratio: number) => RatioPoint;
-
-function createPointReader(analysis: Analysis, { at, call }: AnalysedMechanism, declared: Mechanism, drive: Drive): PointReader {
-  const allowed = allowedRules(call);
-  const levels = analysis.levels.get(at.file) ?? {};
-  // A blocked shaft knows no ratio.
-  const { stall } = lazySolution(drive);
-  const breaks = (facts: MechanismFacts): RuleId[] => {
-    const silenced = new Set<RuleId>();
-    return MECHANISM_RULES.flatMap(({ id, level, silences, judge }) => {
-      if (silenced.has(id)) return [];
-      // Its way out is dear, and not told here.
-      const verdict = id === "late" ? undefined : judge(facts);
-      if (id === "late" ? !isLate(facts) : verdict === undefined) return [];
-      for (const other of silences) silenced.add(other);
-      const told = levels[id] ?? verdict?.level ?? level;
-      return told === "off" || allowed.has(id) || rankOf(told) < rankOf("warning") ? [] : [id];
-    });
-  };
-  return (ratio) => {
-    const changed = withRatioTimes(drive, ratio / declared.ratio);
-    const solution = lazySolution(changed);
-    const facts: MechanismFacts = {
-      mechanism: { ...declared, ratio },
-      drive: changed,
-      numbers: solution.numbers,
-      get travel() {
-        return solution.travel;
-      },
-      get hold() {
-        return solution.hold;
-      },
-      stall,
-    };
-    const { hardest } = solution.numbers;
-    const broken = breaks(facts);
-    return {
-      ratio,
-      stallShare: hardest.stallShare,
-      motorCurrentA: hardest.motorCurrentA,
-      // What stalls does not arrive; following it is slow.
-      timeS: broken.includes("stalls") ? null : (solution.travel?.timeS ?? null),
-      outputRadPerS: hardest.motorSpeedRadPerS / ratio,
-      motorEfficiency: hardest.motorEfficiency,
-      breaks: broken,
-    };
-  };
+function isSame(one: number, other: number): boolean {
+  return Math.abs(Math.log(one / other)) < 1e-6;
 }
 
 /** From where it stalls to well beyond the quickest ratio, the one that is well inside. */
@@ -191,93 +129,6 @@ function isBrokenOrSilent(rule: RuleId, { breaks }: RatioPoint): boolean {
 function rulesIn(points: readonly RatioPoint[]): RuleId[] {
   const found = new Set(points.flatMap(({ breaks }) => breaks));
   return MECHANISM_RULES.map(({ id }) => id).filter((id) => found.has(id));
-}
-
-interface Edges {
-  readonly pointAt: PointReader;
-  readonly onPoint: (point: RatioPoint) => void;
-}
-
-/** Spans of neighbours that keep the rules, their ends found by halving; each end lies where they are kept. */
-function* keptSpans(
-  points: readonly RatioPoint[],
-  keeps: (point: RatioPoint) => boolean,
-  { pointAt, onPoint }: Edges,
-): Generator<undefined, RatioSpan[]> {
-  const edge = function* (inside: RatioPoint, outside: RatioPoint): Generator<undefined, number> {
-    let [low, high] = [inside, outside];
-    for (let round = 0; round < HALVINGS; round++) {
-      yield;
-      const middle = pointAt(Math.sqrt(low.ratio * high.ratio));
-      if (keeps(middle)) low = middle;
-      else high = middle;
-    }
-    onPoint(low);
-    onPoint(high);
-    return low.ratio;
-  };
-  const spans: RatioSpan[] = [];
-  let from: number | undefined;
-  for (const [index, point] of points.entries()) {
-    const before = points[index - 1];
-    const passes = keeps(point);
-    if (passes && from === undefined) from = before === undefined ? point.ratio : yield* edge(point, before);
-    if (passes || from === undefined || before === undefined) continue;
-    spans.push({ from, to: yield* edge(before, point) });
-    from = undefined;
-  }
-  const last = points.at(-1);
-  if (from !== undefined && last !== undefined) spans.push({ from, to: last.ratio });
-  return spans;
-}
-
-/** Spans of neighbours that pass a test, ending midway to those that do not: exact where the ends of what is kept are among them. */
-function spansBetween(points: readonly RatioPoint[], test: (point: RatioPoint) => boolean): RatioSpan[] {
-  const spans: RatioSpan[] = [];
-  let from: number | undefined;
-  for (const [index, point] of points.entries()) {
-    const before = points[index - 1]?.ratio ?? point.ratio;
-    const passes = test(point);
-    if (passes && from === undefined) from = Math.sqrt(before * point.ratio);
-    if (passes || from === undefined) continue;
-    spans.push({ from, to: Math.sqrt(before * point.ratio) });
-    from = undefined;
-  }
-  const last = points.at(-1);
-  if (from !== undefined && last !== undefined) spans.push({ from, to: last.ratio });
-  return spans;
-}
-
-interface Search {
-  readonly keeps: (point: RatioPoint) => boolean;
-  readonly pointAt: PointReader;
-}
-
-/** In each span by golden section around its best sample; the time has one minimum over the ratio. */
-function* fastestIn(
-  spans: readonly RatioSpan[],
-  points: readonly RatioPoint[],
-  { keeps, pointAt }: Search,
-): Generator<undefined, RatioPoint | null> {
-  const hasTravel = points.some(({ timeS }) => timeS !== null);
-  const costOf = ({ timeS, outputRadPerS }: RatioPoint): number =>
-    hasTravel ? (timeS ?? Number.POSITIVE_INFINITY) : -outputRadPerS;
-  let best: RatioPoint | null = null;
-  const consider = (point: RatioPoint): void => {
-    if (keeps(point) && Number.isFinite(costOf(point)) && (best === null || costOf(point) < costOf(best))) best = point;
-  };
-  for (const { from, to } of spans) {
-    const inside = points.filter(({ ratio }) => from <= ratio && ratio <= to).sort((one, other) => one.ratio - other.ratio);
-    const least = inside.reduce((found, point, index) => (costOf(point) < costOf(inside[found] ?? point) ? index : found), 0);
-    const [left, right] = [inside[least - 1]?.ratio ?? from, inside[least + 1]?.ratio ?? to];
-    for (const point of inside) consider(point);
-    yield* goldenLeast(Math.log(left), Math.log(right), (log) => {
-      const point = pointAt(Math.exp(log));
-      consider(point);
-      return costOf(point);
-    });
-  }
-  return best;
 }
 
 function distinct(points: readonly RatioPoint[]): RatioPoint[] {

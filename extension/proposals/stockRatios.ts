@@ -40,13 +40,22 @@ export function stockRatios(gearing: Gearing, from: number, to: number): StockRa
  * is found elsewhere.
  */
 export function changesForRatio(gearing: Gearing, ratio: number): StockRatio[] {
-  const { mechanism } = gearing;
-  const plain = mechanism.stages.findIndex(({ kind }) => kind === "reduction");
-  const stock = stockRatios(gearing, ratio * 0.8, ratio * 1.25).sort((a, b) => distance(a, ratio) - distance(b, ratio));
-  if (plain < 0) return stock;
-  const value = Number((((mechanism.stages[plain]?.ratio ?? 1) * ratio) / mechanism.ratio).toPrecision(3));
-  const change = { sets: [{ stage: plain, argument: 0, value }], words: `stage ${plain + 1} with a ratio of ${value}` };
-  return [{ ratio: ratioWith(mechanism, change), change, gears: 1 }, ...stock];
+  const near = [...plainRatios(gearing.mechanism, ratio), ...stockRatios(gearing, ratio * 0.8, ratio * 1.25)];
+  return near.sort((one, other) => distance(one, ratio) - distance(other, ratio));
+}
+
+/** A plain reduction set to about this ratio, in three digits, to either side of it; empty where there is none. */
+export function plainRatios(mechanism: Mechanism, ratio: number): StockRatio[] {
+  const stage = mechanism.stages.findIndex(({ kind }) => kind === "reduction");
+  const before = mechanism.stages[stage];
+  if (before === undefined) return [];
+  const exact = (before.ratio * ratio) / mechanism.ratio;
+  const step = 10 ** (Math.floor(Math.log10(exact)) - 2);
+  const values = [Math.floor(exact / step), Math.ceil(exact / step)].map((count) => Number((count * step).toPrecision(3)));
+  return [...new Set(values)].map((value) => {
+    const change = { sets: [{ stage, argument: 0, value }], words: `stage ${stage + 1} with a ratio of ${value}` };
+    return { ratio: ratioWith(mechanism, change), change, gears: 1 };
+  });
 }
 
 export function ratioWith({ ratio, stages }: Mechanism, { sets }: Change): number {

@@ -159,6 +159,31 @@ describe("the other marks", () => {
     }
   });
 
+  it("propose to write the quickest pair in stock, and the plain ratio in three digits", () => {
+    const counts = [12, 16, 20, 24, 30, 36, 48, 60, 72];
+    const text = `//- loadmark.json
+{ "toothCounts": ${JSON.stringify(counts)} }
+//- robot.ts
+${hoist(3, '\n  within: "13 s",').replace("reduction(3, { efficiency: 0.9 })", "spur(20, 60, { efficiency: 0.9 })")}`;
+    const { toWrite } = mapOf(analyseFixture(text));
+    const all = counts.flatMap((driver) =>
+      counts.flatMap((driven) => {
+        const { timeS, rules } = judged(text.replace("20, 60", `${driver}, ${driven}`));
+        return rules.length === 0 && timeS !== null ? [{ driver, driven, timeS }] : [];
+      }),
+    );
+    const best = all.reduce((one, other) => (other.timeS < one.timeS ? other : one));
+    expect(toWrite.fastest?.timeS).toBeCloseTo(best.timeS, 6);
+    const [, driver, driven] = /^stage 1 with (\d+) and (\d+) teeth$/.exec(toWrite.fastest?.words ?? "") ?? [];
+    expect(Number(driven) / Number(driver)).toBeCloseTo(best.driven / best.driver, 9);
+
+    const plain = mapOf(analyseFixture(hoist(3, '\n  within: "13 s",')));
+    const [, written] = /^stage 1 with a ratio of ([\d.]+)$/.exec(plain.toWrite.fastest?.words ?? "") ?? [];
+    expect(Number(written)).toBe(Number(Number(written).toPrecision(3)));
+    expect(judged(hoist(Number(written), '\n  within: "13 s",')).rules).toEqual([]);
+    expect((plain.toWrite.fastest?.timeS ?? 0) / (plain.fastest?.timeS ?? 1)).toBeLessThan(1.01);
+  });
+
   it("hand back control after every ratio", () => {
     const analysis = analyseFixture(hoist(3));
     const [mechanism] = analysis.mechanisms;
