@@ -19,6 +19,7 @@ import { chartHtml } from "./chartHtml.js";
 import { isSource } from "./documents.js";
 import { saveAs } from "./saveAs.js";
 import type { Server } from "./server.js";
+import { writeEdits } from "./writeEdits.js";
 
 export const CHART_VIEW = "loadmark.chart";
 
@@ -73,7 +74,7 @@ class ChartPanel implements vscode.Disposable {
   #isReady = false;
   #subject: Subject = { mechanism: null, robot: null };
   /** What the page asked for last; the view that someone asked the editor for, until the page asks for it too. */
-  #want: Want = { view: "operating-point" };
+  #want: Want = { view: "operating-point", probe: null };
   #opening: ViewName | undefined;
   #caret: ChartQuestion["caret"] = null;
   #shown = "";
@@ -197,6 +198,9 @@ class ChartPanel implements vscode.Disposable {
       case "ask":
         this.#turnTo(message.want);
         void this.refresh();
+        return;
+      case "writeToCode":
+        void writeEdits(this.#parts, { caret: null, ...this.#subject, want: message.want });
         return;
       case "chooseUnits":
         void this.#parts.memory.update(UNITS_KEY, message.units);

@@ -5,7 +5,16 @@
  */
 import * as vscode from "vscode";
 import type { BaseLanguageClient } from "vscode-languageclient";
-import { CHART, CHART_MAY_DIFFER, type ChartAnswer, type ChartQuestion, chartAnswerSchema } from "../protocol/chartMessages.js";
+import {
+  CHART,
+  CHART_EDITS,
+  CHART_MAY_DIFFER,
+  type ChartAnswer,
+  type ChartEdits,
+  type ChartQuestion,
+  chartAnswerSchema,
+  chartEditsSchema,
+} from "../protocol/chartMessages.js";
 import { FIND_PLACE, type Place, type PlaceQuery, placeSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { NO_STATE, STATE, type State, stateSchema } from "../protocol/state.js";
@@ -89,6 +98,11 @@ export class Server implements vscode.Disposable {
     const answer = readMessage(chartAnswerSchema, message);
     if (message !== undefined && answer === undefined) this.#log.warn("The server sent a chart that cannot be read.");
     return answer;
+  }
+
+  /** What would write to the code what a chart wants; `undefined` where nothing would. */
+  async askForChartEdits(question: ChartQuestion): Promise<ChartEdits | undefined> {
+    return readMessage(chartEditsSchema, await this.#client?.sendRequest(CHART_EDITS, question)) ?? undefined;
   }
 
   async #startClient(): Promise<void> {

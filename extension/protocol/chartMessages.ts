@@ -7,9 +7,13 @@
 import * as v from "valibot";
 import { UNIT_SYSTEMS } from "./chartMemory.js";
 import { shownSchema, viewNameSchema, wantSchema } from "./charts/views.js";
+import { placeSchema } from "./place.js";
 
 /** The client's question to the server: takes a question, gives an answer. */
 export const CHART = "loadmark/chart";
+
+/** The client's question what would write to the code what the page wants: takes the same question, gives edits or null. */
+export const CHART_EDITS = "loadmark/chartEdits";
 
 /** Server to client, after each result: whoever shows a chart asks again. */
 export const CHART_MAY_DIFFER = "loadmark/chartMayDiffer";
@@ -37,6 +41,11 @@ export const nothingSchema = v.object({
 
 export const chartAnswerSchema = v.variant("kind", [nothingSchema, shownSchema]);
 
+/** Null where there is nothing to write. */
+export const chartEditsSchema = v.nullable(
+  v.array(v.object({ ...placeSchema.entries, newText: v.string(), version: v.nullable(v.number()) })),
+);
+
 const CONTENT_LIMIT = 32 * 1024 * 1024;
 /** A name alone: never a path. */
 const fileName = v.pipe(v.string(), v.regex(/^[\p{L}\p{N}-]{1,100}\.(png|csv)$/u));
@@ -49,6 +58,8 @@ export const pageMessageSchema = v.variant("type", [
   v.object({ type: v.literal("ready"), mechanism: v.nullable(v.string()), robot: v.nullable(v.string()), want: wantSchema }),
   /** It wants to see something else. */
   v.object({ type: v.literal("ask"), want: wantSchema }),
+  /** To write to the code what it wants to see. */
+  v.object({ type: v.literal("writeToCode"), want: wantSchema }),
   /** Kept for charts to come. */
   v.object({ type: v.literal("chooseUnits"), units: v.picklist(UNIT_SYSTEMS) }),
   /** A PNG file in base 64. */
@@ -74,6 +85,7 @@ export const hostMessageSchema = v.variant("type", [
 
 export type ChartQuestion = v.InferOutput<typeof chartQuestionSchema>;
 export type ChartAnswer = v.InferOutput<typeof chartAnswerSchema>;
+export type ChartEdits = v.InferOutput<typeof chartEditsSchema>;
 export type Nothing = v.InferOutput<typeof nothingSchema>;
 /** From the chart's page to its host. */
 export type PageMessage = v.InferOutput<typeof pageMessageSchema>;

@@ -4,7 +4,7 @@
  * Waits for the result of the newest text only where an older one would mislead, and never for long.
  */
 import type { ClientCapabilities, Connection } from "vscode-languageserver";
-import { CHART, chartQuestionSchema } from "../protocol/chartMessages.js";
+import { CHART, CHART_EDITS, chartQuestionSchema } from "../protocol/chartMessages.js";
 import { COMMIT_MOVED } from "../protocol/committed.js";
 import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
@@ -124,6 +124,14 @@ export function answerRequests({
   connection.onNotification(
     COMMIT_MOVED,
     guard.act("Following commits", () => committed.moved()),
+  );
+  connection.onRequest(
+    CHART_EDITS,
+    guard.answer("Edits of a chart", null, async (message: unknown) => {
+      const question = readMessage(chartQuestionSchema, message);
+      const result = question && (await session.whenCurrent(PATIENCE_MS));
+      return question && result ? charts.editsFor(result, question) : null;
+    }),
   );
   connection.onRequest(
     FIND_PLACE,

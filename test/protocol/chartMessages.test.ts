@@ -11,7 +11,7 @@ import type { OperatingPointChart } from "../../extension/protocol/charts/operat
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { chartIn, hoistSource, shownChart } from "../support/chartFixture.js";
 
-const WANT = { view: "operating-point" };
+const WANT = { view: "operating-point", probe: null };
 const chart = chartIn(hoistSource(), "tray hoist");
 
 /** Fails to compile where a computed chart is not what travels. */

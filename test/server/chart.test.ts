@@ -37,7 +37,7 @@ async function ask(caret: { file: string; at: Position } | null, mechanism: stri
     caret: caret && { uri: client.uri(caret.file), ...caret.at },
     mechanism,
     robot: null,
-    want: { view: "operating-point" },
+    want: { view: "operating-point", probe: null },
   };
   const answer = readMessage(chartAnswerSchema, await client.connection.sendRequest(CHART, question));
   if (answer === undefined) throw new Error("The answer cannot be read.");

@@ -25,7 +25,7 @@ export function chartIn(source: string, mechanism: string): OperatingPointChart 
 export type ShownChart = AnyShownChart<"operating-point">;
 
 export function shownChart(chart: OperatingPointChart, more: Partial<ShownChart> = {}): ShownChart {
-  return { kind: "chart", view: "operating-point", chart, saved: null, old: null, ...more };
+  return { kind: "chart", view: "operating-point", chart, saved: null, old: null, probe: null, ...more };
 }
 
 export interface HoistNumbers {

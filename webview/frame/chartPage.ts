@@ -40,6 +40,7 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
       openTable: (open) => remember({ ...memory, tableOpen: open }),
       system,
       ask: () => host.send({ type: "ask", want: want() }),
+      write: () => host.send({ type: "writeToCode", want: want() }),
     });
   const pages = new Map(VIEW_NAMES.map((name) => [name, pageOf(VIEWS[name] as View<ViewName>)] as const));
   const want = () => VIEWS[memory.view].want(memory.views[memory.view] as never);
@@ -72,7 +73,9 @@ export function createChartPage(root: HTMLElement, host: Host): ChartPage {
   const show = (answer: ChartAnswer): void => {
     if (answer.kind === "chart") {
       const view = VIEWS[answer.view] as View<ViewName>;
+      const before = JSON.stringify(want());
       remember(withSubject(memory, answer.view, view.subject(answer)));
+      if (answer.view === memory.view && JSON.stringify(want()) !== before) host.send({ type: "ask", want: want() });
     }
     pages.get(answer.view)?.show(answer);
   };

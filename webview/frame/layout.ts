@@ -35,9 +35,10 @@ export interface LayoutOptions {
   /** With a reader of the screen the numbers come before the pictures. */
   readonly tableFirst: boolean;
   readonly canZoom: boolean;
+  readonly canProbe: boolean;
 }
 
-export function buildLayout(name: ViewName, heading: string, { tableFirst, canZoom }: LayoutOptions): Layout {
+export function buildLayout(name: ViewName, heading: string, { tableFirst, canZoom, canProbe }: LayoutOptions): Layout {
   const button = (text: string): HTMLButtonElement => element("button", { text, attributes: { type: "button" } });
   const tableId = `table-${name}`;
   const keysId = `keys-${name}`;
@@ -77,7 +78,11 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
   parts.empty.append(parts.emptyText);
   parts.tableBox.append(parts.table);
   const actions = element("div", { class: "actions" }, [parts.tableButton, parts.pictureButton, parts.csvButton]);
-  const keys = element("p", { class: "note", text: canZoom ? KEYS + ZOOM_KEYS : KEYS, attributes: { id: keysId } });
+  const keys = element("p", {
+    class: "note",
+    text: [KEYS, ...(canZoom ? [ZOOM_KEYS] : []), ...(canProbe ? [PROBE_KEYS] : [])].join(" "),
+    attributes: { id: keysId },
+  });
   const picture = [parts.controls, parts.plots, parts.spoken, parts.readout, keys];
   const numbers = [actions, parts.tableBox];
   parts.content.append(
@@ -94,4 +99,5 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
 }
 
 const KEYS = "Read off with the mouse, or with the keys ← → Home End while the plots have the focus; Esc takes the cursor away.";
-const ZOOM_KEYS = " Drag over a span to zoom to it, or press + and −; 0 shows all.";
+const PROBE_KEYS = "To try another torque, drag the line of the needed one, or move the slider above the plots.";
+const ZOOM_KEYS = "Drag over a span to zoom to it, or press + and −; 0 shows all.";

@@ -9,7 +9,8 @@ export function withSubject(
   { mechanism = memory.mechanism, robot = memory.robot }: { readonly mechanism?: string | null; readonly robot?: string | null },
 ): ChartMemory {
   if (memory.mechanism === mechanism && memory.robot === robot) return memory;
-  return withView({ ...memory, mechanism, robot }, view, { cursor: null });
+  const places = ["cursor", "probe", "span"].filter((place) => place in memory.views[view]);
+  return withView({ ...memory, mechanism, robot }, view, Object.fromEntries(places.map((place) => [place, null])));
 }
 
 /** Changes some of what is remembered of one view. */

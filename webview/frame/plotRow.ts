@@ -7,6 +7,7 @@ export interface PlotRow {
   show(parts: readonly PlotPart[]): void;
   draw(theme: Theme): void;
   setCursor(stop: number | null): void;
+  setProbe(at: number | null): void;
   /** Abscissa below a pointer, SI. */
   at(clientX: number): number | undefined;
 }
@@ -36,6 +37,9 @@ export function createPlotRow(box: HTMLElement): PlotRow {
     },
     setCursor(stop) {
       for (const plot of plots) plot.setCursor(stop);
+    },
+    setProbe(at) {
+      for (const plot of plots) plot.setProbe?.(at);
     },
     at(clientX) {
       const [canvas] = canvases;

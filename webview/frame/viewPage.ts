@@ -22,6 +22,7 @@ import { cursorAfterKey, nearestStop } from "./cursorKeys.js";
 import { buildLayout } from "./layout.js";
 import { drawPicture } from "./picture.js";
 import { createPlotRow } from "./plotRow.js";
+import { createProbeControl } from "./probeControl.js";
 import type { Sheet } from "./sheet.js";
 import { createZoomControl } from "./zoomControl.js";
 
@@ -36,6 +37,8 @@ export interface ViewSurroundings<V extends ViewName> {
   readonly system: () => UnitSystem;
   /** Asks the host anew, after a change of what is wanted. */
   readonly ask: () => void;
+  /** Asks the host to write to the code what is wanted. */
+  readonly write: () => void;
 }
 
 export interface ViewPage<V extends ViewName> {
@@ -49,10 +52,15 @@ export interface ViewPage<V extends ViewName> {
 
 export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSurroundings<V>): ViewPage<V> {
   const { host, withReader } = around;
-  const parts = buildLayout(view.name, view.title, { tableFirst: withReader, canZoom: view.zoomed !== undefined });
+  const parts = buildLayout(view.name, view.title, {
+    tableFirst: withReader,
+    canZoom: view.zoomed !== undefined,
+    canProbe: view.probed !== undefined,
+  });
   const plots = createPlotRow(parts.plots);
   let shown: ShownChart<V> | undefined;
   let sheet: Sheet | undefined;
+  let plotsKey: string | undefined;
   let theme = readTheme(document.body);
   setShown(parts.content, false);
   setShown(parts.empty, false);
@@ -106,8 +114,13 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     setShown(parts.content, true);
     choices.show(sheet.choices);
     zoom.show(sheet.zoom);
-    plots.show(sheet.plots);
-    redraw();
+    probe.show(sheet.probe);
+    if (sheet.plotsKey === undefined || sheet.plotsKey !== plotsKey) {
+      plotsKey = sheet.plotsKey;
+      plots.show(sheet.plots);
+      redraw();
+    } else showCursor(sheet);
+    plots.setProbe(sheet.probe?.at ?? null);
     showTable();
   };
 
@@ -131,7 +144,24 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     update();
     around.ask();
   });
-  parts.controls.append(choices.element, zoom.element);
+  const probe = createProbeControl({
+    box: parts.plots,
+    at: plots.at,
+    onProbe(at) {
+      const change = view.probed?.(at);
+      if (change === undefined) return;
+      around.remember(change);
+      update();
+      around.ask();
+    },
+    onWrite() {
+      around.write();
+      around.remember(view.probed?.(null) ?? {});
+      update();
+      around.ask();
+    },
+  });
+  parts.controls.append(choices.element, zoom.element, probe.element);
 
   const savePicture = (): void => {
     if (sheet === undefined || shown === undefined) return;
@@ -156,7 +186,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     showCursor(sheet);
   });
   const placeAt = (event: PointerEvent): void => {
-    if (zoom.isDragging()) return;
+    if (zoom.isDragging() || probe.isDragging()) return;
     const wanted = plots.at(event.clientX);
     const stop = sheet === undefined || wanted === undefined ? undefined : sheet.stops[nearestStop(sheet.stops, wanted)];
     if (sheet === undefined || stop === undefined) return;
@@ -183,7 +213,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
         shown = answer as unknown as ShownChart<V>;
         return update();
       }
-      [shown, sheet] = [undefined, undefined];
+      [shown, sheet, plotsKey] = [undefined, undefined, undefined];
       setShown(parts.content, false);
       showEmpty(parts.emptyText, answer);
     },

@@ -12,6 +12,8 @@ export interface View<V extends ViewName> {
   /** Names of what is shown: a cursor of one means nothing on another. */
   subject(shown: ShownChart<V>): { readonly mechanism?: string; readonly robot?: string };
   sheet(shown: ShownChart<V>, memory: ViewMemory<V>, system: UnitSystem): Sheet;
+  /** What is remembered of a probe. Absent where there is none. */
+  probed?(at: number | null): Partial<ViewMemory<V>>;
   /** What is remembered of a choice that the sheet offers; the choice itself under its key where absent. */
   chosen?(key: string, value: string): Partial<ViewMemory<V>>;
   /** What is remembered of a span that someone zooms to; null for all. Absent where there is no zoom. */

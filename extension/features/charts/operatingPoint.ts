@@ -16,6 +16,7 @@ import type { ChartFeature } from "./feature.js";
 import { type ChartLimit, limitsOf, torqueAtCurrent } from "./limits.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
 import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./point.js";
+import { probeAt, probeEdits } from "./probe.js";
 
 /** One abscissa; a line is null where it does not reach. */
 export interface ChartSample {
@@ -72,10 +73,19 @@ export interface OperatingPointChart {
 /** Steps of the abscissa between its ends. */
 const STEPS = 100;
 
-export const operatingPointFeature: ChartFeature<OperatingPointChart, unknown> = {
+export interface OperatingPointWant {
+  /** A torque to try; null for none. */
+  readonly probe: { readonly torqueNm: number } | null;
+}
+
+export const operatingPointFeature: ChartFeature<OperatingPointChart, OperatingPointWant> = {
   subjects: mechanismSubjects,
   chartOf: operatingPointChart,
   whyOld: whyMechanismIsOld,
+  besides: (analysis, name, { probe }, analyse) => ({
+    probe: probe === null ? null : (probeAt(analysis, name, probe.torqueNm, analyse) ?? null),
+  }),
+  editsFor: (analysis, name, { probe }) => (probe === null ? undefined : probeEdits(analysis, name, probe.torqueNm)),
   nothing: noMechanism,
 };
 

@@ -66,19 +66,45 @@ export const operatingPointChartSchema = v.object({
   limits: limitsSchema,
 });
 
-export const operatingPointShown = v.object(shownEntries(VIEW, operatingPointChartSchema));
+const probeChangeSchema = v.object({
+  words: text,
+  ratio: number,
+  needed: v.object({ torqueNm: number, ...values, stallShare: v.nullable(number) }),
+  timeS: v.nullable(number),
+  state: said.state,
+  verdict: text,
+  findings: listOf(text),
+  others: listOf(text),
+});
+
+/** What would be at another torque, and which written number would bring the mechanism there. */
+const probeSchema = v.object({
+  torqueNm: number,
+  point: v.object({ ...values, stalls: v.boolean() }),
+  change: v.nullable(probeChangeSchema),
+  cannot: v.nullable(text),
+});
+
+export const operatingPointShown = v.object({
+  ...shownEntries(VIEW, operatingPointChartSchema),
+  probe: v.nullable(probeSchema),
+});
+
+const wantedProbe = v.nullable(v.object({ torqueNm: number }));
 
 /** What the page asks for. */
-export const operatingPointWant = v.object({ view: v.literal(VIEW) });
+export const operatingPointWant = v.object({ view: v.literal(VIEW), probe: wantedProbe });
 
 /** What the page remembers of this view. */
 export const operatingPointMemory = v.object({
   /** Torque where the cursor stands, N·m. */
   cursor: v.nullable(number),
+  probe: wantedProbe,
 });
 
-export const NO_OPERATING_POINT_MEMORY: v.InferOutput<typeof operatingPointMemory> = { cursor: null };
+export const NO_OPERATING_POINT_MEMORY: v.InferOutput<typeof operatingPointMemory> = { cursor: null, probe: null };
 
+export type Probe = v.InferOutput<typeof probeSchema>;
 export type OperatingPointChart = v.InferOutput<typeof operatingPointChartSchema>;
 export type ChartSample = v.InferOutput<typeof sampleSchema>;
 export type CurveValues = v.InferOutput<typeof valuesSchema>;

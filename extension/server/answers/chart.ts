@@ -8,7 +8,7 @@ import type { ChartFeature, Wish } from "../../features/charts/feature.js";
 import { createChartFeatures } from "../../features/charts/features.js";
 import { mechanismsAround } from "../../features/mechanismsAround.js";
 import { robotsAround } from "../../features/robotsAround.js";
-import type { ChartAnswer, ChartQuestion } from "../../protocol/chartMessages.js";
+import type { ChartAnswer, ChartEdits, ChartQuestion } from "../../protocol/chartMessages.js";
 import type { Want } from "../../protocol/charts/views.js";
 import { currentFile } from "../current.js";
 import { keyOf } from "../fileKeys.js";
@@ -39,10 +39,33 @@ export class ChartAnswers {
     const wish = this.#wishOf(result, question);
     for (const name of feature.subjects(result.analysis, wish)) {
       const shown = this.#chartOf(result, feature, name, want);
-      if (shown !== undefined) return { kind: "chart", view: want.view, ...shown } as ChartAnswer;
+      if (shown === undefined) continue;
+      const besides = feature.besides?.(result.analysis, name, want, result.analyse) ?? {};
+      return { kind: "chart", view: want.view, ...shown, ...besides } as ChartAnswer;
     }
     const { reason, says, example } = feature.nothing(result.analysis, wish);
     return { kind: "nothing", view: want.view, reason, says: [...says], example };
+  }
+
+  /** What would write what is wanted to the code; null where nothing would, or where the texts are newer than the result. */
+  editsFor(result: Result, question: ChartQuestion): ChartEdits {
+    const { want } = question;
+    const feature = this.#features[want.view] as AnyFeature;
+    const [name] = feature.subjects(result.analysis, this.#wishOf(result, question));
+    const edits = name === undefined ? undefined : feature.editsFor?.(result.analysis, name, want);
+    const { snapshot } = result;
+    if (edits === undefined || edits.some(({ file }) => !this.#isUnchanged(snapshot, file))) return null;
+    return edits.map((edit) => ({
+      uri: this.#texts.uriOf(edit.file),
+      range: snapshot.lineMap(edit.file).rangeOf(edit),
+      newText: edit.newText,
+      version: snapshot.versions.get(edit.file) ?? null,
+    }));
+  }
+
+  #isUnchanged(snapshot: Result["snapshot"], file: string): boolean {
+    const open = this.#texts.openText(file);
+    return open === undefined || open.text === snapshot.read(file);
   }
 
   #wishOf(result: Result, { caret, mechanism, robot }: ChartQuestion): Wish {

@@ -7,7 +7,7 @@ import type { OpenedChart } from "./chartHost.js";
 import { crowded, fine, hoistChart, NEEDED_NM, nothingDeclared, pastPeak, remembered } from "./charts.js";
 import { chartHost } from "./session.js";
 
-const WANT = { view: "operating-point" };
+const WANT = { view: "operating-point", probe: null };
 
 describe("the chart's page", () => {
   let chart: OpenedChart;

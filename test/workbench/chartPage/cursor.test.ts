@@ -32,6 +32,8 @@ describe("the cursor of the chart's page", () => {
     await chart.page.keyboard.press("Tab");
     assert.equal(await chart.page.evaluate(() => document.activeElement?.tagName), "SELECT");
     await chart.page.keyboard.press("Tab");
+    assert.equal(await chart.page.evaluate(() => (document.activeElement as HTMLInputElement).type), "range");
+    await chart.page.keyboard.press("Tab");
     const plots = chart.page.getByRole("slider", { name: "Torque of the read-out" });
     assert.equal(await plots.evaluate((element) => element === document.activeElement), true);
     const before = await picture();
@@ -61,12 +63,12 @@ describe("the cursor of the chart's page", () => {
     const cells = await chart.page.locator(".readout tbody tr").last().locator("td").allInnerTexts();
     // The sheet at no load, as declared.
     assert.deepEqual(cells, ["310 rpm", "0.35 A", "0 W", "0 %"]);
-    const spoken = chart.page.locator("[aria-live=polite]");
+    const spoken = chart.page.locator(".spoken");
     assert.match(
       (await spoken.textContent()) ?? "",
       /Sheet: speed 310 rpm, current 0\.35 A, output power 0 W, efficiency 0 %\.$/,
     );
-    const slider = chart.page.getByRole("slider");
+    const slider = chart.page.locator(".plots");
     assert.equal(await slider.getAttribute("aria-valuetext"), "0 N·m, 0 % of stall");
   });
 

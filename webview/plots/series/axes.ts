@@ -36,6 +36,34 @@ export function fixedAxis(name: string, unit: AxisUnit, from: number, to: number
   return { min, max, ticks: ticksBetween(min, max, 6, "within"), title: `${name} (${unit.text})`, unit };
 }
 
+/** An axis of even factors between two ends above 0, for a number without a unit. */
+export function logAxis(name: string, min: number, max: number): SeriesAxis {
+  return { min, max, scale: "log", ticks: logTicks(min, max), title: name, unit: PLAIN };
+}
+
+const PLAIN: AxisUnit = { text: "", fromSi: (value) => value, toSi: (value) => value };
+
+/** Round numbers: 1, 2 and 5 of each decade, and more of them where that would be few. */
+function logTicks(min: number, max: number): readonly number[] {
+  for (const multiples of [
+    [1, 2, 5],
+    [1, 1.5, 2, 3, 4, 5, 6, 8],
+    [1, 1.2, 1.4, 1.6, 1.8, 2, 2.5, 3, 3.5, 4, 5, 6, 7, 8, 9],
+  ]) {
+    const decades = Array.from(
+      { length: Math.ceil(Math.log10(max)) - Math.floor(Math.log10(min)) + 1 },
+      (_, index) => Math.floor(Math.log10(min)) + index,
+    );
+    const ticks = decades
+      .flatMap((decade) => multiples.map((multiple) => Number((multiple * 10 ** decade).toPrecision(6))))
+      .filter((tick) => tick >= min && tick <= max);
+    if (ticks.length >= LEAST_TICKS) return ticks;
+  }
+  return [min, max];
+}
+
+const LEAST_TICKS = 5;
+
 function extent(values: Iterable<number>, fromZero: boolean): readonly [number, number] {
   let [least, greatest] = fromZero ? [0, 0] : [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const value of values) {

@@ -9,6 +9,8 @@ import type { AxisUnit } from "../axisUnit.js";
 export interface SeriesAxis {
   readonly min: number;
   readonly max: number;
+  /** Absent: even steps. `log`: even factors, both ends above 0. */
+  readonly scale?: "log";
   readonly ticks: readonly number[];
   /** With its unit: "Power (W)". */
   readonly title: string;
@@ -71,6 +73,8 @@ export interface Dot {
 export interface StateRow {
   readonly words: string;
   readonly spans: readonly { readonly from: number; readonly to: number }[];
+  /** Good rather than bad: plain instead of hatched. */
+  readonly plain?: true;
 }
 
 export interface SeriesDrawing {

@@ -41,6 +41,15 @@ export function heightOfRows(count: number): number {
   return TOP + count * ROW_HEIGHT + BOTTOM;
 }
 
+/** Where a value lies between the ends of its axis. */
+function shareOf(value: number, { min, max, scale }: SeriesAxis): number {
+  return scale === "log" ? Math.log(value / min) / Math.log(max / min) : (value - min) / (max - min);
+}
+
+function valueAtShare(share: number, { min, max, scale }: SeriesAxis): number {
+  return scale === "log" ? min * (max / min) ** share : min + share * (max - min);
+}
+
 export function frameOf(drawing: SeriesDrawing, width: number, height: number, room: Room): Frame {
   const area: Box = {
     left: room.left,
@@ -48,17 +57,16 @@ export function frameOf(drawing: SeriesDrawing, width: number, height: number, r
     right: Math.max(width - room.right, room.left + 1),
     bottom: Math.max(height - (drawing.showsAcross ? BOTTOM : BARE_BOTTOM), TOP + 1),
   };
-  const share = (value: number, { min, max }: SeriesAxis): number => (value - min) / (max - min);
   return {
     area,
-    x: (value) => area.left + share(value, drawing.across) * (area.right - area.left),
+    x: (value) => area.left + shareOf(value, drawing.across) * (area.right - area.left),
     y(value, side) {
       const axis = drawing[side] ?? drawing.left ?? drawing.right;
-      return axis === null ? area.bottom : area.bottom - share(value, axis) * (area.bottom - area.top);
+      return axis === null ? area.bottom : area.bottom - shareOf(value, axis) * (area.bottom - area.top);
     },
     valueAt(px) {
       const at = Math.min(Math.max((px - area.left) / (area.right - area.left), 0), 1);
-      return drawing.across.min + at * (drawing.across.max - drawing.across.min);
+      return valueAtShare(at, drawing.across);
     },
   };
 }

@@ -165,7 +165,7 @@ function paintRows(
   pixelRatio: number,
 ): void {
   const fill = hatchPattern(pen, "boundary", theme.foreground, pixelRatio);
-  for (const [index, { spans }] of rows.entries()) {
+  for (const [index, { spans, plain }] of rows.entries()) {
     const bottom = area.top + (index + 1) * ROW_HEIGHT - 3;
     pen.fillStyle = theme.grid;
     pen.fillRect(area.left, bottom - 2, area.right - area.left, 2);
@@ -174,7 +174,8 @@ function paintRows(
       const width = Math.max(Math.min(x(to), area.right) - left, 2);
       pen.fillStyle = theme.background;
       pen.fillRect(left, bottom - ROW_BAR, width, ROW_BAR);
-      if (fill !== undefined) pen.fillStyle = fill;
+      if (plain) pen.fillStyle = theme.quiet;
+      else if (fill !== undefined) pen.fillStyle = fill;
       pen.fillRect(left, bottom - ROW_BAR, width, ROW_BAR);
       pen.strokeStyle = theme.foreground;
       pen.lineWidth = 1;

@@ -65,7 +65,7 @@ function wordsOf(
         ),
       ),
     ...lines
-      .filter(({ line }) => line.name !== "")
+      .filter(({ line, points }) => line.name !== "" && points.length > 1)
       .map(({ line, points }) =>
         label(line.name, inkColour(line.ink, theme), line.ink === "quiet", (width) =>
           placesAlong(points, width, LINE_HEIGHT, SHARES),

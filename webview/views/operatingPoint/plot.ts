@@ -22,6 +22,8 @@ export interface Cursor {
 export interface Plot {
   show(drawing: Drawing, theme: Theme): void;
   setCursor(cursor: Cursor | null): void;
+  /** Torque in axis units; null for none. */
+  setProbe(x: number | null): void;
   /** Torque in axis units at a distance from the canvas's left edge, px. */
   torqueAt(x: number): number;
   destroy(): void;
@@ -38,6 +40,7 @@ const BOUNDARY_BAND = 7;
 export function createPlot(canvas: HTMLCanvasElement, { place, pixelRatio }: PlotOptions): Plot {
   let chart: Chart<"line"> | undefined;
   let cursor: Cursor | null = null;
+  let probe: number | null = null;
   return {
     show(drawing, theme) {
       chart?.destroy();
@@ -50,6 +53,7 @@ export function createPlot(canvas: HTMLCanvasElement, { place, pixelRatio }: Plo
         beforeDatasetsDraw: (shown) => drawBoundaryBands(shown, drawing, boundaryFill),
         afterDraw: (shown) => {
           drawWords(shown, drawing, plotOf(drawing, place), theme, place === "upper");
+          if (probe !== null) drawProbe(shown, probe, theme);
           if (cursor !== null) drawCursor(shown, drawing, place, cursor, theme);
         },
       };
@@ -68,6 +72,11 @@ export function createPlot(canvas: HTMLCanvasElement, { place, pixelRatio }: Plo
     },
     setCursor(next) {
       cursor = next;
+      chart?.draw();
+    },
+    setProbe(next) {
+      if (next === probe) return;
+      probe = next;
       chart?.draw();
     },
     destroy: () => chart?.destroy(),
@@ -115,3 +124,32 @@ function drawCursor(chart: Chart, drawing: Drawing, place: PlotPlace, { x, value
   }
   context.restore();
 }
+
+/** A thick line with a grip at both ends. */
+function drawProbe(chart: Chart, x: number, theme: Theme): void {
+  const { ctx: context, chartArea: area, scales } = chart;
+  const at = Math.min(scales.torque?.getPixelForValue(x) ?? 0, area.right);
+  context.save();
+  context.strokeStyle = theme.foreground;
+  context.fillStyle = theme.foreground;
+  context.lineWidth = 2.5;
+  context.setLineDash([7, 3]);
+  context.beginPath();
+  context.moveTo(at, area.top);
+  context.lineTo(at, area.bottom);
+  context.stroke();
+  for (const [y, inwards] of [
+    [area.top, 1],
+    [area.bottom, -1],
+  ] as const) {
+    context.beginPath();
+    context.moveTo(at - GRIP, y);
+    context.lineTo(at + GRIP, y);
+    context.lineTo(at, y + inwards * GRIP * 1.5);
+    context.closePath();
+    context.fill();
+  }
+  context.restore();
+}
+
+const GRIP = 7;

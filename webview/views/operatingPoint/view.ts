@@ -1,6 +1,6 @@
 /** The view of one mechanism's operating point: two plots over torque, of what its motors give and what its load needs. */
 import type { OperatingPointChart } from "../../../extension/protocol/charts/operatingPoint.js";
-import type { ShownChart } from "../../../extension/protocol/charts/views.js";
+import type { ShownChart, ViewMemory } from "../../../extension/protocol/charts/views.js";
 import type { UnitSystem } from "../../../extension/units/systems.js";
 import { factsBeside, type PlotPart, type ReadOut, type Sheet } from "../../frame/sheet.js";
 import type { View } from "../view.js";
@@ -11,6 +11,7 @@ import { type Drawing, drawChart } from "./drawing.js";
 import { writtenFacts } from "./facts.js";
 import { createPlot } from "./plot.js";
 import type { PlotPlace } from "./plotConfig.js";
+import { probeOf } from "./probe.js";
 import { QUANTITIES } from "./quantities.js";
 import { readoutOf } from "./readout.js";
 import { type Stop, stopsOf } from "./stops.js";
@@ -21,12 +22,17 @@ type Shown = ShownChart<"operating-point">;
 export const operatingPointView: View<"operating-point"> = {
   name: "operating-point",
   title: "Operating point",
-  want: () => ({ view: "operating-point" }),
+  want: ({ probe }) => ({ view: "operating-point", probe }),
   subject: ({ chart }) => ({ mechanism: chart.mechanism }),
   sheet: operatingPointSheet,
+  probed: (at) => ({ probe: at === null ? null : { torqueNm: at } }),
 };
 
-export function operatingPointSheet(shown: Shown, _memory: unknown, system: UnitSystem): Sheet {
+export function operatingPointSheet(
+  shown: Shown,
+  memory: Pick<ViewMemory<"operating-point">, "probe">,
+  system: UnitSystem,
+): Sheet {
   const { chart, saved } = shown;
   const drawing = drawChart(shown, system);
   const units = unitsOf(drawing);
@@ -52,6 +58,8 @@ export function operatingPointSheet(shown: Shown, _memory: unknown, system: Unit
     table: () => tableOf(chart.mechanism, stops, units),
     file: () => fileOf(stops, system),
     choices: [],
+    probe: probeOf(shown, memory, units, drawing),
+    plotsKey: JSON.stringify([chart, saved, system]),
     zoom: null,
     footnote: footnoteOf(chart),
   };
@@ -80,6 +88,7 @@ function plotPart(place: PlotPlace, words: string, height: number, drawing: Draw
           });
           plot.setCursor({ x: units.torque.fromSi(stop.torqueNm), values: Object.fromEntries(values) });
         },
+        setProbe: (torqueNm) => plot.setProbe(torqueNm === null ? null : units.torque.fromSi(torqueNm)),
         at: (px) => units.torque.toSi(plot.torqueAt(px)),
         destroy: () => plot.destroy(),
       };

@@ -58,6 +58,7 @@ export function powerSheet({ chart, saved }: ShownChart<"power">, memory: ViewMe
     table: () => powerTable(chart, stops, system),
     file: () => powerFile(chart, system),
     choices: cycleChoice(chart, memory),
+    probe: null,
     zoom: {
       from: span.fromS,
       to: span.toS,

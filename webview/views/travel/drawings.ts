@@ -54,7 +54,11 @@ export function drawTravel(chart: TravelChart, saved: TravelChart | null, across
   const axis = fixedAxis(over === "time" ? "Time" : "Position", unit, unit.fromSi(from), unit.fromSi(to));
   const uprights = uprightsOf(chart, over, axis, system);
   return {
-    torque: { ...torquePlot(chart, saved, over, axis, system), uprights: uprights.map((one) => ({ ...one, words: "" })) },
+    torque: {
+      ...torquePlot(chart, saved, over, axis, system),
+      showsAcross: !moves(chart),
+      uprights: uprights.map((one) => ({ ...one, words: "" })),
+    },
     current: { ...currentPlot(chart, saved, over, axis, system), uprights },
   };
 }

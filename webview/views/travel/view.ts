@@ -51,7 +51,8 @@ export function travelSheet({ chart, saved }: ShownChart<"travel">, memory: View
     notChecked: chart.notChecked,
     plots: [
       part(describeTorque(chart, over, system), 230, drawings.torque, ["neededNm", "givenNm"]),
-      part(describeCurrent(chart, over, system), 235, drawings.current, ["currentA", "speed"]),
+      // Without a motion there is none to show.
+      ...(moves(chart) ? [part(describeCurrent(chart, over, system), 235, drawings.current, ["currentA", "speed"])] : []),
     ],
     across: over === "time" ? "Time" : "Position",
     stops: moments.map((moment) => abscissaOf(moment, over)),
@@ -60,6 +61,7 @@ export function travelSheet({ chart, saved }: ShownChart<"travel">, memory: View
     table: () => travelTable(chart, moments, system),
     file: () => travelFile(chart, momentsOf(chart, over), system),
     choices: acrossChoice(chart, over),
+    probe: null,
     zoom: {
       ...span,
       least: whole.from,

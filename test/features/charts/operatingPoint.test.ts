@@ -2,10 +2,10 @@
 import fc from "fast-check";
 import * as v from "valibot";
 import { describe, expect, it } from "vitest";
-import { type OperatingPointChart, operatingPointChart } from "../../extension/features/charts/operatingPoint.js";
-import { operatingPointChartSchema } from "../../extension/protocol/charts/operatingPoint.js";
-import { analyseWithCursor } from "../support/cursorFixture.js";
-import { handPoint, liftTorque, MOTOR, SHEET } from "../support/handNumbers.js";
+import { type OperatingPointChart, operatingPointChart } from "../../../extension/features/charts/operatingPoint.js";
+import { operatingPointChartSchema } from "../../../extension/protocol/charts/operatingPoint.js";
+import { analyseWithCursor } from "../../support/cursorFixture.js";
+import { handPoint, liftTorque, MOTOR, SHEET } from "../../support/handNumbers.js";
 
 function hoist(rest = "", stages = "spur(20, 80)", motor = MOTOR): string {
   return `import { battery, breaker, lift, mechanism, motor, spur, wheels } from "loadmark";
