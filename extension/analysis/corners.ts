@@ -6,6 +6,7 @@
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { DefinitionCall } from "../evaluator/value.js";
 import type { Supply } from "../model/drive.js";
+import { createRandom } from "./random.js";
 import { type Leaf, leavesBelow, type Replacements, rebuild } from "./rebuild.js";
 
 export interface Corner {
@@ -56,15 +57,4 @@ function bits(count: number, isHigh: (index: number) => boolean): boolean[] {
 
 function tell([{ label }, plain]: readonly [Leaf, string | number]): string {
   return `${label} ${typeof plain === "string" ? plain.replaceAll("*", "·") : plain}`;
-}
-
-/** Mulberry32, a small seeded generator: the same draws on every machine. */
-function createRandom(seed: number): () => number {
-  let state = seed >>> 0;
-  return () => {
-    state = (state + 0x6d2b79f5) >>> 0;
-    let mixed = Math.imul(state ^ (state >>> 15), state | 1);
-    mixed ^= mixed + Math.imul(mixed ^ (mixed >>> 7), mixed | 61);
-    return ((mixed ^ (mixed >>> 14)) >>> 0) / 2 ** 32;
-  };
 }

@@ -39,8 +39,11 @@ const FOREVER = 40;
 /** A fuse may need this long just above its rating, s. */
 const FUSE_S = 400_000;
 
-/** Keeps the mode from a state (absent: cold, protection at rest) for a time, and looks further until nothing changes any more. */
-export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: CarriedState): HeldRun {
+/**
+ * Keeps the mode from a state (absent: cold, protection at rest) for a time, and looks further until nothing changes any more; `onlyAsked`:
+ * no further than that time.
+ */
+export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: CarriedState, onlyAsked = false): HeldRun {
   const system = motionSystem(plant, mode, scalesOf(plant));
   const state = startState(plant, from);
   const observer = createObserver(plant, false);
@@ -58,7 +61,7 @@ export function solveHeld(plant: Plant, mode: Mode, lastsS?: number, from?: Carr
   let timeS = keep(system, observer, state, startS, wantedS);
   const whole = timeS >= wantedS;
   const end = carriedState(plant, state);
-  if (whole && foreverS > wantedS) timeS = keep(system, observer, state, wantedS, foreverS);
+  if (whole && !onlyAsked && foreverS > wantedS) timeS = keep(system, observer, state, wantedS, foreverS);
   const lastA = system.carried(system.instantAt(timeS, state));
 
   const steady = lastsS === undefined ? steadyWinding(plant, mode, end.windingC) : end.windingC;

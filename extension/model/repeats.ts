@@ -26,8 +26,12 @@ export interface RepeatedRun {
 
 /** The periodic state counts as reached when what is left to rise is below this, K. */
 const PERIODIC_K = 0.1;
-/** Cycles that are followed one by one for protection's sake. */
+/** Less change of a protector's state in a cycle is none. */
+const SETTLED = 1e-3;
+/** Cycles that are followed one by one at first, as long as the protector's state still changes. */
 const FOLLOWED = 100;
+/** The same where it is known to open in the end. */
+const FOLLOWED_TO_OPENING = 1000;
 const MOST_JUMPS = 60;
 
 /** null where nothing repeats, or the travel never arrives. */
@@ -40,18 +44,26 @@ export function solveRepeats(drive: Drive): RepeatedRun | null {
   let elapsedS = drive.load.kind === "flywheel" ? opening.coveredS : 0;
   let tripsAfterS = drive.load.kind === "flywheel" ? opening.opensAfterS : null;
   let fits = true;
-  for (let cycle = 0; cycle < FOLLOWED; cycle++) {
+  let periodic: Periodic | null | undefined;
+  for (let cycle = 0; cycle < FOLLOWED_TO_OPENING; cycle++) {
     const run = oneCycle(drive, plant, state, drive.everyS);
     if (!run) return null;
     if (tripsAfterS === null && run.opensAfterS !== null) tripsAfterS = elapsedS + run.opensAfterS;
     fits &&= run.fits;
-    const settled = leftToRise(plant, state, run) < PERIODIC_K && Math.abs(run.end.protection - state.protection) < 1e-3;
+    const rests = Math.abs(run.end.protection - state.protection) < SETTLED;
+    const settled = rests && leftToRise(plant, state, run) < PERIODIC_K;
     elapsedS += run.lastsS;
     state = run.end;
     if (state.windingC > RUNAWAY_C) return { windingPeakC: null, runsAway: true, tripsAfterS, fits };
     if (settled) return { windingPeakC: run.windingPeakC, runsAway: false, tripsAfterS, fits };
+    if (!rests && cycle < FOLLOWED) continue;
+    // What is left is slow heat. It drifts one way, so that a protector closed now and in the end stays closed in between.
+    periodic ??= jumpToPeriodic(drive, plant, state, drive.everyS);
+    if (tripsAfterS !== null || !periodic?.opens) break;
   }
-  return { ...jumpToPeriodic(drive, plant, state, drive.everyS), tripsAfterS, fits };
+  periodic ??= jumpToPeriodic(drive, plant, state, drive.everyS);
+  if (periodic === null) return null;
+  return { windingPeakC: periodic.windingPeakC, runsAway: periodic.runsAway, tripsAfterS, fits };
 }
 
 interface Cycle {
@@ -71,7 +83,13 @@ function oneCycle(drive: Drive, plant: Plant, from: CarriedState, everyS: number
   let windingPeakC = work.windingPeakC;
   const hold = drive.holdForS ? holdPoint(drive) : null;
   if (hold && drive.holdForS) {
-    const held = solveHeld(plant, { kind: "held", torqueNm: hold.motorTorqueNm, motorSpeedRadPerS: 0 }, drive.holdForS, state);
+    const held = solveHeld(
+      plant,
+      { kind: "held", torqueNm: hold.motorTorqueNm, motorSpeedRadPerS: 0 },
+      drive.holdForS,
+      state,
+      true,
+    );
     if (opensAfterS === null && held.trip.opensAfterS !== null && held.trip.opensAfterS <= drive.holdForS) {
       opensAfterS = lastsS + held.trip.opensAfterS;
     }
@@ -81,7 +99,7 @@ function oneCycle(drive: Drive, plant: Plant, from: CarriedState, everyS: number
   }
   const restS = everyS - lastsS;
   if (restS > 0) {
-    state = solveHeld(plant, { kind: "held", torqueNm: 0, motorSpeedRadPerS: 0 }, restS, state).carried;
+    state = solveHeld(plant, { kind: "held", torqueNm: 0, motorSpeedRadPerS: 0 }, restS, state, true).carried;
     lastsS = everyS;
   }
   return { end: { ...state, fast: 0 }, lastsS, windingPeakC, opensAfterS, fits: restS >= 0 };
@@ -91,37 +109,48 @@ function workOf(drive: Drive, from: CarriedState): TravelResult | null {
   return solveRelease(drive, from)?.recovery ?? solveTravel(drive, { from });
 }
 
-/** What a slow network still rises beyond one cycle's rise, were it linear, K. */
-function leftToRise(plant: Plant, before: CarriedState, run: Cycle): number {
-  const network = heatNetworkOf(plant.motor);
-  if (!network) return 0;
-  const slow = heatTimeConstants(network)[1];
-  const rise = Math.max(Math.abs(run.end.windingC - before.windingC), Math.abs(run.end.housingC - before.housingC));
-  return rise / -Math.expm1(-run.lastsS / slow);
+/** What the network's two modes still rise, each beyond one cycle's rise as if it were linear, K: the housing, and the winding above it. */
+interface Rise {
+  readonly housingK: number;
+  readonly aboveK: number;
 }
 
-/** Skips the many cycles of a slow housing: each jump adds what a linear network would still rise. */
-function jumpToPeriodic(
-  drive: Drive,
-  plant: Plant,
-  from: CarriedState,
-  everyS: number,
-): Pick<RepeatedRun, "windingPeakC" | "runsAway"> {
+function riseAhead(plant: Plant, before: CarriedState, { end, lastsS }: Cycle): Rise {
   const network = heatNetworkOf(plant.motor);
-  if (!network) return { windingPeakC: null, runsAway: false };
-  const slow = heatTimeConstants(network)[1];
+  if (!network) return { housingK: 0, aboveK: 0 };
+  const [fast, slow] = heatTimeConstants(network);
+  const above = end.windingC - end.housingC - (before.windingC - before.housingC);
+  return {
+    housingK: (end.housingC - before.housingC) / -Math.expm1(-lastsS / slow),
+    aboveK: above / -Math.expm1(-lastsS / fast),
+  };
+}
+
+function leftToRise(plant: Plant, before: CarriedState, run: Cycle): number {
+  const { housingK, aboveK } = riseAhead(plant, before, run);
+  return Math.max(Math.abs(housingK), Math.abs(housingK + aboveK));
+}
+
+interface Periodic extends Pick<RepeatedRun, "windingPeakC" | "runsAway"> {
+  /** Whether protection opens in the last cycle looked at. */
+  readonly opens: boolean;
+}
+
+/** Skips the many cycles of a slow housing: each jump adds what a linear network would still rise. null: hot, it does not arrive any more. */
+function jumpToPeriodic(drive: Drive, plant: Plant, from: CarriedState, everyS: number): Periodic | null {
+  const network = heatNetworkOf(plant.motor);
+  if (!network) return { windingPeakC: null, runsAway: false, opens: false };
   let state = from;
+  let opens = false;
   for (let jump = 0; jump < MOST_JUMPS; jump++) {
     const run = oneCycle(drive, plant, state, everyS);
-    if (!run || state.windingC > RUNAWAY_C || run.end.windingC > RUNAWAY_C) break;
-    const left = leftToRise(plant, state, run);
-    if (left < PERIODIC_K) return { windingPeakC: run.windingPeakC, runsAway: false };
-    const share = 1 / -Math.expm1(-run.lastsS / slow);
-    state = {
-      ...run.end,
-      windingC: state.windingC + (run.end.windingC - state.windingC) * share,
-      housingC: state.housingC + (run.end.housingC - state.housingC) * share,
-    };
+    if (!run) return null;
+    if (state.windingC > RUNAWAY_C || run.end.windingC > RUNAWAY_C) break;
+    opens = run.opensAfterS !== null;
+    if (leftToRise(plant, state, run) < PERIODIC_K) return { windingPeakC: run.windingPeakC, runsAway: false, opens };
+    const { housingK, aboveK } = riseAhead(plant, state, run);
+    const housingC = state.housingC + housingK;
+    state = { ...run.end, housingC, windingC: housingC + (state.windingC - state.housingC) + aboveK };
   }
-  return { windingPeakC: null, runsAway: true };
+  return { windingPeakC: null, runsAway: true, opens };
 }

@@ -17,6 +17,14 @@ interface Opening {
   readonly lastsS: number;
 }
 
+type Runs = Pick<MechanismFacts, "drive" | "travel" | "hold">;
+
+/** Whether protection opens in use: before the travel is done, before the hold is over, or while it keeps turning or repeating. */
+export function opensInUse(runs: Runs): boolean {
+  if (runs.drive.protection === undefined) return false;
+  return [inTravel, inHold, inTurning, inRepeats].some((openingsIn) => openingsIn(runs).some(({ surely }) => surely));
+}
+
 function judge(facts: MechanismFacts): Verdict | undefined {
   if (facts.drive.protection === undefined) return undefined;
   const openings = [...inTravel(facts), ...inHold(facts), ...inTurning(facts), ...inRepeats(facts)];
@@ -33,7 +41,7 @@ function judge(facts: MechanismFacts): Verdict | undefined {
   };
 }
 
-function inTravel({ drive, travel }: MechanismFacts): Opening[] {
+function inTravel({ drive, travel }: Runs): Opening[] {
   if (travel === null) return [];
   const lastsS = travel.timeS ?? Number.POSITIVE_INFINITY;
   const before = travel.timeS === null ? "the travel is done" : `the travel of ${writeQuantity(travel.timeS, "time")} is done`;
@@ -41,7 +49,7 @@ function inTravel({ drive, travel }: MechanismFacts): Opening[] {
   return openingsOf(travel.opensAfterS, travel.mayOpenAfterS, { before, currentA, lastsS });
 }
 
-function inHold({ drive, hold }: MechanismFacts): Opening[] {
+function inHold({ drive, hold }: Runs): Opening[] {
   const lastsS = drive.holdForS;
   if (hold === null || lastsS === undefined) return [];
   const { opensAfterS, mayOpenAfterS } = hold.trip;
@@ -54,7 +62,7 @@ function inHold({ drive, hold }: MechanismFacts): Opening[] {
 }
 
 /** What turns on and on has no end to reach: any opening counts. */
-function inTurning({ drive }: MechanismFacts): Opening[] {
+function inTurning({ drive }: Runs): Opening[] {
   const turning = solveTurning(drive);
   if (turning === null) return [];
   const { opensAfterS, mayOpenAfterS } = turning.trip;
@@ -62,7 +70,7 @@ function inTurning({ drive }: MechanismFacts): Opening[] {
   return openingsOf(opensAfterS, mayOpenAfterS, { before: "it has turned for long", currentA, lastsS: Number.MAX_VALUE });
 }
 
-function inRepeats({ drive, travel }: MechanismFacts): Opening[] {
+function inRepeats({ drive, travel }: Runs): Opening[] {
   if (drive.everyS === undefined || travel === null) return [];
   const repeats = solveRepeats(drive);
   if (repeats === null) return [];

@@ -136,6 +136,23 @@ describe("repeats", () => {
     expect(solveRepeats({ ...drive, everyS: 0.2 })?.fits).toBe(false);
   });
 
+  it("of a slow motor come to the balance of mean copper heat, however many cycles that takes", () => {
+    // No losses but copper: 2 K/W and 8 K/W carry rms² · R(T) of a cycle much shorter than 300 s and 5000 s.
+    const lossless = { ...plainMotor, noLoadCurrentA: 0, torqueConstantNmPerA: plainMotor.backEmfVPerRadPerS };
+    const slow = { ...lossless, thermal: { ...thermal, windingTimeS: 300, housingTimeS: 5000 } };
+    const drive = driveOf({ motor: slow, load: liftOf(4, 0.05, 1), everyS: 3 });
+    const repeated = solveRepeats(drive);
+    const travel = solveTravel(drive);
+    const meanSquare = ((travel?.rmsMotorCurrentA ?? 0) ** 2 * (travel?.timeS ?? 0)) / 3;
+    // T = 25 + 10·rms²·R_25·(1 + α·(T − 25)/(1 + 5α)), solved for T; hot, the travel itself takes a little longer.
+    const growth = 0.00393 / (1 + 0.00393 * 5);
+    const cold = 10 * meanSquare * slow.resistanceOhm;
+    const balance = 25 + cold / (1 - cold * growth);
+    expect(cold).toBeGreaterThan(5);
+    expect(repeated?.runsAway).toBe(false);
+    expect(Math.abs((repeated?.windingPeakC ?? 0) - balance)).toBeLessThan(0.05 * (balance - 25));
+  });
+
   it("open a breaker that one travel leaves closed", () => {
     const drive = driveOf({
       load: armOf(4, 0.4, -1, 1),
