@@ -13,7 +13,7 @@ import {
   pageMessageSchema,
 } from "../protocol/chartMessages.js";
 import { VIEW_NAMES, type ViewName, type Want } from "../protocol/charts/views.js";
-import { SHOW_CHART, SHOW_POWER, SHOW_TRAVEL } from "../protocol/commands.js";
+import { SHOW_CHART, SHOW_POWER, SHOW_RATIO_MAP, SHOW_TRAVEL } from "../protocol/commands.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { chartHtml } from "./chartHtml.js";
 import { isSource } from "./documents.js";
@@ -24,12 +24,18 @@ import { writeEdits } from "./writeEdits.js";
 export const CHART_VIEW = "loadmark.chart";
 
 /** The command that opens each view. */
-const COMMANDS: Readonly<Record<ViewName, string>> = { "operating-point": SHOW_CHART, travel: SHOW_TRAVEL, power: SHOW_POWER };
+const COMMANDS: Readonly<Record<ViewName, string>> = {
+  "operating-point": SHOW_CHART,
+  travel: SHOW_TRAVEL,
+  "ratio-map": SHOW_RATIO_MAP,
+  power: SHOW_POWER,
+};
 
 /** On the panel's own tab. */
 const titleOf: Readonly<Record<ViewName, () => string>> = {
   "operating-point": () => vscode.l10n.t("Operating Point"),
   travel: () => vscode.l10n.t("Travel"),
+  "ratio-map": () => vscode.l10n.t("Ratio Map"),
   power: () => vscode.l10n.t("Power by Mechanism"),
 };
 
@@ -213,6 +219,9 @@ class ChartPanel implements vscode.Disposable {
         return;
       case "saveTable":
         void saveAs(message.fileName, new TextEncoder().encode(message.csv));
+        return;
+      case "savePage":
+        void saveAs(message.fileName, new TextEncoder().encode(message.html));
         return;
       case "trouble":
         this.#parts.log.warn(message.what);

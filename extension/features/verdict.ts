@@ -41,6 +41,11 @@ const WORDS: Readonly<Record<RuleId, string>> = {
 
 const RANK: Readonly<Record<Level, number>> = { error: 0, warning: 1, information: 2 };
 
+/** A rule in a few words: what is said where it is broken. */
+export function ruleWords(rule: RuleId): string {
+  return WORDS[rule];
+}
+
 /** Findings about one mechanism, worst first. */
 export function findingsAbout(analysis: Analysis, mechanism: AnalysedMechanism): readonly Finding[] {
   return (analysis.findingsByMechanism.get(mechanism.name) ?? [])

@@ -48,7 +48,7 @@ export const chartEditsSchema = v.nullable(
 
 const CONTENT_LIMIT = 32 * 1024 * 1024;
 /** A name alone: never a path. */
-const fileName = v.pipe(v.string(), v.regex(/^[\p{L}\p{N}-]{1,100}\.(png|csv)$/u));
+const fileName = v.pipe(v.string(), v.regex(/^[\p{L}\p{N}-]{1,100}\.(png|csv|html)$/u));
 const content = v.pipe(v.string(), v.maxLength(CONTENT_LIMIT));
 /** Without groups: a repeated group overflows the stack on a picture of some megabytes. */
 const BASE64 = /^[A-Za-z\d+/]*={0,2}$/;
@@ -73,6 +73,8 @@ export const pageMessageSchema = v.variant("type", [
     ),
   }),
   v.object({ type: v.literal("saveTable"), fileName, csv: content }),
+  /** A page of its own, for the printer. */
+  v.object({ type: v.literal("savePage"), fileName, html: content }),
   /** What the page could not do, for the log. */
   v.object({ type: v.literal("trouble"), what: v.pipe(v.string(), v.maxLength(2000)) }),
 ]);

@@ -7,21 +7,18 @@ import type { Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
 import { searchProposals } from "../analysis/propose.js";
 import type { Result } from "./session.js";
+import { runInSlices, type Slices } from "./slices.js";
 
 /** The proposals for a finding of the result; `undefined` where the text changed before they were found. */
 export type Proposer = (result: Result, finding: Finding) => Promise<readonly Proposal[] | undefined>;
 
-/** Longest time between two chances for others, ms: a little more than one candidate takes. */
-const SLICE_MS = 15;
-
-/** `moment`: counts what happened to texts. */
-export function createProposer(moment: () => number, sliceMs = SLICE_MS): Proposer {
+export function createProposer(slices: Slices): Proposer {
   const known = new WeakMap<Finding, readonly Proposal[]>();
   const running = new WeakMap<Finding, Promise<readonly Proposal[] | undefined>>();
   return async (result, finding) => {
     const before = known.get(finding) ?? running.get(finding);
     if (before !== undefined) return before;
-    const search = searchInSlices(result, finding, moment, sliceMs);
+    const search = searchInSlices(result, finding, slices);
     running.set(finding, search);
     try {
       const found = await search;
@@ -36,18 +33,7 @@ export function createProposer(moment: () => number, sliceMs = SLICE_MS): Propos
 async function searchInSlices(
   { analysis, analyse }: Result,
   finding: Finding,
-  moment: () => number,
-  sliceMs: number,
+  slices: Slices,
 ): Promise<readonly Proposal[] | undefined> {
-  const started = moment();
-  const search = searchProposals(analysis, finding, analyse);
-  for (;;) {
-    const end = performance.now() + sliceMs;
-    do {
-      const next = search.next();
-      if (next.done === true) return next.value;
-    } while (performance.now() < end);
-    await new Promise<void>((resolve) => setTimeout(resolve, 0));
-    if (moment() !== started) return undefined;
-  }
+  return (await runInSlices(searchProposals(analysis, finding, analyse), slices))?.result;
 }

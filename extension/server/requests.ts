@@ -96,7 +96,8 @@ export function answerRequests({
     }),
   );
   const canFillIn = capabilities.workspace?.workspaceEdit?.snippetEditSupport === true;
-  const propose = createProposer(() => session.moment);
+  const slices = { moment: () => session.moment };
+  const propose = createProposer(slices);
   connection.onCodeAction(
     guard.answer("Quick fixes", [], async ({ textDocument, range, context }) => {
       const current = await newestOf(textDocument.uri);
@@ -111,14 +112,14 @@ export function answerRequests({
       return result ? answerWorkspaceSymbols(result, query, (file) => texts.uriOf(file)) : [];
     }),
   );
-  const charts = new ChartAnswers(texts);
+  const charts = new ChartAnswers(texts, slices);
   connection.onRequest(
     CHART,
     guard.answer("A chart", null, async (message: unknown) => {
       const question = readMessage(chartQuestionSchema, message);
       if (question !== undefined) await session.loadSaved();
       const result = question && (await session.whenCurrent(PATIENCE_MS));
-      return question && result ? charts.answer(result, question) : null;
+      return question && result ? ((await charts.answer(result, question)) ?? null) : null;
     }),
   );
   connection.onNotification(

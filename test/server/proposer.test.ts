@@ -31,7 +31,7 @@ export const hoist = mechanism("hoist", {
 describe("the server's proposals", () => {
   it("are searched once for a finding, also by two who ask at once", async () => {
     const { result, finding, analyses } = resultWithFinding();
-    const propose = createProposer(() => 0);
+    const propose = createProposer({ moment: () => 0 });
     const [one, other] = await Promise.all([propose(result, finding), propose(result, finding)]);
     expect(one?.length).toBeGreaterThan(0);
     expect(other).toBe(one);
@@ -43,7 +43,7 @@ describe("the server's proposals", () => {
   it("let others have their turn, and stop when the text changes", async () => {
     const { result, finding, analyses } = resultWithFinding();
     let moment = 0;
-    const propose = createProposer(() => moment, 0);
+    const propose = createProposer({ moment: () => moment, sliceMs: 0 });
     const search = propose(result, finding);
     const { count } = analyses;
     moment = 1;

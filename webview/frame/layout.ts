@@ -25,6 +25,7 @@ export interface Layout {
   readonly tableButton: HTMLButtonElement;
   readonly pictureButton: HTMLButtonElement;
   readonly csvButton: HTMLButtonElement;
+  readonly pageButton: HTMLButtonElement;
   readonly tableBox: HTMLElement;
   readonly table: HTMLTableElement;
   readonly assumed: HTMLElement;
@@ -66,6 +67,7 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
     tableButton: button("Show table"),
     pictureButton: button("Save picture (PNG)"),
     csvButton: button("Save numbers (CSV)"),
+    pageButton: button("Save page to print (HTML)"),
     tableBox: element("div", {
       class: "table-box",
       attributes: { id: tableId, role: "region", "aria-label": "Table", tabindex: "0" },
@@ -77,7 +79,12 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
   parts.tableButton.setAttribute("aria-controls", tableId);
   parts.empty.append(parts.emptyText);
   parts.tableBox.append(parts.table);
-  const actions = element("div", { class: "actions" }, [parts.tableButton, parts.pictureButton, parts.csvButton]);
+  const actions = element("div", { class: "actions" }, [
+    parts.tableButton,
+    parts.pictureButton,
+    parts.csvButton,
+    parts.pageButton,
+  ]);
   const keys = element("p", {
     class: "note",
     text: [KEYS, ...(canZoom ? [ZOOM_KEYS] : []), ...(canProbe ? [PROBE_KEYS] : [])].join(" "),

@@ -32,8 +32,8 @@ export interface Sheet {
   readonly file: () => Table;
   /** What of it can be chosen; may be empty. */
   readonly choices: readonly Choice[];
-  /** What a person may have written into the code; absent: nothing. */
-  readonly actions?: readonly SheetAction[];
+  /** What a person may have written into the code, with the cursor at a stop or away; absent: nothing. */
+  readonly actionsAt?: (stop: number | null) => readonly SheetAction[];
   /** Null where nothing can be tried. */
   readonly probe: SheetProbe | null;
   /** As long as this stays the same so do the plots; absent where they always may differ. */

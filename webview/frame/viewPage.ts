@@ -16,12 +16,14 @@ import { showReadout } from "../page/readout.js";
 import { showFindings, showSentences } from "../page/remarks.js";
 import { readTheme } from "../theme/theme.js";
 import type { View } from "../views/view.js";
+import { createActionButtons } from "./actionButtons.js";
 import { createChoices } from "./choices.js";
 import { csvOf } from "./csv.js";
 import { cursorAfterKey, nearestStop } from "./cursorKeys.js";
 import { buildLayout } from "./layout.js";
 import { drawPicture } from "./picture.js";
 import { createPlotRow } from "./plotRow.js";
+import { printedPage } from "./printedPage.js";
 import { createProbeControl } from "./probeControl.js";
 import type { Sheet } from "./sheet.js";
 import { createZoomControl } from "./zoomControl.js";
@@ -75,9 +77,10 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     showCursor(sheet);
   };
 
-  const showCursor = ({ stops, restsAt, readAt }: Sheet): void => {
+  const showCursor = ({ stops, restsAt, readAt, actionsAt }: Sheet): void => {
     const { cursor } = around.memory();
     const stop = nearestStop(stops, cursor ?? restsAt);
+    writes.show(actionsAt?.(cursor === null || stop < 0 ? null : stop) ?? []);
     if (stop < 0) return;
     const read = readAt(stop);
     plots.setCursor(cursor === null ? null : stop);
@@ -144,6 +147,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     update();
     around.ask();
   });
+  const writes = createActionButtons(({ message }) => host.send(message));
   const probe = createProbeControl({
     box: parts.plots,
     at: plots.at,
@@ -162,6 +166,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     },
   });
   parts.controls.append(choices.element, zoom.element, probe.element);
+  parts.plots.after(writes.element);
 
   const savePicture = (): void => {
     if (sheet === undefined || shown === undefined) return;
@@ -174,6 +179,12 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
   const saveTable = (): void => {
     if (sheet === undefined) return;
     host.send({ type: "saveTable", fileName: fileNameOf(sheet.title, view.name, "csv"), csv: csvOf(sheet.file()) });
+  };
+
+  const savePage = (): void => {
+    if (sheet === undefined || shown === undefined) return;
+    const html = printedPage(sheet, view.title, shown.old);
+    host.send({ type: "savePage", fileName: fileNameOf(sheet.title, view.name, "html"), html });
   };
 
   parts.plots.addEventListener("keydown", (event) => {
@@ -201,6 +212,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
   });
   parts.pictureButton.addEventListener("click", savePicture);
   parts.csvButton.addEventListener("click", saveTable);
+  parts.pageButton.addEventListener("click", savePage);
 
   return {
     panel: parts.panel,

@@ -2,7 +2,7 @@
 import type { ChartFinding } from "../../extension/protocol/charts/parts.js";
 import { element } from "./element.js";
 
-const LEVEL: Readonly<Record<ChartFinding["level"], string>> = {
+export const LEVELS: Readonly<Record<ChartFinding["level"], string>> = {
   error: "Error",
   warning: "Warning",
   information: "Note",
@@ -13,7 +13,7 @@ export function showFindings(list: HTMLElement, findings: readonly ChartFinding[
   list.replaceChildren(
     ...findings.map(({ level, message }) =>
       element("li", { class: level }, [
-        element("span", { class: "level", text: `${LEVEL[level]}: ` }),
+        element("span", { class: "level", text: `${LEVELS[level]}: ` }),
         element("span", { text: message }),
       ]),
     ),

@@ -54,6 +54,21 @@ export function readTheme(body: HTMLElement): Theme {
   };
 }
 
+/** Black on white, for paper, whatever the editor's theme. */
+export function paperTheme(): Theme {
+  const tint = (opacity: number): string => writeColour(blend(BLACK, WHITE, opacity));
+  return {
+    kind: "light",
+    background: writeColour(WHITE),
+    foreground: tint(0.9),
+    grid: tint(0.14),
+    quiet: tint(0.62),
+    hatch: tint(0.32),
+    ...coloursOn(WHITE, BLACK),
+    fontFamily: "sans-serif",
+  };
+}
+
 /** Calls back when the editor changes the page's classes or variables. */
 export function watchTheme(document: Document, onChange: () => void): void {
   const observer = new MutationObserver(onChange);

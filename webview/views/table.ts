@@ -2,11 +2,13 @@
 import type { ViewName } from "../../extension/protocol/charts/views.js";
 import { operatingPointView } from "./operatingPoint/view.js";
 import { powerView } from "./power/view.js";
+import { ratioMapView } from "./ratioMap/view.js";
 import { travelView } from "./travel/view.js";
 import type { View } from "./view.js";
 
 export const VIEWS: { readonly [V in ViewName]: View<V> } = {
   "operating-point": operatingPointView,
   travel: travelView,
+  "ratio-map": ratioMapView,
   power: powerView,
 };

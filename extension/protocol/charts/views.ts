@@ -6,22 +6,29 @@
 import * as v from "valibot";
 import { NO_OPERATING_POINT_MEMORY, operatingPointMemory, operatingPointShown, operatingPointWant } from "./operatingPoint.js";
 import { NO_POWER_MEMORY, powerMemory, powerShown, powerWant } from "./power.js";
+import { NO_RATIO_MAP_MEMORY, ratioMapMemory, ratioMapShown, ratioMapWant } from "./ratioMap.js";
 import { NO_TRAVEL_MEMORY, travelMemory, travelShown, travelWant } from "./travel.js";
 
 /** In the order of their tabs. */
-export const VIEW_NAMES = ["operating-point", "travel", "power"] as const;
+export const VIEW_NAMES = ["operating-point", "travel", "ratio-map", "power"] as const;
 
 export const viewNameSchema = v.picklist(VIEW_NAMES);
 
-export const wantSchema = v.variant("view", [operatingPointWant, travelWant, powerWant]);
+export const wantSchema = v.variant("view", [operatingPointWant, travelWant, ratioMapWant, powerWant]);
 
-export const shownSchema = v.variant("view", [operatingPointShown, travelShown, powerShown]);
+export const shownSchema = v.variant("view", [operatingPointShown, travelShown, ratioMapShown, powerShown]);
 
-export const memoriesSchema = v.object({ "operating-point": operatingPointMemory, travel: travelMemory, power: powerMemory });
+export const memoriesSchema = v.object({
+  "operating-point": operatingPointMemory,
+  travel: travelMemory,
+  "ratio-map": ratioMapMemory,
+  power: powerMemory,
+});
 
 export const NO_MEMORIES: v.InferOutput<typeof memoriesSchema> = {
   "operating-point": NO_OPERATING_POINT_MEMORY,
   travel: NO_TRAVEL_MEMORY,
+  "ratio-map": NO_RATIO_MAP_MEMORY,
   power: NO_POWER_MEMORY,
 };
 

@@ -13,6 +13,7 @@ import type { Want } from "../../protocol/charts/views.js";
 import { currentFile } from "../current.js";
 import { keyOf } from "../fileKeys.js";
 import type { Result } from "../session.js";
+import { runInSlices, type Slices } from "../slices.js";
 import type { Texts } from "../texts.js";
 
 /** Good charts that are kept; the one that was asked for longest ago goes first. */
@@ -23,21 +24,25 @@ type AnyFeature = ChartFeature<unknown, Want>;
 
 export class ChartAnswers {
   readonly #texts: Texts;
+  readonly #slices: Slices;
   readonly #features = createChartFeatures();
   readonly #lastGood = new Map<string, unknown>();
   /** Analyses of what is saved, by the texts that they are of. */
   readonly #saved = new WeakMap<object, Analysis>();
 
-  constructor(texts: Texts) {
+  constructor(texts: Texts, slices: Slices) {
     this.#texts = texts;
+    this.#slices = slices;
   }
 
-  answer(result: Result, question: ChartQuestion): ChartAnswer {
+  /** `undefined` where a text changed while a chart was prepared: whoever asked will ask again. */
+  async answer(result: Result, question: ChartQuestion): Promise<ChartAnswer | undefined> {
     const { want } = question;
     // Each feature takes the wants of its own view, which the compiler cannot follow through the table.
     const feature = this.#features[want.view] as AnyFeature;
     const wish = this.#wishOf(result, question);
     for (const name of feature.subjects(result.analysis, wish)) {
+      if (!(await this.#prepare(result, feature, name, want))) return undefined;
       const shown = this.#chartOf(result, feature, name, want);
       if (shown === undefined) continue;
       const besides = feature.besides?.(result.analysis, name, want, result.analyse) ?? {};
@@ -61,6 +66,16 @@ export class ChartAnswers {
       newText: edit.newText,
       version: snapshot.versions.get(edit.file) ?? null,
     }));
+  }
+
+  /** False where a text changed meanwhile. */
+  async #prepare(result: Result, feature: AnyFeature, name: string, want: Want): Promise<boolean> {
+    const saved = feature.prepare && this.#savedAnalysis(result);
+    for (const analysis of [result.analysis, ...(saved ? [saved] : [])]) {
+      const work = feature.prepare?.(analysis, name, want);
+      if (work !== undefined && (await runInSlices(work, this.#slices)) === undefined) return false;
+    }
+    return true;
   }
 
   #isUnchanged(snapshot: Result["snapshot"], file: string): boolean {
@@ -97,12 +112,18 @@ export class ChartAnswers {
   }
 
   /** The chart for what is saved; undefined where there is none, or where everything is saved. */
-  #savedChart({ analysis, analyse }: Result, feature: AnyFeature, name: string, want: Want): unknown {
+  #savedChart(result: Result, feature: AnyFeature, name: string, want: Want): unknown {
+    const saved = this.#savedAnalysis(result);
+    return saved && feature.chartOf(saved, name, want);
+  }
+
+  /** `undefined` where everything is saved. */
+  #savedAnalysis({ analysis, analyse }: Result): Analysis | undefined {
     const { saved, isSaved } = this.#texts.capture();
     if (isSaved) return undefined;
     const known = this.#saved.get(saved) ?? analyse([...analysis.files.keys()], saved);
     this.#saved.set(saved, known);
-    return feature.chartOf(known, name, want);
+    return known;
   }
 
   #keep(key: string, chart: unknown): void {

@@ -15,14 +15,24 @@ export function ratioActions(chart: RatioMapChart, cursor: number | null, system
   const best = (label: string, point: (RatioMapPoint & { readonly words: string }) | null): SheetAction[] =>
     point === null
       ? []
-      : [write(`Write the ${label}: ${point.words}, ${writeNumber(point.ratio)}, ${timeText(chart, point, system)}`, point.ratio)];
+      : [
+          write(
+            `Write the ${label}: ${point.words}, ${writeNumber(point.ratio)}, ${timeText(chart, point, system)}`,
+            point.ratio,
+          ),
+        ];
   const near = cursor === null ? undefined : nearestTo(chart, cursor);
   const isOther = near !== undefined && ![fastest?.ratio, bestEfficiency?.ratio, chart.now.ratio].includes(near.ratio);
   return [
     ...best("fastest", fastest),
     ...(bestEfficiency?.ratio === fastest?.ratio ? [] : best("most efficient", bestEfficiency)),
     ...(near !== undefined && isOther
-      ? [write(`Write what is nearest to the cursor: ${near.words}, ${writeNumber(near.ratio)}${near.keeps ? "" : " (breaks a rule)"}`, near.ratio)]
+      ? [
+          write(
+            `Write what is nearest to the cursor: ${near.words}, ${writeNumber(near.ratio)}${near.keeps ? "" : " (breaks a rule)"}`,
+            near.ratio,
+          ),
+        ]
       : []),
   ];
 }

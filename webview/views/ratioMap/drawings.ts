@@ -78,9 +78,15 @@ function timeLines(chart: RatioMapChart, saved: RatioMapChart | null, system: Un
   const least = Math.min(...values);
   const shown = chart.hasTravel ? values.filter((value) => value <= least * MOST_TIMES) : values;
   const within = chart.hasTravel && chart.withinS !== null && chart.withinS <= least * MOST_TIMES ? [chart.withinS] : [];
-  const left = valueAxis(chart.hasTravel ? "Travel" : "Output speed", [...shown, ...within], chart.hasTravel ? "time" : "speed", system, {
-    intervals: 3,
-  });
+  const left = valueAxis(
+    chart.hasTravel ? "Travel" : "Output speed",
+    [...shown, ...within],
+    chart.hasTravel ? "time" : "speed",
+    system,
+    {
+      intervals: 3,
+    },
+  );
   const name = chart.hasTravel ? "travel time" : "output speed";
   return {
     left,
@@ -109,8 +115,22 @@ function currentLines(chart: RatioMapChart, saved: RatioMapChart | null, system:
     right,
     lines: [
       ...savedLines(saved, left, current),
-      ...curves(chart.samples, left, { name: "current", side: "left", ink: "current", dash: [9, 3, 2, 3], marker: "triangle", read: current }),
-      ...curves(chart.samples, right, { name: "share of stall", side: "right", ink: "torque", dash: [4, 3], marker: "square", read: share }),
+      ...curves(chart.samples, left, {
+        name: "current",
+        side: "left",
+        ink: "current",
+        dash: [9, 3, 2, 3],
+        marker: "triangle",
+        read: current,
+      }),
+      ...curves(chart.samples, right, {
+        name: "share of stall",
+        side: "right",
+        ink: "torque",
+        dash: [4, 3],
+        marker: "square",
+        read: share,
+      }),
     ],
     levels: [],
   };

@@ -55,7 +55,13 @@ export function ratioTable(chart: RatioMapChart, system: UnitSystem): Table {
 }
 
 export function ratioFile(chart: RatioMapChart, system: UnitSystem): Table {
-  return tableOf(chart, chart.samples, system, (value) => digits(value), (symbol) => symbol);
+  return tableOf(
+    chart,
+    chart.samples,
+    system,
+    (value) => digits(value),
+    (symbol) => symbol,
+  );
 }
 
 function tableOf(

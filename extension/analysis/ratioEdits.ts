@@ -1,8 +1,9 @@
 /** The edits that give a mechanism another ratio: a plain reduction's number, or gears in stock, the nearest that can be written. */
-import type { Analysis } from "../analysis/analysis.js";
-import { type Edit, editsFor } from "../analysis/writeChange.js";
+
 import { COMMON_TOOTH_COUNTS } from "../proposals/stock.js";
 import { changesForRatio } from "../proposals/stockRatios.js";
+import type { Analysis } from "./analysis.js";
+import { type Edit, editsFor } from "./writeChange.js";
 
 export interface RatioEdits {
   readonly ratio: number;
