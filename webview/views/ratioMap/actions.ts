@@ -17,7 +17,7 @@ export function ratioActions(chart: RatioMapChart, cursor: number | null, system
       ? []
       : [
           write(
-            `Write the ${label}: ${point.words}, ${writeNumber(point.ratio)}, ${timeText(chart, point, system)}`,
+            `Write the ${label}: ${point.words}, ratio ${writeNumber(point.ratio)}, ${chart.hasTravel ? "travel" : "output"} ${timeText(chart, point, system)}`,
             point.ratio,
           ),
         ];
@@ -29,7 +29,7 @@ export function ratioActions(chart: RatioMapChart, cursor: number | null, system
     ...(near !== undefined && isOther
       ? [
           write(
-            `Write what is nearest to the cursor: ${near.words}, ${writeNumber(near.ratio)}${near.keeps ? "" : " (breaks a rule)"}`,
+            `Write what is nearest to the cursor: ${near.words}, ratio ${writeNumber(near.ratio)}${near.keeps ? "" : " (breaks a rule)"}`,
             near.ratio,
           ),
         ]

@@ -22,7 +22,7 @@ export interface RatioDrawings {
 }
 
 /** Slow travels near the stall would flatten all others: the axis ends at this multiple of the quickest. */
-const MOST_TIMES = 6;
+const MOST_TIMES = 4;
 /** Half of a tick's width as a share of the ratio. */
 const TICK = 0.0015;
 /** Rules that have a row of their own. */

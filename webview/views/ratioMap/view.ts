@@ -12,6 +12,9 @@ import { describeCurrent, describeStrip, describeTime } from "./describe.js";
 import { drawRatioMap } from "./drawings.js";
 import { ratioFacts, ratioFile, ratioReadOut, ratioTable } from "./numbers.js";
 
+/** Room below a plot for the numbers of the axis, px, where another plot below it has them. */
+const NO_NUMBERS = 30;
+
 export const ratioMapView: View<"ratio-map"> = {
   name: "ratio-map",
   title: "Ratio map",
@@ -46,7 +49,7 @@ export function ratioMapSheet({ chart, saved }: ShownChart<"ratio-map">, system:
     assumed: [...chart.assumed, "Losses and inertias of the stages stay as they are at every ratio."],
     notChecked: chart.notChecked,
     plots: [
-      part(describeStrip(chart), heightOfRows(drawings.strip.rows.length), drawings.strip, []),
+      part(describeStrip(chart), heightOfRows(drawings.strip.rows.length) - NO_NUMBERS, drawings.strip, []),
       part(describeTime(chart, system), 190, drawings.time, time),
       part(describeCurrent(chart), 220, drawings.current, current),
     ],
