@@ -49,7 +49,7 @@ export function sensitivitiesOf(analysis: Analysis, { call, declared, numbers, d
       ? []
       : between(leaf.label, effectsOf(low), effectsOf(high), Math.log(steps[1].value / steps[0].value));
   });
-  return found.sort((a, b) => Math.abs(b.perCentPerPerCent) - Math.abs(a.perCentPerPerCent) || compare(a, b));
+  return found.sort((a, b) => sizeOf(b) - sizeOf(a) || compare(a, b));
 }
 
 const OUTPUTS = { current: "currentA", time: "timeS", share: "share" } as const satisfies Record<
@@ -114,6 +114,11 @@ function times({ value, unit }: Split, factor: number): Step {
 
 function step(value: number): Step {
   return { plain: value, value };
+}
+
+/** To four decimals: below that, what is equal would stand in the order of its rounding. */
+function sizeOf({ perCentPerPerCent }: Sensitivity): number {
+  return Math.round(Math.abs(perCentPerPerCent) * 1e4);
 }
 
 function compare(a: Sensitivity, b: Sensitivity): number {

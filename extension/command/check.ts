@@ -8,6 +8,7 @@ import type { Proposal } from "../analysis/proposal.js";
 import { proposalsFor } from "../analysis/propose.js";
 import { sensitivitiesOf } from "../analysis/sensitivity.js";
 import { mentionsDeclarations } from "../analysis/sources.js";
+import { spreadOf } from "../analysis/spread.js";
 import { findMoved, writeMovedMarkdown, writeMovedText } from "../report/changes.js";
 import { type Extras, makeReport } from "../report/report.js";
 import { writeText } from "../report/text.js";
@@ -40,7 +41,10 @@ export async function check(line: CheckLine): Promise<CheckResult> {
   const output =
     format === "json"
       ? `${JSON.stringify(makeReport(analysis, nameOf, extrasOf(analysis, parser)), null, 2)}\n`
-      : writeText(analysis, nameOf, propose ? proposalsOf(analysis, parser) : []);
+      : writeText(analysis, nameOf, {
+          proposals: propose ? proposalsOf(analysis, parser) : [],
+          spreadOf: (mechanism) => spreadOf(analysis, mechanism),
+        });
   return { output, status };
 }
 
@@ -55,7 +59,11 @@ function tellMoved(analysis: Analysis, parser: Parser, target: string, against: 
 }
 
 function extrasOf(analysis: Analysis, parser: Parser): Extras {
-  return { sensitivityOf: (mechanism) => sensitivitiesOf(analysis, mechanism), proposals: proposalsOf(analysis, parser) };
+  return {
+    sensitivityOf: (mechanism) => sensitivitiesOf(analysis, mechanism),
+    spreadOf: (mechanism) => spreadOf(analysis, mechanism),
+    proposals: proposalsOf(analysis, parser),
+  };
 }
 
 /** An analyser of its own tries the changed texts. */

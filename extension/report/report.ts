@@ -7,6 +7,7 @@
 import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
 import type { Sensitivity } from "../analysis/sensitivity.js";
+import type { Spread } from "../analysis/spread.js";
 import { createLineFinder, type Place } from "./lines.js";
 
 export interface Report {
@@ -56,6 +57,8 @@ export interface ReportedMechanism extends NumbersOrNull {
   readonly line: number;
   /** Four digits: differences of solved numbers carry no more. */
   readonly sensitivity: readonly Sensitivity[];
+  /** Only where a tolerance or a range is declared. */
+  readonly spread?: Spread;
   readonly assumed: readonly string[];
   readonly notChecked: readonly string[];
 }
@@ -68,11 +71,16 @@ export type ReportedRobot = { readonly name: string } & { readonly [Field in key
 /** What is computed only when it is asked for. */
 export interface Extras {
   sensitivityOf(mechanism: AnalysedMechanism): readonly Sensitivity[];
+  spreadOf(mechanism: AnalysedMechanism): Spread | undefined;
   readonly proposals: readonly Proposal[];
 }
 
 /** `nameOf` turns a file of the snapshot into the name that the report carries. */
-export function makeReport(analysis: Analysis, nameOf: (file: string) => string, { sensitivityOf, proposals }: Extras): Report {
+export function makeReport(
+  analysis: Analysis,
+  nameOf: (file: string) => string,
+  { sensitivityOf, spreadOf, proposals }: Extras,
+): Report {
   const places = createPlaces(analysis);
   return {
     format: "loadmark-report",
@@ -86,6 +94,7 @@ export function makeReport(analysis: Analysis, nameOf: (file: string) => string,
         ...one,
         perCentPerPerCent: Number(one.perCentPerPerCent.toPrecision(4)),
       })),
+      ...reportSpread(spreadOf(mechanism)),
       assumed: mechanism.assumed,
       notChecked: mechanism.notChecked,
     })),
@@ -104,6 +113,10 @@ export function makeReport(analysis: Analysis, nameOf: (file: string) => string,
       edits: edits.map((edit) => ({ ...rangeOf(places, nameOf, edit), newText: edit.newText })),
     })),
   };
+}
+
+function reportSpread(spread: Spread | undefined): { readonly spread?: Spread } {
+  return spread === undefined ? {} : { spread: roundNumbers(spread) };
 }
 
 /** The findings alone, for reports that show no tables of numbers. */

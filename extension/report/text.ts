@@ -1,17 +1,29 @@
 /** The report for a terminal: findings first, then a table per mechanism, then the cautions. */
 import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
+import type { Spread } from "../analysis/spread.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
 import { toInertText } from "./inert.js";
 import { type ReportedFinding, reportFindings } from "./report.js";
+import { tellSpread } from "./spreadWords.js";
+
+/** What is computed only when it is asked for. */
+export interface TextExtras {
+  readonly proposals?: readonly Proposal[];
+  spreadOf?(mechanism: AnalysedMechanism): Spread | undefined;
+}
 
 /** `nameOf` as in `reportFindings`. Lines end in a line feed; the text holds no control characters from the source. */
-export function writeText(analysis: Analysis, nameOf: (file: string) => string, proposals: readonly Proposal[] = []): string {
+export function writeText(
+  analysis: Analysis,
+  nameOf: (file: string) => string,
+  { proposals = [], spreadOf = () => undefined }: TextExtras = {},
+): string {
   const findings = reportFindings(analysis, nameOf);
   const blocks = [
     ...findings.map((finding, index) => writeFinding(finding, waysOut(proposals, analysis.findings[index]))),
-    ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf)),
+    ...analysis.mechanisms.map((mechanism) => writeMechanism(mechanism, nameOf, spreadOf(mechanism))),
     ...analysis.robots.map((robot) => writeRobot(robot, nameOf)),
     writeSummary(findings, analysis.mechanisms.length),
     CAUTIONS.terminal,
@@ -34,9 +46,10 @@ function waysOut(proposals: readonly Proposal[], finding: Finding | undefined): 
     .join("");
 }
 
-function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string): string {
+function writeMechanism(mechanism: AnalysedMechanism, nameOf: (file: string) => string, spread: Spread | undefined): string {
   const rows = mechanism.numbers === undefined ? [] : rowsOf(mechanism.numbers);
-  return writeTable(`${mechanism.name} (${nameOf(mechanism.at.file)})`, rows, mechanism);
+  const spreads: Row[] = spread === undefined ? [] : [["spread", tellSpread(spread)]];
+  return writeTable(`${mechanism.name} (${nameOf(mechanism.at.file)})`, [...rows, ...spreads], mechanism);
 }
 
 function writeTable(

@@ -1,8 +1,12 @@
 /** The spread over tolerance and ranges, against the distributions that follow by hand. */
 import { describe, expect, it } from "vitest";
+import type { AnalysedMechanism } from "../../extension/analysis/analysis.js";
 import { createRandom, spreadPoints } from "../../extension/analysis/random.js";
 import { type Spread, spreadOf } from "../../extension/analysis/spread.js";
 import { solveTravel } from "../../extension/model/travel.js";
+import { makeReport } from "../../extension/report/report.js";
+import { tellSpread } from "../../extension/report/spreadWords.js";
+import { writeText } from "../../extension/report/text.js";
 import { analyseFixture, PRELUDE } from "../support/checkFindings.js";
 
 function mechanismIn(text: string) {
@@ -111,6 +115,52 @@ robot("one", { supply: battery({ openCircuit: between("10 V", "14 V"), resistanc
 
   it("has no time where nothing travels", () => {
     expect(spreadIn(hoist('load: roller({ torque: "1 N*m" })', "0.1"))?.timeS).toBeNull();
+  });
+});
+
+describe("the spread in words", () => {
+  const spread: Spread = {
+    draws: 200,
+    seed: 1,
+    tolerance: 0.1,
+    ranges: 2,
+    motorCurrentA: { p5: 3.1, p50: 3.2, p95: 3.4 },
+    timeS: { p5: 1.2, p50: 1.3, p95: 1.5 },
+    trippingShare: 0.12,
+  };
+
+  it("names times, currents, trips, and what was drawn from", () => {
+    expect(tellSpread(spread)).toBe(
+      "nine of ten take 1.2 s to 1.5 s and draw 3.1 A to 3.4 A, 12 % trip (200 draws over ±10 % of the motor and 2 ranges)",
+    );
+    expect(tellSpread({ ...spread, timeS: null, trippingShare: 0, tolerance: 0, ranges: 1 })).toBe(
+      "nine of ten draw 3.1 A to 3.4 A, none trip (200 draws over 1 range)",
+    );
+  });
+
+  it("says where some or most never arrive", () => {
+    const told = (p5: number | null, p95: number | null) =>
+      tellSpread({ ...spread, timeS: { p5, p50: p5, p95 }, trippingShare: null, ranges: 0 });
+    expect(told(1.2, null)).toBe(
+      "nine of ten take 1.2 s or more, if they arrive at all, and draw 3.1 A to 3.4 A (200 draws over ±10 % of the motor)",
+    );
+    expect(told(null, null)).toBe("nine of ten never arrive and draw 3.1 A to 3.4 A (200 draws over ±10 % of the motor)");
+  });
+
+  it("stands in both reports, and only where something is uncertain", () => {
+    const { analysis } = mechanismIn(hoist(LIFT, "0.1"));
+    const extras = { sensitivityOf: () => [], spreadOf: (one: AnalysedMechanism) => spreadOf(analysis, one), proposals: [] };
+    const [reported] = makeReport(analysis, (file) => file, extras).mechanisms;
+    expect(reported?.spread).toMatchObject({ draws: 200, seed: 1, tolerance: 0.1, ranges: 0, trippingShare: null });
+    const median = reported?.spread?.timeS?.p50 ?? 0;
+    expect(Math.abs(median / (reported?.travel?.timeS ?? 1) - 1)).toBeLessThan(0.01);
+    expect(writeText(analysis, (file) => file, extras)).toMatch(
+      /\n {2}spread {7}nine of ten take .* \(200 draws over ±10 % of the motor\)\n/,
+    );
+    const certain = mechanismIn(hoist(LIFT)).analysis;
+    const plain = { ...extras, spreadOf: (one: AnalysedMechanism) => spreadOf(certain, one) };
+    expect(Object.keys(makeReport(certain, (file) => file, plain).mechanisms[0] ?? {})).not.toContain("spread");
+    expect(writeText(certain, (file) => file, plain)).not.toContain("spread");
   });
 });
 

@@ -73,10 +73,30 @@ describe("a hover on a mechanism", () => {
       Feedforward, at the output shaft: 5 V holds the load, 3.82 V per rad/s  
       Assumed: Motor at the 25 °C of its sheet. Stage 1 (spur): customary efficiency 0.98. The motor's no-load loss grows with its speed. And 1 more.  
       Not checked: Heat: the motor has no thermal data. Protection: none is declared.  
-      Most by: stage 1 driven, torque, stage 1 driver
+      Most by: torque, motor stall torque, stage 1 driven
 
       [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
     `);
+  });
+
+  it("tells how far motors of the declared tolerance spread", () => {
+    const source = hoist(80).replace(MOTOR, MOTOR.replace(/\}\)$/, "tolerance: 0.1 })"));
+    expect(source).toContain("tolerance");
+    const { markdown } = checkHover(source, "hoist");
+    const told =
+      /\nSpread: nine of ten take (\S+) s to (\S+) s and draw (\S+) A to (\S+) A \(200 draws over ±10 % of the motor\) {2}\n/.exec(
+        markdown,
+      );
+    const [fast = 0, slow = 0, least = 0, most = 0] = told?.slice(1).map(Number) ?? [];
+    const time = liftTime(10, 0.05, 0.8, 4, 0.98);
+    const { currentA } = handPoint(OUTPUT_NM, 4, 0.98);
+    expect(fast).toBeGreaterThan(0.85 * time);
+    expect(fast).toBeLessThan(time);
+    expect(slow).toBeGreaterThan(time);
+    expect(slow).toBeLessThan(1.25 * time);
+    expect(least).toBeLessThan(currentA);
+    expect(most).toBeGreaterThan(currentA);
+    expect(checkHover(hoist(80), "hoist").markdown).not.toContain("Spread");
   });
 
   it.each(["name", "label", "word"] as const)("stands at its %s", (cursor) => {

@@ -159,7 +159,7 @@ describe("robots in the analysis and the reports", () => {
 const pack = battery({ openCircuit: "12 V", resistance: "100 mohm" });
 const hoist = mechanism("hoist", { motor: twelveVolt, stages: [], load: lift({ mass: ${mass}, drumRadius: "20 mm", travel: "0.8 m" }) });
 ${more}export const mover = robot("mover", { supply: pack, mechanisms: [hoist], loadCycle: [{ lasts: "9 s", moving: [hoist] }], cycles: 4 });`;
-  const nothing = { sensitivityOf: () => [], proposals: [] };
+  const nothing = { sensitivityOf: () => [], spreadOf: () => undefined, proposals: [] };
 
   it("carry the contract's fields in this order", () => {
     const { robots } = makeReport(analyseFixture(text('"2 kg"')), (file) => file, nothing);

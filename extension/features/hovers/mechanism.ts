@@ -1,10 +1,12 @@
 /** A mechanism: whether its motors cope, what is needed against what is available, and what that rests on. */
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
 import { sensitivitiesOf } from "../../analysis/sensitivity.js";
+import { spreadOf } from "../../analysis/spread.js";
 import type { DefinitionCall, Span } from "../../evaluator/value.js";
 import { bestEfficiencyPoint, greatestPowerPoint } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
+import { tellSpread } from "../../report/spreadWords.js";
 import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
 import { callsWithin } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
@@ -57,7 +59,14 @@ function describeMechanism(
       ...(sinceCommit === undefined ? [] : [sinceCommit]),
     ],
     table: tableOf(drive, numbers),
-    notes: [...runLines(drive, numbers), ...feedforwardOf(numbers), ...assumptions, ...shared, ...mostBy(analysis, mechanism)],
+    notes: [
+      ...runLines(drive, numbers),
+      ...feedforwardOf(numbers),
+      ...spreadLine(analysis, mechanism),
+      ...assumptions,
+      ...shared,
+      ...mostBy(analysis, mechanism),
+    ],
     links: [chartLink(mechanism.name), ...linksOf(mechanism)],
   });
 }
@@ -136,6 +145,12 @@ function feedforwardOf({ feedforward }: MechanismNumbers): string[] {
     voltsPerRadPerS2 ? `${writeNumber(voltsPerRadPerS2)} V per rad/s²` : "",
   ];
   return [`Feedforward, at the output shaft: ${parts.filter((part) => part !== "").join(", ")}`];
+}
+
+/** How far motors of the declared tolerance, and declared ranges, spread the results. */
+function spreadLine(analysis: Analysis, mechanism: AnalysedMechanism): string[] {
+  const spread = spreadOf(analysis, mechanism);
+  return spread === undefined ? [] : [`Spread: ${tellSpread(spread)}`];
 }
 
 /** How many inputs are named. */
