@@ -132,12 +132,16 @@ function walk(ts: TypeScript, file: string, text: string, root: ts.SourceFile, u
   const stack: { readonly node: ts.Node; readonly scope: Scope | undefined }[] = [{ node: root, scope: undefined }];
   for (let item = stack.pop(); item !== undefined; item = stack.pop()) {
     const { node } = item;
+    // More than half of a tree are names, literals and keywords, which hold nothing.
+    if (node.kind < ts.SyntaxKind.FirstNode) {
+      if (ts.isIdentifier(node) && isReference(ts, node)) identifiers.push(node);
+      continue;
+    }
     if (isErased(ts, node)) continue;
     const scope = openScope(ts, node, item.scope);
     if (scope !== item.scope) scopes.set(node, scope);
     declareNames(ts, node, scope);
     if (ts.isCallExpression(node)) calls.push(node);
-    if (ts.isIdentifier(node) && isReference(ts, node)) identifiers.push(node);
     ts.forEachChild(node, (child) => {
       stack.push({ node: child, scope });
     });

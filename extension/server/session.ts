@@ -65,7 +65,8 @@ export class Session {
       keepImporters: (files, snapshot) => this.#withoutLeftOut(files, snapshot).filter((file) => this.#files.accepts(file)),
       canonical: (file) => nameBehindLinks(file, (name) => host.realPath?.(name)),
     });
-    this.#files = new WorkspaceFiles(this.texts, host);
+    // The parser loads while the other files are read.
+    this.#files = new WorkspaceFiles(this.texts, host, () => void this.#load().catch(() => undefined));
   }
 
   /** The last good result, if there is one yet. */

@@ -21,14 +21,17 @@ const READS_AT_ONCE = 32;
 export class WorkspaceFiles {
   readonly #texts: Texts;
   readonly #host: FileHost;
+  readonly #onMention: () => void;
   readonly #mentioning = new Set<string>();
   /** The latest read of each file that is being read: an earlier one that ends later is thrown away. */
   readonly #reads = new Map<string, symbol>();
   #folders: readonly string[] = [];
 
-  constructor(texts: Texts, host: FileHost) {
+  /** `onMention`: called at each file that mentions the declarations, before the others are read. */
+  constructor(texts: Texts, host: FileHost, onMention: () => void) {
     this.#texts = texts;
     this.#host = host;
+    this.#onMention = onMention;
   }
 
   /** Files on disk that mention the declarations. */
@@ -126,8 +129,10 @@ export class WorkspaceFiles {
     const importsOthers = this.#texts.imports.setDiskText(file, source);
     const before = this.#texts.diskText(file);
     const mattered = this.#isKnown(file);
-    if (mentions) this.#mentioning.add(file);
-    else this.#mentioning.delete(file);
+    if (mentions) {
+      this.#mentioning.add(file);
+      this.#onMention();
+    } else this.#mentioning.delete(file);
     if (mentions || mattered) this.#texts.setDiskText(file, text);
     return importsOthers || ((mentions || mattered) && before !== text);
   }
