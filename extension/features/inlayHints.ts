@@ -22,11 +22,15 @@ export interface InlayHint {
 
 export const LONGEST_LABEL = 16;
 
-/** Hints at offsets from `start` to `end`, in order. */
-export function inlayHintsIn(analysis: Analysis, file: string, start: number, end: number): InlayHint[] {
-  const hints = analysis.mechanisms.flatMap((mechanism) => {
-    // Nothing is written for what has no place in this file: a workspace may hold hundreds of others.
-    if (!mayStandIn(mechanism, file)) return [];
+/** Hints at offsets from `start` to `end`, in order. `mechanisms`: those that may have one there, where that is known. */
+export function inlayHintsIn(
+  analysis: Analysis,
+  file: string,
+  start: number,
+  end: number,
+  mechanisms: readonly AnalysedMechanism[] = analysis.mechanisms.filter((one) => filesWithHints(one).has(file)),
+): InlayHint[] {
+  const hints = mechanisms.flatMap((mechanism) => {
     const { state } = verdictOf(analysis, mechanism);
     return [...shareHints(mechanism, file, state), ...stageHints(mechanism, stagePlaces(mechanism, file), state)];
   });
@@ -34,15 +38,17 @@ export function inlayHintsIn(analysis: Analysis, file: string, start: number, en
   return mergeAtSamePlace(inRange).sort((one, other) => one.offset - other.offset);
 }
 
-/** A look at its name and the ways of its stages, which costs next to nothing. */
-function mayStandIn({ call }: AnalysedMechanism, file: string): boolean {
-  if (call.span.file === file || call.args[0]?.origin.span.file === file) return true;
-  const stages = fieldOf(call.args[1], "stages");
-  if (!stages?.known || stages.data.kind !== "array") return false;
-  return stages.data.items.some(({ origin }) => {
-    for (let one: Origin | undefined = origin; one !== undefined; [one] = one.from) if (one.span.file === file) return true;
-    return false;
-  });
+/** Where a mechanism's hints may stand: by its name, and along the ways of its stages. */
+export function filesWithHints({ call }: AnalysedMechanism): ReadonlySet<string> {
+  const files = new Set([call.span.file]);
+  const [name, fields] = call.args;
+  if (name !== undefined) files.add(name.origin.span.file);
+  const stages = fieldOf(fields, "stages");
+  if (!stages?.known || stages.data.kind !== "array") return files;
+  for (const { origin } of stages.data.items) {
+    for (let one: Origin | undefined = origin; one !== undefined; [one] = one.from) files.add(one.span.file);
+  }
+  return files;
 }
 
 function shareHints(mechanism: AnalysedMechanism, file: string, state: State): InlayHint[] {

@@ -1,5 +1,5 @@
 /** The mechanisms of the workspace by robot, each with how it fares: what the view shows. */
-import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
 import type { Span } from "../evaluator/value.js";
 import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
@@ -34,7 +34,23 @@ export interface MechanismNode {
   readonly stallShare: number | null;
 }
 
-export function mechanismTree(analysis: Analysis): MechanismTree {
+type NodeOf = (analysis: Analysis, mechanism: AnalysedMechanism) => MechanismNode;
+
+/** Gives the same node for a mechanism as long as nothing else is to be said of it. */
+export function createNodeReader(): NodeOf {
+  const known = new WeakMap<AnalysedMechanism, { readonly findings: readonly Finding[]; readonly node: MechanismNode }>();
+  return (analysis, mechanism) => {
+    const findings = analysis.findingsByMechanism.get(mechanism.name) ?? [];
+    const before = known.get(mechanism);
+    if (before?.findings.length === findings.length && findings.every((finding, index) => finding === before.findings[index]))
+      return before.node;
+    const node = nodeFor(analysis, mechanism);
+    known.set(mechanism, { findings, node });
+    return node;
+  };
+}
+
+export function mechanismTree(analysis: Analysis, nodeOf: NodeOf = nodeFor): MechanismTree {
   const byDeclared = new Map(analysis.mechanisms.map((mechanism) => [mechanism.declared, mechanism]));
   const listed = new Set<AnalysedMechanism>();
   const declared = analysis.robots.filter((robot) => robot.declared !== undefined);
@@ -54,7 +70,7 @@ export function mechanismTree(analysis: Analysis): MechanismTree {
   return { robots, apart };
 }
 
-function nodeOf(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNode {
+function nodeFor(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNode {
   const { state, words, share } = verdictOf(analysis, mechanism);
   const hardest = mechanism.numbers?.hardest;
   const description = share === undefined ? words : state === "fine" ? share : `${share} · ${words}`;

@@ -35,14 +35,21 @@ export function createDiagnosticsReader(): DiagnosticsOf {
   return ({ analysis, snapshot }, uriOf) => {
     const byFile = new Map<string, Diagnostic[]>();
     const addressOf = rememberAddresses(uriOf);
-    for (const finding of analysis.findings) {
+    const isCurrent = ({ lines, uris }: Written, { at, related }: Finding): boolean => {
+      const isAt = ({ file }: Span, index: number) => lines[index] === snapshot.lineMap(file) && uris[index] === addressOf(file);
+      return isAt(at, 0) && related.every((one, index) => isAt(one.at, index + 1));
+    };
+    const write = (finding: Finding): Diagnostic => {
       const spans = [finding.at, ...finding.related.map(({ at }) => at)];
       const lines = spans.map(({ file }) => snapshot.lineMap(file));
       const uris = spans.map(({ file }) => addressOf(file));
+      const diagnostic = diagnosticOf(finding, lines, uris);
+      known.set(finding, { lines, uris, diagnostic });
+      return diagnostic;
+    };
+    for (const finding of analysis.findings) {
       const before = known.get(finding);
-      const isSame = before !== undefined && sameItems(before.lines, lines) && sameItems(before.uris, uris);
-      const diagnostic = isSame ? before.diagnostic : diagnosticOf(finding, lines, uris);
-      if (!isSame) known.set(finding, { lines, uris, diagnostic });
+      const diagnostic = before !== undefined && isCurrent(before, finding) ? before.diagnostic : write(finding);
       const { file } = finding.at;
       const diagnostics = byFile.get(file);
       if (diagnostics === undefined) byFile.set(file, [diagnostic]);

@@ -14,7 +14,7 @@ import { createDiagnosticsReader, type DiagnosticsOf } from "./diagnostics.js";
 import type { Report } from "./guard.js";
 import { type FileDiagnostics, Publisher } from "./publisher.js";
 import type { Result } from "./session.js";
-import { stateOf } from "./stateMessage.js";
+import { createStateReader, sameState } from "./stateMessage.js";
 import type { Texts } from "./texts.js";
 
 export interface ResultsParts {
@@ -47,7 +47,8 @@ export function showResults({ connection, capabilities, hintsOf, committedOf, re
   };
   const diagnosticsOf = createDiagnosticsReader();
   let shown: Result | undefined;
-  let stateSent = JSON.stringify(NO_STATE);
+  const stateOf = createStateReader();
+  let stateSent = NO_STATE;
   /** One surface that fails must not keep the others from the result. */
   const attempt = (what: string, work: () => void) => {
     try {
@@ -62,9 +63,8 @@ export function showResults({ connection, capabilities, hintsOf, committedOf, re
       attempt("Publishing findings", () => publisher.publish(fileDiagnosticsOf(diagnosticsOf, texts, result)));
       attempt("Telling the state", () => {
         const state = stateOf(result, uriOf);
-        const content = JSON.stringify(state);
-        if (content === stateSent) return;
-        stateSent = content;
+        if (sameState(state, stateSent)) return;
+        stateSent = state;
         connection.sendNotification(STATE, state).catch((error) => report("Telling the state", error));
       });
       attempt("Telling of a result", () => {

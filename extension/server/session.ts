@@ -41,6 +41,7 @@ export class Session {
   readonly #files: WorkspaceFiles;
   readonly #options: SessionOptions;
   #engine: Promise<Engine> | undefined;
+  #isLoaded = false;
   /** Wherever a settings file was looked for. */
   readonly #settingsFiles = new Set<string>();
   #forgetAbove = FORGET_STEP;
@@ -206,7 +207,7 @@ export class Session {
   /** Ends early, without a result, when newer text is waiting for its turn. */
   async #analyse(): Promise<void> {
     while (!this.#disposed) {
-      if (this.#mentioning(this.texts.capture()).length > 0) await this.#load();
+      if (!this.#isLoaded && this.#mentioning(this.texts.capture()).length > 0) await this.#load();
       if (this.#timer !== undefined) return;
       const moment = this.#moment;
       const snapshot = this.texts.capture();
@@ -255,10 +256,16 @@ export class Session {
 
   /** A failure is not kept: the next analysis tries again. */
   #load(): Promise<Engine> {
-    this.#engine ??= this.#options.loadEngine().catch((error) => {
-      this.#engine = undefined;
-      throw error;
-    });
+    this.#engine ??= this.#options.loadEngine().then(
+      (engine) => {
+        this.#isLoaded = true;
+        return engine;
+      },
+      (error) => {
+        this.#engine = undefined;
+        throw error;
+      },
+    );
     return this.#engine;
   }
 
