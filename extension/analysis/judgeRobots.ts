@@ -33,11 +33,13 @@ export function createRobotJudge(): (declared: Declared, judged: Judged) => Judg
   };
   return ({ robots, unknownRobots }, judged) => {
     const findings: Finding[] = [];
-    const about = robots.length === 0 ? NOBODY : indexJudged(judged);
+    let about: About | undefined;
     const known = robots.map((robot): AnalysedRobot => {
       const { model, notChecked } = robotDriveOf(robot.declared);
       if (model === null) return { ...robot, assumed: [], notChecked };
       const solution = solutions.get(JSON.stringify(model.drive), () => solveRobot(model.drive));
+      // Most robots of a workspace may have no load cycle.
+      about ??= indexJudged(judged);
       findings.push(...findingsOf(robot, model, solution, about));
       return {
         ...robot,
@@ -65,8 +67,6 @@ interface About {
   /** Rule and mechanism. */
   readonly told: ReadonlySet<string>;
 }
-
-const NOBODY: About = { places: new Map(), told: new Set() };
 
 function indexJudged({ mechanisms, findings }: Judged): About {
   return {

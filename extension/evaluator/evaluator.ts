@@ -10,7 +10,7 @@ import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
-import { dropStale, listReached } from "./freshness.js";
+import { dropStale, listReached, uncheckChanged } from "./freshness.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
 import { valueOfBinding, valueOfTarget } from "./names.js";
@@ -61,7 +61,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
   };
   return {
     evaluateFile(file, snapshot) {
-      if (ctx.snapshot !== snapshot) ctx.checked.clear();
+      if (ctx.snapshot !== snapshot) uncheckChanged(ctx, snapshot.changes?.between(ctx.snapshot, snapshot));
       ctx.snapshot = snapshot;
       const text = snapshot.read(file);
       if (typeof text !== "string") {

@@ -26,6 +26,23 @@ export function dropStale(ctx: Context, file: string): void {
   drop(ctx, changed, users);
 }
 
+/** Forgets which modules are true, but for those that rest on none of the changed files; `undefined`: any file may have changed. */
+export function uncheckChanged(ctx: Context, changed: ReadonlySet<string> | undefined): void {
+  if (changed === undefined) {
+    ctx.checked.clear();
+    return;
+  }
+  const unchecked = new Set<Module>();
+  for (const module of ctx.checked) if (restsOn(module, changed)) unchecked.add(module);
+  for (const module of unchecked) ctx.checked.delete(module);
+  if (unchecked.size > 0) uncheckUsers(ctx, unchecked);
+}
+
+function restsOn({ reads, importers }: Module, changed: ReadonlySet<string>): boolean {
+  for (const file of changed) if (reads.has(file) || importers.reads.has(file)) return true;
+  return false;
+}
+
 /** The module and everything that its values rest on. */
 export function listReached(start: Module): Set<Module> {
   const reached = new Set([start]);

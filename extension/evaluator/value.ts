@@ -148,6 +148,16 @@ export interface Snapshot {
    * as if no other file wrote to it.
    */
   importersOf?(file: string): readonly string[] | undefined;
+  /** What its host knows of changes. Absent: every file is compared. */
+  readonly changes?: Changes;
+}
+
+export interface Changes {
+  /**
+   * Files whose text may differ between two snapshots, where that is all that does; `undefined` where it is not known, as for a snapshot
+   * that was made out of another.
+   */
+  between(one: Snapshot, other: Snapshot): ReadonlySet<string> | undefined;
 }
 
 /** What one file says. */

@@ -34,15 +34,14 @@ export function createDiagnosticsReader(): DiagnosticsOf {
   const known = new WeakMap<Finding, Written>();
   return ({ analysis, snapshot }, uriOf) => {
     const byFile = new Map<string, Diagnostic[]>();
-    const addressOf = rememberAddresses(uriOf);
     const isCurrent = ({ lines, uris }: Written, { at, related }: Finding): boolean => {
-      const isAt = ({ file }: Span, index: number) => lines[index] === snapshot.lineMap(file) && uris[index] === addressOf(file);
+      const isAt = ({ file }: Span, index: number) => lines[index] === snapshot.lineMap(file) && uris[index] === uriOf(file);
       return isAt(at, 0) && related.every((one, index) => isAt(one.at, index + 1));
     };
     const write = (finding: Finding): Diagnostic => {
       const spans = [finding.at, ...finding.related.map(({ at }) => at)];
       const lines = spans.map(({ file }) => snapshot.lineMap(file));
-      const uris = spans.map(({ file }) => addressOf(file));
+      const uris = spans.map(({ file }) => uriOf(file));
       const diagnostic = diagnosticOf(finding, lines, uris);
       known.set(finding, { lines, uris, diagnostic });
       return diagnostic;
@@ -81,18 +80,6 @@ function diagnosticOf(
             message: one.message,
           })),
         }),
-  };
-}
-
-/** Writing an address costs more than all else that is done for a place, and most places share a few files. */
-export function rememberAddresses(uriOf: UriOf): UriOf {
-  const known = new Map<string, string>();
-  return (file) => {
-    const before = known.get(file);
-    if (before !== undefined) return before;
-    const uri = uriOf(file);
-    known.set(file, uri);
-    return uri;
   };
 }
 

@@ -12,6 +12,8 @@ export interface ImportsView {
   readonly importersOf: ImportersOf;
   /** The disk's alone; `undefined` while the workspace is being read, else the same object as long as nothing changes. */
   readonly saved: ImportView | undefined;
+  /** The same for the open documents alone. */
+  readonly open: ImportView | undefined;
 }
 
 export class Imports {
@@ -51,13 +53,13 @@ export class Imports {
       this.#openTexts.set(file, text);
       this.#open.set(file, text);
     }
-    if (!this.#isWhole) return { importersOf: () => undefined, saved: undefined };
+    if (!this.#isWhole) return { importersOf: () => undefined, saved: undefined, open: undefined };
     const [now, saved] = [this.#open.capture(), this.#disk.capture()];
     const importersOf = (file: string): string[] => {
       const closed = saved.importersOf(file).filter((importer) => !now.has(importer));
       return [...closed, ...now.importersOf(file)].sort();
     };
-    return { importersOf, saved };
+    return { importersOf, saved, open: now };
   }
 
   #forgetOpen(file: string): void {

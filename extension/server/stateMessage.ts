@@ -5,7 +5,7 @@ import { createNodeReader, type MechanismNode, mechanismTree } from "../features
 import { statusOf } from "../features/status.js";
 import type { Place } from "../protocol/place.js";
 import type { MechanismState, State } from "../protocol/state.js";
-import { rememberAddresses, sameItems } from "./diagnostics.js";
+import { sameItems } from "./diagnostics.js";
 import type { LineMap } from "./lineMap.js";
 import type { Result } from "./session.js";
 
@@ -22,12 +22,11 @@ export function createStateReader(): StateOf {
   const nodeOf = createNodeReader();
   const known = new WeakMap<MechanismNode, Written>();
   return ({ analysis, snapshot }, uriOf) => {
-    const addressOf = rememberAddresses(uriOf);
-    const placeOf = (at: Span): Place => ({ uri: addressOf(at.file), range: snapshot.lineMap(at.file).rangeOf(at) });
+    const placeOf = (at: Span): Place => ({ uri: uriOf(at.file), range: snapshot.lineMap(at.file).rangeOf(at) });
     const mechanismOf = (node: MechanismNode): MechanismState => {
       const { name, label, description, tooltip, at, state: standing } = node;
       const lines = snapshot.lineMap(at.file);
-      const uri = addressOf(at.file);
+      const uri = uriOf(at.file);
       const before = known.get(node);
       if (before?.lines === lines && before.uri === uri) return before.state;
       const state = { name, label, description, tooltip, standing, place: placeOf(at) };

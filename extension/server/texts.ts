@@ -9,6 +9,7 @@ import type { Edit } from "./editTrail.js";
 import { keyOf, uriOf } from "./fileKeys.js";
 import { Imports, type ImportsView } from "./imports.js";
 import { createLineMap, type LineMap } from "./lineMap.js";
+import { TextChanges } from "./textChanges.js";
 
 export interface OpenText {
   /** The address that the client uses for it. */
@@ -50,6 +51,8 @@ export class Texts {
     | { readonly disk: ReadonlyMap<string, string | null>; readonly imports: ImportsView["saved"]; readonly snapshot: Snapshot }
     | undefined;
   readonly #lineMaps = new Map<string, LineMap>();
+  readonly #changes = new TextChanges();
+  readonly #addresses = new Map<string, string>();
 
   constructor(options: TextsOptions) {
     this.#options = options;
@@ -58,6 +61,7 @@ export class Texts {
   /** Gives the document's key. */
   open(uri: string, version: number, text: string): string {
     const key = keyOf(uri);
+    this.#changes.note(key);
     this.#open.set(key, { document: TextDocument.create(uri, "", version, text), edits: [] });
     return key;
   }
@@ -68,6 +72,7 @@ export class Texts {
     const opened = this.#open.get(key);
     if (opened === undefined) return undefined;
     const { document, edits } = opened;
+    this.#changes.note(key);
     for (const change of changes) {
       edits.push({ version, edit: editOf(document, change) });
       TextDocument.update(document, [change], version);
@@ -77,6 +82,7 @@ export class Texts {
 
   close(uri: string): string {
     const key = keyOf(uri);
+    this.#changes.note(key);
     this.#open.delete(key);
     this.#lineMaps.delete(key);
     return key;
@@ -120,17 +126,27 @@ export class Texts {
   }
 
   setDiskText(key: string, text: string | null): void {
-    if (this.#disk.get(key) !== text) this.#ownDisk().set(key, text);
+    if (this.#disk.get(key) === text) return;
+    this.#changes.note(key);
+    this.#ownDisk().set(key, text);
   }
 
   forgetDiskText(key: string): void {
-    if (this.#disk.has(key)) this.#ownDisk().delete(key);
+    if (this.#disk.has(key)) {
+      this.#changes.note(key);
+      this.#ownDisk().delete(key);
+    }
     this.#lineMaps.delete(key);
   }
 
   /** The client's address of a file, as far as it gave one. */
   uriOf(key: string): string {
-    return this.#open.get(key)?.document.uri ?? uriOf(key);
+    const open = this.#open.get(key);
+    if (open !== undefined) return open.document.uri;
+    // Writing an address costs more than all else that is done for a place.
+    const known = this.#addresses.get(key) ?? uriOf(key);
+    this.#addresses.set(key, known);
+    return known;
   }
 
   capture(): TextSnapshot {
@@ -140,8 +156,10 @@ export class Texts {
     this.#diskIsShared = true;
     const imports = this.imports.capture(open);
     const read = (file: string) => open.get(file) ?? disk.get(file);
+    this.#changes.mark(read, imports);
     return {
       ...this.#snapshotOf(read, imports.importersOf),
+      changes: this.#changes,
       versions,
       saved: this.#savedSnapshot(disk, imports.saved),
       isSaved: [...open].every(([file, text]) => text === (disk.get(file) ?? text)),

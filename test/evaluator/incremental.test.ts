@@ -149,14 +149,16 @@ describe("any order of edits", () => {
 
   it("gives what starting anew gives", () => {
     fc.assert(
-      fc.property(fc.array(step, { minLength: 2, maxLength: 12 }), fc.boolean(), (steps, isIndexed) => {
+      fc.property(fc.array(step, { minLength: 2, maxLength: 12 }), fc.boolean(), fc.boolean(), (steps, isIndexed, isTold) => {
         const evaluator = makeEvaluator();
+        const tell = tellChanges();
         const files = new Map<string, string>();
         for (const [file, [text = ""]] of Object.entries(texts)) files.set(file, text);
         for (const [[file, text], asked] of steps) {
           if (text === undefined) files.delete(file);
           else files.set(file, text);
-          const snapshot = isIndexed ? indexed(files) : snapshotOf(files);
+          const bare = isIndexed ? indexed(new Map(files)) : snapshotOf(new Map(files));
+          const snapshot = isTold ? tell(bare, file, isIndexed) : bare;
           for (const each of asked) {
             const [kept, fresh] = [evaluator, makeEvaluator()].map((one) => one.evaluateFile(each, snapshot));
             expect(summary(kept)).toEqual(summary(fresh));
@@ -166,6 +168,21 @@ describe("any order of edits", () => {
       { numRuns: Number(process.env.EVALUATOR_RUNS ?? 150), seed: 20_260_503 },
     );
   }, 600_000);
+
+  /** Snapshots whose host knows which files changed since each; not where who imports whom may have changed too. */
+  function tellChanges(): (bare: Snapshot, edited: string, isIndexed: boolean) => Snapshot {
+    const edits: string[] = [];
+    const moments = new Map<Snapshot["read"], number>();
+    return (bare, edited, isIndexed) => {
+      edits.push(edited);
+      moments.set(bare.read, edits.length);
+      const between = (one: Snapshot, other: Snapshot) => {
+        const [before, after] = [moments.get(one.read), moments.get(other.read)];
+        return before === undefined || after === undefined || isIndexed ? undefined : new Set(edits.slice(before, after));
+      };
+      return { ...bare, changes: { between } };
+    };
+  }
 
   /** All but the words of a chain of causes, which may begin at another link of a cycle. */
   function summary(evaluation: FileEvaluation | undefined): unknown {
