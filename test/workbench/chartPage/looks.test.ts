@@ -3,7 +3,7 @@
 import assert from "node:assert/strict";
 import axe from "axe-core";
 import type { OpenedChart } from "./chartHost.js";
-import { crowded, fine, nothingDeclared, pastPeak, remembered } from "./charts.js";
+import { crowded, fine, noRobot, nothingDeclared, pastPeak, power, remembered, travel } from "./charts.js";
 import { chartHost } from "./session.js";
 import { pageThemes, type ThemeName } from "./themes.js";
 
@@ -23,6 +23,15 @@ describe("the looks of the chart's page", () => {
       .evaluate((canvas) => (canvas as HTMLCanvasElement).toDataURL());
 
   for (const theme of themes) {
+    it(`break no rule of accessibility in any view in ${theme}`, async () => {
+      for (const answer of [travel(), power(), noRobot()]) {
+        chart = await chartHost().open({ theme, state: { ...remembered({ tableOpen: true }), view: answer.view } });
+        await chart.show(answer);
+        assert.deepEqual(await violations(chart), [], answer.view);
+        if (answer.kind !== "nothing") await chart.close();
+      }
+    });
+
     it(`break no rule of accessibility in ${theme}`, async () => {
       chart = await chartHost().open({ theme, state: remembered({ cursor: 0.3, tableOpen: true }) });
       for (const answer of [pastPeak(), crowded(), nothingDeclared()]) {
@@ -63,6 +72,22 @@ describe("the looks of the chart's page", () => {
     await chart.page.evaluate(() => new Promise((done) => requestAnimationFrame(() => requestAnimationFrame(done))));
     assert.ok((await colouredPixels(chart)) > 500);
   });
+
+  for (const [name, answer] of [
+    ["travel", travel],
+    ["power", power],
+  ] as const) {
+    it(`fit a panel of 400 px in the view ${name}, and are drawn in every kind of theme`, async () => {
+      for (const theme of themes) {
+        chart = await chartHost().open({ theme, width: 400, state: { ...remembered({ tableOpen: true }), view: answer().view } });
+        await chart.show(answer());
+        assert.deepEqual(await overflowing(chart), [], theme);
+        for (const index of [0, 1]) assert.ok((await shareWithContrast(chart, index, 3)) > 0.01, `${theme}, plot ${index}`);
+        if (theme.startsWith("high contrast")) assert.equal(await colouredPixels(chart), 0);
+        if (theme !== "high contrast light") await chart.close();
+      }
+    });
+  }
 
   it("fit a panel of 400 px, and grow with a wider one", async () => {
     chart = await chartHost().open({ width: 400 });
