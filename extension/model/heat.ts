@@ -49,6 +49,34 @@ export function heatTimeConstants(network: HeatNetwork): readonly [number, numbe
   return [1 / fast, fast / (inner * outer)];
 }
 
+/** Changes of winding and housing, K. */
+export interface HeatRise {
+  readonly windingK: number;
+  readonly housingK: number;
+}
+
+/**
+ * What winding and housing rise in all cycles to come, K, when one cycle of a length (s) changes them by `step` and its heat stays the
+ * same: (1 − e^(At))⁻¹ of the step, by the two modes of the linear network x′ = A·x.
+ */
+export function riseToCome(network: HeatNetwork, cycleS: number, step: HeatRise): HeatRise {
+  const inner = 1 / (network.windingToHousingKPerW * network.windingJPerK);
+  const cross = 1 / (network.windingToHousingKPerW * network.housingJPerK);
+  const outer = 1 / (network.housingToAmbientKPerW * network.housingJPerK);
+  const [fastS, slowS] = heatTimeConstants(network);
+  const [fast, slow] = [1 / fastS, 1 / slowS];
+  const [byFast, bySlow] = [1 / -Math.expm1(-fast * cycleS), 1 / -Math.expm1(-slow * cycleS)];
+  // Projections on the modes: (A + slow)/(slow − fast) and (A + fast)/(fast − slow).
+  const gap = fast - slow;
+  const share = (bySlow - byFast) / gap;
+  const rest = (fast * bySlow - slow * byFast) / gap;
+  const { windingK, housingK } = step;
+  return {
+    windingK: share * inner * (housingK - windingK) + rest * windingK,
+    housingK: share * (cross * windingK - (cross + outer) * housingK) + rest * housingK,
+  };
+}
+
 /** Copper heat of a steady current, W: at ambient, and what it grows by for each kelvin of the winding. */
 export interface GrowingHeat {
   readonly atAmbientW: number;

@@ -5,7 +5,7 @@
  * Deliberately not here: several mechanisms in one load cycle.
  */
 import type { Drive } from "./drive.js";
-import { heatNetworkOf, heatTimeConstants, RUNAWAY_C } from "./heat.js";
+import { type HeatRise, heatNetworkOf, RUNAWAY_C, riseToCome } from "./heat.js";
 import { solveHeld } from "./heldRun.js";
 import { holdPoint } from "./hold.js";
 import { type CarriedState, coldState } from "./motionState.js";
@@ -109,26 +109,16 @@ function workOf(drive: Drive, from: CarriedState): TravelResult | null {
   return solveRelease(drive, from)?.recovery ?? solveTravel(drive, { from });
 }
 
-/** What the network's two modes still rise, each beyond one cycle's rise as if it were linear, K: the housing, and the winding above it. */
-interface Rise {
-  readonly housingK: number;
-  readonly aboveK: number;
-}
-
-function riseAhead(plant: Plant, before: CarriedState, { end, lastsS }: Cycle): Rise {
+/** What the cycles to come still add, were the network linear, K. */
+function riseAhead(plant: Plant, before: CarriedState, { end, lastsS }: Cycle): HeatRise {
   const network = heatNetworkOf(plant.motor);
-  if (!network) return { housingK: 0, aboveK: 0 };
-  const [fast, slow] = heatTimeConstants(network);
-  const above = end.windingC - end.housingC - (before.windingC - before.housingC);
-  return {
-    housingK: (end.housingC - before.housingC) / -Math.expm1(-lastsS / slow),
-    aboveK: above / -Math.expm1(-lastsS / fast),
-  };
+  if (!network) return { windingK: 0, housingK: 0 };
+  return riseToCome(network, lastsS, { windingK: end.windingC - before.windingC, housingK: end.housingC - before.housingC });
 }
 
 function leftToRise(plant: Plant, before: CarriedState, run: Cycle): number {
-  const { housingK, aboveK } = riseAhead(plant, before, run);
-  return Math.max(Math.abs(housingK), Math.abs(housingK + aboveK));
+  const { windingK, housingK } = riseAhead(plant, before, run);
+  return Math.max(Math.abs(windingK), Math.abs(housingK));
 }
 
 interface Periodic extends Pick<RepeatedRun, "windingPeakC" | "runsAway"> {
@@ -148,9 +138,8 @@ function jumpToPeriodic(drive: Drive, plant: Plant, from: CarriedState, everyS: 
     if (state.windingC > RUNAWAY_C || run.end.windingC > RUNAWAY_C) break;
     opens = run.opensAfterS !== null;
     if (leftToRise(plant, state, run) < PERIODIC_K) return { windingPeakC: run.windingPeakC, runsAway: false, opens };
-    const { housingK, aboveK } = riseAhead(plant, state, run);
-    const housingC = state.housingC + housingK;
-    state = { ...run.end, housingC, windingC: housingC + (state.windingC - state.housingC) + aboveK };
+    const { windingK, housingK } = riseAhead(plant, state, run);
+    state = { ...run.end, windingC: state.windingC + windingK, housingC: state.housingC + housingK };
   }
   return { windingPeakC: null, runsAway: true, opens };
 }

@@ -2,7 +2,14 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import type { ThermalConstants } from "../../extension/model/drive.js";
-import { heatingCurve, heatNetworkOf, heatTimeConstants, steadyHeat, timeToTemperature } from "../../extension/model/heat.js";
+import {
+  heatingCurve,
+  heatNetworkOf,
+  heatTimeConstants,
+  riseToCome,
+  steadyHeat,
+  timeToTemperature,
+} from "../../extension/model/heat.js";
 import { solveHeld } from "../../extension/model/heldRun.js";
 import { coldState } from "../../extension/model/motionState.js";
 import { plantOf } from "../../extension/model/plant.js";
@@ -79,6 +86,22 @@ describe("the two-node curve", () => {
     const when = timeToTemperature(network, heat, 60);
     expect(heatingCurve(network, heat, when ?? 0).windingC).toBeCloseTo(60, 8);
     expect(timeToTemperature(network, heat, 500)).toBeNull();
+  });
+});
+
+describe("what cycles to come still rise", () => {
+  it("is the way to the steady state, from the first of them, whatever their length and however near the time constants", () => {
+    for (const housingTimeS of [600, 20]) {
+      const near = heatNetworkOf({ ...plainMotor, thermal: { ...thermal, housingTimeS } });
+      if (!near) throw new Error("no network");
+      for (const cycleS of [1e-3, 5, 300]) {
+        const first = heatingCurve(near, { atAmbientW: 6, perKW: 0 }, cycleS);
+        const rise = riseToCome(near, cycleS, { windingK: first.windingC - 25, housingK: first.housingC - 25 });
+        // 6 W through 2 K/W and 8 K/W.
+        expect(rise.windingK).toBeCloseToShare(60, 1e-7);
+        expect(rise.housingK).toBeCloseToShare(48, 1e-7);
+      }
+    }
   });
 });
 
