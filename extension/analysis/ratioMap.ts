@@ -32,7 +32,7 @@ export interface RatioMap {
   readonly fastest: RatioPoint | null;
   /** Where the motor wastes least at the hardest position; null where that lies outside, or without a load to stand against. */
   readonly bestEfficiency: RatioPoint | null;
-  /** The best of each that can be written into the code and keeps every rule; null where there is none, or it is the ratio that is. */
+  /** The best of each that can be written into the code and keeps every rule; null where there is none, or the ratio that is does no worse. */
   readonly toWrite: { readonly fastest: WritableRatio | null; readonly bestEfficiency: WritableRatio | null };
   readonly stock: readonly { readonly ratio: number; readonly words: string; readonly gears: 1 | 2; readonly keeps: boolean }[];
   /** True where any ratio can be had: a plain reduction. */
@@ -43,6 +43,8 @@ export interface RatioMap {
 const ESSENTIAL: ReadonlySet<RuleId> = new Set(["stalls", "cannot-hold", "beyond-speed", "late"]);
 
 const SAMPLES = 64;
+/** What is better by less than this share is not worth a change. */
+const SAME = 1e-6;
 
 /** `undefined` where the mechanism has no numbers. Yields after each ratio. */
 export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Generator<undefined, RatioMap | undefined> {
@@ -83,8 +85,10 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
   const toEfficient = (ratio: number): number =>
     bestEfficiency === null ? Number.POSITIVE_INFINITY : Math.abs(Math.log(ratio / bestEfficiency.ratio));
   const quickest = yield* bestWritable(choices, interpolated(sorted(), search.cost), search);
-  const efficient = yield* bestWritable(choices, toEfficient, { ...search, cost: ({ ratio }) => toEfficient(ratio) });
-  const orNone = (found: WritableRatio | null) => (found === null || isSame(found.ratio, declared.ratio) ? null : found);
+  const byEfficiency = { ...search, cost: ({ ratio }: RatioPoint) => toEfficient(ratio) };
+  const efficient = yield* bestWritable(choices, toEfficient, byEfficiency);
+  const better = (found: WritableRatio | null, { cost }: typeof search): WritableRatio | null =>
+    found === null || (keeps(now) && cost(now) <= cost(found) + SAME * Math.abs(cost(found))) ? null : found;
   return {
     samples: distinct(sorted()),
     kept,
@@ -93,14 +97,10 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
     now,
     fastest,
     bestEfficiency,
-    toWrite: { fastest: orNone(quickest), bestEfficiency: orNone(efficient) },
+    toWrite: { fastest: better(quickest, search), bestEfficiency: better(efficient, byEfficiency) },
     stock: stock.map(({ ratio, change, gears }) => ({ ratio, words: change.words, gears, keeps: isKept(ratio) })),
     anyRatio: declared.stages.some(({ kind }) => kind === "reduction"),
   };
-}
-
-function isSame(one: number, other: number): boolean {
-  return Math.abs(Math.log(one / other)) < 1e-6;
 }
 
 /** From where it stalls to well beyond the quickest ratio, the one that is well inside. */

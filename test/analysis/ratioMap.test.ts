@@ -177,6 +177,9 @@ ${hoist(3, '\n  within: "13 s",').replace("reduction(3, { efficiency: 0.9 })", "
     const [, driver, driven] = /^stage 1 with (\d+) and (\d+) teeth$/.exec(toWrite.fastest?.words ?? "") ?? [];
     expect(Number(driven) / Number(driver)).toBeCloseTo(best.driven / best.driver, 9);
 
+    // Where it is the one that is written, nothing is left to write.
+    expect(mapOf(analyseFixture(text.replace("20, 60", `${driver}, ${driven}`))).toWrite.fastest).toBeNull();
+
     const plain = mapOf(analyseFixture(hoist(3, '\n  within: "13 s",')));
     const [, written] = /^stage 1 with a ratio of ([\d.]+)$/.exec(plain.toWrite.fastest?.words ?? "") ?? [];
     expect(Number(written)).toBe(Number(Number(written).toPrecision(3)));
