@@ -90,11 +90,12 @@ class ChartPanel implements vscode.Disposable {
     this.#parts = parts;
   }
 
-  /** Shows a view of a mechanism, or of the one at the caret. The keyboard stays where it is. */
-  open(view: ViewName, mechanism: string | undefined): void {
+  /** Shows a view of a mechanism or a robot, or of what is at the caret. The keyboard stays where it is. */
+  open(view: ViewName, wanted: string | undefined): void {
     const editor = vscode.window.activeTextEditor;
-    this.#caret = mechanism === undefined && editor && isSource(editor.document) ? caretOf(editor) : null;
-    const subject = mechanism === undefined ? this.#subject : { mechanism, robot: null };
+    this.#caret = wanted === undefined && editor && isSource(editor.document) ? caretOf(editor) : null;
+    const named = view === "power" ? { robot: wanted ?? null } : { mechanism: wanted ?? null };
+    const subject = wanted === undefined ? this.#subject : { ...this.#subject, ...named };
     this.#opening = view;
     if (this.#panel !== undefined) {
       this.#subject = subject;

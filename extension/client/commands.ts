@@ -3,6 +3,7 @@ import * as vscode from "vscode";
 import { REVEAL, SHOW_CHART } from "../protocol/commands.js";
 import { spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
+import { openExample } from "./example.js";
 import type { Server } from "./server.js";
 
 /** Commands that texts of the server may lead to; no other is trusted in them. */
@@ -13,6 +14,7 @@ export function registerCommands(server: Server, log: vscode.LogOutputChannel): 
   return vscode.Disposable.from(
     registerCommand("loadmark.restartServer", () => server.restart()),
     registerCommand("loadmark.showLog", () => log.show()),
+    registerCommand("loadmark.openExample", openExample),
     registerCommand(REVEAL, (argument: unknown) => reveal(server, argument)),
   );
 }

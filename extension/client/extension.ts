@@ -35,11 +35,17 @@ export function activateWith(context: vscode.ExtensionContext, makeHostClient: M
     createMechanismsView(server),
     createStatusItem(server),
     server.onDidChangeState(({ status }) => {
-      void vscode.commands.executeCommand("setContext", "loadmark.hasMechanisms", status !== null);
+      void setContext("loadmark.hasMechanisms", status !== null);
     }),
+    // After the first result it is known whether anything is declared.
+    server.onChartMayDiffer(() => void setContext("loadmark.isRead", true)),
   );
   openGate(context, server, log);
   return { isServerWanted: () => server.isWanted };
+}
+
+function setContext(name: string, value: boolean): Thenable<unknown> {
+  return vscode.commands.executeCommand("setContext", name, value);
 }
 
 /** Asks until the answer is yes; the server then stays. */
@@ -50,6 +56,7 @@ function openGate(context: vscode.ExtensionContext, server: Server, log: vscode.
       if (!(await usesDeclarations(gateWorkspace)) || server.isWanted) return;
       later.dispose();
       log.info("The workspace uses the declarations: the server is started.");
+      void setContext("loadmark.isUsed", true);
       await server.start();
     } catch (error) {
       log.error(error instanceof Error ? error : String(error));

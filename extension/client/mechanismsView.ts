@@ -27,12 +27,15 @@ function childrenOf({ robots, apart }: State, item: MechanismItem | undefined): 
   return "mechanisms" in item ? [...item.mechanisms] : [];
 }
 
-function robotItem({ label, standing, place, mechanisms }: RobotState): vscode.TreeItem {
+function robotItem({ label, description, tooltip, standing, place, mechanisms }: RobotState): vscode.TreeItem {
   const state = mechanisms.length > 0 ? vscode.TreeItemCollapsibleState.Expanded : vscode.TreeItemCollapsibleState.None;
   const item = new vscode.TreeItem(label, state);
+  item.description = description;
+  item.tooltip = tooltip;
   item.iconPath = iconOf(standing);
   item.contextValue = "robot";
   item.command = showPlace(place);
+  item.accessibilityInformation = { label: tooltip === "" ? label : `${label}: ${tooltip}` };
   return item;
 }
 

@@ -1,9 +1,9 @@
 /** The mechanisms of the workspace by robot, each with how it fares: what the view shows. */
-import type { AnalysedMechanism, Analysis, Finding } from "../analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Span } from "../evaluator/value.js";
 import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
-import { type State, verdictOf, worse } from "./verdict.js";
+import { robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
 
 export interface MechanismTree {
   readonly robots: readonly RobotNode[];
@@ -12,8 +12,14 @@ export interface MechanismTree {
 }
 
 export interface RobotNode {
+  /** As declared: the key for the chart. */
+  readonly name: string;
   /** Plain text. */
   readonly label: string;
+  /** Plain text: verdict of its load cycle and lowest voltage; empty without a load cycle. */
+  readonly description: string;
+  /** Plain text, longer. */
+  readonly tooltip: string;
   readonly at: Span;
   /** The worst of its mechanisms' and its own findings. */
   readonly state: State;
@@ -64,10 +70,28 @@ export function mechanismTree(analysis: Analysis, nodeOf: NodeOf = nodeFor): Mec
       ...statesAt(general, robot.call.span),
       ...statesAt(general, robot.at),
     ];
-    return { label: plainText(robot.name), at: robot.at, state: states.reduce(worse, "fine"), mechanisms };
+    return {
+      name: robot.name,
+      label: plainText(robot.name),
+      ...saidOf(analysis, robot),
+      at: robot.at,
+      state: states.reduce(worse, "fine"),
+      mechanisms,
+    };
   });
   const apart = analysis.mechanisms.filter((mechanism) => !listed.has(mechanism)).map((mechanism) => nodeOf(analysis, mechanism));
   return { robots, apart };
+}
+
+function saidOf(analysis: Analysis, robot: AnalysedRobot): Pick<RobotNode, "description" | "tooltip"> {
+  const { numbers } = robot;
+  if (numbers === undefined) return { description: "", tooltip: robot.notChecked.join(" ") };
+  const { state, words } = robotVerdictOf(analysis, robot);
+  const lowest = `lowest ${writeQuantity(numbers.lowestVoltageV, "voltage")}`;
+  return {
+    description: state === "fine" ? lowest : `${lowest} · ${words}`,
+    tooltip: `Load cycle: ${words}, ${lowest}, at most ${writeQuantity(numbers.peakCurrentA, "current")}`,
+  };
 }
 
 function nodeFor(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNode {

@@ -23,7 +23,11 @@ const mechanismSchema = v.object({
 });
 
 const robotSchema = v.object({
+  /** As declared: what commands about it take. */
+  name: v.string(),
   label: v.string(),
+  description: v.string(),
+  tooltip: v.string(),
   standing: standingSchema,
   place: placeSchema,
   mechanisms: v.array(mechanismSchema),

@@ -36,8 +36,11 @@ export function createStateReader(): StateOf {
     const { robots, apart } = mechanismTree(analysis, nodeOf);
     const status = statusOf(analysis);
     return {
-      robots: robots.map(({ label, at, state, mechanisms }) => ({
+      robots: robots.map(({ name, label, description, tooltip, at, state, mechanisms }) => ({
+        name,
         label,
+        description,
+        tooltip,
         standing: state,
         place: placeOf(at),
         mechanisms: mechanisms.map(mechanismOf),
@@ -61,6 +64,6 @@ export function sameState(one: State, other: State): boolean {
   );
 }
 
-function headOf({ label, standing, place }: State["robots"][number]): string {
-  return JSON.stringify([label, standing, place]);
+function headOf({ mechanisms: _, ...head }: State["robots"][number]): string {
+  return JSON.stringify(head);
 }

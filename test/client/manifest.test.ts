@@ -45,12 +45,28 @@ describe("the manifest", () => {
     expect(source).toContain(`DEFAULTS: DisplaySettings = { hints: "${hints.default}", codeLens: ${codeLens.default} }`);
   });
 
-  it("hides the view where nothing is declared, and gives it an icon", () => {
+  it("hides the view where the declarations are not used, and says what to do where none is written", () => {
     const [view, ...more] = contributes.views.explorer;
     expect(more).toEqual([]);
-    expect(view).toMatchObject({ id: "loadmark.mechanisms", when: "loadmark.hasMechanisms", icon: expect.any(String) });
-    expect(client).toContain('"loadmark.hasMechanisms"');
+    expect(view).toMatchObject({ id: "loadmark.mechanisms", when: "loadmark.isUsed", icon: expect.any(String) });
+    for (const context of ["loadmark.isUsed", "loadmark.isRead", "loadmark.hasMechanisms"])
+      expect(client).toContain(`"${context}"`);
+    const [welcome] = contributes.viewsWelcome;
+    expect(welcome).toMatchObject({ view: "loadmark.mechanisms", when: "loadmark.isRead" });
+    expect(welcome.contents).toContain("(command:loadmark.openExample)");
+    expect(welcome.contents).toContain(
+      encodeURIComponent(`"${manifest.publisher}.${manifest.name}#${contributes.walkthroughs[0].id}"`),
+    );
     expect(client).toContain('"loadmark.mechanisms"');
+  });
+
+  it("has a file for every step of the walkthrough, and no link to a command that isn't there", () => {
+    const commands = new Set(contributes.commands.map(({ command }: { command: string }) => command));
+    for (const { media, description } of contributes.walkthroughs[0].steps) {
+      expect(existsSync(path.join(ROOT, "extension/client", media.markdown.replace("dist/", "")))).toBe(true);
+      for (const [, command = ""] of description.matchAll(/command:(loadmark\.\w+)/g))
+        expect(commands.has(command), command).toBe(true);
+    }
   });
 
   it("names only files that are built or copied", () => {

@@ -104,6 +104,26 @@ describe("mechanismTree", () => {
     expect(all.map(({ at }) => FOUR.slice(at.start, at.end))).toEqual(["calm", "eager", "stuck", "vague"]);
   });
 
+  it("tells how a robot's load cycle fares, and nothing where it has none", () => {
+    const cycle = FOUR.replace(
+      "mechanisms: [calm, eager] }",
+      'mechanisms: [calm, eager], loadCycle: [{ lasts: "9 s", moving: [calm, eager] }] }',
+    ).replace('resistance: "0 ohm"', 'resistance: "0.5 ohm", mustStayAbove: "11 V"');
+    const [robot] = mechanismTree(analyseWithCursor(cycle).analysis).robots;
+    // From standstill each motor is 12 V / 6 A; two of them behind 0.5 ohm take 12 V / (0.5 + 1) ohm.
+    const lowestV = 12 - 0.5 * (12 / 1.5);
+    expect(robot).toMatchObject({
+      name: "tray mover",
+      label: "tray mover",
+      description: `lowest ${three(lowestV)} V · Pulls the supply too low`,
+    });
+    expect(robot?.tooltip).toBe(`Load cycle: Pulls the supply too low, lowest ${three(lowestV)} V, at most 8 A`);
+    expect(mechanismTree(analyseWithCursor(FOUR).analysis).robots[0]).toMatchObject({
+      description: "",
+      tooltip: expect.stringContaining("none is declared"),
+    });
+  });
+
   it("shows hostile names as plain text on one line", () => {
     const { robots, apart } = mechanismTree(
       analyseWithCursor(FOUR.replace("calm hoist", "a\\n\u202Eb").replace("stuck hoist", "x".repeat(500))).analysis,

@@ -7,7 +7,7 @@ const place = { uri: "file:///a.ts", range: { start: { line: 0, character: 1 }, 
 const mechanism = { name: "a", label: "a", description: "58 % of stall", tooltip: "Fine", standing: "fine", place } as const;
 
 const state: State = {
-  robots: [{ label: "robot", standing: "warning", place, mechanisms: [mechanism] }],
+  robots: [{ name: "robot", label: "robot", description: "", tooltip: "", standing: "warning", place, mechanisms: [mechanism] }],
   apart: [{ ...mechanism, standing: "unknown" }],
   status: { text: "1 warning", tooltip: "2 mechanisms", standing: "warning" },
 };
