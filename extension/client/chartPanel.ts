@@ -13,7 +13,7 @@ import {
   pageMessageSchema,
 } from "../protocol/chartMessages.js";
 import { VIEW_NAMES, type ViewName, type Want } from "../protocol/charts/views.js";
-import { SHOW_CHART, SHOW_POWER, SHOW_RATIO_MAP, SHOW_TRAVEL } from "../protocol/commands.js";
+import { SHOW_CHART, SHOW_MATTERS, SHOW_POWER, SHOW_RATIO_MAP, SHOW_TRAVEL } from "../protocol/commands.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { chartHtml } from "./chartHtml.js";
 import { isSource } from "./documents.js";
@@ -28,6 +28,7 @@ const COMMANDS: Readonly<Record<ViewName, string>> = {
   "operating-point": SHOW_CHART,
   travel: SHOW_TRAVEL,
   "ratio-map": SHOW_RATIO_MAP,
+  matters: SHOW_MATTERS,
   power: SHOW_POWER,
 };
 
@@ -36,6 +37,7 @@ const titleOf: Readonly<Record<ViewName, () => string>> = {
   "operating-point": () => vscode.l10n.t("Operating Point"),
   travel: () => vscode.l10n.t("Travel"),
   "ratio-map": () => vscode.l10n.t("Ratio Map"),
+  matters: () => vscode.l10n.t("What Matters"),
   power: () => vscode.l10n.t("Power by Mechanism"),
 };
 

@@ -1,13 +1,13 @@
 /** The commands of the palette, and those that links in hovers and lenses lead to. */
 import * as vscode from "vscode";
-import { REVEAL, SHOW_CHART } from "../protocol/commands.js";
+import { REVEAL, SHOW_CHART, SHOW_RATIO_MAP } from "../protocol/commands.js";
 import { spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { openExample } from "./example.js";
 import type { Server } from "./server.js";
 
 /** Commands that texts of the server may lead to; no other is trusted in them. */
-export const LINKED_COMMANDS: readonly string[] = [SHOW_CHART, REVEAL];
+export const LINKED_COMMANDS: readonly string[] = [SHOW_CHART, SHOW_RATIO_MAP, REVEAL];
 
 export function registerCommands(server: Server, log: vscode.LogOutputChannel): vscode.Disposable {
   const { registerCommand } = vscode.commands;

@@ -3,6 +3,7 @@
 export const SHOW_CHART = "loadmark.showChart";
 export const SHOW_TRAVEL = "loadmark.showTravel";
 export const SHOW_RATIO_MAP = "loadmark.showRatioMap";
+export const SHOW_MATTERS = "loadmark.showMatters";
 export const SHOW_POWER = "loadmark.showPower";
 export const REVEAL = "loadmark.reveal";
 

@@ -267,6 +267,21 @@ describe("quick fixes", () => {
     await client.waitForRules("robot.ts", []);
   });
 
+  it("tell the nearest miss, which changes nothing and leads to the map of all ratios, where nothing in stock helps", async () => {
+    const files = {
+      ...robot(STALLS),
+      "robot.ts": SWING_ARM.replace('"1 kg"', '"60 kg"'),
+      "loadmark.json": '{ "toothCounts": [16, 18] }',
+    };
+    await start(files, { commands: ["loadmark.showRatioMap"] });
+    await client.open("robot.ts");
+    await client.waitForRules("robot.ts", ["stalls"]);
+    const miss = (await actions("robot.ts", "swing =")).find(({ title }) => title.startsWith("Nothing in stock clears it"));
+    expect(miss?.title).toMatch(/; nearest: /);
+    expect(miss?.edit).toBeUndefined();
+    expect(miss?.command).toMatchObject({ command: "loadmark.showRatioMap", arguments: ["swing arm"] });
+  });
+
   it("offer the allowance last, with its reason to be filled in", async () => {
     await start(robot(PAST_PEAK));
     await client.open("robot.ts");

@@ -135,8 +135,8 @@ export interface Plot {
   setCursor(stop: number | null): void;
   /** Where the probe stands, SI; absent where there is none. */
   setProbe?(at: number | null): void;
-  /** Abscissa at a distance from the canvas's left edge, SI. */
-  at(px: number): number;
+  /** Abscissa at a distance from the canvas's left edge, SI; `undefined` where nothing lies across. */
+  at(px: number): number | undefined;
   destroy(): void;
 }
 

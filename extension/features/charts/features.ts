@@ -1,4 +1,5 @@
 /** The views of the chart panel by name. A new view adds its file beside this one and a line here. */
+import { createMattersFeature } from "./matters.js";
 import { operatingPointFeature } from "./operatingPoint.js";
 import { createPowerFeature } from "./power.js";
 import { createRatioMapFeature } from "./ratioMap.js";
@@ -10,6 +11,7 @@ export function createChartFeatures() {
     "operating-point": operatingPointFeature,
     travel: travelFeature,
     "ratio-map": createRatioMapFeature(),
+    matters: createMattersFeature(),
     power: createPowerFeature(),
   } as const;
 }

@@ -11,7 +11,7 @@ import {
 } from "vscode-languageserver";
 import type { Proposal } from "../../analysis/proposal.js";
 import { type Edit, findingsTouching, type QuickFix, quickFixesAt } from "../../features/quickFixes.js";
-import { SHOW_CHART } from "../../protocol/commands.js";
+import { SHOW_RATIO_MAP } from "../../protocol/commands.js";
 import type { CurrentFile } from "../current.js";
 import { inLines } from "../diagnostics.js";
 import type { Proposer } from "../proposer.js";
@@ -55,10 +55,10 @@ export async function answerCodeActions(
     }));
 }
 
-/** A nearest miss changes nothing: it leads to the chart. */
+/** A nearest miss changes nothing: it leads to the map of all ratios. */
 function opening({ title, finding }: QuickFix, commands: readonly string[]): Pick<CodeAction, "command"> {
-  const leads = finding.mechanism !== null && commands.includes(SHOW_CHART);
-  return leads ? { command: { title, command: SHOW_CHART, arguments: [finding.mechanism] } } : {};
+  const leads = finding.mechanism !== null && commands.includes(SHOW_RATIO_MAP);
+  return leads ? { command: { title, command: SHOW_RATIO_MAP, arguments: [finding.mechanism] } } : {};
 }
 
 function documentEditsOf(fix: QuickFix, result: Result, texts: Texts, canFillIn: boolean): TextDocumentEdit[] {
