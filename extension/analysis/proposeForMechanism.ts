@@ -115,6 +115,12 @@ function lazyFacts(mechanism: Mechanism, drive: MechanismFacts["drive"]): Mechan
     get stall() {
       return solution.stall;
     },
+    get turning() {
+      return solution.turning;
+    },
+    get repeats() {
+      return solution.repeats;
+    },
   };
 }
 

@@ -62,6 +62,12 @@ export function createPointReader(
         return solution.hold;
       },
       stall,
+      get turning() {
+        return solution.turning;
+      },
+      get repeats() {
+        return solution.repeats;
+      },
     };
     const { hardest } = solution.numbers;
     const broken = breaks(facts);

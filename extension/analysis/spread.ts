@@ -9,7 +9,8 @@ import type { Drive, Supply } from "../model/drive.js";
 import { effectsOf } from "../model/effects.js";
 import { hardestNumbers } from "../model/hardestNumbers.js";
 import { offSheet } from "../model/offSheet.js";
-import { solveHold } from "../model/runs.js";
+import { solveRepeats } from "../model/repeats.js";
+import { solveHold, solveTurning } from "../model/runs.js";
 import { solveTravel } from "../model/travel.js";
 import { opensInUse } from "../rules/trips.js";
 import { fromSi, parseAnyQuantity } from "../units/parse.js";
@@ -84,7 +85,8 @@ interface Draw {
 function solveDraw(drive: Drive): Draw {
   if (drive.protection === undefined) return { ...effectsOf(drive), trips: false };
   const travel = solveTravel(drive);
-  const trips = opensInUse({ drive, travel, hold: drive.holdForS === undefined ? null : solveHold(drive) });
+  const hold = drive.holdForS === undefined ? null : solveHold(drive);
+  const trips = opensInUse({ drive, travel, hold, turning: solveTurning(drive), repeats: solveRepeats(drive) });
   return { currentA: hardestNumbers(drive).motorCurrentA, timeS: travel?.timeS ?? null, trips };
 }
 

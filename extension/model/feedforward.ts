@@ -12,6 +12,8 @@ import { trainOf } from "./stages.js";
 export interface FeedforwardNumbers {
   /** Holds the load where it pulls hardest, V; null where there is nothing to hold. */
   readonly holdLoadV: number | null;
+  /** The same as a share of the supply's voltage as it sags under the hold: the command that the controller sends; null also where no command would do. */
+  readonly holdLoadSupplyShare: number | null;
   /** Per rad/s of the output shaft, V·s/rad. */
   readonly voltsPerRadPerS: number;
   /** Per rad/s² of the output shaft, with the greatest inertia of the travel, V·s²/rad. */
@@ -31,8 +33,10 @@ export function feedforwardNumbers(drive: Drive): FeedforwardNumbers {
   const direction = travelDirection(load);
   const friction = load.opposing(at, direction) - direction * load.restTorque(at);
   const inertia = greatestInertia(load) + train.inertiaKgM2;
+  const hold = holdPoint(drive);
   return {
-    holdLoadV: holdPoint(drive)?.motorVoltageV ?? null,
+    holdLoadV: hold?.motorVoltageV ?? null,
+    holdLoadSupplyShare: hold?.supply && hold.supply.duty <= drive.pwmDuty ? hold.supply.duty : null,
     voltsPerRadPerS: train.ratio * (motor.backEmfVPerRadPerS + motor.resistanceOhm * lossCurrentSlope(motor)),
     voltsPerRadPerS2: voltsPerTorque * (motor.rotorInertiaKgM2 * train.ratio + inertia / share),
     frictionV: (voltsPerTorque * friction) / share + motor.resistanceOhm * breakawayCurrent(motor),

@@ -6,18 +6,30 @@
 import type { Drive } from "./drive.js";
 import { feedforwardNumbers } from "./feedforward.js";
 import { hardestNumbers } from "./hardestNumbers.js";
+import { hotShare } from "./hotShare.js";
 import { availableLine } from "./line.js";
 import { solveHold, solveStall } from "./runs.js";
-import { holdNumbers, type MechanismSolution, stallNumbers, travelNumbers } from "./solve.js";
+import { holdNumbers, type MechanismSolution, repeatsOf, stallNumbers, travelNumbers, turningOf } from "./solve.js";
 import { trainOf } from "./stages.js";
 import { solveTravel } from "./travel.js";
 
 export function lazySolution(drive: Drive): MechanismSolution {
   const train = trainOf(drive.stages);
-  const hardest = once(() => hardestNumbers(drive));
   const travel = once(() => solveTravel(drive));
   const hold = once(() => solveHold(drive));
   const stall = once(() => solveStall(drive));
+  const turning = once(() => turningOf(drive));
+  const repeats = once(() => repeatsOf(drive));
+  const hardest = once(() => ({
+    ...hardestNumbers(drive),
+    get hotWindingC() {
+      return hot().hotWindingC;
+    },
+    get hotStallShare() {
+      return hot().hotStallShare;
+    },
+  }));
+  const hot = once(() => hotShare(drive, { travel: travel(), hold: hold(), turning: turning(), repeats: repeats() }));
   const feedforward = once(() => feedforwardNumbers(drive));
   return {
     numbers: {
@@ -53,6 +65,12 @@ export function lazySolution(drive: Drive): MechanismSolution {
     },
     get stall() {
       return stall();
+    },
+    get turning() {
+      return turning();
+    },
+    get repeats() {
+      return repeats();
     },
   };
 }

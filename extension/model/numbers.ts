@@ -4,6 +4,7 @@
  * Deliberately not here: how they come about.
  */
 import type { FeedforwardNumbers } from "./feedforward.js";
+import type { HotShare } from "./hotShare.js";
 import type { LimitedBy } from "./operatingPoint.js";
 
 export interface MechanismNumbers {
@@ -12,7 +13,7 @@ export interface MechanismNumbers {
   /** Of all stages together, motor driving; screw friction not included. */
   readonly stageEfficiency: number;
   readonly available: AvailableNumbers;
-  readonly hardest: HardestNumbers;
+  readonly hardest: HardestNumbers & HotShare;
   /** null for a roller. */
   readonly travel: TravelNumbers | null;
   /** null for a flywheel. */

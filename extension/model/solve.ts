@@ -3,9 +3,11 @@ import type { Drive } from "./drive.js";
 import { feedforwardNumbers } from "./feedforward.js";
 import { hardestNumbers } from "./hardestNumbers.js";
 import type { HeldRun } from "./heldRun.js";
+import { hotShare } from "./hotShare.js";
 import { availableLine } from "./line.js";
 import type { HoldNumbers, MechanismNumbers, StallNumbers, TravelNumbers } from "./numbers.js";
-import { solveHold, solveStall } from "./runs.js";
+import { type RepeatedRun, solveRepeats } from "./repeats.js";
+import { solveHold, solveStall, solveTurning } from "./runs.js";
 import { trainOf } from "./stages.js";
 import { solveTravel } from "./travel.js";
 import type { TravelResult } from "./travelResult.js";
@@ -16,6 +18,10 @@ export interface MechanismSolution {
   readonly travel: TravelResult | null;
   readonly hold: HeldRun | null;
   readonly stall: HeldRun;
+  /** A flywheel or roller kept turning; null for others, and where nothing tells of heat or protection. */
+  readonly turning: HeldRun | null;
+  /** Repeated every so often; null where it is not, and where nothing tells of heat or protection. */
+  readonly repeats: RepeatedRun | null;
 }
 
 /** Numbers of a mechanism. Legal input, however extreme, gives finite numbers or null; the function does not throw. */
@@ -30,6 +36,8 @@ export function solveMechanismRuns(drive: Drive): MechanismSolution {
   const travel = solveTravel(drive);
   const hold = solveHold(drive);
   const stall = solveStall(drive);
+  const turning = turningOf(drive);
+  const repeats = repeatsOf(drive);
   const numbers: MechanismNumbers = {
     ratio: train.ratio,
     stageEfficiency: train.efficiency,
@@ -38,13 +46,25 @@ export function solveMechanismRuns(drive: Drive): MechanismSolution {
       stallTorqueNm: line.stallTorqueNm,
       stallCurrentA: line.stallCurrentA,
     },
-    hardest: hardestNumbers(drive),
+    hardest: { ...hardestNumbers(drive), ...hotShare(drive, { travel, hold, turning, repeats }) },
     travel: travel && travelNumbers(travel),
     hold: hold && holdNumbers(hold),
     stall: stallNumbers(stall),
     feedforward: feedforwardNumbers(drive),
   };
-  return { numbers, travel, hold, stall };
+  return { numbers, travel, hold, stall, turning, repeats };
+}
+
+export function turningOf(drive: Drive): HeldRun | null {
+  return isWatched(drive) ? solveTurning(drive) : null;
+}
+
+export function repeatsOf(drive: Drive): RepeatedRun | null {
+  return isWatched(drive) ? solveRepeats(drive) : null;
+}
+
+function isWatched({ protection, motor }: Drive): boolean {
+  return protection !== undefined || motor.thermal !== undefined;
 }
 
 export function travelNumbers(travel: TravelResult): TravelNumbers {

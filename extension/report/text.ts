@@ -2,8 +2,9 @@
 import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
 import type { Spread } from "../analysis/spread.js";
-import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
+import { writeIn, writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import { CAUTIONS } from "./cautions.js";
+import { tellFeedforward } from "./feedforwardWords.js";
 import { toInertText } from "./inert.js";
 import { type ReportedFinding, reportFindings } from "./report.js";
 import { tellSpread } from "./spreadWords.js";
@@ -94,6 +95,7 @@ function rowsOf(numbers: Numbers): Row[] {
       : `, ${writeShare(hardest.stallShare)} of the ${writeQuantity(available.stallTorqueNm, "torque")} at stall`;
   return [
     ["needs", `${writeQuantity(hardest.motorTorqueNm, "torque")} per motor${share}`],
+    ...hotRows(hardest),
     [
       "runs at",
       `${writeQuantity(hardest.motorSpeedRadPerS, "speed")} of the motor, ${writeQuantity(hardest.motorSpeedRadPerS / ratio, "speed")} at the output`,
@@ -110,6 +112,15 @@ function rowsOf(numbers: Numbers): Row[] {
     ...travelRows(numbers),
     ...holdRows(numbers),
     ...stallRows(numbers),
+    ["feedforward", tellFeedforward(numbers.feedforward)],
+  ];
+}
+
+/** Only where there are thermal data. */
+function hotRows({ hotStallShare, hotWindingC }: Numbers["hardest"]): Row[] {
+  if (hotStallShare === null || hotWindingC === null) return [];
+  return [
+    ["hot", `${writeShare(hotStallShare)} of what is then left at stall, winding ${writeIn(hotWindingC + 273.15, "degC")}`],
   ];
 }
 

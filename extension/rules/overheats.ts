@@ -1,6 +1,4 @@
 /** `overheats`: the winding passes its limit in the travel, in the hold, when repeating, or when turning on and on. */
-import { solveRepeats } from "../model/repeats.js";
-import { solveTurning } from "../model/runs.js";
 import { writeQuantity } from "../units/write.js";
 import type { MechanismFacts, MechanismRule, Verdict } from "./rule.js";
 
@@ -37,8 +35,7 @@ function inHold({ drive, hold }: MechanismFacts): Heat | undefined {
   return { told, excess: drive.holdForS / Math.max(after, Number.MIN_VALUE), blames: [["holdFor"]] };
 }
 
-function inRepeats({ drive }: MechanismFacts, limitC: number): Heat | undefined {
-  const repeats = drive.everyS === undefined ? null : solveRepeats(drive);
+function inRepeats({ drive, repeats }: MechanismFacts, limitC: number): Heat | undefined {
   if (repeats === null || drive.everyS === undefined) return undefined;
   const every = `repeated every ${writeQuantity(drive.everyS, "time")}`;
   if (repeats.runsAway) return { told: `${every}, the winding gets ever hotter`, excess: Number.MAX_VALUE, blames: [["every"]] };
@@ -47,8 +44,7 @@ function inRepeats({ drive }: MechanismFacts, limitC: number): Heat | undefined 
   return { told: `${every}, the winding comes to ${writeCelsius(peak)}`, excess: peak / limitC, blames: [["every"]] };
 }
 
-function inTurning({ drive }: MechanismFacts): Heat | undefined {
-  const turning = solveTurning(drive);
+function inTurning({ turning }: MechanismFacts): Heat | undefined {
   if (turning === null || turning.limitAfterS === null) return undefined;
   const told = `turning on and on, the winding passes its limit after ${writeQuantity(turning.limitAfterS, "time")}`;
   return { told, excess: 1 / Math.max(turning.limitAfterS, Number.MIN_VALUE), blames: [["load"]] };

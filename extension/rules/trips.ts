@@ -1,6 +1,4 @@
 /** `trips`: protection opens before the travel is done, before the hold is over, or while it keeps turning or repeating. */
-import { solveRepeats } from "../model/repeats.js";
-import { solveTurning } from "../model/runs.js";
 import { writeQuantity } from "../units/write.js";
 import { tellProtector } from "./protector.js";
 import type { MechanismFacts, MechanismRule, Verdict } from "./rule.js";
@@ -17,7 +15,7 @@ interface Opening {
   readonly lastsS: number;
 }
 
-type Runs = Pick<MechanismFacts, "drive" | "travel" | "hold">;
+type Runs = Pick<MechanismFacts, "drive" | "travel" | "hold" | "turning" | "repeats">;
 
 /** Whether protection opens in use: before the travel is done, before the hold is over, or while it keeps turning or repeating. */
 export function opensInUse(runs: Runs): boolean {
@@ -62,18 +60,15 @@ function inHold({ drive, hold }: Runs): Opening[] {
 }
 
 /** What turns on and on has no end to reach: any opening counts. */
-function inTurning({ drive }: Runs): Opening[] {
-  const turning = solveTurning(drive);
+function inTurning({ drive, turning }: Runs): Opening[] {
   if (turning === null) return [];
   const { opensAfterS, mayOpenAfterS } = turning.trip;
   const currentA = carriesSupply(drive) ? turning.sourceCurrentA : turning.motorCurrentA;
   return openingsOf(opensAfterS, mayOpenAfterS, { before: "it has turned for long", currentA, lastsS: Number.MAX_VALUE });
 }
 
-function inRepeats({ drive, travel }: Runs): Opening[] {
-  if (drive.everyS === undefined || travel === null) return [];
-  const repeats = solveRepeats(drive);
-  if (repeats === null) return [];
+function inRepeats({ drive, travel, repeats }: Runs): Opening[] {
+  if (drive.everyS === undefined || travel === null || repeats === null) return [];
   const before = `it can repeat every ${writeQuantity(drive.everyS, "time")} for long`;
   return openingsOf(repeats.tripsAfterS, null, { before, currentA: travel.rmsMotorCurrentA, lastsS: Number.MAX_VALUE });
 }

@@ -45,7 +45,7 @@ export const hoist = mechanism("hoist", {
     const [mechanism] = analysis.mechanisms;
     const all = mechanism === undefined ? [] : sensitivitiesOf(analysis, mechanism);
     expect(all.some(({ input, output }) => input === "load.travel" && output === "share")).toBe(false);
-    const sizes = all.map(({ perCentPerPerCent }) => Math.abs(perCentPerPerCent));
+    const sizes = all.map(({ perCentPerPerCent }) => Math.round(Math.abs(perCentPerPerCent) * 1e4));
     expect(sizes).toEqual([...sizes].sort((a, b) => b - a));
     expect(all.some(({ output }) => output === "time")).toBe(true);
   });

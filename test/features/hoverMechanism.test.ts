@@ -70,13 +70,27 @@ describe("a hover on a mechanism", () => {
       | output power | &ensp;9.21 W | &ensp;9.42 W at its peak |
       | efficiency | &ensp;28 % | &ensp;35 % at best |
 
-      Feedforward, at the output shaft: 5 V holds the load, 3.82 V per rad/s  
+      Feedforward, at the output shaft: 5 V (42 % of the supply) holds the load, 3.82 V per rad/s  
       Assumed: Motor at the 25 °C of its sheet. Stage 1 (spur): customary efficiency 0.98. The motor's no-load loss grows with its speed. And 1 more.  
       Not checked: Heat: the motor has no thermal data. Protection: none is declared.  
       Most by: torque, motor stall torque, stage 1 driven
 
       [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
     `);
+  });
+
+  it("tells the share of stall once the winding is hot", () => {
+    const heat =
+      'thermal: { windingToHousing: "1 K/W", housingToAmbient: "2 K/W", windingTime: "20 s", housingTime: "300 s", limit: "130 degC" } })';
+    const source = hoist(80, 'holdFor: "20 h",').replace(MOTOR, MOTOR.replace(/\}\)$/, heat));
+    const { markdown } = checkHover(source, "hoist");
+    // Held for ever: T = 25 + 3·I²·R(T), I = m·g·r/N/k_t with 6 A for 3 N·m; the share grows as R does.
+    const [amperes, growth] = [(OUTPUT_NM / 4) * (6 / 3), 0.00393 / (1 + 0.00393 * 5)];
+    const cold = 3 * amperes ** 2 * (SHEET.voltageV / SHEET.stallA);
+    const riseK = cold / (1 - cold * growth);
+    const hot = handPoint(OUTPUT_NM, 4, 0.98).share * (1 + growth * riseK);
+    expect(markdown).toContain(`\nHot, winding at ${three(25 + riseK)} °C: ${perCent(hot)} of stall  \n`);
+    expect(checkHover(hoist(80), "hoist").markdown).not.toContain("Hot,");
   });
 
   it("tells how far motors of the declared tolerance spread", () => {

@@ -1,7 +1,7 @@
 /** Heat in the long run: closed forms against the integrator, runaway, magnets, repeats. */
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import type { ThermalConstants } from "../../extension/model/drive.js";
+import type { Drive, ThermalConstants } from "../../extension/model/drive.js";
 import {
   heatingCurve,
   heatNetworkOf,
@@ -16,6 +16,7 @@ import { plantOf } from "../../extension/model/plant.js";
 import { solveRelease } from "../../extension/model/release.js";
 import { solveRepeats } from "../../extension/model/repeats.js";
 import { solveHold, solveStall, solveTurning } from "../../extension/model/runs.js";
+import { solveMechanism } from "../../extension/model/solve.js";
 import { motorAt } from "../../extension/model/temperature.js";
 import { solveTravel } from "../../extension/model/travel.js";
 import { armOf, driveOf, liftOf, plainMotor, reduction, rollerOf } from "./drives.js";
@@ -71,6 +72,38 @@ describe("holding", () => {
     const plain = solveHold(forEver);
     const magnet = solveHold({ ...forEver, motor: { ...warm, magnet: "ferrite" } });
     expect(magnet?.windingFinalC ?? 0).toBeGreaterThan(plain?.windingFinalC ?? Number.POSITIVE_INFINITY);
+  });
+});
+
+describe("the share of stall, hot", () => {
+  const drive = driveOf({ motor: warm, load: liftOf(4, 0.05, 1), stages: [reduction(20, 0.9)] });
+  const hardestOf = (changes: Partial<Drive>) => solveMechanism({ ...drive, ...changes }).hardest;
+
+  it("counts the declared hold, and grows as the copper's resistance does", () => {
+    const { hotWindingC, hotStallShare, stallShare } = hardestOf({ holdForS: 40 });
+    expect(hotWindingC).toBe(solveHold({ ...drive, holdForS: 40 })?.windingFinalC);
+    const hotter = motorAt(warm, hotWindingC ?? 25).resistanceOhm / warm.resistanceOhm;
+    expect(hotter).toBeGreaterThan(1.01);
+    // Stall torque is k_t·V/R.
+    expect(hotStallShare).toBeCloseToShare((stallShare ?? 0) * hotter, 1e-12);
+    expect(hardestOf({}).hotWindingC).toBeCloseToShare(solveTravel(drive)?.windingPeakC ?? 0, 1e-12);
+  });
+
+  it("counts repeats and what turns on, stops at the limit, and is unknown without thermal data", () => {
+    expect(hardestOf({ everyS: 3 }).hotWindingC).toBe(solveRepeats({ ...drive, everyS: 3 })?.windingPeakC);
+    const roller = driveOf({ motor: warm, load: rollerOf(0.3), stages: [reduction(10, 0.9)] });
+    expect(solveTurning(roller)?.windingFinalC).toBeGreaterThan(30);
+    expect(solveMechanism(roller).hardest.hotWindingC).toBe(solveTurning(roller)?.windingFinalC);
+    expect(hardestOf({ load: liftOf(40, 0.05, 1), holdForS: 1e6 }).hotWindingC).toBe(120);
+    expect(hardestOf({ motor: plainMotor })).toMatchObject({ hotWindingC: null, hotStallShare: null });
+  });
+
+  it("weakens magnets too", () => {
+    const magnets = hardestOf({ holdForS: 40, motor: { ...warm, magnet: "ferrite" } });
+    const rise = (magnets.hotWindingC ?? 25) - 25;
+    const hotter = motorAt(warm, magnets.hotWindingC ?? 25).resistanceOhm / warm.resistanceOhm;
+    // Ferrite: −0.2 %/K.
+    expect(magnets.hotStallShare).toBeCloseToShare(((magnets.stallShare ?? 0) * hotter) / (1 - 0.002 * rise), 1e-9);
   });
 });
 

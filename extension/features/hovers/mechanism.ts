@@ -6,10 +6,12 @@ import type { DefinitionCall, Span } from "../../evaluator/value.js";
 import { bestEfficiencyPoint, greatestPowerPoint } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
+import { tellFeedforward } from "../../report/feedforwardWords.js";
 import { tellSpread } from "../../report/spreadWords.js";
-import { writeNumber, writeQuantity, writeShare } from "../../units/write.js";
+import { writeIn, writeNumber, writeQuantity, writeShare } from "../../units/write.js";
 import { callsWithin } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
+import { inputWords } from "../inputWords.js";
 import { chartLink, revealLink } from "../links.js";
 import { positionWords } from "../positionWords.js";
 import { outputShaftOf } from "../shaft.js";
@@ -61,7 +63,8 @@ function describeMechanism(
     table: tableOf(drive, numbers),
     notes: [
       ...runLines(drive, numbers),
-      ...feedforwardOf(numbers),
+      ...hotLine(numbers),
+      `Feedforward, ${tellFeedforward(numbers.feedforward)}`,
       ...spreadLine(analysis, mechanism),
       ...assumptions,
       ...shared,
@@ -135,16 +138,12 @@ function tableOf(drive: Drive, { hardest, available }: MechanismNumbers): Table 
   };
 }
 
-/** Voltages that the robot's own code can send ahead of its feedback; those that are 0 are left out. */
-function feedforwardOf({ feedforward }: MechanismNumbers): string[] {
-  const { holdLoadV, frictionV, voltsPerRadPerS, voltsPerRadPerS2 } = feedforward;
-  const parts = [
-    holdLoadV ? `${writeQuantity(holdLoadV, "voltage")} holds the load` : "",
-    frictionV ? `${writeQuantity(frictionV, "voltage")} against friction` : "",
-    `${writeNumber(voltsPerRadPerS)} V per rad/s`,
-    voltsPerRadPerS2 ? `${writeNumber(voltsPerRadPerS2)} V per rad/s²` : "",
-  ];
-  return [`Feedforward, at the output shaft: ${parts.filter((part) => part !== "").join(", ")}`];
+/** The share of stall once the winding is as hot as its use makes it, where that is another one in whole per cent. */
+function hotLine({ hardest }: MechanismNumbers): string[] {
+  const { hotStallShare, hotWindingC, stallShare } = hardest;
+  if (hotStallShare === null || hotWindingC === null || stallShare === null) return [];
+  const [hot, cold] = [writeShare(hotStallShare), writeShare(stallShare)];
+  return hot === cold ? [] : [`Hot, winding at ${writeIn(hotWindingC + 273.15, "degC")}: ${hot} of stall`];
 }
 
 /** How far motors of the declared tolerance, and declared ranges, spread the results. */
@@ -159,16 +158,7 @@ const MOST_NAMED = 3;
 /** Which declared numbers move the current, the share of stall or the time most. */
 function mostBy(analysis: Analysis, mechanism: AnalysedMechanism): string[] {
   const inputs = [...new Set(sensitivitiesOf(analysis, mechanism).map(({ input }) => input))].slice(0, MOST_NAMED);
-  return inputs.length === 0 ? [] : [`Most by: ${inputs.map((input) => inertMarkdown(wordsOf(input))).join(", ")}`];
-}
-
-/** "load.centreOfMass" as "centre of mass", "stages[0].driven" as "stage 1 driven". */
-function wordsOf(input: string): string {
-  return input
-    .replace(/^load\./, "")
-    .replace(/^stages\[(\d+)\]/, (_, index) => `stage ${Number(index) + 1}`)
-    .replaceAll(".", " ")
-    .replace(/[A-Z]/g, (capital) => ` ${capital.toLowerCase()}`);
+  return inputs.length === 0 ? [] : [`Most by: ${inputs.map((input) => inertMarkdown(inputWords(input))).join(", ")}`];
 }
 
 function linksOf({ call }: AnalysedMechanism): string[] {
