@@ -1,19 +1,18 @@
 /** `// loadmark-allow rule: reason` above a mechanism or a robot: silences one rule there. A reason is required; one that matches nothing is told. */
-import type { DefinitionCall, Span } from "../evaluator/value.js";
+import type { Span } from "../evaluator/value.js";
 import { badDeclaration } from "../rules/badDeclaration.js";
 import { RULES } from "../rules/table.js";
 import { nearest } from "../units/nearest.js";
 import type { Finding } from "./analysis.js";
 import type { Declared } from "./declared.js";
 
+export { allowedRules } from "./allowanceComments.js";
+
 /** The findings that no allowance silences, and those about the allowances themselves. */
 export function applyAllowances(findings: readonly Finding[], declared: Declared): Finding[] {
   const about: Finding[] = [];
   const silenced = new Set<Finding>();
-  for (const { at, text, names, robots } of listComments(declared)) {
-    const match = ALLOWANCE.exec(text.trim());
-    if (match === null) continue;
-    const [, rule = "", reason = ""] = match;
+  for (const { at, rule, reason, names, robots } of declared.allowances) {
     const isMeant = (finding: Finding): boolean =>
       finding.mechanism === null ? robots.some((one) => isAt(finding, one)) : names.has(finding.mechanism);
     const hit = findings.filter((finding) => finding.rule === rule && isMeant(finding));
@@ -23,41 +22,6 @@ export function applyAllowances(findings: readonly Finding[], declared: Declared
     else for (const finding of hit) silenced.add(finding);
   }
   return [...findings.filter((finding) => !silenced.has(finding)), ...about];
-}
-
-const ALLOWANCE = /^\/\/\s*loadmark-allow\b\s*([\w-]*)\s*(?::\s*(.*))?$/;
-
-/** Rules that are allowed, with a reason, above a declaration. */
-export function allowedRules({ leadingComments }: DefinitionCall): Set<string> {
-  return new Set(
-    leadingComments.flatMap(({ text }) => {
-      const [, rule = "", reason = ""] = ALLOWANCE.exec(text.trim()) ?? [];
-      return reason.trim() === "" ? [] : [rule];
-    }),
-  );
-}
-
-interface Comment {
-  readonly at: Span;
-  readonly text: string;
-  /** The mechanisms below it: several where a loop or a helper declares them by one piece of text. */
-  readonly names: Set<string>;
-  /** Where the findings of a robot below it sit. */
-  readonly robots: Span[];
-}
-
-function listComments({ mechanisms, robots }: Declared): Comment[] {
-  const comments = new Map<string, Comment>();
-  const commentsAbove = ({ leadingComments }: DefinitionCall): Comment[] =>
-    leadingComments.map(({ text, span }) => {
-      const key = `${span.start} ${span.file}`;
-      const comment = comments.get(key) ?? { at: span, text, names: new Set(), robots: [] };
-      comments.set(key, comment);
-      return comment;
-    });
-  for (const { name, call } of mechanisms) for (const { names } of commentsAbove(call)) names.add(name);
-  for (const { at, call } of robots) for (const comment of commentsAbove(call)) comment.robots.push(at);
-  return [...comments.values()];
 }
 
 function isAt({ at }: Finding, { file, start, end }: Span): boolean {

@@ -3,6 +3,7 @@ import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
 import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, FileEvaluation, Span, Value } from "../evaluator/value.js";
+import { type AllowanceComment, listAllowances } from "./allowanceComments.js";
 import type { AnalysedMechanism, AnalysedMotor, AnalysedRobot } from "./analysis.js";
 
 export interface Declared {
@@ -11,6 +12,10 @@ export interface Declared {
   readonly robots: readonly DeclaredRobot[];
   /** Those of which a value is unknown or refused. */
   readonly unknownRobots: readonly RobotCall[];
+  /** Calls that declare several mechanisms by one piece of text, as in a loop or a helper: a finding there must say which it means. */
+  readonly shared: readonly DefinitionCall[];
+  /** Comments above mechanisms and robots that allow something. */
+  readonly allowances: readonly AllowanceComment[];
 }
 
 /** Where a robot is declared. */
@@ -27,7 +32,8 @@ export function createCollector(): (evaluations: Iterable<FileEvaluation>) => De
     const all = [...evaluations].map((evaluation) => {
       const before = known.get(evaluation);
       if (before !== undefined) return before;
-      const declared = declaredBy(evaluation.calls);
+      const found = declaredBy(evaluation.calls);
+      const declared = { ...found, shared: listShared(found), allowances: listAllowances(found.mechanisms, found.robots) };
       known.set(evaluation, declared);
       return declared;
     });
@@ -36,11 +42,25 @@ export function createCollector(): (evaluations: Iterable<FileEvaluation>) => De
       motors: all.flatMap(({ motors }) => motors),
       robots: all.flatMap(({ robots }) => robots),
       unknownRobots: all.flatMap(({ unknownRobots }) => unknownRobots),
+      shared: all.flatMap(({ shared }) => shared),
+      allowances: all.flatMap(({ allowances }) => allowances),
     };
   };
 }
 
-function declaredBy(calls: readonly DefinitionCall[]): Declared {
+type DeclaredThings = Omit<Declared, "shared" | "allowances">;
+
+function listShared({ mechanisms }: DeclaredThings): DefinitionCall[] {
+  const counts = new Map<string, number>();
+  for (const { at } of mechanisms) counts.set(keyOf(at), (counts.get(keyOf(at)) ?? 0) + 1);
+  return mechanisms.flatMap(({ at, call }) => ((counts.get(keyOf(at)) ?? 0) > 1 ? [call] : []));
+}
+
+function keyOf({ file, start, end }: Span): string {
+  return `${start} ${end} ${file}`;
+}
+
+function declaredBy(calls: readonly DefinitionCall[]): DeclaredThings {
   return {
     mechanisms: calls
       .filter((call) => call.definition === "mechanism")

@@ -96,9 +96,9 @@ export function createJudge(): (declared: Declared) => Judged {
     told.set(one.call, result);
     return result;
   };
-  return ({ mechanisms, motors, robots }) => {
+  return ({ mechanisms, motors, robots, shared }) => {
     const findings: Finding[] = [];
-    const isShared = sharedPlaces(mechanisms);
+    const sharing = new Set(shared);
     const lending = indexRobots(robots);
     const judged = mechanisms.map((one): AnalysedMechanism => {
       const { declared } = one;
@@ -106,7 +106,7 @@ export function createJudge(): (declared: Declared) => Judged {
       if (isImpossible(declared.motor)) {
         return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
       }
-      const result = tell(one, declared, lending.get(declared), isShared(one.at));
+      const result = tell(one, declared, lending.get(declared), sharing.has(one.call));
       findings.push(...result.findings);
       return result.mechanism;
     });
@@ -164,14 +164,6 @@ function toFinding(
 ): Finding {
   const related = comesFrom(call, verdict.blames ?? []);
   return { rule: rule.id, level: verdict.level ?? rule.level, mechanism, message: verdict.message, at, related };
-}
-
-/** Where a loop or a helper declares several mechanisms by one piece of text: a finding there must say which of them it means. */
-function sharedPlaces(mechanisms: Declared["mechanisms"]): (at: Span) => boolean {
-  const counts = new Map<string, number>();
-  const keyOf = ({ file, start, end }: Span): string => `${start} ${end} ${file}`;
-  for (const { at } of mechanisms) counts.set(keyOf(at), (counts.get(keyOf(at)) ?? 0) + 1);
-  return (at) => (counts.get(keyOf(at)) ?? 0) > 1;
 }
 
 export function tellWhyUnknown(call: DefinitionCall): string {
