@@ -2,7 +2,9 @@
  * The equations of motion of one mechanism that turns: current, torque and acceleration with their derivatives.
  *
  * No mode flags: the current is the least of what line, limit and grip give, and every formula changes where it meets the next,
- * so that the rates stay continuous. Deliberately not here: standstill and motion without inertia (stillMotion.ts), heat and
+ * so that the rates stay continuous. The winding's inductance is left out: that holds where L/R is a small part of the mechanical time
+ * constant, as in geared motors with brushes (about 1 ms against 10 ms to seconds), and costs about L/R of the time; where the two are
+ * alike only steady speeds hold (test/model/inductance.test.ts). Deliberately not here: standstill and motion without inertia (stillMotion.ts), heat and
  * protection (motionSystem.ts).
  */
 import { BY_HEAT, BY_PROGRESS, BY_SPEED, BY_TIME, type Instant, setConditions, setGradient } from "./instant.js";
