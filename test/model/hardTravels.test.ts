@@ -141,6 +141,36 @@ describe("wheels", () => {
   });
 });
 
+describe("random mechanisms of every kind", () => {
+  const timed = (drive: Drive): number => solveTravel(drive)?.timeS ?? Number.POSITIVE_INFINITY;
+  const factor = fc.double({ min: 1, max: 1.6, noNaN: true });
+  const supplied = someDrive.map((drive) => ({
+    ...drive,
+    supply: drive.supply ?? { openCircuitV: drive.motor.voltageV, resistanceOhm: 0, peukert: 1 },
+  }));
+
+  it("are never quicker to arrive under more friction", () => {
+    fc.assert(
+      fc.property(someDrive, factor, (drive, more) => {
+        const slower = timed({ ...drive, dragNm: drive.dragNm * more + (more - 1) });
+        expect(slower).toBeGreaterThanOrEqual(timed(drive) * (1 - 2e-8));
+      }),
+      { numRuns: 200, seed: 5 },
+    );
+  }, 60_000);
+
+  it("are never slower to arrive on more voltage", () => {
+    fc.assert(
+      fc.property(supplied, factor, (drive, more) => {
+        const { openCircuitV } = drive.supply;
+        const raised = timed({ ...drive, supply: { ...drive.supply, openCircuitV: openCircuitV * more } });
+        expect(raised).toBeLessThanOrEqual(timed(drive) * (1 + 2e-8));
+      }),
+      { numRuns: 200, seed: 6 },
+    );
+  }, 60_000);
+});
+
 describe("random mechanisms with heat, ramp and a breaker", () => {
   it("are hardly ever given up", () => {
     const draws = fc.tuple(someDrive, fc.double({ min: 1e-3, max: 0.5, noNaN: true }), fc.boolean());
