@@ -9,6 +9,11 @@ export function nearestStop(stops: readonly number[], abscissa: number): number 
   return best;
 }
 
+/** A key where stops lie below each other, as one for stops that lie beside each other. */
+export function downwards(key: string): string {
+  return { ArrowDown: "ArrowRight", ArrowUp: "ArrowLeft", PageDown: "PageUp", PageUp: "PageDown" }[key] ?? key;
+}
+
 /** The cursor after a key: an abscissa, null for none; `undefined` leaves the key to the page. Without a cursor the first step goes to `restsAt`. */
 export function cursorAfterKey(
   key: string,

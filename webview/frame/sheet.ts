@@ -21,6 +21,8 @@ export interface Sheet {
   readonly plots: readonly PlotPart[];
   /** What lies across, for the cursor's own name: "Torque". */
   readonly across: string;
+  /** Stops lie below each other: the key down leads to the next. Absent: they lie beside each other. */
+  readonly downwards?: true;
   /** Where the cursor can stand, rising, SI. */
   readonly stops: readonly number[];
   /** Where the read-out stands, and the cursor at its first step; SI. */

@@ -19,7 +19,7 @@ import type { View } from "../views/view.js";
 import { createActionButtons } from "./actionButtons.js";
 import { createChoices } from "./choices.js";
 import { csvOf } from "./csv.js";
-import { cursorAfterKey, nearestStop } from "./cursorKeys.js";
+import { cursorAfterKey, downwards, nearestStop } from "./cursorKeys.js";
 import { buildLayout } from "./layout.js";
 import { drawPicture } from "./picture.js";
 import { createPlotRow } from "./plotRow.js";
@@ -190,7 +190,8 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
   parts.plots.addEventListener("keydown", (event) => {
     if (sheet === undefined || event.altKey || event.ctrlKey || event.metaKey) return;
     if (zoom.onKey(event, around.memory().cursor ?? sheet.restsAt)) return event.preventDefault();
-    const cursor = cursorAfterKey(event.key, around.memory().cursor, sheet.stops, sheet.restsAt);
+    const key = sheet.downwards ? downwards(event.key) : event.key;
+    const cursor = cursorAfterKey(key, around.memory().cursor, sheet.stops, sheet.restsAt);
     if (cursor === undefined) return;
     event.preventDefault();
     setCursor(cursor);

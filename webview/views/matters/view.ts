@@ -39,6 +39,7 @@ export function mattersSheet({ chart, saved }: ShownChart<"matters">, memory: Vi
     ],
     plots: [barPart(bars, output), ...spreadPart(chart, system)],
     across: "Rank",
+    downwards: true,
     stops: bars.map((_, index) => index + 1),
     restsAt: 1,
     readAt: (stop) => readOut(chart, bars[stop], stop),
