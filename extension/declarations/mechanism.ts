@@ -3,6 +3,7 @@ import * as v from "valibot";
 import type { Drive } from "../model/drive.js";
 import { define } from "./define.js";
 import type { Definition } from "./definition.js";
+import { exactRatio } from "./exactRatio.js";
 import { builtBy, count, fields, NOT_NEGATIVE, name, number, POSITIVE, POSITIVE_SHARE, quantity } from "./fields.js";
 import { LOAD_KINDS, type Load } from "./loads/load.js";
 import type { Motor } from "./motor.js";
@@ -82,7 +83,7 @@ export const mechanismDefinition: Definition<[string, MechanismInput], Mechanism
     ...given,
     kind: "mechanism",
     name: label,
-    ratio: given.stages.reduce((ratio, stage) => ratio * stage.ratio, 1),
+    ratio: ratioOf(given.stages),
     si: driveOf(given),
   }),
 );
@@ -90,6 +91,12 @@ export const mechanismDefinition: Definition<[string, MechanismInput], Mechanism
 /** One driven part of the robot. */
 export function mechanism(name: string, input: MechanismInput): Mechanism {
   return mechanismDefinition.build(name, input);
+}
+
+/** With teeth everywhere rounded once. */
+function ratioOf(stages: readonly Stage[]): number {
+  const exact = exactRatio(stages);
+  return exact ? exact.numerator / exact.denominator : stages.reduce((ratio, stage) => ratio * stage.ratio, 1);
 }
 
 function driveOf(given: MechanismInput): Drive {

@@ -79,6 +79,11 @@ describe("a hover on a mechanism", () => {
     `);
   });
 
+  it("tells the fraction that the teeth make", () => {
+    expect(checkHover(hoist(75), "hoist").markdown).toContain(" · ratio 3.75 (15/4) · ");
+    expect(checkHover(hoist(80), "hoist").markdown).toContain(" · ratio 4 · ");
+  });
+
   it("tells the share of stall once the winding is hot", () => {
     const heat =
       'thermal: { windingToHousing: "1 K/W", housingToAmbient: "2 K/W", windingTime: "20 s", housingTime: "300 s", limit: "130 degC" } })';

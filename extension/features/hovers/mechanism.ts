@@ -2,6 +2,7 @@
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
 import { sensitivitiesOf } from "../../analysis/sensitivity.js";
 import { spreadOf } from "../../analysis/spread.js";
+import { exactRatio } from "../../declarations/exactRatio.js";
 import type { DefinitionCall, Span } from "../../evaluator/value.js";
 import { bestEfficiencyPoint, greatestPowerPoint } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
@@ -56,7 +57,7 @@ function describeMechanism(
   return writeBlock({
     verdict: `${verdict.words}: ${[verdict.share, ...verdict.notes].filter((part) => part !== undefined).join(" · ")}`,
     lines: [
-      `${name} · ${motorsOf(drive)} · ratio ${writeNumber(numbers.ratio)} · ${whereOf(drive, mechanism)}`,
+      `${name} · ${motorsOf(drive)} · ${ratioOf(mechanism)} · ${whereOf(drive, mechanism)}`,
       ...outputOf(mechanism),
       ...(sinceCommit === undefined ? [] : [sinceCommit]),
     ],
@@ -86,6 +87,16 @@ function whyUnknown(analysis: Analysis, mechanism: AnalysedMechanism): readonly 
     .map(({ message }) => message);
   return theirs.length > 0 ? theirs : mechanism.notChecked;
 }
+
+/** With the fraction that the teeth make, where it is no whole number. */
+function ratioOf({ declared, numbers }: AnalysedMechanism): string {
+  const exact = exactRatio(declared?.stages ?? []);
+  const fraction = exact === undefined || exact.denominator === 1 ? "" : ` (${exact.numerator}/${exact.denominator})`;
+  return `ratio ${writeNumber(numbers?.ratio ?? 1)}${fraction.length > LONGEST_FRACTION ? "" : fraction}`;
+}
+
+/** With its brackets; a longer one tells nobody anything. */
+const LONGEST_FRACTION = 12;
 
 function motorsOf({ motorCount }: Drive): string {
   return motorCount === 1 ? "1 motor" : `${motorCount} motors`;
