@@ -2,19 +2,17 @@
 // it was hidden and after a reload. Its numbers are the command's, and those of a calculation by hand.
 
 import assert from "node:assert/strict";
-import { readFile } from "node:fs/promises";
-import { join } from "node:path";
 import type { Frame } from "playwright-core";
 import { three } from "../../support/handNumbers.js";
 import type { Editor } from "../editor.js";
 import { type HandPoint, trayHoist } from "../host/handDemo.js";
+import { CONTENT, openAtCaret, openPanelBy, saveBy } from "../panel.js";
 import { plainFolder } from "../paths.js";
 import { mechanismIn, reportOn } from "../reportOn.js";
 import { waitUntil } from "../waitUntil.js";
 import { workbench } from "./session.js";
 
 const SHOW = "Loadmark: Show Operating Point";
-const CONTENT = "#chart .content:not([hidden])";
 const SOON = { timeout: 3000 };
 const PANEL_TAB = '.tab[aria-label^="Operating Point"]';
 
@@ -23,11 +21,7 @@ describe("the chart panel", () => {
     const editor = await openAtCaret("mechanisms/trayHoist.ts", "stages");
     await editor.runCommand(SHOW);
     await waitForNeeded(editor, "tray hoist", trayHoist());
-    const frame = await editor.webview(CONTENT);
-    await frame.getByRole("button", { name: "Save numbers (CSV)" }).click();
-    const name = "tray-hoist-operating-point.csv";
-    await confirmSaving(editor, name);
-    const csv = await readSaved(editor, name);
+    const csv = await saveBy(editor, "Save numbers (CSV)", "tray-hoist-operating-point.csv");
     const needed = csv
       .toString("utf8")
       .split("\r\n")
@@ -50,11 +44,8 @@ describe("the chart panel", () => {
   it("saves a picture", async () => {
     const editor = await openAtCaret("mechanisms/lidArm.ts", "stages");
     await editor.runCommand(SHOW);
-    const frame = await editor.webview(CONTENT);
-    await frame.getByRole("button", { name: "Save picture (PNG)" }).click();
-    const name = "lid-arm-operating-point.png";
-    await confirmSaving(editor, name);
-    assert.equal((await readSaved(editor, name)).subarray(1, 4).toString("latin1"), "PNG");
+    const picture = await saveBy(editor, "Save picture (PNG)", "lid-arm-operating-point.png");
+    assert.equal(picture.subarray(1, 4).toString("latin1"), "PNG");
   });
 
   it("follows the caret to another mechanism, and keeps it where there is none", async () => {
@@ -98,11 +89,11 @@ describe("the chart panel", () => {
 
   it("opens from a lens, a hover's link and the view, each for its own mechanism", async () => {
     const editor = await openAtCaret("mechanisms/trayHoist.ts", "stages");
-    await openPanelBy(editor, () => editor.page.locator(".codelens-decoration a").first().click(SOON));
+    await openPanelBy(editor, PANEL_TAB, () => editor.page.locator(".codelens-decoration a").first().click(SOON));
     await waitForTitle(editor, "tray hoist");
     await editor.openFile("mechanisms/lidArm.ts");
     await closePanel(editor);
-    await openPanelBy(editor, async () => {
+    await openPanelBy(editor, PANEL_TAB, async () => {
       await editor.hover("lidArm =", /Chart/);
       await editor.page.locator(".monaco-hover:visible a", { hasText: "Chart" }).first().click(SOON);
     });
@@ -110,7 +101,7 @@ describe("the chart panel", () => {
     await closePanel(editor);
     await editor.page.locator('.pane-header[aria-label^="Mechanisms"]').click();
     const row = editor.page.locator(".pane .monaco-list-row", { hasText: "watering arm" });
-    await openPanelBy(editor, async () => {
+    await openPanelBy(editor, PANEL_TAB, async () => {
       await row.hover(SOON);
       await row.getByRole("button", { name: "Show Operating Point" }).click(SOON);
     });
@@ -146,25 +137,6 @@ describe("the chart panel", () => {
     assert.match((await frame.locator(".empty").textContent()) ?? "", /No mechanism is declared/);
   });
 });
-
-async function openAtCaret(file: string, text: string): Promise<Editor> {
-  const editor = await workbench().open(file);
-  await editor.waitForLens();
-  await editor.reveal(file, text);
-  return editor;
-}
-
-/** Clicks until the panel is there: lenses, hovers and rows are drawn anew while results come, and a click in between is lost. */
-async function openPanelBy(editor: Editor, click: () => Promise<void>): Promise<void> {
-  const tab = editor.page.locator(PANEL_TAB);
-  await waitUntil("the chart panel", async () => {
-    await click().catch(() => undefined);
-    return tab.waitFor({ timeout: 3000 }).then(
-      () => true,
-      () => undefined,
-    );
-  });
-}
 
 async function title(editor: Editor): Promise<string> {
   return (await (await editor.webview(CONTENT)).locator(".content h1").textContent()) ?? "";
@@ -202,17 +174,4 @@ async function expectAsLeft(editor: Editor): Promise<void> {
 async function closePanel(editor: Editor): Promise<void> {
   await editor.page.locator(PANEL_TAB).click({ button: "middle" });
   await editor.page.waitForSelector(PANEL_TAB, { state: "detached" });
-}
-
-/** Takes the place that the dialog offers. */
-async function confirmSaving(editor: Editor, name: string): Promise<void> {
-  const input = editor.page.locator(".quick-input-widget:visible .quick-input-filter input");
-  await waitUntil(`a dialog that offers ${name}`, async () =>
-    (await input.inputValue().catch(() => "")).endsWith(name) ? true : undefined,
-  );
-  await editor.page.keyboard.press("Enter");
-}
-
-function readSaved(editor: Editor, name: string): Promise<Buffer> {
-  return waitUntil(`the file ${name}`, () => readFile(join(editor.folder, name)).catch(() => undefined));
 }
