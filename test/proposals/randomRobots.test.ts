@@ -94,7 +94,7 @@ describe("proposals for random robots", () => {
           }
         }
       }),
-      { seed: 3, numRuns: 30 },
+      { seed: 3, numRuns: 40 },
     );
     // Enough of each kind that a search which finds nothing would be seen.
     for (const rule of ["stalls", "past-peak", "trips", "overheats", "late"])
