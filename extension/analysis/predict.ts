@@ -1,13 +1,14 @@
 /** The numbers that a proposal predicts, and how they are told beside those that are: what stays good or gets better, then what gets worse. */
 import type { Drive } from "../model/drive.js";
 import type { MechanismNumbers } from "../model/numbers.js";
+import { solveTravel } from "../model/travel.js";
 import type { RuleId } from "../rules/rule.js";
 import { writeNumber, writeQuantity, writeShare } from "../units/write.js";
 import type { Predicted } from "./proposal.js";
 
 const CELSIUS_ZERO_K = 273.15;
 
-export function predict({ ratio, hardest, travel, stall }: MechanismNumbers, drive: Pick<Drive, "motor">): Predicted {
+export function predict({ ratio, hardest, travel, stall }: MechanismNumbers, drive: Drive): Predicted {
   const windingPeakC = travel?.windingPeakC ?? null;
   const limitC = drive.motor.thermal?.limitC;
   return {
@@ -16,11 +17,18 @@ export function predict({ ratio, hardest, travel, stall }: MechanismNumbers, dri
     motorCurrentA: hardest.motorCurrentA,
     timeS: travel?.timeS ?? null,
     tripsAfterS: travel?.tripsAfterS ?? null,
+    tripMargin: travel === null ? null : tripMarginOf(drive, travel.tripsAfterS),
     windingPeakC,
     windingMarginK: windingPeakC === null || limitC === undefined ? null : limitC - windingPeakC,
     stalledTripsAfterS: stall.tripsAfterS,
     stalledLimitAfterS: stall.windingLimitAfterS,
   };
+}
+
+function tripMarginOf(drive: Drive, tripsAfterS: number | null): number | null {
+  if (drive.protection === undefined) return null;
+  const borne = tripsAfterS === null ? solveTravel(drive)?.carried.protection : 1;
+  return borne === undefined ? null : Math.min(Math.max(1 - borne, 0), 1);
 }
 
 /** One number that reads differently. */
@@ -50,6 +58,13 @@ export function differencesOf(was: Predicted, will: Predicted, rule: RuleId): Di
       isWorse: less,
       gone: "protection stays closed",
     }),
+    ...(rule === "trips"
+      ? differenceOf(was.tripMargin, will.tripMargin, {
+          write: writeShare,
+          say: (text) => `${text} left until it opens`,
+          isWorse: less,
+        })
+      : []),
     ...differenceOf(was.windingPeakC, will.windingPeakC, { write: celsius, say: (text) => `winding ${text}`, isWorse: more }),
     ...(rule === "unprotected" ? stallDifferences(was, will) : []),
   ];

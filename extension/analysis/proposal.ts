@@ -10,6 +10,8 @@ export interface Predicted {
   readonly timeS: number | null;
   /** In the travel; null: protection stays closed. */
   readonly tripsAfterS: number | null;
+  /** Share of what opens it that protection has left at the end of the travel, 0 where it opens; null without any. */
+  readonly tripMargin: number | null;
   readonly windingPeakC: number | null;
   /** What is left below the winding's limit in the travel, K; below 0 where it is passed. */
   readonly windingMarginK: number | null;

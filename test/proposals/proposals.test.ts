@@ -95,6 +95,22 @@ ${PRELUDE}export const fan = mechanism("fan", { motor: twelveVolt, stages: [spur
     expect(proposals.map(apply)).toEqual(proposals.map(() => []));
   });
 
+  it("tell the margins of protection and winding that they leave", () => {
+    const thermal = `thermal: { windingToHousing: "3 K/W", housingToAmbient: "9 K/W", windingTime: "8 s", housingTime: "300 s", limit: "110 degC" }`;
+    const text = HEAVY("[spur(16, 96)]", `\n  protect: breaker({ holdCurrent: "1.4 A", trips: { at: "2.8 A", after: "3 s" } }),`);
+    const { proposals } = proposalsIn(text.replace('current: "4 A" } });', `current: "4 A" }, ${thermal} });`), "trips");
+    const cleared = proposals.filter(({ edits }) => edits.length > 0);
+    expect(cleared.length).toBeGreaterThan(0);
+    for (const { predicted, summary } of cleared) {
+      if (!("windingMarginK" in predicted)) throw new Error("a mechanism's proposal predicts a mechanism's numbers");
+      expect(predicted.tripsAfterS).toBeNull();
+      expect(predicted.tripMargin).toBeGreaterThan(0);
+      expect(predicted.tripMargin).toBeLessThan(1);
+      expect(predicted.windingMarginK).toBeCloseTo(110 - (predicted.windingPeakC ?? Number.NaN), 9);
+      expect(summary).toMatch(/protection stays closed, [\d.]+ % left until it opens instead of 0 %/);
+    }
+  });
+
   it("tell the nearest miss where nothing in stock helps", () => {
     const { proposals } = proposalsIn(
       `//- loadmark.json
