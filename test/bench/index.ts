@@ -8,6 +8,7 @@ import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
 import { measureActivation } from "./activation.js";
 import { measureAnalyses } from "./analysis.js";
 import { type Beside, measureBeside, type Pair } from "./beside.js";
+import { measureCharts } from "./charts.js";
 import { measureProposals } from "./proposals.js";
 import { soak } from "./soak.js";
 import { tellNumber, tellRatio, tellSpread } from "./spread.js";
@@ -24,6 +25,7 @@ export const sections: Record<string, { readonly title: string; readonly run: (h
   proposals: { title: "what clears a finding", run: benchProposals },
   editor: { title: "beside TypeScript's server", run: benchBeside },
   client: { title: "activation and sizes", run: benchClient },
+  charts: { title: "the chart of a robot's load cycle", run: benchCharts },
   soak: { title: "10,000 edits", run: benchSoak },
 };
 
@@ -49,6 +51,25 @@ async function benchProposals(): Promise<void> {
     console.log(
       `  ${name}: ${tellSpread(time, "ms")} to ${found} proposals, ${tellNumber(candidatesPerSecond)} candidates/s${bar}`,
     );
+  }
+}
+
+async function benchCharts(): Promise<void> {
+  const { mechanisms, cycleS, moments, kilobytes, simulation, chart, page } = await measureCharts(15);
+  console.log(
+    `  ${mechanisms} mechanisms, a load cycle of ${tellNumber(cycleS)} s: simulated in ${tellSpread(simulation, "ms")}`,
+  );
+  console.log(`  its chart of ${moments} moments, ${tellNumber(kilobytes)} kB, with the simulation: ${tellSpread(chart, "ms")}`);
+  if (page === undefined) {
+    console.log("  not drawn: there is no browser");
+    return;
+  }
+  for (const [what, time] of [
+    ["a new result, checked and drawn", page.message],
+    ["a zoom", page.zoom],
+    ["a step of the cursor", page.cursor],
+  ] as const) {
+    console.log(`  ${what}: ${tellSpread(time, "ms")}, bar 50 ms: ${tellBar(time.median, 50)}`);
   }
 }
 

@@ -12,7 +12,7 @@ import { showDataTable } from "../page/dataTable.js";
 import { setShown, setText } from "../page/element.js";
 import { showEmpty } from "../page/emptyText.js";
 import { showFacts } from "../page/facts.js";
-import { showReadout } from "../page/readout.js";
+import { createReadout } from "../page/readout.js";
 import { showFindings, showSentences } from "../page/remarks.js";
 import { readTheme } from "../theme/theme.js";
 import type { View } from "../views/view.js";
@@ -60,6 +60,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     canProbe: view.probed !== undefined,
   });
   const plots = createPlotRow(parts.plots);
+  const readout = createReadout(parts.readout);
   let shown: ShownChart<V> | undefined;
   let sheet: Sheet | undefined;
   let plotsKey: string | undefined;
@@ -84,7 +85,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     if (stop < 0) return;
     const read = readAt(stop);
     plots.setCursor(cursor === null ? null : stop);
-    showReadout(parts.readout, read, theme);
+    readout.show(read, theme);
     setText(parts.spoken, cursor === null ? "" : read.spoken);
     parts.plots.setAttribute("aria-valuemin", "0");
     parts.plots.setAttribute("aria-valuemax", String(stops.length - 1));

@@ -6,7 +6,7 @@
  */
 import type { AnalysedRobot, Analysis, Finding } from "../../analysis/analysis.js";
 import type { RobotDrive } from "../../model/robotDrive.js";
-import type { RobotNumbers } from "../../model/robotSolution.js";
+import type { RobotNumbers, RobotSample } from "../../model/robotSolution.js";
 import { findingsAboutRobot, robotVerdictOf, type State } from "../verdict.js";
 import { type CycleRunOf, createCycleRuns } from "./cycleRun.js";
 import type { ChartFeature } from "./feature.js";
@@ -95,7 +95,8 @@ function powerChart(analysis: Analysis, name: string, want: PowerWant, runOf: Cy
   const whole = runOf(drive, cycle, cycleS, { fromS: 0, toS: cycleS });
   // Where the whole cycle had too much to keep, a part of it is sampled anew.
   const isPart = span.fromS > 0 || span.toS < cycleS;
-  const { samples } = isPart && whole.samples.length > FINE ? runOf(drive, cycle, cycleS, span) : whole;
+  const { samples: all } = isPart && whole.samples.length > FINE ? runOf(drive, cycle, cycleS, span) : whole;
+  const samples = isPart ? samplesAround(all, span) : all;
   const names = namesOf(robot, drive);
   const powers = names.map((_, index) => samples.map(({ powerW }) => powerW[index] ?? 0));
   const totals = samples.map(({ powerW }) => powerW.reduce((sum, one) => sum + one, 0));
@@ -149,6 +150,13 @@ function stepsOf(robot: AnalysedRobot, drive: RobotDrive): readonly CycleStep[] 
     startS = step.endS;
     return step;
   });
+}
+
+/** Those of a span, with the next one at either side, so that lines go on to the edges. */
+function samplesAround(samples: readonly RobotSample[], { fromS, toS }: Span): readonly RobotSample[] {
+  const first = samples.findIndex(({ timeS }) => timeS >= fromS);
+  const last = samples.findLastIndex(({ timeS }) => timeS <= toS);
+  return samples.slice(Math.max((first < 0 ? samples.length : first) - 1, 0), last + 2);
 }
 
 function spanWithin(wanted: Span | null, cycleS: number): Span {

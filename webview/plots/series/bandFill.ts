@@ -22,29 +22,38 @@ export function inkOf(turn: number, { stack }: Theme): string {
   return stack[turn % stack.length] ?? "gray";
 }
 
-/** Undefined where the canvas has no pattern to give. */
-export function bandFill(pen: CanvasRenderingContext2D, turn: number, theme: Theme, pixelRatio: number): CanvasPattern | string {
-  const ink = inkOf(turn, theme);
-  const ground = parseColour(theme.background);
-  const colour = parseColour(ink);
-  const isPlain = theme.stack.length === 1;
-  const tint = colour && ground && !isPlain ? writeColour(blend(colour, ground, TINT)) : theme.background;
-  const hatches = Math.floor(turn / HATCHES.length) % 2 === 0 ? HATCHES : SECOND_ROUND;
+/** Fills by their turns; the tint alone where the canvas has no pattern to give. */
+export function createBandFill(
+  pen: CanvasRenderingContext2D,
+  theme: Theme,
+  pixelRatio: number,
+): (turn: number) => CanvasPattern | string {
   const size = Math.max(4, Math.round(PITCH * pixelRatio));
+  // One tile for all: a pattern takes what is on it then.
   const tile = document.createElement("canvas");
-  tile.width = size;
-  tile.height = size;
+  [tile.width, tile.height] = [size, size];
   const brush = tile.getContext("2d");
-  if (brush === null) return tint;
-  brush.fillStyle = tint;
-  brush.fillRect(0, 0, size, size);
-  brush.strokeStyle = ink;
-  brush.fillStyle = ink;
-  brush.lineWidth = pixelRatio;
-  for (const stroke of hatches[turn % hatches.length] ?? []) paintStroke(brush, stroke, size, pixelRatio);
-  const pattern = pen.createPattern(tile, "repeat");
-  pattern?.setTransform(new DOMMatrix().scale(1 / pixelRatio));
-  return pattern ?? tint;
+  return (turn) => {
+    const ink = inkOf(turn, theme);
+    const tint = tintOf(ink, theme);
+    if (brush === null) return tint;
+    const hatches = Math.floor(turn / HATCHES.length) % 2 === 0 ? HATCHES : SECOND_ROUND;
+    brush.fillStyle = tint;
+    brush.fillRect(0, 0, size, size);
+    brush.strokeStyle = ink;
+    brush.fillStyle = ink;
+    brush.lineWidth = pixelRatio;
+    for (const stroke of hatches[turn % hatches.length] ?? []) paintStroke(brush, stroke, size, pixelRatio);
+    const pattern = pen.createPattern(tile, "repeat");
+    pattern?.setTransform(new DOMMatrix().scale(1 / pixelRatio));
+    return pattern ?? tint;
+  };
+}
+
+/** None in high contrast, where the hatch alone tells parts apart. */
+function tintOf(ink: string, { background, stack }: Theme): string {
+  const [ground, colour] = [parseColour(background), parseColour(ink)];
+  return colour && ground && stack.length > 1 ? writeColour(blend(colour, ground, TINT)) : background;
 }
 
 function paintStroke(brush: CanvasRenderingContext2D, stroke: Stroke, size: number, pixelRatio: number): void {
@@ -72,7 +81,7 @@ export function paintSwatch(turn: number): (canvas: HTMLCanvasElement, theme: Th
     const pen = canvas.getContext("2d");
     if (pen === null) return;
     pen.scale(ratio, ratio);
-    pen.fillStyle = bandFill(pen, turn, theme, ratio);
+    pen.fillStyle = createBandFill(pen, theme, ratio)(turn);
     pen.fillRect(0, 0, SWATCH.width, SWATCH.height);
     pen.strokeStyle = inkOf(turn, theme);
     pen.strokeRect(0.5, 0.5, SWATCH.width - 1, SWATCH.height - 1);

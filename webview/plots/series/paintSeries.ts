@@ -1,7 +1,7 @@
 /** Stack, limits, lines, marks and rows of a plot of series, inside its area. Words are placed by paintWords.ts. */
 import type { Theme } from "../../theme/theme.js";
 import { hatchPattern } from "../hatch.js";
-import { bandFill, inkOf } from "./bandFill.js";
+import { createBandFill, inkOf } from "./bandFill.js";
 import type { Ink, SeriesDrawing, SeriesLine, Upright } from "./drawing.js";
 import { type Frame, ROW_HEIGHT } from "./frame.js";
 
@@ -45,13 +45,14 @@ function paintStack(
 ): void {
   if (stack === null) return;
   const xs = stack.xs.map(frame.x);
+  const fill = createBandFill(pen, theme, pixelRatio);
   for (const { lower, upper, turn } of stack.bands) {
     if (upper.every((value, index) => value === lower[index])) continue;
     pen.beginPath();
     for (const [index, x] of xs.entries()) pen.lineTo(x, frame.y(upper[index] ?? 0, "left"));
     for (let index = xs.length - 1; index >= 0; index--) pen.lineTo(xs[index] ?? 0, frame.y(lower[index] ?? 0, "left"));
     pen.closePath();
-    pen.fillStyle = bandFill(pen, turn, theme, pixelRatio);
+    pen.fillStyle = fill(turn);
     pen.fill();
     pen.strokeStyle = inkOf(turn, theme);
     pen.lineWidth = 1;

@@ -30,7 +30,8 @@ export function createSeriesPlot(
 ): Plot {
   const box = pixelRatio === undefined ? canvas.parentElement : null;
   const own = { width: canvas.width, height: canvas.height };
-  const ground = document.createElement("canvas");
+  /** The plot without a cursor, kept as soon as there is one. */
+  let ground: HTMLCanvasElement | undefined;
   let theme: Theme | undefined;
   let cursor: number | null = null;
   let painted: { readonly frame: Frame; readonly width: number; readonly height: number; readonly ratio: number } | undefined;
@@ -38,12 +39,10 @@ export function createSeriesPlot(
   const paint = (): void => {
     const size = box === null ? own : { width: box.clientWidth, height: box.clientHeight };
     const ratio = pixelRatio ?? window.devicePixelRatio;
-    const pen = ground.getContext("2d");
+    const pen = canvas.getContext("2d");
     if (theme === undefined || pen === null || size.width === 0 || size.height === 0) return;
-    for (const one of [ground, canvas]) {
-      one.width = Math.round(size.width * ratio);
-      one.height = Math.round(size.height * ratio);
-    }
+    canvas.width = Math.round(size.width * ratio);
+    canvas.height = Math.round(size.height * ratio);
     if (box !== null) [canvas.style.width, canvas.style.height] = [`${size.width}px`, `${size.height}px`];
     pen.setTransform(ratio, 0, 0, ratio, 0, 0);
     const frame = frameOf(drawing, size.width, size.height, room);
@@ -51,18 +50,25 @@ export function createSeriesPlot(
     paintSeries(pen, drawing, frame, theme, ratio);
     paintWords(pen, drawing, frame, theme);
     painted = { frame, ...size, ratio };
-    show();
+    ground = undefined;
+    if (cursor !== null) showCursor(cursor);
   };
 
-  const show = (): void => {
+  const clearCursor = (): void => {
     const pen = canvas.getContext("2d");
-    if (painted === undefined || theme === undefined || pen === null) return;
-    const { frame, width, height, ratio } = painted;
+    if (painted === undefined || ground === undefined || pen === null) return;
     pen.setTransform(1, 0, 0, 1, 0, 0);
     pen.clearRect(0, 0, canvas.width, canvas.height);
     pen.drawImage(ground, 0, 0);
-    pen.setTransform(ratio, 0, 0, ratio, 0, 0);
-    if (cursor !== null && width > 0 && height > 0) paintCursor(pen, cursorAt(cursor), frame, theme);
+    pen.setTransform(painted.ratio, 0, 0, painted.ratio, 0, 0);
+  };
+
+  const showCursor = (stop: number): void => {
+    const pen = canvas.getContext("2d");
+    if (painted === undefined || theme === undefined || pen === null) return;
+    if (ground === undefined) ground = copyOf(canvas);
+    else clearCursor();
+    paintCursor(pen, cursorAt(stop), painted.frame, theme);
   };
 
   const observer = box === null ? undefined : new ResizeObserver(() => isOtherSize() && paint());
@@ -75,12 +81,21 @@ export function createSeriesPlot(
       paint();
     },
     setCursor(stop) {
+      if (stop === cursor) return;
       cursor = stop;
-      show();
+      if (stop !== null) showCursor(stop);
+      else clearCursor();
     },
     at: (px) => drawing.across.unit.toSi(painted?.frame.valueAt(px) ?? 0),
     destroy: () => observer?.disconnect(),
   };
+}
+
+function copyOf(canvas: HTMLCanvasElement): HTMLCanvasElement {
+  const copy = document.createElement("canvas");
+  [copy.width, copy.height] = [canvas.width, canvas.height];
+  copy.getContext("2d")?.drawImage(canvas, 0, 0);
+  return copy;
 }
 
 function paintCursor(pen: CanvasRenderingContext2D, { x, rings }: SeriesCursor, frame: Frame, theme: Theme): void {
