@@ -65,6 +65,8 @@ function logTicks(min: number, max: number): readonly number[] {
 const LEAST_TICKS = 5;
 
 const NOTHING = 1e-280;
+/** Values nearer to each other than this share of their size are the same. */
+const SAME = 1e-6;
 
 function extent(values: Iterable<number>, fromZero: boolean): readonly [number, number] {
   let [least, greatest] = fromZero ? [0, 0] : [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
@@ -74,7 +76,8 @@ function extent(values: Iterable<number>, fromZero: boolean): readonly [number, 
   }
   if (!Number.isFinite(least) || !Number.isFinite(greatest)) return [0, 1];
   // Below this ticks would lose their digits: nothing to show.
-  if (Math.max(Math.abs(least), Math.abs(greatest)) < NOTHING) return [0, 1];
-  if (least < greatest) return [least, greatest];
-  return least === 0 ? [0, 1] : [Math.min(least, least * 0.9, least * 1.1), Math.max(least, least * 0.9, least * 1.1)];
+  const size = Math.max(Math.abs(least), Math.abs(greatest));
+  if (size < NOTHING) return [0, 1];
+  // As good as one value: a tenth to either side of it.
+  return greatest - least > size * SAME ? [least, greatest] : [least - size / 10, greatest + size / 10];
 }
