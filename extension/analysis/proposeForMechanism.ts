@@ -17,8 +17,10 @@ import type { AnalysedMechanism, Analysis, Finding } from "./analysis.js";
 import { differencesOf, predict, tellBriefly, tellDifferences } from "./predict.js";
 import type { Proposal } from "./proposal.js";
 import type { Tally } from "./propose.js";
-import { changedBy, hasNumbers, provenBy, rankOf } from "./proveChange.js";
+import { changedBy, hasNumbers, provenBy } from "./proveChange.js";
+import { rankOf } from "./rank.js";
 import { type Place, rebuild } from "./rebuild.js";
+import { createRobotCheck, type RobotCheck } from "./robotsStayGood.js";
 import { editsFor } from "./writeChange.js";
 
 export interface MechanismQuestion {
@@ -31,6 +33,7 @@ export interface MechanismQuestion {
 interface Search extends MechanismQuestion {
   readonly mechanism: AnalysedMechanism;
   readonly facts: MechanismFacts;
+  readonly robotCheck: RobotCheck;
 }
 
 /** Candidates of one group that are solved, and of those that help, how many are tried as edits. */
@@ -45,7 +48,7 @@ export function* proposeForMechanism(question: MechanismQuestion): Generator<und
   const facts = { mechanism: mechanism.declared, drive: mechanism.drive, ...solveMechanismRuns(mechanism.drive) };
   const toothCounts = analysis.toothCounts.get(mechanism.at.file) ?? COMMON_TOOTH_COUNTS;
   const situation: Situation = { ...facts, excess: rule.judge(facts)?.excess ?? 1, toothCounts };
-  const search = { ...question, mechanism, facts };
+  const search = { ...question, mechanism, facts, robotCheck: createRobotCheck() };
   const found: Proposal[] = [];
   let missed: Miss | undefined;
   for (const group of candidateGroups(finding.rule, situation)) {
@@ -140,9 +143,9 @@ function remainingExcess({ finding, facts: before }: Search, after: MechanismFac
 }
 
 /** Writes the change, analyses the texts, and takes it only if that proves it. */
-function prove({ analysis, finding, mechanism, analyse }: Search, change: Change): Proposal | undefined {
+function prove({ analysis, finding, mechanism, analyse, robotCheck }: Search, change: Change): Proposal | undefined {
   const edits = editsFor(mechanism.call, change, analysis.snapshot);
-  const after = edits && provenBy(analysis, finding, edits, analyse);
+  const after = edits && provenBy(analysis, finding, edits, { analyse, robotCheck });
   const changed = after?.mechanisms.find(({ name }) => name === mechanism.name);
   if (edits === undefined || after === undefined || changed === undefined || !hasNumbers(changed) || !hasNumbers(mechanism))
     return undefined;

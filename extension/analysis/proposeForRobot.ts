@@ -15,6 +15,7 @@ import type { Tally } from "./propose.js";
 import { changedBy, provenBy } from "./proveChange.js";
 import { robotDriveOf } from "./robotDriveOf.js";
 import { missesOf, protectorOf, type RobotCase, robotCaseOf, type Tried, troubleIn, tryChange } from "./robotFacts.js";
+import { createRobotCheck } from "./robotsStayGood.js";
 import { type Edit, editsFor } from "./writeChange.js";
 import { editsForSteps } from "./writeSteps.js";
 
@@ -172,7 +173,7 @@ function* smallestOf(search: Search, ladder: readonly RobotSetting[]): Trying<re
 function prove(search: Search, tried: Tried): Proposal | undefined {
   const { analysis, analyse, finding, analysed, one } = search;
   const edits = editsOf(search, tried.sets);
-  const after = edits && provenBy(analysis, finding, edits, analyse);
+  const after = edits && provenBy(analysis, finding, edits, { analyse, robotCheck: createRobotCheck() });
   const changed = after?.robots.find((robot) => robot.name === analysed.name);
   const { solution, drive } = changed ?? {};
   if (after === undefined || edits === undefined || solution === undefined || drive === undefined) return undefined;

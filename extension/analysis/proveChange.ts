@@ -1,32 +1,40 @@
 /**
  * Whether edits of the texts clear a finding: the texts are analysed again with them, and nothing may newly come at its level.
  *
- * Mechanisms alone first, since a robot's load cycle takes longer; what passes there is run in full.
+ * Mechanisms alone first, since a robot's load cycle takes longer.
  */
+import { allowedRules } from "./allowances.js";
 import type { Analyser } from "./analyser.js";
 import type { AnalysedMechanism, Analysis, Finding } from "./analysis.js";
 import { differencesOf, predict } from "./predict.js";
 import type { Touched } from "./proposal.js";
+import { rankOf } from "./rank.js";
+import type { RobotCheck } from "./robotsStayGood.js";
 import { type Edit, withEdits } from "./writeChange.js";
 
-/** `undefined` where the edits do not help. `analyse`: as for proposals. */
+export interface Proof {
+  /** As for proposals. */
+  readonly analyse: Analyser["analyse"];
+  readonly robotCheck: RobotCheck;
+}
+
+/** The changed texts analysed; `undefined` where the edits do not help. Robots are not run for a mechanism's finding. */
 export function provenBy(
   analysis: Analysis,
   finding: Finding,
   edits: readonly Edit[],
-  analyse: Analyser["analyse"],
+  { analyse, robotCheck }: Proof,
 ): Analysis | undefined {
   const roots = [...analysis.files.keys()];
   const texts = withEdits(analysis.snapshot, edits);
-  const before = analysis.findings;
   const alone = analyse(roots, texts, true);
-  const runs = analysis.robots.some(({ numbers }) => numbers !== undefined);
   // Without the robots' findings their allowances would count as unused.
-  const judged = runs ? alone.findings.filter(({ rule }) => rule !== "bad-declaration") : alone.findings;
-  if (isWorse(before, judged, finding)) return undefined;
-  if (!runs) return alone;
+  const hasAllowances = analysis.robots.some(({ call }) => allowedRules(call).size > 0);
+  const judged = hasAllowances ? alone.findings.filter(({ rule }) => rule !== "bad-declaration") : alone.findings;
+  if (isWorse(analysis.findings, judged, finding)) return undefined;
+  if (finding.robot === undefined && !hasAllowances) return robotCheck(analysis, alone, finding.level) ? alone : undefined;
   const after = analyse(roots, texts);
-  return isWorse(before, after.findings, finding) ? undefined : after;
+  return isWorse(analysis.findings, after.findings, finding) ? undefined : after;
 }
 
 /** The finding is still there, or another one newly at its level or above. */
@@ -38,10 +46,6 @@ function isWorse(before: readonly Finding[], after: readonly Finding[], finding:
     const rank = rankOf(one.level);
     return rank >= rankOf(finding.level) && (keyOf(one) === cleared || (ranks.get(keyOf(one)) ?? -1) < rank);
   });
-}
-
-export function rankOf(level: Finding["level"]): number {
-  return ["information", "warning", "error"].indexOf(level);
 }
 
 /** Places move with edits: a finding is the same where its rule and what it is about are. */

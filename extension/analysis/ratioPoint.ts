@@ -8,7 +8,7 @@ import type { MechanismFacts, RuleId } from "../rules/rule.js";
 import { MECHANISM_RULES } from "../rules/table.js";
 import { allowedRules } from "./allowances.js";
 import type { AnalysedMechanism, Analysis } from "./analysis.js";
-import { rankOf } from "./proveChange.js";
+import { rankOf } from "./rank.js";
 
 export interface RatioPoint {
   readonly ratio: number;

@@ -50,7 +50,7 @@ const CASES: readonly { readonly name: string; readonly rule: string; readonly t
     text: (turn) => hoist(14 + turn / 1000, { motor: "warm", driven: 48, within: "60 s" }),
   },
   {
-    name: "past its peak, in a robot whose 30 cycles are run for each proposal",
+    name: "past its peak, in a robot with a load cycle of 30 cycles",
     rule: "past-peak",
     text: (turn) =>
       `${hoist(18 + turn / 1000, {})}${hoist(6, { motor: "warm", name: "left" })}${hoist(6, { motor: "warm", name: "right" })}` +

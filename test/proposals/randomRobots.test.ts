@@ -43,7 +43,7 @@ type Random = typeof robots extends Arbitrary<infer Value> ? Value : never;
 
 /** Gears are constants of another file, which a second mechanism uses too. */
 function source({ load, size, driver, driven, protection, warm, more, floorV, cycled }: Random): string {
-  const cycle = cycled ? ', loadCycle: [{ lasts: "6 s", moving: [first] }, { lasts: "3 s", moving: [second] }], cycles: 3' : "";
+  const cycle = cycled ? ', loadCycle: [{ lasts: "6 s", moving: [first] }, { lasts: "3 s", moving: [second] }], cycles: 9' : "";
   return `//- gears.ts
 export const DRIVER = ${driver};
 export const DRIVEN = ${driven};
