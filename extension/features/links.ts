@@ -1,14 +1,21 @@
-/** Links for hovers: commands with their arguments. Which commands exist is the client's business; these are the two that texts lead to. */
+/** Links for hovers: commands with their arguments. Which commands exist is the client's business; these are those that texts lead to. */
 import type { Span } from "../evaluator/value.js";
 
 /** Opens the chart; takes the mechanism's name. */
 export const SHOW_CHART_COMMAND = "loadmark.showChart";
+
+/** The same for the map over its ratio. */
+export const SHOW_RATIO_MAP_COMMAND = "loadmark.showRatioMap";
 
 /** Shows a stretch of source; takes a span of UTF-16 offsets. */
 export const REVEAL_COMMAND = "loadmark.reveal";
 
 export function chartLink(mechanism: string): string {
   return `[Chart](${commandUri(SHOW_CHART_COMMAND, mechanism)})`;
+}
+
+export function ratioMapLink(mechanism: string): string {
+  return `[Ratio map](${commandUri(SHOW_RATIO_MAP_COMMAND, mechanism)})`;
 }
 
 /** `label` must be fixed text of the product, never a name from source. */

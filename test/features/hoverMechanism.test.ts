@@ -75,7 +75,7 @@ describe("a hover on a mechanism", () => {
       Not checked: Heat: the motor has no thermal data. Protection: none is declared.  
       Most by: torque, motor stall torque, stage 1 driven
 
-      [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
+      [Chart](command:loadmark.showChart?%5B%22tray%20hoist%22%5D) · [Ratio map](command:loadmark.showRatioMap?%5B%22tray%20hoist%22%5D) · [Motor](command:loadmark.reveal?%5B%7B%22file%22%3A%22%2Frobot%2Frobot.ts%22%2C%22start%22%3A82%2C%22end%22%3A86%7D%5D)"
     `);
   });
 
@@ -220,7 +220,7 @@ for (const [name, driven] of [["left", 80], ["right", 60]] as const) {
     const { markdown } = checkHover(hoist(80).replace("tray hoist", name), "hoist");
     expect(markdown).toContain("\\*\\*x\\*\\* &lt;img src=y&gt; \\[a\\](command:b) $ (bug) \\| gnp \\`c\\` \\# h ·");
     expect(markdown).not.toContain("\u202E");
-    expect(markdown.match(/\]\(command:/g)).toHaveLength(3);
+    expect(markdown.match(/\]\(command:/g)).toHaveLength(4);
   });
 
   it("is absent in plain code", () => {

@@ -13,7 +13,7 @@ import { writeIn, writeNumber, writeQuantity, writeShare } from "../../units/wri
 import { callsWithin } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { inputWords } from "../inputWords.js";
-import { chartLink, revealLink } from "../links.js";
+import { chartLink, ratioMapLink, revealLink } from "../links.js";
 import { positionWords } from "../positionWords.js";
 import { outputShaftOf } from "../shaft.js";
 import { type Committed, sinceCommitLine } from "../sinceCommit.js";
@@ -71,7 +71,7 @@ function describeMechanism(
       ...shared,
       ...mostBy(analysis, mechanism),
     ],
-    links: [chartLink(mechanism.name), ...linksOf(mechanism)],
+    links: [chartLink(mechanism.name), ratioMapLink(mechanism.name), ...linksOf(mechanism)],
   });
 }
 
