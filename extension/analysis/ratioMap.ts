@@ -1,7 +1,8 @@
 /**
  * A mechanism over its ratio: which ratios keep every rule, what they lead to, and the best among them.
  *
- * The whole ratio is varied by the first stage's; losses and inertias stay. Judged with the middle of ranges. Computed when asked for, a
+ * The whole ratio is varied by the first stage's; losses and inertias stay. Numbers are for the middle of ranges,
+ * rules for their worst corner, as in the analysis. Computed when asked for, a
  * ratio at a time, so that a host can stop it.
  */
 import { bestEfficiencyPoint } from "../model/bestPoints.js";
@@ -15,7 +16,7 @@ import type { RuleId } from "../rules/rule.js";
 import { MECHANISM_RULES } from "../rules/table.js";
 import type { AnalysedMechanism, Analysis } from "./analysis.js";
 import { bestWritable, fastestIn, interpolated, timeCost, type WritableRatio } from "./ratioBest.js";
-import { createPointReader, type RatioPoint } from "./ratioPoint.js";
+import { createRatioReader, type RatioPoint } from "./ratioPoint.js";
 import { keptSpans, type RatioSpan, spansBetween } from "./ratioSpans.js";
 
 export interface RatioMap {
@@ -35,6 +36,8 @@ export interface RatioMap {
   /** The best of each that can be written into the code and keeps every rule; null where there is none, or the ratio that is does no worse. */
   readonly toWrite: { readonly fastest: WritableRatio | null; readonly bestEfficiency: WritableRatio | null };
   readonly stock: readonly { readonly ratio: number; readonly words: string; readonly gears: 1 | 2; readonly keeps: boolean }[];
+  /** True where rules are judged with the middle of ranges alone. */
+  readonly middleOnly: boolean;
   /** True where any ratio can be had: a plain reduction. */
   readonly anyRatio: boolean;
 }
@@ -50,7 +53,7 @@ const SAME = 1e-6;
 export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Generator<undefined, RatioMap | undefined> {
   const { declared, drive } = mechanism;
   if (declared === undefined || drive === undefined || mechanism.numbers === undefined) return undefined;
-  const pointAt = createPointReader(analysis, mechanism, declared, drive);
+  const { pointAt, middleOnly } = createRatioReader(analysis, mechanism, declared, drive);
   const { from, to } = rangeOf(drive, declared.ratio);
   const points: RatioPoint[] = [];
   const add = (ratio: number): RatioPoint => {
@@ -99,6 +102,7 @@ export function* mapRatio(analysis: Analysis, mechanism: AnalysedMechanism): Gen
     bestEfficiency,
     toWrite: { fastest: better(quickest, search), bestEfficiency: better(efficient, byEfficiency) },
     stock: stock.map(({ ratio, change, gears }) => ({ ratio, words: change.words, gears, keeps: isKept(ratio) })),
+    middleOnly,
     anyRatio: declared.stages.some(({ kind }) => kind === "reduction"),
   };
 }

@@ -138,6 +138,24 @@ describe("the other marks", () => {
     expect(late).toMatchObject({ kept: [], fastest: null });
   });
 
+  it("judge ranges by their worst corner, as the findings do", () => {
+    const ranged = (ratio: number) => hoist(ratio).replace('mass: "6 kg"', 'mass: between("4 kg", "7 kg")');
+    const map = mapOf(analyseFixture(ranged(3)));
+    // Past the peak below N = 2·m·g·r/(0.9·Ts): with 7 kg 2.289, with the middle of 5.5 kg 1.798.
+    const edge = (2 * 7 * 9.80665 * 0.03) / (0.9 * 2);
+    expect(map.middleOnly).toBe(false);
+    expect(map.kept[0]?.from).toBeCloseTo(edge, 3);
+    expect(judged(ranged(edge * 1.01)).rules).toEqual([]);
+    expect(judged(ranged(edge * 0.99)).rules).toEqual(["past-peak"]);
+    // The numbers are those of the middle.
+    expect(map.now.stallShare).toBeCloseTo((5.5 * 9.80665 * 0.03) / (3 * 0.9 * 2), 9);
+    const many = ranged(3).replace(
+      'drumRadius: "30 mm", travel: "0.8 m"',
+      'drumRadius: between("29 mm", "31 mm"), travel: between("0.7 m", "0.8 m"), frictionForce: between("0 N", "1 N")',
+    );
+    expect(mapOf(analyseFixture(many)).middleOnly).toBe(true);
+  });
+
   it("leave out what is allowed or turned off", () => {
     const within = '\n  within: "12 s",';
     const lateSpans = (text: string) => mapOf(analyseFixture(text)).broken.find(({ rule }) => rule === "late");

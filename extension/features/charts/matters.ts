@@ -11,6 +11,7 @@ import { inputWords } from "../inputWords.js";
 import { findingsAbout, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
+import { restsOn } from "./restsOn.js";
 
 /** One declared number; null for a result that it does not move. */
 export interface MattersInput {
@@ -49,7 +50,7 @@ export function createMattersFeature(): ChartFeature<MattersChart, unknown> {
     subjects: mechanismSubjects,
     *prepare(analysis, name) {
       const mechanism = mechanismIn(analysis, name);
-      const key = mechanism && keyOf(mechanism);
+      const key = mechanism && keyOf(analysis, mechanism);
       if (mechanism === undefined || key === undefined || known.has(key)) return;
       yield;
       const inputs = inputsOf(sensitivitiesOf(analysis, mechanism));
@@ -61,7 +62,7 @@ export function createMattersFeature(): ChartFeature<MattersChart, unknown> {
     },
     chartOf(analysis, name) {
       const mechanism = mechanismIn(analysis, name);
-      const prepared = mechanism && known.get(keyOf(mechanism));
+      const prepared = mechanism && known.get(keyOf(analysis, mechanism));
       return mechanism && prepared && chartFrom(analysis, mechanism, prepared);
     },
     whyOld: whyMechanismIsOld,
@@ -73,9 +74,8 @@ function mechanismIn({ mechanisms }: Analysis, name: string): AnalysedMechanism 
   return mechanisms.find((one) => one.name === name && one.numbers !== undefined);
 }
 
-/** All that is declared, with the supply that it runs on; which ranges that has shows only in the declaration of the supply. */
-function keyOf({ name, declared, drive, assumed }: AnalysedMechanism): string {
-  return JSON.stringify([name, declared, drive?.supply, assumed]);
+function keyOf(analysis: Analysis, mechanism: AnalysedMechanism): string {
+  return JSON.stringify(restsOn(analysis, mechanism));
 }
 
 function inputsOf(sensitivities: readonly Sensitivity[]): MattersInput[] {

@@ -11,6 +11,7 @@ import type { RatioSpan } from "../../analysis/ratioSpans.js";
 import { findingsAbout, ruleWords, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
+import { restsOn } from "./restsOn.js";
 
 export interface RatioMapPoint {
   readonly ratio: number;
@@ -84,11 +85,12 @@ function mechanismIn({ mechanisms }: Analysis, name: string): AnalysedMechanism 
   return mechanisms.find((one) => one.name === name && one.numbers !== undefined);
 }
 
-/** Everything that the map rests on: the same again after an edit elsewhere. */
-function keyOf({ levels, toothCounts }: Analysis, { name, at, drive, declared, call }: AnalysedMechanism): string {
-  const stages = declared?.stages.map(({ kind, given }) => [kind, given]);
+/** Beside the declaration: what the project's settings and the allowances above it say. */
+function keyOf(analysis: Analysis, mechanism: AnalysedMechanism): string {
+  const { levels, toothCounts } = analysis;
+  const { at, call } = mechanism;
   const comments = call.leadingComments.map(({ text }) => text);
-  return JSON.stringify([name, drive, declared?.si.motor, stages, levels.get(at.file), toothCounts.get(at.file), comments]);
+  return JSON.stringify([restsOn(analysis, mechanism), levels.get(at.file), toothCounts.get(at.file), comments]);
 }
 
 function chartFrom(analysis: Analysis, mechanism: AnalysedMechanism, map: RatioMap): RatioMapChart {
@@ -102,7 +104,11 @@ function chartFrom(analysis: Analysis, mechanism: AnalysedMechanism, map: RatioM
     state,
     verdict: words,
     findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
-    assumed: mechanism.assumed,
+    assumed: [
+      ...mechanism.assumed,
+      "Losses and inertias of the stages stay as they are at every ratio.",
+      ...(map.middleOnly ? ["Over the ratio, rules are judged for the middle of each range."] : []),
+    ],
     notChecked: mechanism.notChecked,
     hasTravel: mechanism.numbers?.travel !== null,
     withinS: drive?.withinS ?? null,

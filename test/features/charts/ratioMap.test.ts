@@ -24,6 +24,13 @@ describe("the ratio map", () => {
     expect(prepare(feature, moved, "tray hoist")).toBe(0);
     expect(feature.chartOf(moved, "tray hoist", { write: null })).toBeDefined();
     expect(prepare(feature, analyseFixture(hoistSource({ mass: "6 kg" })), "tray hoist")).toBeGreaterThan(0);
+    // A range with another width, in the supply that a robot lends.
+    const lent = (high: string) =>
+      `${hoistSource().replace("  supply: pack,", "").replace('"12.6 V"', `between("12 V", "${high}")`).replace("battery,", "battery, between, robot,")}
+export default robot("cart", { supply: pack, mechanisms: [hoist] });`;
+    expect(prepare(feature, analyseFixture(lent("13 V")), "tray hoist")).toBeGreaterThan(0);
+    expect(prepare(feature, analyseFixture(lent("13 V")), "tray hoist")).toBe(0);
+    expect(prepare(feature, analyseFixture(lent("14 V")), "tray hoist")).toBeGreaterThan(0);
     // What is allowed counts no more.
     const allowed = hoistSource({ driven: 30 }).replace(
       "export const hoist",

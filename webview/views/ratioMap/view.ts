@@ -46,7 +46,7 @@ export function ratioMapSheet({ chart, saved }: ShownChart<"ratio-map">, system:
     notes: chart.motorCount > 1 ? [`Values of one motor of ${chart.motorCount}.`] : [],
     facts: factsBeside(ratioFacts(chart, system), saved === null ? [] : ratioFacts(saved, system)),
     findings: chart.findings,
-    assumed: [...chart.assumed, "Losses and inertias of the stages stay as they are at every ratio."],
+    assumed: chart.assumed,
     notChecked: chart.notChecked,
     plots: [
       part(describeStrip(chart), heightOfRows(drawings.strip.rows.length) - NO_NUMBERS, drawings.strip, []),
@@ -63,7 +63,7 @@ export function ratioMapSheet({ chart, saved }: ShownChart<"ratio-map">, system:
     zoom: null,
     probe: null,
     actionsAt: (stop) => ratioActions(chart, stop === null ? null : (chart.samples[stop]?.ratio ?? null), system),
-    footnote: "The whole ratio varied; hardest position; the middle of ranges.",
+    footnote: "The whole ratio varied; numbers at the hardest position.",
   };
 }
 
