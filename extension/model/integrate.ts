@@ -43,9 +43,13 @@ const MOST_EVENTS = 10_000;
 const LEAST_STEP = 1e-14;
 /** A kink is passed by this share of the step, so that the next step starts on the other side. */
 const PAST_KINK = 1e-9;
-/** A step refused is aimed this share past the kink inside it, unless that hardly shortens it. */
+/** A step refused is aimed this share past the kink inside it. */
 const JUST_PAST = 1e-6;
 const KINK_RETRY = 0.9999;
+/** From this error on a refused step does not show where its kink is. */
+const BENT = 100;
+/** Share of a step that tells a rate. */
+const NUDGE = 1e-7;
 /** Crossings nearer to the start of a step than this are the kink that it started from. */
 const AT_START = 1e-6;
 /** A step reaches at most this many times the straight way to a stop. */
@@ -61,7 +65,10 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
   system.accept?.();
   for (const value of tried.before) signs.push(value >= 0 ? 1 : -1);
   let length = course.firstStepS;
+  // The last step that no kink shortened, and whether one does now.
   let usual = 0;
+  let aimed = false;
+  let wasAimed = false;
 
   for (let steps = 1; tried.timeS < course.endS; steps++) {
     if (steps > course.mostSteps || tried.events > MOST_EVENTS)
@@ -74,7 +81,9 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     const error = Math.max(stepper.errorSize(system.scale, course.tolerance), LEAST_ERROR);
     const growth = growthOf(error, stepper.growthPower);
     if (!(error <= 1) && length > LEAST_STEP * Math.max(Math.abs(tried.timeS), course.firstStepS)) {
-      length = shorter(tried, length, growth, course);
+      const without = length * growth;
+      length = shorter(tried, state, length, error, course);
+      aimed ||= length !== without;
       continue;
     }
     const next = length * growth;
@@ -83,8 +92,10 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     report(tried, landing?.share ?? 1, course);
     if (!landing) {
       finish(tried, state, course, null);
-      usual = length;
-      length = next;
+      // One step cut short for a kink says nothing of the next; several in a row do.
+      if (!aimed) [usual, length] = [length, next];
+      else length = wasAimed ? next : Math.max(next, usual / 2);
+      [wasAimed, aimed] = [aimed, false];
       continue;
     }
     tried.events++;
@@ -93,6 +104,7 @@ export function integrate(system: OdeSystem, startS: number, state: Float64Array
     else landPastKink(tried, state, landing.share, course);
     // On the other side of a kink it goes on in steps like those before it, however short the last one was cut.
     const nextStepS = Math.max(next - tried.lengthS, tried.lengthS, usual / 2);
+    [wasAimed, aimed] = [aimed, false];
     finish(tried, state, course, landing.watch);
     if (stops) return { timeS: tried.timeS, stop: landing.watch, finished: true, steps, nextStepS };
     length = nextStepS;
@@ -132,27 +144,33 @@ function reachOfStops({ system, start, before }: TriedStep): number {
 }
 
 /** A step refused for a kink inside it is tried again to just past that kink, where the kink cannot disturb it any more. */
-function shorter(tried: TriedStep, length: number, growth: number, course: Course): number {
+function shorter(tried: TriedStep, state: Float64Array, length: number, error: number, course: Course): number {
   const { system, stepper } = tried;
-  if (!Number.isFinite(stepper.end[0] as number)) return length * growth;
+  const usual = length * growthOf(error, stepper.growthPower);
+  if (!Number.isFinite(stepper.end[0] as number)) return usual;
   system.prepare(tried.timeS + length, stepper.end, tried.end, tried.after, course.stiff);
   let share = 1;
   for (let i = 0; i < system.watches.length; i++) {
-    if ((system.watches[i] as Watch).kind === "kink") share = Math.min(share, kinkShare(tried, i));
+    if ((system.watches[i] as Watch).kind !== "kink") continue;
+    const shown = firstCrossing(tried, i);
+    if (shown === null || shown < AT_START) continue;
+    // A kink far inside bends the dense output so much that it may be shown too late: the rates of the start then say more.
+    const ahead = error > BENT ? aheadByRates(tried, state, i) : null;
+    share = Math.min(share, ahead === null ? shown : Math.min(shown, Math.max(ahead, shown / 2)));
   }
-  return share < KINK_RETRY ? length * share * (1 + JUST_PAST) : length * growth;
+  return share < KINK_RETRY ? length * share * (1 + JUST_PAST) : usual;
 }
 
-/**
- * Where inside a refused step a kink is worth aiming at. A kink far ahead of the step's end has bent the dense output so much that it
- * may be shown anywhere: twice the way to it along a straight line then reaches past it, and the next try sees it better.
- */
-function kinkShare(tried: TriedStep, i: number): number {
-  const share = firstCrossing(tried, i);
-  if (share === null || share < AT_START) return 1;
-  const [before, after] = [Math.abs(tried.before[i] as number), Math.abs(tried.after[i] as number)];
-  const straight = before / (before + after);
-  return straight > AT_START ? Math.min(share, 2 * straight) : share;
+/** Share of the step at which watch i would reach 0 at the rate of its start (Newton's iteration); null: not inside the step. */
+function aheadByRates(
+  { system, start, timeS, lengthS, before, inner, watched }: TriedStep,
+  state: Float64Array,
+  i: number,
+): number | null {
+  for (let k = 0; k < inner.length; k++) inner[k] = (state[k] as number) + NUDGE * lengthS * (start.rates[k] as number);
+  system.watch(timeS + NUDGE * lengthS, inner, watched);
+  const share = (-(before[i] as number) * NUDGE) / ((watched[i] as number) - (before[i] as number));
+  return share > AT_START && share < 1 ? share : null;
 }
 
 function growthOf(error: number, power: number): number {

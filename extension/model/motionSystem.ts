@@ -34,6 +34,8 @@ export interface MotionSystem extends OdeSystem {
 /** Below this share of the highest speed so far it stands still. */
 const STANDSTILL_SHARE = 1e-9;
 const HEAT_SCALE_K = 100;
+/** Of a protector's state, which opens at 1. */
+const PROTECTION_SCALE = 0.1;
 const UNCHECKED = 1e300;
 /** Sums are usually this share of full current over the whole time. */
 const SUM_SHARE = 0.01;
@@ -137,6 +139,8 @@ function scaleOf(plant: Plant, layout: Layout, scales: MotionScales): Float64Arr
   scale[layout.speed] = scales.speedRadPerS;
   if (layout.winding >= 0) scale[layout.winding] = HEAT_SCALE_K;
   if (layout.housing >= 0) scale[layout.housing] = HEAT_SCALE_K;
+  if (layout.protection >= 0) scale[layout.protection] = PROTECTION_SCALE;
+  if (layout.fast >= 0) scale[layout.fast] = PROTECTION_SCALE;
   scale[layout.squares] = SUM_SHARE * scales.currentA ** 2 * scales.timeS;
   scale[layout.energy] = SUM_SHARE * plant.bus.openCircuitV * plant.count * scales.currentA * scales.timeS;
   return scale;
