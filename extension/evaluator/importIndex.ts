@@ -127,7 +127,7 @@ function namesOf(file: string): string[] {
 
 function lastWord(specifier: string): string {
   const word = specifier.split("/").findLast((segment) => segment !== "");
-  return word === undefined || word === "." || word === ".." ? "" : withoutEnding(word).replace(/^#/, "");
+  return word === undefined || word === "." || word === ".." ? "" : withoutEnding(word).replace(/^[#@~$]+/, "");
 }
 
 function withoutEnding(name: string): string {

@@ -129,21 +129,24 @@ function walk(ts: TypeScript, file: string, text: string, root: ts.SourceFile, u
   const scopes = new Map<ts.Node, Scope>();
   const calls: ts.CallExpression[] = [];
   const identifiers: ts.Identifier[] = [];
-  const stack: { readonly node: ts.Node; readonly scope: Scope | undefined }[] = [{ node: root, scope: undefined }];
-  for (let item = stack.pop(); item !== undefined; item = stack.pop()) {
-    const { node } = item;
+  const nodes: ts.Node[] = [root];
+  // The scope around each of `nodes`.
+  const around: (Scope | undefined)[] = [undefined];
+  for (let node = nodes.pop(); node !== undefined; node = nodes.pop()) {
+    const outer = around.pop();
     // More than half of a tree are names, literals and keywords, which hold nothing.
     if (node.kind < ts.SyntaxKind.FirstNode) {
       if (ts.isIdentifier(node) && isReference(ts, node)) identifiers.push(node);
       continue;
     }
     if (isErased(ts, node)) continue;
-    const scope = openScope(ts, node, item.scope);
-    if (scope !== item.scope) scopes.set(node, scope);
+    const scope = openScope(ts, node, outer);
+    if (scope !== outer) scopes.set(node, scope);
     declareNames(ts, node, scope);
     if (ts.isCallExpression(node)) calls.push(node);
     ts.forEachChild(node, (child) => {
-      stack.push({ node: child, scope });
+      nodes.push(child);
+      around.push(scope);
     });
   }
   const startOf = (each: ts.Node): number => ts.getTokenPosOfNode(each, root);
