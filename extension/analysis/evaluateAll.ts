@@ -40,7 +40,7 @@ export function evaluateAll(evaluator: Evaluator, roots: readonly string[], snap
   let looked = 0;
   // What is found to pass something on joins at the end.
   for (const passer of passers) {
-    for (const importer of snapshot.importersOf?.(passer) ?? []) {
+    for (const importer of evaluator.importersOf(passer, snapshot, wanted)) {
       if (!files.has(importer) && looked++ < MOST_IMPORTERS) evaluateFrom([importer]);
       if (files.get(importer)?.passesOn?.includes(passer)) passers.add(importer);
     }

@@ -9,7 +9,7 @@ import { createImportIndex, type ImportIndex } from "../analysis/importIndex.js"
 export function createImporters(
   listFiles: () => Iterable<string>,
   read: (file: string) => string | null,
-): (file: string) => readonly string[] {
+): (file: string, aliases: readonly string[]) => readonly string[] {
   let index: ImportIndex | undefined;
   const build = (): ImportIndex => {
     const built = createImportIndex();
@@ -19,8 +19,8 @@ export function createImporters(
     }
     return built;
   };
-  return (file) => {
+  return (file, aliases) => {
     index ??= build();
-    return index.importersOf(file);
+    return index.importersOf(file, aliases);
   };
 }

@@ -28,7 +28,7 @@ export interface Module {
 
 /** What is known of the files that import a module: they may change the objects that it exports. */
 export interface Importers {
-  readonly lists: Map<string, readonly string[] | undefined>;
+  readonly lists: Map<string, { readonly aliases: readonly string[]; readonly files: readonly string[] | undefined }>;
   readonly reads: Map<string, string | null | undefined>;
   /** The objects, with what was found about them. */
   readonly guards: { readonly binding: Binding; readonly data: Data; readonly isChanged: boolean }[];

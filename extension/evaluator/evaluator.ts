@@ -6,6 +6,7 @@
  */
 import type ts from "typescript";
 import { listActivations } from "./activations.js";
+import { listAliases } from "./aliases.js";
 import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { listCallsElsewhere } from "./elsewhere.js";
@@ -26,6 +27,8 @@ const KEPT_TEXTS = 3;
 export interface Evaluator {
   /** What a file says. Never throws; microseconds when nothing that it rests on has changed. */
   evaluateFile(file: string, snapshot: Snapshot): FileEvaluation;
+  /** The files that import this one, by whatever name; what the snapshot lacks to tell is added to `wanted`. */
+  importersOf(file: string, snapshot: Snapshot, wanted: Set<string>): readonly string[];
   /** Drops what is kept about a file that is gone or no longer of interest. */
   forget(file: string): void;
 }
@@ -72,6 +75,14 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
       const evaluation = evaluations.get(module) ?? evaluateModule(ctx, module);
       evaluations.set(module, evaluation);
       return evaluation;
+    },
+    importersOf(file, snapshot, wanted) {
+      const read = (name: string) => {
+        const text = snapshot.read(name);
+        if (text === undefined) wanted.add(name);
+        return text;
+      };
+      return snapshot.importersOf?.(file, listAliases(ts, file, read) ?? []) ?? [];
     },
     forget(file) {
       sources.delete(file);

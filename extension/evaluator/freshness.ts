@@ -83,10 +83,10 @@ function isCurrent(ctx: Context, module: Module): boolean {
 /** Whether the files that import the module's objects still leave them alone, or still don't. */
 function isGuarded(ctx: Context, module: Module): boolean {
   const { lists, reads, guards } = module.importers;
-  const sameLists = [...lists].every(([file, files]) => sameFiles(ctx.snapshot.importersOf?.(file), files));
+  const sameLists = [...lists].every(([file, { aliases, files }]) => sameFiles(ctx.snapshot.importersOf?.(file, aliases), files));
   if (sameLists && [...reads].every(([file, text]) => ctx.snapshot.read(file) === text)) return true;
   // While files are missing, the evaluation must be made anew to ask for them.
-  if ([...lists.values(), ...reads.values()].includes(undefined)) return false;
+  if ([...lists.values()].some(({ files }) => files === undefined) || [...reads.values()].includes(undefined)) return false;
   lists.clear();
   reads.clear();
   return guards.every(({ binding, data, isChanged }) => (findChange(ctx, module, binding, data) !== undefined) === isChanged);

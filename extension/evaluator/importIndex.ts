@@ -1,8 +1,8 @@
 /**
  * Which files may import which, for a host that has seen the texts of a whole workspace: an exported object may be changed there.
  *
- * Compares the last words of specifiers with the names of files, so it needs no parser and no disk, and may name a file too many. None
- * is missing but those that use an alias of another name. Keeps no text.
+ * Compares the last words of specifiers with the names of files, so it needs no parser and no disk, and may name a file too many. Who uses
+ * an alias of another name is found by that name. Keeps no text.
  */
 
 export interface ImportIndex extends ImportView {
@@ -21,8 +21,8 @@ export interface ImportView {
   files(): Iterable<string>;
   /** The last words of the file's specifiers, each once, in order. */
   wordsOf(file: string): readonly string[];
-  /** Files that may import this one, sorted. */
-  importersOf(file: string): readonly string[];
+  /** Files that may import this one, sorted; `aliases`: last words that lead to it as well. */
+  importersOf(file: string, aliases?: readonly string[]): readonly string[];
 }
 
 const NONE: readonly string[] = [];
@@ -59,13 +59,14 @@ export function createImportIndex(): ImportIndex {
     has: (file) => wordsByFile.has(file),
     files: () => wordsByFile.keys(),
     wordsOf: (file) => wordsByFile.get(file) ?? NONE,
-    importersOf: (file) => capture().importersOf(file),
+    importersOf: (file, aliases) => capture().importersOf(file, aliases),
   };
 }
 
 /** Whether a specifier may lead to a file, by its last word. */
-export function mayLeadTo(specifier: string, file: string): boolean {
-  return namesOf(file).includes(lastWord(specifier));
+export function mayLeadTo(specifier: string, file: string, aliases: readonly string[]): boolean {
+  const word = lastWord(specifier);
+  return namesOf(file).includes(word) || aliases.includes(word);
 }
 
 /** Turned round when it is first asked: most views never are. */
@@ -86,9 +87,9 @@ function createView(wordsByFile: ReadonlyMap<string, readonly string[]>): Import
     has: (file) => wordsByFile.has(file),
     files: () => wordsByFile.keys(),
     wordsOf: (file) => wordsByFile.get(file) ?? NONE,
-    importersOf(file) {
+    importersOf(file, aliases = NONE) {
       filesByWord ??= turnRound();
-      const found = namesOf(file).flatMap((word) => filesByWord?.get(word) ?? []);
+      const found = [...namesOf(file), ...aliases].flatMap((word) => filesByWord?.get(word) ?? []);
       return [...new Set(found)].filter((other) => other !== file).sort();
     },
   };
@@ -118,14 +119,14 @@ function listSpecifiers(text: string): string[] {
 }
 
 /** What a specifier of this file may end with. */
-function namesOf(file: string): string[] {
+export function namesOf(file: string): string[] {
   const segments = file.split("/");
   const name = withoutEnding(segments.at(-1) ?? "");
   // An index file stands for its folder, and a package's entry for whatever the package is called.
   return name === "index" || name === "main" ? [name, segments.at(-2) ?? "", segments.at(-3) ?? "", ""] : [name];
 }
 
-function lastWord(specifier: string): string {
+export function lastWord(specifier: string): string {
   const word = specifier.split("/").findLast((segment) => segment !== "");
   return word === undefined || word === "." || word === ".." ? "" : withoutEnding(word).replace(/^[#@~$]+/, "");
 }

@@ -4,6 +4,7 @@
  * Only where the host knows who imports what; a frozen object needs no such search.
  */
 import type ts from "typescript";
+import { listAliases } from "./aliases.js";
 import { requiredSpecifier } from "./commonjs.js";
 import type { Context, Module, Target } from "./context.js";
 import { type Export, exportsOf } from "./exports.js";
@@ -13,6 +14,12 @@ import { innermost } from "./outer.js";
 import { resolveName } from "./source.js";
 
 type Exported = Extract<Target, { kind: "binding" | "expression" }>;
+/** A file whose exports hold the object, with the words that lead to it besides its own names. */
+interface Passer {
+  readonly module: Module;
+  readonly aliases: readonly string[];
+}
+
 /** Names from a file's exports inwards to the object; `export=` is all that a file exports at once. */
 type Path = readonly string[];
 
@@ -22,13 +29,20 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
   if (importersOf === undefined || flow.objects.every(isFrozen)) return undefined;
   const own = pathsOf(ctx, target);
   const paths = new Map<Module, readonly Path[]>(own.length > 0 ? [[target.module, own]] : []);
-  for (const [passer, passed] of paths) {
-    const files = importersOf.call(ctx.snapshot, passer.file);
-    home.importers.lists.set(passer.file, files);
+  const read = (file: string) => {
+    const text = ctx.snapshot.read(file);
+    home.importers.reads.set(file, text);
+    return text;
+  };
+  for (const [module, passed] of paths) {
+    const aliases = listAliases(ctx.ts, module.file, read);
+    if (aliases === undefined) return notRead(target);
+    const passer: Passer = { module, aliases };
+    const files = importersOf.call(ctx.snapshot, module.file, aliases);
+    home.importers.lists.set(module.file, { aliases, files });
     if (files === undefined) return notRead(target);
     for (const file of files) {
-      const text = ctx.snapshot.read(file);
-      home.importers.reads.set(file, text);
+      const text = read(file);
       if (text === undefined) return notRead(target);
       if (text === null) continue;
       const importer = ctx.open(file, text);
@@ -46,7 +60,7 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
 function followInto(
   outer: Search,
   importer: Module,
-  passer: Module,
+  passer: Passer,
   target: Exported,
   paths: readonly Path[],
   flow: Flow,
@@ -62,16 +76,16 @@ function followInto(
   const endsHere = search.pending.length === 0 && !isPassedOn && lists.size === before;
   if (endsHere && data !== undefined && isWhole(flow)) {
     const targets = importer.harmlessTo.get(data) ?? new Map<object, Set<Module>>();
-    importer.harmlessTo.set(data, targets.set(keyOf(target), (targets.get(keyOf(target)) ?? new Set()).add(passer)));
+    importer.harmlessTo.set(data, targets.set(keyOf(target), (targets.get(keyOf(target)) ?? new Set()).add(passer.module)));
   }
   outer.pending.push(...search.pending);
   return undefined;
 }
 
 /** Most edits leave most files as they are: what such a file does with the object is known from the last time. */
-function isKnownHarmless(importer: Module, passer: Module, target: Exported, flow: Flow): boolean {
+function isKnownHarmless(importer: Module, passer: Passer, target: Exported, flow: Flow): boolean {
   const [data] = flow.objects;
-  return data !== undefined && isWhole(flow) && importer.harmlessTo.get(data)?.get(keyOf(target))?.has(passer) === true;
+  return data !== undefined && isWhole(flow) && importer.harmlessTo.get(data)?.get(keyOf(target))?.has(passer.module) === true;
 }
 
 function keyOf(target: Exported): object {
@@ -82,7 +96,7 @@ function isWhole({ objects, wraps }: Flow): boolean {
   return objects.length === 1 && wraps.length === 0;
 }
 
-function listUses(search: Search, importer: Module, passer: Module, paths: readonly Path[], flow: Flow): void {
+function listUses(search: Search, importer: Module, passer: Passer, paths: readonly Path[], flow: Flow): void {
   const { ctx } = search;
   const { ts } = ctx;
   const { source } = importer;
@@ -139,7 +153,7 @@ function pathInJson(ts: Context["ts"], node: ts.Node): string[] {
 }
 
 /** The paths under which a file passes on what it imports from another. */
-function passedOn(ctx: Context, importer: Module, passer: Module, paths: readonly Path[]): Path[] {
+function passedOn(ctx: Context, importer: Module, passer: Passer, paths: readonly Path[]): Path[] {
   const { ts } = ctx;
   const { named, stars } = exportsOf(ts, importer.source);
   const under = (exported: string, name: string | undefined): Path[] =>
@@ -176,11 +190,11 @@ export function importBehind(
   return undefined;
 }
 
-function leadsTo(ctx: Context, from: Module, specifier: ts.StringLiteralLike, passer: Module): boolean {
-  if (!mayLeadTo(specifier.text, passer.file)) return false;
+function leadsTo(ctx: Context, from: Module, specifier: ts.StringLiteralLike, passer: Passer): boolean {
+  if (!mayLeadTo(specifier.text, passer.module.file, passer.aliases)) return false;
   const span = { file: from.file, start: from.source.startOf(specifier), end: specifier.end };
   const loaded = ctx.load(from, specifier.text, span);
-  return loaded.kind === "module" && loaded.module === passer;
+  return loaded.kind === "module" && loaded.module === passer.module;
 }
 
 function specifierOf(ts: Context["ts"], statement: ts.Statement): ts.StringLiteralLike | undefined {

@@ -145,9 +145,9 @@ export interface Snapshot {
   canonical?(file: string): string;
   /**
    * The files that import this one, as far as the workspace is known; `undefined`: not known yet. Absent: what a file exports counts
-   * as if no other file wrote to it.
+   * as if no other file wrote to it. `aliases`: last words of specifiers that lead to it, besides its own names.
    */
-  importersOf?(file: string): readonly string[] | undefined;
+  importersOf?(file: string, aliases: readonly string[]): readonly string[] | undefined;
   /** What its host knows of changes. Absent: every file is compared. */
   readonly changes?: Changes;
 }

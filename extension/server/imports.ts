@@ -5,7 +5,7 @@
  */
 import { createImportIndex, type ImportView, sameWords } from "../evaluator/importIndex.js";
 
-type ImportersOf = (file: string) => readonly string[] | undefined;
+type ImportersOf = (file: string, aliases: readonly string[]) => readonly string[] | undefined;
 
 export interface ImportsView {
   /** Sorted; `undefined` while the workspace is being read. */
@@ -55,9 +55,9 @@ export class Imports {
     }
     if (!this.#isWhole) return { importersOf: () => undefined, saved: undefined, open: undefined };
     const [now, saved] = [this.#open.capture(), this.#disk.capture()];
-    const importersOf = (file: string): string[] => {
-      const closed = saved.importersOf(file).filter((importer) => !now.has(importer));
-      return [...closed, ...now.importersOf(file)].sort();
+    const importersOf = (file: string, aliases: readonly string[]): string[] => {
+      const closed = saved.importersOf(file, aliases).filter((importer) => !now.has(importer));
+      return [...closed, ...now.importersOf(file, aliases)].sort();
     };
     return { importersOf, saved, open: now };
   }

@@ -171,7 +171,7 @@ export class Texts {
     if (this.#saved?.disk !== disk || this.#saved.imports !== imports) {
       const snapshot = this.#snapshotOf(
         (file) => disk.get(file),
-        (file) => imports?.importersOf(file),
+        (file, aliases) => imports?.importersOf(file, aliases),
       );
       this.#saved = { disk, imports, snapshot };
     }
@@ -184,8 +184,8 @@ export class Texts {
     const snapshot: Snapshot = {
       read,
       canonical: keepAnswers(canonical),
-      importersOf: keepAnswers((file) => {
-        const importers = importersOf(file);
+      importersOf: keepAnswers((file, aliases) => {
+        const importers = importersOf(file, aliases);
         return importers && keepImporters(importers, snapshot);
       }),
     };
@@ -207,13 +207,16 @@ export class Texts {
   }
 }
 
-function keepAnswers<Answer>(ask: (file: string) => Answer): (file: string) => Answer {
+function keepAnswers<Answer>(
+  ask: (file: string, aliases: readonly string[]) => Answer,
+): (file: string, aliases?: readonly string[]) => Answer {
   const answers = new Map<string, Answer>();
-  return (file) => {
-    const known = answers.get(file);
+  return (file, aliases = []) => {
+    const key = [file, ...aliases].join("\n");
+    const known = answers.get(key);
     if (known !== undefined) return known;
-    const answer = ask(file);
-    answers.set(file, answer);
+    const answer = ask(file, aliases);
+    answers.set(key, answer);
     return answer;
   };
 }

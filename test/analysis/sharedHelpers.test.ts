@@ -181,6 +181,19 @@ import { hub } from "./kit.js";
     expect(analysis.findings.map(({ rule, at }) => `${rule} ${at.file}`)).toEqual(["past-peak /robot/main.ts"]);
   });
 
+  it("by an alias of another name", () => {
+    const analysis = analyseAsHost(`//- tsconfig.json
+{ "compilerOptions": { "paths": { "parts": ["./kit.ts"] } } }
+//- kit.ts
+export * from "loadmark";
+//- main.ts
+import { mechanism, motor, roller } from "parts";
+const sheet = motor({ voltage: "12 V", noLoad: { speed: "100 rpm", current: "0.2 A" }, stall: { torque: "2 N*m", current: "4 A" } });
+export const hub = mechanism("hub", { motor: sheet, stages: [], load: roller({ torque: "0.2 N*m" }) });
+`);
+    expect(namesOf(analysis)).toEqual(["hub"]);
+  });
+
   it("are looked for no further than where they lead", () => {
     const analysis = analyseAsHost(`${HELPER.replace("make =", "unused =")}//- main.ts
 import { unused } from "./make";

@@ -1,9 +1,9 @@
 // How long it takes to find what clears a finding, from the finished analysis to the proved proposals, and how many candidates a second
 // are solved on the way. Each turn has numbers of its own, so that nothing can be remembered.
 
-import { parser as typescript } from "../support/parser.js";
 import { createAnalyser } from "../../extension/analysis/analyser.js";
 import { proposalsFor } from "../../extension/analysis/propose.js";
+import { parser as typescript } from "../support/parser.js";
 import { type Spread, spreadOf } from "./spread.js";
 
 const WARM = 5;

@@ -123,6 +123,64 @@ const GEARS = { hoist: 40 }; module.exports = { GEARS };
   });
 });
 
+describe("an exported object that others import by another name", () => {
+  const tsconfig = (paths: string) => `//- tsconfig.json\n{ "compilerOptions": { "paths": ${paths} } }\n`;
+  const changed = (specifier: string) => `//- other.ts\nimport { GEARS } from "${specifier}"; GEARS.hoist = 5;\n`;
+
+  it.each<[string, string]>([
+    ["a path alias", tsconfig('{ "numbers": ["./constants.ts"] }') + changed("numbers")],
+    ["a path alias with a sign", tsconfig('{ "@constants": ["./constants.ts"] }') + changed("@constants")],
+    ["a path alias with a gap", tsconfig('{ "our-*": ["./*"] }') + changed("our-constants")],
+    [
+      "an import name of its package",
+      `//- package.json\n{ "name": "robot", "imports": { "#numbers": { "default": "./constants.ts" } } }\n${changed("#numbers")}`,
+    ],
+  ])("through %s is followed there", (_name, more) => {
+    expect(outcome(CONSTANTS + more)).toBe("mutated");
+    expect(outcome(CONSTANTS + more.replace(" = 5", ";"))).toBe(40);
+  });
+
+  it("through a package of the workspace is followed there", () => {
+    const workspace = (
+      use: string,
+    ) => `${CONSTANTS.replaceAll("constants.ts", "core/src/index.ts").replace('"./constants"', '"./core/src/index"')}//- package.json
+{ "workspaces": ["core", "app"] }
+//- core/package.json
+{ "name": "@team/numbers", "private": true, "exports": "./src/index.ts" }
+//- node_modules/@team/numbers/package.json
+{ "name": "@team/numbers", "private": true, "exports": "./src/index.ts" }
+//- app/package.json
+{ "name": "app", "dependencies": { "@team/numbers": "*" } }
+//- app/other.ts
+import { GEARS } from "@team/numbers"; ${use}
+`;
+    const result = (use: string) => {
+      const files = splitFiles(workspace(use));
+      files.set("/node_modules/@team/numbers/src/index.ts", files.get("/core/src/index.ts") ?? "");
+      const canonical = (file: string) => file.replace("/node_modules/@team/numbers/", "/core/");
+      return outcomeOf(makeEvaluator().evaluateFile("/main.ts", { ...indexed(files), canonical }));
+    };
+    expect(result("GEARS.hoist;")).toBe(40);
+    expect(result("GEARS.hoist = 5;")).toBe("mutated");
+  });
+
+  it("is followed anew when the project's aliases change", () => {
+    const evaluator = makeEvaluator();
+    const files = splitFiles(CONSTANTS + tsconfig("{}") + changed("numbers"));
+    expect(outcomeOf(evaluator.evaluateFile("/main.ts", indexed(files)))).toBe(40);
+    files.set("/tsconfig.json", '{ "compilerOptions": { "paths": { "numbers": ["./constants.ts"] } } }');
+    expect(outcomeOf(evaluator.evaluateFile("/main.ts", indexed(files)))).toBe("mutated");
+  });
+
+  it("waits for the project's configuration", () => {
+    const files = splitFiles(CONSTANTS);
+    const read = (file: string) => (file === "/tsconfig.json" ? undefined : (files.get(file) ?? null));
+    const evaluation = makeEvaluator().evaluateFile("/main.ts", { read, importersOf: () => [] });
+    expect(outcomeOf(evaluation)).toBe("mutated");
+    expect(evaluation.wanted).toEqual(["/tsconfig.json"]);
+  });
+});
+
 describe("an edit of another file that imports the object", () => {
   const fixture = `${CONSTANTS}//- other.ts\nimport { GEARS } from "./constants"; GEARS.hoist;\n`;
 

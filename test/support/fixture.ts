@@ -36,7 +36,7 @@ export function readFixture(text: string): Fixture {
   return {
     files,
     marks: [...files].flatMap(([file, content]) => readMarks(file, content)),
-    snapshot: { read: (file) => files.get(file) ?? null, importersOf: (file) => index.importersOf(file) },
+    snapshot: { read: (file) => files.get(file) ?? null, importersOf: (file, aliases) => index.importersOf(file, aliases) },
   };
 }
 

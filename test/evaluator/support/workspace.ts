@@ -72,7 +72,7 @@ export function snapshotOf(files: ReadonlyMap<string, string>, more: Partial<Sna
 export function indexed(files: ReadonlyMap<string, string>): Snapshot {
   const index = createImportIndex();
   for (const [file, text] of files) index.set(file, text);
-  return { read: (file) => files.get(file) ?? null, importersOf: (file) => index.importersOf(file) };
+  return { read: (file) => files.get(file) ?? null, importersOf: (file, aliases) => index.importersOf(file, aliases) };
 }
 
 /** What the fixture's first file says, or that of `file`. */
