@@ -17,7 +17,15 @@ export type Step =
   /** Puts the Mechanisms view in place of the files. */
   | { readonly do: "showMechanisms" }
   /** Waits for a webview that shows what the selector asks for. */
-  | { readonly do: "expectWebview"; readonly selector: string };
+  | { readonly do: "expectWebview"; readonly selector: string }
+  /** Presses a key, so often, on what the selector finds in the webview, and waits for a text there. */
+  | {
+      readonly do: "pressInWebview";
+      readonly selector: string;
+      readonly key: string;
+      readonly times: number;
+      readonly holds: string;
+    };
 
 export interface Shot {
   /** The picture's file name, without its ending. */
@@ -41,6 +49,8 @@ const MECHANISMS_ALONE: readonly Step[] = [
 const NARROWER: Step = { do: "runCommand", title: "Decrease Editor Width" };
 
 const LIFT = "mechanisms/shelfLift.ts";
+const WHEELS = "mechanisms/driveBase.ts";
+const CARRIER = "carrier.ts";
 
 type Scene = Omit<Shot, "theme"> & { readonly themes: readonly ("dark" | "light")[] };
 
@@ -70,15 +80,44 @@ const scenes: readonly Scene[] = [
     name: "chart",
     themes: ["dark", "light"],
     file: LIFT,
-    size: { width: 1200, height: 656 },
+    size: { width: 1200, height: 850 },
     steps: [
       HIDE_SIDE_BAR,
       { do: "expectSquiggle", under: "shelfLift" },
       { do: "expectLens" },
       { do: "reveal", file: LIFT, text: "motorCount" },
       { do: "runCommand", title: "Loadmark: Show Operating Point" },
-      { do: "expectWebview", selector: "#chart .content:not([hidden])" },
+      { do: "expectWebview", selector: "#view-operating-point .content:not([hidden])" },
       NARROWER,
+      { do: "pressInWebview", selector: ".probe input", key: "ArrowLeft", times: 76, holds: "of stall" },
+    ],
+  },
+  {
+    name: "travel",
+    themes: ["dark", "light"],
+    file: WHEELS,
+    size: { width: 1200, height: 800 },
+    steps: [
+      HIDE_SIDE_BAR,
+      { do: "expectLens" },
+      { do: "reveal", file: WHEELS, text: "stages" },
+      { do: "runCommand", title: "Loadmark: Show Travel" },
+      { do: "expectWebview", selector: "#view-travel .content:not([hidden])" },
+      NARROWER,
+    ],
+  },
+  {
+    name: "power",
+    themes: ["dark", "light"],
+    file: CARRIER,
+    size: { width: 1200, height: 900 },
+    steps: [
+      HIDE_SIDE_BAR,
+      { do: "reveal", file: CARRIER, text: "loadCycle" },
+      { do: "runCommand", title: "Loadmark: Show Power by Mechanism" },
+      { do: "expectWebview", selector: "#view-power .content:not([hidden])" },
+      NARROWER,
+      { do: "pressInWebview", selector: ".plots", key: "ArrowRight", times: 1, holds: "step 5" },
     ],
   },
 ];

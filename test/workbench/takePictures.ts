@@ -93,5 +93,17 @@ async function takeStep(editor: Editor, step: Step): Promise<void> {
     case "expectWebview":
       await editor.webview(step.selector);
       return;
+    case "pressInWebview":
+      return pressInWebview(editor, step);
   }
+}
+
+async function pressInWebview(editor: Editor, step: Extract<Step, { do: "pressInWebview" }>): Promise<void> {
+  const frame = await editor.webview(step.selector);
+  await frame.locator(step.selector).focus();
+  for (let time = 0; time < step.times; time += 1) await editor.page.keyboard.press(step.key);
+  await frame.getByText(step.holds).first().waitFor();
+  // The answer to the last key, and without the ring of the focus.
+  await editor.page.waitForTimeout(1000);
+  await frame.evaluate(() => (document.activeElement as HTMLElement | null)?.blur());
 }

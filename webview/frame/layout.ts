@@ -20,6 +20,8 @@ export interface Layout {
   /** What there is to set, above the plots. */
   readonly controls: HTMLElement;
   readonly plots: HTMLElement;
+  /** Right below the plots, so that they stay where they are as it grows. */
+  readonly answers: HTMLElement;
   readonly readout: HTMLTableElement;
   readonly spoken: HTMLElement;
   readonly tableButton: HTMLButtonElement;
@@ -62,6 +64,7 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
     findings: element("ul", { class: "findings" }),
     controls: element("div", { class: "controls" }),
     plots: element("div", { class: "plots", attributes: plots }),
+    answers: element("div"),
     readout: element("table", { class: "readout", attributes: { "aria-hidden": "true" } }),
     spoken: element("p", { class: "spoken", attributes: { "aria-live": "polite" } }),
     tableButton: button("Show table"),
@@ -90,7 +93,7 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
     text: [KEYS, ...(canZoom ? [ZOOM_KEYS] : []), ...(canProbe ? [PROBE_KEYS] : [])].join(" "),
     attributes: { id: keysId },
   });
-  const picture = [parts.controls, parts.plots, parts.spoken, parts.readout, keys];
+  const picture = [parts.controls, parts.plots, parts.answers, parts.spoken, parts.readout, keys];
   const numbers = [actions, parts.tableBox];
   parts.content.append(
     element("header", {}, [parts.title, parts.verdict, parts.notes, parts.old]),

@@ -4,6 +4,8 @@ import type { SheetProbe } from "./sheet.js";
 
 export interface ProbeControl {
   readonly element: HTMLElement;
+  /** What the model answers: to be put where nothing else moves as it grows. */
+  readonly answers: HTMLElement;
   show(probe: SheetProbe | null): void;
   readonly isDragging: () => boolean;
 }
@@ -29,7 +31,7 @@ export function createProbeControl({ box, at, onProbe, onWrite }: ProbeParts): P
   const write = element("button", { text: "Write to code", attributes: { type: "button" } });
   const clear = element("button", { text: "Clear", attributes: { type: "button" } });
   const says = element("ul", { class: "says", attributes: { "aria-live": "polite" } });
-  const control = element("div", { class: "probe" }, [element("label", {}, [name, slider]), value, write, clear, says]);
+  const control = element("div", { class: "probe" }, [element("label", {}, [name, slider]), value, write, clear]);
   let probe: SheetProbe | null = null;
   let dragging = false;
 
@@ -69,6 +71,7 @@ export function createProbeControl({ box, at, onProbe, onWrite }: ProbeParts): P
 
   return {
     element: control,
+    answers: says,
     isDragging: () => dragging,
     show(next) {
       probe = next;

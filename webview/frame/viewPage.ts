@@ -167,6 +167,7 @@ export function createViewPage<V extends ViewName>(view: View<V>, around: ViewSu
     },
   });
   parts.controls.append(choices.element, zoom.element, probe.element);
+  parts.answers.append(probe.answers);
   parts.plots.after(writes.element);
 
   const savePicture = (): void => {

@@ -162,14 +162,14 @@ function dotBoxes({ dots }: SeriesDrawing, { x, y }: Frame): Box[] {
 /** A row's words stand above its bar, shortened where the panel is too narrow; they are whole in the description and the table. */
 function paintRowWords(pen: CanvasRenderingContext2D, { rows }: SeriesDrawing, { area }: Frame, theme: Theme): void {
   pen.textAlign = "left";
-  pen.fillStyle = theme.foreground;
-  pen.strokeStyle = theme.background;
-  pen.lineWidth = 4;
   for (const [index, { words }] of rows.entries()) {
     const text = shortened(pen, words, area.right - area.left);
     const y = area.top + index * ROW_HEIGHT + 8;
-    pen.strokeText(text, area.left, y);
-    pen.fillText(text, area.left, y);
+    // On plain ground: lines that end a step go between letters, not through them.
+    pen.fillStyle = theme.background;
+    pen.fillRect(area.left, y - LINE_HEIGHT / 2, pen.measureText(text).width + 3, LINE_HEIGHT);
+    pen.fillStyle = theme.foreground;
+    pen.fillText(text, area.left + 1, y);
   }
 }
 
