@@ -5,7 +5,7 @@
  */
 import { quickestRatio } from "../model/ratioSearch.js";
 import type { Change, Situation } from "./change.js";
-import { oneGear, oneMoreStage, twoGears, type Wanted } from "./gears.js";
+import { oneGear, oneMoreStage, twoGears, twoStages, type Wanted } from "./gears.js";
 import { currentLimits, lowerCommands, moreMotors, moreTime } from "./settings.js";
 
 /** Each group is asked for one change; a group marked `instead` only where the groups before it gave none. */
@@ -69,6 +69,7 @@ function gearGroups(situation: Situation, wanted: Wanted): Group[] {
   return [
     { changes: oneGear(situation, wanted) },
     { changes: twoGears(situation, wanted), instead: true },
+    { changes: twoStages(situation, wanted), instead: true },
     { changes: oneMoreStage(situation, wanted), instead: true },
   ];
 }

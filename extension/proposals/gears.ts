@@ -1,5 +1,5 @@
 /**
- * Other gears: one gear of a stage, both gears of a stage, another plain ratio, one more stage; the smallest change of ratio first.
+ * Other gears: one gear of a stage, both gears of a stage, one gear of each of two stages, another plain ratio, one more stage; the smallest change of ratio first.
  *
  * Only ratios that can help are listed: the search prunes by the factor that is needed, and simulates nothing.
  */
@@ -52,6 +52,34 @@ export function twoGears({ mechanism, toothCounts }: Gearing, wanted: Wanted): C
     })
     .sort(bySize)
     .map(({ change }) => change);
+}
+
+/** One gear of each of two stages, where one alone would not be enough. */
+export function twoStages({ mechanism, toothCounts }: Gearing, wanted: Wanted): Change[] {
+  const any = { atLeast: 0, atMost: Number.POSITIVE_INFINITY };
+  const ways = mechanism.stages.map((stage, index) =>
+    TOOTHED.has(stage.kind)
+      ? [0, 1].flatMap((argument) => toothCounts.flatMap((teeth) => withTeeth(stage, index, [[argument, teeth]], any)))
+      : [],
+  );
+  return ways
+    .flatMap((firsts, index) =>
+      ways
+        .slice(index + 1)
+        .flatMap((seconds) =>
+          firsts.flatMap((one) =>
+            seconds
+              .filter((other) => isWanted(one.factor * other.factor, wanted))
+              .map((other) => ({ factor: one.factor * other.factor, change: both(one.change, other.change) })),
+          ),
+        ),
+    )
+    .sort(bySize)
+    .map(({ change }) => change);
+}
+
+function both(one: Change, other: Change): Change {
+  return { sets: [...one.sets, ...other.sets], words: `${one.words} and ${other.words}` };
 }
 
 /** One more pair of spur gears behind the stages that are there. */

@@ -49,6 +49,19 @@ describe("proposals", () => {
     expect(proposals[0]?.predicted).toMatchObject({ stallShare: expect.closeTo(4.903325 / 5 / 2, 9) });
   });
 
+  it("are found without simulating every pair in stock", () => {
+    const analysis = analyseFixture(
+      HEAVY("[spur(16, 60, { efficiency: 1 }), spur(20, 20, { efficiency: 1 })]", '\n  within: "2 s",'),
+    );
+    for (const finding of analysis.findings.filter(({ level }) => level !== "information")) {
+      const tally = { solved: 0 };
+      proposalsFor(analysis, finding, createAnalyser(ts).analyse, tally);
+      // 29 tooth counts are 841 pairs for one stage alone, and each group is cut off.
+      expect(tally.solved).toBeGreaterThan(0);
+      expect(tally.solved).toBeLessThan(6 * 24);
+    }
+  });
+
   it("offer more motors beside it", () => {
     const { proposals } = proposalsIn(HEAVY("[spur(16, 60, { efficiency: 1 })]"), "past-peak");
     expect(proposals.map(({ edits }) => edits.map(({ newText }) => newText.trim()))).toContainEqual(["motorCount: 2,"]);
@@ -83,6 +96,22 @@ ${PRELUDE}export const fan = mechanism("fan", { motor: twelveVolt, stages: [spur
     const added = direct.proposals.find(({ summary }) => summary.startsWith("One more stage"));
     expect(added?.edits.map(({ newText }) => newText)).toContainEqual(expect.stringMatching(/^spur\(\d+, \d+\)$/));
     expect(direct.proposals.map(direct.apply)).toEqual(direct.proposals.map(() => []));
+  });
+
+  // 4.903 N·m of 2 N·m at half stall asks for 4.903 of two loss-free stages with up to 3 : 1 in stock each; from 1 : 1 and 1 : 1 no
+  // change of one stage gets there, and 3 · 2 does.
+  it("change one gear of each of two stages where one stage is not enough", () => {
+    const { proposals, apply } = proposalsIn(
+      `//- loadmark.json
+{ "toothCounts": [20, 40, 60] }
+//- robot.ts
+${HEAVY("[spur(20, 20, { efficiency: 1 }), spur(20, 20, { efficiency: 1 })]")}`,
+      "stalls",
+    );
+    expect(proposals[0]?.summary).toMatch(
+      /^Stage 1 with 20 and (40 teeth and stage 2 with 20 and 60|60 teeth and stage 2 with 20 and 40) teeth: ratio 6 instead of 1/,
+    );
+    expect(proposals.map(apply)).toEqual(proposals.map(() => []));
   });
 
   it("never touch the protection", () => {
