@@ -163,6 +163,8 @@ describe("the views of the chart's page", () => {
     const room = 57;
     const pxOf = (torqueNm: number) => box.x + room + (torqueNm / (available.stallTorqueNm * 1.06)) * (box.width - 2 * room);
     await chart.page.mouse.move(pxOf(hardest.torqueNm), box.y + 100);
+    const grip = await chart.page.locator(".plots").evaluate((element) => getComputedStyle(element).cursor);
+    assert.equal(grip, "ew-resize");
     await chart.page.mouse.down();
     await chart.page.mouse.move(pxOf(0.45), box.y + 100, { steps: 5 });
     await chart.page.mouse.up();
