@@ -10,6 +10,7 @@ import {
 import type { OperatingPointChart } from "../../extension/protocol/charts/operatingPoint.js";
 import { readMessage } from "../../extension/protocol/readMessage.js";
 import { chartIn, hoistSource, shownChart } from "../support/chartFixture.js";
+import { cartSource, powerShown, travelShown } from "../support/viewFixture.js";
 
 const WANT = { view: "operating-point", probe: null };
 const chart = chartIn(hoistSource(), "tray hoist");
@@ -41,6 +42,20 @@ describe("a chart on its way", () => {
   });
 });
 
+describe("a chart of another view on its way", () => {
+  it("arrives as it was computed, and is refused with a series that is too short or no number", () => {
+    const power = powerShown(cartSource(), "cart");
+    expect(readMessage(chartAnswerSchema, JSON.parse(JSON.stringify(power)))).toEqual(power);
+    const travel = travelShown(cartSource(), "tray hoist");
+    expect(readMessage(chartAnswerSchema, JSON.parse(JSON.stringify(travel)))).toEqual(travel);
+    const { chart } = travel;
+    for (const currentA of [chart.currentA.slice(1), chart.currentA.map(() => Number.NaN), chart.currentA.map(String), null]) {
+      expect(readMessage(chartAnswerSchema, { ...travel, chart: { ...chart, currentA } })).toBeUndefined();
+      expect(readMessage(chartAnswerSchema, { ...power, chart: { ...power.chart, currentA } })).toBeUndefined();
+    }
+  });
+});
+
 describe("messages that are not known", () => {
   it.each([
     undefined,
@@ -69,6 +84,12 @@ describe("messages that are not known", () => {
     { type: "savePicture", fileName: "a.png", base64: "abc" },
     { type: "savePicture", fileName: "../a.png", base64: "" },
     { type: "saveTable", fileName: "/etc/passwd", csv: "" },
+    { type: "savePage", fileName: "../a.html", html: "" },
+    { type: "savePage", fileName: "a.exe", html: "" },
+    { type: "chooseUnits", units: "furlongs" },
+    { type: "writeToCode" },
+    { type: "writeToCode", want: { view: "operating-point", probe: { torqueNm: Number.NaN } } },
+    { type: "ask", want: { view: "power", span: { fromS: 0 }, cycle: "first" } },
     { type: "saveTable", fileName: "a.sh", csv: "" },
     { type: "saveTable", fileName: "a\\b.csv", csv: "" },
     { type: "trouble", what: "x".repeat(2001) },

@@ -6,7 +6,8 @@
 import { CAUTIONS } from "../page/cautions.js";
 import { LEVELS } from "../page/remarks.js";
 import { paperTheme } from "../theme/theme.js";
-import type { PlotPart, Sheet, Table } from "./sheet.js";
+import { swatchOf } from "./picture.js";
+import type { Key, PlotPart, Sheet, Table } from "./sheet.js";
 
 const PIXEL_RATIO = 2;
 /** As wide as a sheet of paper between its margins, px. */
@@ -29,6 +30,7 @@ export function printedPage(sheet: Sheet, view: string, old: string | null): str
     `<h1>${text(title)}</h1>`,
     `<p>${text([view, verdict, ...remarks].join(" · "))}</p>`,
     `<dl>${facts.map(({ name, now, was }) => `<div><dt>${text(name)}</dt><dd>${text(now)}${was === null ? "" : ` <small>was ${text(was)}</small>`}</dd></div>`).join("")}</dl>`,
+    ...keysOf(sheet.keys ?? []),
     ...plots.map((part) => `<img alt="${text(part.words)}" src="${pictureOf(part)}">`),
     `<p>${text(sheet.footnote)}</p>`,
     ...(findings.length === 0
@@ -53,10 +55,19 @@ const STYLE = [
   "dl{display:grid;grid-template-columns:repeat(4,1fr);gap:4px 12px;margin:8px 0;padding:6px 0;border:solid #999;border-width:1px 0}",
   "dt{font-size:11px}dd{margin:0;font-weight:bold}small{display:block;font-weight:normal}",
   "img{display:block;width:100%;break-inside:avoid}",
+  ".keys{display:flex;flex-wrap:wrap;gap:2px 14px;padding:0;list-style:none}.keys img{display:inline;width:18px;height:11px}",
   "table{margin-top:12px;border-collapse:collapse;font-size:10px;font-variant-numeric:tabular-nums}",
   "caption{text-align:left;font-weight:bold}th,td{padding:1px 8px 1px 0;border-bottom:1px solid #ccc;text-align:left}tr{break-inside:avoid}",
   "footer{margin-top:12px;padding-top:6px;border-top:1px solid #999;font-size:11px}",
 ].join("");
+
+function keysOf(keys: readonly Key[]): string[] {
+  if (keys.length === 0) return [];
+  const items = keys.map(
+    (key) => `<li><img alt="" src="${swatchOf(key, paperTheme()).toDataURL("image/png")}"> ${text(key.name)}</li>`,
+  );
+  return [`<ul class="keys">${items.join("")}</ul>`];
+}
 
 function listOf(heading: string, sentences: readonly string[]): string[] {
   if (sentences.length === 0) return [];

@@ -42,6 +42,8 @@ export interface Sheet {
   readonly plotsKey?: string;
   /** Null where the abscissa is always shown whole. */
   readonly zoom: Zoom | null;
+  /** What fills stand for, where a picture stands alone; absent where words stand at everything. */
+  readonly keys?: readonly Key[];
   /** A line below the picture that is saved. */
   readonly footnote: string;
 }
@@ -105,11 +107,17 @@ export interface ReadOut {
   readonly spoken: string;
 }
 
+export interface Key {
+  readonly name: string;
+  /** `pixelRatio`: the window's where absent. */
+  readonly swatch: (canvas: HTMLCanvasElement, theme: Theme, pixelRatio?: number) => void;
+}
+
 export interface ReadOutRow {
   readonly name: string;
   readonly cells: readonly string[];
   /** How it is filled in the plot; absent for what is not. */
-  readonly swatch?: (canvas: HTMLCanvasElement, theme: Theme) => void;
+  readonly swatch?: Key["swatch"];
 }
 
 export interface Table {
@@ -122,6 +130,8 @@ export interface Table {
 export interface PlotPart {
   /** Of the plot on the page, px. */
   readonly height: number;
+  /** Of the plot in a picture, where it must be as high as what is in it. */
+  readonly pictureHeight?: number;
   readonly words: string;
   readonly create: (canvas: HTMLCanvasElement, options: PlotOptions) => Plot;
 }

@@ -215,7 +215,13 @@ describe("the views of the chart's page", () => {
     await page.setContent(html);
     assert.equal(await page.locator("h1").textContent(), name);
     assert.equal(await page.locator("script").count(), 0);
-    const pictures = await page.locator("img").evaluateAll((all) => all.map((one) => (one as HTMLImageElement).naturalWidth));
+    assert.deepEqual(
+      (await page.locator(".keys li").allTextContents()).map((one) => one.trim()),
+      ["tray hoist", "boom"],
+    );
+    const pictures = await page
+      .locator("body > img")
+      .evaluateAll((all) => all.map((one) => (one as HTMLImageElement).naturalWidth));
     assert.deepEqual(pictures, [1360, 1360, 1360]);
     assert.match(
       (await page.locator("body").textContent()) ?? "",
@@ -223,6 +229,26 @@ describe("the views of the chart's page", () => {
     );
     assert.ok((await page.locator("tbody tr").count()) > 10);
     await page.close();
+  });
+
+  it("save a picture of a load cycle with all its rows, and what each fill stands for", async () => {
+    await open("power");
+    const answer = power();
+    const [protector] = answer.chart.protectors;
+    const protectors = Array.from({ length: 20 }, (_, index) => ({
+      ...protector,
+      feeds: [`part ${index}`],
+    })) as typeof answer.chart.protectors;
+    await chart.show({ ...answer, chart: { ...answer.chart, protectors } });
+    await chart.page.getByRole("button", { name: "Save picture (PNG)" }).click();
+    const { base64 } = await chart.waitForSent("savePicture");
+    const size = await chart.page.evaluate(async (content) => {
+      const bytes = Uint8Array.from(atob(content), (character) => character.charCodeAt(0));
+      const { width, height } = await createImageBitmap(new Blob([bytes], { type: "image/png" }));
+      return [width, height];
+    }, base64);
+    // Head, a line of keys, two plots of 300 px, 22 rows of 24 px with their axis, and a foot; at twice the pixels.
+    assert.deepEqual(size, [1800, 2 * (84 + 20 + 600 + (8 + 22 * 24 + 38) + 26)]);
   });
 
   it("save pictures and numbers under the view's own name", async () => {

@@ -1,4 +1,5 @@
 /** How the parts of a stack are filled: a tint and a hatch in turn, so that neighbours differ by both. */
+import type { Key } from "../../frame/sheet.js";
 import { blend, parseColour, writeColour } from "../../theme/colour.js";
 import type { Theme } from "../../theme/theme.js";
 
@@ -74,9 +75,8 @@ function paintStroke(brush: CanvasRenderingContext2D, stroke: Stroke, size: numb
 }
 
 /** Paints a small key of a part of a stack. */
-export function paintSwatch(turn: number): (canvas: HTMLCanvasElement, theme: Theme) => void {
-  return (canvas, theme) => {
-    const ratio = window.devicePixelRatio;
+export function paintSwatch(turn: number): Key["swatch"] {
+  return (canvas, theme, ratio = window.devicePixelRatio) => {
     [canvas.width, canvas.height] = [Math.round(SWATCH.width * ratio), Math.round(SWATCH.height * ratio)];
     const pen = canvas.getContext("2d");
     if (pen === null) return;

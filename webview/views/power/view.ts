@@ -4,6 +4,7 @@ import type { ShownChart, ViewMemory } from "../../../extension/protocol/charts/
 import type { UnitSystem } from "../../../extension/units/systems.js";
 import { writeQuantity } from "../../../extension/units/write.js";
 import { factsBeside, type PlotPart, type Sheet } from "../../frame/sheet.js";
+import { paintSwatch } from "../../plots/series/bandFill.js";
 import type { SeriesDrawing, Side } from "../../plots/series/drawing.js";
 import { heightOfRows, roomFor } from "../../plots/series/frame.js";
 import { createSeriesPlot, type SeriesCursor } from "../../plots/series/seriesPlot.js";
@@ -35,6 +36,10 @@ export function powerSheet({ chart, saved }: ShownChart<"power">, memory: ViewMe
     create: (canvas, options) =>
       createSeriesPlot(canvas, { drawing, room, cursorAt: cursorIn(drawing, rings, stops, timeAt) }, options),
   });
+  const statesPart = (drawing: SeriesDrawing): PlotPart => {
+    const height = heightOfRows(drawing.rows.length);
+    return { ...part(describeStates(drawing.rows), height, drawing), pictureHeight: height };
+  };
   return {
     title: chart.robot,
     state: chart.state,
@@ -47,9 +52,7 @@ export function powerSheet({ chart, saved }: ShownChart<"power">, memory: ViewMe
     plots: [
       part(describePowerPlot(chart), 250, drawings.power),
       part(describeSupply(chart), drawings.states === null ? 190 : 150, drawings.supply, ["right", "left"]),
-      ...(drawings.states === null
-        ? []
-        : [part(describeStates(drawings.states.rows), heightOfRows(drawings.states.rows.length), drawings.states)]),
+      ...(drawings.states === null ? [] : [statesPart(drawings.states)]),
     ],
     across: "Time",
     stops: stops.map((index) => chart.timesS[index] ?? 0),
@@ -66,6 +69,7 @@ export function powerSheet({ chart, saved }: ShownChart<"power">, memory: ViewMe
       greatest: chart.cycleS,
       words: (from, to) => `${writeQuantity(from, "time")} to ${writeQuantity(to, "time")}`,
     },
+    keys: chart.mechanisms.map(({ name }, turn) => ({ name, swatch: paintSwatch(turn) })),
     footnote: "At the supply's terminals; below 0: sent back.",
   };
 }
