@@ -153,7 +153,7 @@ function prove({ analysis, finding, mechanism, analyse, robotCheck }: Search, ch
   const will = predict(changed.numbers, changed.drive);
   const differences = differencesOf(predict(mechanism.numbers, mechanism.drive), will, finding.rule);
   const words = capital(change.words);
-  const names = touches.map((one) => one.mechanism);
+  const names = touches.map(({ brief }) => brief);
   return {
     finding,
     mechanism: mechanism.name,

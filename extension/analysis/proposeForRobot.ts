@@ -185,7 +185,7 @@ function prove(search: Search, tried: Tried): Proposal | undefined {
   // Whose current is limited is named already.
   const limitedNames = tried.sets.flatMap((set) => (set.kind === "limit" ? [one.model.mechanisms[set.mechanism]?.name] : []));
   const others = touches.filter(({ mechanism, told }) => !limitedNames.includes(mechanism) || told !== mechanism);
-  const names = touches.map(({ mechanism }) => mechanism).filter((name) => !limitedNames.includes(name));
+  const names = touches.flatMap(({ mechanism, brief }) => (limitedNames.includes(mechanism) ? [] : [brief]));
   return {
     finding,
     mechanism: null,

@@ -6,7 +6,7 @@
 import { allowedRules } from "./allowances.js";
 import type { Analyser } from "./analyser.js";
 import type { AnalysedMechanism, Analysis, Finding } from "./analysis.js";
-import { differencesOf, predict } from "./predict.js";
+import { type Difference, differencesOf, predict } from "./predict.js";
 import type { Touched } from "./proposal.js";
 import { rankOf } from "./rank.js";
 import type { RobotCheck } from "./robotsStayGood.js";
@@ -57,6 +57,8 @@ function keyOf({ rule, mechanism, robot, at }: Finding): string {
 export interface Changed extends Touched {
   /** Its name, with how its numbers change. */
   readonly told: string;
+  /** Its name, with the new number that tells most. */
+  readonly brief: string;
 }
 
 /** Every mechanism whose numbers the edits for a finding changed, but the one that it is about. */
@@ -73,9 +75,16 @@ export function changedBy(before: Analysis, after: Analysis, { rule, mechanism: 
         mechanism: one.name,
         predicted,
         told: numbers.length === 0 ? one.name : `${one.name} (${numbers.slice(0, MOST_TOLD).join(", ")})`,
+        brief: briefly(one.name, differences),
       },
     ];
   });
+}
+
+/** The share of stall, where it changes: it says at once how the mechanism copes. */
+function briefly(name: string, differences: readonly Difference[]): string {
+  const most = differences.find(({ now }) => now.endsWith("of stall")) ?? differences[0];
+  return most === undefined ? name : `${name} (${most.now})`;
 }
 
 /** Numbers told of each mechanism that is touched beside; the report holds all. */

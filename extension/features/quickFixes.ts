@@ -46,7 +46,7 @@ export function quickFixesAt(
 }
 
 /** A menu's line: room for the numbers that a proposal predicts. */
-const LONGEST_TITLE = 110;
+const LONGEST_TITLE = 180;
 
 function proposedFix(finding: Finding, { title, edits }: Proposal): QuickFix {
   return { title: plainText(title, LONGEST_TITLE), finding, kind: "propose", edits };
