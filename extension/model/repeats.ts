@@ -15,8 +15,9 @@ import { solveTravel } from "./travel.js";
 import type { TravelResult } from "./travelResult.js";
 
 export interface RepeatedRun {
-  /** Highest winding temperature of a cycle in the periodic state, °C; null without thermal data or where it runs away. */
+  /** Highest winding temperature of a cycle in the periodic state, °C; null without thermal data or where there is none. */
   readonly windingPeakC: number | null;
+  /** It gets ever hotter, or so hot that it does not arrive any more. */
   readonly runsAway: boolean;
   /** From the first start, s; null: protection stays closed. */
   readonly tripsAfterS: number | null;
@@ -44,10 +45,10 @@ export function solveRepeats(drive: Drive): RepeatedRun | null {
   let elapsedS = drive.load.kind === "flywheel" ? opening.coveredS : 0;
   let tripsAfterS = drive.load.kind === "flywheel" ? opening.opensAfterS : null;
   let fits = true;
-  let periodic: Periodic | null | undefined;
+  let periodic: Periodic | undefined;
   for (let cycle = 0; cycle < FOLLOWED_TO_OPENING; cycle++) {
     const run = oneCycle(drive, plant, state, drive.everyS);
-    if (!run) return null;
+    if (!run) return cycle === 0 ? null : { windingPeakC: null, runsAway: true, tripsAfterS, fits: false };
     if (tripsAfterS === null && run.opensAfterS !== null) tripsAfterS = elapsedS + run.opensAfterS;
     fits &&= run.fits;
     const rests = Math.abs(run.end.protection - state.protection) < SETTLED;
@@ -59,11 +60,10 @@ export function solveRepeats(drive: Drive): RepeatedRun | null {
     if (!rests && cycle < FOLLOWED) continue;
     // What is left is slow heat. It drifts one way, so that a protector closed now and in the end stays closed in between.
     periodic ??= jumpToPeriodic(drive, plant, state, drive.everyS);
-    if (tripsAfterS !== null || !periodic?.opens) break;
+    if (tripsAfterS !== null || !periodic.opens) break;
   }
   periodic ??= jumpToPeriodic(drive, plant, state, drive.everyS);
-  if (periodic === null) return null;
-  return { windingPeakC: periodic.windingPeakC, runsAway: periodic.runsAway, tripsAfterS, fits };
+  return { windingPeakC: periodic.windingPeakC, runsAway: periodic.runsAway, tripsAfterS, fits: fits && periodic.fits };
 }
 
 interface Cycle {
@@ -121,25 +121,26 @@ function leftToRise(plant: Plant, before: CarriedState, run: Cycle): number {
   return Math.max(Math.abs(windingK), Math.abs(housingK));
 }
 
-interface Periodic extends Pick<RepeatedRun, "windingPeakC" | "runsAway"> {
+interface Periodic extends Omit<RepeatedRun, "tripsAfterS"> {
   /** Whether protection opens in the last cycle looked at. */
   readonly opens: boolean;
 }
 
-/** Skips the many cycles of a slow housing: each jump adds what a linear network would still rise. null: hot, it does not arrive any more. */
-function jumpToPeriodic(drive: Drive, plant: Plant, from: CarriedState, everyS: number): Periodic | null {
+/** Skips the many cycles of a slow housing: each jump adds what a linear network would still rise. */
+function jumpToPeriodic(drive: Drive, plant: Plant, from: CarriedState, everyS: number): Periodic {
   const network = heatNetworkOf(plant.motor);
-  if (!network) return { windingPeakC: null, runsAway: false, opens: false };
+  if (!network) return { windingPeakC: null, runsAway: false, fits: true, opens: false };
   let state = from;
   let opens = false;
+  let fits = true;
   for (let jump = 0; jump < MOST_JUMPS; jump++) {
     const run = oneCycle(drive, plant, state, everyS);
-    if (!run) return null;
-    if (state.windingC > RUNAWAY_C || run.end.windingC > RUNAWAY_C) break;
+    if (!run || state.windingC > RUNAWAY_C || run.end.windingC > RUNAWAY_C) break;
     opens = run.opensAfterS !== null;
-    if (leftToRise(plant, state, run) < PERIODIC_K) return { windingPeakC: run.windingPeakC, runsAway: false, opens };
+    fits = run.fits;
+    if (leftToRise(plant, state, run) < PERIODIC_K) return { windingPeakC: run.windingPeakC, runsAway: false, fits, opens };
     const { windingK, housingK } = riseAhead(plant, state, run);
     state = { ...run.end, windingC: state.windingC + windingK, housingC: state.housingC + housingK };
   }
-  return { windingPeakC: null, runsAway: true, opens };
+  return { windingPeakC: null, runsAway: true, fits, opens };
 }

@@ -209,6 +209,21 @@ describe("repeats", () => {
     expect(Math.abs((repeated?.windingPeakC ?? 0) - balance)).toBeLessThan(0.05 * (balance - 25));
   });
 
+  it("that only hot take longer than the time between them leave no rest in the end", () => {
+    const weak = { ...plainMotor, resistanceOhm: 3, torqueConstantNmPerA: 0.5, backEmfVPerRadPerS: 1.1, noLoadCurrentA: 0.01 };
+    const hot = { ...weak, thermal: { ...thermal, windingToHousingKPerW: 4, windingTimeS: 10, housingTimeS: 300 } };
+    const lifting = (massKg: number) => driveOf({ motor: hot, load: liftOf(massKg, 0.02, 0.5), stages: [reduction(1)] });
+    const coldS = solveTravel(lifting(4.5))?.timeS ?? 0;
+    const repeating = (massKg: number, everyS: number) => solveRepeats({ ...lifting(massKg), everyS });
+    expect(repeating(4.5, 20 * coldS)?.fits).toBe(true);
+    const tight = repeating(4.5, 1.6 * coldS);
+    expect(tight).toMatchObject({ runsAway: false, fits: false });
+    expect(Math.abs((tight?.windingPeakC ?? 0) - (repeating(4.5, 0.1)?.windingPeakC ?? 1e9))).toBeLessThan(0.3);
+    // Somewhat heavier it does not arrive at all any more once it is hot, though it does when cold.
+    expect(solveTravel(lifting(7))?.outcome).toBe("arrives");
+    expect(repeating(7, 0.1)).toMatchObject({ runsAway: true, windingPeakC: null });
+  });
+
   it("open a breaker that one travel leaves closed", () => {
     const drive = driveOf({
       load: armOf(4, 0.4, -1, 1),

@@ -1,6 +1,6 @@
 /** Rules over time: late, trips, cannot-hold, overheats, unprotected, sags. Expected numbers are worked out by hand in the comments. */
-import { describe, it } from "vitest";
-import { checkFindings, PRELUDE } from "../support/checkFindings.js";
+import { describe, expect, it } from "vitest";
+import { analyseFixture, checkFindings, PRELUDE } from "../support/checkFindings.js";
 
 /** Loss-free and without inertia to speak of: speed follows torque, so that times are travel over speed. */
 const PACK = `const stiff = battery({ openCircuit: "12 V", resistance: "0 ohm" });`;
@@ -129,6 +129,49 @@ describe("overheats and unprotected", () => {
 export const hub = mechanism("hub", { motor: warm, stages: [], load: roller({ torque: "1 N*m" }) });
 //           ^^^ warning overheats: turning on and on, the winding passes its limit after
 //           ^^^ warning unprotected: stalled at 4 A, the winding passes its limit after`);
+  });
+
+  // Lifting 5 kg on 20 mm draws 1.9 A: 11 W over 12 K/W settle far above 100 °C, but one travel of 5 s warms by 20 K only.
+  const lifting = (rest: string, mark: string) => `${HOT}
+// loadmark-allow unprotected: this is about the work, not about a stall
+// loadmark-allow backdrives: it is blocked
+export const hub = mechanism("hub", { motor: warm, stages: [spur(20, 21, { efficiency: 1 })],
+${mark === "" ? "" : `//           ^^^ ${mark}\n`}  load: lift({ mass: "5 kg", drumRadius: "20 mm", ${rest} });`;
+  const often = 'protect: breaker({ holdCurrent: "1.5 A", trips: { at: "3 A", after: "8 s" } })';
+
+  it.each([
+    ["a long travel", 'travel: "20 m" })', "warning overheats: in the travel; its limit is 100 °C"],
+    [
+      "a long hold",
+      'travel: "0.5 m" }), holdFor: "300 s"',
+      "warning overheats: held for 300 s, the winding passes its limit after",
+    ],
+    [
+      "repeats with too little rest",
+      'travel: "0.5 m" }), every: "10 s"',
+      "warning overheats: repeated every 10 s, the winding comes to",
+    ],
+  ])("tells %s", (_, rest, mark) => {
+    checkFindings(lifting(rest, mark));
+  });
+
+  it.each([
+    ["a short travel", 'travel: "0.5 m" })'],
+    ["a short hold", 'travel: "0.5 m" }), holdFor: "2 s"'],
+    ["repeats with rest enough", 'travel: "0.5 m" }), every: "60 s"'],
+  ])("is silent about %s", (_, rest) => {
+    checkFindings(lifting(rest, ""));
+  });
+
+  it("tells a breaker that one travel leaves closed and repeats do not", () => {
+    const rules = (rest: string) =>
+      analyseFixture(lifting(`travel: "0.5 m" }), every: "${rest}", ${often}`, "")).findings.map(
+        ({ rule, message }) => `${rule}: ${message}`,
+      );
+    expect(rules("10 s").filter((told) => told.startsWith("trips"))).toEqual([
+      expect.stringContaining("before it can repeat every 10 s for long"),
+    ]);
+    expect(rules("60 s").filter((told) => told.startsWith("trips"))).toEqual([]);
   });
 
   it("tells a protector that opens too late for a stalled winding, and one that never opens", () => {
