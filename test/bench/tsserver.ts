@@ -44,8 +44,17 @@ export class TsServer {
     this.#send("change", { file: path, line, offset, endLine: line, endOffset: offset + end - start, insertString: number });
   }
 
-  /** Until the files' semantic diagnostics are there; gives how many there are in all. */
+  /** Until the semantic diagnostics of open files are there; gives how many there are in all. */
   semanticDiagnostics(paths: readonly string[]): Promise<number> {
+    return this.#diagnostics(paths, "geterr", { delay: 0, files: paths });
+  }
+
+  /** The same for all files of the project of an open file. */
+  projectDiagnostics(file: string, paths: readonly string[]): Promise<number> {
+    return this.#diagnostics(paths, "geterrForProject", { delay: 0, file });
+  }
+
+  #diagnostics(paths: readonly string[], command: string, args: unknown): Promise<number> {
     const waiting = new Set(paths);
     let count = 0;
     const done = new Promise<number>((resolve) => {
@@ -55,7 +64,7 @@ export class TsServer {
         if (waiting.size === 0) resolve(count);
       };
     });
-    this.#send("geterr", { delay: 0, files: paths });
+    this.#send(command, args);
     return done;
   }
 
