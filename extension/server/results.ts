@@ -79,7 +79,7 @@ export function showResults({ connection, capabilities, hintsOf, committedOf, re
       });
       shown = result;
       const { files, mechanisms, findings } = result.analysis;
-      connection.console.debug(`${files.size} files, ${mechanisms.length} mechanisms, ${findings.length} findings.`);
+      connection.tracer.log(`${files.size} files, ${mechanisms.length} mechanisms, ${findings.length} findings.`);
     },
     refresh() {
       refreshHints();
