@@ -164,7 +164,7 @@ function paintRowWords(pen: CanvasRenderingContext2D, { rows }: SeriesDrawing, {
   pen.textAlign = "left";
   for (const [index, { words }] of rows.entries()) {
     const text = shortened(pen, words, area.right - area.left);
-    const y = area.top + index * ROW_HEIGHT + 8;
+    const y = area.top + index * ROW_HEIGHT + 7;
     // On plain ground: lines that end a step go between letters, not through them.
     pen.fillStyle = theme.background;
     pen.fillRect(area.left, y - LINE_HEIGHT / 2, pen.measureText(text).width + 3, LINE_HEIGHT);
@@ -186,7 +186,8 @@ function paintLabel(pen: CanvasRenderingContext2D, { text, colour }: Words, { x,
   pen.translate(x, y);
   if (upright) pen.rotate(-Math.PI / 2);
   pen.strokeStyle = ground;
-  pen.lineWidth = 4;
+  // Narrower than elsewhere: the bar is close below.
+  pen.lineWidth = 3;
   pen.strokeText(text, 0, 0);
   pen.fillStyle = colour;
   pen.fillText(text, 0, 0);
