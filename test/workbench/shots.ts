@@ -107,6 +107,21 @@ const scenes: readonly Scene[] = [
     ],
   },
   {
+    name: "ratio-map",
+    themes: ["dark", "light"],
+    file: LIFT,
+    size: { width: 1200, height: 930 },
+    steps: [
+      HIDE_SIDE_BAR,
+      { do: "expectSquiggle", under: "shelfLift" },
+      { do: "expectLens" },
+      { do: "reveal", file: LIFT, text: "stages" },
+      { do: "runCommand", title: "Loadmark: Show Ratio Map" },
+      { do: "expectWebview", selector: "#view-ratio-map .content:not([hidden])" },
+      NARROWER,
+    ],
+  },
+  {
     name: "power",
     themes: ["dark", "light"],
     file: CARRIER,
