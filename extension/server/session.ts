@@ -5,13 +5,14 @@
  * connection or of what is shown; the host gives it files, and the engine is loaded when the first file mentions the declarations.
  */
 import type { TextDocumentContentChangeEvent } from "vscode-languageserver-textdocument";
-import type { Analysis, Finding } from "../analysis/analysis.js";
+import type { Analysis } from "../analysis/analysis.js";
 import { nameBehindLinks } from "../analysis/linkedName.js";
 import { SETTINGS_FILE } from "../analysis/settings.js";
 import { mentionsDeclarations } from "../analysis/sources.js";
 import type { FileHost } from "./discovery.js";
 import type { Engine } from "./engine.js";
 import { withoutLeftOut } from "./leaveOut.js";
+import { resultOfNothing } from "./resultOfNothing.js";
 import { type TextSnapshot, Texts } from "./texts.js";
 import { type FileEvent, WorkspaceFiles } from "./workspaceFiles.js";
 
@@ -285,20 +286,4 @@ function filesRead({ files }: Analysis): ReadonlySet<string> {
     for (const one of missing) read.add(one);
   }
   return read;
-}
-
-/** Where nothing is declared, nothing need be loaded to say so. */
-function resultOfNothing(snapshot: TextSnapshot): Result {
-  const nothing = {
-    mechanisms: [],
-    motors: [],
-    robots: [],
-    findings: [],
-    findingsByMechanism: new Map<string, readonly Finding[]>(),
-    wanted: [],
-    levels: new Map(),
-    toothCounts: new Map<string, readonly number[]>(),
-  };
-  const analyse: Engine["analyse"] = (_roots, given) => ({ ...nothing, files: new Map(), snapshot: given });
-  return { analysis: analyse([], snapshot), snapshot, analyse };
 }
