@@ -21,6 +21,8 @@ interface Words extends WantedLabel {
 
 const FONT_SIZE = 11;
 const LINE_HEIGHT = 14;
+/** Height of a row's words: its bar lies close below. */
+const ROW_WORDS = 13;
 const SHARES = [0.75, 0.85, 0.65, 0.92, 0.5, 0.4, 0.3, 0.2, 0.1];
 /** More points of a line than this only cost time where words look for a place. */
 const POINTS = 120;
@@ -167,7 +169,7 @@ function paintRowWords(pen: CanvasRenderingContext2D, { rows }: SeriesDrawing, {
     const y = area.top + index * ROW_HEIGHT + 7;
     // On plain ground: lines that end a step go between letters, not through them.
     pen.fillStyle = theme.background;
-    pen.fillRect(area.left, y - LINE_HEIGHT / 2, pen.measureText(text).width + 3, LINE_HEIGHT);
+    pen.fillRect(area.left, y - ROW_WORDS / 2, pen.measureText(text).width + 3, ROW_WORDS);
     pen.fillStyle = theme.foreground;
     pen.fillText(text, area.left + 1, y);
   }
@@ -186,8 +188,7 @@ function paintLabel(pen: CanvasRenderingContext2D, { text, colour }: Words, { x,
   pen.translate(x, y);
   if (upright) pen.rotate(-Math.PI / 2);
   pen.strokeStyle = ground;
-  // Narrower than elsewhere: the bar is close below.
-  pen.lineWidth = 3;
+  pen.lineWidth = 4;
   pen.strokeText(text, 0, 0);
   pen.fillStyle = colour;
   pen.fillText(text, 0, 0);
