@@ -7,11 +7,12 @@
 import type { Supply } from "./drive.js";
 import { isInMotion, type RobotPart } from "./robotPart.js";
 import type { RobotProtector } from "./robotProtector.js";
-import type { RobotOptions, RobotSample } from "./robotSolution.js";
+import type { RobotOptions, RobotSample, RobotSolution } from "./robotSolution.js";
 import type { BusPoint, RobotSystem } from "./robotSystem.js";
 import type { RobotEvent } from "./robotWatches.js";
 import { createSagRecord, type SagMoment, type SagRecord } from "./sagRecord.js";
 import type { Stepper } from "./stepper.js";
+import { thinSamples } from "./thinSamples.js";
 
 export interface WindingSeen {
   peakC: number | null;
@@ -23,7 +24,7 @@ export interface RobotObserver {
   readonly seen: { lowestV: number; lowestAtS: number; peakA: number; collapsesAtS: number | null };
   readonly windings: readonly WindingSeen[];
   readonly sags: SagRecord;
-  readonly samples: () => readonly RobotSample[];
+  readonly samples: () => Pick<RobotSolution, "samples" | "thinned">;
   /** Looks at the system as it is prepared; `runS` is the run's time. */
   readonly look: (system: RobotSystem, runS: number) => void;
   /** After a step of the integration. */
@@ -58,6 +59,7 @@ export function createRobotObserver(
   const windings = parts.map((): WindingSeen => ({ peakC: null, peakAtS: null, limitAtS: null }));
   const sags = createSagRecord();
   let samples: RobotSample[] = [];
+  let thinned = false;
   let lastV = supply.openCircuitV;
   /** Step time and voltage of a peak inside the present step that lies below the floor. */
   let dipS: number | null = null;
@@ -201,20 +203,10 @@ export function createRobotObserver(
       windingC,
       open: protectors.map((protector) => protector.open),
     });
-    if (samples.length >= MOST_SAMPLES) samples = thin(samples);
+    if (samples.length < MOST_SAMPLES) return;
+    samples = thinSamples(samples, MOST_SAMPLES / 2);
+    thinned = true;
   }
 
-  return { seen, windings, sags, samples: () => samples, look, stepped, noted };
-}
-
-/** Half as many: of each four neighbours the two with the lowest and the highest voltage, so that no sag is lost. */
-function thin(samples: readonly RobotSample[]): RobotSample[] {
-  const kept: RobotSample[] = [];
-  for (let i = 0; i < samples.length; i += 4) {
-    const four = samples.slice(i, i + 4);
-    const byVoltage = [...four].sort((one, other) => one.supplyVoltageV - other.supplyVoltageV);
-    const ends = new Set([byVoltage[0], byVoltage.at(-1)]);
-    kept.push(...four.filter((one) => ends.has(one)));
-  }
-  return kept;
+  return { seen, windings, sags, samples: () => ({ samples, thinned }), look, stepped, noted };
 }

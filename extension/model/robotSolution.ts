@@ -43,6 +43,8 @@ export interface RobotSolution {
   /** Own protectors in the order of their mechanisms, then shared ones in theirs. */
   readonly protectors: readonly ProtectorHistory[];
   readonly samples: readonly RobotSample[];
+  /** True where there were too many to keep, and lines between those that are left pass the others. */
+  readonly thinned: boolean;
 }
 
 export interface SagHistory {

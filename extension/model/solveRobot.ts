@@ -160,7 +160,7 @@ function finish(
     sags: observer.sags.history(),
     mechanisms: run.parts.map((part) => mechanismHistory(run, part, travels)),
     protectors: run.protectors.map(historyOf),
-    samples: observer.samples(),
+    ...observer.samples(),
   };
 }
 

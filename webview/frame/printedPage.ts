@@ -40,7 +40,7 @@ export function printedPage(sheet: Sheet, view: string, old: string | null): str
         ]),
     ...listOf("Assumed", assumed),
     ...listOf("Not checked", notChecked),
-    tableOf(sheet.table()),
+    ...tablesOf(sheet.table()),
     `<footer>${text(CAUTIONS)}</footer>`,
     "</body>",
     "</html>",
@@ -73,6 +73,18 @@ function listOf(heading: string, sentences: readonly string[]): string[] {
   if (sentences.length === 0) return [];
   return [`<h2>${heading}</h2><ul>${sentences.map((one) => `<li>${text(one)}</li>`).join("")}</ul>`];
 }
+
+/** As wide as the paper: what has more columns goes on below, with the first one again. */
+function tablesOf({ caption, head, rows }: Table): string[] {
+  const tables: string[] = [];
+  for (let from = 1; from === 1 || from < head.length; from += COLUMNS) {
+    const part = (texts: readonly string[]): readonly string[] => [...texts.slice(0, 1), ...texts.slice(from, from + COLUMNS)];
+    tables.push(tableOf({ caption: from === 1 ? caption : `${caption}, continued`, head: part(head), rows: rows.map(part) }));
+  }
+  return tables;
+}
+
+const COLUMNS = 12;
 
 function tableOf({ caption, head, rows }: Table): string {
   const cells = (tag: "td" | "th", texts: readonly string[]): string =>

@@ -7,6 +7,8 @@ import type { Span } from "./power.js";
 export interface CycleRun {
   /** In rising time of the cycle. */
   readonly samples: readonly RobotSample[];
+  /** True where there was more to sample than is kept. */
+  readonly thinned: boolean;
   /** What they did in this cycle, in its own times; open at its start where they opened before. */
   readonly protectors: readonly ProtectorHistory[];
 }
@@ -32,8 +34,9 @@ function solveCycle(drive: RobotDrive, cycle: number, cycleS: number, { fromS, t
   const startS = cycle * cycleS;
   // The first cycle is the same, however many follow.
   const followed = cycle === 0 ? { ...drive, cycles: 1 } : drive;
-  const { samples, protectors } = solveRobot(followed, { sampled: { fromS: startS + fromS, toS: startS + toS } });
+  const { samples, thinned, protectors } = solveRobot(followed, { sampled: { fromS: startS + fromS, toS: startS + toS } });
   return {
+    thinned,
     samples: samples.map((sample) => ({ ...sample, timeS: sample.timeS - startS })),
     protectors: protectors.map((history) => ({
       ...history,

@@ -71,8 +71,6 @@ export interface MechanismPower {
 
 /** Spans of time that keep their extremes: more than a panel has pixels would not be seen. */
 const SPANS = 300;
-/** Up to this many samples of a whole cycle are all that the model looked at. */
-const FINE = 1400;
 
 export function createPowerFeature(): ChartFeature<PowerChart, PowerWant> {
   const runOf = createCycleRuns();
@@ -95,7 +93,7 @@ function powerChart(analysis: Analysis, name: string, want: PowerWant, runOf: Cy
   const whole = runOf(drive, cycle, cycleS, { fromS: 0, toS: cycleS });
   // Where the whole cycle had too much to keep, a part of it is sampled anew.
   const isPart = span.fromS > 0 || span.toS < cycleS;
-  const { samples: all } = isPart && whole.samples.length > FINE ? runOf(drive, cycle, cycleS, span) : whole;
+  const { samples: all } = isPart && whole.thinned ? runOf(drive, cycle, cycleS, span) : whole;
   const samples = isPart ? samplesAround(all, span) : all;
   const names = namesOf(robot, drive);
   const powers = names.map((_, index) => samples.map(({ powerW }) => powerW[index] ?? 0));

@@ -90,6 +90,29 @@ describe("the chart of a load cycle", () => {
     expect(chartOf(STALLED, { span: { fromS: 4, toS: 4 }, cycle: "first" }).span).toEqual({ fromS: 0, toS: 6 });
   });
 
+  it("samples a part anew where the whole has more than is kept, and finds the same there", () => {
+    // Arms that swing to and fro in many short steps: thousands of moments.
+    const arm = 'arm({ mass: "0.4 kg", centreOfMass: "0.2 m", from: "-60 deg", to: "60 deg" })';
+    const names = Array.from({ length: 6 }, (_, index) => `part${index}`);
+    const busy = `import { arm, battery, mechanism, motor, robot } from "loadmark";
+const slow = motor({ voltage: "12 V", noLoad: { speed: "120 rpm", current: "0.3 A" }, stall: { torque: "3 N*m", current: "6 A" } });
+const pack = battery({ openCircuit: "12 V", resistance: "0.2 ohm" });
+${names.map((name) => `const ${name} = mechanism("${name}", { motor: slow, stages: [], load: ${arm}, supply: pack });`).join("\n")}
+export default robot("cart", { supply: pack, mechanisms: [${names.join(", ")}], loadCycle: [
+${Array.from({ length: 60 }, (_, step) => `{ lasts: "2 s", moving: [${names.filter((_name, index) => (index + step) % 2 === 0).join(", ")}] },`).join("\n")}
+] });
+`;
+    const whole = chartOf(busy);
+    const part = chartOf(busy, { span: { fromS: 40, toS: 44 }, cycle: "first" });
+    const inside = (chart: PowerChart) => chart.timesS.filter((timeS) => timeS >= 40 && timeS <= 44).length;
+    expect(inside(part)).toBeGreaterThan(2 * inside(whole));
+    expect(part.timesS.every((timeS) => timeS > 35 && timeS < 49)).toBe(true);
+    // A start from rest takes the most: the whole has kept it.
+    const peak = (chart: PowerChart) =>
+      Math.max(...chart.currentA.filter((_, index) => Math.abs((chart.timesS[index] ?? 0) - 42) < 1));
+    expect(peak(whole)).toBeCloseTo(peak(part), 2);
+  });
+
   it("keeps temperatures with their limits", () => {
     const warm = STALLED.replace(
       'current: "6 A" } });',
