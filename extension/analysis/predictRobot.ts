@@ -1,6 +1,7 @@
 /** The numbers that a proposal for a whole robot predicts, and in what words it is told. */
 
 import { cycleTimeOf, type RobotSetting } from "../proposals/robotChange.js";
+import type { RuleId } from "../rules/rule.js";
 import { writeQuantity, writeShare } from "../units/write.js";
 import { type Difference, differenceOf, less, more } from "./predict.js";
 import type { RobotPredicted } from "./proposal.js";
@@ -27,7 +28,8 @@ export function predictRobot(
 
 const CELSIUS_ZERO_K = 273.15;
 
-export function robotDifferences(was: RobotPredicted, will: RobotPredicted): Difference[] {
+/** Those of protection only for a finding about it. */
+export function robotDifferences(was: RobotPredicted, will: RobotPredicted, rule: RuleId): Difference[] {
   const seconds = (value: number) => writeQuantity(value, "time");
   return [
     ...differenceOf(was.lowestVoltageV, will.lowestVoltageV, {
@@ -40,17 +42,7 @@ export function robotDifferences(was: RobotPredicted, will: RobotPredicted): Dif
       say: (text) => `at most ${text}`,
       isWorse: more,
     }),
-    ...differenceOf(was.tripsAfterS, will.tripsAfterS, {
-      write: seconds,
-      say: (text) => `protection opens after ${text}`,
-      isWorse: less,
-      gone: "protection stays closed",
-    }),
-    ...differenceOf(was.tripMargin, will.tripMargin, {
-      write: writeShare,
-      say: (text) => `${text} left until it opens`,
-      isWorse: less,
-    }),
+    ...(rule === "trips" ? tripDifferences(was, will) : []),
     ...differenceOf(was.windingPeakC, will.windingPeakC, {
       write: (value) => writeQuantity(value + CELSIUS_ZERO_K, "temperature"),
       say: (text) => `hottest winding ${text}`,
@@ -60,6 +52,22 @@ export function robotDifferences(was: RobotPredicted, will: RobotPredicted): Dif
     ...differenceOf(was.cyclesDone, will.cyclesDone, {
       write: String,
       say: (text) => `${text} cycles done`,
+      isWorse: less,
+    }),
+  ];
+}
+
+function tripDifferences(was: RobotPredicted, will: RobotPredicted): Difference[] {
+  return [
+    ...differenceOf(was.tripsAfterS, will.tripsAfterS, {
+      write: (value) => writeQuantity(value, "time"),
+      say: (text) => `protection opens after ${text}`,
+      isWorse: less,
+      gone: "protection stays closed",
+    }),
+    ...differenceOf(was.tripMargin, will.tripMargin, {
+      write: writeShare,
+      say: (text) => `${text} left until it opens`,
       isWorse: less,
     }),
   ];

@@ -180,7 +180,7 @@ function prove(search: Search, tried: Tried): Proposal | undefined {
   if (missesOf(solution) > search.misses) return undefined;
   const touches = changedBy(analysis, after, finding);
   const [was, will] = [predictRobot(one, search.before), predictRobot(one, { solution, drive })];
-  const differences = robotDifferences(was, will);
+  const differences = robotDifferences(was, will, finding.rule);
   const words = tellSettings(one, tried.sets);
   // Whose current is limited is named already.
   const limitedNames = tried.sets.flatMap((set) => (set.kind === "limit" ? [one.model.mechanisms[set.mechanism]?.name] : []));
@@ -219,7 +219,7 @@ function tellMiss({ finding, analysed, one, before }: Search, { sets }: Tried): 
   // The search may have run a few cycles only.
   const nearest = tryChange(one, sets, Number.POSITIVE_INFINITY);
   const will = predictRobot(one, nearest);
-  const differences = robotDifferences(predictRobot(one, before), will);
+  const differences = robotDifferences(predictRobot(one, before), will, finding.rule);
   const words = tellSettings(one, sets);
   return {
     finding,
