@@ -120,6 +120,32 @@ describe("proposals for a supply that sags", () => {
     );
   });
 
+  it("give a step a list of its own where it shares one with other steps, and keep the names that the code uses", () => {
+    const { proposals, apply } = offeredFor(
+      sagging(
+        '[\n  { lasts: "4 s", moving: BOTH }, // both at once\n  { lasts: "2 s" },\n]',
+        "const all = { left: one };\nconst BOTH = [all.left, two];\n",
+      ),
+      "sags",
+    );
+    const own = proposals.find(({ summary }) => summary.includes("in a step of its own"));
+    const text = own === undefined ? "" : apply(own).text;
+    expect(text).toContain("const BOTH = [all.left, two];");
+    expect(text).toMatch(
+      /\{ lasts: "4 s", moving: \[two\] \},\n {2}\{ lasts: "4 s", moving: \[one\], holding: \[two\] \}, \/\/ both at once/,
+    );
+    expect(own && apply(own).rules).toEqual([]);
+  });
+
+  it("keep line breaks and quotes as they are", () => {
+    const source = sagging("[\n  { lasts: '4 s', moving: [one, two] },\n]").replaceAll("\n", "\r\n");
+    const { proposals, apply } = offeredFor(source, "sags");
+    const own = proposals.find(({ summary }) => summary.includes("in a step of its own"));
+    expect(own && apply(own).text).toContain(
+      "  { lasts: '4 s', moving: [two] },\r\n  { lasts: '4 s', moving: [one], holding: [two] },\r\n]",
+    );
+  });
+
   it("leave a cycle alone that is not written out, and limit a current all the same", () => {
     const { proposals, apply } = offeredFor(sagging("[one].map(() => ({ lasts: '4 s', moving: [one, two] }))"), "sags");
     expect(proposals.length).toBeGreaterThan(0);
