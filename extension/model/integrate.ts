@@ -43,7 +43,7 @@ const MOST_EVENTS = 10_000;
 const LEAST_STEP = 1e-14;
 /** A kink is passed by this share of the step, so that the next step starts on the other side. */
 const PAST_KINK = 1e-9;
-/** A step refused is aimed this share past the kink inside it. */
+/** A step refused is aimed this share past the kink inside it, unless that leaves more than this of it. */
 const JUST_PAST = 1e-6;
 const KINK_RETRY = 0.9999;
 /** From this error on a refused step does not show where its kink is. */

@@ -49,6 +49,9 @@ function stop(at: Instant): void {
   at.torqueBy.fill(0);
 }
 
+/** As a share of the limit. */
+const BEYOND_LIMIT = 0.5;
+
 /** No inertia: the speed at which min(line, limit, grip) brings the load's torque; 0 where it does not. */
 export function followAt(plant: Plant, timeS: number, progress: number, windingC: number, at: Instant): void {
   setConditions(plant, timeS, windingC, at);
@@ -72,11 +75,14 @@ export function followAt(plant: Plant, timeS: number, progress: number, windingC
   const lineSpeed = (at.command * at.headV - at.seriesOhm * asked) / stiffness;
   const lineCurrent = asked + plant.lossSlopeAsPerRad * lineSpeed;
   at.limitGap = plant.limitA - lineCurrent;
-  const onLine = at.limitGap >= 0;
-  const limitSpeed = plant.lossSlopeAsPerRad > 0 ? (plant.limitA - asked) / plant.lossSlopeAsPerRad : 0;
-  const speed = onLine ? lineSpeed : limitSpeed;
-  at.startGap = at.gripGap < 0 ? -1 : speed;
-  if (!(speed > 0) || at.gripGap < 0) {
+  // A loss that grows with speed lets it slow down at the limit; without one it stops there at once. The line is then followed a little
+  // beyond, so that a step across shows where that is.
+  const fades = plant.lossSlopeAsPerRad > 0;
+  const onLine = at.limitGap >= 0 || !fades;
+  const speed = onLine ? lineSpeed : (plant.limitA - asked) / plant.lossSlopeAsPerRad;
+  const moves = fades || at.limitGap >= -BEYOND_LIMIT * plant.limitA;
+  at.startGap = at.gripGap < 0 ? -1 : fades ? speed : Math.min(speed, (at.limitGap * at.seriesOhm) / stiffness);
+  if (!(speed > 0) || at.gripGap < 0 || !moves) {
     blockedAt(plant, timeS, windingC, at);
     return;
   }

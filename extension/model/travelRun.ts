@@ -49,9 +49,11 @@ export function integrateTravel(plant: Plant, goal: TravelGoal, options: TravelO
   const settling = methodFor(plant, false, options.coarse);
   let timeS = 0;
   let stepS = (stiff ? 0.02 : 0.1) * Math.min(1 / fastest, scales.timeS);
-  observer.look(moving, timeS, state);
+  const begins = starts(plant, moving, state);
+  const still = !begins && kind === "following";
+  observer.look(still ? motionSystem(plant, { kind: "blocked", startsAs: kind }, scales) : moving, timeS, state);
 
-  if (!starts(plant, moving, state)) {
+  if (!begins) {
     const wait = awaitStart(plant, scales, observer, state, kind, options.coarse);
     timeS = wait.timeS;
     if (!wait.started) return finishTravel(plant, observer, state, timeS, wait.finished ? "never-starts" : "unresolved");

@@ -103,6 +103,35 @@ describe("without inertia", () => {
   });
 });
 
+describe("without inertia, at a current limit", () => {
+  const rising: Curve = [
+    [0, 0],
+    [4, 20],
+  ];
+  const limited = (speedLossShare: number) =>
+    solveTravel(driveOf({ load: curve(rising, 0), motor: { ...plainMotor, speedLossShare }, motorCurrentLimitA: 30 }));
+
+  it("a constant loss torque stops the motor where the limit's torque is used up", () => {
+    const travel = limited(0);
+    expect(travel).toMatchObject({ outcome: "stands-still", timeS: null });
+    // The limit's 30 A less the loss current of 0.8 A bring k_t·29.2 A·20 at the shaft, where 5·x N·m are asked.
+    const stopRad = (plainMotor.torqueConstantNmPerA * (30 - 0.8) * 20) / 5;
+    expect(stopRad).toBeLessThan(4);
+    // Until then the line's speed: ω·20 = (12 − R·(T/k_t + 0.8))/k_e, falling straight from ω_0 to ω_1: t = Δx·ln(ω_0/ω_1)/(ω_0 − ω_1).
+    const speed = (x: number): number =>
+      (12 - plainMotor.resistanceOhm * ((5 * x) / 20 / plainMotor.torqueConstantNmPerA + 0.8)) /
+      plainMotor.backEmfVPerRadPerS /
+      20;
+    const [first, last] = [speed(0), speed(stopRad)];
+    expect(travel?.coveredS).toBeCloseToShare((stopRad * Math.log(first / last)) / (first - last), 1e-8);
+    expect(travel?.peakMotorCurrentA).toBeCloseToShare(30, 1e-8);
+  });
+
+  it("a loss that grows with speed lets it slow down to there", () => {
+    expect(limited(1)).toMatchObject({ outcome: "stands-still", timeS: null });
+  });
+});
+
 describe("samples", () => {
   it("run from start to end in order and agree with the numbers", () => {
     const drive = driveOf({ load: armOf(4, 0.4, 1, -1), stages: [reduction(60, 0.8)] });
