@@ -46,7 +46,19 @@ const DRAWS_OF_REPEATS = 40;
 const SEED = 1;
 
 /** `undefined` where nothing is declared as uncertain, or the mechanism has no numbers. */
-export function spreadOf(analysis: Analysis, { call, declared, numbers }: AnalysedMechanism): Spread | undefined {
+export function spreadOf(analysis: Analysis, mechanism: AnalysedMechanism): Spread | undefined {
+  const work = drawSpread(analysis, mechanism);
+  for (;;) {
+    const next = work.next();
+    if (next.done === true) return next.value;
+  }
+}
+
+/** The same a draw at a time, so that a host can stop it. */
+export function* drawSpread(
+  analysis: Analysis,
+  { call, declared, numbers }: AnalysedMechanism,
+): Generator<undefined, Spread | undefined> {
   if (declared === undefined || numbers === undefined) return undefined;
   const robot = declared.si.supply === undefined ? robotOf(declared, analysis.robots) : undefined;
   const supplyCall = robot && supplyCallOf(robot);
@@ -65,12 +77,15 @@ export function spreadOf(analysis: Analysis, { call, declared, numbers }: Analys
   };
   const repeats = declared.si.everyS !== undefined && declared.si.protection !== undefined;
   const count = repeats ? DRAWS_OF_REPEATS : DRAWS;
-  const draws = spreadPoints(count, ranges.length + 2, createRandom(SEED)).flatMap((point): Draw[] => {
+  const away = (share: number): number => tolerance * (2 * share - 1);
+  const draws: Draw[] = [];
+  for (const point of spreadPoints(count, ranges.length + 2, createRandom(SEED))) {
+    yield;
     const drive = driveWith(point.slice(2));
     const [resistance = 0.5, backEmf = 0.5] = point;
-    const away = (share: number): number => tolerance * (2 * share - 1);
-    return drive === undefined ? [] : [solveDraw({ ...drive, motor: offSheet(drive.motor, away(resistance), away(backEmf)) })];
-  });
+    if (drive === undefined) continue;
+    draws.push(solveDraw({ ...drive, motor: offSheet(drive.motor, away(resistance), away(backEmf)) }));
+  }
   return draws.length === 0
     ? undefined
     : { draws: draws.length, seed: SEED, tolerance, ranges: ranges.length, ...summarise(draws, declared.si) };

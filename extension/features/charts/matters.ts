@@ -6,7 +6,7 @@
  */
 import type { AnalysedMechanism, Analysis, Finding } from "../../analysis/analysis.js";
 import { type Sensitivity, sensitivitiesOf } from "../../analysis/sensitivity.js";
-import { type Spread, spreadOf } from "../../analysis/spread.js";
+import { drawSpread, type Spread } from "../../analysis/spread.js";
 import { inputWords } from "../inputWords.js";
 import { findingsAbout, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";
@@ -55,7 +55,8 @@ export function createMattersFeature(): ChartFeature<MattersChart, unknown> {
       yield;
       const inputs = inputsOf(sensitivitiesOf(analysis, mechanism));
       yield;
-      const prepared = { inputs, spread: spreadOf(analysis, mechanism) ?? null };
+      const spread = yield* drawSpread(analysis, mechanism);
+      const prepared = { inputs, spread: spread ?? null };
       const [oldest] = known.keys();
       if (known.size >= KEPT && oldest !== undefined) known.delete(oldest);
       known.set(key, prepared);
