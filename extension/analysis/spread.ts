@@ -99,7 +99,7 @@ interface Draw {
 
 function solveDraw(drive: Drive): Draw {
   if (drive.protection === undefined) return { ...effectsOf(drive), trips: false };
-  const travel = solveTravel(drive);
+  const travel = solveTravel(drive, { coarse: true });
   const hold = drive.holdForS === undefined ? null : solveHold(drive);
   const trips = opensInUse({ drive, travel, hold, turning: solveTurning(drive), repeats: solveRepeats(drive) });
   return { currentA: hardestNumbers(drive).motorCurrentA, timeS: travel?.timeS ?? null, trips };
