@@ -61,9 +61,17 @@ function strongerGroups(situation: Situation, wanted: Wanted): Group[] {
 function towardsQuickest({ drive, numbers }: Situation): Wanted {
   const quickest = quickestRatio(drive);
   if (quickest === null) return { atLeast: 0.01, atMost: 100 };
-  const beyond = (quickest.ratio / numbers.ratio) ** 2;
+  const factor = quickest.ratio / numbers.ratio;
+  // No ratio is quick enough: only what comes nearest is worth telling.
+  if (drive.withinS !== undefined && quickest.timeS > drive.withinS * (1 + MARGIN))
+    return { atLeast: factor / NEAR, atMost: factor * NEAR };
+  const beyond = factor ** 2;
   return { atLeast: Math.min(beyond, 1), atMost: Math.max(beyond, 1) };
 }
+
+/** The quickest ratio is known to about a thousandth. */
+const MARGIN = 1e-2;
+const NEAR = 1.05;
 
 function gearGroups(situation: Situation, wanted: Wanted): Group[] {
   return [
