@@ -60,7 +60,15 @@ export interface TravelChart {
 }
 
 export interface TravelEvent {
-  readonly kind: "ramp-ends" | "limit-ends" | "trips" | "may-trip" | "winding-limit" | "arrives" | "stands-still";
+  readonly kind:
+    | "ramp-ends"
+    | "limit-begins"
+    | "limit-ends"
+    | "trips"
+    | "may-trip"
+    | "winding-limit"
+    | "arrives"
+    | "stands-still";
   readonly timeS: number;
 }
 
@@ -185,14 +193,14 @@ function eventsOf({ rampS, motorCurrentLimitA }: Drive, travel: TravelResult): r
   const { samples, outcome, coveredS, timeS, opensAfterS, mayOpenAfterS, windingLimitAfterS } = travel;
   const event = (kind: TravelEvent["kind"], at: number | null | undefined): TravelEvent[] =>
     at === null || at === undefined || at > coveredS ? [] : [{ kind, timeS: at }];
-  const limited =
-    motorCurrentLimitA === undefined
-      ? undefined
-      : samples.findLast(({ motorCurrentA }) => motorCurrentA >= motorCurrentLimitA * AT_LIMIT);
-  const leaves = limited !== undefined && limited.timeS < coveredS ? limited.timeS : undefined;
+  const atLimit = samples.filter(
+    ({ motorCurrentA }) => motorCurrentA >= (motorCurrentLimitA ?? Number.POSITIVE_INFINITY) * AT_LIMIT,
+  );
+  const [first, last] = [atLimit[0], atLimit.at(-1)];
   return [
     ...event("ramp-ends", rampS > 0 && rampS < coveredS ? rampS : undefined),
-    ...event("limit-ends", leaves),
+    ...event("limit-begins", first !== undefined && first.timeS > 0 ? first.timeS : undefined),
+    ...event("limit-ends", last !== undefined && last.timeS < coveredS ? last.timeS : undefined),
     ...event("trips", opensAfterS),
     ...event("may-trip", opensAfterS === mayOpenAfterS ? undefined : mayOpenAfterS),
     ...event("winding-limit", windingLimitAfterS),

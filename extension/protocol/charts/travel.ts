@@ -19,7 +19,7 @@ const travelNumbersSchema = v.object({
 });
 
 const eventSchema = v.object({
-  kind: v.picklist(["ramp-ends", "limit-ends", "trips", "may-trip", "winding-limit", "arrives", "stands-still"]),
+  kind: v.picklist(["ramp-ends", "limit-begins", "limit-ends", "trips", "may-trip", "winding-limit", "arrives", "stands-still"]),
   timeS: number,
 });
 

@@ -88,6 +88,15 @@ describe("the chart of a travel", () => {
     expect(chart.hold?.currentA).toBeCloseTo(((liftTorque(10, 0.05) / 4) * SHEET.stallA) / SHEET.stallNm, 6);
   });
 
+  it("marks where a growing command comes to the current limit, and where speed brings it below again", () => {
+    const { events } = chartOf(
+      source('flywheel({ inertia: "400 kg*m^2", speed: "20 rpm" })', 'ramp: "3 s", motorCurrentLimit: "4 A"'),
+    );
+    expect(events.map(({ kind }) => kind)).toEqual(["limit-begins", "ramp-ends", "limit-ends", "arrives"]);
+    // Nearly at rest the motor is 12 V / 6 A: two thirds of the command drive 4 A.
+    expect(Math.abs((events[0]?.timeS ?? Number.NaN) / 2 - 1)).toBeLessThan(0.05);
+  });
+
   it("shows what is needed along the way that a stalled motor never goes", () => {
     const chart = chartOf(source('lift({ mass: "90 kg", drumRadius: "50 mm", travel: "0.8 m" })'));
     expect(chart.outcome).toBe("never-starts");

@@ -9,6 +9,8 @@ export function eventWords({ kind, timeS }: TravelChart["events"][number], chart
   switch (kind) {
     case "ramp-ends":
       return "ramp ends";
+    case "limit-begins":
+      return "comes to the current limit";
     case "limit-ends":
       return "leaves the current limit";
     case "trips":
