@@ -24,12 +24,23 @@ export async function runEditorTests(run: EditorRun): Promise<TestResult[]> {
   try {
     return [
       ...(await runHost(workbench, "host", { workspace: demoFolder, tests: () => bundleHostTests("host") })),
+      ...(await runHostWithGit(workbench)),
       ...(await runHost(workbench, "hostElsewhere", { workspace: plainFolder, tests: () => bundleHostTests("hostElsewhere") })),
       ...(run.extensionMode === "development" ? await runWorkerHost(workbench) : []),
       ...(await runPage(workbench, run.extensionMode)),
     ];
   } finally {
     await workbench.stop();
+  }
+}
+
+/** Git is off for all others, whose folders lie in no repository. */
+async function runHostWithGit(workbench: Workbench): Promise<TestResult[]> {
+  workbench.changeSettings({ "git.enabled": true });
+  try {
+    return await runHost(workbench, "hostGit", { workspace: demoFolder, tests: () => bundleHostTests("hostGit") });
+  } finally {
+    workbench.changeSettings({});
   }
 }
 

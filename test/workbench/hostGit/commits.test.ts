@@ -1,15 +1,13 @@
 // What an edit changed since the last commit, through the editor's own Git in a repository of the test's own. The settings of the
-// other tests keep Git off; it is on here alone.
+// other tests keep Git off; here it is on, in an extension host of its own.
 
 import assert from "node:assert/strict";
 import { execFileSync } from "node:child_process";
-import { rm } from "node:fs/promises";
-import { join } from "node:path";
 import * as vscode from "vscode";
 import { three } from "../../support/handNumbers.js";
+import { closeAll, folder, rangeOf, retype, show, undoAll, waitForFinding, waitForNoFinding } from "../host/demo.js";
+import { shelfLift } from "../host/handDemo.js";
 import { waitUntil } from "../waitUntil.js";
-import { closeAll, folder, rangeOf, retype, show, undoAll, waitForFinding, waitForNoFinding } from "./demo.js";
-import { shelfLift } from "./handDemo.js";
 
 const SINCE = "since the last commit";
 const LIFT = "mechanisms/shelfLift.ts";
@@ -19,18 +17,13 @@ describe("since the last commit", () => {
     git("init", "--quiet");
     git("add", ".");
     git("commit", "--quiet", "--message", "as it is");
-    await settings().update("enabled", true, vscode.ConfigurationTarget.Global);
     const exported = await vscode.extensions.getExtension("vscode.git")?.activate();
     await waitUntil("the editor's Git is on", async () => exported.enabled || undefined);
     assert.ok(await exported.getAPI(1).openRepository(folder()), "The repository was not opened.");
     await show(LIFT);
     await waitForFinding(LIFT, "past-peak");
   });
-  after(async () => {
-    await closeAll();
-    await settings().update("enabled", undefined, vscode.ConfigurationTarget.Global);
-    await rm(join(folder().fsPath, ".git"), { recursive: true, force: true });
-  });
+  after(closeAll);
 
   it("hover and lens tell what an edit that is not saved changed, and nothing once it is undone", async () => {
     const { document } = await show(LIFT);
@@ -67,10 +60,6 @@ describe("since the last commit", () => {
     await waitForFinding(LIFT, "past-peak");
   });
 });
-
-function settings(): vscode.WorkspaceConfiguration {
-  return vscode.workspace.getConfiguration("git");
-}
 
 function git(...args: string[]): void {
   const identity = ["-c", "user.name=test", "-c", "user.email=test@example.invalid", "-c", "commit.gpgsign=false"];
