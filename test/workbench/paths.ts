@@ -8,6 +8,8 @@ export const repositoryRoot = findRoot(import.meta.dirname);
 export const workbenchFolder = join(repositoryRoot, "test/workbench");
 export const cacheFolder = join(repositoryRoot, ".cache/workbench");
 export const demoFolder = join(repositoryRoot, "test/demo");
+/** A project that depends on the declarations, and holds none yet. */
+export const newFolder = join(repositoryRoot, "test/fixtures/newProject");
 /** A project in which nothing is declared. */
 export const plainFolder = join(repositoryRoot, "test/fixtures/plainProject");
 

@@ -3,7 +3,7 @@
 import assert from "node:assert/strict";
 import { perCent } from "../../support/handNumbers.js";
 import type { Editor } from "../editor.js";
-import { plainFolder } from "../paths.js";
+import { newFolder, plainFolder } from "../paths.js";
 import { mechanismIn, reportOn } from "../reportOn.js";
 import { waitUntil } from "../waitUntil.js";
 import { workbench } from "./session.js";
@@ -47,6 +47,26 @@ describe("the overview of the workspace", () => {
     const { findings } = await reportOn(editor.folder);
     assert.ok(findings.some(({ rule, mechanism }) => rule === "past-peak" && mechanism === "watering arm"));
     await waitForStatus(editor, `${findings.filter(({ level }) => level === "warning").length} warnings`);
+  });
+
+  it("says what to do where nothing is declared yet, and opens an example", async () => {
+    const editor = await workbench().open("plan.ts", newFolder);
+    const { page } = editor;
+    const header = page.locator('.pane-header[aria-label^="Mechanisms"]');
+    await header.waitFor();
+    const welcome = page.locator(".pane:has(> .pane-header[aria-label^='Mechanisms']) .welcome-view-content");
+    const example = welcome.getByRole("button", { name: "Open an Example" });
+    // A view that is closed has no words yet.
+    await waitUntil("the welcome of the view", async () => {
+      if ((await header.getAttribute("aria-expanded")) !== "true") await header.click();
+      return (await example.count()) > 0 ? true : undefined;
+    });
+    assert.match((await welcome.textContent()) ?? "", /No mechanism is declared yet/);
+    await example.click();
+    await page.locator(".view-line", { hasText: "Invented" }).first().waitFor();
+    const rows = page.locator('.pane:has(> .pane-header[aria-label^="Mechanisms"]) .monaco-list-row');
+    await rows.filter({ hasText: "tray mover" }).waitFor();
+    await rows.filter({ hasText: "flap" }).waitFor();
   });
 
   it("is absent where nothing is declared", async () => {
