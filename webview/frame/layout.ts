@@ -59,7 +59,7 @@ export function buildLayout(name: ViewName, heading: string, { tableFirst, canZo
     old: element("p", { class: "old", attributes: { role: "status" } }),
     title: element("h1"),
     verdict: element("p", { class: "verdict" }),
-    notes: element("p", { class: "per-motor" }),
+    notes: element("p", { class: "notes" }),
     facts: element("dl", { class: "facts" }),
     findings: element("ul", { class: "findings" }),
     controls: element("div", { class: "controls" }),

@@ -106,7 +106,8 @@ function candidatesOf(
 ): Candidate[] {
   const wanted = ratio * factor;
   if (kind === "reduction") {
-    const value = Number(wanted.toPrecision(RATIO_DIGITS));
+    // A range is not written over: which end was meant is not known.
+    const value = typeof given[0] === "number" ? Number(wanted.toPrecision(RATIO_DIGITS)) : 0;
     if (!(value > 0 && Number.isFinite(value)) || value === ratio) return [];
     return [{ stage, argument: 0, value, words: `stage ${stage + 1} with a ratio of ${value}`, miss: missOf(value, wanted) }];
   }

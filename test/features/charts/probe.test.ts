@@ -98,6 +98,9 @@ ${single("spur(20, 80)")}`);
 
   it("says why nothing can be written", () => {
     expect(open(single("")).probe(0.9).cannot).toContain("no stage");
+    expect(open(single("reduction(between(3, 5))").replace("chain,", "between,")).probe(0.9).cannot).toContain(
+      "No stage has a ratio",
+    );
     expect(open(single("planetary(20, 60)")).probe(0.9).cannot).toContain("No stage has a ratio");
     expect(open(single("spur(20, 80)")).probe(0).cannot).toContain("No ratio");
   });
