@@ -29,6 +29,12 @@ export async function openPanelBy(editor: Editor, tab: string, click: () => Prom
   });
 }
 
+/** Opens a file beside the panel, not over it: whoever pressed something in the panel is in its group. `code`: the name of what is open beside it. */
+export async function openBesidePanel(editor: Editor, code: string, file: string): Promise<void> {
+  await editor.page.locator(`.tab[data-resource-name="${code}"]`).click();
+  await editor.openFile(file);
+}
+
 /** Presses a button of the page, and takes the place that the dialog then offers; gives what was saved. */
 export async function saveBy(editor: Editor, button: string, name: string): Promise<Buffer> {
   const frame = await editor.webview(CONTENT);

@@ -4,7 +4,7 @@
 import assert from "node:assert/strict";
 import type { Frame } from "playwright-core";
 import type { Editor } from "../editor.js";
-import { CONTENT, openAtCaret, openPanelBy, saveBy } from "../panel.js";
+import { CONTENT, openAtCaret, openBesidePanel, openPanelBy, saveBy } from "../panel.js";
 import { mechanismIn, reportOn } from "../reportOn.js";
 import { waitUntil } from "../waitUntil.js";
 
@@ -23,7 +23,7 @@ describe("the views of the chart panel", () => {
     const last = csv.trimEnd().split("\r\n").at(-1)?.split(",").map(Number) ?? [];
     assert.ok(Math.abs((last[0] ?? Number.NaN) / seconds - 1) < 1e-5, `${last[0]} is not the reported ${seconds} s.`);
     assert.ok(Math.abs((last[1] ?? Number.NaN) / 0.7 - 1) < 1e-6, `${last[1]} is not the declared 0.7 m.`);
-    await editor.openFile("gearing.ts");
+    await openBesidePanel(editor, "trayHoist.ts", "gearing.ts");
     await editor.retype("54;", "40;");
     const frame = await editor.webview("#view-travel .content:not([hidden])");
     await frame.locator(".fact", { hasText: `was ${Number(seconds.toPrecision(3))} s` }).waitFor();
@@ -77,7 +77,7 @@ describe("the views of the chart panel", () => {
     assert.ok(teeth > 54, `${teeth}`);
     assert.equal(await editor.page.locator(".tab.dirty").count(), 0);
     await frame.getByRole("button", { name: "Write to code" }).click();
-    await editor.openFile("gearing.ts");
+    await openBesidePanel(editor, "trayHoist.ts", "gearing.ts");
     await waitUntil(`${teeth} teeth in the code`, async () =>
       (await editor.shows(`TRAY_DRIVEN = ${teeth};`)) ? true : undefined,
     );
