@@ -6,8 +6,6 @@ import { nearest } from "../units/nearest.js";
 import type { Finding } from "./analysis.js";
 import type { Declared } from "./declared.js";
 
-export { allowedRules } from "./allowanceComments.js";
-
 /** The findings that no allowance silences, and those about the allowances themselves. */
 export function applyAllowances(findings: readonly Finding[], declared: Declared): Finding[] {
   const about: Finding[] = [];

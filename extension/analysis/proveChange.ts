@@ -3,7 +3,7 @@
  *
  * Mechanisms alone first, since a robot's load cycle takes longer.
  */
-import { allowedRules } from "./allowances.js";
+import { allowedRules } from "./allowanceComments.js";
 import type { Analyser } from "./analyser.js";
 import type { AnalysedMechanism, Analysis, Finding } from "./analysis.js";
 import { type Difference, differencesOf, predict } from "./predict.js";

@@ -6,7 +6,7 @@ import { withRatioTimes } from "../model/ratioSearch.js";
 import { isLate } from "../rules/late.js";
 import type { MechanismFacts, RuleId } from "../rules/rule.js";
 import { MECHANISM_RULES } from "../rules/table.js";
-import { allowedRules } from "./allowances.js";
+import { allowedRules } from "./allowanceComments.js";
 import type { AnalysedMechanism, Analysis } from "./analysis.js";
 import { type Corner, cornersOf } from "./corners.js";
 import { robotOf, supplyCallOf } from "./lentSupply.js";

@@ -136,6 +136,7 @@ export class Texts {
       this.#changes.note(key);
       this.#ownDisk().delete(key);
     }
+    this.#addresses.delete(key);
     this.#lineMaps.delete(key);
   }
 

@@ -3,7 +3,7 @@
  *
  * SI throughout, one motor unless the name says otherwise; what does not apply is null. How it looks is the chart's business.
  */
-import type { Analysis, Finding } from "../../analysis/analysis.js";
+import type { Analysis } from "../../analysis/analysis.js";
 import { bestEfficiencyPoint, greatestPowerPoint, greatestTorque } from "../../model/bestPoints.js";
 import type { Drive } from "../../model/drive.js";
 import { availableLine, type MotorLine, sheetLine } from "../../model/line.js";
@@ -11,9 +11,9 @@ import type { MechanismNumbers } from "../../model/numbers.js";
 import { operatingPointAt } from "../../model/operatingPoint.js";
 import { linePoint } from "../../model/peaks.js";
 import { positionWords } from "../positionWords.js";
-import { findingsAbout, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";
 import { type ChartLimit, limitsOf, torqueAtCurrent } from "./limits.js";
+import { headOf, type MechanismHead, mechanismIn } from "./mechanismHead.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
 import { type ChartPoint, type ChartValues, chartPoint, chartValues } from "./point.js";
 import { probeAt, probeEdits } from "./probe.js";
@@ -33,12 +33,7 @@ export interface LineEnds {
   readonly stallCurrentA: number;
 }
 
-export interface OperatingPointChart {
-  readonly mechanism: string;
-  readonly motorCount: number;
-  readonly state: State;
-  /** A few words, such as "Past its peak of power". */
-  readonly verdict: string;
+export interface OperatingPointChart extends MechanismHead {
   /** Its stall torque is 100 % on the scale of shares. */
   readonly available: LineEnds;
   readonly sheet: LineEnds;
@@ -64,10 +59,6 @@ export interface OperatingPointChart {
     /** What else gives way, in rising torque. */
     readonly others: readonly ChartLimit[];
   };
-  readonly findings: readonly Pick<Finding, "rule" | "level" | "message">[];
-  /** Plain sentences. */
-  readonly assumed: readonly string[];
-  readonly notChecked: readonly string[];
 }
 
 /** Steps of the abscissa between its ends. */
@@ -91,11 +82,10 @@ export const operatingPointFeature: ChartFeature<OperatingPointChart, OperatingP
 
 /** `undefined` for an unknown name, or a mechanism without numbers. */
 export function operatingPointChart(analysis: Analysis, mechanismName: string): OperatingPointChart | undefined {
-  const mechanism = analysis.mechanisms.find(({ name, numbers }) => name === mechanismName && numbers !== undefined);
+  const mechanism = mechanismIn(analysis, mechanismName);
   const drive = mechanism?.drive;
   if (mechanism?.numbers === undefined || drive === undefined) return undefined;
   const { hardest } = mechanism.numbers;
-  const { state, words } = verdictOf(analysis, mechanism);
   const available = availableLine(drive);
   const sheet = sheetLine(drive.motor);
   const stopsAtNm = greatestTorque(drive);
@@ -113,10 +103,7 @@ export function operatingPointChart(analysis: Analysis, mechanismName: string): 
   const marked = [point, peakPower, bestEfficiency].flatMap((one) => (one ? [one.torqueNm] : []));
   const bends = [available.stallTorqueNm, sheet.stallTorqueNm, stopsAtNm, ...(current ? [current.fromNm] : [])];
   return {
-    mechanism: mechanism.name,
-    motorCount: drive.motorCount,
-    state,
-    verdict: words,
+    ...headOf(analysis, mechanism),
     available: endsOf(available),
     sheet: endsOf(sheet),
     samples: samplesOf(drive, sheet, stopsAtNm, [...marked, ...bends]),
@@ -130,9 +117,6 @@ export function operatingPointChart(analysis: Analysis, mechanismName: string): 
     peakPower: peakPower ?? null,
     bestEfficiency: bestEfficiency ?? null,
     limits: { pastPeakFromNm: available.stallTorqueNm / 2, stopsAtNm, current, others: limitsOf(drive, available) },
-    findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
-    assumed: mechanism.assumed,
-    notChecked: mechanism.notChecked,
   };
 }
 

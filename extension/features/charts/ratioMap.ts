@@ -3,14 +3,16 @@
  *
  * The map takes many solutions: it is prepared step by step when a chart is asked for, and kept by what it rests on. SI throughout.
  */
-import type { AnalysedMechanism, Analysis, Finding } from "../../analysis/analysis.js";
+import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
 import { ratioEdits } from "../../analysis/ratioEdits.js";
 import { mapRatio, type RatioMap } from "../../analysis/ratioMap.js";
 import type { RatioPoint } from "../../analysis/ratioPoint.js";
 import type { RatioSpan } from "../../analysis/ratioSpans.js";
-import { findingsAbout, ruleWords, type State, verdictOf } from "../verdict.js";
+import { ruleWords } from "../verdict.js";
 import type { ChartFeature } from "./feature.js";
+import { headOf, type MechanismHead } from "./mechanismHead.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
+import { createPreparedCharts } from "./preparedCharts.js";
 import { restsOn } from "./restsOn.js";
 
 export interface RatioMapPoint {
@@ -24,14 +26,7 @@ export interface RatioMapPoint {
   readonly breaks: readonly string[];
 }
 
-export interface RatioMapChart {
-  readonly mechanism: string;
-  readonly motorCount: number;
-  readonly state: State;
-  readonly verdict: string;
-  readonly findings: readonly Pick<Finding, "rule" | "level" | "message">[];
-  readonly assumed: readonly string[];
-  readonly notChecked: readonly string[];
+export interface RatioMapChart extends MechanismHead {
   readonly hasTravel: boolean;
   readonly withinS: number | null;
   readonly samples: readonly RatioMapPoint[];
@@ -52,37 +47,15 @@ export interface RatioMapWant {
   readonly write: { readonly mechanism: string; readonly ratio: number } | null;
 }
 
-/** Maps that are kept: of what is shown, what is saved, and what was looked at before. */
-const KEPT = 12;
-
 export function createRatioMapFeature(): ChartFeature<RatioMapChart, RatioMapWant> {
-  const maps = new Map<string, RatioMap>();
   return {
     subjects: mechanismSubjects,
-    *prepare(analysis, name) {
-      const mechanism = mechanismIn(analysis, name);
-      const key = mechanism && keyOf(analysis, mechanism);
-      if (mechanism === undefined || key === undefined || maps.has(key)) return;
-      const map = yield* mapRatio(analysis, mechanism);
-      if (map === undefined) return;
-      const [oldest] = maps.keys();
-      if (maps.size >= KEPT && oldest !== undefined) maps.delete(oldest);
-      maps.set(key, map);
-    },
-    chartOf(analysis, name) {
-      const mechanism = mechanismIn(analysis, name);
-      const map = mechanism && maps.get(keyOf(analysis, mechanism));
-      return mechanism && map && chartFrom(analysis, mechanism, map);
-    },
+    ...createPreparedCharts({ keyOf, prepare: mapRatio, chartFrom }),
     whyOld: whyMechanismIsOld,
     editsFor: (analysis, _name, { write }) =>
       write === null ? undefined : ratioEdits(analysis, write.mechanism, write.ratio)?.edits,
     nothing: noMechanism,
   };
-}
-
-function mechanismIn({ mechanisms }: Analysis, name: string): AnalysedMechanism | undefined {
-  return mechanisms.find((one) => one.name === name && one.numbers !== undefined);
 }
 
 /** Beside the declaration: what the project's settings and the allowances above it say. */
@@ -94,24 +67,18 @@ function keyOf(analysis: Analysis, mechanism: AnalysedMechanism): string {
 }
 
 function chartFrom(analysis: Analysis, mechanism: AnalysedMechanism, map: RatioMap): RatioMapChart {
-  const { state, words } = verdictOf(analysis, mechanism);
-  const { drive } = mechanism;
+  const head = headOf(analysis, mechanism);
   const { fastest, bestEfficiency, toWrite } = map;
   const writable = (one: (RatioPoint & { readonly words: string }) | null) => one && { ...pointFrom(one), words: one.words };
   return {
-    mechanism: mechanism.name,
-    motorCount: drive?.motorCount ?? 1,
-    state,
-    verdict: words,
-    findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
+    ...head,
     assumed: [
-      ...mechanism.assumed,
+      ...head.assumed,
       "Losses and inertias of the stages stay as they are at every ratio.",
       ...(map.middleOnly ? ["Over the ratio, rules are judged for the middle of each range."] : []),
     ],
-    notChecked: mechanism.notChecked,
     hasTravel: mechanism.numbers?.travel !== null,
-    withinS: drive?.withinS ?? null,
+    withinS: mechanism.drive?.withinS ?? null,
     samples: map.samples.map(pointFrom),
     kept: map.kept,
     broken: map.broken.map(({ rule, spans }) => ({ words: ruleWords(rule), spans })),

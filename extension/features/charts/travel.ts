@@ -4,7 +4,7 @@
  *
  * SI throughout (temperatures °C), one motor unless the name says otherwise. Positions and speeds are in the load's own coordinate.
  */
-import type { AnalysedMechanism, Analysis, Finding } from "../../analysis/analysis.js";
+import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
 import { greatestTorque } from "../../model/bestPoints.js";
 import type { Drive, Protection } from "../../model/drive.js";
 import { requiredMotorTorque } from "../../model/hardest.js";
@@ -14,19 +14,12 @@ import type { TravelSample } from "../../model/observer.js";
 import { type ShaftLoad, shaftLoadOf, travelDirection } from "../../model/shaftLoad.js";
 import { solveTravel } from "../../model/travel.js";
 import type { TravelOutcome, TravelResult } from "../../model/travelResult.js";
-import { findingsAbout, type State, verdictOf } from "../verdict.js";
 import type { ChartFeature, NoChart, Wish } from "./feature.js";
 import { keptMoments } from "./keptMoments.js";
+import { headOf, type MechanismHead } from "./mechanismHead.js";
 import { mechanismSubjects, noMechanism, whyMechanismIsOld } from "./mechanismSubjects.js";
 
-export interface TravelChart {
-  readonly mechanism: string;
-  readonly motorCount: number;
-  readonly state: State;
-  readonly verdict: string;
-  readonly findings: readonly Pick<Finding, "rule" | "level" | "message">[];
-  readonly assumed: readonly string[];
-  readonly notChecked: readonly string[];
+export interface TravelChart extends MechanismHead {
   /** m, rad, or nothing where the load only turns. */
   readonly coordinate: "length" | "angle" | null;
   /** Null for a load that only turns. */
@@ -124,16 +117,9 @@ export function travelChart(analysis: Analysis, mechanismName: string): TravelCh
   const direction = travelDirection(load);
   const neededAt = (position: number): number => requiredMotorTorque(drive, position, direction);
   const samples = thinned(travel.samples);
-  const { state, words } = verdictOf(analysis, mechanism);
   const pick = (read: (sample: TravelSample) => number): number[] => samples.map(read);
   return {
-    mechanism: mechanism.name,
-    motorCount: drive.motorCount,
-    state,
-    verdict: words,
-    findings: findingsAbout(analysis, mechanism).map(({ rule, level, message }) => ({ rule, level, message })),
-    assumed: mechanism.assumed,
-    notChecked: mechanism.notChecked,
+    ...headOf(analysis, mechanism),
     coordinate: coordinateOf(load),
     travel: load.endless ? null : { from: load.startRad * load.ownPerRad, to: load.endRad * load.ownPerRad },
     outcome: travel.outcome,

@@ -5,6 +5,7 @@
  */
 import type { Plot, PlotOptions } from "../../frame/sheet.js";
 import type { Theme } from "../../theme/theme.js";
+import { fitCanvas } from "../fitCanvas.js";
 import type { SeriesDrawing, Side } from "./drawing.js";
 import { type Frame, frameOf, type Room } from "./frame.js";
 import { paintAxes } from "./paintAxes.js";
@@ -37,19 +38,14 @@ export function createSeriesPlot(
   let painted: { readonly frame: Frame; readonly width: number; readonly height: number; readonly ratio: number } | undefined;
 
   const paint = (): void => {
-    const size = box === null ? own : { width: box.clientWidth, height: box.clientHeight };
-    const ratio = pixelRatio ?? window.devicePixelRatio;
-    const pen = canvas.getContext("2d");
-    if (theme === undefined || pen === null || size.width === 0 || size.height === 0) return;
-    canvas.width = Math.round(size.width * ratio);
-    canvas.height = Math.round(size.height * ratio);
-    if (box !== null) [canvas.style.width, canvas.style.height] = [`${size.width}px`, `${size.height}px`];
-    pen.setTransform(ratio, 0, 0, ratio, 0, 0);
-    const frame = frameOf(drawing, size.width, size.height, room);
+    const fitted = theme && fitCanvas(canvas, box, own, pixelRatio);
+    if (theme === undefined || fitted === undefined) return;
+    const { pen, width, height, ratio } = fitted;
+    const frame = frameOf(drawing, width, height, room);
     paintAxes(pen, drawing, frame, theme);
     paintSeries(pen, drawing, frame, theme, ratio);
     paintWords(pen, drawing, frame, theme);
-    painted = { frame, ...size, ratio };
+    painted = { frame, width, height, ratio };
     ground = undefined;
     if (cursor !== null) showCursor(cursor);
   };

@@ -4,6 +4,7 @@
  * What reduces the result is hatched, so that no one needs the side alone. The cursor frames a bar.
  */
 import type { Plot, PlotOptions } from "../../frame/sheet.js";
+import { fitCanvas } from "../../plots/fitCanvas.js";
 import { hatchPattern } from "../../plots/hatch.js";
 import type { Theme } from "../../theme/theme.js";
 import { type Bar, writeEffect } from "./ranks.js";
@@ -32,20 +33,15 @@ export function createBarPlot(
   let cursor: number | null = null;
 
   const paint = (): void => {
-    const size = box === null ? own : { width: box.clientWidth, height: box.clientHeight };
-    const ratio = pixelRatio ?? window.devicePixelRatio;
-    const pen = canvas.getContext("2d");
-    if (theme === undefined || pen === null || size.width === 0 || size.height === 0) return;
-    canvas.width = Math.round(size.width * ratio);
-    canvas.height = Math.round(size.height * ratio);
-    if (box !== null) [canvas.style.width, canvas.style.height] = [`${size.width}px`, `${size.height}px`];
-    pen.setTransform(ratio, 0, 0, ratio, 0, 0);
+    const fitted = theme && fitCanvas(canvas, box, own, pixelRatio);
+    if (theme === undefined || fitted === undefined) return;
+    const { pen, width, ratio } = fitted;
     pen.font = `${FONT}px ${theme.fontFamily}`;
     pen.textBaseline = "middle";
-    paintBars(pen, bars, { ...size, theme, cursor, ratio });
+    paintBars(pen, bars, { width, theme, cursor, ratio });
     pen.fillStyle = theme.foreground;
     pen.textAlign = "center";
-    pen.fillText(title, size.width / 2, TOP + bars.length * ROW + TITLE / 2, size.width - 2 * EDGE);
+    pen.fillText(title, width / 2, TOP + bars.length * ROW + TITLE / 2, width - 2 * EDGE);
   };
 
   const observer = box === null ? undefined : new ResizeObserver(() => paint());
