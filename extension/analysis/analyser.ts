@@ -7,7 +7,7 @@
 import { DEFINITIONS, SPECIFIER } from "../declarations/table.js";
 import { createEvaluator } from "../evaluator/evaluator.js";
 import type { TypeScript } from "../evaluator/typescript.js";
-import type { Snapshot } from "../evaluator/value.js";
+import type { DefinitionCall, Snapshot } from "../evaluator/value.js";
 import { applyAllowances } from "./allowances.js";
 import type { Analysis, Finding } from "./analysis.js";
 import { createDeclarationFinder } from "./declarationFindings.js";
@@ -55,6 +55,8 @@ export function createAnalyser(typescript: TypeScript): Analyser {
         robots: judgedRobots.robots,
         findings,
         findingsByMechanism: groupByMechanism(findings),
+        findingsIn: groupBy(findings, ({ at }) => at.file),
+        inFile: groupByFile(files, judged.mechanisms, declared.motors, judgedRobots.robots),
         files,
         wanted: [...new Set([...evaluated.wanted, ...settings.wanted])].sort(),
         snapshot,
@@ -63,6 +65,32 @@ export function createAnalyser(typescript: TypeScript): Analyser {
       };
     },
   };
+}
+
+function groupByFile(
+  files: Analysis["files"],
+  mechanisms: Analysis["mechanisms"],
+  motors: Analysis["motors"],
+  robots: Analysis["robots"],
+): Analysis["inFile"] {
+  const fileOf = ({ call }: { readonly call: DefinitionCall }) => call.span.file;
+  const [m, o, r] = [groupBy(mechanisms, fileOf), groupBy(motors, fileOf), groupBy(robots, fileOf)];
+  return new Map(
+    [...files].map(([file, evaluation]) => [
+      file,
+      { evaluation, mechanisms: m.get(file) ?? [], motors: o.get(file) ?? [], robots: r.get(file) ?? [] },
+    ]),
+  );
+}
+
+function groupBy<Item>(items: readonly Item[], keyOf: (item: Item) => string): ReadonlyMap<string, readonly Item[]> {
+  const groups = new Map<string, Item[]>();
+  for (const item of items) {
+    const group = groups.get(keyOf(item));
+    if (group === undefined) groups.set(keyOf(item), [item]);
+    else group.push(item);
+  }
+  return groups;
 }
 
 function groupByMechanism(findings: readonly Finding[]): ReadonlyMap<string, readonly Finding[]> {

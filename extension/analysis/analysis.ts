@@ -66,6 +66,14 @@ export interface AnalysedRobot {
 
 export type Levels = Readonly<Partial<Record<RuleId, Level | "off">>>;
 
+/** What one file declares: the same object as in the analysis before as long as nothing of it changed. */
+export interface FileAnalysis {
+  readonly evaluation: FileEvaluation;
+  readonly mechanisms: readonly AnalysedMechanism[];
+  readonly motors: readonly AnalysedMotor[];
+  readonly robots: readonly AnalysedRobot[];
+}
+
 export interface Analysis {
   /** In order of file, then position; so are findings. */
   readonly mechanisms: readonly AnalysedMechanism[];
@@ -74,6 +82,10 @@ export interface Analysis {
   readonly findings: readonly Finding[];
   /** The same by name of the mechanism that they are about: an editor asks for every mechanism's after every edit. */
   readonly findingsByMechanism: ReadonlyMap<string, readonly Finding[]>;
+  /** Findings by the file that they sit in; the same list as in the analysis before as long as nothing changed. Files without are absent. */
+  readonly findingsIn: ReadonlyMap<string, readonly Finding[]>;
+  /** By file, all that were evaluated. A mechanism is under the file of its call, which may be another than that of its place. */
+  readonly inFile: ReadonlyMap<string, FileAnalysis>;
   /** Every file that was evaluated, with what it says. */
   readonly files: ReadonlyMap<string, FileEvaluation>;
   /** Files to load before the result is whole; the host loads them and runs again. */

@@ -1,5 +1,5 @@
 /** The result where nothing is declared: nothing need be loaded to say so. */
-import type { Finding } from "../analysis/analysis.js";
+import type { FileAnalysis, Finding } from "../analysis/analysis.js";
 import type { Engine } from "./engine.js";
 import type { Result } from "./session.js";
 import type { TextSnapshot } from "./texts.js";
@@ -11,6 +11,8 @@ export function resultOfNothing(snapshot: TextSnapshot): Result {
     robots: [],
     findings: [],
     findingsByMechanism: new Map<string, readonly Finding[]>(),
+    findingsIn: new Map<string, readonly Finding[]>(),
+    inFile: new Map<string, FileAnalysis>(),
     wanted: [],
     levels: new Map(),
     toothCounts: new Map<string, readonly number[]>(),

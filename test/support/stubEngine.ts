@@ -52,6 +52,8 @@ function analyse(roots: readonly string[], snapshot: Snapshot): Analysis {
     robots: [],
     findings,
     findingsByMechanism: new Map(),
+    findingsIn: new Map(),
+    inFile: new Map(),
     files,
     wanted: [...wanted],
     levels: new Map(),
