@@ -5,14 +5,16 @@ import { RULES } from "../rules/table.js";
 import { nearest } from "../units/nearest.js";
 import type { Finding } from "./analysis.js";
 import type { Declared } from "./declared.js";
+import { sameSpan } from "./spans.js";
 
-/** The findings that no allowance silences, and those about the allowances themselves. */
-export function applyAllowances(findings: readonly Finding[], declared: Declared): Finding[] {
+/** The findings of a file that no allowance in it silences, and those about the allowances themselves. */
+export function applyAllowances(findings: readonly Finding[], allowances: Declared["allowances"]): readonly Finding[] {
+  if (allowances.length === 0) return findings;
   const about: Finding[] = [];
   const silenced = new Set<Finding>();
-  for (const { at, rule, reason, names, robots } of declared.allowances) {
+  for (const { at, rule, reason, names, robots } of allowances) {
     const isMeant = (finding: Finding): boolean =>
-      finding.mechanism === null ? robots.some((one) => isAt(finding, one)) : names.has(finding.mechanism);
+      finding.mechanism === null ? robots.some((one) => sameSpan(finding.at, one)) : names.has(finding.mechanism);
     const hit = findings.filter((finding) => finding.rule === rule && isMeant(finding));
     const [name = null] = names;
     const refusal = refuse(rule, reason, hit.length > 0, name);
@@ -20,10 +22,6 @@ export function applyAllowances(findings: readonly Finding[], declared: Declared
     else for (const finding of hit) silenced.add(finding);
   }
   return [...findings.filter((finding) => !silenced.has(finding)), ...about];
-}
-
-function isAt({ at }: Finding, { file, start, end }: Span): boolean {
-  return at.file === file && at.start === start && at.end === end;
 }
 
 function refuse(rule: string, reason: string, matches: boolean, mechanism: string | null): ((at: Span) => Finding) | undefined {

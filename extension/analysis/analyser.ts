@@ -2,21 +2,22 @@
  * The one entrance: a snapshot of texts in; mechanisms, numbers and findings out.
  *
  * Synchronous, and pure but for its caches: the same snapshot gives the same result. Does not read files; what the snapshot lacks comes
- * back in `wanted`.
+ * back in `wanted`. Every step keeps its results by file, and an edit costs what rests on it.
  */
 import { DEFINITIONS, SPECIFIER } from "../declarations/table.js";
 import { createEvaluator } from "../evaluator/evaluator.js";
 import type { TypeScript } from "../evaluator/typescript.js";
-import type { DefinitionCall, Snapshot } from "../evaluator/value.js";
-import { applyAllowances } from "./allowances.js";
+import type { Snapshot } from "../evaluator/value.js";
 import type { Analysis, Finding } from "./analysis.js";
 import { createDeclarationFinder } from "./declarationFindings.js";
 import { createCollector } from "./declared.js";
-import { evaluateAll } from "./evaluateAll.js";
+import { createEvaluations } from "./evaluateAll.js";
+import { createGatherer, type Gathered } from "./gather.js";
 import { createJudge } from "./judge.js";
-import { createRobotJudge, unjudged } from "./judgeRobots.js";
+import { createRobotJudge } from "./judgeRobots.js";
 import { createCallPlacer } from "./placeCalls.js";
-import { createSettingsReader } from "./settings.js";
+import { createRobotLists } from "./robotLists.js";
+import { createSettingsReader, type ReadSettings } from "./settings.js";
 
 export interface Analyser {
   /**
@@ -28,69 +29,86 @@ export interface Analyser {
 
 /** `typescript`: the loaded parser, so that loading it stays the host's decision. */
 export function createAnalyser(typescript: TypeScript): Analyser {
-  const evaluator = createEvaluator(typescript, { specifier: SPECIFIER, definitions: DEFINITIONS });
-  const placeCalls = createCallPlacer();
-  const collectDeclared = createCollector();
-  const findInDeclarations = createDeclarationFinder();
-  const judge = createJudge();
-  const judgeRobots = createRobotJudge();
-  const readSettings = createSettingsReader(typescript);
+  let steps = createSteps(typescript);
   return {
     analyse(roots, snapshot, mechanismsOnly = false) {
-      const evaluated = evaluateAll(evaluator, roots, snapshot);
-      const files = placeCalls(evaluated.files);
-      const settings = readSettings([...files.keys()], snapshot);
-      const declared = collectDeclared(files.values());
-      const judged = judge(declared);
-      const judgedRobots = mechanismsOnly ? unjudged(declared) : judgeRobots(declared, judged);
-      const found = [
-        ...findInDeclarations([...files.values()], declared, snapshot),
-        ...judged.findings,
-        ...judgedRobots.findings,
-      ];
-      const findings = [...settings.findings, ...settings.applyLevels(applyAllowances(found, declared))].sort(byPlace);
-      return {
-        mechanisms: judged.mechanisms,
-        motors: declared.motors,
-        robots: judgedRobots.robots,
-        findings,
-        findingsByMechanism: groupByMechanism(findings),
-        findingsIn: groupBy(findings, ({ at }) => at.file),
-        inFile: groupByFile(files, judged.mechanisms, declared.motors, judgedRobots.robots),
-        files,
-        wanted: [...new Set([...evaluated.wanted, ...settings.wanted])].sort(),
-        snapshot,
-        levels: settings.levels,
-        toothCounts: settings.toothCounts,
-      };
+      try {
+        return steps(roots, snapshot, mechanismsOnly);
+      } catch (error) {
+        // Steps that were left half-way no longer know what changed.
+        steps = createSteps(typescript);
+        throw error;
+      }
     },
   };
 }
 
-function groupByFile(
-  files: Analysis["files"],
-  mechanisms: Analysis["mechanisms"],
-  motors: Analysis["motors"],
-  robots: Analysis["robots"],
-): Analysis["inFile"] {
-  const fileOf = ({ call }: { readonly call: DefinitionCall }) => call.span.file;
-  const [m, o, r] = [groupBy(mechanisms, fileOf), groupBy(motors, fileOf), groupBy(robots, fileOf)];
-  return new Map(
-    [...files].map(([file, evaluation]) => [
-      file,
-      { evaluation, mechanisms: m.get(file) ?? [], motors: o.get(file) ?? [], robots: r.get(file) ?? [] },
-    ]),
-  );
+function createSteps(typescript: TypeScript) {
+  const evaluate = createEvaluations(createEvaluator(typescript, { specifier: SPECIFIER, definitions: DEFINITIONS }));
+  const placeCalls = createCallPlacer();
+  const readSettings = createSettingsReader(typescript);
+  const collectDeclared = createCollector();
+  const lists = createRobotLists();
+  const judge = createJudge();
+  const robotJudge = createRobotJudge();
+  const findInDeclarations = createDeclarationFinder();
+  const gather = createGatherer();
+  let settings: ReadSettings | undefined;
+  return (roots: readonly string[], snapshot: Snapshot, mechanismsOnly: boolean): Analysis => {
+    const evaluated = evaluate(roots, snapshot);
+    const evaluations = placeCalls(evaluated);
+    if (settings === undefined || !evaluated.isSameProject) settings = readSettings([...evaluations.of.keys()], snapshot);
+    const declared = collectDeclared(evaluations);
+    const relisted = lists.update(declared);
+    const judged = judge(declared, lists, relisted);
+    const round = { declared, judged, lists };
+    const robots = mechanismsOnly ? robotJudge.leaveOut(round) : robotJudge.judge(round);
+    const texts = findInDeclarations(evaluations, declared, snapshot);
+    const gathered = gather({ evaluations, declared, texts, judged, robots, settings });
+    return analysisOf(gathered, settings, [...new Set([...evaluated.wanted, ...settings.wanted])].sort(), snapshot);
+  };
 }
 
-function groupBy<Item>(items: readonly Item[], keyOf: (item: Item) => string): ReadonlyMap<string, readonly Item[]> {
-  const groups = new Map<string, Item[]>();
-  for (const item of items) {
-    const group = groups.get(keyOf(item));
-    if (group === undefined) groups.set(keyOf(item), [item]);
-    else group.push(item);
-  }
-  return groups;
+/** Lists over all files are put together when somebody asks for them. */
+function analysisOf(
+  { inFile, findingsIn }: Gathered,
+  { levels, toothCounts }: ReadSettings,
+  wanted: readonly string[],
+  snapshot: Snapshot,
+): Analysis {
+  const perFile = () => [...inFile.values()];
+  const mechanisms = once(() => perFile().flatMap((file) => file.mechanisms));
+  const motors = once(() => perFile().flatMap((file) => file.motors));
+  const robots = once(() => perFile().flatMap((file) => file.robots));
+  const files = once(() => new Map([...inFile].map(([file, { evaluation }]) => [file, evaluation])));
+  const findings = once(() => [...findingsIn.keys()].sort().flatMap((file) => findingsIn.get(file) ?? []));
+  const findingsByMechanism = once(() => groupByMechanism(findings()));
+  return {
+    get mechanisms() {
+      return mechanisms();
+    },
+    get motors() {
+      return motors();
+    },
+    get robots() {
+      return robots();
+    },
+    get findings() {
+      return findings();
+    },
+    get files() {
+      return files();
+    },
+    get findingsByMechanism() {
+      return findingsByMechanism();
+    },
+    findingsIn,
+    inFile,
+    wanted,
+    snapshot,
+    levels,
+    toothCounts,
+  };
 }
 
 function groupByMechanism(findings: readonly Finding[]): ReadonlyMap<string, readonly Finding[]> {
@@ -104,20 +122,10 @@ function groupByMechanism(findings: readonly Finding[]): ReadonlyMap<string, rea
   return groups;
 }
 
-const LEVELS: readonly Finding["level"][] = ["error", "warning", "information"];
-
-/** By file and position; of findings at one place the worst first. */
-function byPlace(a: Finding, b: Finding): number {
-  return (
-    compare(a.at.file, b.at.file) ||
-    a.at.start - b.at.start ||
-    a.at.end - b.at.end ||
-    LEVELS.indexOf(a.level) - LEVELS.indexOf(b.level) ||
-    compare(a.rule, b.rule) ||
-    compare(a.message, b.message)
-  );
-}
-
-function compare(a: string, b: string): number {
-  return a === b ? 0 : a < b ? -1 : 1;
+function once<Result>(make: () => Result): () => Result {
+  let made: { readonly result: Result } | undefined;
+  return () => {
+    made ??= { result: make() };
+    return made.result;
+  };
 }

@@ -72,6 +72,8 @@ export interface FileAnalysis {
   readonly mechanisms: readonly AnalysedMechanism[];
   readonly motors: readonly AnalysedMotor[];
   readonly robots: readonly AnalysedRobot[];
+  /** Findings about these, in order of place; one may sit in another file, as where a caller gives a helper the name. */
+  readonly findings: readonly Finding[];
 }
 
 export interface Analysis {

@@ -1,145 +1,94 @@
-/** Findings about the declarations themselves: refused arguments, names used twice, values that cannot be known. */
-import type { DefinitionCall, FileEvaluation, Snapshot, Span, Unknown } from "../evaluator/value.js";
-import { badDeclaration, tellIssue, tellMissing, tellNameTwice } from "../rules/badDeclaration.js";
-import { notConstant, tellUnknown } from "../rules/notConstant.js";
+/**
+ * Findings about the declarations themselves: refused arguments, names used twice, values that cannot be known.
+ *
+ * Names and causes are compared over all files, but only where a file changed that has something to compare.
+ */
+import type { FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
 import type { Finding } from "./analysis.js";
-import { type Declared, stringIn } from "./declared.js";
+import { type ByFile, createKeeper, groupBySite, sameContent, union } from "./byFile.js";
+import type { Declared } from "./declared.js";
+import { distinctPlaces } from "./spans.js";
+import { readTextFacts, type TextFacts } from "./textFacts.js";
+import { findUnknowns } from "./unknownFindings.js";
+import { createNameCounter, findNamesTwice } from "./usedNames.js";
 
-type Finder = (evaluations: readonly FileEvaluation[], declared: Declared, snapshot: Snapshot) => Finding[];
+export interface DeclarationFindings extends ByFile<readonly Finding[]> {
+  /** By file, those that sit where nothing is analysed. */
+  readonly outside: ReadonlyMap<string, readonly Finding[]>;
+}
 
-/** What concerns one file alone is kept for as long as its evaluation is; names and causes are compared over all files. */
+type Finder = (evaluations: ByFile<FileEvaluation>, declared: ByFile<Declared>, snapshot: Snapshot) => DeclarationFindings;
+
+/** By the file that they sit in; files without are absent. */
 export function createDeclarationFinder(): Finder {
-  const known = new WeakMap<FileEvaluation, FileFacts>();
-  const factsOf = (evaluation: FileEvaluation, snapshot: Snapshot): FileFacts => {
-    const before = known.get(evaluation);
-    if (before !== undefined) return before;
-    const { calls } = evaluation;
-    const facts: FileFacts = {
-      findings: [...findProblem(evaluation), ...calls.flatMap((call) => findIssues(call, calls, snapshot))],
-      unknowns: calls.flatMap((call) => call.unknowns),
-      names: calls.flatMap(namesGivenBy),
-    };
-    known.set(evaluation, facts);
-    return facts;
-  };
-  return (evaluations, declared, snapshot) => {
-    const all = evaluations.map((evaluation) => factsOf(evaluation, snapshot));
-    const names = all.flatMap((facts) => facts.names);
-    const aboutText = [
-      ...all.flatMap((facts) => facts.findings),
-      ...findNamesTwice("mechanism", names),
-      ...findNamesTwice("robot", names),
-    ];
-    const unknowns = findUnknowns(all.flatMap((facts) => facts.unknowns));
-    return [...mergeAlike(aboutText), ...unknowns].map((finding) => ({
-      ...finding,
-      mechanism: finding.mechanism ?? mechanismAround(finding.at, declared),
-    }));
+  const facts = createKeeper<TextFacts>();
+  const compare = createComparer();
+  const kept = createKeeper<readonly Finding[]>();
+  return ({ of, changed }, declared, snapshot) => {
+    const before = new Map([...changed].map((file) => [file, facts.of.get(file)]));
+    const known = facts.update(of, changed, (file) => {
+      const evaluation = of.get(file);
+      return evaluation && orNothing(readTextFacts(evaluation, snapshot));
+    });
+    const between = compare(known, before);
+    const result = kept.update(
+      of,
+      union(changed, between.changed),
+      (file) => {
+        const findings = mergeAlike([...(known.of.get(file)?.findings ?? []), ...(between.of.get(file) ?? [])]);
+        if (findings.length === 0) return undefined;
+        const around = (at: Span) => mechanismAround(at, declared.of.get(at.file));
+        return findings.map((finding) => ({ ...finding, mechanism: finding.mechanism ?? around(finding.at) }));
+      },
+      sameContent,
+    );
+    return { ...result, outside: new Map([...between.of].filter(([file]) => !of.has(file))) };
   };
 }
 
-interface FileFacts {
-  readonly findings: readonly Finding[];
-  readonly unknowns: readonly Unknown[];
-  readonly names: readonly GivenName[];
+/** Most files say nothing that would have to be kept. */
+function orNothing(facts: TextFacts): TextFacts | undefined {
+  const { findings, strays, unknowns, names } = facts;
+  return findings.length + strays.length + unknowns.length + names.length === 0 ? undefined : facts;
 }
 
-interface GivenName {
-  readonly kind: "mechanism" | "robot";
-  readonly name: string;
-  readonly at: Span;
-}
+type Between = Pick<ByFile<readonly Finding[]>, "of" | "changed">;
 
-/** A file that could not be read at all, such as one nested too deeply for any parser. */
-function findProblem({ problem }: FileEvaluation): Finding[] {
-  if (problem === undefined) return [];
-  const { message } = tellUnknown(problem);
-  return [{ rule: notConstant.id, level: notConstant.level, mechanism: null, message, at: problem.origin.span, related: [] }];
-}
-
-function findIssues(call: DefinitionCall, calls: readonly DefinitionCall[], snapshot: Snapshot): Finding[] {
-  return issuesToTell(call, calls, snapshot).map((issue) => ({
-    rule: badDeclaration.id,
-    level: badDeclaration.level,
-    mechanism: null,
-    message: tellIssue(issue),
-    at: issue.span,
-    related: issue.source ? [{ at: issue.source, message: "The value comes from here." }] : [],
-  }));
-}
-
-/** Of a call that is still being typed, one issue: the innermost, since the fields around it are yet to come. */
-function issuesToTell(call: DefinitionCall, calls: readonly DefinitionCall[], snapshot: Snapshot): DefinitionCall["issues"] {
-  if (call.issues.length === 0) return [];
-  const { file, start, end } = call.span;
-  const isFinished = snapshot.read(file)?.[end - 1] === ")";
-  if (isFinished) return call.issues;
-  const isTold = calls.some(
-    ({ span, issues, unknowns }) =>
-      span.file === file && span.start > start && span.end <= end && issues.length + unknowns.filter(isMissing).length > 0,
-  );
-  return isTold ? [] : call.issues.slice(0, 1);
-}
-
-/** One finding per root cause, at the use that lies nearest to it; other uses are related. */
-function findUnknowns(unknowns: readonly Unknown[]): Finding[] {
-  const byRoot = new Map<string, Unknown[]>();
-  for (const unknown of unknowns) {
-    const root = rootOf(unknown);
-    const key = JSON.stringify([root.origin.span, root.reason.code]);
-    const uses = byRoot.get(key);
-    if (uses === undefined) byRoot.set(key, [unknown]);
-    else uses.push(unknown);
-  }
-  return [...byRoot.values()].map((uses) => {
-    const nearest = uses.reduce((best, use) => (depthOf(use) < depthOf(best) ? use : best));
-    const { message, chain } = tellUnknown(nearest);
-    const root = rootOf(nearest);
-    const missing = isMissing(root);
-    const steps = chain.map((link) => ({
-      at: link.origin.span,
-      message: link === root ? "This cannot be known." : "It comes through here.",
-    }));
-    const others = uses
-      .filter((use) => use !== nearest && !sameSpan(use.origin.span, nearest.origin.span))
-      .map((use) => ({ at: use.origin.span, message: "This depends on it too." }));
-    return {
-      rule: missing ? badDeclaration.id : notConstant.id,
-      level: missing ? badDeclaration.level : notConstant.level,
-      mechanism: null,
-      message: missing ? tellMissing(root) : message,
-      at: nearest.origin.span,
-      related: distinct([...steps, ...others], nearest.origin.span),
-    };
-  });
-}
-
-function namesGivenBy({ definition, args }: DefinitionCall): GivenName[] {
-  const [value] = args;
-  const name = value === undefined ? undefined : stringIn(value);
-  if (value === undefined || name === undefined || (definition !== "mechanism" && definition !== "robot")) return [];
-  return [{ kind: definition, name, at: value.origin.span }];
-}
-
-function findNamesTwice(wanted: GivenName["kind"], names: readonly GivenName[]): Finding[] {
-  const first = new Map<string, Span>();
-  const findings: Finding[] = [];
-  for (const { kind, name, at } of names) {
-    if (kind !== wanted) continue;
-    const before = first.get(name);
-    if (before === undefined) first.set(name, at);
-    else {
-      findings.push({
-        ...badDeclaration,
-        rule: badDeclaration.id,
-        mechanism: kind === "mechanism" ? name : null,
-        message: tellNameTwice(kind, name),
-        at,
-        related: [{ at: before, message: "First used here." }],
-      });
+/** What only several files together tell, by the file that it sits in. */
+function createComparer(): (facts: ByFile<TextFacts>, before: ReadonlyMap<string, TextFacts | undefined>) => Between {
+  const names = createNameCounter();
+  /** Files with unknowns or strays. */
+  const special = new Set<string>();
+  let last: ReadonlyMap<string, readonly Finding[]> = new Map();
+  return ({ of, changed }, before) => {
+    let isOld = names.isAnyTwice && changed.size > 0;
+    for (const file of changed) {
+      const now = of.get(file);
+      names.replace(before.get(file)?.names ?? [], now?.names ?? []);
+      if (special.delete(file)) isOld = true;
+      if (now === undefined || now.unknowns.length + now.strays.length === 0) continue;
+      special.add(file);
+      isOld = true;
     }
-  }
-  return findings;
+    if (changed.size > 0 && names.isAnyTwice) isOld = true;
+    if (!isOld) return { of: last, changed: new Set() };
+    const found = groupBySite(compareAll(of, special, names.isAnyTwice));
+    const differs = (file: string) => !sameContent(last.get(file) ?? [], found.get(file) ?? []);
+    const result = { of: found, changed: new Set([...union(last.keys(), found.keys())].filter(differs)) };
+    last = found;
+    return result;
+  };
+}
+
+function compareAll(facts: ReadonlyMap<string, TextFacts>, special: ReadonlySet<string>, isAnyTwice: boolean): Finding[] {
+  const some = [...special].sort().flatMap((file) => facts.get(file) ?? []);
+  const names = isAnyTwice ? [...facts.values()].flatMap((one) => one.names) : [];
+  return [
+    ...some.flatMap(({ strays }) => strays),
+    ...findNamesTwice("mechanism", names),
+    ...findNamesTwice("robot", names),
+    ...findUnknowns(some.flatMap(({ unknowns }) => unknowns)),
+  ];
 }
 
 /** The runs of a loop or a helper say the same of its text: told once, with all that is related. */
@@ -149,39 +98,14 @@ function mergeAlike(findings: readonly Finding[]): Finding[] {
     const { at, rule, message, related } = finding;
     const key = JSON.stringify([at.file, at.start, at.end, rule, message]);
     const before = merged.get(key);
-    merged.set(key, { ...(before ?? finding), related: distinct([...(before?.related ?? []), ...related], at) });
+    merged.set(key, { ...(before ?? finding), related: distinctPlaces([...(before?.related ?? []), ...related], at) });
   }
   return [...merged.values()];
 }
 
-function mechanismAround(at: Span, declared: Declared): string | null {
-  const around = declared.mechanisms.find(
+function mechanismAround(at: Span, declared: Declared | undefined): string | null {
+  const around = declared?.mechanisms.find(
     ({ call: { span } }) => span.file === at.file && span.start <= at.start && at.end <= span.end,
   );
   return around?.name ?? null;
-}
-
-function isMissing(unknown: Unknown): boolean {
-  return rootOf(unknown).reason.code === "missing";
-}
-
-function rootOf(unknown: Unknown): Unknown {
-  return unknown.cause === undefined ? unknown : rootOf(unknown.cause);
-}
-
-function depthOf(unknown: Unknown): number {
-  return unknown.cause === undefined ? 0 : 1 + depthOf(unknown.cause);
-}
-
-function distinct<Item extends { readonly at: Span }>(items: readonly Item[], except: Span): Item[] {
-  const seen = new Set([keyOf(except)]);
-  return items.filter(({ at }) => seen.size < seen.add(keyOf(at)).size);
-}
-
-function keyOf({ file, start, end }: Span): string {
-  return `${start} ${end} ${file}`;
-}
-
-function sameSpan(a: Span, b: Span): boolean {
-  return a.file === b.file && a.start === b.start && a.end === b.end;
 }

@@ -1,22 +1,27 @@
-/** From calls to definitions to the mechanisms, motors and robots that a workspace declares. Runs no physics. */
+/** From calls to definitions to the mechanisms, motors and robots that each file declares. Runs no physics. */
 import type { Mechanism } from "../declarations/mechanism.js";
 import type { Motor } from "../declarations/motor.js";
 import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall, FileEvaluation, Span, Value } from "../evaluator/value.js";
 import { type AllowanceComment, listAllowances } from "./allowanceComments.js";
 import type { AnalysedMechanism, AnalysedMotor, AnalysedRobot } from "./analysis.js";
+import { type ByFile, createKeeper } from "./byFile.js";
+import { spanKey } from "./spans.js";
 
+/** What one file declares. */
 export interface Declared {
-  readonly mechanisms: readonly Omit<AnalysedMechanism, "assumed" | "notChecked" | "numbers">[];
+  readonly mechanisms: readonly DeclaredMechanism[];
   readonly motors: readonly AnalysedMotor[];
   readonly robots: readonly DeclaredRobot[];
   /** Those of which a value is unknown or refused. */
   readonly unknownRobots: readonly RobotCall[];
   /** Calls that declare several mechanisms by one piece of text, as in a loop or a helper: a finding there must say which it means. */
-  readonly shared: readonly DefinitionCall[];
+  readonly shared: ReadonlySet<DefinitionCall>;
   /** Comments above mechanisms and robots that allow something. */
   readonly allowances: readonly AllowanceComment[];
 }
+
+export type DeclaredMechanism = Omit<AnalysedMechanism, "assumed" | "notChecked" | "numbers">;
 
 /** Where a robot is declared. */
 export type RobotCall = Pick<AnalysedRobot, "name" | "at" | "call">;
@@ -25,39 +30,31 @@ export interface DeclaredRobot extends RobotCall {
   readonly declared: Robot;
 }
 
-/** What each file declares is kept for as long as its evaluation is. */
-export function createCollector(): (evaluations: Iterable<FileEvaluation>) => Declared {
+export function createCollector(): (evaluations: ByFile<FileEvaluation>) => ByFile<Declared> {
+  const kept = createKeeper<Declared>();
+  // A what-if goes back to evaluations of before.
   const known = new WeakMap<FileEvaluation, Declared>();
-  return (evaluations) => {
-    const all = [...evaluations].map((evaluation) => {
-      const before = known.get(evaluation);
-      if (before !== undefined) return before;
-      const found = declaredBy(evaluation.calls);
-      const declared = { ...found, shared: listShared(found), allowances: listAllowances(found.mechanisms, found.robots) };
+  return ({ of, changed }) =>
+    kept.update(of, changed, (file) => {
+      const evaluation = of.get(file);
+      if (evaluation === undefined) return undefined;
+      const declared = known.get(evaluation) ?? collect(evaluation.calls);
       known.set(evaluation, declared);
       return declared;
     });
-    return {
-      mechanisms: all.flatMap(({ mechanisms }) => mechanisms),
-      motors: all.flatMap(({ motors }) => motors),
-      robots: all.flatMap(({ robots }) => robots),
-      unknownRobots: all.flatMap(({ unknownRobots }) => unknownRobots),
-      shared: all.flatMap(({ shared }) => shared),
-      allowances: all.flatMap(({ allowances }) => allowances),
-    };
-  };
+}
+
+function collect(calls: readonly DefinitionCall[]): Declared {
+  const found = declaredBy(calls);
+  return { ...found, shared: findShared(found), allowances: listAllowances(found.mechanisms, found.robots) };
 }
 
 type DeclaredThings = Omit<Declared, "shared" | "allowances">;
 
-function listShared({ mechanisms }: DeclaredThings): DefinitionCall[] {
+function findShared({ mechanisms }: DeclaredThings): Set<DefinitionCall> {
   const counts = new Map<string, number>();
-  for (const { at } of mechanisms) counts.set(keyOf(at), (counts.get(keyOf(at)) ?? 0) + 1);
-  return mechanisms.flatMap(({ at, call }) => ((counts.get(keyOf(at)) ?? 0) > 1 ? [call] : []));
-}
-
-function keyOf({ file, start, end }: Span): string {
-  return `${start} ${end} ${file}`;
+  for (const { at } of mechanisms) counts.set(spanKey(at), (counts.get(spanKey(at)) ?? 0) + 1);
+  return new Set(mechanisms.flatMap(({ at, call }) => ((counts.get(spanKey(at)) ?? 0) > 1 ? [call] : [])));
 }
 
 function declaredBy(calls: readonly DefinitionCall[]): DeclaredThings {

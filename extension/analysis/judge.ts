@@ -13,12 +13,18 @@ import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
 import type { AnalysedMechanism, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
+import { type ByFile, createKeeper, sameItems, union } from "./byFile.js";
 import { comesFrom } from "./comesFrom.js";
 import { type Corner, cornersOf } from "./corners.js";
-import type { Declared, DeclaredRobot } from "./declared.js";
-import { indexRobots, supplyCallOf } from "./lentSupply.js";
+import type { Declared, DeclaredMechanism, DeclaredRobot } from "./declared.js";
+import { supplyCallOf } from "./lentSupply.js";
 import { createMemory } from "./memory.js";
+import type { RobotLists } from "./robotLists.js";
 
+/** Solutions that are remembered beside those of the declarations that are there. */
+const SPARE = 100;
+
+/** What is said of the mechanisms and motors of one file. */
 export interface Judged {
   readonly mechanisms: readonly AnalysedMechanism[];
   readonly findings: readonly Finding[];
@@ -32,8 +38,6 @@ interface Solved {
   readonly corners: number;
   readonly verdicts: readonly Judgement[];
 }
-
-type Declaring = Declared["mechanisms"][number];
 
 /** What is said of one call: the same objects as long as nothing that it rests on changed, so that those who show them can tell. */
 interface Told {
@@ -54,9 +58,13 @@ interface Facts {
   readonly corners: readonly (MechanismFacts & Pick<Corner, "told">)[];
 }
 
-export function createJudge(): (declared: Declared) => Judged {
+/** Files without either are absent. */
+export function createJudge(): (declared: ByFile<Declared>, lists: RobotLists, relisted: ReadonlySet<string>) => ByFile<Judged> {
+  const kept = createKeeper<Judged>();
+  /** Of mechanisms. */
+  let count = 0;
   const solved = new WeakMap<Mechanism, Solved>();
-  const remembered = createMemory<Pick<Solved, "drive" | "numbers" | "corners" | "verdicts">>();
+  const remembered = createMemory<Pick<Solved, "drive" | "numbers" | "corners" | "verdicts">>(() => 2 * count + SPARE);
   const solve = (mechanism: Mechanism, call: DefinitionCall, robot: DeclaredRobot | undefined): Solved => {
     const lent = mechanism.si.supply === undefined ? robot : undefined;
     const supply = lent?.declared.supply.si;
@@ -78,7 +86,7 @@ export function createJudge(): (declared: Declared) => Judged {
     return result;
   };
   const told = new WeakMap<DefinitionCall, Told>();
-  const tell = (one: Declaring, declared: Mechanism, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
+  const tell = (one: DeclaredMechanism, declared: Mechanism, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
     const solution = solve(declared, one.call, robot);
     const before = told.get(one.call);
     if (before?.solution === solution && before.robot === robot?.declared && before.isShared === isShared) return before;
@@ -96,25 +104,39 @@ export function createJudge(): (declared: Declared) => Judged {
     told.set(one.call, result);
     return result;
   };
-  return ({ mechanisms, motors, robots, shared }) => {
+  const silent = new WeakMap<DefinitionCall, AnalysedMechanism>();
+  const keepSilent = (one: DeclaredMechanism, why: string): AnalysedMechanism => {
+    const result = silent.get(one.call) ?? { ...one, assumed: [], notChecked: [why] };
+    silent.set(one.call, result);
+    return result;
+  };
+  const motorFindings = new WeakMap<DefinitionCall, readonly Finding[]>();
+  const judgeFile = ({ mechanisms, motors, shared }: Declared, lists: RobotLists): Judged => {
     const findings: Finding[] = [];
-    const sharing = new Set(shared);
-    const lending = indexRobots(robots);
     const judged = mechanisms.map((one): AnalysedMechanism => {
       const { declared } = one;
-      if (declared === undefined) return { ...one, assumed: [], notChecked: [tellWhyUnknown(one.call)] };
-      if (isImpossible(declared.motor)) {
-        return { ...one, assumed: [], notChecked: ["Nothing: the motor's sheet contradicts itself."] };
-      }
-      const result = tell(one, declared, lending.get(declared), sharing.has(one.call));
+      if (declared === undefined) return keepSilent(one, tellWhyUnknown(one.call));
+      if (isImpossible(declared.motor)) return keepSilent(one, "Nothing: the motor's sheet contradicts itself.");
+      const result = tell(one, declared, lists.lenderOf(declared), shared.has(one.call));
       findings.push(...result.findings);
       return result.mechanism;
     });
-    remembered.forgetUnused();
-    return {
-      mechanisms: judged,
-      findings: [...findings, ...motors.flatMap(({ declared, at, call }) => judgeMotor(declared, at, call))],
+    for (const { declared, at, call } of motors) {
+      const told = motorFindings.get(call) ?? judgeMotor(declared, at, call);
+      motorFindings.set(call, told);
+      findings.push(...told);
+    }
+    return { mechanisms: judged, findings };
+  };
+  return (declared, lists, relisted) => {
+    const isSame = (one: Judged, other: Judged) =>
+      sameItems(one.mechanisms, other.mechanisms) && sameItems(one.findings, other.findings);
+    const make = (file: string) => {
+      const here = declared.of.get(file);
+      count += (here?.mechanisms.length ?? 0) - (kept.of.get(file)?.mechanisms.length ?? 0);
+      return here === undefined || here.mechanisms.length + here.motors.length === 0 ? undefined : judgeFile(here, lists);
     };
+    return kept.update(declared.of, union(declared.changed, relisted), make, isSame);
   };
 }
 

@@ -11,67 +11,136 @@ import type { RobotFacts, RobotRule, RobotVerdict } from "../rules/robotRule.js"
 import { ROBOT_RULES } from "../rules/table.js";
 import { writeQuantity } from "../units/write.js";
 import type { AnalysedRobot, Finding } from "./analysis.js";
+import { type ByFile, createKeeper, sameContent, sameItems, union } from "./byFile.js";
 import { comesFrom } from "./comesFrom.js";
-import type { Declared, DeclaredRobot } from "./declared.js";
+import type { Declared, DeclaredRobot, RobotCall } from "./declared.js";
 import { type Judged, tellWhyUnknown } from "./judge.js";
 import { createMemory } from "./memory.js";
 import { leavesBelow } from "./rebuild.js";
 import { type RobotModel, robotDriveOf } from "./robotDriveOf.js";
+import type { RobotLists } from "./robotLists.js";
 
+/** What is said of the robots of one file. */
 export interface JudgedRobots {
   readonly robots: readonly AnalysedRobot[];
   readonly findings: readonly Finding[];
 }
 
-export function createRobotJudge(): (declared: Declared, judged: Judged) => JudgedRobots {
-  const solutions = createMemory<RobotSolution>();
-  const ranged = new WeakMap<DefinitionCall, boolean>();
-  const hasRanges = (call: DefinitionCall): boolean => {
-    const known = ranged.get(call) ?? leavesBelow(call).some(({ range }) => range !== undefined);
-    ranged.set(call, known);
-    return known;
-  };
-  return ({ robots, unknownRobots }, judged) => {
+/** Load cycles that are remembered beside those of the robots that are there. */
+const SPARE = 20;
+
+export interface RobotJudge {
+  judge(round: RobotRound): ByFile<JudgedRobots>;
+  /** The robots as declared, their load cycles not run; they are at the next round. */
+  leaveOut(round: RobotRound): ByFile<JudgedRobots>;
+}
+
+export interface RobotRound {
+  readonly declared: ByFile<Declared>;
+  readonly judged: ByFile<Judged>;
+  readonly lists: RobotLists;
+}
+
+/** Files without robots are absent from its results. */
+export function createRobotJudge(): RobotJudge {
+  const kept = createKeeper<JudgedRobots>();
+  let count = 0;
+  const solutions = createMemory<RobotSolution>(() => 2 * count + SPARE);
+  const tell = createTeller();
+  const judgeFile = ({ robots, unknownRobots }: Declared, aboutOf: (model: RobotModel) => About): JudgedRobots => {
     const findings: Finding[] = [];
-    let about: About | undefined;
     const known = robots.map((robot): AnalysedRobot => {
       const { model, notChecked } = robotDriveOf(robot.declared);
-      if (model === null) return { ...robot, assumed: [], notChecked };
+      if (model === null) return tell(robot, undefined, notChecked);
       const solution = solutions.get(JSON.stringify(model.drive), () => solveRobot(model.drive));
-      // Most robots of a workspace may have no load cycle.
-      about ??= indexJudged(judged);
-      findings.push(...findingsOf(robot, model, solution, about));
-      return {
-        ...robot,
-        drive: model.drive,
-        numbers: solution.numbers,
-        solution,
-        assumed: tellAssumed(solution, hasRanges(robot.call)),
-        notChecked: [...notChecked, ...tellUnresolved(solution)],
-      };
+      findings.push(...findingsOf(robot, model, solution, aboutOf(model)));
+      return tell(robot, { drive: model.drive, solution }, notChecked);
     });
-    solutions.forgetUnused();
-    const unknown = unknownRobots.map((robot) => ({ ...robot, assumed: [], notChecked: [tellWhyUnknown(robot.call)] }));
+    const unknown = unknownRobots.map((robot) => tell(robot, undefined, [tellWhyUnknown(robot.call)]));
     return { robots: [...known, ...unknown].sort(byPlace), findings };
+  };
+  /** Files whose robots were not judged since something changed that they rest on. */
+  const open = new Set<string>();
+  const note = ({ declared, judged, lists }: RobotRound) => {
+    for (const file of declared.changed) open.add(file);
+    for (const file of judged.changed) {
+      for (const { declared: mechanism } of judged.of.get(file)?.mechanisms ?? []) {
+        for (const lister of mechanism === undefined ? [] : lists.listersOf(mechanism)) open.add(lister.file);
+      }
+    }
+  };
+  let isLeftOut = false;
+  return {
+    judge(round) {
+      const { declared, judged, lists } = round;
+      note(round);
+      const result = kept.update(
+        declared.of,
+        open,
+        (file) => {
+          const here = declared.of.get(file);
+          const robots = here === undefined ? 0 : here.robots.length + here.unknownRobots.length;
+          count += robots - (kept.of.get(file)?.robots.length ?? 0);
+          return here === undefined || robots === 0 ? undefined : judgeFile(here, (model) => readJudged(model, judged.of, lists));
+        },
+        (one, other) => sameItems(one.robots, other.robots) && sameContent(one.findings, other.findings),
+      );
+      open.clear();
+      isLeftOut = false;
+      return result;
+    },
+    leaveOut(round) {
+      note(round);
+      const { of, changed } = round.declared;
+      const result = kept.update(of, isLeftOut ? changed : union(changed, kept.of.keys()), (file) => {
+        const robots = of.get(file)?.robots ?? [];
+        return robots.length === 0
+          ? undefined
+          : { robots: robots.map((robot) => ({ ...robot, assumed: [], notChecked: [] })), findings: [] };
+      });
+      for (const file of result.of.keys()) open.add(file);
+      isLeftOut = true;
+      return result;
+    },
   };
 }
 
-/** The robots as declared, their load cycles not run. */
-export function unjudged({ robots }: Declared): JudgedRobots {
-  return { robots: robots.map((robot) => ({ ...robot, assumed: [], notChecked: [] })), findings: [] };
+type Run = Pick<Required<AnalysedRobot>, "drive" | "solution">;
+
+/** What is said of a robot: the same object as long as its run is the same. */
+function createTeller(): (robot: RobotCall, run: Run | undefined, notChecked: readonly string[]) => AnalysedRobot {
+  const told = new WeakMap<DefinitionCall, AnalysedRobot>();
+  return (robot, run, notChecked) => {
+    const before = told.get(robot.call);
+    if (before !== undefined && before.solution === run?.solution) return before;
+    const result =
+      run === undefined
+        ? { ...robot, assumed: [], notChecked }
+        : {
+            ...robot,
+            ...run,
+            numbers: run.solution.numbers,
+            assumed: tellAssumed(run.solution, hasRanges(robot.call)),
+            notChecked: [...notChecked, ...tellUnresolved(run.solution)],
+          };
+    told.set(robot.call, result);
+    return result;
+  };
 }
 
-/** What is known of mechanisms by themselves. */
+/** What is known of a robot's mechanisms by themselves. */
 interface About {
   readonly places: ReadonlyMap<Mechanism | undefined, Span>;
   /** Rule and mechanism. */
   readonly told: ReadonlySet<string>;
 }
 
-function indexJudged({ mechanisms, findings }: Judged): About {
+function readJudged({ mechanisms }: RobotModel, judged: ReadonlyMap<string, Judged>, lists: RobotLists): About {
+  const files = [...new Set(mechanisms.flatMap((mechanism) => lists.fileOf(mechanism) ?? []))];
+  const all = files.flatMap((file) => judged.get(file) ?? []);
   return {
-    places: new Map(mechanisms.map(({ declared, at }) => [declared, at])),
-    told: new Set(findings.map(({ mechanism, rule }) => `${rule} ${mechanism}`)),
+    places: new Map(all.flatMap((one) => one.mechanisms.map(({ declared, at }) => [declared, at] as const))),
+    told: new Set(all.flatMap(({ findings }) => findings.map(({ mechanism, rule }) => `${rule} ${mechanism}`))),
   };
 }
 
@@ -104,12 +173,12 @@ function toFinding(
   };
 }
 
-function tellAssumed({ periodic, cyclesFollowed, numbers }: RobotSolution, hasRanges: boolean): string[] {
+function tellAssumed({ periodic, cyclesFollowed, numbers }: RobotSolution, isRanged: boolean): string[] {
   const told = [
     "Each mechanism holds where its load pulls hardest; one without current stays where it is.",
     "Windings and protection start at rest, the battery full.",
   ];
-  if (hasRanges) told.push("Numbers and findings are for the middle of each range.");
+  if (isRanged) told.push("Numbers and findings are for the middle of each range.");
   if (periodic && cyclesFollowed < numbers.cyclesDone)
     told.push(
       `After ${cyclesFollowed} of ${numbers.cyclesDone} cycles nothing changes any more: the others count like the last one.`,
@@ -120,6 +189,10 @@ function tellAssumed({ periodic, cyclesFollowed, numbers }: RobotSolution, hasRa
 function tellUnresolved({ outcome, coveredS }: RobotSolution): string[] {
   if (outcome !== "unresolved") return [];
   return [`The load cycle after ${writeQuantity(coveredS, "time")}: too much happens in it to be followed.`];
+}
+
+function hasRanges(call: DefinitionCall): boolean {
+  return leavesBelow(call).some(({ range }) => range !== undefined);
 }
 
 function byPlace({ at: one }: AnalysedRobot, { at: other }: AnalysedRobot): number {

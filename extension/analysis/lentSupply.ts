@@ -1,25 +1,17 @@
 /** A mechanism that names no supply runs on that of the one robot that lists it. */
 import type { Mechanism } from "../declarations/mechanism.js";
+import type { Robot } from "../declarations/robot.js";
 import type { DefinitionCall } from "../evaluator/value.js";
-import type { DeclaredRobot, RobotCall } from "./declared.js";
+import type { RobotCall } from "./declared.js";
 import { valueAt } from "./places.js";
 
 /** The one robot that lists the mechanism; with several, none of them is assumed. */
-export function robotOf<Listing extends Partial<DeclaredRobot>>(
+export function robotOf<Listing extends { readonly declared?: Robot }>(
   mechanism: Mechanism,
   robots: readonly Listing[],
 ): Listing | undefined {
   const listing = robots.filter(({ declared }) => declared?.mechanisms.includes(mechanism));
   return listing.length === 1 ? listing[0] : undefined;
-}
-
-/** The same for every mechanism that robots list, found at once. */
-export function indexRobots(robots: readonly DeclaredRobot[]): ReadonlyMap<Mechanism, DeclaredRobot | undefined> {
-  const found = new Map<Mechanism, DeclaredRobot | undefined>();
-  for (const robot of robots) {
-    for (const mechanism of new Set(robot.declared.mechanisms)) found.set(mechanism, found.has(mechanism) ? undefined : robot);
-  }
-  return found;
 }
 
 /** The call that declares the robot's supply. */

@@ -35,7 +35,7 @@ export interface ReadSettings {
   readonly wanted: readonly string[];
   readonly toothCounts: ReadonlyMap<string, readonly number[]>;
   readonly levels: ReadonlyMap<string, Levels>;
-  /** Findings with the levels of the settings nearest to each; those turned off are left out. */
+  /** Findings with the levels of the settings nearest to each; those turned off are left out. The list is a new one. */
   applyLevels(findings: readonly Finding[]): Finding[];
 }
 
@@ -48,6 +48,7 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
     read.set(file, { text, result });
     return result;
   };
+  let last: ReadSettings | undefined;
   return (files, snapshot) => {
     const wanted = new Set<string>();
     const findings = new Map<string, Finding>();
@@ -71,7 +72,7 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
       const settings = byFolder.get(folder);
       if (settings !== undefined) nearestOf.set(file, settings);
     }
-    return {
+    const settings: ReadSettings = {
       findings: [...findings.values()],
       wanted: [...wanted],
       toothCounts: new Map(
@@ -86,7 +87,16 @@ export function createSettingsReader(typescript: TypeScript): (files: readonly s
           return wished === "off" ? [] : [wished === undefined ? finding : { ...finding, level: wished as Level }];
         }),
     };
+    // The same object as long as it says the same: all findings rest on it.
+    if (last === undefined || !sameSettings(last, settings)) last = settings;
+    return last;
   };
+}
+
+function sameSettings(one: ReadSettings, other: ReadSettings): boolean {
+  const content = ({ findings, wanted, levels, toothCounts }: ReadSettings) =>
+    JSON.stringify([findings, wanted, [...levels], [...toothCounts]]);
+  return content(one) === content(other);
 }
 
 interface Parsed {

@@ -48,8 +48,9 @@ export function ruleWords(rule: RuleId): string {
 
 /** Findings about one mechanism, worst first. */
 export function findingsAbout(analysis: Analysis, mechanism: AnalysedMechanism): readonly Finding[] {
-  return (analysis.findingsByMechanism.get(mechanism.name) ?? [])
-    .filter((finding) => belongs(finding, mechanism))
+  const found = analysis.inFile.get(mechanism.call.span.file)?.findings ?? analysis.findings;
+  return found
+    .filter((finding) => finding.mechanism === mechanism.name && belongs(finding, mechanism))
     .toSorted((one, other) => RANK[one.level] - RANK[other.level]);
 }
 
