@@ -86,23 +86,30 @@ export function createJudge(): (declared: ByFile<Declared>, lists: RobotLists, r
     return result;
   };
   const told = new WeakMap<DefinitionCall, Told>();
+  const keep = (call: DefinitionCall, result: Told): Told => {
+    told.set(call, result);
+    return result;
+  };
   const tell = (one: DeclaredMechanism, declared: Mechanism, robot: DeclaredRobot | undefined, isShared: boolean): Told => {
     const solution = solve(declared, one.call, robot);
     const before = told.get(one.call);
     if (before?.solution === solution && before.robot === robot?.declared && before.isShared === isShared) return before;
     const { drive, numbers, corners, verdicts } = solution;
-    const result: Told = {
+    const assumptions = tellAssumptions(declared, robot?.declared, corners);
+    // A robot is declared anew whenever one of its mechanisms is.
+    if (before?.solution === solution && before.isShared === isShared && sameAssumptions(before.mechanism, assumptions)) {
+      return keep(one.call, { ...before, robot: robot?.declared });
+    }
+    return keep(one.call, {
       solution,
       robot: robot?.declared,
       isShared,
-      mechanism: { ...one, drive, numbers, ...tellAssumptions(declared, robot?.declared, corners) },
+      mechanism: { ...one, drive, numbers, ...assumptions },
       findings: verdicts.map(({ rule, verdict }) => {
         const finding = toFinding(rule, verdict, one.at, one.call, one.name);
         return isShared ? { ...finding, message: `${one.name}: ${finding.message}` } : finding;
       }),
-    };
-    told.set(one.call, result);
-    return result;
+    });
   };
   const silent = new WeakMap<DefinitionCall, AnalysedMechanism>();
   const keepSilent = (one: DeclaredMechanism, why: string): AnalysedMechanism => {
@@ -138,6 +145,12 @@ export function createJudge(): (declared: ByFile<Declared>, lists: RobotLists, r
     };
     return kept.update(declared.of, union(declared.changed, relisted), make, isSame);
   };
+}
+
+type Assumptions = ReturnType<typeof tellAssumptions>;
+
+function sameAssumptions(one: Assumptions, other: Assumptions): boolean {
+  return sameItems(one.assumed, other.assumed) && sameItems(one.notChecked, other.notChecked);
 }
 
 function factsOf(mechanism: Mechanism, supply: Supply | undefined): MechanismFacts {

@@ -92,15 +92,15 @@ export function createRobotJudge(): RobotJudge {
     leaveOut(round) {
       note(round);
       const { of, changed } = round.declared;
-      const result = kept.update(of, isLeftOut ? changed : union(changed, kept.of.keys()), (file) => {
+      const touched = isLeftOut ? changed : union(changed, kept.of.keys());
+      for (const file of touched) open.add(file);
+      isLeftOut = true;
+      return kept.update(of, touched, (file) => {
         const robots = of.get(file)?.robots ?? [];
         return robots.length === 0
           ? undefined
           : { robots: robots.map((robot) => ({ ...robot, assumed: [], notChecked: [] })), findings: [] };
       });
-      for (const file of result.of.keys()) open.add(file);
-      isLeftOut = true;
-      return result;
     },
   };
 }

@@ -73,6 +73,8 @@ export interface Context {
   snapshot: Snapshot;
   /** Modules that are known to be true for the snapshot. */
   readonly checked: Set<Module>;
+  /** Modules whose importers were looked through anew for the snapshot: they may rest on other files than before. */
+  readonly relooked: Set<Module>;
   /** Nesting of the evaluation that is going on. */
   depth: number;
   /** Expressions evaluated for this file so far. */

@@ -11,11 +11,12 @@ import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
-import { dropStale, listReached, uncheckChanged } from "./freshness.js";
+import { dropStale, uncheckChanged } from "./freshness.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
 import { valueOfBinding, valueOfTarget } from "./names.js";
 import { listPassedOn } from "./passedOn.js";
+import { listReached } from "./reached.js";
 import { parseSource, type Source } from "./source.js";
 import type { TypeScript } from "./typescript.js";
 import { tooDeep, unknown } from "./unknown.js";
@@ -54,6 +55,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     makers: new WeakMap(),
     snapshot: nothing,
     checked: new Set(),
+    relooked: new Set(),
     depth: 0,
     steps: 0,
     evaluate: (node, frame) => evaluate(ctx, node, frame),
@@ -64,7 +66,10 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
   };
   return {
     evaluateFile(file, snapshot) {
-      if (ctx.snapshot !== snapshot) uncheckChanged(ctx, snapshot.changes?.between(ctx.snapshot, snapshot));
+      if (ctx.snapshot !== snapshot) {
+        uncheckChanged(ctx, snapshot.changes?.between(ctx.snapshot, snapshot));
+        ctx.relooked.clear();
+      }
       ctx.snapshot = snapshot;
       const text = snapshot.read(file);
       if (typeof text !== "string") {
@@ -72,7 +77,8 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
         return withoutText(file, text);
       }
       const module = ctx.open(file, text);
-      const evaluation = evaluations.get(module) ?? evaluateModule(ctx, module);
+      const known = evaluations.get(module);
+      const evaluation = known === undefined ? evaluateModule(ctx, module) : withFilesOfNow(ctx, known, module);
       evaluations.set(module, evaluation);
       return evaluation;
     },
@@ -104,18 +110,35 @@ function evaluateModule(ctx: Context, module: Module): FileEvaluation {
     else for (const call of found) (call.span.file === file ? calls : elsewhere).add(call);
   }
   const passesOn = listPassedOn(ctx, module);
+  return {
+    file,
+    calls: [...calls, ...elsewhere],
+    ...listFiles(file, listReached(module)),
+    ...(passesOn.length === 0 ? {} : { passesOn }),
+    ...(problem === undefined ? {} : { problem }),
+  };
+}
+
+/** What a module's values rest on may have changed, and they not. */
+function withFilesOfNow(ctx: Context, known: FileEvaluation, module: Module): FileEvaluation {
+  if (ctx.relooked.size === 0) return known;
   const reached = listReached(module);
+  if (![...reached].some((each) => ctx.relooked.has(each))) return known;
+  const files = listFiles(module.file, reached);
+  const isSame = LISTS.every((list) => files[list].join("\n") === known[list].join("\n"));
+  return isSame ? known : { ...known, ...files };
+}
+
+const LISTS = ["dependencies", "wanted", "missing"] as const;
+
+function listFiles(file: string, reached: ReadonlySet<Module>): Pick<FileEvaluation, "dependencies" | "wanted" | "missing"> {
   const reads = new Map([...reached].flatMap((each) => [...each.reads, ...each.importers.reads]));
   const having = (kind: (text: string | null | undefined) => boolean) =>
     [...reads].flatMap(([name, text]) => (kind(text) ? [name] : []));
   return {
-    file,
-    calls: [...calls, ...elsewhere],
     dependencies: [...new Set([file, ...having((text) => typeof text === "string")])],
     wanted: having((text) => text === undefined),
     missing: having((text) => text === null),
-    ...(passesOn.length === 0 ? {} : { passesOn }),
-    ...(problem === undefined ? {} : { problem }),
   };
 }
 

@@ -6,6 +6,7 @@
  */
 import type { Context, Module } from "./context.js";
 import { findChange } from "./mutation.js";
+import { listReached } from "./reached.js";
 
 /** Drops the module of a file, and those below that have gone stale, with everything that rests on them. */
 export function dropStale(ctx: Context, file: string): void {
@@ -41,13 +42,6 @@ export function uncheckChanged(ctx: Context, changed: ReadonlySet<string> | unde
 function restsOn({ reads, importers }: Module, changed: ReadonlySet<string>): boolean {
   for (const file of changed) if (reads.has(file) || importers.reads.has(file)) return true;
   return false;
-}
-
-/** The module and everything that its values rest on. */
-export function listReached(start: Module): Set<Module> {
-  const reached = new Set([start]);
-  for (const module of reached) for (const used of module.imports) reached.add(used);
-  return reached;
 }
 
 function drop(ctx: Context, stale: readonly Module[], users: ReadonlyMap<Module, readonly Module[]>): void {
@@ -89,6 +83,7 @@ function isGuarded(ctx: Context, module: Module): boolean {
   if ([...lists.values()].some(({ files }) => files === undefined) || [...reads.values()].includes(undefined)) return false;
   lists.clear();
   reads.clear();
+  ctx.relooked.add(module);
   return guards.every(({ binding, data, isChanged }) => (findChange(ctx, module, binding, data) !== undefined) === isChanged);
 }
 

@@ -11,6 +11,7 @@ import { type Export, exportsOf } from "./exports.js";
 import { type Change, type Flow, flowInto, isFrozen, narrow, type Search, wrap } from "./flow.js";
 import { mayLeadTo } from "./importIndex.js";
 import { innermost } from "./outer.js";
+import { listReached } from "./reached.js";
 import { resolveName } from "./source.js";
 
 type Exported = Extract<Target, { kind: "binding" | "expression" }>;
@@ -46,11 +47,14 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
       if (text === undefined) return notRead(target);
       if (text === null) continue;
       const importer = ctx.open(file, text);
-      if (isKnownHarmless(importer, passer, target, flow)) continue;
-      const further = passedOn(ctx, importer, passer, passed);
-      if (further.length > 0 && !paths.has(importer)) paths.set(importer, further);
-      const change = followInto(search, importer, passer, target, passed, flow, further.length > 0);
-      if (change !== undefined) return change;
+      if (!isKnownHarmless(importer, passer, target, flow)) {
+        const further = passedOn(ctx, importer, passer, passed);
+        if (further.length > 0 && !paths.has(importer)) paths.set(importer, further);
+        const change = followInto(search, importer, passer, target, passed, flow, further.length > 0);
+        if (change !== undefined) return change;
+      }
+      // It may hand the object to a function of yet another file.
+      for (const { reads } of listReached(importer)) for (const [name, known] of reads) home.importers.reads.set(name, known);
     }
   }
   return undefined;
