@@ -65,12 +65,15 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
             await done;
           }),
         );
+        // Neither works on in the other's time.
+        await ours.server.whenQuiet();
         into.theirs.push(
           await timed(async () => {
             theirs.server.edit(file, number);
             await theirs.server.semanticDiagnostics(shown);
           }),
         );
+        await theirs.server.whenQuiet();
       }
     }
   }

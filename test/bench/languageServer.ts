@@ -97,6 +97,11 @@ export class LanguageServer {
     return this.#connection.sendRequest(method, params);
   }
 
+  /** Until it has told all that comes after findings, such as the state of its views. */
+  async whenQuiet(): Promise<void> {
+    await this.request("workspace/symbol", { query: "none has this name" });
+  }
+
   /** Until each of the files was published after this call. */
   published(paths: readonly string[]): Promise<void> {
     const waiting = new Set(paths.map((path) => pathToFileURL(path).href));

@@ -20,6 +20,8 @@ export class TsServer {
   #sequence = 0;
   #rest = Buffer.alloc(0);
   #heard: (message: Message) => void = () => {};
+  /** Until the server has done all that it was asked for. */
+  #quiet: Promise<void> = Promise.resolve();
 
   constructor() {
     const server = join(repositoryRoot, "node_modules/typescript/lib/tsserver.js");
@@ -57,24 +59,35 @@ export class TsServer {
   #diagnostics(paths: readonly string[], command: string, args: unknown): Promise<number> {
     const waiting = new Set(paths);
     let count = 0;
-    const done = new Promise<number>((resolve) => {
+    const asked = this.#send(command, args);
+    return new Promise<number>((resolve) => {
+      let becomeQuiet = () => {};
+      this.#quiet = new Promise((quiet) => {
+        becomeQuiet = quiet;
+      });
       this.#heard = ({ event, body }) => {
+        if (event === "requestCompleted" && body?.request_seq === asked) becomeQuiet();
         if (event !== "semanticDiag" || body?.file === undefined) return;
         if (waiting.delete(body.file)) count += body.diagnostics?.length ?? 0;
         if (waiting.size === 0) resolve(count);
       };
     });
-    this.#send(command, args);
-    return done;
+  }
+
+  /** Until it has told what comes after the diagnostics that were asked for, such as suggestions. */
+  whenQuiet(): Promise<void> {
+    return this.#quiet;
   }
 
   stop(): void {
     this.process.kill();
   }
 
-  #send(command: string, args: unknown): void {
+  /** Gives the number of the request. */
+  #send(command: string, args: unknown): number {
     this.#sequence += 1;
     this.process.stdin?.write(`${JSON.stringify({ seq: this.#sequence, type: "request", command, arguments: args })}\n`);
+    return this.#sequence;
   }
 
   #read(chunk: Buffer): void {
