@@ -28,20 +28,28 @@ export interface Constant {
 
 /** The innermost subject at an offset; ends of words count, so that a caret right behind one finds it. */
 export function subjectAt(analysis: Analysis, file: string, offset: number): Subject | undefined {
-  const calls = [...analysis.files.values()].flatMap((evaluation) => evaluation.calls);
-  const mechanismsOf = indexByPlace(analysis.mechanisms);
-  const found = [
-    ...calls.flatMap((call) => subjectsOf(mechanismsOf, call)),
-    ...calls.flatMap(leavesOf).flatMap((leaf) => constantsOf(analysis, leaf)),
-  ];
-  const here = found.filter(({ span }) => span.file === file && span.start <= offset && offset <= span.end);
+  const here = listSubjects(analysis, file, ({ span }) => span.file === file && span.start <= offset && offset <= span.end);
   const best = here.reduce<Subject | undefined>((inner, one) => (inner && !isBetter(one, inner) ? inner : one), undefined);
   if (best !== undefined) return best;
   const word = importedAt(analysis, file, offset);
-  if (word === undefined) return undefined;
-  const same = (one: Subject): boolean => word.keys.some((key) => isAt(one, key));
-  const imported = found.find(same);
+  const [key] = word?.keys ?? [];
+  if (word === undefined || key === undefined) return undefined;
+  const [imported] = listSubjects(analysis, key.file, (place) => isAt(place, key));
   return imported && { ...imported, span: word.span };
+}
+
+/** Where a subject is, and which place stands for all of its occurrences. */
+type Place = Pick<Subject, "kind" | "span"> & { readonly key: Span };
+
+/** Subjects at certain places of a file: only declarations that read the file can have any there. */
+function listSubjects(analysis: Analysis, file: string, isMeant: (place: Place) => boolean): Subject[] {
+  const near = [...analysis.inFile.values()].filter(({ evaluation }) => evaluation.dependencies.includes(file));
+  const calls = near.flatMap(({ evaluation }) => evaluation.calls);
+  const mechanismsOf = indexByPlace(analysis.mechanisms);
+  return [
+    ...calls.flatMap((call) => subjectsOf(mechanismsOf, call)).filter((one) => isMeant({ ...one, key: one.span })),
+    ...calls.flatMap(leavesOf).flatMap((leaf) => constantsOf(analysis, leaf, isMeant)),
+  ];
 }
 
 type MechanismsOf = (call: DefinitionCall) => readonly AnalysedMechanism[];
@@ -87,13 +95,16 @@ function usesIn(value: Value): { readonly span: Span; readonly call: DefinitionC
     .map((span) => ({ span, call: data.call }));
 }
 
-function constantsOf(analysis: Analysis, leaf: Leaf): Subject[] {
+function constantsOf(analysis: Analysis, leaf: Leaf, isMeant: (place: Place) => boolean): Subject[] {
   if (isLabel(leaf)) return [];
   const unchanged = new Set(passedThrough(leaf.value.origin));
   return [...originsOf(leaf.value)].flatMap((origin): Subject[] => {
+    const key = keyOf(origin);
+    const all = origin.declaredAt ? [origin.span, origin.declaredAt] : [origin.span];
+    const spans = all.filter((span) => isMeant({ kind: "constant", span, key }));
+    if (spans.length === 0) return [];
     const plain = unchanged.has(origin) ? leaf.plain : writtenValue(analysis.snapshot, origin);
-    const constant: Constant = { key: keyOf(origin), origin, field: leaf, ...(plain === undefined ? {} : { plain }) };
-    const spans = origin.declaredAt ? [origin.span, origin.declaredAt] : [origin.span];
+    const constant: Constant = { key, origin, field: leaf, ...(plain === undefined ? {} : { plain }) };
     return spans.map((span) => ({ kind: "constant", span, constant }));
   });
 }
@@ -103,8 +114,8 @@ function isLabel({ call, path }: Leaf): boolean {
   return path.length === 1 && path[0] === 0 && (call.definition === "mechanism" || call.definition === "robot");
 }
 
-function isAt(subject: Subject, key: Span): boolean {
-  return subject.kind === "constant" ? sameSpan(subject.constant.key, key) : sameSpan(subject.span, key);
+function isAt({ kind, span, key }: Place, wanted: Span): boolean {
+  return sameSpan(kind === "constant" ? key : span, wanted);
 }
 
 /** Inner before outer; of two alike, the one whose value is known. */

@@ -2,6 +2,7 @@
 
 import { execFileSync } from "node:child_process";
 import { join } from "node:path";
+import { fileURLToPath } from "node:url";
 import { repositoryRoot } from "../workbench/paths.js";
 import { LanguageServer } from "./languageServer.js";
 import { residentMB } from "./processMemory.js";
@@ -11,10 +12,10 @@ import type { BenchWorkspace } from "./workspace.js";
 
 /** Milliseconds and megabytes of both. */
 export interface Beside {
-  /** Ours to all findings of the workspace, theirs to the semantic diagnostics of the open files. */
+  /** Ours to all findings of the workspace, theirs to the semantic diagnostics of a few open files. */
   readonly opening: Pair;
-  /** Theirs to the semantic diagnostics of all files. */
-  readonly openingOfAll: Pair;
+  /** The same with every file open that has findings, so that both tell of the same files. */
+  readonly openingOfSame: Pair;
   readonly editInMechanism: Pair;
   readonly editOfConstant: Pair;
   readonly memory: Pair;
@@ -34,16 +35,22 @@ export interface Rounds {
 export async function measureBeside(workspace: BenchWorkspace, { openings, edits }: Rounds): Promise<Beside> {
   const expected = countFindings(workspace.folder);
   const opening = { ours: [] as number[], theirs: [] as number[] };
-  const openingOfAll = { ours: opening.ours, theirs: [] as number[] };
+  const openingOfSame = { ours: [] as number[], theirs: [] as number[] };
   const memory = { ours: [] as number[], theirs: [] as number[] };
   const inMechanism = { ours: [] as number[], theirs: [] as number[] };
   const ofConstant = { ours: [] as number[], theirs: [] as number[] };
   for (let round = 0; round < openings; round++) {
-    const ours = await openOurs(workspace, expected);
-    const theirs = await openTheirs(workspace);
+    const told = [...expected.keys()].map((uri) => fileURLToPath(uri));
+    const oursOfSame = await openOurs(workspace, told, expected);
+    openingOfSame.ours.push(oursOfSame.ms);
+    await oursOfSame.server.stop();
+    const theirsOfSame = await openTheirs(told);
+    openingOfSame.theirs.push(theirsOfSame.ms);
+    theirsOfSame.server.stop();
+    const ours = await openOurs(workspace, openFiles(workspace), expected);
     opening.ours.push(ours.ms);
+    const theirs = await openTheirs(openFiles(workspace));
     opening.theirs.push(theirs.ms);
-    openingOfAll.theirs.push(theirs.msOfAll);
     await editBoth(workspace.mechanism, [workspace.mechanism.path], inMechanism);
     await editBoth(workspace.constants, workspace.constants.users, ofConstant);
     memory.ours.push(residentMB(ours.server.process));
@@ -83,7 +90,7 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
   });
   return {
     opening: pair(opening),
-    openingOfAll: pair(openingOfAll),
+    openingOfSame: pair(openingOfSame),
     editInMechanism: pair(inMechanism),
     editOfConstant: pair(ofConstant),
     memory: pair(memory),
@@ -92,29 +99,28 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
 }
 
 /** From the start of the process until every finding of the workspace has been told. */
-async function openOurs(workspace: BenchWorkspace, expected: ReadonlyMap<string, number>) {
+async function openOurs(workspace: BenchWorkspace, files: readonly string[], expected: ReadonlyMap<string, number>) {
   const start = performance.now();
   const server = new LanguageServer();
   const all = server.until(() => [...expected].every(([uri, count]) => server.findings.get(uri)?.length === count));
   await server.start(workspace.folder);
-  for (const path of openFiles(workspace)) await server.open(path);
+  for (const path of files) await server.open(path);
   await all;
-  return { server, ms: performance.now() - start };
+  const ms = performance.now() - start;
+  await server.whenQuiet();
+  return { server, ms };
 }
 
-/** From the start of the processes until the semantic diagnostics of the open files, and of all files in another one. */
-async function openTheirs(workspace: BenchWorkspace) {
-  const open = async (ask: (server: TsServer) => Promise<number>) => {
-    const start = performance.now();
-    const server = new TsServer();
-    for (const path of openFiles(workspace)) server.open(path);
-    const errors = await ask(server);
-    if (errors > 0) throw new Error(`TypeScript finds ${errors} errors in the bench's own workspace.`);
-    return { server, ms: performance.now() - start };
-  };
-  const all = await open((server) => server.projectDiagnostics(workspace.mechanism.path, workspace.paths));
-  all.server.stop();
-  return { ...(await open((server) => server.semanticDiagnostics(openFiles(workspace)))), msOfAll: all.ms };
+/** From the start of the process until the semantic diagnostics of the files. */
+async function openTheirs(files: readonly string[]) {
+  const start = performance.now();
+  const server = new TsServer();
+  for (const path of files) server.open(path);
+  const errors = await server.semanticDiagnostics(files);
+  if (errors > 0) throw new Error(`TypeScript finds ${errors} errors in the bench's own workspace.`);
+  const ms = performance.now() - start;
+  await server.whenQuiet();
+  return { server, ms };
 }
 
 function openFiles({ mechanism, constants }: BenchWorkspace): string[] {

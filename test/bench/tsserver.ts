@@ -48,18 +48,9 @@ export class TsServer {
 
   /** Until the semantic diagnostics of open files are there; gives how many there are in all. */
   semanticDiagnostics(paths: readonly string[]): Promise<number> {
-    return this.#diagnostics(paths, "geterr", { delay: 0, files: paths });
-  }
-
-  /** The same for all files of the project of an open file. */
-  projectDiagnostics(file: string, paths: readonly string[]): Promise<number> {
-    return this.#diagnostics(paths, "geterrForProject", { delay: 0, file });
-  }
-
-  #diagnostics(paths: readonly string[], command: string, args: unknown): Promise<number> {
     const waiting = new Set(paths);
     let count = 0;
-    const asked = this.#send(command, args);
+    const asked = this.#send("geterr", { delay: 0, files: paths });
     return new Promise<number>((resolve) => {
       let becomeQuiet = () => {};
       this.#quiet = new Promise((quiet) => {

@@ -9,7 +9,6 @@ import { plainFile } from "./plainCode.js";
 export interface BenchWorkspace {
   readonly folder: string;
   readonly files: number;
-  readonly paths: readonly string[];
   readonly lines: number;
   /** A file that declares two mechanisms, one of whose numbers is edited. */
   readonly mechanism: EditedFile;
@@ -62,7 +61,6 @@ export async function writeWorkspace(folder: string, files: number): Promise<Ben
   return {
     folder,
     files: texts.size - 2,
-    paths: [...texts.keys()].filter((path) => path.endsWith(".ts")).map((path) => join(folder, path)),
     lines,
     mechanism: edited("src/cell1/mechanism2.ts", "LOAD_KG", (edit) => (5 + (edit % 4001) / 1000 + edit * 1e-7).toFixed(7)),
     constants: {
