@@ -17,7 +17,7 @@ import {
 } from "../protocol/chartMessages.js";
 import { FIND_PLACE, type Place, type PlaceQuery, placeSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
-import { NO_STATE, STATE, type State, stateSchema } from "../protocol/state.js";
+import { NO_STATE, resolveState, STATE, type State, stateMessageSchema } from "../protocol/state.js";
 
 export type MakeClient = (onGivenUp: () => void) => Promise<BaseLanguageClient>;
 
@@ -108,7 +108,8 @@ export class Server implements vscode.Disposable {
   async #startClient(): Promise<void> {
     const client = await this.#makeClient(() => void this.#giveUp());
     client.onNotification(STATE, (message) => {
-      const state = readMessage(stateSchema, message);
+      const told = readMessage(stateMessageSchema, message);
+      const state = told && resolveState(this.#state, told);
       if (state === undefined) this.#log.warn("The server sent a state that cannot be read.");
       else this.#setState(state);
     });

@@ -19,9 +19,17 @@ export interface CodeLens {
   readonly mechanism: string;
 }
 
-/** `committed`: what the last commit has; its changes stand at the end of a title. */
-export function codeLensesOf(analysis: Analysis, file: string, committed: Committed = NO_COMMIT): CodeLens[] {
-  const here = analysis.mechanisms.filter(({ at }) => at.file === file);
+/**
+ * `committed`: what the last commit has; its changes stand at the end of a title. `mechanisms`: all that may have their place in the file,
+ * in the analysis's order.
+ */
+export function codeLensesOf(
+  analysis: Analysis,
+  file: string,
+  committed: Committed = NO_COMMIT,
+  mechanisms: readonly AnalysedMechanism[] = analysis.mechanisms,
+): CodeLens[] {
+  const here = mechanisms.filter(({ at }) => at.file === file);
   const counts = new Map<number, number>();
   for (const { at } of here) counts.set(at.start, (counts.get(at.start) ?? 0) + 1);
   return here.map((mechanism) => {

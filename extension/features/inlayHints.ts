@@ -22,13 +22,13 @@ export interface InlayHint {
 
 export const LONGEST_LABEL = 16;
 
-/** Hints at offsets from `start` to `end`, in order. `mechanisms`: those that may have one there, where that is known. */
+/** Hints at offsets from `start` to `end`, in order. `mechanisms`: all that may have one in the file, in the analysis's order. */
 export function inlayHintsIn(
   analysis: Analysis,
   file: string,
   start: number,
   end: number,
-  mechanisms: readonly AnalysedMechanism[] = analysis.mechanisms.filter((one) => filesWithHints(one).has(file)),
+  mechanisms: readonly AnalysedMechanism[] = analysis.mechanisms,
 ): InlayHint[] {
   const hints = mechanisms.flatMap((mechanism) => {
     const { state } = verdictOf(analysis, mechanism);

@@ -1,15 +1,15 @@
-/** The mechanisms of the workspace by robot, each with how it fares: what the view shows. */
-import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
+/**
+ * The mechanisms of the workspace by robot, each with how it fares: what the view shows, by the file that declares it.
+ *
+ * Looks again at what was touched alone. Does not say where in a text anything is, but for offsets.
+ */
+import type { AnalysedMechanism, AnalysedRobot, Analysis, FileAnalysis, Finding } from "../analysis/analysis.js";
 import type { Span } from "../evaluator/value.js";
 import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
-import { robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
-
-export interface MechanismTree {
-  readonly robots: readonly RobotNode[];
-  /** Mechanisms that no robot lists. */
-  readonly apart: readonly MechanismNode[];
-}
+import type { IndexOf, MechanismIndex } from "./mechanismIndex.js";
+import { sameItems } from "./sameItems.js";
+import { findingsAboutRobot, robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
 
 export interface RobotNode {
   /** As declared: the key for the chart. */
@@ -40,47 +40,108 @@ export interface MechanismNode {
   readonly stallShare: number | null;
 }
 
+/** What the calls of one file declare. */
+export interface FileTree {
+  readonly robots: readonly RobotNode[];
+  /** Mechanisms that no robot lists. */
+  readonly apart: readonly MechanismNode[];
+  /** Of its mechanisms, listed or not, those that could not be checked. */
+  readonly unchecked: number;
+}
+
+export interface Trees {
+  /** Without files that declare neither; valid until the next analysis is given. */
+  readonly byFile: ReadonlyMap<string, FileTree>;
+  /** Files whose tree is another than with the analysis before, or gone. */
+  readonly changed: ReadonlySet<string>;
+  /** Of all files. */
+  readonly unchecked: number;
+}
+
+/** `touched`: files that may differ from the analysis given before (`changesBetween`); absent: any may. */
+export type TreesOf = (analysis: Analysis, touched?: ReadonlySet<string>) => Trees;
+
+/** A file's tree, a robot and a mechanism are the same objects for as long as the same is to be said of them. */
+export function createTreeReader(indexOf: IndexOf): TreesOf {
+  const nodeOf = createNodeReader();
+  const byFile = new Map<string, FileTree>();
+  let unchecked = 0;
+  return (analysis, touched = new Set([...byFile.keys(), ...analysis.inFile.keys()])) => {
+    const index = indexOf(analysis);
+    const changed = new Set<string>();
+    for (const file of touched) {
+      const before = byFile.get(file);
+      const tree = treeOf(analysis, file, index, nodeOf, before);
+      if (tree === before) continue;
+      changed.add(file);
+      unchecked += (tree?.unchecked ?? 0) - (before?.unchecked ?? 0);
+      if (tree === undefined) byFile.delete(file);
+      else byFile.set(file, tree);
+    }
+    return { byFile, changed, unchecked };
+  };
+}
+
 type NodeOf = (analysis: Analysis, mechanism: AnalysedMechanism) => MechanismNode;
 
 /** Gives the same node for a mechanism as long as nothing else is to be said of it. */
-export function createNodeReader(): NodeOf {
+function createNodeReader(): NodeOf {
   const known = new WeakMap<AnalysedMechanism, { readonly findings: readonly Finding[]; readonly node: MechanismNode }>();
   return (analysis, mechanism) => {
     const findings = analysis.findingsByMechanism.get(mechanism.name) ?? [];
     const before = known.get(mechanism);
-    if (before?.findings.length === findings.length && findings.every((finding, index) => finding === before.findings[index]))
-      return before.node;
+    if (before !== undefined && sameItems(findings, before.findings)) return before.node;
     const node = nodeFor(analysis, mechanism);
     known.set(mechanism, { findings, node });
     return node;
   };
 }
 
-export function mechanismTree(analysis: Analysis, nodeOf: NodeOf = nodeFor): MechanismTree {
-  const byDeclared = new Map(analysis.mechanisms.map((mechanism) => [mechanism.declared, mechanism]));
-  const listed = new Set<AnalysedMechanism>();
-  const declared = analysis.robots.filter((robot) => robot.declared !== undefined);
-  const general = analysis.findings.filter(({ mechanism }) => mechanism === null);
-  const robots = declared.map((robot): RobotNode => {
-    const own = (robot.declared?.mechanisms ?? []).flatMap((declared) => byDeclared.get(declared) ?? []);
-    for (const mechanism of own) listed.add(mechanism);
-    const mechanisms = own.map((mechanism) => nodeOf(analysis, mechanism));
-    const states = [
-      ...mechanisms.map(({ state }) => state),
-      ...statesAt(general, robot.call.span),
-      ...statesAt(general, robot.at),
-    ];
-    return {
-      name: robot.name,
-      label: plainText(robot.name),
-      ...saidOf(analysis, robot),
-      at: robot.at,
-      state: states.reduce(worse, "fine"),
-      mechanisms,
-    };
+function treeOf(
+  analysis: Analysis,
+  file: string,
+  index: MechanismIndex,
+  nodeOf: NodeOf,
+  before: FileTree | undefined,
+): FileTree | undefined {
+  const { mechanisms = [], robots: all = [] }: Partial<FileAnalysis> = analysis.inFile.get(file) ?? {};
+  const declared = all.filter((robot) => robot.declared !== undefined);
+  if (mechanisms.length + declared.length === 0) return undefined;
+  const nodes = mechanisms.map((mechanism) => nodeOf(analysis, mechanism));
+  const apart = nodes.filter((_, position) => {
+    const mechanism = mechanisms[position]?.declared;
+    return mechanism === undefined || !index.isListed(mechanism);
   });
-  const apart = analysis.mechanisms.filter((mechanism) => !listed.has(mechanism)).map((mechanism) => nodeOf(analysis, mechanism));
-  return { robots, apart };
+  const robots = declared.map((robot, position) => {
+    const own = (robot.declared?.mechanisms ?? []).flatMap((mechanism) => index.declared(mechanism)?.mechanism ?? []);
+    const node = robotNode(
+      analysis,
+      robot,
+      own.map((mechanism) => nodeOf(analysis, mechanism)),
+    );
+    const like = before?.robots[position];
+    return like !== undefined && sameRobot(like, node) ? like : node;
+  });
+  const unchecked = nodes.filter(({ state }) => state === "unknown").length;
+  const isSame = before?.unchecked === unchecked && sameItems(before.robots, robots) && sameItems(before.apart, apart);
+  return isSame ? before : { robots, apart, unchecked };
+}
+
+function robotNode(analysis: Analysis, robot: AnalysedRobot, mechanisms: readonly MechanismNode[]): RobotNode {
+  const levels = findingsAboutRobot(analysis, robot).map(({ level }) => level);
+  const states = [...mechanisms.map(({ state }) => state), ...levels.filter((level) => level !== "information")];
+  return {
+    name: robot.name,
+    label: plainText(robot.name),
+    ...saidOf(analysis, robot),
+    at: robot.at,
+    state: states.reduce(worse, "fine"),
+    mechanisms,
+  };
+}
+
+function sameRobot({ mechanisms: some, ...one }: RobotNode, { mechanisms: others, ...other }: RobotNode): boolean {
+  return sameItems(some, others) && JSON.stringify(one) === JSON.stringify(other);
 }
 
 function saidOf(analysis: Analysis, robot: AnalysedRobot): Pick<RobotNode, "description" | "tooltip"> {
@@ -108,10 +169,4 @@ function nodeFor(analysis: Analysis, mechanism: AnalysedMechanism): MechanismNod
     state,
     stallShare: hardest?.stallShare ?? null,
   };
-}
-
-/** `general`: findings about no mechanism in particular. */
-function statesAt(general: Analysis["findings"], { file, start, end }: Span): State[] {
-  const here = general.filter(({ at }) => at.file === file && start <= at.start && at.end <= end);
-  return here.flatMap(({ level }) => (level === "information" ? [] : [level]));
 }

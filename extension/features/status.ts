@@ -1,6 +1,10 @@
-/** The one line that the status bar shows about the whole workspace. */
+/**
+ * The one line that the status bar shows about the whole workspace.
+ *
+ * Counts the findings of files where something else is found; the others' counts stand.
+ */
 import type { Analysis } from "../analysis/analysis.js";
-import { type State, verdictOf } from "./verdict.js";
+import type { State } from "./verdict.js";
 
 export interface Status {
   /** A few words, plain text. */
@@ -10,16 +14,40 @@ export interface Status {
   readonly state: State;
 }
 
-/** `undefined` where nothing is declared: there is then nothing to show. */
-export function statusOf(analysis: Analysis): Status | undefined {
-  const { mechanisms, motors, robots, findings } = analysis;
+export interface FindingCounts {
+  readonly errors: number;
+  readonly warnings: number;
+}
+
+/** `found`: files in which something else is found than in the analysis given before; absent: in any. */
+export type CountsOf = (analysis: Analysis, found?: ReadonlySet<string>) => FindingCounts;
+
+export function createFindingCounter(): CountsOf {
+  const byFile = new Map<string, FindingCounts>();
+  let [errors, warnings] = [0, 0];
+  return ({ findingsIn }, found = new Set([...byFile.keys(), ...findingsIn.keys()])) => {
+    for (const file of found) {
+      const before = byFile.get(file) ?? NONE;
+      const findings = findingsIn.get(file) ?? [];
+      const now = {
+        errors: findings.filter(({ level }) => level === "error").length,
+        warnings: findings.filter(({ level }) => level === "warning").length,
+      };
+      errors += now.errors - before.errors;
+      warnings += now.warnings - before.warnings;
+      if (findings.length === 0) byFile.delete(file);
+      else byFile.set(file, now);
+    }
+    return { errors, warnings };
+  };
+}
+
+const NONE: FindingCounts = { errors: 0, warnings: 0 };
+
+/** `unknown`: mechanisms that could not be checked. `undefined` where nothing is declared: there is then nothing to show. */
+export function statusOf(analysis: Analysis, { errors, warnings }: FindingCounts, unknown: number): Status | undefined {
+  const { mechanisms, motors, robots } = analysis;
   if (mechanisms.length + motors.length + robots.length === 0) return undefined;
-  const errors = findings.filter(({ level }) => level === "error").length;
-  const warnings = findings.filter(({ level }) => level === "warning").length;
-  // Only one without numbers can be unknown: the others need no verdict, and there may be hundreds.
-  const unknown = mechanisms.filter(
-    (mechanism) => mechanism.numbers === undefined && verdictOf(analysis, mechanism).state === "unknown",
-  ).length;
   const tooltip = [
     count(mechanisms.length, "mechanism"),
     ...(robots.length > 0 ? [count(robots.length, "robot")] : []),

@@ -66,11 +66,14 @@ export function verdictOf(analysis: Analysis, mechanism: AnalysedMechanism): Ver
 }
 
 /** Findings about a robot as a whole, worst first. */
-export function findingsAboutRobot({ findings }: Analysis, { at, call: { span } }: AnalysedRobot): readonly Finding[] {
+export function findingsAboutRobot({ findingsIn }: Analysis, { at, call: { span } }: AnalysedRobot): readonly Finding[] {
   const places = [span, at];
   const isHere = ({ at: here }: Finding): boolean =>
     places.some(({ file, start, end }) => file === here.file && start <= here.start && here.end <= end);
-  return findings
+  // In the analysis's order, which is that of the files' names.
+  const files = [...new Set(places.map(({ file }) => file))].sort();
+  return files
+    .flatMap((file) => findingsIn.get(file) ?? [])
     .filter((finding) => finding.mechanism === null && isHere(finding))
     .toSorted((one, other) => RANK[one.level] - RANK[other.level]);
 }

@@ -28,11 +28,15 @@ export function currentFile(texts: Texts, result: Result, file: string): Current
   const edits = open === undefined || version === undefined ? [] : texts.editsSince(file, version);
   // Opened since then, or anew, with another text: nothing leads from one to the other.
   if (open !== undefined && edits.length === 0 && open.text !== analysed) return undefined;
-  const lines = open === undefined || edits.length === 0 ? result.snapshot.lineMap(file) : createLineMap(open.text);
+  const isAnalysed = open === undefined || edits.length === 0;
+  let lines: LineMap | undefined;
   return {
     result,
     file,
-    lines,
+    get lines() {
+      lines ??= isAnalysed ? result.snapshot.lineMap(file) : createLineMap(open.text);
+      return lines;
+    },
     carry: (span) => carrySpan(edits, span),
     carryBack: (offset) => carryBack(edits, offset),
   };

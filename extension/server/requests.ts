@@ -10,7 +10,7 @@ import { FIND_PLACE, spanSchema } from "../protocol/place.js";
 import { readMessage } from "../protocol/readMessage.js";
 import { ChartAnswers } from "./answers/chart.js";
 import { answerCodeActions } from "./answers/codeActions.js";
-import { answerCodeLenses, resolveCodeLens } from "./answers/codeLenses.js";
+import { answerCodeLenses, type LensesOf, resolveCodeLens } from "./answers/codeLenses.js";
 import { answerCompletions, mayHoldUnit } from "./answers/completions.js";
 import { answerFindPlace } from "./answers/findPlace.js";
 import { answerHover } from "./answers/hover.js";
@@ -31,6 +31,7 @@ export interface RequestParts {
   readonly session: Session;
   readonly settings: DisplaySettingsReader;
   readonly hintsOf: HintsOf;
+  readonly lensesOf: LensesOf;
   readonly capabilities: ClientCapabilities;
   readonly committed: CommittedMechanisms;
   /** Commands that the client has. */
@@ -46,6 +47,7 @@ export function answerRequests({
   session,
   settings,
   hintsOf,
+  lensesOf,
   capabilities,
   committed,
   commands,
@@ -79,12 +81,14 @@ export function answerRequests({
   connection.onCodeLens(
     guard.answer("Code lenses", [], async ({ textDocument }) => {
       const [current, wish] = await Promise.all([anyOf(textDocument.uri), settings.of(textDocument.uri)]);
-      return current && wish.codeLens ? answerCodeLenses(current) : [];
+      return current && wish.codeLens ? answerCodeLenses(lensesOf, current) : [];
     }),
   );
   connection.onCodeLensResolve((lens) =>
     guard.answer("A code lens", lens, () =>
-      session.result ? resolveCodeLens(session.result, lens, commands, committed.of(session.result)) : lens,
+      session.result
+        ? resolveCodeLens(lensesOf, session.result, lens, { commands, committed: committed.of(session.result) })
+        : lens,
     )(),
   );
   connection.onCompletion(

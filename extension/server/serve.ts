@@ -10,8 +10,10 @@ import {
   type InitializeResult,
   TextDocumentSyncKind,
 } from "vscode-languageserver";
+import { createIndexReader, createMechanismsReader } from "../features/mechanismIndex.js";
 import { committedAnswerSchema, READ_COMMITTED } from "../protocol/committed.js";
 import { readMessage } from "../protocol/readMessage.js";
+import { createLensReader } from "./answers/codeLenses.js";
 import { createHintReader } from "./answers/inlayHints.js";
 import { CommittedMechanisms } from "./committed.js";
 import type { FileHost } from "./discovery.js";
@@ -36,7 +38,9 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
   connection.onInitialize((params) => {
     const settings = new DisplaySettingsReader(connection, params.capabilities.workspace?.configuration === true);
     const { capabilities } = params;
-    const hintsOf = createHintReader();
+    const indexOf = createIndexReader();
+    const mechanismsIn = createMechanismsReader(indexOf);
+    const [hintsOf, lensesOf] = [createHintReader(mechanismsIn), createLensReader(mechanismsIn)];
     const committed: CommittedMechanisms = new CommittedMechanisms({
       ask: async (uris) => readMessage(committedAnswerSchema, await connection.sendRequest(READ_COMMITTED, { uris })) ?? null,
       uriOf: (file) => session.texts.uriOf(file),
@@ -48,13 +52,16 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
     const results = showResults({
       connection,
       capabilities,
+      indexOf,
       hintsOf,
+      lensesOf,
       committedOf: (result) => committed.knownOf(result),
       report,
     });
     const session = new Session({ host, loadEngine, onResult: (result) => results.show(session.texts, result), onError: report });
     followTexts(connection, guard, session, settings);
-    answerRequests({ connection, guard, session, settings, hintsOf, capabilities, committed, commands: commandsOf(params) });
+    const commands = commandsOf(params);
+    answerRequests({ connection, guard, session, settings, hintsOf, lensesOf, capabilities, committed, commands });
     connection.onDidChangeConfiguration(
       guard.act("Reading changed settings", () => {
         settings.forget();
@@ -62,7 +69,10 @@ export function serve(connection: Connection, { host, loadEngine }: ServerParts)
       }),
     );
     connection.onInitialized(guard.act("Starting", () => start(connection, params, session, settings)));
-    connection.onShutdown(() => session.dispose());
+    connection.onShutdown(() => {
+      session.dispose();
+      results.dispose();
+    });
     return CAPABILITIES;
   });
   connection.listen();

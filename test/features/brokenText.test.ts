@@ -5,12 +5,11 @@ import { codeLensesOf } from "../../extension/features/codeLenses.js";
 import { completionsAt } from "../../extension/features/completions.js";
 import { hoverAt } from "../../extension/features/hover.js";
 import { inlayHintsIn } from "../../extension/features/inlayHints.js";
-import { mechanismTree } from "../../extension/features/mechanismTree.js";
 import { quickFixesAt } from "../../extension/features/quickFixes.js";
-import { statusOf } from "../../extension/features/status.js";
 import { documentSymbolsOf, workspaceSymbolsOf } from "../../extension/features/symbols.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { MOTOR } from "../support/handNumbers.js";
+import { wholeStatus, wholeTree } from "../support/overview.js";
 
 const WHOLE = `import { arm, battery, between, lift, mechanism, motor, robot, spur } from "loadmark";
 import { PINION as SMALL, TEETH } from "./gearing.js";
@@ -76,9 +75,9 @@ describe("on garbled text", () => {
           expect(hover.markdown).not.toMatch(/\b(?:NaN|Infinity|undefined|null)\b/);
         }
       }
-      const { robots, apart } = mechanismTree(analysis);
+      const { robots, apart } = wholeTree(analysis);
       for (const { at } of [...robots, ...robots.flatMap(({ mechanisms }) => mechanisms), ...apart]) within(at);
-      expect(statusOf(analysis)?.text).not.toBe("");
+      expect(wholeStatus(analysis)?.text).not.toBe("");
       workspaceSymbolsOf(analysis, "o");
       for (const { name } of analysis.mechanisms) operatingPointChart(analysis, name);
     }

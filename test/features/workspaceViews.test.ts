@@ -1,11 +1,10 @@
 /** What stands outside the text: lenses, symbols, the tree of mechanisms, the status. */
 import { describe, expect, it } from "vitest";
 import { codeLensesOf } from "../../extension/features/codeLenses.js";
-import { mechanismTree } from "../../extension/features/mechanismTree.js";
-import { statusOf } from "../../extension/features/status.js";
 import { documentSymbolsOf, workspaceSymbolsOf } from "../../extension/features/symbols.js";
 import { analyseWithCursor } from "../support/cursorFixture.js";
 import { handPoint, liftTorque, MOTOR, perCent, three } from "../support/handNumbers.js";
+import { wholeStatus, wholeTree } from "../support/overview.js";
 
 const FILE = "/robot/robot.ts";
 const OUTPUT_NM = liftTorque(10, 0.05);
@@ -85,9 +84,9 @@ describe("symbols", () => {
   });
 });
 
-describe("mechanismTree", () => {
+describe("the tree of mechanisms", () => {
   it("puts mechanisms under their robot and the others apart", () => {
-    const { robots, apart } = mechanismTree(analyseWithCursor(FOUR).analysis);
+    const { robots, apart } = wholeTree(analyseWithCursor(FOUR).analysis);
     const share = (ratio: number): string => `${perCent(handPoint(OUTPUT_NM, ratio, 0.98).share)} of stall`;
     expect(robots.map(({ label, state, mechanisms }) => [label, state, mechanisms.map(({ name }) => name)])).toEqual([
       ["tray mover", "warning", ["calm hoist", "eager hoist"]],
@@ -109,7 +108,7 @@ describe("mechanismTree", () => {
       "mechanisms: [calm, eager] }",
       'mechanisms: [calm, eager], loadCycle: [{ lasts: "9 s", moving: [calm, eager] }] }',
     ).replace('resistance: "0 ohm"', 'resistance: "0.5 ohm", mustStayAbove: "11 V"');
-    const [robot] = mechanismTree(analyseWithCursor(cycle).analysis).robots;
+    const [robot] = wholeTree(analyseWithCursor(cycle).analysis).robots;
     // From standstill each motor is 12 V / 6 A; two of them behind 0.5 ohm take 12 V / (0.5 + 1) ohm.
     const lowestV = 12 - 0.5 * (12 / 1.5);
     expect(robot).toMatchObject({
@@ -118,14 +117,14 @@ describe("mechanismTree", () => {
       description: `lowest ${three(lowestV)} V · Pulls the supply too low`,
     });
     expect(robot?.tooltip).toBe(`Load cycle: Pulls the supply too low, lowest ${three(lowestV)} V, at most 8 A`);
-    expect(mechanismTree(analyseWithCursor(FOUR).analysis).robots[0]).toMatchObject({
+    expect(wholeTree(analyseWithCursor(FOUR).analysis).robots[0]).toMatchObject({
       description: "",
       tooltip: expect.stringContaining("none is declared"),
     });
   });
 
   it("shows hostile names as plain text on one line", () => {
-    const { robots, apart } = mechanismTree(
+    const { robots, apart } = wholeTree(
       analyseWithCursor(FOUR.replace("calm hoist", "a\\n\u202Eb").replace("stuck hoist", "x".repeat(500))).analysis,
     );
     expect(robots[0]?.mechanisms[0]?.label).toBe("a b");
@@ -134,21 +133,21 @@ describe("mechanismTree", () => {
   });
 });
 
-describe("statusOf", () => {
+describe("the status", () => {
   it("counts the worst", () => {
-    expect(statusOf(analyseWithCursor(FOUR).analysis)).toEqual({
+    expect(wholeStatus(analyseWithCursor(FOUR).analysis)).toEqual({
       text: "1 error",
       tooltip: "4 mechanisms, 1 robot, 1 error, 2 warnings",
       state: "error",
     });
     const line = (start: string): string => FOUR.split("\n").find((one) => one.startsWith(start)) ?? "";
     const without = FOUR.replace(line("export const stuck"), "").replace(line("export const vague"), "");
-    expect(statusOf(analyseWithCursor(without).analysis)).toMatchObject({ text: "1 warning", state: "warning" });
+    expect(wholeStatus(analyseWithCursor(without).analysis)).toMatchObject({ text: "1 warning", state: "warning" });
     const fine = without.replace("spur(20, 60)", "spur(20, 90)");
-    expect(statusOf(analyseWithCursor(fine).analysis)).toMatchObject({ text: "2 mechanisms fine", state: "fine" });
+    expect(wholeStatus(analyseWithCursor(fine).analysis)).toMatchObject({ text: "2 mechanisms fine", state: "fine" });
   });
 
   it("is absent where nothing is declared", () => {
-    expect(statusOf(analyseWithCursor('import { motor } from "loadmark";\n').analysis)).toBeUndefined();
+    expect(wholeStatus(analyseWithCursor('import { motor } from "loadmark";\n').analysis)).toBeUndefined();
   });
 });

@@ -1,6 +1,7 @@
 import { beforeEach, describe, expect, it } from "vitest";
 import type { Diagnostic, PublishDiagnosticsParams } from "vscode-languageserver";
-import { type FileDiagnostics, Publisher } from "../../extension/server/publisher.js";
+import type { FileDiagnostics } from "../../extension/server/diagnostics.js";
+import { Publisher } from "../../extension/server/publisher.js";
 
 const sent: PublishDiagnosticsParams[] = [];
 let publisher: Publisher;
@@ -32,6 +33,20 @@ describe("publishing", () => {
     expect(publish({ a: file(undefined, "x") })).toEqual([{ uri: "file:///a.ts", diagnostics: [diagnostic("x")] }]);
     expect(publish({ a: file(undefined, "x") })).toEqual([]);
     expect(publish({ a: file(undefined, "y") })).toHaveLength(1);
+  });
+
+  it("does not look into what it was given before", () => {
+    const told = file(1, "x");
+    publish({ a: told });
+    const diagnostics = {
+      ...told,
+      get diagnostics(): never {
+        throw new Error("looked into");
+      },
+    };
+    expect(() => publish({ a: diagnostics })).toThrow("looked into");
+    publish({ a: told, b: { ...told, uri: "file:///b.ts" } });
+    expect(publish({ a: told })).toEqual([{ uri: "file:///b.ts", diagnostics: [] }]);
   });
 
   it("says nothing of files that never had a finding", () => {

@@ -20,7 +20,7 @@ import {
   StreamMessageWriter,
 } from "vscode-languageserver/node";
 import { CHART_MAY_DIFFER } from "../../extension/protocol/chartMessages.js";
-import { STATE, type State } from "../../extension/protocol/state.js";
+import { NO_STATE, resolveState, STATE, type State, type StateMessage } from "../../extension/protocol/state.js";
 
 export interface ServerClient {
   readonly connection: ProtocolConnection;
@@ -233,7 +233,10 @@ export async function startServerClient({ server, files, settings = {}, commands
       return judged(file);
     },
     at: (file, text, into = 0) => positionAt(textOf(file), find(file, text) + into),
-    lastState: () => said.findLast(({ method }) => method === STATE)?.params as State | undefined,
+    lastState() {
+      const messages = said.filter(({ method }) => method === STATE).map(({ params }) => params as StateMessage);
+      return messages.length === 0 ? undefined : messages.reduce(resolveOrFail, NO_STATE);
+    },
     async stop() {
       if (child.exitCode === null && child.signalCode === null) {
         const ended = new Promise((resolve) => child.once("exit", resolve));
@@ -246,6 +249,12 @@ export async function startServerClient({ server, files, settings = {}, commands
     },
   };
   return client;
+}
+
+function resolveOrFail(before: State, message: StateMessage): State {
+  const state = resolveState(before, message);
+  if (state === undefined) throw new Error("The server told of a state by one that it never told.");
+  return state;
 }
 
 /** As much of glob patterns as the server uses. */

@@ -1,6 +1,7 @@
 /** Code lenses: places at once, titles when one comes into view, from the result of then. */
 import type { CodeLens } from "vscode-languageserver";
 import { codeLensesOf, type CodeLens as Lens } from "../../features/codeLenses.js";
+import type { MechanismsIn } from "../../features/mechanismIndex.js";
 import type { Committed } from "../../features/sinceCommit.js";
 import { SHOW_CHART } from "../../protocol/commands.js";
 import type { CurrentFile } from "../current.js";
@@ -13,9 +14,16 @@ interface LensData {
   readonly index: number;
 }
 
-export function answerCodeLenses({ result, file, lines, carry }: CurrentFile): CodeLens[] {
+/** All lenses of a file. `committed`: what the last commit has. */
+export type LensesOf = (result: Result, file: string, committed?: Committed) => readonly Lens[];
+
+export function createLensReader(mechanismsIn: MechanismsIn): LensesOf {
+  return ({ analysis }, file, committed) => codeLensesOf(analysis, file, committed, mechanismsIn(analysis, file));
+}
+
+export function answerCodeLenses(lensesOf: LensesOf, { result, file, lines, carry }: CurrentFile): CodeLens[] {
   const seen = new Map<string, number>();
-  return codeLensesOf(result.analysis, file).map(({ span, mechanism }) => {
+  return lensesOf(result, file).map(({ span, mechanism }) => {
     const index = seen.get(mechanism) ?? 0;
     seen.set(mechanism, index + 1);
     const data: LensData = { file, mechanism, index };
@@ -24,9 +32,14 @@ export function answerCodeLenses({ result, file, lines, carry }: CurrentFile): C
 }
 
 /** `commands`: those that the client has. */
-export function resolveCodeLens(result: Result, lens: CodeLens, commands: readonly string[], committed: Committed): CodeLens {
+export function resolveCodeLens(
+  lensesOf: LensesOf,
+  result: Result,
+  lens: CodeLens,
+  { commands, committed }: { readonly commands: readonly string[]; readonly committed: Committed },
+): CodeLens {
   const { file, mechanism, index } = lens.data as LensData;
-  const found = codeLensesOf(result.analysis, file, committed).filter((one) => one.mechanism === mechanism)[index];
+  const found = lensesOf(result, file, committed).filter((one) => one.mechanism === mechanism)[index];
   const title = found?.title ?? mechanism;
   const opens = found !== undefined && commands.includes(SHOW_CHART);
   return { ...lens, command: opens ? { title, command: SHOW_CHART, arguments: [mechanism] } : { title, command: "" } };
@@ -34,19 +47,15 @@ export function resolveCodeLens(result: Result, lens: CodeLens, commands: readon
 
 /** True when `next` gives other lenses than those shown, which moved along with the text. `committedOf`: what the last commit has. */
 export function changesCodeLenses(
+  lensesOf: LensesOf,
   shown: CurrentFile | undefined,
   next: Result,
   file: string,
   committedOf: (result: Result) => Committed,
 ): boolean {
-  const before =
-    shown === undefined
-      ? []
-      : codeLensesOf(shown.result.analysis, file, committedOf(shown.result)).map((lens) => ({
-          ...lens,
-          span: shown.carry(lens.span),
-        }));
-  return summary(before) !== summary(codeLensesOf(next.analysis, file, committedOf(next)));
+  const before = shown === undefined ? [] : lensesOf(shown.result, file, committedOf(shown.result));
+  const moved = before.map((lens) => ({ ...lens, span: shown?.carry(lens.span) ?? lens.span }));
+  return summary(moved) !== summary(lensesOf(next, file, committedOf(next)));
 }
 
 function summary(lenses: readonly Lens[]): string {

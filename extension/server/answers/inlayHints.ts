@@ -1,7 +1,7 @@
 /** Inlay hints, moved along with the text until the next result; whether that result changes them is told here too. */
 import type { InlayHint, Range } from "vscode-languageserver";
-import type { AnalysedMechanism } from "../../analysis/analysis.js";
-import { filesWithHints, type InlayHint as Hint, inlayHintsIn } from "../../features/inlayHints.js";
+import { type InlayHint as Hint, inlayHintsIn } from "../../features/inlayHints.js";
+import type { MechanismsIn } from "../../features/mechanismIndex.js";
 import type { CurrentFile } from "../current.js";
 import type { DisplaySettings } from "../displaySettings.js";
 import type { Result } from "../session.js";
@@ -9,53 +9,19 @@ import type { Result } from "../session.js";
 /** All hints of a file. */
 export type HintsOf = (result: Result, file: string) => readonly Hint[];
 
-interface ResultHints {
-  readonly mechanisms: ReadonlyMap<string, readonly AnalysedMechanism[]>;
-  readonly hints: Map<string, readonly Hint[]>;
-}
-
 /** Hints are asked for at every scroll, and compared with each new result: they are worked out once for each. */
-export function createHintReader(): HintsOf {
-  const known = new WeakMap<Result, ResultHints>();
-  const filesOf = createFilesReader();
+export function createHintReader(mechanismsIn: MechanismsIn): HintsOf {
+  const known = new WeakMap<Result, Map<string, readonly Hint[]>>();
   return (result, file) => {
-    const ofResult = known.get(result) ?? { mechanisms: groupByFile(result.analysis.mechanisms, filesOf), hints: new Map() };
-    known.set(result, ofResult);
-    const { mechanisms, hints } = ofResult;
-    const before = hints.get(file);
+    const { analysis, snapshot } = result;
+    const byFile = known.get(result) ?? new Map<string, readonly Hint[]>();
+    known.set(result, byFile);
+    const before = byFile.get(file);
     if (before !== undefined) return before;
-    const length = result.snapshot.read(file)?.length ?? 0;
-    const found = inlayHintsIn(result.analysis, file, 0, length, mechanisms.get(file) ?? []);
-    hints.set(file, found);
+    const found = inlayHintsIn(analysis, file, 0, snapshot.read(file)?.length ?? 0, mechanismsIn(analysis, file));
+    byFile.set(file, found);
     return found;
   };
-}
-
-type FilesOf = (mechanism: AnalysedMechanism) => ReadonlySet<string>;
-
-/** Most mechanisms are those of the last result. */
-function createFilesReader(): FilesOf {
-  const known = new WeakMap<AnalysedMechanism, ReadonlySet<string>>();
-  return (mechanism) => {
-    const files = known.get(mechanism) ?? filesWithHints(mechanism);
-    known.set(mechanism, files);
-    return files;
-  };
-}
-
-function groupByFile(
-  mechanisms: readonly AnalysedMechanism[],
-  filesOf: FilesOf,
-): ReadonlyMap<string, readonly AnalysedMechanism[]> {
-  const groups = new Map<string, AnalysedMechanism[]>();
-  for (const mechanism of mechanisms) {
-    for (const file of filesOf(mechanism)) {
-      const group = groups.get(file);
-      if (group === undefined) groups.set(file, [mechanism]);
-      else group.push(mechanism);
-    }
-  }
-  return groups;
 }
 
 export interface HintWish {
