@@ -35,15 +35,17 @@ export function changesBetween(before: Analysis, now: Analysis, index: Mechanism
       if (located !== undefined) touched.add(located.file);
     }
   }
-  // A robot shows how its mechanisms stand.
-  for (const file of [...touched]) {
-    for (const { inFile } of [before, now]) {
-      for (const { declared: mechanism } of inFile.get(file)?.mechanisms ?? []) {
-        if (mechanism !== undefined) for (const one of index.listing(mechanism)) touched.add(one);
-      }
+  for (const analysis of [before, now]) addListing(touched, analysis, index);
+  return { found, touched };
+}
+
+/** Adds the files of robots that list mechanisms of those files: a robot shows where its mechanisms are, and how they stand. */
+export function addListing(files: Set<string>, { inFile }: Analysis, index: MechanismIndex): void {
+  for (const file of [...files]) {
+    for (const { declared } of inFile.get(file)?.mechanisms ?? []) {
+      if (declared !== undefined) for (const one of index.listing(declared)) files.add(one);
     }
   }
-  return { found, touched };
 }
 
 /** Mechanisms that the robots of only one of the two list. */

@@ -4,7 +4,8 @@
  * Keeps what was told by file. A file's part is looked at where its tree is another, or a text that it has a place in.
  */
 import type { Analysis } from "../analysis/analysis.js";
-import type { IndexOf } from "../features/mechanismIndex.js";
+import { addListing } from "../features/analysisChanges.js";
+import type { IndexOf, MechanismIndex } from "../features/mechanismIndex.js";
 import { createTreeReader, type FileTree, type MechanismNode, type RobotNode } from "../features/mechanismTree.js";
 import { sameItems } from "../features/sameItems.js";
 import { createFindingCounter, statusOf } from "../features/status.js";
@@ -36,7 +37,7 @@ export function createStateReader(indexOf: IndexOf, knowsNothing: boolean): Stat
     const changes = isFirst ? undefined : since;
     isFirst = false;
     const { byFile, changed, unchecked } = treesOf(analysis, changes?.touched);
-    const seen = changes?.texts && [...changes.texts].flatMap((file) => [...indexOf(analysis).standingIn(file)]);
+    const seen = changes?.texts && filesShowing(changes.texts, analysis, indexOf(analysis));
     const replaced = new Map<string, Told | undefined>();
     for (const file of seen ? new Set([...changed, ...seen]) : new Set([...told.keys(), ...byFile.keys()])) {
       const before = told.get(file);
@@ -53,6 +54,13 @@ export function createStateReader(indexOf: IndexOf, knowsNothing: boolean): Stat
     statusTold = JSON.stringify(statusNow);
     return { ...tellLists(analysis, told, replaced), status: statusNow };
   };
+}
+
+/** Files whose mechanisms and robots are told with a place in one of the texts. */
+function filesShowing(texts: ReadonlySet<string>, analysis: Analysis, index: MechanismIndex): ReadonlySet<string> {
+  const files = new Set([...texts].flatMap((file) => [...index.standingIn(file)]));
+  addListing(files, analysis, index);
+  return files;
 }
 
 function tellLists(

@@ -75,7 +75,9 @@ function editAtRandom(workspace: EditedWorkspace, random: (below: number) => num
     case 3:
       workspace.put(
         "/w/loadmark.json",
-        ['{ "rules": { "past-peak": "error" } }', '{ "rules": { "stalls": "warning" } }', null][random(3)] ?? null,
+        ['{ "levels": { "past-peak": "error", "sags": "off" } }', '{ "levels": { "stalls": "warning", "sags": "error" } }', null][
+          random(3)
+        ] ?? null,
       );
       return "settings";
     case 4:
@@ -127,5 +129,61 @@ describe("after edits at random", () => {
     expect(seen.kept).toBeGreaterThan(10);
     expect(seen.left).toBeGreaterThan(50);
     expect(seen.states.size).toBeGreaterThan(5);
+  });
+});
+
+describe("after one edit", () => {
+  it("the message names all that stays, and tells what does not", () => {
+    const workspace = new EditedWorkspace();
+    const surfaces = follow(workspace);
+    const first = surfaces.tell(workspace.result());
+    expect(JSON.stringify(first.message)).not.toContain('"kept"');
+    expect(first.state.apart.map(({ name }) => name)).toEqual(["vague", "near", "far", "right"]);
+    workspace.replace("/w/d.ts", "spur(20, 30)", "spur(20, 70)");
+    const { message, state } = surfaces.tell(workspace.result());
+    const changed = state.apart.filter(({ name }) => name === "near" || name === "far");
+    expect(message?.apart).toEqual([{ from: 0, kept: 1 }, ...changed, { from: 3, kept: 1 }]);
+    expect(message?.robots).toEqual([{ from: 0, kept: 2 }]);
+  });
+
+  it("a robot is told without those of its mechanisms that stay", () => {
+    const workspace = new EditedWorkspace();
+    const surfaces = follow(workspace);
+    surfaces.tell(workspace.result());
+    workspace.replace("/w/gears.ts", "WHEEL = 60", "WHEEL = 20");
+    const { message, state } = surfaces.tell(workspace.result());
+    const { mechanisms, ...head } = state.robots[1] ?? { mechanisms: [] };
+    expect(message?.robots).toEqual([
+      { from: 0, kept: 1 },
+      { ...head, like: 1, mechanisms: [{ from: 0, kept: 2 }, mechanisms[2]] },
+    ]);
+    expect(mechanisms[2]).toMatchObject({ name: "middle", standing: "error" });
+    expect(message?.apart).toEqual([{ from: 0, kept: 4 }]);
+  });
+
+  it("in a file that declares nothing, nothing is told, and no diagnostics are another object", () => {
+    const workspace = new EditedWorkspace();
+    const surfaces = follow(workspace);
+    const result = workspace.result();
+    surfaces.tell(result);
+    const before = new Map(surfaces.diagnostics(result));
+    workspace.replace("/w/plain.ts", "1", "2");
+    const next = workspace.result();
+    expect(surfaces.tell(next).message).toBeUndefined();
+    const after = surfaces.diagnostics(next);
+    expect(before.size).toBeGreaterThan(2);
+    expect(after.size).toBe(before.size);
+    for (const [file, told] of after) expect(told).toBe(before.get(file));
+  });
+
+  it("a text that was typed over with the same is looked at: what the editor moved along may stand elsewhere", () => {
+    const workspace = new EditedWorkspace();
+    const surfaces = follow(workspace);
+    workspace.open("/w/a.ts");
+    surfaces.tell(workspace.result());
+    const text = workspace.text("/w/a.ts") ?? "";
+    workspace.replace("/w/a.ts", text, "");
+    workspace.replace("/w/a.ts", "", text);
+    expect(surfaces.tell(workspace.result()).retold).toEqual(new Set(["/w/a.ts"]));
   });
 });

@@ -14,16 +14,18 @@ const hoist = (name: string, teeth: string): string =>
 
 /** Mechanisms through a helper, in a loop, with gears from elsewhere; robots that list mechanisms of other files, and none. */
 export const WORKSPACE: Readonly<Record<string, string>> = {
-  "/w/motors.ts": `${IMPORT}export const slow = ${MOTOR};\nexport const pack = battery({ openCircuit: "12 V", resistance: "90 mohm" });\n`,
+  "/w/motors.ts": `${IMPORT}export const slow = ${MOTOR};\nexport const pack = battery({ openCircuit: "12 V", resistance: "90 mohm", mustStayAbove: "11.2 V" });\n`,
   "/w/gears.ts": 'import { spur } from "loadmark";\nexport const WHEEL = 60;\nexport const pair = spur(20, 70);\n',
   "/w/make.ts": `${IMPORT}import { slow } from "./motors.js";\nexport const make = (name: string, teeth: number) =>\n  mechanism(name, { motor: slow, stages: [spur(20, teeth)], load: ${LOAD} });\n`,
   "/w/a.ts": `${IMPORT}import { slow } from "./motors.js";\nimport { WHEEL } from "./gears.js";\n${hoist("upper", "80")}${hoist("middle", "WHEEL")}`,
   "/w/b.ts": `${IMPORT}import { slow } from "./motors.js";\nimport { pair } from "./gears.js";\n// loadmark-allow past-peak: known\n${hoist("lower", "50").replace("[spur(20, 50)]", "[pair]")}${hoist("vague", "teeth()")}`,
   "/w/c.ts":
     'import { make } from "./make.js";\nexport const left = make("left", 80);\nexport const right = make("right", 40);\n',
+  "/w/names.ts": 'export const NAME = "named";\n',
   "/w/d.ts": `${IMPORT}import { slow } from "./motors.js";\nfor (const name of ["near", "far"]) mechanism(name, { motor: slow, stages: [spur(20, 30)], load: ${LOAD} });\n`,
+  "/w/e.ts": `${IMPORT}import { slow, pack } from "./motors.js";\n${hoist("solo", "60").replace(LOAD, `${LOAD}, supply: pack`)}`,
   "/w/robot.ts": `${IMPORT}import { pack } from "./motors.js";\nimport { upper, middle } from "./a.js";\nimport { left } from "./c.js";\nexport default robot("mover", { supply: pack, mechanisms: [upper, left, middle] });\n`,
-  "/w/other.ts": `${IMPORT}import { pack } from "./motors.js";\nimport { lower } from "./b.js";\nexport default robot("other", { supply: pack, mechanisms: [lower], loadCycle: [{ lasts: "9 s", moving: [lower] }] });\n`,
+  "/w/other.ts": `${IMPORT}import { pack } from "./motors.js";\nimport { lower } from "./b.js";\nimport { solo } from "./e.js";\nexport default robot("other", { supply: pack, mechanisms: [lower, solo], loadCycle: [{ lasts: "9 s", moving: [lower, solo] }] });\n`,
   "/w/plain.ts": "export const NOTHING = 1;\n",
 };
 
@@ -37,6 +39,11 @@ export const EDITS: readonly (readonly [string, string])[] = [
   ["spur(20, 30)", "spur(20, 70)"],
   ["mechanisms: [upper, left, middle]", "mechanisms: [middle]"],
   ["mechanisms: [middle]", "mechanisms: [upper, left, middle]"],
+  ['[lower, solo], loadCycle: [{ lasts: "9 s", moving: [lower, solo]', '[lower], loadCycle: [{ lasts: "8 s", moving: [lower]'],
+  ['[lower], loadCycle: [{ lasts: "8 s", moving: [lower]', '[lower, solo], loadCycle: [{ lasts: "9 s", moving: [lower, solo]'],
+  ['export const left = make("left"', 'import { NAME } from "./names.js"; export const left = make(NAME'],
+  ['"named"', '"renamed"'],
+  ['"renamed"', '"named"'],
   ['"left", 80', '"left", 60'],
   ['"left", 60', '"upper", 80'],
   ['"upper", 80', '"left", 80'],

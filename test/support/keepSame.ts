@@ -1,5 +1,5 @@
 /** An analysis in which whatever is as it was in another is the same object: a file's, a list of findings, a finding, a robot. */
-import type { AnalysedRobot, Analysis, FileAnalysis, Finding } from "../../extension/analysis/analysis.js";
+import type { AnalysedMechanism, AnalysedRobot, Analysis, FileAnalysis, Finding } from "../../extension/analysis/analysis.js";
 
 export function keepSame(before: Analysis, now: Analysis): Analysis {
   const inFile = mapOver(now.inFile, (file, own) => keepFile(before.inFile.get(file), own));
@@ -9,12 +9,14 @@ export function keepSame(before: Analysis, now: Analysis): Analysis {
   );
   const lists = mapOver(now.findingsByMechanism, (_, own) => own.map((one) => kept.get(one) ?? one));
   const robots = [...inFile.values()].flatMap((one) => one.robots);
+  const mechanisms = [...inFile.values()].flatMap((one) => one.mechanisms);
   return {
     ...now,
     inFile,
     findingsIn,
     findingsByMechanism: lists,
     robots,
+    mechanisms,
     findings: now.findings.map((one) => kept.get(one) ?? one),
   };
 }
@@ -26,17 +28,25 @@ function mapOver<Value>(all: ReadonlyMap<string, Value>, change: (key: string, v
 function keepFile(before: FileAnalysis | undefined, now: FileAnalysis): FileAnalysis {
   if (before === undefined) return now;
   const robots = keepList(before.robots, now.robots, keepRobot);
+  const mechanisms = keepList(before.mechanisms, now.mechanisms, keepMechanism);
   const isSame =
     before.evaluation === now.evaluation &&
     before.robots === robots &&
-    keepList(before.mechanisms, now.mechanisms, (_, one) => one) === before.mechanisms &&
+    before.mechanisms === mechanisms &&
     keepList(before.motors, now.motors, (_, one) => one) === before.motors;
-  return isSame ? before : { ...now, robots };
+  return isSame ? before : { ...now, robots, mechanisms };
 }
 
 function keepRobot(before: AnalysedRobot, now: AnalysedRobot): AnalysedRobot {
   const isSame = before.call === now.call && before.declared === now.declared && before.solution === now.solution;
   return isSame && JSON.stringify(before.notChecked) === JSON.stringify(now.notChecked) ? before : now;
+}
+
+function keepMechanism(before: AnalysedMechanism, now: AnalysedMechanism): AnalysedMechanism {
+  const isSame = before.call === now.call && before.declared === now.declared && before.numbers === now.numbers;
+  return isSame && JSON.stringify([before.assumed, before.notChecked]) === JSON.stringify([now.assumed, now.notChecked])
+    ? before
+    : now;
 }
 
 function keepFinding(before: Finding, now: Finding): Finding {
