@@ -33,6 +33,20 @@ export function createGuard(report: Report): Guard {
   };
 }
 
+export type Attempt = <T>(what: string, work: () => T) => T | undefined;
+
+/** For work beside other work, which must be done even where this fails. */
+export function createAttempt(report: Report): Attempt {
+  return (what, work) => {
+    try {
+      return work();
+    } catch (error) {
+      report(what, error);
+      return undefined;
+    }
+  };
+}
+
 /** An error as text for the log, with where it came from. */
 export function describeError(error: unknown): string {
   if (!(error instanceof Error)) return String(error);

@@ -4,31 +4,21 @@
  * The rest is the client's view, and a nudge for charts, and for hints and lenses where they differ. Where a newer result comes before its
  * turn, it is done once, for the newest. What the surfaces say is built elsewhere; this decides what is sent, and when.
  */
-import type { ClientCapabilities, Connection } from "vscode-languageserver";
 import type { IndexOf } from "../features/mechanismIndex.js";
-import type { Committed } from "../features/sinceCommit.js";
 import { CHART_MAY_DIFFER } from "../protocol/chartMessages.js";
 import { STATE } from "../protocol/state.js";
-import { changesCodeLenses, type LensesOf } from "./answers/codeLenses.js";
-import { changesInlayHints, type HintsOf } from "./answers/inlayHints.js";
-import { type CurrentFile, currentFile } from "./current.js";
+import { currentFile } from "./current.js";
 import { createDiagnosticsReader } from "./diagnostics.js";
-import type { Report } from "./guard.js";
+import { createAttempt, type Report } from "./guard.js";
 import { Publisher } from "./publisher.js";
+import { createRefreshes, type RefreshParts, type Shown } from "./refreshes.js";
 import { type ResultChanges, resultChanges, retoldFiles } from "./resultChanges.js";
 import type { Result } from "./session.js";
 import { createStateReader } from "./stateMessage.js";
 import type { Texts } from "./texts.js";
 
-export interface ResultsParts {
-  readonly connection: Connection;
-  readonly capabilities: ClientCapabilities;
+export interface ResultsParts extends RefreshParts {
   readonly indexOf: IndexOf;
-  readonly hintsOf: HintsOf;
-  readonly lensesOf: LensesOf;
-  /** What is known of the last commit. */
-  readonly committedOf: (result: Result) => Committed;
-  readonly report: Report;
 }
 
 export interface Results {
@@ -46,20 +36,17 @@ interface Untold {
   readonly result: Result;
   readonly texts: Texts;
   /** What was shown beside open documents, moved along with their texts; `undefined` where results came between. */
-  readonly shown: ReadonlyMap<string, CurrentFile | undefined> | undefined;
+  readonly shown: Shown | undefined;
 }
 
 export function showResults(parts: ResultsParts): Results {
-  const { connection, capabilities, indexOf, hintsOf, lensesOf, committedOf, report } = parts;
+  const { connection, indexOf, report } = parts;
   const attempt = createAttempt(report);
+  const refreshes = createRefreshes(parts, attempt);
   let writes: Promise<void>[] = [];
   const publisher = new Publisher((params) => writes.push(connection.sendDiagnostics(params)));
   const diagnosticsOf = createDiagnosticsReader();
   let stateOf = createStateReader(indexOf, true);
-  const tellAllAnew = () => {
-    stateOf = createStateReader(indexOf, false);
-  };
-  const { refreshHints, refreshLenses } = createRefresher(connection, capabilities, report);
   let untold: Untold | undefined;
   /** The last one that all was told of. */
   let told: Result | undefined;
@@ -70,7 +57,8 @@ export function showResults(parts: ResultsParts): Results {
       return message && connection.sendNotification(STATE, message);
     };
     const fail = (error: unknown) => {
-      tellAllAnew();
+      // What the client has is not known now: the next state is told whole.
+      stateOf = createStateReader(indexOf, false);
       report("Telling the state", error);
     };
     try {
@@ -78,23 +66,6 @@ export function showResults(parts: ResultsParts): Results {
     } catch (error) {
       fail(error);
     }
-  };
-  const refreshWhatDiffers = ({ result, shown }: Untold, files: ReadonlySet<string> | undefined) => {
-    // Between two results that were told, somebody may have been shown a third.
-    if (shown === undefined) {
-      refreshHints();
-      refreshLenses();
-      return;
-    }
-    const beside = [...shown].filter(([file]) => files?.has(file) ?? true);
-    attempt("Comparing hints", () => {
-      if (beside.some(([file, before]) => changesInlayHints(hintsOf, before, result, file))) refreshHints();
-    });
-    attempt("Comparing lenses", () => {
-      const differs = ([file, before]: [string, CurrentFile | undefined]) =>
-        changesCodeLenses(lensesOf, before, result, file, committedOf);
-      if (beside.some(differs)) refreshLenses();
-    });
   };
   const tellRest = (of: Result) => {
     if (untold?.result !== of) return;
@@ -107,7 +78,8 @@ export function showResults(parts: ResultsParts): Results {
     attempt("Telling of a result", () => {
       connection.sendNotification(CHART_MAY_DIFFER).catch((error) => report("Telling of a result", error));
     });
-    refreshWhatDiffers(rest, before && changes && attempt("Comparing files", () => retoldFiles(before, of, changes)));
+    const retold = before && changes && attempt("Comparing files", () => retoldFiles(before, of, changes));
+    refreshes.whereOther(rest.shown, of, retold);
     const { files, mechanisms, findings } = of.analysis;
     connection.tracer.log(`${files.size} files, ${mechanisms.length} mechanisms, ${findings.length} findings.`);
   };
@@ -121,44 +93,15 @@ export function showResults(parts: ResultsParts): Results {
       untold = { result, texts, shown };
       void whenWritten(writes, report).then(() => tellRest(result));
     },
-    refresh() {
-      refreshHints();
-      refreshLenses();
-    },
-    refreshLenses,
+    refresh: () => refreshes.all(),
+    refreshLenses: () => refreshes.lenses(),
     dispose() {
       untold = undefined;
     },
   };
 }
 
-/** One surface that fails must not keep the others from the result. */
-function createAttempt(report: Report): <T>(what: string, work: () => T) => T | undefined {
-  return (what, work) => {
-    try {
-      return work();
-    } catch (error) {
-      report(what, error);
-      return undefined;
-    }
-  };
-}
-
-function createRefresher(connection: Connection, { workspace }: ClientCapabilities, report: Report) {
-  const canRefreshHints = workspace?.inlayHint?.refreshSupport === true;
-  const canRefreshLenses = workspace?.codeLens?.refreshSupport === true;
-  return {
-    refreshHints() {
-      if (canRefreshHints) connection.languages.inlayHint.refresh().catch((error) => report("Refreshing hints", error));
-    },
-    refreshLenses() {
-      if (!canRefreshLenses) return;
-      connection.sendRequest("workspace/codeLens/refresh").catch((error) => report("Refreshing lenses", error));
-    },
-  };
-}
-
-function shownBeside(texts: Texts, told: Result | undefined): ReadonlyMap<string, CurrentFile | undefined> {
+function shownBeside(texts: Texts, told: Result | undefined): Shown {
   return new Map(texts.openKeys().map((file) => [file, told && currentFile(texts, told, file)]));
 }
 
