@@ -6,7 +6,7 @@
  */
 import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
 import type { Snapshot } from "../evaluator/value.js";
-import type { Committed } from "../features/sinceCommit.js";
+import { type Committed, NO_COMMIT } from "../features/sinceCommit.js";
 import { type CommittedAnswer, MOST_ASKED } from "../protocol/committed.js";
 import type { Result } from "./session.js";
 
@@ -56,6 +56,7 @@ export class CommittedMechanisms {
 
   /** What is known now; nothing is looked for. */
   knownOf({ analysis }: Result): Committed {
+    if (this.#known === undefined) return NO_COMMIT;
     return (mechanism) => this.#find(mechanism, rootsOf(analysis, mechanism));
   }
 
