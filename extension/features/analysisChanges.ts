@@ -20,15 +20,8 @@ export function changesBetween(before: Analysis, now: Analysis, index: Mechanism
   const declared = differingFiles(before.inFile, now.inFile);
   const found = differingFiles(before.findingsIn, now.findingsIn);
   const touched = new Set(declared);
-  for (const file of found) {
-    // Of robots that stand there it is told by place, of mechanisms by name.
-    for (const one of index.standingIn(file)) touched.add(one);
-    for (const { findingsIn } of [before, now]) {
-      for (const { mechanism } of findingsIn.get(file) ?? []) {
-        if (mechanism !== null) for (const one of index.named(mechanism)) touched.add(one);
-      }
-    }
-  }
+  // What is found of a robot as a whole is told by where it is.
+  for (const file of found) for (const one of index.standingIn(file)) touched.add(one);
   for (const file of declared) {
     for (const mechanism of relisted(before.inFile.get(file), now.inFile.get(file))) {
       const located = index.declared(mechanism);

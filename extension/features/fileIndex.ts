@@ -39,6 +39,7 @@ export class FileIndex<Key> {
 /** Files that one of the two has another thing for than the other, or none. Things are compared by identity. */
 export function differingFiles<Thing>(one: ReadonlyMap<string, Thing>, other: ReadonlyMap<string, Thing>): Set<string> {
   const files = new Set<string>();
+  if (one === other) return files;
   let inBoth = 0;
   for (const [file, thing] of other) {
     const before = one.get(file);

@@ -1,5 +1,5 @@
 /**
- * Where a workspace's mechanisms are: by name, by what was declared, by robots that list them, by files that they stand in.
+ * Where a workspace's mechanisms are: by what was declared, by robots that list them, by files that they stand in.
  *
  * Follows from one analysis to another by the files that differ, so that a feature never goes through all mechanisms for one of them.
  */
@@ -10,8 +10,6 @@ import { filesWithHints } from "./inlayHints.js";
 
 /** Valid until another analysis is asked for. Files are those of calls, as in `Analysis.inFile`. */
 export interface MechanismIndex {
-  /** Files with mechanisms of a name. */
-  named(name: string): Iterable<string>;
   /** A mechanism by what it was declared to be. */
   declared(mechanism: Mechanism): LocatedMechanism | undefined;
   /** Files with robots that list a mechanism. */
@@ -44,7 +42,6 @@ export function createIndexReader(): IndexOf {
 }
 
 class IndexMaps implements MechanismIndex {
-  readonly #names = new FileIndex<string>();
   readonly #listed = new FileIndex<Mechanism>();
   /** Of files other than the call's own, which are few. */
   readonly #standing = new FileIndex<string>();
@@ -60,10 +57,6 @@ class IndexMaps implements MechanismIndex {
       for (const mechanism of mechanisms) {
         if (mechanism.declared !== undefined) this.#declared.set(mechanism.declared, { file, mechanism });
       }
-      this.#names.set(
-        file,
-        mechanisms.map(({ name }) => name),
-      );
       this.#listed.set(
         file,
         robots.flatMap(({ declared }) => declared?.mechanisms ?? []),
@@ -72,10 +65,6 @@ class IndexMaps implements MechanismIndex {
       standing.delete(file);
       this.#standing.set(file, standing);
     }
-  }
-
-  named(name: string): Iterable<string> {
-    return this.#names.filesOf(name);
   }
 
   declared(mechanism: Mechanism): LocatedMechanism | undefined {

@@ -9,7 +9,7 @@ import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
 import type { IndexOf, MechanismIndex } from "./mechanismIndex.js";
 import { sameItems } from "./sameItems.js";
-import { findingsAboutRobot, robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
+import { findingsAbout, findingsAboutRobot, robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
 
 export interface RobotNode {
   /** As declared: the key for the chart. */
@@ -45,17 +45,25 @@ export interface FileTree {
   readonly robots: readonly RobotNode[];
   /** Mechanisms that no robot lists. */
   readonly apart: readonly MechanismNode[];
-  /** Of its mechanisms, listed or not, those that could not be checked. */
+  readonly counts: Counts;
+}
+
+/** How many there are, listed or not, accepted or not. */
+export interface Counts {
+  readonly mechanisms: number;
+  /** Of these, those that could not be checked. */
   readonly unchecked: number;
+  readonly motors: number;
+  readonly robots: number;
 }
 
 export interface Trees {
-  /** Without files that declare neither; valid until the next analysis is given. */
+  /** Without files that declare nothing; valid until the next analysis is given. */
   readonly byFile: ReadonlyMap<string, FileTree>;
   /** Files whose tree is another than with the analysis before, or gone. */
   readonly changed: ReadonlySet<string>;
   /** Of all files. */
-  readonly unchecked: number;
+  readonly counts: Counts;
 }
 
 /** `touched`: files that may differ from the analysis given before (`changesBetween`); absent: any may. */
@@ -65,7 +73,7 @@ export type TreesOf = (analysis: Analysis, touched?: ReadonlySet<string>) => Tre
 export function createTreeReader(indexOf: IndexOf): TreesOf {
   const nodeOf = createNodeReader();
   const byFile = new Map<string, FileTree>();
-  let unchecked = 0;
+  let counts = NOTHING;
   return (analysis, touched = new Set([...byFile.keys(), ...analysis.inFile.keys()])) => {
     const index = indexOf(analysis);
     const changed = new Set<string>();
@@ -74,11 +82,22 @@ export function createTreeReader(indexOf: IndexOf): TreesOf {
       const tree = treeOf(analysis, file, index, nodeOf, before);
       if (tree === before) continue;
       changed.add(file);
-      unchecked += (tree?.unchecked ?? 0) - (before?.unchecked ?? 0);
+      counts = recount(counts, before?.counts, tree?.counts);
       if (tree === undefined) byFile.delete(file);
       else byFile.set(file, tree);
     }
-    return { byFile, changed, unchecked };
+    return { byFile, changed, counts };
+  };
+}
+
+const NOTHING: Counts = { mechanisms: 0, unchecked: 0, motors: 0, robots: 0 };
+
+function recount(all: Counts, before = NOTHING, now = NOTHING): Counts {
+  return {
+    mechanisms: all.mechanisms + now.mechanisms - before.mechanisms,
+    unchecked: all.unchecked + now.unchecked - before.unchecked,
+    motors: all.motors + now.motors - before.motors,
+    robots: all.robots + now.robots - before.robots,
   };
 }
 
@@ -88,7 +107,7 @@ type NodeOf = (analysis: Analysis, mechanism: AnalysedMechanism) => MechanismNod
 function createNodeReader(): NodeOf {
   const known = new WeakMap<AnalysedMechanism, { readonly findings: readonly Finding[]; readonly node: MechanismNode }>();
   return (analysis, mechanism) => {
-    const findings = analysis.findingsByMechanism.get(mechanism.name) ?? [];
+    const findings = findingsAbout(analysis, mechanism);
     const before = known.get(mechanism);
     if (before !== undefined && sameItems(findings, before.findings)) return before.node;
     const node = nodeFor(analysis, mechanism);
@@ -104,9 +123,9 @@ function treeOf(
   nodeOf: NodeOf,
   before: FileTree | undefined,
 ): FileTree | undefined {
-  const { mechanisms = [], robots: all = [] }: Partial<FileAnalysis> = analysis.inFile.get(file) ?? {};
+  const { mechanisms = [], motors = [], robots: all = [] }: Partial<FileAnalysis> = analysis.inFile.get(file) ?? {};
+  if (mechanisms.length + motors.length + all.length === 0) return undefined;
   const declared = all.filter((robot) => robot.declared !== undefined);
-  if (mechanisms.length + declared.length === 0) return undefined;
   const nodes = mechanisms.map((mechanism) => nodeOf(analysis, mechanism));
   const apart = nodes.filter((_, position) => {
     const mechanism = mechanisms[position]?.declared;
@@ -123,8 +142,13 @@ function treeOf(
     return like !== undefined && sameRobot(like, node) ? like : node;
   });
   const unchecked = nodes.filter(({ state }) => state === "unknown").length;
-  const isSame = before?.unchecked === unchecked && sameItems(before.robots, robots) && sameItems(before.apart, apart);
-  return isSame ? before : { robots, apart, unchecked };
+  const counts = { mechanisms: mechanisms.length, unchecked, motors: motors.length, robots: all.length };
+  const isSame =
+    before !== undefined &&
+    sameItems(before.robots, robots) &&
+    sameItems(before.apart, apart) &&
+    JSON.stringify(before.counts) === JSON.stringify(counts);
+  return isSame ? before : { robots, apart, counts };
 }
 
 function robotNode(analysis: Analysis, robot: AnalysedRobot, mechanisms: readonly MechanismNode[]): RobotNode {

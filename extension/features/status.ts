@@ -4,6 +4,7 @@
  * Counts the findings of files where something else is found; the others' counts stand.
  */
 import type { Analysis } from "../analysis/analysis.js";
+import type { Counts } from "./mechanismTree.js";
 import type { State } from "./verdict.js";
 
 export interface Status {
@@ -44,22 +45,22 @@ export function createFindingCounter(): CountsOf {
 
 const NONE: FindingCounts = { errors: 0, warnings: 0 };
 
-/** `unknown`: mechanisms that could not be checked. `undefined` where nothing is declared: there is then nothing to show. */
-export function statusOf(analysis: Analysis, { errors, warnings }: FindingCounts, unknown: number): Status | undefined {
-  const { mechanisms, motors, robots } = analysis;
-  if (mechanisms.length + motors.length + robots.length === 0) return undefined;
+/** `undefined` where nothing is declared: there is then nothing to show. */
+export function statusOf({ mechanisms, unchecked, motors, robots }: Counts, found: FindingCounts): Status | undefined {
+  const { errors, warnings } = found;
+  if (mechanisms + motors + robots === 0) return undefined;
   const tooltip = [
-    count(mechanisms.length, "mechanism"),
-    ...(robots.length > 0 ? [count(robots.length, "robot")] : []),
+    count(mechanisms, "mechanism"),
+    ...(robots > 0 ? [count(robots, "robot")] : []),
     count(errors, "error"),
     count(warnings, "warning"),
-    ...(unknown > 0 ? [`${unknown} not checked`] : []),
+    ...(unchecked > 0 ? [`${unchecked} not checked`] : []),
   ].join(", ");
   if (errors > 0) return { text: count(errors, "error"), tooltip, state: "error" };
   if (warnings > 0) return { text: count(warnings, "warning"), tooltip, state: "warning" };
-  if (unknown > 0) return { text: `${unknown} not checked`, tooltip, state: "unknown" };
+  if (unchecked > 0) return { text: `${unchecked} not checked`, tooltip, state: "unknown" };
   return {
-    text: mechanisms.length === 0 ? "no mechanisms" : `${count(mechanisms.length, "mechanism")} fine`,
+    text: mechanisms === 0 ? "no mechanisms" : `${count(mechanisms, "mechanism")} fine`,
     tooltip,
     state: "fine",
   };

@@ -152,8 +152,8 @@ function keyOf(file: string, name: string): string {
 }
 
 /** Its file, and those of robots that may lend it their supply. */
-function rootsOf({ robots }: Analysis, { declared, call: { span } }: AnalysedMechanism): string[] {
+function rootsOf(analysis: Analysis, { declared, call: { span } }: AnalysedMechanism): string[] {
   if (declared === undefined || declared.supply !== undefined) return [span.file];
-  const listing = robots.filter((robot) => robot.declared?.mechanisms.includes(declared));
+  const listing = analysis.robots.filter((robot) => robot.declared?.mechanisms.includes(declared));
   return [span.file, ...listing.map(({ call }) => call.span.file)];
 }

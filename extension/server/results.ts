@@ -80,8 +80,7 @@ export function showResults(parts: ResultsParts): Results {
     });
     const retold = before && changes && attempt("Comparing files", () => retoldFiles(before, of, changes));
     refreshes.whereOther(rest.shown, of, retold);
-    const { files, mechanisms, findings } = of.analysis;
-    connection.tracer.log(`${files.size} files, ${mechanisms.length} mechanisms, ${findings.length} findings.`);
+    connection.tracer.log(`${of.analysis.inFile.size} files, ${of.analysis.findingsIn.size} of them with findings.`);
   };
 
   return {

@@ -28,7 +28,7 @@ interface Told {
 /** `knowsNothing`: of a client to which an empty state is no news. */
 export function createStateReader(indexOf: IndexOf, knowsNothing: boolean): StateOf {
   const treesOf = createTreeReader(indexOf);
-  const countsOf = createFindingCounter();
+  const findingsOf = createFindingCounter();
   const told = new Map<string, Told>();
   let statusTold = knowsNothing ? JSON.stringify(null) : undefined;
   let isFirst = true;
@@ -36,7 +36,7 @@ export function createStateReader(indexOf: IndexOf, knowsNothing: boolean): Stat
     const { analysis } = result;
     const changes = isFirst ? undefined : since;
     isFirst = false;
-    const { byFile, changed, unchecked } = treesOf(analysis, changes?.touched);
+    const { byFile, changed, counts } = treesOf(analysis, changes?.touched);
     const seen = changes?.texts && filesShowing(changes.texts, analysis, indexOf(analysis));
     const replaced = new Map<string, Told | undefined>();
     for (const file of seen ? new Set([...changed, ...seen]) : new Set([...told.keys(), ...byFile.keys()])) {
@@ -48,7 +48,7 @@ export function createStateReader(indexOf: IndexOf, knowsNothing: boolean): Stat
       if (now === undefined) told.delete(file);
       else told.set(file, now);
     }
-    const status = statusOf(analysis, countsOf(analysis, changes?.found), unchecked);
+    const status = statusOf(counts, findingsOf(analysis, changes?.found));
     const statusNow = status === undefined ? null : { text: status.text, tooltip: status.tooltip, standing: status.state };
     if (replaced.size === 0 && JSON.stringify(statusNow) === statusTold) return undefined;
     statusTold = JSON.stringify(statusNow);

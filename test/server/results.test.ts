@@ -1,12 +1,14 @@
 /** When each surface is told of a result: findings first, the rest once, for the newest. */
 import { describe, expect, it, vi } from "vitest";
 import type { Connection } from "vscode-languageserver";
+import type { Analysis } from "../../extension/analysis/analysis.js";
 import { createIndexReader, createMechanismsReader } from "../../extension/features/mechanismIndex.js";
 import { NO_COMMIT } from "../../extension/features/sinceCommit.js";
 import { NO_STATE, resolveState, STATE, type State, type StateMessage } from "../../extension/protocol/state.js";
 import { createLensReader } from "../../extension/server/answers/codeLenses.js";
 import { createHintReader } from "../../extension/server/answers/inlayHints.js";
 import { showResults } from "../../extension/server/results.js";
+import type { Result } from "../../extension/server/session.js";
 import { EditedWorkspace } from "../support/editedWorkspace.js";
 
 const CHART = "loadmark/chartMayDiffer";
@@ -53,7 +55,7 @@ function start() {
   });
   const edit = (file: string, text: string, replacement: string) => {
     if (!workspace.replace(file, text, replacement)) throw new Error(`${file} does not hold ${text}.`);
-    const result = workspace.result();
+    const result = withoutLists(workspace.result());
     results.show(workspace.texts, result);
     // As the session does.
     workspace.texts.forgetEditsUpTo(result.snapshot.versions);
@@ -63,6 +65,20 @@ function start() {
   const state = () => states.reduce<State | undefined>((before, message) => before && resolveState(before, message), NO_STATE);
   const robotOf = (name: string) => state()?.robots.find((robot) => robot.name === name);
   return { workspace, said, errors, states, client, results, hintsOf, edit, settle, takeSaid, state, robotOf };
+}
+
+/** A result whose lists over the whole workspace nobody may ask for: they would cost what the workspace has, not what changed. */
+function withoutLists(result: Result): Result {
+  const { inFile, findingsIn, wanted, snapshot, levels, toothCounts } = result.analysis;
+  const analysis = { inFile, findingsIn, wanted, snapshot, levels, toothCounts } as Analysis;
+  for (const list of ["mechanisms", "motors", "robots", "findings", "findingsByMechanism", "files"]) {
+    Object.defineProperty(analysis, list, {
+      get: () => {
+        throw new Error(`All ${list} were asked for.`);
+      },
+    });
+  }
+  return { ...result, analysis };
 }
 
 async function startOpened() {

@@ -3,7 +3,6 @@ import { createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Result } from "../../extension/server/session.js";
 import { Texts } from "../../extension/server/texts.js";
 import { MOTOR } from "./handNumbers.js";
-import { keepSame } from "./keepSame.js";
 import { parser } from "./parser.js";
 
 const IMPORT = 'import { battery, lift, mechanism, motor, robot, spur } from "loadmark";\n';
@@ -70,7 +69,6 @@ export const EDITS: readonly (readonly [string, string])[] = [
 export class EditedWorkspace {
   readonly texts = new Texts({ keepImporters: (files) => files, canonical: (file) => file });
   readonly #analyse = createAnalyser(parser).analyse;
-  #last: Result | undefined;
   #version = 0;
 
   constructor(files = WORKSPACE) {
@@ -115,10 +113,7 @@ export class EditedWorkspace {
   result(): Result {
     const snapshot = this.texts.capture();
     const roots = [...this.texts.diskKeys()].filter((file) => snapshot.read(file)?.includes('"loadmark"'));
-    const analysis = this.#analyse(roots, snapshot);
-    const kept = this.#last === undefined ? analysis : keepSame(this.#last.analysis, analysis);
-    this.#last = { analysis: kept, snapshot, analyse: this.#analyse };
-    return this.#last;
+    return { analysis: this.#analyse(roots, snapshot), snapshot, analyse: this.#analyse };
   }
 
   #nextVersion(): number {

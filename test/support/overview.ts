@@ -16,6 +16,6 @@ export function wholeTree(analysis: Analysis): Tree {
 }
 
 export function wholeStatus(analysis: Analysis): Status | undefined {
-  const { unchecked } = createTreeReader(createIndexReader())(analysis);
-  return statusOf(analysis, createFindingCounter()(analysis), unchecked);
+  const { counts } = createTreeReader(createIndexReader())(analysis);
+  return statusOf(counts, createFindingCounter()(analysis));
 }
