@@ -8,7 +8,7 @@ import { DEFINITIONS, SPECIFIER } from "../declarations/table.js";
 import { createEvaluator } from "../evaluator/evaluator.js";
 import type { TypeScript } from "../evaluator/typescript.js";
 import type { Snapshot } from "../evaluator/value.js";
-import type { Analysis, Finding } from "./analysis.js";
+import type { Analysis } from "./analysis.js";
 import { createDeclarationFinder } from "./declarationFindings.js";
 import { createCollector } from "./declared.js";
 import { createEvaluations } from "./evaluateAll.js";
@@ -82,7 +82,6 @@ function analysisOf(
   const robots = once(() => perFile().flatMap((file) => file.robots));
   const files = once(() => new Map([...inFile].map(([file, { evaluation }]) => [file, evaluation])));
   const findings = once(() => [...findingsIn.keys()].sort().flatMap((file) => findingsIn.get(file) ?? []));
-  const findingsByMechanism = once(() => groupByMechanism(findings()));
   return {
     get mechanisms() {
       return mechanisms();
@@ -99,9 +98,6 @@ function analysisOf(
     get files() {
       return files();
     },
-    get findingsByMechanism() {
-      return findingsByMechanism();
-    },
     findingsIn,
     inFile,
     wanted,
@@ -109,17 +105,6 @@ function analysisOf(
     levels,
     toothCounts,
   };
-}
-
-function groupByMechanism(findings: readonly Finding[]): ReadonlyMap<string, readonly Finding[]> {
-  const groups = new Map<string, Finding[]>();
-  for (const finding of findings) {
-    if (finding.mechanism === null) continue;
-    const group = groups.get(finding.mechanism);
-    if (group === undefined) groups.set(finding.mechanism, [finding]);
-    else group.push(finding);
-  }
-  return groups;
 }
 
 function once<Result>(make: () => Result): () => Result {

@@ -82,8 +82,6 @@ export interface Analysis {
   readonly motors: readonly AnalysedMotor[];
   readonly robots: readonly AnalysedRobot[];
   readonly findings: readonly Finding[];
-  /** The same by name of the mechanism that they are about: an editor asks for every mechanism's after every edit. */
-  readonly findingsByMechanism: ReadonlyMap<string, readonly Finding[]>;
   /** Findings by the file that they sit in; the same list as in the analysis before as long as nothing changed. Files without are absent. */
   readonly findingsIn: ReadonlyMap<string, readonly Finding[]>;
   /** By file, all that were evaluated. A mechanism is under the file of its call, which may be another than that of its place. */

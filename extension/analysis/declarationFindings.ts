@@ -5,8 +5,9 @@
  */
 import type { FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
 import type { Finding } from "./analysis.js";
-import { type ByFile, createKeeper, groupBySite, sameContent, union } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
 import type { Declared } from "./declared.js";
+import { groupBySite, sameContent, union } from "./lists.js";
 import { distinctPlaces } from "./spans.js";
 import { readTextFacts, type TextFacts } from "./textFacts.js";
 import { findUnknowns } from "./unknownFindings.js";

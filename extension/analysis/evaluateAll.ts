@@ -8,7 +8,8 @@
 import { SPECIFIER } from "../declarations/table.js";
 import type { Evaluator } from "../evaluator/evaluator.js";
 import type { FileEvaluation, Snapshot } from "../evaluator/value.js";
-import { type ByFile, createKeeper, sameItems } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
+import { sameItems } from "./lists.js";
 import { mentionsDeclarations } from "./sources.js";
 
 /** More files than these are not looked into for the one helper that they may use. */

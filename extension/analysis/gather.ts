@@ -5,11 +5,12 @@
 import type { FileEvaluation } from "../evaluator/value.js";
 import { applyAllowances } from "./allowances.js";
 import type { AnalysedMechanism, Analysis, FileAnalysis, Finding } from "./analysis.js";
-import { type ByFile, createKeeper, groupBySite, sameContent, sameItems, union } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
 import type { DeclarationFindings } from "./declarationFindings.js";
 import type { Declared } from "./declared.js";
 import type { Judged } from "./judge.js";
 import type { JudgedRobots } from "./judgeRobots.js";
+import { groupBySite, sameContent, sameItems, union } from "./lists.js";
 import type { ReadSettings } from "./settings.js";
 
 export interface Parts {

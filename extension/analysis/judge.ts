@@ -13,11 +13,12 @@ import { isImpossible } from "../rules/sheetContradicts.js";
 import { MECHANISM_RULES, MOTOR_RULES } from "../rules/table.js";
 import type { AnalysedMechanism, Finding } from "./analysis.js";
 import { tellAssumptions } from "./assumptions.js";
-import { type ByFile, createKeeper, sameItems, union } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
 import { comesFrom } from "./comesFrom.js";
 import { type Corner, cornersOf } from "./corners.js";
 import type { Declared, DeclaredMechanism, DeclaredRobot } from "./declared.js";
 import { supplyCallOf } from "./lentSupply.js";
+import { sameItems, union } from "./lists.js";
 import { createMemory } from "./memory.js";
 import type { RobotLists } from "./robotLists.js";
 

@@ -11,10 +11,11 @@ import type { RobotFacts, RobotRule, RobotVerdict } from "../rules/robotRule.js"
 import { ROBOT_RULES } from "../rules/table.js";
 import { writeQuantity } from "../units/write.js";
 import type { AnalysedRobot, Finding } from "./analysis.js";
-import { type ByFile, createKeeper, sameContent, sameItems, union } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
 import { comesFrom } from "./comesFrom.js";
 import type { Declared, DeclaredRobot, RobotCall } from "./declared.js";
 import { type Judged, tellWhyUnknown } from "./judge.js";
+import { sameContent, sameItems, union } from "./lists.js";
 import { createMemory } from "./memory.js";
 import { leavesBelow } from "./rebuild.js";
 import { type RobotModel, robotDriveOf } from "./robotDriveOf.js";

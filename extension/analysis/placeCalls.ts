@@ -5,7 +5,8 @@
  * open run, in which nothing is known. That one counts only while there is no other.
  */
 import type { DefinitionCall, FileEvaluation } from "../evaluator/value.js";
-import { type ByFile, createKeeper, sameItems, union } from "./byFile.js";
+import { type ByFile, createKeeper } from "./byFile.js";
+import { sameItems, union } from "./lists.js";
 import { spanKey } from "./spans.js";
 
 type Evaluations = ReadonlyMap<string, FileEvaluation>;

@@ -4,11 +4,11 @@
  * Looks again at what was touched alone. Does not say where in a text anything is, but for offsets.
  */
 import type { AnalysedMechanism, AnalysedRobot, Analysis, FileAnalysis, Finding } from "../analysis/analysis.js";
+import { sameItems } from "../analysis/lists.js";
 import type { Span } from "../evaluator/value.js";
 import { writeQuantity } from "../units/write.js";
 import { plainText } from "./inertText.js";
 import type { IndexOf, MechanismIndex } from "./mechanismIndex.js";
-import { sameItems } from "./sameItems.js";
 import { findingsAbout, findingsAboutRobot, robotVerdictOf, type State, verdictOf, worse } from "./verdict.js";
 
 export interface RobotNode {

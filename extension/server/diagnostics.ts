@@ -5,9 +5,9 @@
  */
 import { type Diagnostic, DiagnosticSeverity } from "vscode-languageserver";
 import type { Finding } from "../analysis/analysis.js";
+import { sameItems } from "../analysis/lists.js";
 import type { Span } from "../evaluator/value.js";
 import { differingFiles, FileIndex } from "../features/fileIndex.js";
-import { sameItems } from "../features/sameItems.js";
 import type { Level } from "../rules/rule.js";
 import type { LineMap } from "./lineMap.js";
 import type { Result } from "./session.js";

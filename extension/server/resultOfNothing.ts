@@ -10,7 +10,6 @@ export function resultOfNothing(snapshot: TextSnapshot): Result {
     motors: [],
     robots: [],
     findings: [],
-    findingsByMechanism: new Map<string, readonly Finding[]>(),
     findingsIn: new Map<string, readonly Finding[]>(),
     inFile: new Map<string, FileAnalysis>(),
     wanted: [],

@@ -4,10 +4,10 @@
  * Keeps what was told by file. A file's part is looked at where its tree is another, or a text that it has a place in.
  */
 import type { Analysis } from "../analysis/analysis.js";
+import { sameItems } from "../analysis/lists.js";
 import { addListing } from "../features/analysisChanges.js";
 import type { IndexOf, MechanismIndex } from "../features/mechanismIndex.js";
 import { createTreeReader, type FileTree, type MechanismNode, type RobotNode } from "../features/mechanismTree.js";
-import { sameItems } from "../features/sameItems.js";
 import { createFindingCounter, statusOf } from "../features/status.js";
 import type { ChangedRobot, Kept, MechanismState, RobotState, StateMessage } from "../protocol/state.js";
 import { keepItems, tellItems } from "./keptItems.js";

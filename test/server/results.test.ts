@@ -71,7 +71,7 @@ function start() {
 function withoutLists(result: Result): Result {
   const { inFile, findingsIn, wanted, snapshot, levels, toothCounts } = result.analysis;
   const analysis = { inFile, findingsIn, wanted, snapshot, levels, toothCounts } as Analysis;
-  for (const list of ["mechanisms", "motors", "robots", "findings", "findingsByMechanism", "files"]) {
+  for (const list of ["mechanisms", "motors", "robots", "findings", "files"]) {
     Object.defineProperty(analysis, list, {
       get: () => {
         throw new Error(`All ${list} were asked for.`);

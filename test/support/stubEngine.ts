@@ -51,7 +51,6 @@ function analyse(roots: readonly string[], snapshot: Snapshot): Analysis {
     motors: [],
     robots: [],
     findings,
-    findingsByMechanism: new Map(),
     findingsIn: new Map(),
     inFile: new Map(),
     files,
