@@ -2,13 +2,15 @@
 // command and a browser worker share and load lazily. The file is taken apart into a module of plain declarations, so
 // that the bundler can leave out whatever the names of parserNames.ts do not need: the checker, the emitter and all that
 // editors ask of a language service, three quarters of the file. `require` is defined away, so that the module reaches
-// neither disk nor process. An identifier gets its text, which is left to the language service; else nothing is changed.
+// neither disk nor process. Nodes get classes of their own, an identifier its text, which the package leaves to the language
+// service, and slimParser.mjs takes out what no parser needs; the trees stay those of the package (test/evaluator/parser.test.ts).
 
 import { readFile } from "node:fs/promises";
 import { join } from "node:path";
 import { build } from "esbuild";
 import { importTypeScript } from "./importTypeScript.mjs";
 import { repositoryRoot } from "./repositoryRoot.mjs";
+import { slimParser } from "./slimParser.mjs";
 
 /**
  * Points a bundle's import of TypeScript at the shared file.
@@ -74,29 +76,31 @@ function cutOut(names, source) {
     /^var (\w+) = \{\};\n__export\(\1, (\{[\s\S]*?\n\})\);$/gm,
     "var $1 = /* @__PURE__ */ listed($2);",
   );
-  // Fields of the checker and the emitter, on every node, would take a quarter of the memory.
+  // The package's nodes carry fields of the checker and the emitter, and share a shape that is as wide as the widest kind.
   const slimNodes = `
-    class SlimNode {
-      constructor(kind, pos, end) {
-        this.pos = pos;
-        this.end = end;
-        this.kind = kind;
-        this.flags = 0;
-        this.transformFlags = 0;
-        this.parent = undefined;
-      }
+    const ofKinds = [];
+    const makeClass = (kind) => kind === SyntaxKind.Identifier || kind === SyntaxKind.PrivateIdentifier
+      ? class {
+          constructor(kind, pos, end) { this.pos = pos; this.end = end; this.kind = kind; this.flags = 0; this.parent = undefined; }
+          get text() { return idText(this); }
+        }
+      : class {
+          constructor(kind, pos, end) { this.pos = pos; this.end = end; this.kind = kind; this.flags = 0; this.parent = undefined; }
+        };
+    // A class that extends another makes no object of its own.
+    class SlimNode extends Object {
+      constructor(kind, pos, end) { return new (ofKinds[kind] ??= makeClass(kind))(kind, pos, end); }
     }
-    class SlimIdentifier extends SlimNode { get text() { return idText(this); } }
-    const [ofNode, ofIdentifier] = [() => SlimNode, () => SlimIdentifier];
+    const ofNode = () => SlimNode;
     setObjectAllocator({
       getNodeConstructor: ofNode,
       getTokenConstructor: ofNode,
       getSourceFileConstructor: ofNode,
-      getIdentifierConstructor: ofIdentifier,
-      getPrivateIdentifierConstructor: ofIdentifier,
+      getIdentifierConstructor: ofNode,
+      getPrivateIdentifierConstructor: ofNode,
     });`;
   const listed = "function listed(names) { const list = {}; __export(list, names); return list; }";
-  return `${notice}${helpers}${declarations}\n${listed}\n${slimNodes}\nexport default { ${entries.join(", ")} };`;
+  return `${notice}${helpers}${slimParser(declarations)}\n${listed}\n${slimNodes}\nexport default { ${entries.join(", ")} };`;
 }
 
 /**
