@@ -161,7 +161,7 @@ function guardField(
 }
 
 function isReachable(ctx: Context, node: ts.ClassLikeDeclaration, { module }: Frame): boolean {
-  const binding = node.name === undefined ? undefined : module.source.scopes.get(module.source.root)?.names.get(node.name.text);
+  const binding = node.name === undefined ? undefined : module.source.scopes.get(module.source.root)?.names?.get(node.name.text);
   return binding === undefined || isExported(ctx.ts, binding, module.source);
 }
 

@@ -88,6 +88,7 @@ export function isAmbient(ts: TypeScript, node: ts.Node): boolean {
 
 function add(scope: Scope, name: ts.Identifier, declaration: ts.Node, kind: BindingKind, ambient: boolean): void {
   if (name.text === "") return;
+  scope.names ??= new Map();
   const present = scope.names.get(name.text);
   if (present === undefined) {
     const binding: Binding = { name: name.text, kind, names: [name], declarations: [declaration], scope, ambient };

@@ -5,15 +5,19 @@
  */
 import type ts from "typescript";
 import { listActivations, listBelow, runLoop } from "./activations.js";
-import type { Context, Frame, Module } from "./context.js";
+import type { Context, Frame, Module, Target } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
 import { findTarget } from "./modules.js";
 import { isReached } from "./reach.js";
 import type { DefinitionCall } from "./value.js";
 
 /** What a call of another file's helper declares there; nothing for any other call. */
-export function listCallsElsewhere(ctx: Context, node: ts.CallExpression, module: Module): DefinitionCall[] {
-  const target = findTarget(ctx, node.expression, module);
+export function listCallsElsewhere(
+  ctx: Context,
+  node: ts.CallExpression,
+  target: Target | undefined,
+  module: Module,
+): DefinitionCall[] {
   if (target?.kind !== "binding" || target.module === module || !isFunction(ctx, target.binding.declarations)) return [];
   const found = new Set<DefinitionCall>();
   for (const frame of listActivations(ctx, node, module)) {

@@ -147,7 +147,7 @@ function isCountableMember(ctx: Context, member: ts.EnumMember, module: Module, 
 function findInNamespace(ctx: Context, declaration: ts.ModuleDeclaration, name: string, module: Module): Member | undefined {
   const { body } = declaration;
   if (body === undefined || !ctx.ts.isModuleBlock(body)) return undefined;
-  const binding = module.source.scopes.get(body)?.names.get(name);
+  const binding = module.source.scopes.get(body)?.names?.get(name);
   const at = binding?.names[0];
   if (binding === undefined || at === undefined) return undefined;
   return { value: ctx.valueOf(binding, module.root), key: spanOf(at, module) };

@@ -12,6 +12,7 @@ import { evaluateDefinitionCall } from "./definitionCall.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
 import { dropStale, uncheckChanged } from "./freshness.js";
+import { type Kinds, listKinds } from "./kinds.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
 import { valueOfBinding, valueOfTarget } from "./names.js";
@@ -47,6 +48,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
   const nothing: Snapshot = { read: () => undefined };
   const modules = new Map<string, Module>();
   const evaluate = createEvaluate(ts);
+  const kinds = listKinds(ts);
   const ctx: Context = {
     ts,
     specifier,
@@ -62,7 +64,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     valueOf: (binding, frame) => valueOfBinding(ctx, binding, frame),
     valueOfTarget: (target, span) => valueOfTarget(ctx, target, span),
     load: (module, name, span) => loadSpecifier(ctx, module, name, span),
-    open: (file, text) => open(ctx, sources, file, text),
+    open: (file, text) => open(ctx, kinds, sources, file, text),
   };
   return {
     evaluateFile(file, snapshot) {
@@ -146,7 +148,7 @@ function listFiles(file: string, reached: ReadonlySet<Module>): Pick<FileEvaluat
 function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): DefinitionCall[] | Unknown {
   try {
     const target = findTarget(ctx, node.expression, module);
-    if (target?.kind !== "definition") return listCallsElsewhere(ctx, node, module);
+    if (target?.kind !== "definition") return listCallsElsewhere(ctx, node, target, module);
     const frames: readonly Frame[] = listActivations(ctx, node, module);
     return frames.flatMap((frame) => evaluateDefinitionCall(ctx, target.definition, node, frame).call ?? []);
   } catch {
@@ -156,12 +158,12 @@ function evaluateAt(ctx: Context, node: ts.CallExpression, module: Module): Defi
   }
 }
 
-function open(ctx: Context, sources: Map<string, readonly Source[]>, file: string, text: string): Module {
+function open(ctx: Context, kinds: Kinds, sources: Map<string, readonly Source[]>, file: string, text: string): Module {
   dropStale(ctx, file);
   const present = ctx.modules.get(file);
   if (present !== undefined) return present;
   const kept = sources.get(file) ?? [];
-  const source = kept.find((each) => each.text === text) ?? parseSource(ctx.ts, file, text);
+  const source = kept.find((each) => each.text === text) ?? parseSource(ctx.ts, kinds, file, text);
   sources.set(file, [source, ...kept.filter((each) => each !== source)].slice(0, KEPT_TEXTS));
   const module: { -readonly [Key in keyof Module]: Module[Key] } = {
     file,

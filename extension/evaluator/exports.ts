@@ -72,7 +72,7 @@ function listPassedOn(
     const local = element.propertyName ?? element.name;
     if (specifier !== undefined) named.set(element.name.text, { kind: "passed-on", node: specifier, name: local.text });
     else {
-      const binding = source.scopes.get(source.root)?.names.get(local.text);
+      const binding = source.scopes.get(source.root)?.names?.get(local.text);
       if (binding !== undefined) named.set(element.name.text, { kind: "binding", binding });
     }
   }

@@ -108,7 +108,7 @@ function listUses(search: Search, importer: Module, passer: Passer, paths: reado
     const specifier = specifierOf(ts, statement);
     if (specifier === undefined || !leadsTo(ctx, importer, specifier, passer)) continue;
     for (const { local, name } of importedNames(ts, statement)) {
-      const binding = source.scopes.get(source.root)?.names.get(local);
+      const binding = source.scopes.get(source.root)?.names?.get(local);
       if (binding === undefined) continue;
       for (const path of paths) flowInto(search, importer, binding, flowAs(flow, path, name));
     }

@@ -219,7 +219,7 @@ function missingDeclaration(binding: Binding, module: Module): Unknown {
 function missingName(node: ts.Identifier, module: Module, span: Span): Unknown {
   const names: string[] = [];
   for (let scope: ts.Node = node; scope !== undefined; scope = scope.parent) {
-    names.push(...(module.source.scopes.get(scope)?.names.keys() ?? []));
+    names.push(...(module.source.scopes.get(scope)?.names?.keys() ?? []));
   }
   const message = `${quoteText(node.text)} is not declared here${suggest(node.text, names)}`;
   return unknown("no-such-name", message, "", { kind: "name", span, from: [] });

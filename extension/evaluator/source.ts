@@ -7,6 +7,7 @@
 import type ts from "typescript";
 import { declareNames } from "./declare.js";
 import type { ExportTable } from "./exports.js";
+import { DECLARES, ERASED, FUNCTION, type Kinds, OPENS_FRAME, OPENS_SCOPE, PARAMETER, SHORTHAND, SPECIFIER } from "./kinds.js";
 import type { PropertyTable } from "./properties.js";
 import type { TypeScript } from "./typescript.js";
 
@@ -39,7 +40,8 @@ export interface Binding {
 export interface Scope {
   readonly node: ts.Node;
   readonly parent: Scope | undefined;
-  readonly names: Map<string, Binding>;
+  /** Absent where nothing is declared, as in most. */
+  names?: Map<string, Binding>;
   /** The source file, function or loop whose runs each give its names new values. */
   readonly frame: ts.Node;
 }
@@ -50,6 +52,7 @@ export interface Source {
   readonly root: ts.SourceFile;
   /** Set for a file that is nested too deeply for the parser; it then counts as empty. */
   readonly unreadable: boolean;
+  readonly kinds: Kinds;
   readonly scopes: ReadonlyMap<ts.Node, Scope>;
   /** Calls in order of position, the outer before the inner. */
   readonly calls: readonly ts.CallExpression[];
@@ -69,26 +72,31 @@ export interface Derived {
 }
 
 /** Parses a file. Never throws: what cannot be parsed is an empty file that says so. */
-export function parseSource(ts: TypeScript, file: string, text: string): Source {
+export function parseSource(ts: TypeScript, kinds: Kinds, file: string, text: string): Source {
   try {
-    return walk(ts, file, text, parse(ts, file, text), false);
+    return walk(ts, kinds, file, text, parse(ts, file, text), false);
   } catch (error) {
     // The parser descends by recursion, so nesting of a thousand brackets overflows the stack.
     if (!(error instanceof RangeError)) throw error;
-    return walk(ts, file, text, parse(ts, file, ""), true);
+    return walk(ts, kinds, file, text, parse(ts, file, ""), true);
   }
 }
 
 /** The binding that an identifier refers to; `undefined` for a global, or for a name that is not there. */
 export function resolveName(ts: TypeScript, identifier: ts.Identifier, source: Source): Binding | undefined {
+  const { kinds, scopes } = source;
+  const name = identifier.text;
   let fromParameter = false;
   for (let node: ts.Node = identifier; node !== undefined; node = node.parent) {
-    if (ts.isParameter(node)) fromParameter = true;
-    const binding = source.scopes.get(node)?.names.get(identifier.text) ?? findMergedMember(ts, node, identifier.text, source);
+    const kind = kinds[node.kind] ?? 0;
+    if ((kind & (OPENS_SCOPE | PARAMETER)) === 0) continue;
+    if ((kind & PARAMETER) !== 0) fromParameter = true;
+    const binding = scopes.get(node)?.names?.get(name) ?? findMergedMember(ts, node, name, source);
+    const isFunction = (kind & FUNCTION) !== 0;
     // A parameter's default doesn't see the names that the function's body declares.
-    const hidden = fromParameter && ts.isFunctionLike(node) && binding !== undefined && binding.kind !== "parameter";
+    const hidden = fromParameter && isFunction && binding !== undefined && binding.kind !== "parameter";
     if (binding !== undefined && !hidden) return binding;
-    if (ts.isFunctionLike(node)) fromParameter = false;
+    if (isFunction) fromParameter = false;
   }
   return undefined;
 }
@@ -96,8 +104,8 @@ export function resolveName(ts: TypeScript, identifier: ts.Identifier, source: S
 /** The parts of a merged enum see each other's members. */
 function findMergedMember(ts: TypeScript, node: ts.Node, name: string, source: Source): Binding | undefined {
   if (!ts.isEnumDeclaration(node)) return undefined;
-  const parts = source.scopes.get(node)?.parent?.names.get(node.name.text)?.declarations ?? [];
-  return parts.map((part) => source.scopes.get(part)?.names.get(name)).find((member) => member !== undefined);
+  const parts = source.scopes.get(node)?.parent?.names?.get(node.name.text)?.declarations ?? [];
+  return parts.map((part) => source.scopes.get(part)?.names?.get(name)).find((member) => member !== undefined);
 }
 
 /** Every place in its file that refers to a binding. */
@@ -121,68 +129,73 @@ function groupReferences(ts: TypeScript, source: Source): ReadonlyMap<Binding, r
 function parse(ts: TypeScript, file: string, text: string): ts.SourceFile {
   const options = { languageVersion: ts.ScriptTarget.ESNext, jsDocParsingMode: ts.JSDocParsingMode.ParseNone };
   const kind = /\.(json|[cm]?[jt]sx?)$/.test(file) ? undefined : ts.ScriptKind.TS;
-  return ts.createSourceFile(file, text, options, true, kind);
+  // `walk` tells nodes their parents, in passing.
+  return ts.createSourceFile(file, text, options, false, kind);
 }
 
-/** Goes through the tree with a stack of its own: trees may be far deeper than the engine's stack. */
-function walk(ts: TypeScript, file: string, text: string, root: ts.SourceFile, unreadable: boolean): Source {
+/**
+ * Goes through the tree with a stack of its own: trees may be far deeper than the engine's stack. Types leave nothing behind at run
+ * time, so nobody looks into them, and the nodes there have no parents.
+ */
+function walk(ts: TypeScript, kinds: Kinds, file: string, text: string, root: ts.SourceFile, unreadable: boolean): Source {
+  const { CallExpression, FirstNode, Identifier } = ts.SyntaxKind;
   const scopes = new Map<ts.Node, Scope>();
   const calls: ts.CallExpression[] = [];
   const identifiers: ts.Identifier[] = [];
-  const nodes: ts.Node[] = [root];
+  const nodes: ts.Node[] = [];
   // The scope around each of `nodes`.
-  const around: (Scope | undefined)[] = [undefined];
-  for (let node = nodes.pop(); node !== undefined; node = nodes.pop()) {
-    const outer = around.pop();
+  const around: Scope[] = [];
+  let parent: ts.Node = root;
+  let scope = openScope(root, undefined, OPENS_FRAME);
+  const visit = (child: Child): void => {
+    child.parent = parent;
     // More than half of a tree are names, literals and keywords, which hold nothing.
-    if (node.kind < ts.SyntaxKind.FirstNode) {
-      if (ts.isIdentifier(node) && isReference(ts, node)) identifiers.push(node);
-      continue;
-    }
-    if (isErased(ts, node)) continue;
-    const scope = openScope(ts, node, outer);
-    if (scope !== outer) scopes.set(node, scope);
-    declareNames(ts, node, scope);
-    if (ts.isCallExpression(node)) calls.push(node);
-    ts.forEachChild(node, (child) => {
+    if (child.kind < FirstNode) {
+      if (child.kind === Identifier && isReference(kinds, child, parent)) identifiers.push(child as ts.Identifier);
+    } else if (((kinds[child.kind] ?? 0) & ERASED) === 0) {
       nodes.push(child);
       around.push(scope);
-    });
+    }
+  };
+  scopes.set(root, scope);
+  ts.forEachChild(root, visit);
+  for (
+    let node = nodes.pop(), outer = around.pop();
+    node !== undefined && outer !== undefined;
+    node = nodes.pop(), outer = around.pop()
+  ) {
+    const kind = kinds[node.kind] ?? 0;
+    parent = node;
+    scope = outer;
+    if ((kind & OPENS_SCOPE) !== 0 && !isBody(ts, kinds, node)) {
+      scope = openScope(node, outer, kind);
+      scopes.set(node, scope);
+    }
+    if ((kind & DECLARES) !== 0) declareNames(ts, node, scope);
+    if (node.kind === CallExpression) calls.push(node as ts.CallExpression);
+    ts.forEachChild(node, visit);
   }
   const startOf = (each: ts.Node): number => ts.getTokenPosOfNode(each, root);
   const textOf = (each: ts.Node): string => text.slice(startOf(each), each.end);
-  calls.sort((a, b) => startOf(a) - startOf(b) || b.end - a.end);
-  return { file, text, root, unreadable, scopes, calls, identifiers, derived: {}, startOf, textOf };
+  calls.sort((a, b) => a.pos - b.pos || b.end - a.end);
+  return { file, text, root, unreadable, kinds, scopes, calls, identifiers, derived: {}, startOf, textOf };
 }
 
-/** Types leave nothing behind at run time; `extends X<T>` is written as a type but is an expression. */
-function isErased(ts: TypeScript, node: ts.Node): boolean {
-  if (ts.isInterfaceDeclaration(node) || ts.isTypeAliasDeclaration(node)) return true;
-  return ts.isTypeNode(node) && !ts.isExpressionWithTypeArguments(node);
+type Child = { -readonly [Key in keyof ts.Node]: ts.Node[Key] };
+
+function openScope(node: ts.Node, parent: Scope | undefined, kind: number): Scope {
+  const frame = parent === undefined || (kind & OPENS_FRAME) !== 0 ? node : parent.frame;
+  return { node, parent, frame };
 }
 
-function openScope(ts: TypeScript, node: ts.Node, parent: Scope | undefined): Scope {
-  if (parent === undefined || ts.isFunctionLike(node) || ts.isForOfStatement(node)) {
-    return { node, parent, names: new Map(), frame: node };
-  }
-  const opens =
-    ts.isBlock(node) ||
-    ts.isForStatement(node) ||
-    ts.isForInStatement(node) ||
-    ts.isCaseBlock(node) ||
-    ts.isCatchClause(node) ||
-    ts.isClassLike(node) ||
-    ts.isEnumDeclaration(node) ||
-    ts.isModuleBlock(node) ||
-    ts.isClassStaticBlockDeclaration(node);
-  const isBody = ts.isBlock(node) && ts.isFunctionLike(node.parent);
-  return opens && !isBody ? { node, parent, names: new Map(), frame: parent.frame } : parent;
+/** A function's body shares the scope of its parameters. */
+function isBody(ts: TypeScript, kinds: Kinds, node: ts.Node): boolean {
+  return node.kind === ts.SyntaxKind.Block && ((kinds[node.parent.kind] ?? 0) & FUNCTION) !== 0;
 }
 
-function isReference(ts: TypeScript, node: ts.Identifier): boolean {
-  const { parent } = node;
-  if (ts.isShorthandPropertyAssignment(parent)) return true;
-  if (ts.isExportSpecifier(parent) || ts.isImportSpecifier(parent)) return false;
+function isReference(kinds: Kinds, node: ts.Node, parent: ts.Node): boolean {
+  const kind = kinds[parent.kind] ?? 0;
+  if ((kind & (SHORTHAND | SPECIFIER)) !== 0) return (kind & SHORTHAND) !== 0;
   const named = parent as { readonly name?: ts.Node; readonly propertyName?: ts.Node; readonly label?: ts.Node };
   return named.name !== node && named.propertyName !== node && named.label !== node;
 }
