@@ -7,6 +7,7 @@ import type ts from "typescript";
 import { evaluateElements } from "./aggregates.js";
 import { findBinding, findComments } from "./callSite.js";
 import type { Context, Frame } from "./context.js";
+import { OPENS_FRAME } from "./kinds.js";
 import { locateIssue, locateUnknown } from "./locate.js";
 import { originOf } from "./operations.js";
 import { innermost } from "./outer.js";
@@ -112,13 +113,19 @@ function reporterOf(part: Unknown): DefinitionCall | undefined {
 
 /** Whether something around the node has parameters or a loop variable that the frame doesn't know. */
 function isOpenRun({ ts }: Context, node: ts.Node, frame: Frame): boolean {
-  const runs = new Set<ts.Node>();
-  for (let run: Frame | undefined = frame; run !== undefined; run = run.parent) runs.add(run.node);
-  const open = ts.findAncestor(node.parent, (each) => {
-    if (ts.isForOfStatement(each)) return !runs.has(each) && node.pos >= each.statement.pos;
-    return ts.isFunctionLike(each) && each.parameters.length > 0 && !runs.has(each);
-  });
-  return open !== undefined;
+  const { kinds } = frame.module.source;
+  for (let each: ts.Node = node.parent; each !== undefined; each = each.parent) {
+    if (((kinds[each.kind] ?? 0) & OPENS_FRAME) === 0 || runsThrough(frame, each)) continue;
+    if (ts.isForOfStatement(each) && node.pos >= each.statement.pos) return true;
+    if (ts.isFunctionLike(each) && each.parameters.length > 0) return true;
+  }
+  return false;
+}
+
+function runsThrough(frame: Frame, node: ts.Node): boolean {
+  let run: Frame | undefined = frame;
+  while (run !== undefined && run.node !== node) run = run.parent;
+  return run !== undefined;
 }
 
 function isParameter(part: Unknown): boolean {

@@ -134,14 +134,19 @@ function withFilesOfNow(ctx: Context, known: FileEvaluation, module: Module): Fi
 const LISTS = ["dependencies", "wanted", "missing"] as const;
 
 function listFiles(file: string, reached: ReadonlySet<Module>): Pick<FileEvaluation, "dependencies" | "wanted" | "missing"> {
-  const reads = new Map([...reached].flatMap((each) => [...each.reads, ...each.importers.reads]));
-  const having = (kind: (text: string | null | undefined) => boolean) =>
-    [...reads].flatMap(([name, text]) => (kind(text) ? [name] : []));
-  return {
-    dependencies: [...new Set([file, ...having((text) => typeof text === "string")])],
-    wanted: having((text) => text === undefined),
-    missing: having((text) => text === null),
-  };
+  const reads = new Map<string, string | null | undefined>();
+  for (const each of reached) {
+    for (const [name, text] of each.reads) reads.set(name, text);
+    for (const [name, text] of each.importers.reads) reads.set(name, text);
+  }
+  const dependencies = new Set([file]);
+  const wanted: string[] = [];
+  const missing: string[] = [];
+  for (const [name, text] of reads) {
+    if (typeof text === "string") dependencies.add(name);
+    else (text === null ? missing : wanted).push(name);
+  }
+  return { dependencies: [...dependencies], wanted, missing };
 }
 
 /** A call to a definition, once for every run that reaches it; nothing for any other call. */

@@ -20,11 +20,12 @@ export function loadSpecifier(ctx: Context, from: Module, specifier: string, spa
 function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
   if (specifier === ctx.specifier) return { kind: "library" };
   if (!isRelative(specifier)) return findPackage(ctx, from, specifier, span);
-  const [first, ...rest] = listCandidates(from.file, specifier);
+  const candidates = listCandidates(from.file, specifier);
+  const first = candidates.next().value;
   if (first === undefined) return fail("unresolved-import", `${quoteText(specifier)} leads out of the file system.`, span);
   // The likeliest file alone first: asking for all at once would make a host look for a dozen files that nobody has.
   const found = ask(ctx, from, [first]);
-  const answer = found === null ? ask(ctx, from, rest) : found;
+  const answer = found === null ? ask(ctx, from, [...candidates]) : found;
   if (answer === undefined) return fail("unresolved-import", `${quoteText(specifier)} is not loaded yet.`, span);
   if (answer === null) return fail("unresolved-import", `${quoteText(specifier)} does not lead to a file.`, span);
   from.imports.add(answer);

@@ -22,11 +22,16 @@ export function isOuter(
   ts: TypeScript,
   node: ts.Node,
 ): node is ts.ParenthesizedExpression | ts.AsExpression | ts.SatisfiesExpression | ts.NonNullExpression | ts.TypeAssertion {
+  const { kind } = node;
+  const { SyntaxKind } = ts;
+  // This is asked of nearly every expression, and nearly every one is one of these.
+  if (kind === SyntaxKind.Identifier || kind === SyntaxKind.PropertyAccessExpression || kind === SyntaxKind.CallExpression)
+    return false;
   return (
-    ts.isParenthesizedExpression(node) ||
-    ts.isAsExpression(node) ||
-    ts.isSatisfiesExpression(node) ||
-    ts.isNonNullExpression(node) ||
-    ts.isTypeAssertionExpression(node)
+    kind === SyntaxKind.ParenthesizedExpression ||
+    kind === SyntaxKind.AsExpression ||
+    kind === SyntaxKind.SatisfiesExpression ||
+    kind === SyntaxKind.NonNullExpression ||
+    kind === SyntaxKind.TypeAssertionExpression
   );
 }

@@ -17,9 +17,17 @@ export function toPlain(ctx: Context, args: readonly Value[]): PlainArguments {
   const unknowns: { path: readonly (string | number)[]; unknown: Unknown }[] = [];
   // What is shared stays shared: values may be a hundred levels of lists that each hold the last one twice.
   const made = new Map<Data, unknown>();
-  const convert = (value: Value, path: readonly (string | number)[]): unknown => {
+  /** Where the value that is being converted stands. */
+  const path: (string | number)[] = [];
+  const convertAt = (key: string | number, value: Value): unknown => {
+    path.push(key);
+    const plain = convert(value);
+    path.pop();
+    return plain;
+  };
+  const convert = (value: Value): unknown => {
     if (!value.known) {
-      unknowns.push({ path, unknown: value });
+      unknowns.push({ path: [...path], unknown: value });
       return Symbol("unknown");
     }
     const { data } = value;
@@ -30,12 +38,10 @@ export function toPlain(ctx: Context, args: readonly Value[]): PlainArguments {
     made.set(data, undefined);
     const plain =
       data.kind === "array"
-        ? data.items.map((item, index) => convert(item, [...path, index]))
-        : Object.fromEntries(
-            (listProperties(ctx, value) ?? []).map(({ name, value: inner }) => [name, convert(inner, [...path, name])]),
-          );
+        ? data.items.map((item, index) => convertAt(index, item))
+        : Object.fromEntries((listProperties(ctx, value) ?? []).map(({ name, value: inner }) => [name, convertAt(name, inner)]));
     made.set(data, plain);
     return plain;
   };
-  return { plain: args.map((arg, index) => convert(arg, [index])), unknowns };
+  return { plain: args.map((arg, index) => convertAt(index, arg)), unknowns };
 }

@@ -66,7 +66,8 @@ export interface Source {
 
 /** What follows from the text as well, worked out once something asks for it. */
 export interface Derived {
-  references?: ReadonlyMap<Binding, readonly ts.Identifier[]>;
+  identifiersByText?: ReadonlyMap<string, readonly ts.Identifier[]>;
+  references?: Map<Binding, readonly ts.Identifier[]>;
   exports?: ExportTable;
   properties?: PropertyTable;
 }
@@ -110,17 +111,24 @@ function findMergedMember(ts: TypeScript, node: ts.Node, name: string, source: S
 
 /** Every place in its file that refers to a binding. */
 export function findReferences(ts: TypeScript, binding: Binding, source: Source): readonly ts.Identifier[] {
-  source.derived.references ??= groupReferences(ts, source);
-  return source.derived.references.get(binding) ?? [];
+  const { derived } = source;
+  derived.references ??= new Map();
+  const known = derived.references.get(binding);
+  if (known !== undefined) return known;
+  // Few names are ever asked for, so only those of the same text are looked up.
+  derived.identifiersByText ??= groupByText(source.identifiers);
+  const alike = derived.identifiersByText.get(binding.name) ?? [];
+  const references = alike.filter((identifier) => resolveName(ts, identifier, source) === binding);
+  derived.references.set(binding, references);
+  return references;
 }
 
-function groupReferences(ts: TypeScript, source: Source): ReadonlyMap<Binding, readonly ts.Identifier[]> {
-  const groups = new Map<Binding, ts.Identifier[]>();
-  for (const identifier of source.identifiers) {
-    const binding = resolveName(ts, identifier, source);
-    if (binding === undefined) continue;
-    const group = groups.get(binding);
-    if (group === undefined) groups.set(binding, [identifier]);
+function groupByText(identifiers: readonly ts.Identifier[]): ReadonlyMap<string, readonly ts.Identifier[]> {
+  const groups = new Map<string, ts.Identifier[]>();
+  for (const identifier of identifiers) {
+    const { text } = identifier;
+    const group = groups.get(text);
+    if (group === undefined) groups.set(text, [identifier]);
     else group.push(identifier);
   }
   return groups;

@@ -18,24 +18,32 @@ export function isRelative(specifier: string): boolean {
   return /^\.\.?(\/|$)/.test(specifier);
 }
 
-/** Files to try, best first. The first of them alone is nearly always right, so a host is asked for it alone. */
-export function listCandidates(fromFile: string, specifier: string): readonly string[] {
+/** Files to try, best first. The first of them alone is nearly always right, so the others are made when they are asked for. */
+export function* listCandidates(fromFile: string, specifier: string): Generator<string, undefined> {
   const target = joinPath(fromFile, specifier);
-  if (target === undefined) return [];
-  const index = [...SOURCE_ENDINGS, ".json"].map((ending) => `${target}/index${ending}`);
-  if (/(^|\/)\.{0,2}$/.test(specifier)) return index;
+  if (target === undefined) return;
   const [ending = ""] = /\.[^./]*$/.exec(target) ?? [];
   const compiled = COMPILED.get(ending);
-  if (compiled !== undefined) {
+  const isFolder = /(^|\/)\.{0,2}$/.test(specifier);
+  if (compiled !== undefined && !isFolder) {
     const stem = target.slice(0, -ending.length);
-    return [...compiled.map((source) => stem + source), ...SOURCE_ENDINGS.slice(0, 2).map((more) => target + more)];
+    for (const source of compiled) yield stem + source;
+    for (const more of SOURCE_ENDINGS.slice(0, 2)) yield target + more;
+    return;
   }
-  if (SOURCE_ENDINGS.includes(ending) || ending === ".json") return [target];
-  return [...[...SOURCE_ENDINGS, ".json"].map((source) => target + source), ...index];
+  const endings = [...SOURCE_ENDINGS, ".json"];
+  if (endings.includes(ending) && !isFolder) {
+    yield target;
+    return;
+  }
+  if (!isFolder) for (const source of endings) yield target + source;
+  for (const source of endings) yield `${target}/index${source}`;
 }
 
 /** Joins by segments; `undefined` when the specifier leads out above the root. */
 export function joinPath(fromFile: string, specifier: string): string | undefined {
+  const neighbour = /^\.\/[^./][^/]*$/.test(specifier);
+  if (neighbour) return fromFile.slice(0, fromFile.lastIndexOf("/")) + specifier.slice(1);
   const segments = fromFile.split("/").slice(0, -1);
   const root = /^[a-z][a-z0-9+.-]*:\/\//i.test(fromFile) ? 3 : 1;
   for (const segment of specifier.split("/")) {
