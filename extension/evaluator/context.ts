@@ -17,6 +17,8 @@ export interface Module {
   readonly reads: Map<string, string | null | undefined>;
   /** Modules that this module's values rest on, as they were then. */
   readonly imports: Set<Module>;
+  /** Modules whose values rest on this one's. */
+  readonly users: Set<Module>;
   readonly loads: Map<string, Loaded>;
   readonly exports: Map<string, Target>;
   readonly importers: Importers;
@@ -68,6 +70,8 @@ export interface Context {
   readonly specifier: string;
   readonly definitions: ReadonlyMap<string, Definition>;
   readonly modules: Map<string, Module>;
+  /** The modules that rest on the text of a file. */
+  readonly readers: Map<string, Set<Module>>;
   /** The call that made each built object. */
   readonly makers: WeakMap<object, DefinitionCall>;
   snapshot: Snapshot;

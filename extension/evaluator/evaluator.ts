@@ -9,6 +9,7 @@ import { listActivations } from "./activations.js";
 import { listAliases } from "./aliases.js";
 import type { Context, Frame, Module } from "./context.js";
 import { evaluateDefinitionCall } from "./definitionCall.js";
+import { noteRead, release } from "./dependencies.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
 import { dropStale, uncheckChanged } from "./freshness.js";
@@ -54,6 +55,7 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     specifier,
     definitions,
     modules,
+    readers: new Map(),
     makers: new WeakMap(),
     snapshot: nothing,
     checked: new Set(),
@@ -94,7 +96,10 @@ export function createEvaluator(ts: TypeScript, { specifier, definitions }: Eval
     },
     forget(file) {
       sources.delete(file);
+      const module = modules.get(file);
+      if (module === undefined) return;
       modules.delete(file);
+      release(ctx, module);
     },
   };
 }
@@ -174,8 +179,9 @@ function open(ctx: Context, kinds: Kinds, sources: Map<string, readonly Source[]
     file,
     source,
     root: undefined as unknown as Frame,
-    reads: new Map([[file, text]]),
+    reads: new Map(),
     imports: new Set(),
+    users: new Set(),
     loads: new Map(),
     exports: new Map(),
     importers: { lists: new Map(), reads: new Map(), guards: [] },
@@ -191,6 +197,7 @@ function open(ctx: Context, kinds: Kinds, sources: Map<string, readonly Source[]
     children: new Map(),
     height: 0,
   };
+  noteRead(ctx, module, file, text);
   ctx.modules.set(file, module);
   ctx.checked.add(module);
   return module;

@@ -5,6 +5,7 @@
  * longer so. Each module is looked at once a run.
  */
 import type { Context, Module } from "./context.js";
+import { forgetImporters, release } from "./dependencies.js";
 import { findChange } from "./mutation.js";
 import { listReached } from "./reached.js";
 
@@ -13,18 +14,16 @@ export function dropStale(ctx: Context, file: string): void {
   const start = ctx.modules.get(file);
   if (start === undefined || ctx.checked.has(start)) return;
   const reached = listReached(start);
-  const users = new Map<Module, Module[]>();
-  const stale: Module[] = [];
-  for (const module of reached) {
-    if (!ctx.checked.has(module) && !isCurrent(ctx, module)) stale.push(module);
-    for (const used of module.imports) users.set(used, [...(users.get(used) ?? []), module]);
-  }
-  drop(ctx, stale, users);
-  for (const module of reached) if (ctx.modules.get(module.file) === module) ctx.checked.add(module);
+  const unchecked = [...reached].filter((module) => !ctx.checked.has(module));
+  drop(
+    ctx,
+    unchecked.filter((module) => !isCurrent(ctx, module)),
+    reached,
+  );
+  for (const module of unchecked) if (ctx.modules.get(module.file) === module) ctx.checked.add(module);
   // Only now may other files be opened, which may lead back here.
-  const changed = [...reached].filter((module) => ctx.modules.get(module.file) === module && !isGuarded(ctx, module));
-  for (const module of changed) ctx.checked.delete(module);
-  drop(ctx, changed, users);
+  const changed = unchecked.filter((module) => ctx.modules.get(module.file) === module && !isGuarded(ctx, module));
+  drop(ctx, changed, reached);
 }
 
 /** Forgets which modules are true, but for those that rest on none of the changed files; `undefined`: any file may have changed. */
@@ -34,38 +33,26 @@ export function uncheckChanged(ctx: Context, changed: ReadonlySet<string> | unde
     return;
   }
   const unchecked = new Set<Module>();
-  for (const module of ctx.checked) if (restsOn(module, changed)) unchecked.add(module);
-  for (const module of unchecked) ctx.checked.delete(module);
-  if (unchecked.size > 0) uncheckUsers(ctx, unchecked);
+  for (const file of changed)
+    for (const module of ctx.readers.get(file) ?? []) if (ctx.checked.delete(module)) unchecked.add(module);
+  uncheckUsers(ctx, unchecked);
 }
 
-function restsOn({ reads, importers }: Module, changed: ReadonlySet<string>): boolean {
-  for (const file of changed) if (reads.has(file) || importers.reads.has(file)) return true;
-  return false;
-}
-
-function drop(ctx: Context, stale: readonly Module[], users: ReadonlyMap<Module, readonly Module[]>): void {
-  const pending = [...stale];
-  const dropped = new Set<Module>();
-  for (let module = pending.pop(); module !== undefined; module = pending.pop()) {
-    if (dropped.has(module)) continue;
-    dropped.add(module);
+/** Drops modules, and those of `reached` that rest on them. */
+function drop(ctx: Context, stale: readonly Module[], reached: ReadonlySet<Module>): void {
+  const dropped = new Set(stale);
+  for (const module of dropped) {
     ctx.checked.delete(module);
     if (ctx.modules.get(module.file) === module) ctx.modules.delete(module.file);
-    pending.push(...(users.get(module) ?? []));
+    for (const user of module.users) if (reached.has(user)) dropped.add(user);
   }
-  if (dropped.size > 0) uncheckUsers(ctx, dropped);
+  for (const module of dropped) release(ctx, module);
+  uncheckUsers(ctx, dropped);
 }
 
 /** Files outside of what was looked at may rest on what was dropped, and must be looked at again. */
-function uncheckUsers(ctx: Context, dropped: Set<Module>): void {
-  for (const gone of dropped) {
-    for (const module of ctx.checked) {
-      if (!module.imports.has(gone)) continue;
-      ctx.checked.delete(module);
-      dropped.add(module);
-    }
-  }
+function uncheckUsers(ctx: Context, gone: Set<Module>): void {
+  for (const module of gone) for (const user of module.users) if (ctx.checked.delete(user)) gone.add(user);
 }
 
 function isCurrent(ctx: Context, module: Module): boolean {
@@ -81,8 +68,7 @@ function isGuarded(ctx: Context, module: Module): boolean {
   if (sameLists && [...reads].every(([file, text]) => ctx.snapshot.read(file) === text)) return true;
   // While files are missing, the evaluation must be made anew to ask for them.
   if ([...lists.values()].some(({ files }) => files === undefined) || [...reads.values()].includes(undefined)) return false;
-  lists.clear();
-  reads.clear();
+  forgetImporters(ctx, module);
   ctx.relooked.add(module);
   return guards.every(({ binding, data, isChanged }) => (findChange(ctx, module, binding, data) !== undefined) === isChanged);
 }

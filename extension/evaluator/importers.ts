@@ -7,6 +7,7 @@ import type ts from "typescript";
 import { listAliases } from "./aliases.js";
 import { requiredSpecifier } from "./commonjs.js";
 import type { Context, Module, Target } from "./context.js";
+import { noteImporterRead } from "./dependencies.js";
 import { type Export, exportsOf } from "./exports.js";
 import { type Change, type Flow, flowInto, isFrozen, narrow, type Search, wrap } from "./flow.js";
 import { mayLeadTo } from "./importIndex.js";
@@ -32,7 +33,7 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
   const paths = new Map<Module, readonly Path[]>(own.length > 0 ? [[target.module, own]] : []);
   const read = (file: string) => {
     const text = ctx.snapshot.read(file);
-    home.importers.reads.set(file, text);
+    noteImporterRead(ctx, home, file, text);
     return text;
   };
   for (const [module, passed] of paths) {
@@ -54,7 +55,7 @@ export function followImporters(search: Search, target: Exported, flow: Flow): C
         if (change !== undefined) return change;
       }
       // It may hand the object to a function of yet another file.
-      for (const { reads } of listReached(importer)) for (const [name, known] of reads) home.importers.reads.set(name, known);
+      for (const { reads } of listReached(importer)) for (const [name, known] of reads) noteImporterRead(ctx, home, name, known);
     }
   }
   return undefined;

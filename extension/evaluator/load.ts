@@ -4,6 +4,7 @@
  * What the snapshot hasn't loaded is read again in the next run; until then the names from there are unknown.
  */
 import type { Context, Loaded, Module } from "./context.js";
+import { noteImport, noteRead } from "./dependencies.js";
 import { resolvePackage } from "./packages.js";
 import { isRelative, listCandidates } from "./specifier.js";
 import { quoteText, unknown } from "./unknown.js";
@@ -28,14 +29,14 @@ function find(ctx: Context, from: Module, specifier: string, span: Span): Loaded
   const answer = found === null ? ask(ctx, from, [...candidates]) : found;
   if (answer === undefined) return fail("unresolved-import", `${quoteText(specifier)} is not loaded yet.`, span);
   if (answer === null) return fail("unresolved-import", `${quoteText(specifier)} does not lead to a file.`, span);
-  from.imports.add(answer);
+  noteImport(from, answer);
   return { kind: "module", module: answer };
 }
 
 function findPackage(ctx: Context, from: Module, specifier: string, span: Span): Loaded {
   const read = (file: string) => {
     const text = ctx.snapshot.read(file);
-    from.reads.set(file, text);
+    noteRead(ctx, from, file, text);
     return text;
   };
   const resolution = resolvePackage(ctx, from.file, specifier, read);
@@ -46,7 +47,7 @@ function findPackage(ctx: Context, from: Module, specifier: string, span: Span):
   if (resolution === "not-found" || text === null) return fail("unresolved-import", `${quoted} does not lead to a file.`, span);
   if (text === undefined) return fail("unresolved-import", `${quoted} is not loaded yet.`, span);
   const module = ctx.open(resolution.file, text);
-  from.imports.add(module);
+  noteImport(from, module);
   return { kind: "module", module };
 }
 
@@ -55,7 +56,7 @@ function ask(ctx: Context, from: Module, files: readonly string[]): Module | nul
   let open: readonly string[] = [];
   for (const [index, file] of files.entries()) {
     const text = ctx.snapshot.read(file);
-    from.reads.set(file, text);
+    noteRead(ctx, from, file, text);
     if (text === undefined) {
       open = files.slice(index + 1);
       break;
@@ -64,7 +65,7 @@ function ask(ctx: Context, from: Module, files: readonly string[]): Module | nul
   }
   if (open.length === 0 && files.every((file) => from.reads.get(file) === null)) return null;
   // The others are wanted as well, so that one more round answers everything.
-  for (const file of open) from.reads.set(file, ctx.snapshot.read(file));
+  for (const file of open) noteRead(ctx, from, file, ctx.snapshot.read(file));
   return undefined;
 }
 
