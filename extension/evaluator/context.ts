@@ -20,6 +20,8 @@ export interface Module {
   /** Modules whose values rest on this one's. */
   readonly users: Set<Module>;
   readonly loads: Map<string, Loaded>;
+  /** What its imports stand for. */
+  readonly imported: Map<ts.Node, Target>;
   readonly exports: Map<string, Target>;
   readonly importers: Importers;
   /** Objects of other files that this one leaves alone, by the name that they are exported for and the file it imports that from. */

@@ -183,6 +183,7 @@ function open(ctx: Context, kinds: Kinds, sources: Map<string, readonly Source[]
     imports: new Set(),
     users: new Set(),
     loads: new Map(),
+    imported: new Map(),
     exports: new Map(),
     importers: { lists: new Map(), reads: new Map(), guards: [] },
     harmlessTo: new WeakMap(),

@@ -18,6 +18,14 @@ type ImportNode = ts.ImportClause | ts.NamespaceImport | ts.ImportSpecifier | ts
 
 /** What an import stands for. */
 export function resolveImport(ctx: Context, module: Module, node: ts.Node): Target {
+  const kept = module.imported.get(node);
+  if (kept !== undefined) return kept;
+  const target = findImported(ctx, module, node);
+  module.imported.set(node, target);
+  return target;
+}
+
+function findImported(ctx: Context, module: Module, node: ts.Node): Target {
   const { ts } = ctx;
   const declaration = node as ImportNode;
   const span = spanOf(declaration.name ?? declaration, module);
@@ -72,7 +80,7 @@ export function findTarget(ctx: Context, node: ts.Expression, module: Module, ho
   }
   if (ts.isPropertyAccessExpression(bare)) {
     const base = findTarget(ctx, bare.expression, module, hops + 1);
-    return base === undefined ? undefined : memberOf(ctx, base, bare.name.text, spanOf(bare, module), hops + 1);
+    return base === undefined ? undefined : memberOf(ctx, base, bare.name.text, bare, module, hops + 1);
   }
   if (!ts.isCallExpression(bare)) return undefined;
   const required = requiredSpecifier(ctx.ts, bare, module.source);
@@ -91,16 +99,15 @@ export function follow(ctx: Context, target: Target, hops = 0): Target {
   const declaration = binding.declarations[0];
   if (declaration === undefined) return target;
   if (binding.kind === "import") return follow(ctx, resolveImport(ctx, module, declaration), hops + 1);
+  const element = ts.isBindingElement(declaration) ? declaration : undefined;
+  const root = element?.parent.parent ?? declaration;
+  if (!ts.isVariableDeclaration(root) || root.initializer === undefined) return target;
   if (binding.kind !== "const" && isReassigned(ts, binding, module.source)) return target;
-  if (ts.isVariableDeclaration(declaration) && declaration.initializer !== undefined) {
-    return renamed(findTarget(ctx, declaration.initializer, module, hops + 1)) ?? target;
-  }
-  if (!ts.isBindingElement(declaration) || !ts.isVariableDeclaration(declaration.parent.parent)) return target;
-  const { initializer } = declaration.parent.parent;
-  const name = declaration.propertyName ?? declaration.name;
-  if (initializer === undefined || !ts.isObjectBindingPattern(declaration.parent) || !ts.isIdentifier(name)) return target;
-  const base = findTarget(ctx, initializer, module, hops + 1);
-  return renamed(base === undefined ? base : memberOf(ctx, base, name.text, spanOf(declaration, module), hops + 1)) ?? target;
+  if (element === undefined) return renamed(findTarget(ctx, root.initializer, module, hops + 1)) ?? target;
+  const name = element.propertyName ?? element.name;
+  if (!ts.isObjectBindingPattern(element.parent) || !ts.isIdentifier(name)) return target;
+  const base = findTarget(ctx, root.initializer, module, hops + 1);
+  return renamed(base === undefined ? base : memberOf(ctx, base, name.text, element, module, hops + 1)) ?? target;
 }
 
 /** A constant that holds a value is that value's own name; one that holds a module or a definition only renames it. */
@@ -109,10 +116,11 @@ function renamed(target: Target | undefined): Target | undefined {
   return through ? target : undefined;
 }
 
-function memberOf(ctx: Context, base: Target, name: string, span: Span, hops: number): Target | undefined {
+/** The node in `module` is where it is asked for. */
+function memberOf(ctx: Context, base: Target, name: string, node: ts.Node, module: Module, hops: number): Target | undefined {
   if (base.kind === "failed") return base;
   if (base.kind !== "library" && base.kind !== "module") return undefined;
-  return follow(ctx, exportOf(ctx, base, name, span), hops);
+  return follow(ctx, exportOf(ctx, base, name, spanOf(node, module)), hops);
 }
 
 function findExport(ctx: Context, module: Module, name: string, visited: Set<Module>): Target | undefined {
