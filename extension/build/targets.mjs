@@ -25,7 +25,13 @@ export const targets = [
     outfile: "client.web.cjs",
     options: { ...browser, format: "cjs", external: ["vscode"] },
   },
-  { entry: "extension/server/node.ts", outfile: "server.cjs", options: { ...node, format: "cjs" } },
+  { entry: "extension/server/start.ts", outfile: "server.cjs", options: { ...node, format: "cjs" } },
+  {
+    entry: "extension/server/node.ts",
+    outfile: "server.main.cjs",
+    // What it loads late comes through the `require` that server.cjs gives it.
+    options: { ...node, format: "cjs", supported: { "dynamic-import": false } },
+  },
   {
     entry: "extension/server/browser.ts",
     outfile: "server.web.js",

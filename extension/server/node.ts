@@ -8,7 +8,6 @@ import { readdir } from "node:fs/promises";
 import { join } from "node:path";
 import { setImmediate } from "node:timers/promises";
 import { fileURLToPath } from "node:url";
-import { setFlagsFromString } from "node:v8";
 import { createConnection, ProposedFeatures } from "vscode-languageserver/node";
 import { isSourceName } from "../analysis/sources.js";
 import { type FileHost, isSkippedFolder } from "./discovery.js";
@@ -16,10 +15,6 @@ import { loadEngine } from "./engine.js";
 import { keyOf, uriOf } from "./fileKeys.js";
 import { describeError } from "./guard.js";
 import { serve } from "./serve.js";
-
-// The engine lets its memory grow to several times of what is in use before it tidies up; a third more costs no time that could be
-// measured and saves a quarter of the memory (`npm run bench`).
-setFlagsFromString("--heap-growing-percent=30");
 
 const connection = createConnection(ProposedFeatures.all);
 const report = (error: unknown) => connection.console.error(`Unexpected: ${describeError(error)}`);

@@ -83,7 +83,7 @@ async function benchClient({ makePackages }: BenchHost): Promise<void> {
   for (const name of [
     "client.cjs",
     "client.web.cjs",
-    "server.cjs",
+    "server.main.cjs",
     "server.web.js",
     "command.js",
     "webview/main.js",

@@ -12,8 +12,8 @@ import {
   StreamMessageReader,
   StreamMessageWriter,
 } from "vscode-languageserver/node";
-import { ENGINE_OPTIONS } from "../../extension/client/serverProcess.js";
-import { repositoryRoot } from "../workbench/paths.js";
+import { ENGINE_OPTIONS, serverArguments } from "../../extension/client/serverProcess.js";
+import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
 import type { EditedFile } from "./workspace.js";
 
 export class LanguageServer {
@@ -26,7 +26,8 @@ export class LanguageServer {
 
   constructor() {
     const server = join(repositoryRoot, "dist/server.cjs");
-    this.process = spawn(process.execPath, [...ENGINE_OPTIONS, server, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
+    const args = [...ENGINE_OPTIONS, server, "--stdio", ...serverArguments(join(cacheFolder, "../bench/compiled"))];
+    this.process = spawn(process.execPath, args, { stdio: ["pipe", "pipe", "inherit"] });
     const { stdin, stdout } = this.process;
     if (stdin === null || stdout === null) throw new Error("The server has no streams.");
     this.#connection = createProtocolConnection(new StreamMessageReader(stdout), new StreamMessageWriter(stdin));

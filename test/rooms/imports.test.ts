@@ -32,7 +32,7 @@ const TABLE: Readonly<Record<string, readonly string[]>> = {
 };
 
 /** Files of server and client that run on Node alone; all others there also run in a browser worker. */
-const NODE_ENTRIES = new Set(["extension/server/node.ts", "extension/client/main.ts"]);
+const NODE_ENTRIES = new Set(["extension/server/node.ts", "extension/server/start.ts", "extension/client/main.ts"]);
 
 interface Import {
   readonly from: string;

@@ -8,7 +8,8 @@ import { shareTypeScript } from "../../extension/build/typescriptModule.mjs";
 const ROOT = path.join(import.meta.dirname, "../..");
 
 /** Gives the path of a server that can be run with Node. `name` keeps test files that run at once apart. */
-export function buildServer(name: string): Promise<string> {
+export async function buildServer(name: string): Promise<string> {
+  await buildBundle("server.main.cjs", name);
   return buildBundle("server.cjs", name);
 }
 

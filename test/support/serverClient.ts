@@ -64,6 +64,7 @@ export interface ClientOptions {
   readonly files: Readonly<Record<string, string>>;
   readonly settings?: Readonly<Record<string, unknown>>;
   readonly commands?: readonly string[];
+  readonly arguments?: readonly string[];
 }
 
 const PATIENCE_MS = 15_000;
@@ -71,7 +72,8 @@ const PATIENCE_MS = 15_000;
 /** Enough to see findings come, change and go; what each rule says is held to other tests. */
 const RULES: ReadonlySet<unknown> = new Set(["stalls", "past-peak", "not-constant", "bad-declaration"]);
 
-export async function startServerClient({ server, files, settings = {}, commands = [] }: ClientOptions): Promise<ServerClient> {
+export async function startServerClient(options: ClientOptions): Promise<ServerClient> {
+  const { server, files, settings = {}, commands = [] } = options;
   const folder = realpathSync(mkdtempSync(path.join(tmpdir(), "loadmark-server-")));
   const onDisk = (file: string) => path.join(folder, file);
   const uri = (file: string) => pathToFileURL(onDisk(file)).href;
@@ -81,7 +83,9 @@ export async function startServerClient({ server, files, settings = {}, commands
   };
   for (const [file, text] of Object.entries(files)) put(file, text);
 
-  const child = spawn(process.execPath, [server, "--stdio"], { stdio: ["pipe", "pipe", "inherit"] });
+  const child = spawn(process.execPath, [server, "--stdio", ...(options.arguments ?? [])], {
+    stdio: ["pipe", "pipe", "inherit"],
+  });
   const connection = createProtocolConnection(new StreamMessageReader(child.stdout), new StreamMessageWriter(child.stdin));
   const published: PublishDiagnosticsParams[] = [];
   const said: { method: string; params: unknown }[] = [];
