@@ -79,7 +79,9 @@ export function showResults(parts: ResultsParts): Results {
       connection.sendNotification(CHART_MAY_DIFFER).catch((error) => report("Telling of a result", error));
     });
     const retold = before && changes && attempt("Comparing files", () => retoldFiles(before, of, changes));
-    refreshes.whereOther(rest.shown, of, retold);
+    // Whoever asked before there was anything is asked to ask again.
+    if (before === undefined) refreshes.all();
+    else refreshes.whereOther(rest.shown, of, retold);
     connection.tracer.log(`${of.analysis.inFile.size} files, ${of.analysis.findingsIn.size} of them with findings.`);
   };
 

@@ -18,6 +18,9 @@ import { type FileEvent, WorkspaceFiles } from "./workspaceFiles.js";
 
 export const TYPING_DELAY_MS = 150;
 
+/** How long documents that are opened while the workspace is read for the first time wait for the rest of it. */
+export const READING_PATIENCE_MS = 100;
+
 /** An analysis of everything, as it was at one moment. */
 export interface Result {
   readonly analysis: Analysis;
@@ -57,6 +60,7 @@ export class Session {
   /** How many readings of the disk are under way or to come; what they find may change the result. The first is that of the workspace. */
   #readings = 1;
   #hasFolders = false;
+  #isFirstReading = true;
   #waiting: (() => void)[] = [];
   #disposed = false;
 
@@ -87,7 +91,7 @@ export class Session {
   }
 
   open(uri: string, version: number, text: string): void {
-    this.#touch(this.texts.open(uri, version, text), 0);
+    this.#touch(this.texts.open(uri, version, text), this.#isFirstReading ? READING_PATIENCE_MS : 0);
   }
 
   change(uri: string, version: number, changes: readonly TextDocumentContentChangeEvent[]): void {
@@ -121,8 +125,14 @@ export class Session {
   async setFolders(folders: readonly string[]): Promise<void> {
     if (!this.#hasFolders) this.#readings -= 1;
     this.#hasFolders = true;
-    await this.#reading(() => this.#files.setFolders(folders));
-    this.#schedule(0);
+    try {
+      await this.#reading(() => this.#files.setFolders(folders));
+    } finally {
+      const isFirst = this.#isFirstReading;
+      this.#isFirstReading = false;
+      this.#schedule(0);
+      if (isFirst) this.#start();
+    }
   }
 
   /** The result for the texts of now, or the last one when that takes longer than the time given. */
@@ -243,6 +253,8 @@ export class Session {
     const open = [...snapshot.versions.keys()].filter(
       (file) => this.#files.accepts(file) && mentionsDeclarations(snapshot.read(file) ?? ""),
     );
+    // What people look at comes first; the rest follows when all of it is read.
+    if (this.#isFirstReading) return open;
     return [...open, ...[...this.#files.mentioning].filter((file) => !snapshot.versions.has(file))];
   }
 

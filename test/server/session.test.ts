@@ -1,5 +1,5 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
-import { TYPING_DELAY_MS } from "../../extension/server/session.js";
+import { READING_PATIENCE_MS, TYPING_DELAY_MS } from "../../extension/server/session.js";
 import { startSession as start, whole } from "../support/startSession.js";
 
 const IMPORT = 'import {} from "loadmark";\n';
@@ -68,6 +68,33 @@ describe("a session", () => {
     expect(messages()).toEqual(["/w/a.ts a11"]);
     expect(engine.runs.count).toBe(1);
     expect(results.at(-1)?.snapshot.versions.get("/w/a.ts")).toBe(11);
+  });
+
+  it("waits with an opened document for a workspace that is read at once, and no longer than that", async () => {
+    const { session, settle, messages, results } = start({ "/w/a.ts": `${IMPORT}finding: a`, "/w/b.ts": `${IMPORT}finding: b` });
+    const reading = session.setFolders(["/w"]);
+    session.open("file:///w/a.ts", 1, `${IMPORT}finding: a`);
+    await reading;
+    await settle(0);
+    expect(messages().sort()).toEqual(["/w/a.ts a", "/w/b.ts b"]);
+    expect(results).toHaveLength(1);
+    await settle();
+    expect(results).toHaveLength(1);
+  });
+
+  it("tells of open documents first where reading the workspace takes long", async () => {
+    const { session, settle, messages, files } = start({ "/w/a.ts": `${IMPORT}finding: a`, "/w/b.ts": `${IMPORT}finding: b` });
+    files.beforeRead = (file) => new Promise((resolve) => setTimeout(resolve, file === "/w/b.ts" ? 2000 : 10));
+    const reading = session.setFolders(["/w"]);
+    session.open("file:///w/a.ts", 1, `${IMPORT}finding: a`);
+    await settle(READING_PATIENCE_MS - 1);
+    expect(messages()).toEqual([]);
+    await settle(50);
+    expect(messages()).toEqual(["/w/a.ts a"]);
+    await settle(2000);
+    await reading;
+    await settle();
+    expect(messages().sort()).toEqual(["/w/a.ts a", "/w/b.ts b"]);
   });
 
   it("analyses at once on saving", async () => {
