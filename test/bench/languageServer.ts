@@ -13,6 +13,7 @@ import {
   StreamMessageWriter,
 } from "vscode-languageserver/node";
 import { ENGINE_OPTIONS, serverArguments } from "../../extension/client/serverProcess.js";
+import { CHART_MAY_DIFFER } from "../../extension/protocol/chartMessages.js";
 import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
 import type { EditedFile } from "./workspace.js";
 
@@ -23,6 +24,9 @@ export class LanguageServer {
   readonly #versions = new Map<string, number>();
   readonly #texts = new Map<string, string>();
   #heard: (published: PublishDiagnosticsParams) => void = () => {};
+  /** Whether nothing comes any more of the last findings. */
+  #isQuiet = true;
+  readonly #waiting: (() => void)[] = [];
 
   constructor() {
     const server = join(repositoryRoot, "dist/server.cjs");
@@ -32,8 +36,13 @@ export class LanguageServer {
     if (stdin === null || stdout === null) throw new Error("The server has no streams.");
     this.#connection = createProtocolConnection(new StreamMessageReader(stdout), new StreamMessageWriter(stdin));
     this.#connection.onNotification("textDocument/publishDiagnostics", (published: PublishDiagnosticsParams) => {
+      this.#isQuiet = false;
       this.findings.set(published.uri, published.diagnostics);
       this.#heard(published);
+    });
+    this.#connection.onNotification(CHART_MAY_DIFFER, () => {
+      this.#isQuiet = true;
+      for (const resolve of this.#waiting.splice(0)) resolve();
     });
     this.#connection.onRequest("client/registerCapability", () => null);
     this.#connection.onRequest("workspace/configuration", ({ items }: { items: unknown[] }) => items.map(() => ({})));
@@ -98,9 +107,9 @@ export class LanguageServer {
     return this.#connection.sendRequest(method, params);
   }
 
-  /** Until it has told all that comes after findings, such as the state of its views. */
-  async whenQuiet(): Promise<void> {
-    await this.request("workspace/symbol", { query: "none has this name" });
+  /** Until it has told what comes after findings, such as the state of its views. */
+  whenQuiet(): Promise<void> {
+    return this.#isQuiet ? Promise.resolve() : new Promise((resolve) => this.#waiting.push(resolve));
   }
 
   /** Until each of the files was published after this call. */
