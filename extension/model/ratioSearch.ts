@@ -6,6 +6,7 @@
 import type { Drive, Stage } from "./drive.js";
 import { withoutWatches } from "./effects.js";
 import { hardestPosition } from "./hardest.js";
+import { searchLeast } from "./leastValue.js";
 import { availableLine } from "./line.js";
 import { trainOf } from "./stages.js";
 import { solveTravel } from "./travel.js";
@@ -30,12 +31,12 @@ export interface QuickestRatio {
   readonly timeS: number;
 }
 
-/** Golden-section steps: the ratio to about a thousandth, which is finer than any choice of teeth. */
-const STEPS = 14;
-const GOLDEN = (Math.sqrt(5) - 1) / 2;
+/** Of the ratio's logarithm: finer than any choice of teeth. */
+const TOLERANCE = 1e-3;
+const MOST_TRAVELS = 20;
 
 /**
- * The ratio with the shortest travel, by golden-section search of log(ratio) (Kiefer 1953), on the side where the motor moves
+ * The ratio with the shortest travel, by a search of log(ratio), on the side where the motor moves
  * the load at all; null for a load without travel, or where no ratio makes it arrive.
  */
 export function quickestRatio(drive: Drive): QuickestRatio | null {
@@ -44,8 +45,8 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
   if (!Number.isFinite(share)) return null;
   // Below the first bound it stalls. Inertia can ask for more ratio than the static load does, never for a hundred times more.
   const least = Math.max(share * 1.02, 1e-3);
-  let low = Math.log(least);
-  let high = Math.log(Math.max(least * 20, 20));
+  const low = Math.log(least);
+  const high = Math.log(Math.max(least * 20, 20));
   let best: QuickestRatio | null = null;
   let unresolved = 0;
   const unwatched = withoutWatches(drive);
@@ -59,22 +60,6 @@ export function quickestRatio(drive: Drive): QuickestRatio | null {
     if (timeS !== null && (best === null || timeS < best.timeS)) best = { ratio: ratio * factor, timeS };
     return timeS ?? Number.POSITIVE_INFINITY;
   };
-  let inner = high - GOLDEN * (high - low);
-  let outer = low + GOLDEN * (high - low);
-  let atInner = timeAt(inner);
-  let atOuter = timeAt(outer);
-  for (let step = 0; step < STEPS; step++) {
-    if (atInner <= atOuter) {
-      high = outer;
-      [outer, atOuter] = [inner, atInner];
-      inner = high - GOLDEN * (high - low);
-      atInner = timeAt(inner);
-    } else {
-      low = inner;
-      [inner, atInner] = [outer, atOuter];
-      outer = low + GOLDEN * (high - low);
-      atOuter = timeAt(outer);
-    }
-  }
+  searchLeast(timeAt, low, high, { tolerance: TOLERANCE, most: MOST_TRAVELS });
   return best;
 }
