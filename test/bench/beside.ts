@@ -71,7 +71,7 @@ export async function measureBeside(workspace: BenchWorkspace, { openings, edits
         into.ours.push(
           await timed(async () => {
             const done = ours.server.published(shown);
-            await ours.server.edit(file, number);
+            ours.server.edit(file, number);
             await done;
           }),
         );
@@ -107,7 +107,7 @@ async function openOurs(workspace: BenchWorkspace, files: readonly string[], exp
   const server = new LanguageServer();
   const all = server.until(() => [...expected].every(([uri, count]) => server.findings.get(uri)?.length === count));
   await server.start(workspace.folder);
-  for (const path of files) await server.open(path);
+  for (const path of files) server.open(path);
   await all;
   const ms = performance.now() - start;
   await server.whenQuiet();

@@ -1,28 +1,31 @@
 // The product's own server as a process, spoken to as an editor does, with what it says about findings. It counts no time.
 
-import { type ChildProcess, spawn } from "node:child_process";
+import { type ChildProcessByStdio, spawn } from "node:child_process";
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
+import type { Readable, Writable } from "node:stream";
 import { pathToFileURL } from "node:url";
-import {
-  createProtocolConnection,
-  type Diagnostic,
-  type ProtocolConnection,
-  type PublishDiagnosticsParams,
-  StreamMessageReader,
-  StreamMessageWriter,
-} from "vscode-languageserver/node";
+import type { Diagnostic, PublishDiagnosticsParams } from "vscode-languageserver/node";
 import { ENGINE_OPTIONS, serverArguments } from "../../extension/client/serverProcess.js";
 import { CHART_MAY_DIFFER } from "../../extension/protocol/chartMessages.js";
 import { cacheFolder, repositoryRoot } from "../workbench/paths.js";
+import { readFrames, writeFrame } from "./frames.js";
 import type { EditedFile } from "./workspace.js";
 
+/** A notification, a request or an answer. */
+interface Message {
+  readonly id?: number;
+  readonly method?: string;
+  readonly params?: unknown;
+  readonly result?: unknown;
+}
+
 export class LanguageServer {
-  readonly process: ChildProcess;
+  readonly process: ChildProcessByStdio<Writable, Readable, null>;
   readonly findings = new Map<string, readonly Diagnostic[]>();
-  readonly #connection: ProtocolConnection;
   readonly #versions = new Map<string, number>();
   readonly #texts = new Map<string, string>();
+  readonly #asked: ((result: unknown) => void)[] = [];
   #heard: (published: PublishDiagnosticsParams) => void = () => {};
   /** Whether nothing comes any more of the last findings. */
   #isQuiet = true;
@@ -32,31 +35,11 @@ export class LanguageServer {
     const server = join(repositoryRoot, "dist/server.cjs");
     const args = [...ENGINE_OPTIONS, server, "--stdio", ...serverArguments(join(cacheFolder, "../bench/compiled"))];
     this.process = spawn(process.execPath, args, { stdio: ["pipe", "pipe", "inherit"] });
-    const { stdin, stdout } = this.process;
-    if (stdin === null || stdout === null) throw new Error("The server has no streams.");
-    this.#connection = createProtocolConnection(new StreamMessageReader(stdout), new StreamMessageWriter(stdin));
-    this.#connection.onNotification("textDocument/publishDiagnostics", (published: PublishDiagnosticsParams) => {
-      this.#isQuiet = false;
-      this.findings.set(published.uri, published.diagnostics);
-      this.#heard(published);
-    });
-    this.#connection.onNotification(CHART_MAY_DIFFER, () => {
-      this.#isQuiet = true;
-      for (const resolve of this.#waiting.splice(0)) resolve();
-    });
-    this.#connection.onRequest("client/registerCapability", () => null);
-    this.#connection.onRequest("workspace/configuration", ({ items }: { items: unknown[] }) => items.map(() => ({})));
-    for (const refresh of ["workspace/inlayHint/refresh", "workspace/codeLens/refresh"]) {
-      this.#connection.onRequest(refresh, () => null);
-    }
-    this.#connection.onNotification("window/logMessage", ({ type, message }: { type: number; message: string }) => {
-      if (type === 1) console.error(`The server says: ${message}`);
-    });
-    this.#connection.listen();
+    readFrames<Message>(this.process.stdout, (message) => this.#hear(message));
   }
 
   async start(folder: string): Promise<void> {
-    await this.#connection.sendRequest("initialize", {
+    await this.request("initialize", {
       processId: process.pid,
       rootUri: null,
       workspaceFolders: [{ uri: pathToFileURL(folder).href, name: "bench" }],
@@ -70,21 +53,21 @@ export class LanguageServer {
         },
       },
     });
-    await this.#connection.sendNotification("initialized", {});
+    this.#notify("initialized", {});
   }
 
-  async open(path: string): Promise<void> {
+  open(path: string): void {
     const uri = pathToFileURL(path).href;
     const text = readFileSync(path, "utf8");
     this.#versions.set(uri, 1);
     this.#texts.set(uri, text);
-    await this.#connection.sendNotification("textDocument/didOpen", {
+    this.#notify("textDocument/didOpen", {
       textDocument: { uri, languageId: "typescript", version: 1, text },
     });
   }
 
   /** Replaces the number and says that the document was saved, which ends the wait for more typing. */
-  async edit({ path, start, text }: EditedFile, number: string): Promise<void> {
+  edit({ path, start, text }: EditedFile, number: string): void {
     const uri = pathToFileURL(path).href;
     const version = (this.#versions.get(uri) ?? 0) + 1;
     const current = this.#texts.get(uri) ?? text;
@@ -96,15 +79,15 @@ export class LanguageServer {
     const character = lines.at(-1)?.length ?? 0;
     const range = { start: { line, character }, end: { line, character: character + end - start } };
     const textDocument = { uri, version };
-    await this.#connection.sendNotification("textDocument/didChange", {
-      textDocument,
-      contentChanges: [{ range, text: number }],
-    });
-    await this.#connection.sendNotification("textDocument/didSave", { textDocument: { uri } });
+    this.#notify("textDocument/didChange", { textDocument, contentChanges: [{ range, text: number }] });
+    this.#notify("textDocument/didSave", { textDocument: { uri } });
   }
 
-  request<Answer>(method: string, params: unknown): Promise<Answer> {
-    return this.#connection.sendRequest(method, params);
+  request<Answer>(method: string, params?: unknown): Promise<Answer> {
+    return new Promise((resolve) => {
+      this.#asked.push(resolve as (result: unknown) => void);
+      this.#write({ id: this.#asked.length - 1, method, params });
+    });
   }
 
   /** Until it has told what comes after findings, such as the state of its views. */
@@ -132,8 +115,39 @@ export class LanguageServer {
   }
 
   async stop(): Promise<void> {
-    await this.#connection.sendRequest("shutdown");
-    await this.#connection.sendNotification("exit");
-    this.#connection.dispose();
+    const ended = new Promise((resolve) => this.process.once("exit", resolve));
+    await this.request("shutdown");
+    this.#notify("exit");
+    await ended;
   }
+
+  #hear({ id, method, params, result }: Message): void {
+    if (method === undefined) this.#asked[id ?? -1]?.(result);
+    else if (id !== undefined) this.#write({ id, result: answerTo(method, params) });
+    else if (method === "textDocument/publishDiagnostics") {
+      const published = params as PublishDiagnosticsParams;
+      this.#isQuiet = false;
+      this.findings.set(published.uri, published.diagnostics);
+      this.#heard(published);
+    } else if (method === CHART_MAY_DIFFER) {
+      this.#isQuiet = true;
+      for (const resolve of this.#waiting.splice(0)) resolve();
+    } else if (method === "window/logMessage") {
+      const { type, message } = params as { readonly type: number; readonly message: string };
+      if (type === 1) console.error(`The server says: ${message}`);
+    }
+  }
+
+  #notify(method: string, params?: unknown): void {
+    this.#write({ method, params });
+  }
+
+  #write(message: Message): void {
+    writeFrame(this.process.stdin, { jsonrpc: "2.0", ...message });
+  }
+}
+
+/** Of an editor that takes every wish and has no settings of its own. */
+function answerTo(method: string, params: unknown): unknown {
+  return method === "workspace/configuration" ? (params as { readonly items: readonly unknown[] }).items.map(() => ({})) : null;
 }

@@ -22,7 +22,7 @@ export async function soak(
   const server = new LanguageServer();
   await server.start(folder);
   const opened = server.published([mechanism.path]);
-  for (const path of new Set([mechanism.path, constants.path, ...constants.users])) await server.open(path);
+  for (const path of new Set([mechanism.path, constants.path, ...constants.users])) server.open(path);
   await opened;
   onMoment({ edits: 0, memoryMB: residentMB(server.process), msAnEdit: 0 });
   let start = performance.now();
@@ -30,7 +30,7 @@ export async function soak(
   for (let edit = 1; edit <= edits; edit++) {
     const [file, shown] = edit % 2 === 0 ? [mechanism, [mechanism.path]] : [constants, constants.users];
     const done = server.published(shown);
-    await server.edit(file, file.numberAt(edit));
+    server.edit(file, file.numberAt(edit));
     await done;
     if (edit % part !== 0 && edit !== edits) continue;
     onMoment({ edits: edit, memoryMB: residentMB(server.process), msAnEdit: (performance.now() - start) / part });

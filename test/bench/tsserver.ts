@@ -1,9 +1,11 @@
 // The installed TypeScript's own server as a process, asked as editors ask it: the yardstick of the bench. It counts no time.
 
-import { type ChildProcess, spawn } from "node:child_process";
+import { type ChildProcessByStdio, spawn } from "node:child_process";
 import { readFileSync } from "node:fs";
 import { join } from "node:path";
+import type { Readable, Writable } from "node:stream";
 import { repositoryRoot } from "../workbench/paths.js";
+import { readFrames } from "./frames.js";
 import type { EditedFile } from "./workspace.js";
 
 interface Message {
@@ -15,10 +17,9 @@ interface Message {
 }
 
 export class TsServer {
-  readonly process: ChildProcess;
+  readonly process: ChildProcessByStdio<Writable, Readable, null>;
   readonly #texts = new Map<string, string>();
   #sequence = 0;
-  #rest = Buffer.alloc(0);
   #heard: (message: Message) => void = () => {};
   /** Until the server has done all that it was asked for. */
   #quiet: Promise<void> = Promise.resolve();
@@ -27,7 +28,7 @@ export class TsServer {
     const server = join(repositoryRoot, "node_modules/typescript/lib/tsserver.js");
     const args = [server, "--noGetErrOnBackgroundUpdate", "--disableAutomaticTypingAcquisition"];
     this.process = spawn(process.execPath, args, { stdio: ["pipe", "pipe", "inherit"] });
-    this.process.stdout?.on("data", (chunk: Buffer) => this.#read(chunk));
+    readFrames<Message>(this.process.stdout, (message) => this.#heard(message));
   }
 
   open(path: string): void {
@@ -77,21 +78,7 @@ export class TsServer {
   /** Gives the number of the request. */
   #send(command: string, args: unknown): number {
     this.#sequence += 1;
-    this.process.stdin?.write(`${JSON.stringify({ seq: this.#sequence, type: "request", command, arguments: args })}\n`);
+    this.process.stdin.write(`${JSON.stringify({ seq: this.#sequence, type: "request", command, arguments: args })}\n`);
     return this.#sequence;
-  }
-
-  #read(chunk: Buffer): void {
-    this.#rest = Buffer.concat([this.#rest, chunk]);
-    for (;;) {
-      const headEnd = this.#rest.indexOf("\r\n\r\n");
-      if (headEnd < 0) return;
-      const length = Number(/Content-Length: (\d+)/.exec(this.#rest.toString("latin1", 0, headEnd))?.[1]);
-      const end = headEnd + 4 + length;
-      if (this.#rest.length < end) return;
-      const message: Message = JSON.parse(this.#rest.toString("utf8", headEnd + 4, end));
-      this.#rest = this.#rest.subarray(end);
-      this.#heard(message);
-    }
   }
 }
