@@ -1,7 +1,7 @@
 /**
  * The server as a process of its own, with the disk through Node.
  *
- * Talks over whichever channel its arguments name (`--stdio`, `--node-ipc`); the only file of the room that knows Node.
+ * Talks over whichever channel its arguments name (`--stdio`, `--node-ipc`). Beside `start.ts` the only file of the room that knows Node.
  */
 import { readFileSync, realpathSync } from "node:fs";
 import { readdir } from "node:fs/promises";
