@@ -1,5 +1,6 @@
 /** Where comments above mechanisms and robots allow something, and what. Whether they may is not asked here. */
 import type { DefinitionCall, Span } from "../evaluator/value.js";
+import { spanKey } from "./spans.js";
 
 export interface AllowanceComment {
   readonly at: Span;
@@ -25,7 +26,7 @@ export function listAllowances(mechanisms: readonly Below[], robots: readonly Be
     leadingComments.flatMap(({ text, span }) => {
       const allowance = readAllowance(text);
       if (allowance === undefined) return [];
-      const key = `${span.start} ${span.file}`;
+      const key = spanKey(span);
       const comment = comments.get(key) ?? { at: span, ...allowance, names: new Set<string>(), robots: [] };
       comments.set(key, comment);
       return [comment];

@@ -8,6 +8,7 @@ import { DEFINITIONS, SPECIFIER } from "../declarations/table.js";
 import { createEvaluator } from "../evaluator/evaluator.js";
 import type { TypeScript } from "../evaluator/typescript.js";
 import type { Snapshot } from "../evaluator/value.js";
+import { once } from "../model/once.js";
 import type { Analysis } from "./analysis.js";
 import { createDeclarationFinder } from "./declarationFindings.js";
 import { createCollector } from "./declared.js";
@@ -104,13 +105,5 @@ function analysisOf(
     snapshot,
     levels,
     toothCounts,
-  };
-}
-
-function once<Result>(make: () => Result): () => Result {
-  let made: { readonly result: Result } | undefined;
-  return () => {
-    made ??= { result: make() };
-    return made.result;
   };
 }

@@ -7,7 +7,7 @@ import type { FileEvaluation, Snapshot, Span } from "../evaluator/value.js";
 import type { Finding } from "./analysis.js";
 import { type ByFile, createKeeper } from "./byFile.js";
 import type { Declared } from "./declared.js";
-import { groupBySite, sameContent, union } from "./lists.js";
+import { groupBy, sameContent, union } from "./lists.js";
 import { distinctPlaces } from "./spans.js";
 import { readTextFacts, type TextFacts } from "./textFacts.js";
 import { findUnknowns } from "./unknownFindings.js";
@@ -73,7 +73,7 @@ function createComparer(): (facts: ByFile<TextFacts>, before: ReadonlyMap<string
     }
     if (changed.size > 0 && names.isAnyTwice) isOld = true;
     if (!isOld) return { of: last, changed: new Set() };
-    const found = groupBySite(compareAll(of, special, names.isAnyTwice));
+    const found = groupBy(compareAll(of, special, names.isAnyTwice), ({ at }) => at.file);
     const differs = (file: string) => !sameContent(last.get(file) ?? [], found.get(file) ?? []);
     const result = { of: found, changed: new Set([...union(last.keys(), found.keys())].filter(differs)) };
     last = found;

@@ -32,15 +32,10 @@ export interface DeclaredRobot extends RobotCall {
 
 export function createCollector(): (evaluations: ByFile<FileEvaluation>) => ByFile<Declared> {
   const kept = createKeeper<Declared>();
-  // A what-if goes back to evaluations of before.
-  const known = new WeakMap<FileEvaluation, Declared>();
   return ({ of, changed }) =>
     kept.update(of, changed, (file) => {
       const evaluation = of.get(file);
-      if (evaluation === undefined) return undefined;
-      const declared = known.get(evaluation) ?? collect(evaluation.calls);
-      known.set(evaluation, declared);
-      return declared;
+      return evaluation && collect(evaluation.calls);
     });
 }
 

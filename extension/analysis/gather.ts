@@ -4,13 +4,14 @@
  */
 import type { FileEvaluation } from "../evaluator/value.js";
 import { applyAllowances } from "./allowances.js";
-import type { AnalysedMechanism, Analysis, FileAnalysis, Finding } from "./analysis.js";
+import type { Analysis, FileAnalysis, Finding } from "./analysis.js";
 import { type ByFile, createKeeper } from "./byFile.js";
 import type { DeclarationFindings } from "./declarationFindings.js";
 import type { Declared } from "./declared.js";
 import type { Judged } from "./judge.js";
 import type { JudgedRobots } from "./judgeRobots.js";
-import { groupBySite, sameContent, sameItems, union } from "./lists.js";
+import { groupBy, sameContent, sameItems, union } from "./lists.js";
+import { rankOf } from "./rank.js";
 import type { ReadSettings } from "./settings.js";
 
 export interface Parts {
@@ -42,8 +43,6 @@ export function createGatherer(): (parts: Parts) => Gathered {
   };
 }
 
-const NO_MECHANISMS: readonly AnalysedMechanism[] = [];
-
 /** The same object as before where nothing of it changed. */
 function gatherFile(file: string, parts: Parts, before: FileAnalysis | undefined): FileAnalysis | undefined {
   const { evaluations, texts, judged, robots, declared, settings } = parts;
@@ -55,7 +54,7 @@ function gatherFile(file: string, parts: Parts, before: FileAnalysis | undefined
   const findings = settings.applyLevels(allowed).sort(byPlace);
   const now: FileAnalysis = {
     evaluation,
-    mechanisms: judgedHere?.mechanisms ?? NO_MECHANISMS,
+    mechanisms: judgedHere?.mechanisms ?? [],
     motors: declaredHere?.motors ?? [],
     robots: robotsHere?.robots ?? [],
     findings: before !== undefined && sameContent(before.findings, findings) ? before.findings : findings,
@@ -91,7 +90,7 @@ function createPlacer(): (files: ByFile<FileAnalysis>, parts: Parts) => Analysis
     const strangers = [...away.values()].flat();
     const before = arrived;
     if (before.size + strangers.length + outside.length + settings.findings.length > 0) {
-      arrived = groupBySite([...strangers, ...outside, ...settings.findings]);
+      arrived = groupBy([...strangers, ...outside, ...settings.findings], ({ at }) => at.file);
     }
     let isNew = false;
     for (const file of union(changed, before.keys(), arrived.keys())) {
@@ -111,15 +110,13 @@ function createPlacer(): (files: ByFile<FileAnalysis>, parts: Parts) => Analysis
   };
 }
 
-const LEVELS: readonly Finding["level"][] = ["error", "warning", "information"];
-
 /** By position; of findings at one place the worst first. */
 function byPlace(a: Finding, b: Finding): number {
   return (
     compare(a.at.file, b.at.file) ||
     a.at.start - b.at.start ||
     a.at.end - b.at.end ||
-    LEVELS.indexOf(a.level) - LEVELS.indexOf(b.level) ||
+    rankOf(b.level) - rankOf(a.level) ||
     compare(a.rule, b.rule) ||
     compare(a.message, b.message)
   );

@@ -17,14 +17,13 @@ export function sameContent(one: readonly unknown[], other: readonly unknown[]):
   return sameItems(one, other) || (one.length === other.length && JSON.stringify(one) === JSON.stringify(other));
 }
 
-/** By the file in which they are. */
-export function groupBySite<Item extends { readonly at: { readonly file: string } }>(
-  items: readonly Item[],
-): ReadonlyMap<string, readonly Item[]> {
+/** In the order in which keys and items are met. */
+export function groupBy<Item>(items: readonly Item[], keyOf: (item: Item) => string): ReadonlyMap<string, readonly Item[]> {
   const groups = new Map<string, Item[]>();
   for (const item of items) {
-    const group = groups.get(item.at.file);
-    if (group === undefined) groups.set(item.at.file, [item]);
+    const key = keyOf(item);
+    const group = groups.get(key);
+    if (group === undefined) groups.set(key, [item]);
     else group.push(item);
   }
   return groups;

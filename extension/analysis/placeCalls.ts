@@ -6,7 +6,7 @@
  */
 import type { DefinitionCall, FileEvaluation } from "../evaluator/value.js";
 import { type ByFile, createKeeper } from "./byFile.js";
-import { sameItems, union } from "./lists.js";
+import { groupBy, sameItems, union } from "./lists.js";
 import { spanKey } from "./spans.js";
 
 type Evaluations = ReadonlyMap<string, FileEvaluation>;
@@ -46,7 +46,7 @@ function placeAll(files: Evaluations): ReadonlyMap<string, readonly DefinitionCa
   const all = [...files.values()];
   const moved = all.flatMap(({ file, calls }) => calls.filter(({ span }) => span.file !== file));
   const counts = createCounter(all);
-  const arrived = groupByFile(moved);
+  const arrived = groupBy(moved, ({ span }) => span.file);
   const placed = new Map<string, readonly DefinitionCall[]>();
   for (const [file, evaluation] of files) {
     // Where the helper's file is not among the files, its calls stay with the first who reaches it.
@@ -62,16 +62,6 @@ function createCounter(evaluations: readonly FileEvaluation[]): (call: Definitio
   for (const { calls } of evaluations) for (const call of calls) if (call.open !== true) closed.add(spanKey(call.span));
   const seen = new Set<DefinitionCall>();
   return (call) => seen.size < seen.add(call).size && (call.open !== true || !closed.has(spanKey(call.span)));
-}
-
-function groupByFile(calls: readonly DefinitionCall[]): ReadonlyMap<string, DefinitionCall[]> {
-  const groups = new Map<string, DefinitionCall[]>();
-  for (const call of calls) {
-    const group = groups.get(call.span.file);
-    if (group === undefined) groups.set(call.span.file, [call]);
-    else group.push(call);
-  }
-  return groups;
 }
 
 function byPlace({ span: a }: DefinitionCall, { span: b }: DefinitionCall): number {

@@ -9,6 +9,7 @@ import type { Analysis, Finding } from "./analysis.js";
 import type { Proposal } from "./proposal.js";
 import { proposeForMechanism } from "./proposeForMechanism.js";
 import { proposeForRobot } from "./proposeForRobot.js";
+import { runThrough } from "./runThrough.js";
 
 /** Counts what a search has done so far. */
 export interface Tally {
@@ -30,9 +31,5 @@ export function searchProposals(
 
 /** The same without a stop. */
 export function proposalsFor(analysis: Analysis, finding: Finding, analyse: Analyser["analyse"], tally?: Tally): Proposal[] {
-  const search = searchProposals(analysis, finding, analyse, tally);
-  for (;;) {
-    const next = search.next();
-    if (next.done === true) return next.value;
-  }
+  return runThrough(searchProposals(analysis, finding, analyse, tally));
 }

@@ -18,6 +18,7 @@ import type { AnalysedMechanism, Analysis } from "./analysis.js";
 import { robotOf, supplyCallOf } from "./lentSupply.js";
 import { createRandom, spreadPoints } from "./random.js";
 import { type Leaf, leavesBelow, rebuild } from "./rebuild.js";
+import { runThrough } from "./runThrough.js";
 
 /** 5, 50 and 95 % of the draws lie below. */
 export interface Percentiles<Value> {
@@ -47,11 +48,7 @@ const SEED = 1;
 
 /** `undefined` where nothing is declared as uncertain, or the mechanism has no numbers. */
 export function spreadOf(analysis: Analysis, mechanism: AnalysedMechanism): Spread | undefined {
-  const work = drawSpread(analysis, mechanism);
-  for (;;) {
-    const next = work.next();
-    if (next.done === true) return next.value;
-  }
+  return runThrough(drawSpread(analysis, mechanism));
 }
 
 /** The same a draw at a time, so that a host can stop it. */

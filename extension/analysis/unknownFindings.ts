@@ -3,18 +3,15 @@ import type { Unknown } from "../evaluator/value.js";
 import { badDeclaration, tellMissing } from "../rules/badDeclaration.js";
 import { notConstant, tellUnknown } from "../rules/notConstant.js";
 import type { Finding } from "./analysis.js";
+import { groupBy } from "./lists.js";
 import { distinctPlaces, sameSpan } from "./spans.js";
 
 /** At the use that lies nearest to it; other uses are related. */
 export function findUnknowns(unknowns: readonly Unknown[]): Finding[] {
-  const byRoot = new Map<string, Unknown[]>();
-  for (const unknown of unknowns) {
+  const byRoot = groupBy(unknowns, (unknown) => {
     const root = rootOf(unknown);
-    const key = JSON.stringify([root.origin.span, root.reason.code]);
-    const uses = byRoot.get(key);
-    if (uses === undefined) byRoot.set(key, [unknown]);
-    else uses.push(unknown);
-  }
+    return JSON.stringify([root.origin.span, root.reason.code]);
+  });
   return [...byRoot.values()].map((uses) => {
     const nearest = uses.reduce((best, use) => (depthOf(use) < depthOf(best) ? use : best));
     const { message, chain } = tellUnknown(nearest);

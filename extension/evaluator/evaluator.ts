@@ -12,7 +12,7 @@ import { evaluateDefinitionCall } from "./definitionCall.js";
 import { noteRead, release } from "./dependencies.js";
 import { listCallsElsewhere } from "./elsewhere.js";
 import { createEvaluate } from "./expression.js";
-import { dropStale, uncheckChanged } from "./freshness.js";
+import { dropStale, sameFiles, uncheckChanged } from "./freshness.js";
 import { type Kinds, listKinds } from "./kinds.js";
 import { loadSpecifier } from "./load.js";
 import { findTarget } from "./modules.js";
@@ -132,7 +132,7 @@ function withFilesOfNow(ctx: Context, known: FileEvaluation, module: Module): Fi
   const reached = listReached(module);
   if (![...reached].some((each) => ctx.relooked.has(each))) return known;
   const files = listFiles(module.file, reached);
-  const isSame = LISTS.every((list) => files[list].join("\n") === known[list].join("\n"));
+  const isSame = LISTS.every((list) => sameFiles(files[list], known[list]));
   return isSame ? known : { ...known, ...files };
 }
 

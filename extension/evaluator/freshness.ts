@@ -73,7 +73,7 @@ function isGuarded(ctx: Context, module: Module): boolean {
   return guards.every(({ binding, data, isChanged }) => (findChange(ctx, module, binding, data) !== undefined) === isChanged);
 }
 
-function sameFiles(a: readonly string[] | undefined, b: readonly string[] | undefined): boolean {
+export function sameFiles(a: readonly string[] | undefined, b: readonly string[] | undefined): boolean {
   if (a === b) return true;
   return a !== undefined && b !== undefined && a.length === b.length && a.every((file, index) => file === b[index]);
 }

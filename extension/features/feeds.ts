@@ -64,10 +64,6 @@ export function keyOf(origin: Origin): Span {
   return origin.declaredAt ?? origin.span;
 }
 
-export function sameSpan(one: Span, other: Span): boolean {
-  return one.start === other.start && one.end === other.end && one.file === other.file;
-}
-
 function reachableCalls(values: readonly Value[], first: DefinitionCall): Set<DefinitionCall> {
   const found = new Set([first]);
   const stack = [...values];

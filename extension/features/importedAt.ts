@@ -5,8 +5,9 @@
  * stand for several declarations stands for none.
  */
 import type { Analysis } from "../analysis/analysis.js";
+import { sameSpan } from "../analysis/spans.js";
 import type { Span } from "../evaluator/value.js";
-import { leavesOf, originsOf, sameSpan } from "./feeds.js";
+import { leavesOf, originsOf } from "./feeds.js";
 
 export interface ImportedWord {
   readonly span: Span;

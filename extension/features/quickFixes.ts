@@ -5,8 +5,8 @@
  */
 import type { AnalysedMechanism, AnalysedRobot, Analysis, Finding } from "../analysis/analysis.js";
 import type { Proposal } from "../analysis/proposal.js";
+import { sameSpan } from "../analysis/spans.js";
 import type { LocatedIssue, Span } from "../evaluator/value.js";
-import { sameSpan } from "./feeds.js";
 import { plainText } from "./inertText.js";
 
 export interface QuickFix {

@@ -4,8 +4,10 @@
  * Places only; what to say about the subject is up to the hovers.
  */
 import type { AnalysedMechanism, Analysis } from "../analysis/analysis.js";
+import { groupBy } from "../analysis/lists.js";
+import { sameSpan, spanKey } from "../analysis/spans.js";
 import type { DefinitionCall, Origin, Span, Value } from "../evaluator/value.js";
-import { keyOf, type Leaf, leavesOf, originsOf, passedThrough, sameSpan } from "./feeds.js";
+import { keyOf, type Leaf, leavesOf, originsOf, passedThrough } from "./feeds.js";
 import { importedAt } from "./importedAt.js";
 import { writtenValue } from "./writtenValue.js";
 
@@ -56,14 +58,8 @@ type MechanismsOf = (call: DefinitionCall) => readonly AnalysedMechanism[];
 
 /** A loop declares several mechanisms by one piece of text. */
 function indexByPlace(mechanisms: readonly AnalysedMechanism[]): MechanismsOf {
-  const nameOf = ({ span: { file, start, end } }: DefinitionCall) => `${start} ${end} ${file}`;
-  const byPlace = new Map<string, AnalysedMechanism[]>();
-  for (const one of mechanisms) {
-    const same = byPlace.get(nameOf(one.call));
-    if (same === undefined) byPlace.set(nameOf(one.call), [one]);
-    else same.push(one);
-  }
-  return (call) => byPlace.get(nameOf(call)) ?? [];
+  const byPlace = groupBy(mechanisms, ({ call }) => spanKey(call.span));
+  return ({ span }) => byPlace.get(spanKey(span)) ?? [];
 }
 
 function subjectsOf(mechanismsOf: MechanismsOf, call: DefinitionCall): Subject[] {

@@ -8,6 +8,7 @@ import { feedforwardNumbers } from "./feedforward.js";
 import { hardestNumbers } from "./hardestNumbers.js";
 import { hotShare } from "./hotShare.js";
 import { availableLine } from "./line.js";
+import { once } from "./once.js";
 import { solveHold, solveStall } from "./runs.js";
 import { holdNumbers, type MechanismSolution, repeatsOf, stallNumbers, travelNumbers, turningOf } from "./solve.js";
 import { trainOf } from "./stages.js";
@@ -72,13 +73,5 @@ export function lazySolution(drive: Drive): MechanismSolution {
     get repeats() {
       return repeats();
     },
-  };
-}
-
-function once<Result>(make: () => Result): () => Result {
-  let made: { readonly result: Result } | undefined;
-  return () => {
-    made ??= { result: make() };
-    return made.result;
   };
 }

@@ -57,9 +57,9 @@ export class Session {
   #resultReads: ReadonlySet<string> | undefined;
   #timer: { readonly handle: ReturnType<typeof setTimeout>; readonly due: number } | undefined;
   #running = false;
-  /** How many readings of the disk are under way or to come; what they find may change the result. The first is that of the workspace. */
-  #readings = 1;
-  #hasFolders = false;
+  /** How many readings of the disk are under way; what they find may change the result. */
+  #readings = 0;
+  /** That of the workspace, under way or to come. */
   #isFirstReading = true;
   #waiting: (() => void)[] = [];
   #disposed = false;
@@ -123,8 +123,6 @@ export class Session {
 
   /** Reads the workspace; the result follows when all of it is read. */
   async setFolders(folders: readonly string[]): Promise<void> {
-    if (!this.#hasFolders) this.#readings -= 1;
-    this.#hasFolders = true;
     try {
       await this.#reading(() => this.#files.setFolders(folders));
     } finally {
@@ -208,7 +206,7 @@ export class Session {
   }
 
   #isCurrent(): boolean {
-    return this.#resultMoment === this.#moment && this.#readings === 0;
+    return this.#resultMoment === this.#moment && this.#readings === 0 && !this.#isFirstReading;
   }
 
   #releaseIfCurrent(): void {

@@ -1,10 +1,10 @@
 /** What is kept from one analysis to the next is what an analysis from nothing gives, and what an edit leaves alone is not made anew. */
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
-import { createAnalyser } from "../../extension/analysis/analyser.js";
+import { type Analyser, createAnalyser } from "../../extension/analysis/analyser.js";
 import type { Analysis } from "../../extension/analysis/analysis.js";
 import type { Snapshot } from "../../extension/evaluator/value.js";
-import { Texts } from "../../extension/server/texts.js";
+import { EditedWorkspace } from "../support/editedWorkspace.js";
 import { parser } from "../support/parser.js";
 
 const IMPORTS = 'import { battery, between, breaker, lift, mechanism, motor, robot, spur } from "loadmark";\n';
@@ -74,28 +74,16 @@ const EDITS: readonly (readonly [file: string, old: string, ...others: string[]]
   ["/robot/loadmark.json", "{}", '{ "levels": { "unprotected": "error", "no-headroom": "off" } }', '{ "levels": 3 }'],
 ];
 
-/** The workspace as a server knows it. */
-function createWorkspace() {
-  const texts = new Texts({ keepImporters: (files) => files, canonical: (file) => file });
-  const write = (file: string, text: string | null) => {
-    texts.setDiskText(file, text);
-    if (file.endsWith(".ts")) texts.imports.setDiskText(file, text);
-  };
-  for (const [file, text] of Object.entries(ROBOT)) write(file, text);
-  texts.imports.markWhole();
-  const roots = () =>
-    Object.keys(ROBOT).filter((file) => file.endsWith(".ts") && (texts.diskText(file) ?? "").includes("loadmark"));
-  return { texts, write, roots };
+function rootsOf({ texts }: EditedWorkspace): string[] {
+  return Object.keys(ROBOT).filter((file) => file.endsWith(".ts") && (texts.diskText(file) ?? "").includes("loadmark"));
 }
 
-type Workspace = ReturnType<typeof createWorkspace>;
-
 /** As a server does: what is looked for in vain is told. */
-function analyse({ texts, roots }: Workspace, analyser: ReturnType<typeof createAnalyser>, mechanismsOnly = false): Analysis {
+function analyse(workspace: EditedWorkspace, analyser: Analyser, mechanismsOnly = false): Analysis {
   for (;;) {
-    const analysis = analyser.analyse(roots(), texts.capture(), mechanismsOnly);
+    const analysis = analyser.analyse(rootsOf(workspace), workspace.texts.capture(), mechanismsOnly);
     if (analysis.wanted.length === 0) return analysis;
-    for (const file of analysis.wanted) texts.setDiskText(file, null);
+    for (const file of analysis.wanted) workspace.texts.setDiskText(file, null);
   }
 }
 
@@ -121,7 +109,7 @@ describe("what is kept from one analysis to the next", () => {
     });
     fc.assert(
       fc.property(fc.array(step, { minLength: 1, maxLength: 12 }), (steps) => {
-        const workspace = createWorkspace();
+        const workspace = new EditedWorkspace(ROBOT);
         const analyser = createAnalyser(parser);
         analyse(workspace, analyser);
         for (const { edit, choice, kind } of steps) {
@@ -130,14 +118,14 @@ describe("what is kept from one analysis to the next", () => {
           const written = choices.findLast((one) => one !== "" && before.includes(one)) ?? choices[0] ?? "";
           const after = before.replace(written, () => choices[choice % choices.length] ?? "");
           if (kind === "gone and back") {
-            workspace.write(file, null);
+            workspace.put(file, null);
             analyse(workspace, analyser);
           }
           if (kind === "what-if") {
             const now = workspace.texts.capture();
             const changed: Snapshot = { ...now, read: (name) => (name === file ? after : now.read(name)) };
-            analyser.analyse(workspace.roots(), changed);
-          } else workspace.write(file, after);
+            analyser.analyse(rootsOf(workspace), changed);
+          } else workspace.put(file, after);
           if (kind === "without robots") analyse(workspace, analyser, true);
           expect(told(analyse(workspace, analyser))).toEqual(told(analyse(workspace, createAnalyser(parser))));
         }
@@ -147,10 +135,10 @@ describe("what is kept from one analysis to the next", () => {
   }, 60_000);
 
   it("is made anew only where an edit reaches", () => {
-    const workspace = createWorkspace();
+    const workspace = new EditedWorkspace(ROBOT);
     const analyser = createAnalyser(parser);
     const before = analyse(workspace, analyser);
-    workspace.write("/robot/shelf.ts", (ROBOT["/robot/shelf.ts"] ?? "").replace('"5 kg"', '"50 kg"'));
+    workspace.put("/robot/shelf.ts", (ROBOT["/robot/shelf.ts"] ?? "").replace('"5 kg"', '"50 kg"'));
     const after = analyse(workspace, analyser);
     const isKept = (file: string) => after.inFile.get(file) === before.inFile.get(file);
     const expected = new Map(
@@ -162,23 +150,21 @@ describe("what is kept from one analysis to the next", () => {
   });
 
   it("knows of a file that is read only since another one changed", () => {
-    const workspace = createWorkspace();
+    const workspace = new EditedWorkspace(ROBOT);
     const analyser = createAnalyser(parser);
-    const rewrite = (file: string, old: string, now: string) =>
-      workspace.write(file, (workspace.texts.diskText(file) ?? "").replace(old, now));
     const isKnown = () => analyse(workspace, analyser).mechanisms.find(({ name }) => name === "hoist")?.numbers !== undefined;
     expect(isKnown()).toBe(true);
-    rewrite("/robot/print.ts", "console.log(SIZES.driven)", "show(SIZES)");
+    workspace.replace("/robot/print.ts", "console.log(SIZES.driven)", "show(SIZES)");
     expect(isKnown()).toBe(true);
-    rewrite("/robot/show.ts", "console.log(sizes.driven)", "(sizes.driven = 30)");
+    workspace.replace("/robot/show.ts", "console.log(sizes.driven)", "(sizes.driven = 30)");
     expect(isKnown()).toBe(false);
   });
 
   it("survives an analysis that fails", () => {
-    const workspace = createWorkspace();
+    const workspace = new EditedWorkspace(ROBOT);
     const analyser = createAnalyser(parser);
     analyse(workspace, analyser);
-    workspace.write("/robot/shelf.ts", (ROBOT["/robot/shelf.ts"] ?? "").replace('"5 kg"', '"5 pounds"'));
+    workspace.put("/robot/shelf.ts", (ROBOT["/robot/shelf.ts"] ?? "").replace('"5 kg"', '"5 pounds"'));
     const now = workspace.texts.capture();
     // A refused value's text is read once more at the end, when most steps are done.
     const failingAt = (last: number): Snapshot => {
@@ -189,7 +175,7 @@ describe("what is kept from one analysis to the next", () => {
       };
       return { ...now, read };
     };
-    expect(() => analyser.analyse(workspace.roots(), failingAt(3))).toThrow("no disk");
+    expect(() => analyser.analyse(rootsOf(workspace), failingAt(3))).toThrow("no disk");
     expect(told(analyse(workspace, analyser))).toEqual(told(analyse(workspace, createAnalyser(parser))));
   });
 });

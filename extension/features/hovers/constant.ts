@@ -3,9 +3,10 @@
  * of it would do.
  */
 import type { AnalysedMechanism, Analysis } from "../../analysis/analysis.js";
+import { sameSpan } from "../../analysis/spans.js";
 import type { MechanismNumbers } from "../../model/numbers.js";
 import { writeQuantity, writeShare } from "../../units/write.js";
-import { feedsOf, keyOf, type Leaf, originsOf, sameSpan } from "../feeds.js";
+import { feedsOf, keyOf, type Leaf, originsOf } from "../feeds.js";
 import { inertMarkdown } from "../inertText.js";
 import { chartLink } from "../links.js";
 import { outputShaftOf } from "../shaft.js";
